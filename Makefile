@@ -1,0 +1,49 @@
+# Every target is one question; the comment above it asks it.
+.DEFAULT_GOAL := help
+.PHONY: help setup build run test reference bench clean
+
+# One set of floating-point bits on every host: no assembly in the numeric libraries.
+GO_BUILD := go build -tags noasm -trimpath
+# Debian's own Python carries numpy, scipy and pandas; only reference and bench need it.
+PYTHON ?= /usr/bin/python3
+
+# What can I ask?
+help:
+	@awk '/^# [^(]/{question=substr($$0,3)} /^[a-z]+:/{sub(":.*",""); printf "make %-10s %s\n",$$0,question}' Makefile
+
+# Is everything here that a build needs?
+setup: web/node_modules/.stamp
+	@.ci/packages test
+	@go mod download
+
+web/node_modules/.stamp: web/package-lock.json
+	cd web && npm ci --no-audit --no-fund
+	touch $@
+
+# Does it build? (the command: dist/weirmark)
+build: setup
+	go run ./web/build figures
+	$(GO_BUILD) -o dist/weirmark ./core/cmd/weirmark
+
+# What does it say about the demo campaign, or about my study (make run STUDY=file)?
+# (Status 2 says that evidence is incomplete: an answer, not a fault.)
+run: build
+	$(if $(STUDY),dist/weirmark run $(STUDY) --out dist/study,dist/weirmark demo dist/demo) || test $$? -eq 2
+
+# Does everything hold?
+test: build
+	go run -tags noasm ./core/internal/check
+
+# Do numpy and scipy, by themselves, still give the committed reference figures?
+reference:
+	@.ci/packages figures
+	$(PYTHON) testdata/published/reference.py
+
+# How fast is it, beside pandas, numpy and scipy on the same input?
+bench:
+	@.ci/packages figures
+	go run -tags noasm ./core/internal/bench -python $(PYTHON)
+
+# How do I get back to a fresh clone?
+clean:
+	rm -rf dist .cache web/node_modules core/cmd/weirmark/renderer/*.js

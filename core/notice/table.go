@@ -1,0 +1,132 @@
+package notice
+
+type row struct {
+	severity Severity
+	format   string
+}
+
+// table holds the wording of every notice: what was seen, what was done or
+// not done, what to do. Keep rows together by the stage that raises them.
+var table = map[string]row{
+	// Reading a table file.
+	"file-empty":        {Stop, "No data rows found (%s, 0 rows). Nothing was loaded. Supply a file with at least one row of numbers."},
+	"file-not-text":     {Stop, "This file is not text. First bytes: %s. Nothing was loaded. Export the table as text."},
+	"file-too-large":    {Stop, "The file has %d bytes, above the limit of %d. Nothing was loaded. Cut it to the line of interest."},
+	"column-count":      {Ask, "Row at line %d has %d columns where %d were expected; %d such rows are held back. Mend the file or confirm that they may be left out."},
+	"decimal-comma":     {Ask, "%q was read as %s (comma as decimal sign, %d numbers). If the comma separates thousands this is wrong by 1000. Confirm."},
+	"decimal-mixed":     {Stop, "Both a decimal point (%q) and a decimal comma (%q) appear in column %d. The column cannot be read both ways. Write all numbers one way."},
+	"number-fortran":    {Note, "%d numbers in Fortran form (e.g. %q) were read as %s."},
+	"number-signs":      {Note, "%d numbers with a typographic minus sign or a no-break space (e.g. %q) were read as %s."},
+	"value-missing":     {Note, "%d cells hold no number (first: %q in column %q). They are read as missing, not as zero."},
+	"value-sentinel":    {Ask, "%d values equal %s. They are kept as written; if they mark missing data, say so before they are used."},
+	"value-overflow":    {Ask, "%q is outside the range of numbers that can be held. It is read as missing. Check the file."},
+	"header-none":       {Note, "No column names were found: columns are named c1 to c%d."},
+	"header-comment":    {Note, "Column names were taken from the comment at line %d. They are a guess."},
+	"header-guessed":    {Note, "Column names were taken from line %d."},
+	"header-duplicate":  {Note, "Column name %q appears more than once: the later ones were renamed %s."},
+	"delimiter-guessed": {Note, "Columns are separated by %s. This is a guess from the first rows."},
+	"zone-count":        {Ask, "Zone %q announces %d points, %d were found before the next zone or the end. Check that the file is complete."},
+	"zone-layout":       {Stop, "Zone %q uses %s, which this version does not read. The zone was left out. Export it in point order."},
+	"zone-no-variables": {Note, "A zone without a list of variables: columns are named c1 to c%d."},
+	"encoding-bom":      {Note, "The file begins with a byte order mark (%s); it was left out of the first name."},
+	"encoding-latin":    {Note, "The file is not UTF-8; bytes above 127 were read as Latin-1 (ISO 8859-1). Check names and units."},
+	"text-line":         {Note, "%d lines of text among the rows were passed over (first: %q)."},
+	"quote-open":        {Stop, "A quoted field opens here and never closes. The rest of the file could not be split into rows."},
+	"unit-row":          {Note, "Line %d was read as the row of units."},
+
+	"encoding-utf16":     {Note, "The file is UTF-16 (%s); it was read as such."},
+	"number-thousands":   {Ask, "%q was read as %s (digits grouped, %d numbers). Confirm, or write the numbers without group marks."},
+	"comma-ambiguous":    {Ask, "The first row %q was read as %d columns of whole numbers. If the comma is a decimal sign this is wrong. Confirm, or separate columns by semicolons."},
+	"delimiter-trailing": {Note, "Every row ends with a separator (%s); the blank column behind it was left out."},
+	"header-count":       {Ask, "Line %d holds %d names where the rows have %d columns. The names were not used: columns are named c1 to c%d. Mend the file or name the columns."},
+	"header-blank":       {Note, "%d columns have no name in the file and are named by their number, as c2."},
+	"columns-many":       {Stop, "The first rows have %d columns, above the limit of %d. Nothing was loaded. Cut the file to the columns of interest."},
+	"comment-row":        {Note, "%d comments have the form of a row (first: %q). They were passed over as comments."},
+	"blank-lines":        {Note, "Blank lines part the rows into blocks at %d places. The blocks were read as one table, in file order."},
+	"zone-empty":         {Note, "Zone %q has no rows. It is not a table of this file."},
+	"zone-wrapped":       {Note, "The rows of zone %q span lines; they were put together by the number of variables and the announced points."},
+	"record-skipped":     {Note, "A record %q at line %d is not a table: %d lines were left out."},
+
+	// Units.
+	"unit-unknown":   {Ask, "Unit %q of column %q is not known. The column is not converted. Choose a unit."},
+	"unit-missing":   {Ask, "No unit is stated for %q. Nothing is assumed. Choose a unit, or say that the column is a pure number."},
+	"unit-guessed":   {Ask, "The unit %s of %q is a guess. Accept or correct it."},
+	"unit-dimension": {Stop, "%q is in %s and %q is in %s: these are different dimensions and cannot be compared. Correct the units, or give the quantity that relates them."},
+	"density-needed": {Stop, "%q is a pressure divided by density (%s) and %q is a pressure (%s). A density is needed before they can be compared."},
+
+	// Finding a column or table.
+	"column-unknown":   {Stop, "No column named %q. Columns: %s."},
+	"column-ambiguous": {Stop, "%q fits several columns: %s. Give the full name."},
+	"table-unknown":    {Stop, "No table %q in this file. Tables: %s."},
+	"table-needed":     {Stop, "This file holds %d tables: %s. Name one as FILE@TABLE."},
+	"table-ambiguous":  {Stop, "%d tables are named %q: numbers %s. Give the number."},
+	"column-empty":     {Stop, "Column %q holds no number."},
+
+	// Curves and stations.
+	"curve-unsorted":  {Note, "Rows of %s were not in order of %s; they were ordered for resampling. The file order is kept in the record."},
+	"curve-loop":      {Stop, "%s goes out and back in %s: a curve with %d branches has no single value at a station. It was not resampled. Split it into branches first."},
+	"curve-duplicate": {Note, "%d repeated rows of %s (same abscissa, same value) were used once."},
+	"curve-jump":      {Ask, "At %s = %s, %s has the values %s and %s: repeat readings, a jump, or a mistake? Stations there are not compared."},
+	"curve-short":     {Stop, "%s has %d usable rows; at least two are needed for resampling. No station was compared."},
+	"station-outside": {Note, "%d of %d stations lie outside the simulated range %s to %s. Not compared; no extrapolation."},
+	"station-none":    {Stop, "No station lies inside the simulated range. Ranges: data %s to %s, simulation %s to %s. Check the units."},
+	"station-missing": {Note, "%d rows of the reference hold no number for the abscissa or the value. They are not stations."},
+	"station-gap":     {Note, "%d stations fall where the simulation has a gap. Not compared; gaps are not bridged."},
+	"station-interp":  {Note, "The interpolation uncertainty reaches %s %% of u_val: the simulation is coarse against the stations."},
+	"crossing-none":   {Note, "%s does not change sign: no crossing."},
+
+	// Uncertainty.
+	"u-missing":        {Ask, "No experimental uncertainty was given. u_D, u_val and the joint statistic are withheld: this is a comparison only. Blank is not zero."},
+	"u-blank":          {Ask, "%d stations have no uncertainty. Blank is not zero: they leave the test. Give a value, or mark them unknown."},
+	"u-zero":           {Ask, "An uncertainty of exactly 0 is stated at %d stations. Exact by definition? Otherwise mark it unknown."},
+	"u-negative":       {Stop, "A negative uncertainty (%s) is stated at %s. Limits or half-widths? Columns swapped?"},
+	"u-coverage":       {Ask, "The coverage of %q is not stated: standard (k = 1), 95 %%, or limits? No statement is made until it is known."},
+	"coverage-assumed": {Ask, "The coverage factor of the given uncertainty was not stated; k = 1 was taken. Give it with --u-k."},
+	"u-num-missing":    {Note, "No numerical uncertainty was given: u_val holds the other parts only. A statement on the model needs it."},
+	"u-input-missing":  {Note, "No input uncertainty was given: u_val does not contain it."},
+	"u-num-column":     {Note, "The numerical uncertainty was taken from column %q of the %s."},
+	"covariance-rank":  {Note, "The covariance has rank %d of %d; the joint statistic was made on %d combinations."},
+	"covariance-range": {Stop, "E varies in a combination declared free of uncertainty: there is no joint statistic. Give every station an independent part."},
+	"covariance-size":  {Stop, "%d stations without an independent uncertainty exceed the %d that can be treated exactly: there is no joint statistic. Give an independent part."},
+	"joint-low-tail":   {Note, "The joint statistic lies below the 1 %% point: the stated uncertainties look too large, or correlated more than declared."},
+
+	// Grid studies.
+	"grid-few":            {Note, "%d usable grids: the order cannot be observed. At least three different cell counts are needed."},
+	"grid-one":            {Ask, "One grid: the grid uncertainty is unknown. A comparison is possible, a validation statement is not."},
+	"grid-finest-three":   {Note, "%d grids were given; the three with the largest counts were used."},
+	"grid-duplicate":      {Note, "Cell count %s appears twice with different values: the case cannot be classified."},
+	"grid-identical":      {Ask, "%s and %s hold the same bytes. A grid study needs different runs."},
+	"grid-ratio":          {Note, "The refinement ratio is %s, below 1.3: differences are close to the noise and U is unreliable."},
+	"grid-oscillatory":    {Note, "Values alternate with refinement (ratio %s). No order is given; the half-range %s of the three finest is used as a bound."},
+	"grid-diverging":      {Stop, "Differences grow with refinement (ratio %s). There is no grid uncertainty. (The usual formula would print order %s; it does not apply.)"},
+	"grid-flat":           {Note, "The three values differ by less than rounding: no order can be observed."},
+	"grid-undefined":      {Note, "Two of the three values are equal or the ratio is 1: no order can be observed."},
+	"grid-order-high":     {Note, "Observed order %s against formal %s: not asymptotic; the index is indicative only."},
+	"grid-order-low":      {Note, "Observed order %s against formal %s: not asymptotic; the index is indicative only."},
+	"grid-bounded-low":    {Note, "Observed order %s is below 0.95: the index was limited by the range of the data (bounded rule)."},
+	"grid-bounded-high":   {Note, "Observed order %s is above 3.05: the index uses order 3, and at least the range of the data (bounded rule)."},
+	"grid-not-solved":     {Note, "No order satisfies the three values with these refinement ratios."},
+	"grid-spacing-column": {Note, "Column %q follows the cell count as a grid spacing: it was not treated as a value. Name it with --value to use it."},
+	"dimension-assumed":   {Note, "The number of dimensions was not stated: %d was taken%s. State it with --dim."},
+	"grid-zero-value":     {Note, "The fine-grid value is zero: relative errors and the index have no meaning and are withheld."},
+	"grid-local-mixed":    {Note, "%d of %d stations converge monotonically; the common order is %s (median, kept between 0.5 and the formal order). The others take three times their data range as U."},
+	"grid-local-none":     {Note, "No station converges monotonically; every station takes three times its data range as U."},
+	"grid-declared":       {Note, "The numerical uncertainty of %s was entered, not computed: %s"},
+
+	// The study.
+	"study-format":         {Stop, "This is not a study of this program. Nothing was loaded."},
+	"study-newer":          {Stop, "Made by study version %d; this program reads up to %d. Nothing was loaded. Use a newer program."},
+	"study-field":          {Note, "Unknown field %q was kept but not used."},
+	"hash-changed":         {Stop, "%s differs from its recorded SHA-256. It was not used. Supply the file again, or record the change."},
+	"reference-missing":    {Ask, "No reference data for %s. Drop the measured curve and give it this case and quantity."},
+	"simulation-missing":   {Ask, "No simulation of %s. Drop the simulated curve and give it this case, quantity and model."},
+	"reference-many":       {Ask, "%d references are given for %s; the first (%s) was used. Choose one."},
+	"guess-open":           {Ask, "%s of %s is a guess (%s). Accept or correct it."},
+	"field-missing":        {Ask, "%s of %s is not given."},
+	"requirement-missing":  {Ask, "No accuracy requirement is recorded for %s: adequacy is not judged."},
+	"requirement-late":     {Note, "The requirement was recorded after results were seen."},
+	"monitor-missing":      {Note, "No monitor of %s: that each run has settled is not shown."},
+	"reference-simulation": {Note, "The reference is another simulation: code-to-code comparison, no validation wording is used."},
+	"reference-tuning":     {Note, "These data were used to set the model: agreement here is fit quality, not validation."},
+	"files-identical":      {Ask, "%s and %s are byte-identical. If they stand for different runs, one is a copy by mistake."},
+}

@@ -1,0 +1,264 @@
+package study
+
+import (
+	"weirmark/core/notice"
+	"weirmark/core/quantity"
+)
+
+// Number is a computed value, printed with ten significant digits.
+type Number = quantity.Number
+
+// Report is everything Evaluate found, and all that sentence, chart and memo
+// may use. All numbers of a cell are in the cell's unit.
+type Report struct {
+	Title    string          `json:"title"`
+	Purpose  string          `json:"purpose"`
+	Edition  string          `json:"edition"` // edition of the methods
+	Files    []FileLine      `json:"files"`
+	Cells    []Cell          `json:"cells"`
+	Notices  []notice.Notice `json:"notices"` // of files and of the study as a whole
+	Prepared Signature       `json:"prepared"`
+	Checked  Signature       `json:"checked"`
+	Approved Signature       `json:"approved"`
+	Log      []Entry         `json:"log"`
+}
+
+// FileLine names a source.
+type FileLine struct {
+	ID      string   `json:"id"`
+	Name    string   `json:"name"`
+	SHA256  string   `json:"sha256"`
+	Bytes   int      `json:"bytes"`
+	Matches bool     `json:"matches"` // the bytes have the recorded hash
+	Uses    []string `json:"uses"`
+}
+
+// Outcomes of a requirement.
+const (
+	Shown       = "shown"
+	NotMet      = "not met"
+	NotResolved = "not resolved"
+)
+
+// Readings of a pointwise comparison of a scalar.
+const (
+	SignResolved = "sign resolved"
+	Between      = "between"
+	WithinNoise  = "within noise"
+)
+
+// Cell is one case, quantity and model.
+type Cell struct {
+	Case      string `json:"case"`
+	Condition string `json:"condition"`
+	Quantity  string `json:"quantity"`
+	Symbol    string `json:"symbol"`
+	Model     string `json:"model"`
+	Grid      string `json:"grid"`
+	Reference string `json:"reference"` // what the data are called
+	Kind      string `json:"kind"`      // kind of reference
+	Use       string `json:"use"`
+	Unit      string `json:"unit"` // unit of the quantity, "1" for pure numbers
+	XName     string `json:"x_name"`
+	XUnit     string `json:"x_unit"`
+	Scalar    bool   `json:"scalar"`
+	Downward  bool   `json:"downward"`
+
+	Withheld    bool     `json:"withheld"`    // no statement is made
+	Provisional bool     `json:"provisional"` // stated, resting on open points
+	Open        []Open   `json:"open"`        // in the order of work: the first is the next job
+	Courses     [5]State `json:"courses"`
+	Choices     Choices  `json:"choices"`
+
+	Stations    []Station    `json:"stations"`
+	Outside     []Number     `json:"outside"`
+	StationsAll int          `json:"stations_all"`
+	Summary     *Summary     `json:"summary"`
+	Joint       *Joint       `json:"joint"`
+	Crossings   Crossings    `json:"crossings"`
+	Grids       *Grids       `json:"grids"`
+	Sources     []SourceLine `json:"sources"`
+	Requirement *Judgement   `json:"requirement"`
+	Fragile     []Fragility  `json:"fragile"` // alternatives that change an outcome word
+
+	Curve     Curve           `json:"curve"` // the simulation as read, for the figure
+	Notices   []notice.Notice `json:"notices"`
+	FilesUsed []string        `json:"files_used"` // IDs
+}
+
+// State of a course of evidence.
+type State string
+
+// The states, drawn with fill and form: nothing, outline, solid, hatched.
+const (
+	Empty   State = "empty"
+	Doubts  State = "doubts"
+	Settled State = "settled"
+	Blocked State = "blocked"
+)
+
+// Open is a point that needs a person: which course it belongs to, and the
+// entry that answers it.
+type Open struct {
+	Course  int    `json:"course"`  // 0 to 4
+	Blocks  bool   `json:"blocks"`  // withholds the statement
+	Missing string `json:"missing"` // what is missing, as a noun phrase for a blank
+	Text    string `json:"text"`
+	Target  Target `json:"target"`
+}
+
+// Target is the place that answers an open point.
+type Target struct {
+	Kind  string `json:"kind"` // "slip", "question", "source", "file", "course"
+	ID    string `json:"id"`
+	Field string `json:"field"`
+}
+
+// Station is one common station. X, S, D and the uncertainties are standard
+// uncertainties in the cell's unit; Lo and Hi bound the model error.
+type Station struct {
+	X       quantity.Written `json:"x"`
+	S       Number           `json:"s"`
+	D       quantity.Written `json:"d"`
+	E       Number           `json:"e"`
+	UD      Number           `json:"u_d"`
+	UNum    Number           `json:"u_num"`
+	UInterp Number           `json:"u_interp"`
+	UInput  Number           `json:"u_input"`
+	UVal    Number           `json:"u_val"`
+	Ratio   Number           `json:"ratio"`
+	Lo      Number           `json:"lo"`
+	Hi      Number           `json:"hi"`
+	Line    int              `json:"line"` // line of the reference file
+	Reading string           `json:"reading"`
+}
+
+// Summary counts and averages over the common stations.
+type Summary struct {
+	N            int    `json:"n"`
+	Bias         Number `json:"bias"`
+	MAE          Number `json:"mae"`
+	RMSE         Number `json:"rmse"`
+	MaxAbs       Number `json:"max_abs"`
+	MaxAt        Number `json:"max_at"`
+	MaxRatio     Number `json:"max_ratio"`
+	WithinUVal   int    `json:"within_u_val"`
+	WithinKUVal  int    `json:"within_k_u_val"`
+	BeyondChance Number `json:"beyond_chance"` // expected count beyond k u_val, normal errors
+}
+
+// Joint is the statistic of all stations together, and how it decomposes.
+type Joint struct {
+	Statistic          Number `json:"statistic"`
+	N                  int    `json:"n"` // rank
+	P                  Number `json:"p_value"`
+	Reference          Number `json:"reference"` // 95 % point
+	Exceeds            bool   `json:"exceeds"`
+	Pattern            string `json:"pattern"`
+	Independent        Number `json:"independent"` // statistic if every source were independent
+	NumShared          Number `json:"num_shared"`  // statistic with u_num fully shared
+	Offset             Number `json:"offset"`
+	UOffset            Number `json:"u_offset"`
+	OffsetPart         Number `json:"offset_part"` // part of the statistic
+	Remainder          Number `json:"remainder"`
+	RemainderN         int    `json:"remainder_n"`
+	RemainderReference Number `json:"remainder_reference"`
+	RemainderExceeds   bool   `json:"remainder_exceeds"`
+	OffsetResolved     bool   `json:"offset_resolved"`
+}
+
+// Crossings of zero, in the cell's x unit.
+type Crossings struct {
+	Simulation []Crossing `json:"sim"`
+	Reference  []Crossing `json:"ref"`
+}
+
+// Crossing is one change of sign.
+type Crossing struct {
+	X      Number `json:"x"`
+	Rising bool   `json:"rising"`
+}
+
+// Grids is the grid study behind u_num: of a scalar, or along a curve.
+type Grids struct {
+	Points       []GridPoint `json:"points"` // coarse to fine
+	Dimension    int         `json:"dimension"`
+	Class        string      `json:"class"`
+	Ratio        Number      `json:"ratio"`
+	Order        Number      `json:"order"`
+	Formal       Number      `json:"formal"`
+	Extrapolated Number      `json:"extrapolated"`
+	Ea           Number      `json:"ea"`
+	Eext         Number      `json:"eext"`
+	GCI          Number      `json:"gci"`
+	U            Number      `json:"u"` // expanded, 95 %
+	UNum         Number      `json:"u_num"`
+	KNum         Number      `json:"k_num"`
+	Rule         string      `json:"rule"`
+	R21          Number      `json:"r21"`
+	R32          Number      `json:"r32"`
+
+	Along       bool        `json:"along"` // a study along a curve
+	Monotone    int         `json:"monotone"`
+	NonMonotone int         `json:"non_monotone"`
+	OrderLow    Number      `json:"order_low"`
+	OrderHigh   Number      `json:"order_high"`
+	Local       []LocalGrid `json:"local"`
+}
+
+// GridPoint is one grid.
+type GridPoint struct {
+	Name  string `json:"name"`
+	Cells Number `json:"cells"`
+	H     Number `json:"h"` // relative to the finest
+	Value Number `json:"value"`
+	Used  bool   `json:"used"` // one of the three finest
+}
+
+// LocalGrid is the grid study at one station.
+type LocalGrid struct {
+	X     Number `json:"x"`
+	Class string `json:"class"`
+	Order Number `json:"order"`
+	U     Number `json:"u"`
+}
+
+// SourceLine is one source with its share of the mean u_val squared.
+type SourceLine struct {
+	Name    string `json:"name"`
+	Of      string `json:"of"`
+	Text    string `json:"text"` // value, basis, coverage, pattern in words
+	U       Number `json:"u"`    // standard uncertainty (root mean square over stations)
+	Share   Number `json:"share"`
+	Pattern string `json:"pattern"`
+	Origin  string `json:"origin"`
+	Open    bool   `json:"open"`
+}
+
+// Judgement holds the requirement against the interval of the model error.
+type Judgement struct {
+	Limit      Number `json:"limit"`   // in the cell's unit
+	Percent    Number `json:"percent"` // as entered, or null
+	Who        string `json:"who"`
+	Date       string `json:"date"`
+	Late       bool   `json:"late"`
+	Outcome    string `json:"outcome"`
+	At         Number `json:"at"` // the deciding station, for curves
+	UValNeeded Number `json:"u_val_needed"`
+	UNumNeeded Number `json:"u_num_needed"`
+	Resolve    string `json:"resolve"`
+}
+
+// Fragility is an alternative that changes an outcome word.
+type Fragility struct {
+	Change  string `json:"change"`
+	Outcome string `json:"outcome"`
+	Detail  string `json:"detail"`
+}
+
+// Curve is a line to draw.
+type Curve struct {
+	X    []quantity.Written `json:"x"`
+	Y    []quantity.Written `json:"y"`
+	UNum []Number           `json:"u_num"` // standard, at X; empty when unknown
+}

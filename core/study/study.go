@@ -1,0 +1,212 @@
+// Package study is the document a person works on: files, how each was read,
+// what is asked of them, and what was done in which order. Evaluate turns it
+// into one Report; nothing else computes.
+package study
+
+import (
+	"weirmark/core/interpolate"
+)
+
+// Format and Version name the study file.
+const (
+	Format  = "weirmark study"
+	Version = 1
+)
+
+// Certainty says who stands behind an entry.
+type Certainty string
+
+// The four origins of an entry. A guess shows until a person accepts it.
+const (
+	Stated   Certainty = "stated"
+	Guessed  Certainty = "guessed"
+	Accepted Certainty = "accepted"
+	Entered  Certainty = "entered"
+)
+
+// Field is an entry with its origin. An empty value is "not given".
+type Field struct {
+	Value string    `json:"value"`
+	By    Certainty `json:"by,omitempty"`
+}
+
+// Given reports whether the entry has a value.
+func (f Field) Given() bool { return f.Value != "" }
+
+// Open reports whether the entry is a guess no one has accepted.
+func (f Field) Open() bool { return f.Given() && f.By == Guessed }
+
+// Study is the whole document.
+type Study struct {
+	Format    string     `json:"format"`
+	Version   int        `json:"version"`
+	Title     string     `json:"title"`
+	Purpose   string     `json:"purpose"`
+	Prepared  Signature  `json:"prepared"`
+	Checked   Signature  `json:"checked"`
+	Approved  Signature  `json:"approved"`
+	Files     []File     `json:"files"`
+	Slips     []Slip     `json:"slips"`
+	Questions []Question `json:"questions"`
+	Log       []Entry    `json:"log"`
+}
+
+// Signature is a recorded statement of a role, not an authenticated one.
+type Signature struct {
+	Name string `json:"name"`
+	Date string `json:"date"`
+}
+
+// File is a source with its raw bytes and their SHA-256 in hexadecimal.
+type File struct {
+	ID     string `json:"id"`
+	Name   string `json:"name"`
+	SHA256 string `json:"sha256"`
+	Data   []byte `json:"data"`
+}
+
+// Roles of a slip.
+const (
+	Simulation = "simulation"  // a curve, or one scalar, of one run
+	GridValues = "grid values" // scalars of several grids: size and value columns
+	Reference  = "reference"   // measured or other reference data
+	Unused     = "unused"
+)
+
+// Slip says how one table of a file is used. The same table may stand behind
+// several slips (two models in two columns).
+type Slip struct {
+	ID       string    `json:"id"`
+	File     string    `json:"file"`  // File.ID
+	Table    string    `json:"table"` // name or number as tablefile.File.Table takes it
+	Role     Field     `json:"role"`
+	Case     Field     `json:"case"`
+	Quantity Field     `json:"quantity"`
+	Model    Field     `json:"model"`
+	Grid     Field     `json:"grid"`
+	Cells    Field     `json:"cells"`    // number of cells of Grid
+	X        ColumnUse `json:"x"`        // abscissa; not given for scalars
+	Y        ColumnUse `json:"y"`        // the quantity
+	U        ColumnUse `json:"u"`        // uncertainty of the quantity, independent between stations
+	UFactor  Field     `json:"u_factor"` // coverage of U: "1", "2", "95 %", "limits"
+	Size     ColumnUse `json:"size"`     // cell counts, for grid values
+}
+
+// ColumnUse is a column and the unit its numbers are in.
+type ColumnUse struct {
+	Column Field `json:"column"`
+	Unit   Field `json:"unit"`
+}
+
+// Kinds of reference; the kind drives the wording of the claim.
+const (
+	KindTest        = "test"
+	KindLaw         = "law"
+	KindCorrelation = "correlation"
+	KindSimulation  = "simulation"
+)
+
+// Uses of the reference data.
+const (
+	UseValidation = "validation"
+	UseTuning     = "tuning"
+)
+
+// Question is one quantity of one case: what is asked, and with which choices.
+type Question struct {
+	Case        string       `json:"case"`
+	Quantity    string       `json:"quantity"`
+	Symbol      string       `json:"symbol"`
+	Condition   string       `json:"condition"` // e.g. "α = 4.2°"
+	Requirement *Requirement `json:"requirement"`
+	Sources     []Source     `json:"sources"`
+	Kind        Field        `json:"kind"`
+	Use         Field        `json:"use"`
+	ReferenceID string       `json:"reference_id"` // what the data are called
+	Choices     Choices      `json:"choices"`
+	Downward    bool         `json:"downward"` // draw with negative values upward, as is usual for Cp
+}
+
+// Requirement is the accuracy the decision needs.
+type Requirement struct {
+	Value   float64 `json:"value"` // in the unit of the data, or percent of |D| when Percent
+	Percent bool    `json:"percent"`
+	Who     string  `json:"who"`
+	Date    string  `json:"date"`
+	Late    bool    `json:"late"` // recorded after the comparison was seen
+}
+
+// What a source is an uncertainty of.
+const (
+	OfData      = "data"
+	OfInput     = "input"
+	OfNumerical = "numerical"
+)
+
+// Bases and patterns of a source.
+const (
+	Absolute    = "absolute" // in the unit of the data
+	OfReading   = "percent of reading"
+	Independent = "independent"
+	Common      = "common"
+)
+
+// Source is one line of the uncertainty budget. Its standard uncertainty is
+// Value / CoverageFactor(Coverage).
+type Source struct {
+	Name     string  `json:"name"`
+	Of       string  `json:"of"`
+	Model    string  `json:"model"` // for numerical and input sources: the model it belongs to, "" for all
+	Value    float64 `json:"value"`
+	Basis    string  `json:"basis"`
+	Coverage Field   `json:"coverage"`
+	Random   bool    `json:"random"`
+	Pattern  string  `json:"pattern"`
+	Origin   string  `json:"origin"` // where the number comes from, or the reason it was entered
+}
+
+// Choices are the decisions whose effect is shown at once.
+type Choices struct {
+	K             float64            `json:"k"`             // coverage factor of the statement
+	KNum          float64            `json:"k_num"`         // U_num to u_num
+	Bounded       bool               `json:"bounded"`       // bounded rule of the grid study
+	Formal        float64            `json:"formal"`        // formal order of the scheme
+	Dimension     int                `json:"dimension"`     // 2 or 3
+	Interpolation interpolate.Method `json:"interpolation"` // of the simulation to the stations
+	UInterp       bool               `json:"u_interp"`      // count the interpolation uncertainty
+	NumShared     bool               `json:"num_shared"`    // u_num fully shared between stations
+}
+
+// DefaultChoices are the choices of a new question.
+func DefaultChoices() Choices {
+	return Choices{K: 2, KNum: 1.15, Bounded: true, Formal: 2, Dimension: 3, Interpolation: interpolate.Linear, UInterp: true}
+}
+
+// Entry is one line of the operation log. At is given by the host.
+type Entry struct {
+	Number int    `json:"number"`
+	At     string `json:"at"`
+	What   string `json:"what"`
+	Why    string `json:"why,omitempty"`
+	Shown  bool   `json:"shown"` // whether the comparison had been shown before
+}
+
+// Question returns the question of a case and quantity, or nil.
+func (s *Study) Question(caseName, quantity string) *Question {
+	for i := range s.Questions {
+		if s.Questions[i].Case == caseName && s.Questions[i].Quantity == quantity {
+			return &s.Questions[i]
+		}
+	}
+	return nil
+}
+
+// File returns the file of an ID, or nil.
+func (s *Study) File(id string) *File {
+	for i := range s.Files {
+		if s.Files[i].ID == id {
+			return &s.Files[i]
+		}
+	}
+	return nil
+}
