@@ -23,6 +23,23 @@ type Report struct {
 	Log      []Entry         `json:"log"`
 }
 
+// Marks of a phrase of a statement.
+const (
+	Plain    = ""
+	Missing  = "missing" // a blank: nothing was given
+	Guess    = "guessed" // rests on a guess no one has accepted
+	Assumed  = "assumed" // rests on an assumption that is printed
+	WordOf   = "outcome" // the word of an outcome
+	FigureOf = "number"  // a computed number
+)
+
+// Phrase is a piece of a statement. Joined, the texts are the statement.
+type Phrase struct {
+	Text   string  `json:"text"`
+	Mark   string  `json:"mark"`
+	Target *Target `json:"target"` // where a blank, guess or number comes from; null for plain words
+}
+
 // FileLine names a source.
 type FileLine struct {
 	ID      string   `json:"id"`
