@@ -1,6 +1,6 @@
 # Every target is one question; the comment above it asks it.
 .DEFAULT_GOAL := help
-.PHONY: help setup build run test reference bench clean
+.PHONY: help tools setup build run test reference bench clean
 
 # One set of floating-point bits on every host: no assembly in the numeric libraries.
 GO_BUILD := go build -tags noasm -trimpath
@@ -11,12 +11,15 @@ PYTHON ?= /usr/bin/python3
 help:
 	@awk '/^# [^(]/{question=substr($$0,3)} /^[a-z]+:/{sub(":.*",""); printf "make %-10s %s\n",$$0,question}' Makefile
 
+# Are Go, Node, npm and the others here? (as root on Debian they are installed)
+tools:
+	@.ci/packages test
+
 # Is everything here that a build needs?
 setup: web/node_modules/.stamp
-	@.ci/packages test
 	@go mod download
 
-web/node_modules/.stamp: web/package-lock.json
+web/node_modules/.stamp: web/package-lock.json | tools
 	cd web && npm ci --no-audit --no-fund
 	touch $@
 

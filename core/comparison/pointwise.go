@@ -35,11 +35,12 @@ func RootSum(parts ...[]float64) []float64 {
 // Ratio returns |e|/u; NaN where u is zero or unknown.
 func Ratio(e, u []float64) []float64 {
 	r := make([]float64, len(e))
-	for i := range r {
-		r[i] = math.NaN()
-		if u[i] > 0 {
-			r[i] = math.Abs(e[i]) / u[i]
+	for i, v := range e {
+		q := math.NaN()
+		if w := u[i]; w > 0 {
+			q = math.Abs(v) / w
 		}
+		r[i] = q
 	}
 	return r
 }

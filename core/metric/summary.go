@@ -3,7 +3,11 @@
 // anything about agreement without the uncertainty beside it.
 package metric
 
-import "math"
+import (
+	"math"
+
+	"weirmark/core/quantity"
+)
 
 // Summary of a comparison error.
 type Summary struct {
@@ -15,7 +19,8 @@ type Summary struct {
 	MaxAt  int     // its index
 }
 
-// Summarise returns the summary of e; of no stations, zeros with N = 0.
+// Summarise returns the summary of e; of no stations, zeros with N = 0. A NaN
+// in e makes every mean NaN: the caller leaves out what is not compared.
 func Summarise(e []float64) Summary {
 	s := Summary{N: len(e)}
 	if s.N == 0 {
@@ -35,13 +40,33 @@ func Summarise(e []float64) Summary {
 	return s
 }
 
-// Within counts the stations with ratio <= k; NaN counts as neither.
+// Within counts the stations with ratio <= k, both as printed with ten digits,
+// so that the count agrees with the printed ratios and does not hang on last
+// bits. NaN counts as neither.
 func Within(ratio []float64, k float64) int {
+	limit := printedAs(k)
 	n := 0
 	for _, r := range ratio {
-		if r <= k {
+		if r <= limit {
 			n++
 		}
 	}
 	return n
+}
+
+// printedAs returns the largest number that is printed as k, by bisection.
+func printedAs(k float64) float64 {
+	k = quantity.Round(k, 10)
+	below, above := k, k+1e-8*math.Abs(k)
+	for {
+		middle := below + (above-below)/2
+		switch {
+		case !(below < middle && middle < above):
+			return below
+		case quantity.Round(middle, 10) <= k:
+			below = middle
+		default:
+			above = middle
+		}
+	}
 }

@@ -70,8 +70,10 @@ func appendDigits(b []byte, v float64, n int) []byte {
 	return strconv.AppendFloat(b, Round(v, n), 'g', -1, 64)
 }
 
-// Text returns v for a reader: n significant digits, a typographic minus, no
-// exponent between 1e-5 and 1e7, "–" where there is no value.
+// Text returns v for a reader: n significant digits and never fewer than the
+// whole part has, a typographic minus, no exponent between 1e-5 and 1e7, "–"
+// where there is no value. Like every text of a value here it is made from the
+// ten digits of Number, so that a tie is decided alike on every host.
 func Text(v float64, n int) string {
 	if math.IsNaN(v) || math.IsInf(v, 0) {
 		return "–"
@@ -99,29 +101,26 @@ func SignedLike(v, u float64, n int) string {
 }
 
 // Percent returns v, a fraction, in percent with one decimal, or two
-// significant digits where that is finer.
-func Percent(v float64) string {
-	d := 1
-	if a := math.Abs(v * 100); a > 0 && a < 0.95 {
-		d = min(decimals(a, 2), 4)
-	}
-	return fixed(v*100, d, false)
-}
+// significant digits where that is finer, but no more than four decimals.
+func Percent(v float64) string { return percent(v, false) }
 
 // SignedPercent is Percent with a plus sign on positive values.
-func SignedPercent(v float64) string {
-	text := Percent(v)
-	if v > 0 && strings.Trim(text, "0.") != "" {
-		return "+" + text
+func SignedPercent(v float64) string { return percent(v, true) }
+
+func percent(v float64, plus bool) string {
+	v = Round(v*100, 10)
+	d := 1
+	if a := math.Abs(v); a > 0 && a < 1 {
+		d = min(decimals(a, 2), 4)
 	}
-	return text
+	return fixed(v, d, plus)
 }
 
 func decimals(u float64, n int) int {
 	if u == 0 || math.IsNaN(u) || math.IsInf(u, 0) {
 		return n
 	}
-	e := exponent(math.Abs(u), n)
+	e := exponent(Round(math.Abs(u), 10), n)
 	return min(max(n-1-e, 0), 12)
 }
 
@@ -142,6 +141,7 @@ func plain(v float64, n int, plus bool) string {
 	if v == 0 {
 		return "0"
 	}
+	v = Round(v, 10)
 	e := exponent(math.Abs(v), n)
 	if e < -5 || e > 6 {
 		mantissa := strconv.FormatFloat(v, 'e', n-1, 64)
@@ -161,7 +161,7 @@ func fixed(v float64, d int, plus bool) string {
 	if math.IsNaN(v) || math.IsInf(v, 0) {
 		return "–"
 	}
-	text := strconv.FormatFloat(v, 'f', d, 64)
+	text := strconv.FormatFloat(Round(v, 10), 'f', d, 64)
 	if strings.Trim(text, "-0.") == "" {
 		text = strings.TrimPrefix(text, "-")
 		plus = false

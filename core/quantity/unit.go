@@ -46,75 +46,137 @@ func (u Unit) KinematicOf(v Unit) bool {
 	return u.Dimension == Dimension{2, 0, -2} && v.Dimension == Dimension{-1, 1, -2}
 }
 
-// Parse returns the unit of a symbol such as "mm", "m/s", "kg/m^3", "m²/s²",
-// "°C", "%", "deg". Products are written with a space, "·", "*" or ".",
-// quotients with "/". The empty symbol, "1" and "-" are the pure number.
+// Parse returns the unit of a symbol such as "mm", "m/s", "kg/m^3", "(m/s)²",
+// "J/(kg K)", "°C", "%", "deg". Products are written with a blank, "·", "*" or
+// ".", quotients with "/". The empty symbol, "1" and "-" are the pure number.
+//
+// A product behind a stroke without parentheses ("J/kg K") is refused: it is
+// read in two ways. So are temperatures with a zero of their own in a product,
+// exponents above 4 in one factor, and symbols longer than 64 bytes.
 func Parse(symbol string) (Unit, error) {
-	text := normal.Replace(strings.TrimSpace(symbol))
-	if text == "" || text == "1" || text == "-" {
+	symbol = strings.TrimSpace(symbol)
+	text := normal.Replace(symbol)
+	if text == "" || text == "-" {
 		return One, nil
 	}
 	if u, ok := find(text); ok {
 		u.Symbol = symbol
 		return u, nil
 	}
-	whole := Unit{Symbol: symbol, Factor: 1}
-	sign := int8(1)
-	for len(text) > 0 {
-		end := strings.IndexAny(text, "/* ")
-		piece := text
-		if end >= 0 {
-			piece = text[:end]
-		}
-		if piece != "" {
-			if err := whole.multiply(piece, sign); err != nil {
-				return Unit{}, &UnknownError{symbol}
-			}
-		}
-		if end < 0 {
-			break
-		}
-		if text[end] == '/' {
-			sign = -1
-		}
-		text = text[end+1:]
-		if text == "" {
-			return Unit{}, &UnknownError{symbol}
-		}
+	p := parser{text}
+	whole, ok := p.product()
+	if len(symbol) > longest || !ok || p.rest != "" {
+		return Unit{}, &UnknownError{symbol}
 	}
+	whole.Symbol = symbol
 	return whole, nil
 }
 
-var normal = strings.NewReplacer("²", "^2", "³", "^3", "⁻¹", "^-1", "⁻²", "^-2", "·", "*", "⋅", "*", "**", "^", "μ", "µ", "(", "", ")", "")
+const (
+	longest   = 64   // bytes of a symbol
+	steepest  = 12   // exponent of one dimension in a whole unit
+	farthest  = 1e60 // factor to SI, and its inverse
+	separator = "/* ()"
+)
 
-func (u *Unit) multiply(piece string, sign int8) error {
-	name, power, ok := splitPower(piece)
-	if !ok {
-		return &UnknownError{piece}
-	}
-	part, known := find(name)
-	if !known || part.Offset != 0 {
-		if name == "1" {
-			return nil
+var normal = strings.NewReplacer(
+	"²", "^2", "³", "^3", "⁴", "^4", "⁻¹", "^-1", "⁻²", "^-2", "⁻³", "^-3", "⁻⁴", "^-4",
+	"**", "^", "·", "*", "⋅", "*", ".", "*", "μ", "µ", "\t", " ", "\u00a0", " ")
+
+// parser holds what is left of a symbol in normal form.
+type parser struct{ rest string }
+
+// product reads factors up to the end or a closing parenthesis.
+func (p *parser) product() (Unit, bool) {
+	whole := One
+	power := 1
+	for {
+		factor, ok := p.factor()
+		if !ok {
+			return Unit{}, false
 		}
-		return &UnknownError{piece}
+		if whole, ok = whole.times(factor, power); !ok {
+			return Unit{}, false
+		}
+		blank := p.skip()
+		switch {
+		case p.rest == "" || p.rest[0] == ')':
+			return whole, true
+		case p.rest[0] == '/':
+			power = -1
+		case power < 0 || p.rest[0] != '*' && !blank:
+			return Unit{}, false
+		}
+		if p.rest[0] == '/' || p.rest[0] == '*' {
+			p.rest = p.rest[1:]
+			p.skip()
+		}
 	}
-	power *= sign
-	for range abs(power) {
+}
+
+// factor reads a symbol with its exponent, or a product in parentheses.
+func (p *parser) factor() (Unit, bool) {
+	if inside, open := strings.CutPrefix(p.rest, "("); open {
+		p.rest = inside
+		p.skip()
+		u, ok := p.product()
+		if !ok || p.rest == "" {
+			return Unit{}, false
+		}
+		_, power, ok := splitPower("u" + p.piece(p.rest[1:]))
+		if !ok {
+			return Unit{}, false
+		}
+		return One.times(u, power)
+	}
+	name, power, ok := splitPower(p.piece(p.rest))
+	u, known := find(name)
+	if !ok || !known || u.Offset != 0 {
+		return Unit{}, false
+	}
+	return One.times(u, power)
+}
+
+// piece returns the text up to the next separator and leaves the rest.
+func (p *parser) piece(text string) string {
+	end := strings.IndexAny(text, separator)
+	if end < 0 {
+		end = len(text)
+	}
+	p.rest = text[end:]
+	return text[:end]
+}
+
+// skip leaves out blanks and says whether there were some.
+func (p *parser) skip() bool {
+	rest := strings.TrimLeft(p.rest, " ")
+	blank := len(rest) < len(p.rest)
+	p.rest = rest
+	return blank
+}
+
+// times returns the product of u and v to a power, and false where it is
+// outside the range that units have.
+func (u Unit) times(v Unit, power int) (Unit, bool) {
+	for range max(power, -power) {
 		if power > 0 {
-			u.Factor *= part.Factor
+			u.Factor *= v.Factor
 		} else {
-			u.Factor /= part.Factor
+			u.Factor /= v.Factor
 		}
 	}
 	for i := range u.Dimension {
-		u.Dimension[i] += part.Dimension[i] * power
+		e := int(u.Dimension[i]) + int(v.Dimension[i])*power
+		if max(e, -e) > steepest {
+			return Unit{}, false
+		}
+		u.Dimension[i] = int8(e)
 	}
-	return nil
+	return u, u.Factor > 1/farthest && u.Factor < farthest
 }
 
 // splitPower splits "m^2", "m2", "s^-1" and "s-1" into name and exponent.
-func splitPower(piece string) (name string, power int8, ok bool) {
+func splitPower(piece string) (name string, power int, ok bool) {
 	name, exponent, marked := strings.Cut(piece, "^")
 	if !marked {
 		cut := strings.IndexAny(piece, "-0123456789")
@@ -125,16 +187,9 @@ func splitPower(piece string) (name string, power int8, ok bool) {
 	}
 	switch exponent {
 	case "1", "2", "3", "4":
-		return name, int8(exponent[0] - '0'), true
+		return name, int(exponent[0] - '0'), true
 	case "-1", "-2", "-3", "-4":
-		return name, -int8(exponent[1] - '0'), true
+		return name, -int(exponent[1] - '0'), true
 	}
 	return "", 0, false
-}
-
-func abs(n int8) int8 {
-	if n < 0 {
-		return -n
-	}
-	return n
 }

@@ -5,6 +5,9 @@ import (
 	"weirmark/core/quantity"
 )
 
+// None is the Number that is absent.
+var None = quantity.None
+
 // Number is a computed value, printed with ten significant digits.
 type Number = quantity.Number
 
@@ -152,7 +155,8 @@ type Station struct {
 
 // Summary counts and averages over the common stations.
 type Summary struct {
-	N            int    `json:"n"`
+	N            int    `json:"n"`      // stations compared
+	Tested       int    `json:"tested"` // of these, stations with a known u_val
 	Bias         Number `json:"bias"`
 	MAE          Number `json:"mae"`
 	RMSE         Number `json:"rmse"`
@@ -254,21 +258,23 @@ type SourceLine struct {
 
 // Judgement holds the requirement against the interval of the model error.
 type Judgement struct {
-	Limit      Number `json:"limit"`   // in the cell's unit
-	Percent    Number `json:"percent"` // as entered, or null
-	Who        string `json:"who"`
-	Date       string `json:"date"`
-	Late       bool   `json:"late"`
-	Outcome    string `json:"outcome"`
-	At         Number `json:"at"` // the deciding station, for curves
-	UValNeeded Number `json:"u_val_needed"`
-	UNumNeeded Number `json:"u_num_needed"`
-	Resolve    string `json:"resolve"`
+	Limit         Number `json:"limit"`   // in the cell's unit
+	Percent       Number `json:"percent"` // as entered, or null
+	Who           string `json:"who"`
+	Date          string `json:"date"`
+	Late          bool   `json:"late"`
+	Outcome       string `json:"outcome"`
+	At            Number `json:"at"` // the deciding station, for curves
+	UValNeeded    Number `json:"u_val_needed"`
+	UNumNeeded    Number `json:"u_num_needed"`
+	UNumReduction Number `json:"u_num_reduction"` // fraction
 }
 
 // Fragility is an alternative that changes an outcome word.
 type Fragility struct {
 	Change  string `json:"change"`
+	What    string `json:"what"` // requirement, reading, joint statistic, remainder
+	From    string `json:"from"`
 	Outcome string `json:"outcome"`
 	Detail  string `json:"detail"`
 }

@@ -4,6 +4,8 @@
 package study
 
 import (
+	"encoding/json"
+
 	"weirmark/core/interpolate"
 )
 
@@ -49,6 +51,8 @@ type Study struct {
 	Slips     []Slip     `json:"slips"`
 	Questions []Question `json:"questions"`
 	Log       []Entry    `json:"log"`
+
+	unknown map[string]json.RawMessage // fields of the document this edition does not know, kept as they came
 }
 
 // Signature is a recorded statement of a role, not an authenticated one.
@@ -125,6 +129,7 @@ type Question struct {
 	ReferenceID string       `json:"reference_id"` // what the data are called
 	Choices     Choices      `json:"choices"`
 	Downward    bool         `json:"downward"` // draw with negative values upward, as is usual for Cp
+	Revealed    bool         `json:"revealed"` // the comparison was looked at
 }
 
 // Requirement is the accuracy the decision needs.
@@ -152,12 +157,14 @@ const (
 )
 
 // Source is one line of the uncertainty budget. Its standard uncertainty is
-// Value / CoverageFactor(Coverage).
+// Value / CoverageFactor(Coverage). A column of a numerical source is looked
+// up in the simulation first, any other in the reference.
 type Source struct {
 	Name     string  `json:"name"`
 	Of       string  `json:"of"`
 	Model    string  `json:"model"` // for numerical and input sources: the model it belongs to, "" for all
 	Value    float64 `json:"value"`
+	Column   string  `json:"column,omitempty"` // holds the value at each station, in place of Value
 	Basis    string  `json:"basis"`
 	Coverage Field   `json:"coverage"`
 	Random   bool    `json:"random"`

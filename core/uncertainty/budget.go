@@ -76,14 +76,19 @@ func Scaled(u []float64, k float64) []float64 {
 
 // Replicates returns the mean of repeated readings, their standard deviation
 // (divisor n-1) and the standard uncertainty of the mean s/sqrt(n), JCGM
-// 100:2008 4.2 (clause from memory). Fewer than two readings have no s.
+// 100:2008 4.2 (clause from memory). Fewer than two readings have no s, none
+// have no mean. Readings are taken from the first one, so that a large common
+// part takes no digits.
 func Replicates(x []float64) (mean, s, u float64) {
+	if len(x) == 0 {
+		return math.NaN(), math.NaN(), math.NaN()
+	}
 	n := float64(len(x))
 	sum := 0.0
 	for _, v := range x {
-		sum += v
+		sum += v - x[0]
 	}
-	mean = sum / n
+	mean = x[0] + sum/n
 	if len(x) < 2 {
 		return mean, math.NaN(), math.NaN()
 	}

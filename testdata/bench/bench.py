@@ -46,12 +46,29 @@ def best(work):
     return min(seconds)
 
 
+def linear(x, y, at):
+    """Linear interpolation and its standard uncertainty, 1.05 (t - x_i)(x_(i+1) - t)/2 max|f''| over sqrt 3."""
+    s = numpy.interp(at, x, y)
+    slope = numpy.diff(y) / numpy.diff(x)
+    inner = numpy.abs(2 * numpy.diff(slope) / (x[2:] - x[:-2]))
+    second = numpy.concatenate((inner[:1], inner, inner[-1:]))
+    i = numpy.clip(numpy.searchsorted(x, at) - 1, 0, len(x) - 2)
+    bound = 1.05 / 2 * (at - x[i]) * (x[i + 1] - at) * numpy.maximum(second[i], second[i + 1])
+    return s, bound / math.sqrt(3)
+
+
+def monotone(x, y, at):
+    """Monotone cubic interpolation, and its difference from linear as the bound of its error."""
+    s = PchipInterpolator(x, y)(at)
+    return s, numpy.abs(s - numpy.interp(at, x, y)) / math.sqrt(3)
+
+
 def compare(s, d, u):
     """What a pointwise comparison states: the differences, their ratios and the summary of them."""
     e = s - d
-    ratio = e / u
-    return (e, ratio, e.mean(), numpy.abs(e).mean(), math.sqrt((e * e).mean()), numpy.abs(e).max(),
-            (numpy.abs(ratio) <= 1).sum(), (numpy.abs(ratio) <= 2).sum())
+    size = numpy.abs(e)
+    ratio = size / u
+    return e, ratio, e.mean(), size.mean(), math.sqrt((e * e).mean()), size.argmax(), (ratio <= 1).sum(), (ratio <= 2).sum()
 
 
 def main(folder):
@@ -71,7 +88,8 @@ def main(folder):
         "pandas.read_csv": best(lambda: pandas.read_csv(path)),
         "numpy.loadtxt": best(lambda: numpy.loadtxt(path, delimiter=",", skiprows=1)),
         "numpy.interp": best(lambda: numpy.interp(stations, x, y)),
-        "scipy PCHIP": best(lambda: PchipInterpolator(x, y)(stations)),
+        "numpy, same work": best(lambda: linear(x, y, stations)),
+        "scipy, same work": best(lambda: monotone(x, y, stations)),
         "numpy arithmetic": best(lambda: compare(s, d, u)),
     }
     json.dump({

@@ -108,6 +108,40 @@ func TestClose(t *testing.T) {
 	}
 }
 
+func TestSteps(t *testing.T) {
+	seen := map[string]bool{}
+	for _, s := range steps("./...", 0) {
+		if s.name == "" || seen[s.name] || len(s.tools) == 0 || s.run == nil {
+			t.Errorf("step %q: every step has a name of its own, tools and something to run", s.name)
+		}
+		seen[s.name] = true
+	}
+}
+
+func TestMissing(t *testing.T) {
+	for _, row := range []struct {
+		tools []string
+		want  string
+	}{
+		{[]string{"go"}, ""},
+		{[]string{"go", "no-such-program"}, "no-such-program"},
+		{[]string{"no/such/place"}, "no/such/place"},
+	} {
+		if got := missing(row.tools); got != row.want {
+			t.Errorf("%v: %q, want %q", row.tools, got, row.want)
+		}
+	}
+}
+
+func TestCommand(t *testing.T) {
+	got := &tally{}
+	command(got, "a", "go", "version")
+	command(got, "b", "go", "no-such-verb")
+	if want := (tally{passed: 1, failed: []string{"b: exit status 2"}}); !reflect.DeepEqual(*got, want) {
+		t.Errorf("%+v, want %+v", *got, want)
+	}
+}
+
 func TestOnlyDeadline(t *testing.T) {
 	for _, row := range []struct {
 		said string

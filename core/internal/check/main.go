@@ -18,31 +18,40 @@ import (
 	"time"
 )
 
-// step is one kind of check; tools are the programs it needs on the path.
+// step is one kind of check; tools are the programs it needs, on the path or by
+// their place in the repository.
 type step struct {
 	name  string
 	tools []string
 	run   func(*tally)
 }
 
+// steps is the table of all checks, in the order in which they run: what is
+// quick and most often wrong comes first.
+func steps(packages string, fuzz time.Duration) []step {
+	return []step{
+		{"gofmt", []string{"gofmt"}, checkFormat},
+		{"committed text", []string{"git"}, checkCommitted},
+		{"TypeScript", []string{"node", compiler}, func(t *tally) { command(t, "TypeScript", compiler, "-p", "web") }},
+		{"go vet", []string{"go"}, func(t *tally) { vet(t, native, packages) }},
+		{"go vet, js/wasm", []string{"go"}, func(t *tally) { vet(t, wasm, packages) }},
+		{"go test", []string{"go"}, func(t *tally) { test(t, native, packages) }},
+		{"go test, js/wasm", []string{"go", "node", "bash"}, func(t *tally) { test(t, wasm, packages) }},
+		{"fuzz", []string{"go"}, func(t *tally) { fuzzAll(t, packages, fuzz) }},
+	}
+}
+
+// compiler checks the types of the front end; npm ci in web puts it there.
+const compiler = "web/node_modules/.bin/tsc"
+
 func main() {
 	only := flag.String("only", "", "run only the steps whose name contains this text")
 	packages := flag.String("packages", "./...", "Go packages to check, as a pattern")
-	fuzz := flag.Duration("fuzz", 5*time.Second, "time for each fuzz target")
+	fuzz := flag.Duration("fuzz", 4*time.Second, "time for each fuzz target")
 	flag.Parse()
 
-	steps := []step{
-		{"gofmt", []string{"gofmt"}, checkFormat},
-		{"committed text", []string{"git"}, checkCommitted},
-		{"go vet", []string{"go"}, func(t *tally) { vet(t, native, *packages) }},
-		{"go vet, js/wasm", []string{"go"}, func(t *tally) { vet(t, wasm, *packages) }},
-		{"go test", []string{"go"}, func(t *tally) { test(t, native, *packages) }},
-		{"go test, js/wasm", []string{"go", "node", "bash"}, func(t *tally) { test(t, wasm, *packages) }},
-		{"fuzz", []string{"go"}, func(t *tally) { fuzzAll(t, *packages, *fuzz) }},
-	}
-
 	total := &tally{}
-	for _, s := range steps {
+	for _, s := range steps(*packages, *fuzz) {
 		if !strings.Contains(s.name, *only) {
 			continue
 		}
@@ -50,7 +59,7 @@ func main() {
 		t := &tally{}
 		start := time.Now()
 		if tool := missing(s.tools); tool != "" {
-			t.skip(s.name + ": " + tool + " is not installed")
+			t.skip(s.name + ": " + tool + " is not there")
 		} else {
 			s.run(t)
 		}

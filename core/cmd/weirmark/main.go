@@ -1,0 +1,77 @@
+// Command weirmark is the headless host of the core: it moves files and flags
+// to the message door and prints what comes back. See README.md.
+//
+// It exits with 0 when done, 2 when evidence is incomplete, 3 when the input
+// was refused or the usage was wrong, 4 on a fault of its own.
+package main
+
+import (
+	"fmt"
+	"io"
+	"os"
+	"runtime/debug"
+
+	"weirmark/core/message"
+)
+
+// internal is the status of a fault of our own.
+const internal = 4
+
+const usage = `weirmark read FILE [--json]
+weirmark grids FILE [--size COL] [--value COL] [--dim 2|3] [--limits on|off] [--json]
+weirmark compare --sim FILE[@TABLE] --ref FILE[@TABLE] --x COL --y COL [--ref-x COL] [--ref-y COL]
+                 [--u COL|NUMBER|NUMBER%] [--u-k NUMBER] [--u-common COL|NUMBER] [--u-num COL|NUMBER] [--u-input NUMBER]
+                 [--u-interp on|off] [--interp linear|monotone] [--k NUMBER] [--json]
+weirmark run STUDY --out DIR
+weirmark demo DIR
+
+Exit: 0 done, 2 evidence incomplete, 3 input refused or wrong usage, 4 internal fault.
+`
+
+func main() { os.Exit(run(os.Args[1:], os.Stdout, os.Stderr)) }
+
+// run runs one command and returns its exit status.
+func run(args []string, out, errs io.Writer) (status int) {
+	defer func() {
+		if fault := recover(); fault != nil {
+			fmt.Fprintf(errs, "weirmark: internal fault: %v\n%s", fault, debug.Stack())
+			status = internal
+		}
+	}()
+	if len(args) == 0 {
+		fmt.Fprint(errs, usage)
+		return message.Refused
+	}
+	commands := map[string]struct {
+		flags map[string]bool // by name: whether it takes a value
+		do    func(*invocation) (int, error)
+	}{
+		"read":    {map[string]bool{"json": false}, read},
+		"grids":   {map[string]bool{"json": false, "size": true, "value": true, "dim": true, "limits": true}, grids},
+		"compare": {map[string]bool{"json": false, "sim": true, "ref": true, "x": true, "y": true, "ref-x": true, "ref-y": true, "u": true, "u-k": true, "u-common": true, "u-num": true, "u-input": true, "u-interp": true, "interp": true, "k": true}, compare},
+		"run":     {map[string]bool{"out": true}, runStudy},
+		"demo":    {map[string]bool{}, runDemo},
+	}
+	if args[0] == "help" || args[0] == "--help" || args[0] == "-h" {
+		fmt.Fprint(out, usage)
+		return message.Done
+	}
+	c, known := commands[args[0]]
+	if !known {
+		fmt.Fprintf(errs, "weirmark: there is no command %q\n%s", args[0], usage)
+		return message.Refused
+	}
+	v := &invocation{out: out, errs: errs}
+	if err := v.parse(args[1:], c.flags); err != nil {
+		fmt.Fprintf(errs, "weirmark %s: %v\n%s", args[0], err, usage)
+		return message.Refused
+	}
+	status, err := c.do(v)
+	if err != nil {
+		fmt.Fprintf(errs, "weirmark %s: %v\n", args[0], err)
+		if status == message.Done {
+			status = message.Refused
+		}
+	}
+	return status
+}

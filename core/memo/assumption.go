@@ -1,0 +1,92 @@
+package memo
+
+import (
+	"fmt"
+
+	"weirmark/core/study"
+)
+
+// assumption is a thing the statements rest on that no computation gave, as a
+// text or in words of ours. Kind is the mark of a phrase, or "chosen".
+type assumption struct {
+	Kind  string
+	What  string
+	Value []Node
+	Where []Node
+}
+
+// assumptions lists guesses, assumptions and blanks of the statements, open
+// uncertainty sources, then the choices of every question, each once.
+func assumptions(in Input) []assumption {
+	var all []assumption
+	type once struct {
+		kind, what string
+		of         key
+	}
+	seen := map[once]bool{}
+	add := func(of key, a assumption) {
+		if o := (once{a.Kind, a.What, of}); !seen[o] {
+			seen[o] = true
+			all = append(all, a)
+		}
+	}
+	for _, s := range in.Statements {
+		for _, p := range s.Phrases {
+			if p.Mark == study.Guess || p.Mark == study.Assumed || p.Mark == study.Missing {
+				add(key{s.Case, s.Quantity, s.Model}, assumption{Kind: p.Mark, What: p.Text,
+					Where: say("statement, case {}, {}, model {}", text(s.Case), text(s.Quantity), text(s.Model))})
+			}
+		}
+	}
+	for _, c := range in.Report.Cells {
+		for _, source := range c.Sources {
+			if source.Open {
+				add(key{c.Case, c.Quantity, ""}, assumption{Kind: study.Guess, What: "uncertainty source: " + source.Name,
+					Where: say("case {}, {}", text(c.Case), text(c.Quantity))})
+			}
+		}
+	}
+	for i, c := range in.Report.Cells {
+		add(key{c.Case, c.Quantity, ""}, assumption{Kind: chosen, Value: choices(i, c), Where: say("case {}, {}", text(c.Case), text(c.Quantity))})
+	}
+	return all
+}
+
+const chosen = "chosen"
+
+// choices returns the decisions behind the numbers of a cell, in words.
+func choices(i int, c study.Cell) []Node {
+	at := func(name string) string { return fmt.Sprintf("cells.%d.choices.%s", i, name) }
+	pick := func(yes bool, a, b string) Node {
+		if yes {
+			return text(a)
+		}
+		return text(b)
+	}
+	h := c.Choices
+	words := say("*k* = {}; *k*_{num} = {}; grid study by the {} rule, formal order {}, {} dimensions",
+		asWritten(h.K, at("k")), asWritten(h.KNum, at("k_num")), pick(h.Bounded, "bounded", "plain"), asWritten(h.Formal, at("formal")), count(h.Dimension, at("dimension")))
+	if c.Scalar {
+		return words
+	}
+	return append(words, say("; interpolation {}, its uncertainty {}; numerical uncertainty {} between stations",
+		text(string(h.Interpolation)), pick(h.UInterp, "counted", "left out"), pick(h.NumShared, "fully shared", "independent"))...)
+}
+
+func (b *builder) assumptionSection() Node {
+	s := b.open(1, "assumptions", "Assumptions, guesses and choices")
+	if len(b.assumed) == 0 {
+		s.Nodes = append(s.Nodes, paragraph(text("None is recorded.")))
+		return s
+	}
+	rows := make([]Node, len(b.assumed))
+	for i, a := range b.assumed {
+		what := a.Value
+		if a.What != "" {
+			what = typeset(a.What)
+		}
+		rows[i] = row(figureCell(text(fmt.Sprint(i+1))), cell(text(a.Kind)), cell(what...), cell(a.Where...))
+	}
+	s.Nodes = append(s.Nodes, b.table("plain", say("What the statements rest on and no computation gave."), headRow("#No.", "Kind", "What", "Where"), rows...))
+	return s
+}

@@ -1,0 +1,330 @@
+package memo
+
+import (
+	"fmt"
+	"strings"
+
+	"weirmark/core/notice"
+	"weirmark/core/quantity"
+	"weirmark/core/study"
+)
+
+// comparisons prints every cell.
+func (b *builder) comparisons() Node {
+	s := b.open(1, "comparisons", "Comparisons")
+	if len(b.in.Report.Cells) == 0 {
+		s.Nodes = append(s.Nodes, paragraph(text("None.")))
+		return s
+	}
+	for i, c := range b.in.Report.Cells {
+		s.Nodes = append(s.Nodes, b.cell(i, c))
+	}
+	return s
+}
+
+func (b *builder) cell(i int, c study.Cell) Node {
+	s := b.openWith(2, cellID(i), names(c)...)
+	for _, part := range [][]Node{
+		b.compared(i, c), b.figuresOf(c.Case, c.Quantity, c.Model), b.stations(i, c), b.measures(i, c),
+		b.joint(i, c), b.crossings(i, c), b.grids(i, c), b.sources(i, c), b.requirement(i, c), b.fragility(c), b.openPoints(c),
+	} {
+		s.Nodes = append(s.Nodes, part...)
+	}
+	return s
+}
+
+var kinds = map[string]string{
+	study.KindTest:        "test",
+	study.KindLaw:         "reference law",
+	study.KindCorrelation: "correlation",
+	study.KindSimulation:  "another simulation (comparison of codes)",
+}
+
+var uses = map[string]string{
+	study.UseValidation: "kept apart from the setting of the model",
+	study.UseTuning:     "used to set the model",
+}
+
+var courses = [5]string{"Run settled", "Grid fine enough", "Same thing compared", "Agreement", "What can be said"}
+
+var states = map[study.State]string{
+	study.Empty: "nothing given", study.Doubts: "given, with open points", study.Settled: "settled", study.Blocked: "contradicted or blocked",
+}
+
+// word returns the wording of a key, or the key itself.
+func word[K ~string](words map[K]string, k K) string {
+	if w, ok := words[k]; ok {
+		return w
+	}
+	return string(k)
+}
+
+// compared says what stands against what.
+func (b *builder) compared(i int, c study.Cell) []Node {
+	at := func(name string) string { return fmt.Sprintf("cells.%d.%s", i, name) }
+	evidence := make([]string, len(courses))
+	for j, name := range courses {
+		evidence[j] = name + ": " + word(states, c.Courses[j])
+	}
+	of := plural(len(c.Stations), "station")
+	if c.Scalar {
+		of = plural(len(c.Stations), "value")
+	}
+	range1 := say("{} of {}", text(of), count(c.StationsAll, at("stations_all")))
+	if c.StationsAll == 0 {
+		range1 = []Node{text(of)}
+	}
+	if lines := linesOf(c.Stations); lines != "" {
+		range1 = append(range1, text(", "+lines+" of the reference file"))
+	}
+	files := []Node{text("Not provided")}
+	if len(c.FilesUsed) > 0 {
+		files = []Node{text(strings.Join(b.fileNames(c.FilesUsed), ", "))}
+	}
+	return []Node{sheet(
+		line(say("Condition"), given(c.Condition)),
+		line(say("Simulation"), say("model {}, grid {}", given(c.Model), given(c.Grid))...),
+		line(say("Reference"), say("{}; kind: {}; use: {}", given(c.Reference), given(word(kinds, c.Kind)), given(word(uses, c.Use)))...),
+		line(say("Unit"), text(unitOf(c.Unit))),
+		line(say("Compared at"), range1...),
+		line(say("Files"), files...),
+		line(say("Choices"), choices(i, c)...),
+		line(say("Evidence"), text(strings.Join(evidence, "; "))),
+	)}
+}
+
+// linesOf returns the span of the reference lines.
+func linesOf(stations []study.Station) string {
+	first, last := 0, 0
+	for _, s := range stations {
+		if s.Line > 0 && (first == 0 || s.Line < first) {
+			first = s.Line
+		}
+		last = max(last, s.Line)
+	}
+	switch {
+	case first == 0:
+		return ""
+	case first == last:
+		return fmt.Sprintf("line %d", first)
+	}
+	return fmt.Sprintf("lines %d to %d", first, last)
+}
+
+func (b *builder) fileNames(ids []string) []string {
+	names := make([]string, len(ids))
+	for i, id := range ids {
+		names[i] = id
+		for _, f := range b.in.Report.Files {
+			if f.ID == id {
+				names[i] = f.Name
+			}
+		}
+	}
+	return names
+}
+
+// measures prints the difference measures of a curve.
+func (b *builder) measures(i int, c study.Cell) []Node {
+	m := c.Summary
+	if m == nil || c.Scalar {
+		return nil
+	}
+	at := func(name string) string { return fmt.Sprintf("cells.%d.summary.%s", i, name) }
+	scale := quantity.None
+	if low, _ := extremes(c.Stations, func(s study.Station) quantity.Number { return s.UVal }); low >= 0 {
+		scale = c.Stations[low].UVal
+	}
+	where := []Node(nil)
+	if m.MaxAt.Known() {
+		where = append(say(" at {} = ", given(c.XName)), withUnit(trimmed(m.MaxAt, 4, at("max_at")), c.XUnit)...)
+	}
+	rows := []Node{
+		line(say("Stations compared"), count(m.N, at("n"))),
+		line(say("Mean of *E* (bias)"), withUnit(signedBeside(m.Bias, scale, at("bias")), c.Unit)...),
+		line(say("Mean of |*E*|"), withUnit(beside(m.MAE, scale, at("mae")), c.Unit)...),
+		line(say("Root mean square of *E*"), withUnit(beside(m.RMSE, scale, at("rmse")), c.Unit)...),
+		line(say("Largest |*E*|"), append(withUnit(beside(m.MaxAbs, scale, at("max_abs")), c.Unit), where...)...),
+	}
+	if m.MaxRatio.Known() {
+		rows = append(rows,
+			line(say("Largest |*E*|/*u*_{val}"), digits(m.MaxRatio, 3, at("max_ratio"))),
+			line(say("Stations with |*E*| ≤ *u*_{val}"), say("{} of {}", count(m.WithinUVal, at("within_u_val")), count(m.Tested, at("tested")))...),
+			line(say("Stations with |*E*| ≤ *k* *u*_{val}"), say("{} of {}", count(m.WithinKUVal, at("within_k_u_val")), count(m.Tested, at("tested")))...),
+			line(say("Expected beyond *k* *u*_{val} by chance"), digits(m.BeyondChance, 3, at("beyond_chance")), text(", for normal errors")))
+	} else {
+		rows = append(rows, line(say("Against the uncertainty"), say("not available: *u*_{val} is not known")...))
+	}
+	return []Node{heading("Difference measures"), sheet(rows...)}
+}
+
+// joint prints the statistic of all stations together and its parts.
+func (b *builder) joint(i int, c study.Cell) []Node {
+	if c.Scalar {
+		return nil
+	}
+	title := heading("All stations together")
+	j := c.Joint
+	if j == nil {
+		return []Node{title, paragraph(text("No joint statistic is available for this cell."))}
+	}
+	at := func(name string) string { return fmt.Sprintf("cells.%d.joint.%s", i, name) }
+	against := func(exceeds bool) Node {
+		if exceeds {
+			return text("exceeds it")
+		}
+		return text("does not exceed it")
+	}
+	rows := []Node{row(cell(say("Joint statistic *E*^{T}*V*^{−1}*E*")...), figureCell(hundredths(j.Statistic, at("statistic"))), figureCell(count(j.N, at("n"))),
+		figureCell(hundredths(j.Reference, at("reference"))), cell(against(j.Exceeds)))}
+	if known(j.Remainder) {
+		rows = append(rows,
+			row(cell(text("\u2003of which a common offset")), figureCell(hundredths(j.OffsetPart, at("offset_part"))), figureCell(text("1")), figureCell(text("")), cell()),
+			row(cell(text("\u2003remainder")), figureCell(hundredths(j.Remainder, at("remainder"))), figureCell(count(j.RemainderN, at("remainder_n"))),
+				figureCell(hundredths(j.RemainderReference, at("remainder_reference"))), cell(against(j.RemainderExceeds))))
+	}
+	nodes := []Node{title, b.table("plain", say("Joint statistic over {} with correlation: {}.", text(plural(len(c.Stations), "station")), given(j.Pattern)),
+		headRow("", "#Value", "#Degrees of freedom", "#95 % point", "Reading"), rows...)}
+	words := say("The tail probability at the stated uncertainties is {}.", digits(j.P, 2, at("p_value")))
+	if known(j.Offset) {
+		resolved := "not resolved"
+		if j.OffsetResolved {
+			resolved = "resolved"
+		}
+		words = append(words, say(" The common offset of *E* is ")...)
+		words = append(words, withUnit(signedBeside(j.Offset, j.UOffset, at("offset")), c.Unit)...)
+		words = append(words, text(" ± "))
+		words = append(words, withUnit(digits(j.UOffset, 2, at("u_offset")), c.Unit)...)
+		words = append(words, text(" (standard), "+resolved+" at this level."))
+	}
+	nodes = append(nodes, paragraph(words...))
+	if known(j.Independent, j.NumShared) {
+		nodes = append(nodes, paragraph(say("Other correlations of the same sources: with every source independent between stations the statistic is {}; with the numerical uncertainty fully shared it is {}.",
+			hundredths(j.Independent, at("independent")), hundredths(j.NumShared, at("num_shared")))...))
+	}
+	return nodes
+}
+
+// crossings lists the changes of sign of a curve.
+func (b *builder) crossings(i int, c study.Cell) []Node {
+	if len(c.Crossings.Simulation)+len(c.Crossings.Reference) == 0 {
+		return nil
+	}
+	side := func(name, key string, list []study.Crossing) Node {
+		if len(list) == 0 {
+			return line(say(name), text("none"))
+		}
+		var nodes []Node
+		for j, x := range list {
+			if j > 0 {
+				nodes = append(nodes, text("; "))
+			}
+			way := " (falling)"
+			if x.Rising {
+				way = " (rising)"
+			}
+			nodes = append(append(nodes, withUnit(trimmed(x.X, 5, fmt.Sprintf("cells.%d.crossings.%s.%d.x", i, key, j)), c.XUnit)...), text(way))
+		}
+		return line(say(name), nodes...)
+	}
+	return []Node{heading("Zero crossings"), sheet(side("Simulation", "sim", c.Crossings.Simulation), side("Reference", "ref", c.Crossings.Reference)),
+		note(text("Linear between neighbours of opposite sign. No uncertainty of the position is given."))}
+}
+
+// sources prints the uncertainty budget.
+func (b *builder) sources(i int, c study.Cell) []Node {
+	title := heading("Uncertainty sources")
+	if len(c.Sources) == 0 {
+		return []Node{title, paragraph(text("No source is recorded. Blank is not zero."))}
+	}
+	rows := make([]Node, len(c.Sources))
+	for j, s := range c.Sources {
+		at := func(name string) string { return fmt.Sprintf("cells.%d.sources.%d.%s", i, j, name) }
+		name := text(s.Name)
+		if s.Open {
+			name = Node{Kind: Mark, Role: study.Guess, Text: s.Name}
+		}
+		rows[j] = row(cell(name), cell(text(s.Of)), cell(text(s.Text)), figureCell(digits(s.U, 2, at("u"))), figureCell(percent(s.Share, at("share"))), cell(text(s.Pattern)), cell(text(s.Origin)))
+	}
+	caption := say("Uncertainty sources, {}. *u* is standard, for curves its root mean square over the stations; the share is of the mean *u*_{val}^{2}.", text(unitOf(c.Unit)))
+	return []Node{title, b.table("plain", caption, headRow("Source", "Of", "As entered", "#*u*", "#Share", "Pattern", "Origin"), rows...)}
+}
+
+// requirement prints the requirement, its outcome and what would resolve it.
+func (b *builder) requirement(i int, c study.Cell) []Node {
+	title := heading("Requirement")
+	q := c.Requirement
+	if q == nil {
+		return []Node{title, paragraph(text("None is recorded: adequacy is not judged."))}
+	}
+	at := func(name string) string { return fmt.Sprintf("cells.%d.requirement.%s", i, name) }
+	words := append(b.requirementWords(i, c), text("."))
+	if q.Late {
+		words = append(words, text(" It was recorded after the comparison had been seen."))
+	}
+	if !c.Scalar && q.At.Known() {
+		words = append(words, say(" The deciding station is {} = ", given(c.XName))...)
+		words = append(words, withUnit(trimmed(q.At, 4, at("at")), c.XUnit)...)
+		words = append(words, text("."))
+	}
+	nodes := []Node{title, paragraph(words...)}
+	var needed []Node
+	if q.UValNeeded.Known() {
+		needed = append(needed, say("With *E* unchanged it would be shown at *u*_{val} ≤ ")...)
+		needed = append(needed, withUnit(digits(q.UValNeeded, 3, at("u_val_needed")), c.Unit)...)
+		if q.UNumNeeded.Known() {
+			needed = append(needed, say(", which *u*_{num} ≤ ")...)
+			needed = append(needed, withUnit(digits(q.UNumNeeded, 3, at("u_num_needed")), c.Unit)...)
+			if q.UNumReduction.Known() {
+				needed = append(needed, say(" (reduced by {})", percent(q.UNumReduction, at("u_num_reduction")))...)
+			}
+			needed = append(needed, text(" would give"))
+		}
+		needed = append(needed, text("."))
+	}
+	if len(needed) > 0 {
+		nodes = append(nodes, paragraph(append([]Node{strong("To resolve: ")}, needed...)...))
+	}
+	return nodes
+}
+
+// fragility prints the alternatives that change the outcome word.
+func (b *builder) fragility(c study.Cell) []Node {
+	title := heading("Choices that change the outcome")
+	if len(c.Fragile) == 0 {
+		return []Node{title, paragraph(text("None of the alternatives that were tried changes an outcome word."))}
+	}
+	rows := make([]Node, len(c.Fragile))
+	for j, f := range c.Fragile {
+		rows[j] = row(cell(typeset(f.Change)...), cell(text(f.What)), cell(text(f.From)), cell(strong(f.Outcome)), cell(text(f.Detail)))
+	}
+	return []Node{title, b.table("plain", say("Alternatives that change an outcome word."), headRow("If", "Word of", "Now", "Then", "Detail"), rows...)}
+}
+
+// openPoints lists open points and notices of a cell.
+func (b *builder) openPoints(c study.Cell) []Node {
+	nodes := []Node{heading("Open points and notices")}
+	var items []Node
+	for _, o := range c.Open {
+		kind := "open"
+		if o.Blocks {
+			kind = "open, withholds the statement"
+		}
+		course := ""
+		if o.Course >= 0 && o.Course < len(courses) {
+			course = ", " + strings.ToLower(courses[o.Course])
+		}
+		items = append(items, item(append(say("{}{}: ", strong(kind), text(course)), typeset(sentenceEnd(o.Text))...)...))
+	}
+	for _, n := range c.Notices {
+		items = append(items, noticeItem(n))
+	}
+	if len(items) == 0 {
+		return append(nodes, paragraph(text("None.")))
+	}
+	return append(nodes, list(items...))
+}
+
+func noticeItem(n notice.Notice) Node {
+	return item(append(say("{} {}: {}", strong(string(n.Severity)), code(n.Code), text(n.Place())), typeset(n.Text)...)...)
+}

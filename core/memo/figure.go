@@ -1,0 +1,83 @@
+package memo
+
+import (
+	"fmt"
+	"strings"
+)
+
+// figuresOf returns the figures of a cell that are not printed yet. Those of
+// no model stand with the first cell of their question.
+func (b *builder) figuresOf(caseName, quantity, model string) []Node {
+	var nodes []Node
+	for i, f := range b.in.Figures {
+		if b.printed[i] || f.Case != caseName || f.Quantity != quantity || (f.Model != model && f.Model != "") {
+			continue
+		}
+		b.printed[i] = true
+		nodes = append(nodes, b.figure(f))
+	}
+	return nodes
+}
+
+// figure returns a drawing with its caption, and keeps its table for the end.
+func (b *builder) figure(f Figure) Node {
+	b.figures++
+	id := fmt.Sprintf("figure-%d", b.figures)
+	caption := []Node{strong(fmt.Sprintf("Figure %d. ", b.figures))}
+	if f.Title != "" {
+		caption = append(caption, text(sentenceEnd(f.Title)+" "))
+	}
+	caption = append(caption, typeset(f.Caption)...)
+	if len(f.Rows) > 0 {
+		caption = append(caption, say(" Numbers: {}.", Node{Kind: Link, ID: id + "-data", Text: "data of the figure"})...)
+		b.data = append(b.data, b.dataOf(f, id))
+	}
+	alt := f.Alt
+	if alt == "" {
+		alt = f.Title
+	}
+	return Node{Kind: Picture, ID: id, Text: alt, Value: f.SVG, Nodes: []Node{block(Caption, "", caption...)}}
+}
+
+// dataOf returns the table behind a figure, as texts: the drawing was made
+// from the report by others.
+func (b *builder) dataOf(f Figure, id string) Node {
+	head := block(Row, "head")
+	for _, h := range f.Head {
+		head.Nodes = append(head.Nodes, block(Head, "", text(h)))
+	}
+	at := spread(len(f.Rows), rowLimit)
+	table := block(Table, "data", block(Caption, "", strong(fmt.Sprintf("Data of figure %d. ", b.figures)), text(f.Title)), head)
+	for _, n := range at {
+		r := block(Row, "")
+		for _, value := range f.Rows[n] {
+			r.Nodes = append(r.Nodes, cell(text(value)))
+		}
+		table.Nodes = append(table.Nodes, r)
+	}
+	table.ID = id + "-data"
+	if len(at) < len(f.Rows) {
+		table.Nodes[0].Nodes = append(table.Nodes[0].Nodes, text(fmt.Sprintf(" (%d of %d rows, evenly spaced)", len(at), len(f.Rows))))
+	}
+	return table
+}
+
+// figureData prints the tables behind the figures, and says which figures
+// belong to no cell of the report. Without either it is left out.
+func (b *builder) figureData() Node {
+	var lost []string
+	for i, f := range b.in.Figures {
+		if !b.printed[i] {
+			lost = append(lost, f.Title)
+		}
+	}
+	if len(b.data)+len(lost) == 0 {
+		return Node{}
+	}
+	s := b.open(1, "figure-data", "Data of the figures")
+	s.Nodes = append(s.Nodes, b.data...)
+	if len(lost) > 0 {
+		s.Nodes = append(s.Nodes, note(text("Left out, since the report holds no such cell: "+strings.Join(lost, "; ")+".")))
+	}
+	return s
+}

@@ -1,0 +1,83 @@
+package memo
+
+// formula is a display formula with what it is called.
+func formula(template string) Node { return block(Paragraph, "formula", say(template)...) }
+
+// methods states how the numbers were made. The texts are fixed; the choices
+// of a study are in the assumptions.
+func (b *builder) methods() Node {
+	s := b.open(1, "methods", "Methods")
+	s.Nodes = append(s.Nodes,
+		note(say("Edition of the methods: {}. Published methods are named from professional knowledge; no clause is quoted and no conformity to a standard is claimed.", given(b.in.Edition))...))
+	for _, part := range []func() []Node{signs, budgetMethod, jointMethod, gridMethod, stationPolicy, adequacyMethod, printing} {
+		s.Nodes = append(s.Nodes, part()...)
+	}
+	return s
+}
+
+func signs() []Node {
+	return []Node{
+		heading("Comparison error and validation uncertainty"),
+		paragraph(say("*S* is the simulation, *D* the reference at the same station. The sign convention is *S* minus *D*: a positive *E* says that the simulation lies above the reference.")...),
+		formula("*E* = *S* − *D*"),
+		formula("*u*_{val} = √( *u*_{num}^{2} + *u*_{int}^{2} + *u*_{input}^{2} + *u*_{D}^{2} )"),
+		formula("model error within  *E* − *k* *u*_{val}  to  *E* + *k* *u*_{val}"),
+		paragraph(say("All *u* are standard uncertainties; *U* is expanded. The parts are taken as independent of each other. Readings: |*E*| ≤ *u*_{val}, within noise; |*E*| > *k* *u*_{val}, sign resolved; between the two, the sign is not resolved. A part that is not known is left out and named; it is not zero. Without *u*_{D} there is a comparison only. Source: ASME V&V 20 (from professional knowledge; no clause is quoted).")...),
+	}
+}
+
+func budgetMethod() []Node {
+	return []Node{
+		heading("Uncertainty sources and correlation"),
+		paragraph(say("A source is entered as a half-width with its basis and coverage and divided by its coverage factor: 1 for standard, *k* as stated, the normal quantile for a level in percent, √3 for limits of a rectangular distribution. A source is independent between stations or common to all of them; the covariance of the stations is")...),
+		formula("*V* = diag( Σ *u*^{2} of independent sources ) + Σ *c* *c*^{T} of common sources"),
+		paragraph(text("Source: JCGM 100:2008, Guide to the expression of uncertainty in measurement (from professional knowledge; no clause is quoted).")),
+	}
+}
+
+func jointMethod() []Node {
+	return []Node{
+		heading("Joint statistic"),
+		formula("*χ*^{2} = *E*^{T} *V*^{−1} *E*,  with the rank of *V* as degrees of freedom"),
+		formula("offset *a* = ( 1^{T}*V*^{−1}*E* ) / ( 1^{T}*V*^{−1}1 ),   *u*(*a*) = ( 1^{T}*V*^{−1}1 )^{−1/2}"),
+		formula("*χ*^{2} = ( *a*/*u*(*a*) )^{2} + ( *E* − *a* )^{T} *V*^{−1} ( *E* − *a* )"),
+		paragraph(say("The statistic is held against the 95 % point of the *χ*^{2} distribution for normal errors. It says whether the stated uncertainties account for the difference, not why there is one. Generalised least squares and the use of *χ*^{2} are textbook methods.")...),
+	}
+}
+
+func gridMethod() []Node {
+	return []Node{
+		heading("Grid study"),
+		paragraph(say("*f*_{1}, *f*_{2}, *f*_{3} are the values on the three finest grids, 1 the finest; *h* is (1/cells)^{1/dimensions}; *r*_{21} = *h*_{2}/*h*_{1}, *r*_{32} = *h*_{3}/*h*_{2}. The behaviour is found first, with its sign:")...),
+		formula("ε_{21} = *f*_{2} − *f*_{1},  ε_{32} = *f*_{3} − *f*_{2},  *R* = ε_{21}/ε_{32},  *R*^{′} = *R* · ln *r*_{32} / ln *r*_{21}"),
+		paragraph(say("0 < *R*^{′} < 1 is monotone, −1 < *R*^{′} < 0 oscillatory, *R*^{′} > 1 diverging, *R*^{′} ≤ −1 oscillatory and diverging; without differences the values are flat. An order is given for monotone behaviour only:")...),
+		formula("*p* = | ln( ε_{32}/ε_{21} ) + *q*(*p*) | / ln *r*_{21},   *q*(*p*) = ln( ( *r*_{21}^{p} − 1 ) / ( *r*_{32}^{p} − 1 ) )"),
+		formula("*f*_{ext} = ( *r*_{21}^{p} *f*_{1} − *f*_{2} ) / ( *r*_{21}^{p} − 1 ),   *e*_{a} = |( *f*_{1} − *f*_{2} )/*f*_{1}|,   *e*_{ext} = |( *f*_{ext} − *f*_{1} )/*f*_{ext}|"),
+		formula("GCI = 1.25 *e*_{a} / ( *r*_{21}^{p} − 1 ),   *U* = GCI · |*f*_{1}|,   *u*_{num} = *U*/*k*_{num}"),
+		paragraph(say("The bounded rule limits the index where the order is far from what a scheme can give: for *p* < 0.95 it is at most 1.25 Δ/|*f*_{1}|, Δ being the largest difference among the three values; for *p* > 3.05 order 3 is used, and the index is at least 1.25 Δ/|*f*_{1}|. For oscillatory behaviour half the range of the three values is taken as a bound and *u*_{num} = bound/√3. For diverging and flat behaviour there is no grid uncertainty. An index from an order far from the formal one is indicative only.")...),
+		paragraph(say("Along a curve the local orders of the monotone stations give one common order, their median, kept between 0.5 and the formal order; other stations take three times their data range as *U*.")...),
+		paragraph(text("Sources: P. J. Roache (grid convergence index); Celik, Ghia, Roache, Freitas, Coleman, Raad, J. Fluids Eng. 130, 078001 (2008); the bounded rule as used by the NASA Langley Turbulence Modeling Resource (all from professional knowledge; no clause is quoted).")),
+	}
+}
+
+func stationPolicy() []Node {
+	return []Node{
+		heading("Stations and interpolation"),
+		paragraph(say("The stations are those of the reference, whose values stay as they are. The simulation is interpolated to them, with straight lines or with a cubic that keeps monotone data monotone, as chosen. Nothing is extrapolated: a station outside the simulated range is listed and not compared. Gaps are not bridged. A blank is not read as zero. The interpolation uncertainty is a line of the budget:")...),
+		formula("linear: bound = 1.05 · ½ ( *x* − *x*_{i} )( *x*_{i+1} − *x* ) · max |*f*″| from divided differences;   monotone: bound = |linear − monotone|;   *u*_{int} = bound/√3"),
+	}
+}
+
+func adequacyMethod() []Node {
+	return []Node{
+		heading("Requirement"),
+		paragraph(say("The requirement ±*a* belongs to the decision; it is not the result of the comparison. It is *shown* where |*E*| + *k* *u*_{val} ≤ *a*, *not met* where |*E*| − *k* *u*_{val} > *a*, and *not resolved* otherwise. A curve is shown where all its stations are, and not met where one is not.")...),
+	}
+}
+
+func printing() []Node {
+	return []Node{
+		heading("How numbers are printed"),
+		paragraph(say("Computed numbers are carried with ten digits beside the rounded text, with the place they stand at in the report; values read from files keep all their digits. The text shows uncertainties with two digits and values with the decimals of their uncertainty. Percentages are of the reference value where they state *E*, and of *f*_{1} or *f*_{ext} in the grid study.")...),
+	}
+}

@@ -1,0 +1,182 @@
+package memo
+
+import (
+	"fmt"
+	"math"
+	"strings"
+
+	"weirmark/core/notice"
+	"weirmark/core/quantity"
+	"weirmark/core/study"
+)
+
+// The sample is invented: the taps, the drag and the grids of the design's
+// demo campaign (6.1), typed here. What it says about the joint statistic is
+// typed too: this package prints and does not compute.
+var (
+	errorsA = []float64{.0382, .0245, .0315, .0160, .0294, .0392, .0409, .0226, .0264, .0282, .0124, .0409, .0345, .0334, .0368, .0278, .0315, .0355, .0349, .0268, .0218, .0340, .0326, .0229}
+	errorsB = []float64{.0046, .0150, .0230, .0243, .0219, .0153, -.0045, -.0092, -.0216, -.0218, -.0114, -.0056, .0083, .0154, .0235, .0233, .0131, .0006, -.0058, -.0152, -.0275, -.0239, -.0092, .0047}
+)
+
+func number10(v float64) quantity.Number { return quantity.Number(v) }
+
+func taps(model string, e []float64, joint study.Joint, requirement *study.Judgement) study.Cell {
+	c := study.Cell{
+		Case: "C1", Condition: "α = 4.2°", Quantity: "upper-branch pressure coefficient", Symbol: "Cp", Model: model, Grid: "G4",
+		Reference: "OR-26 taps", Kind: study.KindTest, Use: study.UseValidation, Unit: "1", XName: "x/c", XUnit: "1", Downward: true,
+		Provisional: true, StationsAll: 26, Outside: []study.Number{0.981, 0.995},
+		Open:        []study.Open{{Course: 0, Missing: "monitor", Text: "No monitor of the run on grid G4: that it has settled is not shown"}},
+		Courses:     [5]study.State{study.Empty, study.Settled, study.Settled, study.Doubts, study.Doubts},
+		Choices:     study.DefaultChoices(),
+		Joint:       &joint,
+		Requirement: requirement,
+		Sources: []study.SourceLine{
+			{Name: "tap reading", Of: study.OfData, Text: "0.006, absolute, standard", U: .006, Share: .0796460177, Pattern: study.Independent, Origin: "repeat readings"},
+			{Name: "reference pressure", Of: study.OfData, Text: "0.020, absolute, standard", U: .020, Share: .8849557522, Pattern: study.Common, Origin: "calibration sheet of the duct"},
+			{Name: "grid", Of: study.OfNumerical, Text: "from the grid study, per station", U: .004, Share: .0353982301, Pattern: study.Independent, Origin: "computed", Open: model == "B"},
+		},
+		Grids: &study.Grids{
+			Dimension: 3, Along: true, Monotone: 19, NonMonotone: 5, OrderLow: .62, OrderHigh: 2.9, Ratio: quantity.None, Order: 1.71, Formal: 2,
+			Extrapolated: quantity.None, Ea: quantity.None, Eext: quantity.None, GCI: quantity.None, U: quantity.None, UNum: .004, KNum: 1.15,
+			Rule: "three finest grids, common order along the curve", R21: 1.336, R32: 1.338,
+			Points: gridPoints(quantity.None, quantity.None, quantity.None, quantity.None),
+		},
+		Notices:   []notice.Notice{notice.New("station-outside", 2, 26, "0.01", "0.975"), notice.New("curve-unsorted", "run C1-A-G4", "x").In("c1-taps.csv").At(12)},
+		FilesUsed: []string{"f1", "f2"},
+	}
+	sum, absolute, squares := 0.0, 0.0, 0.0
+	for i, ei := range e {
+		x := math.Round((0.02+0.95*math.Pow(float64(i)/23, 1.25))*1e4) / 1e4
+		s := math.Round((-1.05*math.Exp(-math.Pow((x-0.16)/0.2, 2))-0.35*(1-x)+0.28*x*x)*1e4) / 1e4
+		d := s - errorsB[i]
+		const uVal = .0212602916
+		c.Stations = append(c.Stations, study.Station{
+			X: quantity.Written(x), S: number10(d + ei), D: quantity.Written(math.Round(d*1e4) / 1e4), E: number10(ei), UD: .0208806130, UNum: .004, UInterp: number10(.0001 + .00002*float64(i%5)),
+			UInput: quantity.None, UVal: uVal, Ratio: number10(math.Abs(ei) / uVal), Lo: number10(ei - 2*uVal), Hi: number10(ei + 2*uVal), Line: 5 + i,
+			Reading: map[bool]string{true: study.Between, false: study.WithinNoise}[math.Abs(ei) > uVal],
+		})
+		c.Grids.Local = append(c.Grids.Local, study.LocalGrid{X: number10(x), Class: map[bool]string{true: "oscillatory", false: "monotone"}[i%5 == 3], Order: map[bool]study.Number{true: quantity.None, false: number10(1.2 + .05*float64(i))}[i%5 == 3], U: .0046})
+		sum, absolute, squares = sum+ei, absolute+math.Abs(ei), squares+ei*ei
+	}
+	m := study.Summary{N: 24, Tested: 24, Bias: number10(sum / 24), MAE: number10(absolute / 24), RMSE: number10(math.Sqrt(squares / 24)), MaxAbs: 0, WithinKUVal: 24, BeyondChance: 1.0920063}
+	for i, s := range c.Stations {
+		if math.Abs(e[i]) > float64(m.MaxAbs) {
+			m.MaxAbs, m.MaxAt, m.MaxRatio = number10(math.Abs(e[i])), study.Number(s.X), s.Ratio
+		}
+		if s.Ratio <= 1 {
+			m.WithinUVal++
+		}
+	}
+	c.Summary = &m
+	c.Crossings = study.Crossings{Simulation: []study.Crossing{{X: .7123456789, Rising: true}}, Reference: []study.Crossing{{X: .6987654321, Rising: true}, {X: .95, Rising: false}}}
+	return c
+}
+
+func gridPoints(values ...study.Number) []study.GridPoint {
+	cells := []float64{410000, 980000, 2350000, 5600000}
+	var all []study.GridPoint
+	for i, v := range values {
+		all = append(all, study.GridPoint{Name: fmt.Sprintf("G%d", i+1), Cells: number10(cells[i]), H: number10(math.Cbrt(5600000 / cells[i])), Value: v, Used: i > 0})
+	}
+	return all
+}
+
+func drag() study.Cell {
+	return study.Cell{
+		Case: "C1", Condition: "α = 4.2°", Quantity: "drag coefficient", Symbol: "Cd", Model: "B", Grid: "G4",
+		Reference: "OR-26 balance", Kind: study.KindTest, Use: study.UseValidation, Unit: "1", Scalar: true,
+		Courses: [5]study.State{study.Settled, study.Settled, study.Settled, study.Settled, study.Doubts},
+		Choices: study.DefaultChoices(), StationsAll: 1, Provisional: true,
+		Open: []study.Open{{Course: 4, Missing: "second requirement", Text: "The grid factor 1.15 is assumed. State why it may be used", Target: study.Target{Kind: "question", ID: "C1", Field: "k_num"}}},
+		Stations: []study.Station{{
+			X: quantity.Written(quantity.None), S: .02995, D: .0296, E: .00035, UD: .0004, UNum: .000357391304, UInterp: quantity.None, UInput: .00025, UVal: .000591741, Ratio: .5914751, Lo: -.000833482, Hi: .001533482, Line: 7, Reading: study.WithinNoise,
+		}},
+		Grids: &study.Grids{
+			Points: gridPoints(.03155, .03068, .03021, .02995), Dimension: 3, Class: "monotone", Ratio: .5531914894, Order: 2.0149, Formal: 2, Extrapolated: .02962,
+			Ea: .0086811352, Eext: .0111411209, GCI: .013723, U: .000411, UNum: .000357391304, KNum: 1.15, Rule: "three finest grids, bounded rule", R21: 1.336, R32: 1.338,
+			OrderLow: quantity.None, OrderHigh: quantity.None,
+		},
+		Sources: []study.SourceLine{
+			{Name: "balance", Of: study.OfData, Text: "0.00040, absolute, standard", U: .0004, Share: .4569, Pattern: study.Common, Origin: "five runs over three days and the calibration"},
+			{Name: "angle, speed, turbulence", Of: study.OfInput, Text: "0.00025, absolute, standard", U: .00025, Share: .1785, Pattern: study.Common, Origin: "run pairs"},
+			{Name: "grid", Of: study.OfNumerical, Text: "U = 0.000411, 95 %, divided by 1.15", U: .000357391304, Share: .3646, Pattern: study.Independent, Origin: "computed"},
+		},
+		Requirement: &study.Judgement{Limit: .00148, Percent: 5, Who: "decision owner", Date: "2026-03-02", Outcome: study.NotResolved, At: quantity.None, UValNeeded: .000565, UNumNeeded: .000310926, UNumReduction: .13},
+		Fragile:     []study.Fragility{{Change: "k_num = 2", What: "requirement", From: study.NotResolved, Outcome: study.Shown, Detail: "upper limit 4.7 % instead of 5.2 %"}},
+		FilesUsed:   []string{"f1", "f3"},
+	}
+}
+
+func oscillating() study.Cell {
+	c := drag()
+	c.Quantity, c.Symbol, c.Model, c.Unit = "lift force", "L", "A", "N"
+	c.Withheld, c.Provisional, c.Fragile, c.Requirement = true, false, nil, nil
+	c.Open = []study.Open{
+		{Course: 2, Blocks: true, Missing: "experimental uncertainty", Text: "No experimental uncertainty was given"},
+		{Course: 4, Missing: "requirement", Text: "No accuracy requirement is recorded"},
+	}
+	s := &c.Stations[0]
+	s.S, s.D, s.E, s.UD, s.UVal, s.Ratio, s.Lo, s.Hi, s.Reading = 36.172, 35.31, .862, quantity.None, quantity.None, quantity.None, quantity.None, quantity.None, ""
+	s.UNum, s.UInput = .1075, quantity.None
+	none := quantity.None
+	c.Grids = &study.Grids{Points: gridPoints(35.68, 36.34, 35.96, 36.172), Dimension: 3, Class: "oscillatory", Ratio: -.5578947, Order: none, Formal: 2, Extrapolated: none, Ea: none, Eext: none, GCI: none, U: none, UNum: .1075, KNum: 1.15, Rule: "half-range of the three finest as a bound", R21: 1.336, R32: 1.338, OrderLow: none, OrderHigh: none}
+	c.Sources = c.Sources[2:]
+	c.Sources[0].Share = none
+	c.Notices = []notice.Notice{notice.New("u-missing"), notice.New("grid-oscillatory", "−0.56", "0.19")}
+	return c
+}
+
+func sample() Input {
+	numShared := study.Joint{Statistic: 27.0451, N: 24, P: .3029, Reference: 36.415, Pattern: "reference pressure common, the rest independent", Independent: 50.98, NumShared: 38.0, Offset: .0301, UOffset: .0201, OffsetPart: 2.2553, Remainder: 24.7898, RemainderN: 23, RemainderReference: 35.1725}
+	shape := study.Joint{Statistic: 125.0344, N: 24, P: 1.2e-15, Reference: 36.415, Exceeds: true, Pattern: "reference pressure common, the rest independent", Independent: 14.53, NumShared: 180.6, Offset: .0016, UOffset: .0201, OffsetPart: .0063, Remainder: 125.0281, RemainderN: 23, RemainderReference: 35.1725, RemainderExceeds: true}
+	report := study.Report{
+		Title: "Quillet strut fairing: comparison with campaign OR-26", Purpose: "Choose the fairing setting for a duct retrofit. The decision needs the drag coefficient within ±5 % and the shape of the pressure distribution.", Edition: "2026-1",
+		Files: []study.FileLine{
+			{ID: "f1", Name: "c1-taps.csv", SHA256: strings.Repeat("0123456789abcdef", 4), Bytes: 2104, Matches: true, Uses: []string{"reference of Cp, case C1"}},
+			{ID: "f2", Name: "c1-pressure-both-models.dat", SHA256: strings.Repeat("fedcba9876543210", 4), Bytes: 181234, Matches: true, Uses: []string{"simulation A", "simulation B"}},
+			{ID: "f3", Name: "c1-drag.csv", SHA256: strings.Repeat("00112233445566778899aabbccddeeff", 2), Bytes: 388, Matches: false, Uses: []string{"grid values"}},
+		},
+		Cells: []study.Cell{
+			taps("A", errorsA, numShared, nil),
+			taps("B", errorsB, shape, &study.Judgement{Limit: .03, Percent: quantity.None, Who: "decision owner", Date: "2026-03-02", Late: true, Outcome: study.NotResolved, At: .8123, UValNeeded: .00125, UNumNeeded: quantity.None, UNumReduction: quantity.None}),
+			drag(), oscillating(),
+		},
+		Notices:  []notice.Notice{notice.New("header-guessed", 4).In("c1-taps.csv"), notice.New("files-identical", "c1-g2.dat", "c1-g3.dat")},
+		Prepared: study.Signature{Name: "Analyst", Date: "2026-03-09"},
+		Log: []study.Entry{
+			{Number: 1, At: "2026-03-02 09:10", What: "requirement of the drag coefficient recorded: ±5 %", Why: "decision meeting"},
+			{Number: 2, At: "2026-03-04 14:02", What: "file c1-taps.csv added"},
+			{Number: 3, At: "2026-03-05 08:30", What: "requirement of Cp recorded: ±0.03", Shown: true},
+		},
+	}
+	target := &study.Target{Kind: "question", ID: "C1", Field: "k_num"}
+	plain := func(s string) study.Phrase { return study.Phrase{Text: s} }
+	marked := func(s, mark string) study.Phrase { return study.Phrase{Text: s, Mark: mark, Target: target} }
+	cp := "upper-branch pressure coefficient"
+	return Input{
+		Report: report, Product: "Weirmark 0.1", Made: "2026-03-09 16:20", Hash: strings.Repeat("89abcdef01234567", 4),
+		Statements: []Statement{
+			{Case: "C1", Quantity: cp, Model: "A", Phrases: []study.Phrase{plain("Over n = "), marked("24", study.FigureOf), plain(" stations the joint statistic is "), marked("27.0", study.FigureOf), plain(" (reference 36.4) with "), marked("reference pressure common", study.Guess), plain(" correlation. The statistic does not exceed its 95 % point. Offset 0.030 ± 0.020 not resolved.")}},
+			{Case: "C1", Quantity: cp, Model: "B", Phrases: []study.Phrase{plain("Over n = "), marked("24", study.FigureOf), plain(" stations the joint statistic is "), marked("125", study.FigureOf), plain(" (reference 36.4) with common correlation. The statistic exceeds its 95 % point. That the model error stays within ±0.03 (decision owner, 2026-03-02) is "), marked("not resolved", study.WordOf), plain(" at k = 2.")}},
+			{Case: "C1", Quantity: "drag coefficient", Model: "B", Phrases: []study.Phrase{plain("For drag coefficient at case C1, α = 4.2°, model B on grid G4 differs from test OR-26 by "), marked("+1.2 %", study.FigureOf), plain(" against u_val "), marked("2.0 %", study.FigureOf), plain(" (k_num "), marked("1.15", study.Assumed), plain("). The model error lies within −2.8 % to +5.2 %. Requirement ±5 % is "), marked("not resolved", study.WordOf), plain(".")}},
+			{Case: "C1", Quantity: "lift force", Model: "A", Phrases: []study.Phrase{plain("Comparison only: E is "), marked("+0.86 N", study.FigureOf), plain(" against "), marked("experimental uncertainty", study.Missing), plain("; no statement is made.")}},
+		},
+		Figures: []Figure{
+			overlay("A", report.Cells[0]), overlay("B", report.Cells[1]),
+			{Title: "Intervals of the model error", Caption: "E ± k u_val of every cell against its requirement, k = 2.", Alt: "Four intervals drawn as lines.", SVG: `<svg xmlns="http://www.w3.org/2000/svg" width="640" height="120"><path d="M40 30H500M40 60H420M180 90H300" stroke="#16181a" fill="none"/></svg>`},
+		},
+	}
+}
+
+func overlay(model string, c study.Cell) Figure {
+	var marks, line strings.Builder
+	f := Figure{Case: c.Case, Quantity: c.Quantity, Model: model, Title: "Pressure coefficient along the upper branch, model " + model, Caption: "Circles: reference with ± u_D (k = 1), 24 of 26 stations; line: simulation on G4. Negative values upward.", Alt: "Reference taps and simulated curve.", Head: []string{"x/c", "S", "D"}}
+	for i, s := range c.Stations {
+		x, y, d := 60+float64(s.X)*540, 60+float64(s.S+1.4)*110, 60+(float64(s.D)+1.4)*110
+		fmt.Fprintf(&marks, `<circle cx="%.1f" cy="%.1f" r="3.4" fill="#fff" stroke="#16181a"/>`, x, d)
+		fmt.Fprintf(&line, "%s%.1f %.1f", map[bool]string{true: "M", false: "L"}[i == 0], x, y)
+		f.Rows = append(f.Rows, []string{fmt.Sprint(float64(s.X)), quantity.Text(float64(s.S), 4), fmt.Sprint(float64(s.D))})
+	}
+	f.SVG = `<svg xmlns="http://www.w3.org/2000/svg" xmlns:xlink="http://www.w3.org/1999/xlink" width="640" height="300"><defs><clipPath id="c0"><rect x="50" y="10" width="570" height="260"/></clipPath></defs><style>.a{fill:red}</style><g clip-path="url(#c0)"><path d="` + line.String() + `" fill="none" stroke="#16181a"/>` + marks.String() + `</g><path d="M50 10V270H620" fill="none" stroke="#555"/><text x="330" y="292" font-size="12" font-family="sans-serif">x/c</text></svg>`
+	return f
+}

@@ -1,0 +1,339 @@
+package message
+
+import (
+	"math"
+	"strconv"
+
+	"weirmark/core/notice"
+	"weirmark/core/quantity"
+	"weirmark/core/study"
+	"weirmark/core/tablefile"
+)
+
+// slipCards says of every slip what was read and how it is used.
+func (s *Session) slipCards() []SlipCard {
+	cards := []SlipCard{}
+	for i := range s.study.Slips {
+		p := &s.study.Slips[i]
+		f := s.study.File(p.File)
+		if f == nil {
+			continue
+		}
+		read := s.readOnce(*f)
+		t, err := read.Table(p.Table)
+		card := SlipCard{ID: p.ID, File: p.File, Name: f.Name, Notices: []string{}, Entries: []Entry{}, Sketch: Sketch{Own: [][2]study.Number{}, Others: [][][2]study.Number{}}}
+		if err != nil {
+			card.Read = asNotice(err).Text
+			cards = append(cards, card)
+			continue
+		}
+		card.Read = readWords(t)
+		card.Entries = slipEntries(p, t)
+		for _, e := range card.Entries {
+			if e.By == study.Guessed || e.Value == "" && needed(p, e.Target.Field) {
+				card.Open++
+			}
+		}
+		for _, n := range read.Notices {
+			if n.Severity != notice.Note {
+				card.Notices = append(card.Notices, n.Text)
+			}
+		}
+		card.Sketch = s.sketch(p, t)
+		cards = append(cards, card)
+	}
+	return cards
+}
+
+// readWords says what a table holds.
+func readWords(t tablefile.Table) string {
+	text := ""
+	if t.Name != "" {
+		text = "Table “" + t.Name + "”: "
+	}
+	text += count(t.Rows(), "row") + ", " + count(len(t.Columns), "column") + ", order kept."
+	for i, c := range t.Columns {
+		if i == 6 {
+			return text + " And " + count(len(t.Columns)-6, "further column") + "."
+		}
+		text += " " + columnWords(c)
+	}
+	return text
+}
+
+func columnWords(c tablefile.Column) string {
+	text := c.Name
+	if c.Unit != "" {
+		text += " in " + c.Unit
+	}
+	lo, hi, missing := math.Inf(1), math.Inf(-1), 0
+	for _, v := range c.Values {
+		if math.IsNaN(v) {
+			missing++
+			continue
+		}
+		lo, hi = min(lo, v), max(hi, v)
+	}
+	switch {
+	case lo > hi:
+		return text + ": text."
+	case lo == hi:
+		text += ": " + quantity.Text(lo, 4)
+	default:
+		text += ": " + quantity.Text(lo, 4) + " to " + quantity.Text(hi, 4)
+	}
+	if missing > 0 {
+		text += ", " + strconv.Itoa(missing) + " missing"
+	}
+	return text + "."
+}
+
+// needed reports whether an empty entry keeps a slip from being used.
+func needed(p *study.Slip, field string) bool {
+	switch field {
+	case "role", "case", "quantity", "y.column", "y.unit":
+		return p.Role.Value != study.Unused
+	case "x.unit":
+		return p.X.Column.Given()
+	case "u_factor":
+		return p.U.Column.Given()
+	case "size.column":
+		return p.Role.Value == study.GridValues
+	}
+	return false
+}
+
+// slipEntries are the entries of a slip in the order in which one reads them.
+func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
+	columns := []Option{{"", "–"}}
+	for _, c := range t.Columns {
+		columns = append(columns, Option{c.Name, c.Name})
+	}
+	free := []Option{}
+	entry := func(field, label string, f study.Field, options []Option, hint string) Entry {
+		return Entry{Target: study.Target{Kind: "slip", ID: p.ID, Field: field}, Label: label, Value: f.Value, By: f.By, Options: options, Hint: hint}
+	}
+	list := []Entry{
+		entry("role", "looks like", p.Role, []Option{{study.Simulation, "a simulation"}, {study.GridValues, "values over grids"}, {study.Reference, "reference data"}, {study.Unused, "not used"}}, ""),
+	}
+	if p.Role.Value == study.Unused {
+		return list
+	}
+	list = append(list,
+		entry("case", "case", p.Case, free, "e.g. C1"),
+		entry("quantity", "quantity", p.Quantity, free, "e.g. drag coefficient"))
+	if p.Role.Value != study.Reference {
+		list = append(list, entry("model", "model", p.Model, free, "e.g. A"))
+	}
+	switch p.Role.Value {
+	case study.GridValues:
+		list = append(list, entry("size.column", "cells in", p.Size.Column, columns, ""), entry("grid", "grid names in", p.Grid, columns, ""))
+	default:
+		list = append(list, entry("x.column", "stations in", p.X.Column, columns, "none for a single value"))
+		if p.X.Column.Given() {
+			list = append(list, entry("x.unit", "unit of stations", p.X.Unit, free, "m, mm, … or 1 for a pure number"))
+		}
+	}
+	list = append(list,
+		entry("y.column", "values in", p.Y.Column, columns, ""),
+		entry("y.unit", "unit of values", p.Y.Unit, free, "Pa, m/s, … or 1 for a pure number"))
+	if p.Role.Value == study.Simulation {
+		list = append(list, entry("grid", "grid", p.Grid, free, "e.g. G4"), entry("cells", "cells", p.Cells, free, "number of cells"))
+	}
+	if p.Role.Value == study.Reference {
+		list = append(list, entry("u.column", "uncertainty in", p.U.Column, columns, ""))
+		if p.U.Column.Given() {
+			list = append(list,
+				entry("u.unit", "its unit", p.U.Unit, free, "as the values, or % of reading"),
+				entry("u_factor", "its coverage", p.UFactor, coverages(), "what the bars mean"))
+		}
+	}
+	return list
+}
+
+// coverages are the answers to what a stated uncertainty means.
+func coverages() []Option {
+	return []Option{{"", "–"}, {"standard", "standard, k = 1"}, {"2", "expanded, k = 2"}, {"95 %", "95 %, normal"}, {"limits", "limits, rectangular"}, {"unknown", "unknown"}}
+}
+
+// sketchPoints is the number of points of a sketch.
+const sketchPoints = 80
+
+// sketch draws the columns of a slip beside the other slips of its question.
+func (s *Session) sketch(p *study.Slip, t tablefile.Table) Sketch {
+	own := points(p, t)
+	var others [][][2]float64
+	for i := range s.study.Slips {
+		o := &s.study.Slips[i]
+		if o.ID == p.ID || o.Case.Value != p.Case.Value || o.Quantity.Value != p.Quantity.Value || len(others) == 8 {
+			continue
+		}
+		if f := s.study.File(o.File); f != nil {
+			if t, err := s.readOnce(*f).Table(o.Table); err == nil {
+				others = append(others, points(o, t))
+			}
+		}
+	}
+	box := [4]float64{math.Inf(1), math.Inf(-1), math.Inf(1), math.Inf(-1)}
+	for _, list := range append([][][2]float64{own}, others...) {
+		for _, at := range list {
+			box = [4]float64{min(box[0], at[0]), max(box[1], at[0]), min(box[2], at[1]), max(box[3], at[1])}
+		}
+	}
+	sketch := Sketch{Own: scaled(own, box), Others: [][][2]study.Number{}}
+	for _, list := range others {
+		sketch.Others = append(sketch.Others, scaled(list, box))
+	}
+	return sketch
+}
+
+// points returns the rows of a slip as written, thinned. A scalar has its row
+// number for a station.
+func points(p *study.Slip, t tablefile.Table) [][2]float64 {
+	y, err := t.Column(p.Y.Column.Value)
+	if err != nil {
+		return nil
+	}
+	station := p.X.Column.Value
+	if p.Role.Value == study.GridValues {
+		station = p.Size.Column.Value
+	}
+	x, err := t.Column(station)
+	rows := t.Rows()
+	step := max(1, rows/sketchPoints)
+	var list [][2]float64
+	for i := 0; i < rows; i += step {
+		at := float64(i)
+		if err == nil {
+			at = x.Values[i]
+		}
+		if !math.IsNaN(at) && !math.IsNaN(y.Values[i]) {
+			list = append(list, [2]float64{at, y.Values[i]})
+		}
+	}
+	return list
+}
+
+func scaled(list [][2]float64, box [4]float64) [][2]study.Number {
+	out := [][2]study.Number{}
+	unit := func(v, lo, hi float64) study.Number {
+		if hi == lo {
+			return 0.5
+		}
+		return study.Number(quantity.Round((v-lo)/(hi-lo), 4))
+	}
+	for _, at := range list {
+		out = append(out, [2]study.Number{unit(at[0], box[0], box[1]), unit(at[1], box[2], box[3])})
+	}
+	return out
+}
+
+// sourceCards are the lines of the budget: first those that a person entered,
+// each with its entries, then those that were computed.
+func sourceCards(q *study.Question, c *study.Cell) []SourceCard {
+	cards := []SourceCard{}
+	used := map[string]study.SourceLine{}
+	for _, l := range c.Sources {
+		used[l.Of+l.Name] = l
+	}
+	for i, s := range q.Sources {
+		card := SourceCard{Target: study.Target{Kind: "source", ID: questionID(q), Field: strconv.Itoa(i)}, Of: s.Of, Pattern: s.Pattern, Text: s.Name, Entries: sourceEntries(q, i, s)}
+		if l, ok := used[s.Of+s.Name]; ok {
+			card.Text, card.Share, card.Pattern = l.Name+" · "+l.Text+" · "+patternWords(l.Pattern)+" · "+l.Origin, shareWords(l.Share), l.Pattern
+			delete(used, s.Of+s.Name)
+		}
+		cards = append(cards, card)
+	}
+	for _, l := range c.Sources {
+		if _, left := used[l.Of+l.Name]; left {
+			cards = append(cards, SourceCard{Of: l.Of, Pattern: l.Pattern, Share: shareWords(l.Share), Entries: []Entry{},
+				Text: l.Name + " · " + l.Text + " · " + patternWords(l.Pattern) + " · " + l.Origin})
+		}
+	}
+	return cards
+}
+
+func shareWords(n study.Number) string {
+	if !n.Known() {
+		return ""
+	}
+	return quantity.Text(float64(n)*100, 2) + " % of u_val²"
+}
+
+func patternWords(pattern string) string {
+	if pattern == study.Common {
+		return "the same error at all stations"
+	}
+	return "independent between stations"
+}
+
+func sourceEntries(q *study.Question, i int, s study.Source) []Entry {
+	entry := func(field, label, value string, by study.Certainty, options []Option, hint string) Entry {
+		return Entry{Target: study.Target{Kind: "source", ID: questionID(q), Field: strconv.Itoa(i) + "." + field}, Label: label, Value: value, By: by, Options: options, Hint: hint}
+	}
+	random := "no"
+	if s.Random {
+		random = "yes"
+	}
+	return []Entry{
+		entry("name", "source", s.Name, study.Entered, []Option{}, ""),
+		entry("of", "of", s.Of, study.Entered, []Option{{study.OfData, "the data"}, {study.OfInput, "the inputs"}, {study.OfNumerical, "the numerics"}}, ""),
+		entry("value", "value", strconv.FormatFloat(s.Value, 'g', -1, 64), study.Entered, []Option{}, ""),
+		entry("basis", "basis", s.Basis, study.Entered, []Option{{study.Absolute, "in the unit of the data"}, {study.OfReading, "% of reading"}}, ""),
+		entry("coverage", "coverage", s.Coverage.Value, s.Coverage.By, coverages(), ""),
+		entry("random", "random", random, study.Entered, []Option{{"no", "systematic"}, {"yes", "random"}}, ""),
+		entry("pattern", "between stations", s.Pattern, study.Entered, []Option{{study.Independent, "independent"}, {study.Common, "the same at all"}}, ""),
+		entry("origin", "where it comes from", s.Origin, study.Entered, []Option{}, ""),
+	}
+}
+
+// choices are the decisions whose effect shows at once.
+func choices(q *study.Question) []Entry {
+	c := q.Choices
+	entry := func(field, label, value string, options []Option, hint string) Entry {
+		return Entry{Target: study.Target{Kind: "question", ID: questionID(q), Field: "choices." + field}, Label: label, Value: value, By: study.Entered, Options: options, Hint: hint}
+	}
+	number := func(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
+	yes := func(b bool) string {
+		if b {
+			return "yes"
+		}
+		return "no"
+	}
+	return []Entry{
+		entry("k", "k of the statement", number(c.K), []Option{}, "2 covers about 95 % of a normal distribution"),
+		entry("k_num", "k_num, from U of the grids to u_num", number(c.KNum), []Option{}, "1.15: U about the fine grid; 2: normal"),
+		entry("bounded", "grid study", yes(c.Bounded), []Option{{"yes", "bounded rule"}, {"no", "plain rule"}}, ""),
+		entry("formal", "formal order", number(c.Formal), []Option{}, ""),
+		entry("dimension", "grids are", strconv.Itoa(c.Dimension), []Option{{"2", "two-dimensional"}, {"3", "three-dimensional"}}, ""),
+		entry("interpolation", "simulation at the stations", string(c.Interpolation), []Option{{"linear", "linear"}, {"monotone", "monotone cubic"}}, ""),
+		entry("u_interp", "interpolation uncertainty", yes(c.UInterp), []Option{{"yes", "counted"}, {"no", "not counted"}}, ""),
+		entry("num_shared", "u_num between stations", yes(c.NumShared), []Option{{"no", "independent"}, {"yes", "the same error at all"}}, ""),
+	}
+}
+
+// questionEntries are the requirement and what is known of the reference.
+func questionEntries(q *study.Question) []Entry {
+	entry := func(field, label, value string, by study.Certainty, options []Option, hint string) Entry {
+		return Entry{Target: study.Target{Kind: "question", ID: questionID(q), Field: field}, Label: label, Value: value, By: by, Options: options, Hint: hint}
+	}
+	value, percent, who, date := "", "yes", "", ""
+	if r := q.Requirement; r != nil {
+		value, who, date = strconv.FormatFloat(r.Value, 'g', -1, 64), r.Who, r.Date
+		if !r.Percent {
+			percent = "no"
+		}
+	}
+	return []Entry{
+		entry("requirement.value", "accuracy requirement ±", value, study.Entered, []Option{}, "the model error must stay within this"),
+		entry("requirement.percent", "in", percent, study.Entered, []Option{{"yes", "% of |D|"}, {"no", "the unit of the data"}}, ""),
+		entry("requirement.who", "set by", who, study.Entered, []Option{}, "who owns the decision"),
+		entry("requirement.date", "on", date, study.Entered, []Option{}, "date"),
+		entry("kind", "the reference is", q.Kind.Value, q.Kind.By, []Option{{"", "–"}, {study.KindTest, "a test"}, {study.KindLaw, "a law"}, {study.KindCorrelation, "a correlation"}, {study.KindSimulation, "another simulation"}}, ""),
+		entry("use", "the data were used for", q.Use.Value, q.Use.By, []Option{{"", "–"}, {study.UseValidation, "comparison only"}, {study.UseTuning, "setting the model"}}, ""),
+		entry("reference_id", "name of the reference", q.ReferenceID, study.Entered, []Option{}, "e.g. campaign and run"),
+		entry("condition", "condition", q.Condition, study.Entered, []Option{}, "e.g. α = 4.2°"),
+		entry("symbol", "symbol", q.Symbol, study.Entered, []Option{}, "e.g. Cd"),
+		entry("downward", "drawn", map[bool]string{true: "yes", false: "no"}[q.Downward], study.Entered, []Option{{"no", "positive upward"}, {"yes", "negative upward"}}, ""),
+	}
+}

@@ -1,0 +1,342 @@
+package message
+
+import (
+	"strconv"
+	"strings"
+
+	"weirmark/core/notice"
+	"weirmark/core/quantity"
+	"weirmark/core/refinement"
+	"weirmark/core/study"
+)
+
+// courses lays out the five courses of evidence of a cell. Under the veil the
+// comparison and what follows from it are left out.
+func courses(c *study.Cell, figures []CellFigure, veiled bool) []Course {
+	list := []Course{
+		{Question: "Has each run settled?", Answer: settledAnswer(c)},
+		{Question: "Is the grid fine enough for this quantity?", Answer: gridAnswer(c), Numbers: gridNumbers(c), Tables: gridTables(c)},
+		{Question: "Is it the same thing?", Answer: sameAnswer(c)},
+		{Question: "Do they agree?", Answer: agreeAnswer(c), Numbers: agreeNumbers(c), Tables: agreeTables(c)},
+		{Question: "What can be said?", Answer: sayAnswer(c), Numbers: sayNumbers(c), Tables: sayTables(c)},
+	}
+	for _, f := range figures {
+		at := 3
+		if isGridFigure(f.Figure) {
+			at = 1
+		}
+		list[at].Figures = append(list[at].Figures, f)
+	}
+	if veiled {
+		for _, i := range []int{3, 4} {
+			list[i] = Course{Question: list[i].Question, Answer: "Covered until a requirement is recorded or the comparison is asked for."}
+		}
+	}
+	for i := range list {
+		k := &list[i]
+		k.State = c.Courses[i]
+		k.Doubts = []study.Open{}
+		for _, o := range c.Open {
+			if o.Course == i {
+				k.Doubts = append(k.Doubts, o)
+			}
+		}
+		k.Notes = notes(c, i, k.Doubts)
+		if k.Numbers == nil {
+			k.Numbers = []Headline{}
+		}
+		if k.Figures == nil {
+			k.Figures = []CellFigure{}
+		}
+		if k.Tables == nil {
+			k.Tables = []Table{}
+		}
+	}
+	return list
+}
+
+// notes are the notices of a course that are not open points already.
+func notes(c *study.Cell, course int, doubts []study.Open) []string {
+	told := map[string]bool{}
+	for _, o := range doubts {
+		told[o.Text] = true
+	}
+	list := []string{}
+	for _, n := range c.Notices {
+		if courseOf(n) != course || told[n.Text] {
+			continue
+		}
+		told[n.Text] = true
+		text := n.Text
+		if place := n.Place(); place != "" {
+			text = place + ": " + text
+		}
+		list = append(list, text)
+	}
+	return list
+}
+
+// courseOf tells a notice's course from the stage that its code names.
+func courseOf(n notice.Notice) int {
+	stage, _, _ := strings.Cut(n.Code, "-")
+	switch stage {
+	case "monitor":
+		return 0
+	case "grid", "dimension":
+		return 1
+	case "covariance", "joint", "crossing":
+		return 3
+	case "requirement":
+		return 4
+	}
+	if n.Code == "u-num-missing" || n.Code == "u-num-column" {
+		return 1
+	}
+	return 2
+}
+
+func settledAnswer(c *study.Cell) string {
+	if c.Summary == nil && c.Grids == nil {
+		return "No simulation is read yet."
+	}
+	return "Not shown: no monitor is given for " + c.Quantity + "."
+}
+
+func gridAnswer(c *study.Cell) string {
+	g := c.Grids
+	if g == nil {
+		for _, s := range c.Sources {
+			if s.Of == study.OfNumerical && s.Origin != "computed" {
+				return "No grid family; u_num was entered (" + s.Origin + ")."
+			}
+		}
+		return "One grid, or none: the grid uncertainty is unknown."
+	}
+	if g.Along {
+		all := g.Monotone + g.NonMonotone
+		return strconv.Itoa(g.Monotone) + " of " + count(all, "station") + " converge monotonically; common order " + text(g.Order, 3) + ", rms u_num " + text(g.UNum, 3) + c.UnitSuffix() + "."
+	}
+	switch g.Class {
+	case string(refinement.Monotone):
+		return "Monotone over the three finest of " + count(len(g.Points), "grid") + "; observed order " + text(g.Order, 3) + " against " + text(g.Formal, 2) + "; grid uncertainty " + quantity.Percent(float64(g.GCI)) + " % at 95 %."
+	case string(refinement.Oscillatory):
+		return "The three finest grids oscillate; a bound is taken from their range, no order is given."
+	case string(refinement.Insufficient):
+		return "Too few usable grids: the order cannot be observed."
+	}
+	return "The three finest grids are " + g.Class + ": there is no grid uncertainty."
+}
+
+func gridNumbers(c *study.Cell) []Headline {
+	g := c.Grids
+	if g == nil || g.Along {
+		return nil
+	}
+	var list []Headline
+	add := func(n study.Number, digits int, name string) {
+		if n.Known() {
+			list = append(list, Headline{text(n, digits), name})
+		}
+	}
+	add(g.Order, 3, "observed order")
+	if g.U.Known() {
+		list = append(list, Headline{quantity.Like(float64(g.Extrapolated), float64(g.U), 2) + c.UnitSuffix(), "extrapolated " + orText(c.Symbol, c.Quantity)})
+		list = append(list, Headline{"± " + quantity.Text(float64(g.U), 2) + c.UnitSuffix(), "grid uncertainty, 95 %"})
+	} else if g.UNum.Known() {
+		list = append(list, Headline{quantity.Text(float64(g.UNum), 2) + c.UnitSuffix(), "u_num, standard"})
+	}
+	return list
+}
+
+func gridTables(c *study.Cell) []Table {
+	g := c.Grids
+	if g == nil {
+		return nil
+	}
+	t := Table{Title: "Grids, coarse to fine", Head: []string{"grid", "cells", "h / h(finest)", orText(c.Symbol, "value"), "used"}, Rows: [][]string{}}
+	for _, p := range g.Points {
+		used := ""
+		if p.Used {
+			used = "yes"
+		}
+		t.Rows = append(t.Rows, []string{orText(p.Name, "–"), strconv.FormatFloat(float64(p.Cells), 'f', 0, 64), text(p.H, 4), quantity.Text(float64(p.Value), 6), used})
+	}
+	return []Table{t}
+}
+
+func sameAnswer(c *study.Cell) string {
+	if c.Summary == nil {
+		return "Not compared yet: " + firstBlocking(c)
+	}
+	unit := orText(c.Unit, "no stated unit")
+	if unit == "1" {
+		unit = "a pure number"
+	}
+	answer := "Both sides in " + unit + "; " + stationsOf(c) + " compared against " + orText(c.Reference, "the reference")
+	if c.Kind != "" {
+		answer += " (" + c.Kind + ")"
+	}
+	return answer + "."
+}
+
+func firstBlocking(c *study.Cell) string {
+	for _, o := range c.Open {
+		if o.Blocks {
+			return o.Missing + " is open."
+		}
+	}
+	return "nothing is common to both sides."
+}
+
+func agreeAnswer(c *study.Cell) string {
+	s := c.Summary
+	switch {
+	case s == nil:
+		return "Nothing is compared yet."
+	case s.Tested == 0:
+		return "Differences only: u_val is not available."
+	case c.Scalar:
+		return "E is " + text(c.Stations[0].Ratio, 2) + " u_val: " + c.Stations[0].Reading + "."
+	}
+	answer := "|E| exceeds " + strconv.FormatFloat(c.Choices.K, 'g', -1, 64) + " u_val at " + strconv.Itoa(s.Tested-s.WithinKUVal) + " of " + count(s.Tested, "station") + " (" + text(s.BeyondChance, 2) + " expected by chance)"
+	if j := c.Joint; j != nil {
+		answer += "; together the statistic " + exceedsWord(j.Exceeds) + " its 95 % point"
+		if j.Remainder.Known() {
+			answer += ", and without a common offset it " + exceedsWord(j.RemainderExceeds) + " it"
+		}
+	}
+	return answer + "."
+}
+
+func exceedsWord(yes bool) string {
+	if yes {
+		return "exceeds"
+	}
+	return "does not exceed"
+}
+
+func agreeNumbers(c *study.Cell) []Headline {
+	s := c.Summary
+	if s == nil {
+		return nil
+	}
+	if c.Scalar {
+		x := c.Stations[0]
+		list := []Headline{{quantity.Signed(float64(x.E), 3) + c.UnitSuffix(), "E = S − D"}}
+		if x.UVal.Known() {
+			list = append(list, Headline{text(x.UVal, 3) + c.UnitSuffix(), "u_val"}, Headline{text(x.Ratio, 2), "|E| / u_val"})
+		}
+		return list
+	}
+	list := []Headline{{quantity.Signed(float64(s.Bias), 3) + c.UnitSuffix(), "mean E"}, {text(s.RMSE, 3) + c.UnitSuffix(), "root mean square E"}}
+	if j := c.Joint; j != nil {
+		list = append(list, Headline{text(j.Statistic, 3), "joint statistic, 95 % point " + text(j.Reference, 3)})
+	}
+	return list
+}
+
+func agreeTables(c *study.Cell) []Table {
+	if c.Summary == nil {
+		return nil
+	}
+	name := orText(c.XName, "x")
+	if c.XUnit != "" && c.XUnit != "1" {
+		name += " [" + c.XUnit + "]"
+	}
+	t := Table{Title: "Stations", Head: []string{name, "S", "D", "E", "u_D", "u_num", "u_input", "u_val", "|E|/u_val", "line"}, Rows: [][]string{}}
+	for i, s := range c.Stations {
+		if i == maxTableRows {
+			t.Title += ", the first " + strconv.Itoa(maxTableRows) + " (all are in the exported table)"
+			break
+		}
+		t.Rows = append(t.Rows, []string{written(s.X), text(s.S, 5), written(s.D), quantity.Signed(float64(s.E), 3), text(s.UD, 3), text(s.UNum, 3), text(s.UInput, 3), text(s.UVal, 3), text(s.Ratio, 3), strconv.Itoa(s.Line)})
+	}
+	tables := []Table{t}
+	if j := c.Joint; j != nil && !c.Scalar {
+		tables = append(tables, Table{Title: "All stations together", Head: []string{"correlation", "statistic", "on", "95 % point"}, Rows: [][]string{
+			{j.Pattern + " (as declared)", text(j.Statistic, 4), strconv.Itoa(j.N), text(j.Reference, 3)},
+			{"every source independent", text(j.Independent, 4), strconv.Itoa(j.N), text(j.Reference, 3)},
+			{"u_num shared by all stations", text(j.NumShared, 4), strconv.Itoa(j.N), text(j.Reference, 3)},
+			{"offset " + quantity.SignedLike(float64(j.Offset), float64(j.UOffset), 3) + " ± " + text(j.UOffset, 3), text(j.OffsetPart, 3), "1", "3.84"},
+			{"remainder without the offset", text(j.Remainder, 4), strconv.Itoa(j.RemainderN), text(j.RemainderReference, 3)},
+		}})
+	}
+	if x := c.Crossings; len(x.Simulation)+len(x.Reference) > 0 {
+		tables = append(tables, Table{Title: "Changes of sign", Head: []string{"side", name, "direction"}, Rows: append(crossingRows("simulation", x.Simulation), crossingRows("reference", x.Reference)...)})
+	}
+	return tables
+}
+
+// maxTableRows is the number of stations above which the page shows the first
+// of them only.
+const maxTableRows = 200
+
+func crossingRows(side string, list []study.Crossing) [][]string {
+	rows := [][]string{}
+	for _, x := range list {
+		direction := "falling"
+		if x.Rising {
+			direction = "rising"
+		}
+		rows = append(rows, []string{side, text(x.X, 4), direction})
+	}
+	return rows
+}
+
+// written prints a value as a file states it.
+func written(w study.Written) string {
+	if v := quantity.Number(w); !v.Known() {
+		return "–"
+	}
+	return strings.ReplaceAll(strconv.FormatFloat(quantity.Round(float64(w), 10), 'g', -1, 64), "-", "−")
+}
+
+func sayAnswer(c *study.Cell) string {
+	r := c.Requirement
+	switch {
+	case c.Withheld:
+		return "No statement: " + firstBlocking(c)
+	case r == nil:
+		return "No accuracy requirement is recorded: adequacy is not judged."
+	case r.Outcome == "":
+		return "The requirement cannot be judged without u_val."
+	}
+	answer := "The requirement is " + r.Outcome + " at k = " + strconv.FormatFloat(c.Choices.K, 'g', -1, 64) + "."
+	if len(c.Fragile) > 0 {
+		answer += " " + count(len(c.Fragile), "other choice") + " would change a word."
+	}
+	return answer
+}
+
+func sayNumbers(c *study.Cell) []Headline {
+	r := c.Requirement
+	if c.Withheld || c.Summary == nil {
+		return nil
+	}
+	var list []Headline
+	if c.Scalar {
+		list = append(list, Headline{study.IntervalText(c, c.Stations[0]), "E ± " + strconv.FormatFloat(c.Choices.K, 'g', -1, 64) + " u_val"})
+	}
+	if r != nil && r.Outcome != "" {
+		limit := "± " + text(r.Limit, 3) + c.UnitSuffix()
+		if r.Percent.Known() {
+			limit = "± " + strconv.FormatFloat(float64(r.Percent), 'g', -1, 64) + " %"
+		}
+		list = append(list, Headline{limit, "requirement"})
+		if r.UValNeeded.Known() {
+			list = append(list, Headline{text(r.UValNeeded, 3) + c.UnitSuffix(), "u_val that would resolve it"})
+		}
+	}
+	return list
+}
+
+func sayTables(c *study.Cell) []Table {
+	if len(c.Fragile) == 0 {
+		return nil
+	}
+	t := Table{Title: "Choices that change a word", Head: []string{"choice", "of", "from", "to", ""}, Rows: [][]string{}}
+	for _, f := range c.Fragile {
+		t.Rows = append(t.Rows, []string{f.Change, f.What, f.From, f.Outcome, f.Detail})
+	}
+	return []Table{t}
+}

@@ -1,0 +1,242 @@
+package study
+
+import (
+	"errors"
+	"math"
+
+	"gonum.org/v1/gonum/stat/distuv"
+
+	"weirmark/core/comparison"
+	"weirmark/core/derived"
+	"weirmark/core/metric"
+	"weirmark/core/notice"
+	"weirmark/core/quantity"
+	"weirmark/core/uncertainty"
+)
+
+// agree compares the two sides station by station and together.
+func (w *work) agree() {
+	w.crossings()
+	if len(w.x) == 0 {
+		return
+	}
+	e := comparison.Error(w.s, w.d)
+	var ratio []float64
+	if w.uVal != nil {
+		ratio = comparison.Ratio(e, w.uVal)
+	}
+	w.stationLines(e, ratio)
+	w.summarise(e, ratio)
+	w.shares()
+	w.joint(e)
+}
+
+// stationLines fills the station table.
+func (w *work) stationLines(e, ratio []float64) {
+	k := w.choices.K
+	at := func(u []float64, i int) Number {
+		if u == nil {
+			return None
+		}
+		return w.step(u[i])
+	}
+	lines := make([]Station, len(w.x))
+	for i := range lines {
+		s := Station{
+			X: Written(w.xUnit.FromSI(w.x[i])), S: w.yNumber(w.s[i]), D: Written(w.yUnit.FromSI(w.d[i])), E: w.step(e[i]),
+			UD: at(w.uD, i), UNum: at(w.uNum, i), UInput: at(w.uInput, i), UVal: at(w.uVal, i), UInterp: None,
+			Ratio: None, Lo: None, Hi: None, Line: w.reference.table.RowLine(w.rows[i]),
+		}
+		// A value that no conversion touched is printed as it was written.
+		if !w.cell.Scalar && w.rows != nil {
+			s.X, s.D = w.written(w.rows[i], s.X, s.D)
+		}
+		if w.choices.UInterp && !w.cell.Scalar {
+			s.UInterp = w.step(w.uInterp[i])
+		}
+		if ratio != nil && !math.IsNaN(ratio[i]) {
+			s.Ratio = Number(ratio[i])
+			s.Lo, s.Hi = w.step(e[i]-float64(k*w.uVal[i])), w.step(e[i]+float64(k*w.uVal[i]))
+			s.Reading = reading(ratio[i], k)
+		}
+		lines[i] = s
+	}
+	w.cell.Stations = lines
+}
+
+// written returns the values of a reference row as the file states them,
+// where the cell is in the units of the file.
+func (w *work) written(row int, x, d Written) (Written, Written) {
+	p := w.reference.slip
+	if column, err := w.reference.table.Column(p.X.Column.Value); err == nil && p.X.Unit.Value == w.xUnit.symbol {
+		x = Written(column.Values[row])
+	}
+	if column, err := w.reference.table.Column(p.Y.Column.Value); err == nil && p.Y.Unit.Value == w.yUnit.symbol {
+		d = Written(column.Values[row])
+	}
+	return x, d
+}
+
+// reading is the word of a pointwise comparison; thresholds are compared on
+// rounded values so that every host says the same.
+func reading(ratio, k float64) string {
+	r := quantity.Round(ratio, 10)
+	switch {
+	case r <= 1:
+		return WithinNoise
+	case r <= k:
+		return Between
+	}
+	return SignResolved
+}
+
+func (w *work) summarise(e, ratio []float64) {
+	m := metric.Summarise(e)
+	s := &Summary{N: m.N, Bias: w.step(m.Bias), MAE: w.step(m.MAE), RMSE: w.step(m.RMSE), MaxAbs: w.step(m.MaxAbs),
+		MaxAt: Number(w.xUnit.FromSI(w.x[m.MaxAt])), MaxRatio: None, BeyondChance: None}
+	if ratio != nil {
+		tested := pick(ratio, w.tested)
+		s.WithinUVal, s.WithinKUVal = metric.Within(tested, 1), metric.Within(tested, w.choices.K)
+		worst := 0.0
+		for _, r := range tested {
+			worst = max(worst, r)
+		}
+		if len(tested) > 0 {
+			s.MaxRatio = Number(worst)
+			s.BeyondChance = Number(2 * distuv.UnitNormal.Survival(w.choices.K) * float64(len(tested)))
+		}
+	}
+	s.Tested = len(w.tested)
+	w.cell.Summary = s
+}
+
+// shares fills the lines of the sources: root mean square over the tested
+// stations, and the part of the mean u_val squared.
+func (w *work) shares() {
+	rows := w.tested
+	if len(rows) == 0 {
+		rows = all(len(w.x))
+	}
+	whole := 0.0
+	if w.uVal != nil {
+		whole = squares(w.uVal, rows)
+	}
+	for _, p := range w.parts {
+		line := p.line
+		sum := squares(p.u, rows)
+		line.U, line.Share = w.step(math.Sqrt(sum/float64(len(rows)))), None
+		if whole > 0 {
+			line.Share = Number(sum / whole)
+		}
+		w.cell.Sources = append(w.cell.Sources, line)
+	}
+}
+
+func squares(u []float64, rows []int) float64 {
+	sum := 0.0
+	for _, i := range rows {
+		sum += float64(u[i] * u[i])
+	}
+	return sum
+}
+
+// joint makes the statistic of all stations together.
+func (w *work) joint(e []float64) {
+	if w.uVal == nil || len(w.tested) == 0 {
+		return
+	}
+	tested := pick(e, w.tested)
+	budget := w.covariance(w.parts, w.tested)
+	q, err := comparison.Statistic(tested, budget)
+	if err != nil {
+		code := notice.New("covariance-range")
+		if errors.Is(err, comparison.ErrSize) {
+			code = notice.New("covariance-size", len(tested), comparison.MaxDense)
+		}
+		w.tell(code)
+		return
+	}
+	reference := comparison.ChiSquare95(q.Rank)
+	j := &Joint{Statistic: Number(q.Statistic), N: q.Rank, P: Number(q.P()), Reference: Number(reference),
+		Exceeds: exceeds(q.Statistic, reference), Pattern: w.pattern(),
+		Independent: w.alternative(tested, func(p *part) { p.common = false }),
+		NumShared: w.alternative(tested, func(p *part) {
+			if p.line.Of == OfNumerical && !p.interp {
+				p.common = true
+			}
+		}),
+		Offset: None, UOffset: None, OffsetPart: None, Remainder: None, RemainderReference: None}
+	w.cell.Joint = j
+	if q.Rank < len(tested) {
+		w.tell(notice.New("covariance-rank", q.Rank, len(tested), q.Rank))
+	}
+	if low := (distuv.ChiSquared{K: float64(q.Rank)}).CDF(q.Statistic); low < 0.01 {
+		w.tell(notice.New("joint-low-tail"))
+	}
+	w.split(j, tested, budget)
+}
+
+// split parts the statistic into a common offset and the remainder.
+func (w *work) split(j *Joint, e []float64, budget uncertainty.Budget) {
+	if len(e) < 3 {
+		return
+	}
+	s, ok := comparison.Offset(e, budget)
+	if !ok {
+		return // no independent variance at some station: there are no such parts
+	}
+	j.Offset, j.UOffset, j.OffsetPart, j.Remainder = w.step(s.Offset), w.step(s.U), Number(s.Part), Number(s.Remainder)
+	j.RemainderN = j.N - 1
+	reference := comparison.ChiSquare95(j.RemainderN)
+	j.RemainderReference, j.RemainderExceeds = Number(reference), exceeds(s.Remainder, reference)
+	j.OffsetResolved = exceeds(math.Abs(s.Offset), float64(w.choices.K*s.U))
+}
+
+// exceeds compares on rounded values, so that every host says the same.
+func exceeds(a, b float64) bool { return quantity.Round(a, 10) > quantity.Round(b, 10) }
+
+// alternative returns the statistic with the pattern of the sources changed.
+func (w *work) alternative(e []float64, change func(*part)) Number {
+	parts := append([]part{}, w.parts...)
+	for i := range parts {
+		change(&parts[i])
+	}
+	q, err := comparison.Statistic(e, w.covariance(parts, w.tested))
+	if err != nil {
+		return None
+	}
+	return Number(q.Statistic)
+}
+
+// pattern says the correlation of the budget in words.
+func (w *work) pattern() string {
+	common, independent := false, false
+	for _, p := range w.parts {
+		common, independent = common || p.common, independent || !p.common
+	}
+	switch {
+	case common && independent:
+		return "independent and common"
+	case common:
+		return "common"
+	}
+	return "independent"
+}
+
+// crossings lists the changes of sign of both curves as they were read.
+func (w *work) crossings() {
+	if w.cell.Scalar {
+		return
+	}
+	list := func(c *curve) []Crossing {
+		out := []Crossing{}
+		if c == nil || c.scalar() {
+			return out
+		}
+		for _, at := range derived.Crossings(inUnit(c.x, c.xUnit, w.xUnit), inUnit(c.y, c.yUnit, w.yUnit)) {
+			out = append(out, Crossing{X: Number(w.xUnit.FromSI(at.X)), Rising: at.Rising})
+		}
+		return out
+	}
+	w.cell.Crossings = Crossings{Simulation: list(w.finest()), Reference: list(w.reference)}
+}

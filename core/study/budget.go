@@ -1,0 +1,325 @@
+package study
+
+import (
+	"math"
+	"strconv"
+
+	"weirmark/core/notice"
+	"weirmark/core/quantity"
+	"weirmark/core/station"
+	"weirmark/core/uncertainty"
+)
+
+// part is the standard uncertainty of one source at the stations, in SI.
+type part struct {
+	line   SourceLine
+	u      []float64
+	common bool
+	interp bool
+}
+
+// budget collects the sources of the cell at its stations.
+func (w *work) budget() {
+	if len(w.x) == 0 {
+		w.missingParts()
+		return
+	}
+	w.dataColumn()
+	w.replicates()
+	for i := range w.q.Sources {
+		s := &w.q.Sources[i]
+		if s.Model == "" || s.Model == w.model {
+			w.source(i, s)
+		}
+	}
+	w.gridPart()
+	w.interpolationPart()
+	w.missingParts()
+	w.total()
+}
+
+// add appends a source.
+func (w *work) add(of, name, text, origin string, u []float64, common, open bool) {
+	pattern := Independent
+	if common {
+		pattern = Common
+	}
+	w.parts = append(w.parts, part{line: SourceLine{Name: name, Of: of, Text: text, Pattern: pattern, Origin: origin, Open: open}, u: u, common: common})
+}
+
+// dataColumn takes the uncertainty column of the reference.
+func (w *work) dataColumn() {
+	c := w.reference
+	if c.u == nil || c.scalar() {
+		return
+	}
+	u := pick(c.u, w.rows)
+	w.blanks(u, "the uncertainty of the data", slipTarget(c.slip, "u.column"))
+	if c.uOpen && c.slip.UFactor.Given() {
+		w.need(2, true, "the coverage of u_D", slipTarget(c.slip, "u_factor"), "u-coverage", c.slip.U.Column.Value)
+	}
+	w.add(OfData, "column "+c.slip.U.Column.Value, "at each station, "+coverageWords(c.slip.UFactor.Value), "stated in "+w.e.study.fileName(c.slip), u, false, c.uOpen)
+}
+
+// replicates takes the scatter of repeated readings of a scalar.
+func (w *work) replicates() {
+	c := w.reference
+	if !c.scalar() {
+		return
+	}
+	readings := known(inUnit(c.y, c.yUnit, w.yUnit))
+	if len(readings) < 2 {
+		if c.u != nil && len(c.u) == 1 {
+			w.add(OfData, "column "+c.slip.U.Column.Value, coverageWords(c.slip.UFactor.Value), "stated in "+w.e.study.fileName(c.slip), c.u, false, c.uOpen)
+		}
+		return
+	}
+	_, s, u := uncertainty.Replicates(readings)
+	text := "standard deviation " + quantity.Text(float64(w.step(s)), 3) + " of " + count(len(readings), "reading") + ", divided by √" + strconv.Itoa(len(readings))
+	w.add(OfData, "scatter of repeated readings", text, "computed from "+w.e.study.fileName(c.slip), []float64{u}, false, false)
+}
+
+// source takes one entered line of the budget.
+func (w *work) source(at int, s *Source) {
+	target := Target{Kind: "source", ID: w.q.id(), Field: strconv.Itoa(at)}
+	k, knownCoverage := uncertainty.CoverageFactor(s.Coverage.Value)
+	if !knownCoverage {
+		k = 1
+		w.need(2, true, "the coverage of "+s.Name, target, "u-coverage", s.Name)
+	} else if s.Coverage.Open() {
+		w.need(2, true, "acceptance of the coverage of "+s.Name, target, "guess-open", "The coverage", s.Name, s.Coverage.Value)
+	}
+	if s.Value < 0 {
+		n := notice.New("u-negative", quantity.Text(s.Value, 6), s.Name)
+		w.tell(n)
+		w.stop(2, "a valid "+s.Name, target, n)
+		return
+	}
+	u, ok := w.sourceValues(s, k, target)
+	if !ok {
+		return
+	}
+	w.blanks(u, s.Name, target)
+	common := s.Pattern == Common
+	if s.Of == OfNumerical {
+		common = common || w.choices.NumShared
+	}
+	w.add(s.Of, s.Name, w.sourceText(s), s.Origin, u, common, !knownCoverage || s.Coverage.Open())
+}
+
+// blanks asks for the stations at which a source has no value.
+func (w *work) blanks(u []float64, name string, target Target) {
+	n := len(u) - len(known(u))
+	if n > 0 {
+		w.need(2, false, name+" at "+count(n, "station"), target, "u-blank", n)
+	}
+}
+
+// sourceValues returns the standard uncertainty of an entered source.
+func (w *work) sourceValues(s *Source, k float64, target Target) ([]float64, bool) {
+	switch {
+	case s.Column != "":
+		u, err := w.sourceColumn(s)
+		if err != nil {
+			n := asNotice(err)
+			w.tell(n)
+			w.stop(2, "a valid "+s.Name, target, n)
+			return nil, false
+		}
+		return uncertainty.Scaled(u, k), true
+	case s.Basis == OfReading:
+		return uncertainty.Scaled(uncertainty.OfReading(w.d, s.Value/100), k), true
+	}
+	return uncertainty.Constant(len(w.d), w.yUnit.StepToSI(s.Value)/k), true
+}
+
+// sourceColumn returns a column of half-widths at the stations: of the
+// simulation, resampled, for numerical sources that name one there, else of
+// the reference.
+func (w *work) sourceColumn(s *Source) ([]float64, error) {
+	if run := w.finest(); s.Of == OfNumerical && run != nil {
+		if column, err := run.table.Column(s.Column); err == nil {
+			w.tell(notice.New("u-num-column", column.Name, "simulation"))
+			if run.scalar() {
+				return steps(column.Values, w.yUnit, []int{0}), nil
+			}
+			x := inUnit(run.x, run.xUnit, w.xUnit)
+			got := station.Resample(w.e.study.fileName(run.slip), run.slip.X.Column.Value, x, column.Values, w.x, station.Options{Method: w.choices.Interpolation})
+			u := uncertainty.Constant(len(w.x), math.NaN())
+			for j, i := range got.Kept {
+				u[i] = w.yUnit.StepToSI(got.S[j])
+			}
+			return u, nil
+		}
+	}
+	column, err := w.reference.table.Column(s.Column)
+	if err != nil {
+		return nil, err
+	}
+	u := steps(column.Values, w.yUnit, w.rows)
+	for j, v := range u {
+		if v < 0 {
+			return nil, notice.New("u-negative", quantity.Text(v, 6), place(w.reference, w.rows[j])).In(w.e.study.fileName(w.reference.slip)).At(w.reference.table.RowLine(w.rows[j]))
+		}
+	}
+	return u, nil
+}
+
+func steps(values []float64, u unit, rows []int) []float64 {
+	out := make([]float64, len(rows))
+	for j, i := range rows {
+		out[j] = u.StepToSI(values[i])
+	}
+	return out
+}
+
+// sourceText says a source in words.
+func (w *work) sourceText(s *Source) string {
+	value := quantity.Text(s.Value, 6)
+	switch {
+	case s.Column != "":
+		value = "column " + s.Column
+	case s.Basis == OfReading:
+		value += " % of reading"
+	case w.cell.Unit != "" && w.cell.Unit != "1":
+		value += " " + w.cell.Unit
+	}
+	kind := "systematic"
+	if s.Random {
+		kind = "random"
+	}
+	return value + ", " + coverageWords(s.Coverage.Value) + ", " + kind
+}
+
+// coverageWords says a coverage in words.
+func coverageWords(text string) string {
+	switch text {
+	case "":
+		return "coverage not stated"
+	case "1", "standard":
+		return "standard (k = 1)"
+	}
+	if _, err := strconv.ParseFloat(text, 64); err == nil {
+		return "k = " + text
+	}
+	return text
+}
+
+// gridPart takes the grid study as a numerical source.
+func (w *work) gridPart() {
+	if w.gridU == nil {
+		return
+	}
+	text := "U of the grid study divided by " + quantity.Text(w.choices.KNum, 3)
+	if math.IsNaN(float64(w.cell.Grids.U)) && !w.cell.Grids.Along {
+		text = "bound of the grid study divided by √3"
+	}
+	w.add(OfNumerical, "grid", text, "computed from the grid study", w.gridU, w.choices.NumShared, false)
+}
+
+// interpolationPart takes the interpolation of the simulation as a numerical
+// source, always independent between stations.
+func (w *work) interpolationPart() {
+	if !w.choices.UInterp || w.cell.Scalar {
+		return
+	}
+	w.add(OfNumerical, "interpolation to the stations", "bound divided by √3, "+string(w.choices.Interpolation), "computed", w.uInterp, false, false)
+	w.parts[len(w.parts)-1].interp = true
+}
+
+// has reports whether a part is of one side, interpolation apart.
+func (w *work) has(of string) bool {
+	for _, p := range w.parts {
+		if p.line.Of == of && !p.interp {
+			return true
+		}
+	}
+	return false
+}
+
+// missingParts lists what the budget lacks.
+func (w *work) missingParts() {
+	if w.reference != nil && len(w.x) > 0 && !w.has(OfData) {
+		w.need(2, true, "the uncertainty of the data", Target{Kind: "source", ID: w.q.id(), Field: OfData}, "u-missing")
+	}
+	if w.finest() != nil && !w.has(OfNumerical) && !w.blocked {
+		w.need(1, true, "the numerical uncertainty", Target{Kind: "source", ID: w.q.id(), Field: OfNumerical}, w.gridsMissing())
+	}
+	if w.finest() != nil && len(w.x) > 0 && !w.has(OfInput) {
+		w.need(2, false, "the input uncertainty", Target{Kind: "source", ID: w.q.id(), Field: OfInput}, "u-input-missing")
+	}
+}
+
+// gridsMissing is the code of the open point for want of a grid uncertainty.
+func (w *work) gridsMissing() string {
+	if w.cell.Grids == nil {
+		return "grid-one"
+	}
+	return "u-num-missing"
+}
+
+// total sums the parts by side; u_val is nil while a side is missing that it
+// cannot do without.
+func (w *work) total() {
+	n := len(w.x)
+	side := func(of string, interp bool) []float64 {
+		var sources []uncertainty.Source
+		for _, p := range w.parts {
+			if p.line.Of == of && p.interp == interp {
+				sources = append(sources, uncertainty.Source{U: p.u, Common: p.common})
+			}
+		}
+		if sources == nil {
+			return nil
+		}
+		return uncertainty.Combine(n, sources).Total()
+	}
+	w.uD, w.uNum, w.uInput = side(OfData, false), side(OfNumerical, false), side(OfInput, false)
+	if w.uD == nil {
+		return
+	}
+	w.uVal = w.covariance(w.parts, all(n)).Total()
+	for i, u := range w.uVal {
+		if u > 0 {
+			w.tested = append(w.tested, i)
+		}
+	}
+}
+
+// all returns 0 to n-1.
+func all(n int) []int {
+	rows := make([]int, n)
+	for i := range rows {
+		rows[i] = i
+	}
+	return rows
+}
+
+// covariance returns the budget of parts at some of the stations.
+func (w *work) covariance(parts []part, at []int) uncertainty.Budget {
+	sources := make([]uncertainty.Source, len(parts))
+	for i, p := range parts {
+		sources[i] = uncertainty.Source{U: pick(p.u, at), Common: p.common}
+	}
+	return uncertainty.Combine(len(at), sources)
+}
+
+// pick returns the values at some indices; all of them are not copied.
+func pick(values []float64, at []int) []float64 {
+	if len(at) == len(values) {
+		return values
+	}
+	out := make([]float64, len(at))
+	for j, i := range at {
+		out[j] = values[i]
+	}
+	return out
+}
+
+// count says a number of things.
+func count(n int, thing string) string {
+	if n == 1 {
+		return "1 " + thing
+	}
+	return strconv.Itoa(n) + " " + thing + "s"
+}

@@ -1,0 +1,212 @@
+package study
+
+import (
+	"math"
+	"strconv"
+
+	"weirmark/core/notice"
+	"weirmark/core/quantity"
+	"weirmark/core/tablefile"
+	"weirmark/core/uncertainty"
+)
+
+// curve is what a slip stands for: columns of one table, in SI, in file
+// order. Scalars are curves without an abscissa.
+type curve struct {
+	slip  *Slip
+	table tablefile.Table
+	x     []float64 // nil for scalars
+	y     []float64
+	u     []float64 // standard, independent between stations; nil when there is no column
+	uOpen bool      // u is there but its coverage is not known
+	xUnit axis
+	yUnit axis
+}
+
+// axis is the unit of a column; known is false where none was given.
+type axis struct {
+	unit  quantity.Unit
+	known bool
+}
+
+func (c *curve) scalar() bool { return c.x == nil }
+
+// fileName is the name of the file behind a slip.
+func (s *Study) fileName(slip *Slip) string {
+	if f := s.File(slip.File); f != nil {
+		return f.Name
+	}
+	return slip.File
+}
+
+// load reads the columns a slip names. Notices say what stopped it; c is nil
+// when nothing can be used.
+func (e *evaluation) load(slip *Slip) (*curve, []notice.Notice) {
+	file, ok := e.files[slip.File]
+	if !ok {
+		return nil, []notice.Notice{notice.New("file-unknown", slip.File, slip.ID)}
+	}
+	table, err := file.Table(slip.Table)
+	if err != nil {
+		return nil, []notice.Notice{asNotice(err)}
+	}
+	l := loader{table: table, file: file.Name}
+	c := &curve{slip: slip, table: table}
+	if slip.X.Column.Given() {
+		c.x, c.xUnit = l.column(slip.X)
+	}
+	c.y, c.yUnit = l.column(slip.Y)
+	if slip.U.Column.Given() {
+		l.uncertainty(c)
+	}
+	if notice.Any(l.notices, notice.Stop) {
+		return nil, l.notices
+	}
+	return c, l.notices
+}
+
+// asNotice returns the notice that an error of tablefile is.
+func asNotice(err error) notice.Notice {
+	if n, ok := err.(notice.Notice); ok {
+		return n
+	}
+	return notice.New("study-error", err.Error())
+}
+
+type loader struct {
+	table   tablefile.Table
+	file    string
+	notices []notice.Notice
+}
+
+func (l *loader) tell(n notice.Notice) { l.notices = append(l.notices, n.In(l.file)) }
+
+// column returns a column in SI. A unit that is not given, or not known,
+// leaves the values as written.
+func (l *loader) column(use ColumnUse) ([]float64, axis) {
+	column, err := l.table.Column(use.Column.Value)
+	if err != nil {
+		l.tell(asNotice(err))
+		return nil, axis{}
+	}
+	if !anyKnown(column.Values) {
+		l.tell(notice.New("column-empty", column.Name))
+		return nil, axis{}
+	}
+	symbol := use.Unit.Value
+	if symbol == "" {
+		return column.Values, axis{unit: quantity.One}
+	}
+	unit, err := quantity.Parse(symbol)
+	if err != nil {
+		l.tell(notice.New("unit-unknown", symbol, column.Name))
+		return column.Values, axis{unit: quantity.One}
+	}
+	return inSI(column.Values, unit), axis{unit, true}
+}
+
+// inSI converts values; those of units that are SI already are not copied.
+func inSI(values []float64, unit quantity.Unit) []float64 {
+	if unit.Factor == 1 && unit.Offset == 0 {
+		return values
+	}
+	out := make([]float64, len(values))
+	for i, v := range values {
+		out[i] = unit.ToSI(v)
+	}
+	return out
+}
+
+// uncertainty reads the uncertainty column: half-widths in the unit of the
+// quantity, or percent of the reading where its unit is % and the quantity's
+// is not.
+func (l *loader) uncertainty(c *curve) {
+	slip := c.slip
+	column, err := l.table.Column(slip.U.Column.Value)
+	if err != nil {
+		l.tell(asNotice(err))
+		return
+	}
+	step, percent := c.yUnit.unit, false
+	if symbol := slip.U.Unit.Value; symbol != "" && symbol != slip.Y.Unit.Value {
+		unit, err := quantity.Parse(symbol)
+		switch {
+		case err != nil:
+			l.tell(notice.New("unit-unknown", symbol, column.Name))
+		case symbol == "%":
+			percent = true
+		case !unit.Same(c.yUnit.unit):
+			l.tell(notice.New("unit-dimension", slip.Y.Column.Value, slip.Y.Unit.Value, column.Name, symbol))
+			return
+		default:
+			step = unit
+		}
+	}
+	k, known := uncertainty.CoverageFactor(slip.UFactor.Value)
+	if !known {
+		k, c.uOpen = 1, true
+	}
+	c.u = make([]float64, len(column.Values))
+	zeros := 0
+	for i, v := range column.Values {
+		if v < 0 {
+			l.tell(notice.New("u-negative", strconv.FormatFloat(v, 'g', -1, 64), place(c, i)).At(l.table.RowLine(i)))
+			return
+		}
+		if v == 0 {
+			zeros++
+		}
+		u := step.StepToSI(v)
+		if percent {
+			u = math.Abs(c.y[i]) * v / 100
+		}
+		c.u[i] = u / k
+	}
+	if zeros > 0 {
+		l.tell(notice.New("u-zero", zeros))
+	}
+}
+
+// place names row i of a curve for a reader.
+func place(c *curve, i int) string {
+	if c.scalar() {
+		return "row " + strconv.Itoa(i+1)
+	}
+	return c.slip.X.Column.Value + " = " + strconv.FormatFloat(c.xUnit.unit.FromSI(c.x[i]), 'g', 6, 64)
+}
+
+func anyKnown(values []float64) bool {
+	for _, v := range values {
+		if !math.IsNaN(v) {
+			return true
+		}
+	}
+	return len(values) == 0
+}
+
+// sameAxis settles the units of two columns that are to be compared. Where
+// one side states no unit it is read in the other's, which is an open point;
+// the error notice says that the two cannot be compared.
+func sameAxis(a, b axis, aName, bName string) (quantity.Unit, *notice.Notice) {
+	switch {
+	case !a.known && !b.known:
+		return quantity.One, nil
+	case !a.known:
+		return b.unit, nil
+	case !b.known:
+		return a.unit, nil
+	case a.unit.Same(b.unit):
+		return a.unit, nil
+	}
+	code := "unit-dimension"
+	if a.unit.KinematicOf(b.unit) || b.unit.KinematicOf(a.unit) {
+		code = "density-needed"
+		if b.unit.KinematicOf(a.unit) {
+			a, b, aName, bName = b, a, bName, aName
+		}
+		n := notice.New(code, aName, a.unit.Symbol, bName, b.unit.Symbol)
+		return quantity.One, &n
+	}
+	n := notice.New(code, aName, a.unit.Symbol, bName, b.unit.Symbol)
+	return quantity.One, &n
+}

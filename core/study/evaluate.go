@@ -1,0 +1,401 @@
+package study
+
+import (
+	"strconv"
+
+	"weirmark/core/notice"
+	"weirmark/core/tablefile"
+)
+
+// Edition names the edition of the methods that a report was made with.
+const Edition = "1"
+
+// Options of Evaluate.
+type Options struct {
+	// Read reads a file; a host that evaluates often may answer from what it
+	// read before. Nil reads anew.
+	Read func(File) tablefile.File
+	// Alternatives asks for the list of choices that would change an outcome;
+	// every one evaluates its cell again.
+	Alternatives bool
+}
+
+// Read reads the bytes of a file.
+func Read(f File) tablefile.File { return tablefile.Read(f.Name, f.Data, tablefile.Options{}) }
+
+// evaluation is one run of Evaluate.
+type evaluation struct {
+	study   *Study
+	options Options
+	files   map[string]tablefile.File // by ID; only those whose bytes have their recorded hash
+}
+
+// Evaluate returns everything that can be said of a study. It is a pure
+// function: the same study gives the same report in every host. Values of a
+// cell are in the unit of its data (of the simulation where there are none).
+func Evaluate(s *Study, options Options) Report {
+	if options.Read == nil {
+		options.Read = Read
+	}
+	e := &evaluation{study: s, options: options, files: map[string]tablefile.File{}}
+	r := Report{
+		Title: s.Title, Purpose: s.Purpose, Edition: Edition,
+		Files: []FileLine{}, Cells: []Cell{}, Notices: []notice.Notice{},
+		Prepared: s.Prepared, Checked: s.Checked, Approved: s.Approved,
+		Log: append([]Entry{}, s.Log...),
+	}
+	e.readFiles(&r)
+	for i := range s.Questions {
+		q := &s.Questions[i]
+		for _, model := range s.models(q) {
+			r.Cells = append(r.Cells, e.cell(q, model))
+		}
+	}
+	return r
+}
+
+// readFiles reads every file once and lists it with its uses.
+func (e *evaluation) readFiles(r *Report) {
+	first := map[string]string{} // by hash
+	for _, f := range e.study.Files {
+		read := e.options.Read(f)
+		line := FileLine{ID: f.ID, Name: f.Name, SHA256: read.SHA256, Bytes: read.Size, Matches: read.SHA256 == f.SHA256, Uses: e.study.uses(f.ID)}
+		r.Files = append(r.Files, line)
+		for _, n := range read.Notices {
+			r.Notices = append(r.Notices, n.In(f.Name))
+		}
+		if !line.Matches {
+			r.Notices = append(r.Notices, notice.New("hash-changed", f.Name).In(f.Name))
+			continue
+		}
+		if other, twice := first[read.SHA256]; twice {
+			r.Notices = append(r.Notices, notice.New("files-identical", other, f.Name).In(f.Name))
+		} else {
+			first[read.SHA256] = f.Name
+		}
+		e.files[f.ID] = read
+	}
+}
+
+// uses says in words what a file is used for.
+func (s *Study) uses(id string) []string {
+	uses := []string{}
+	for i := range s.Slips {
+		p := &s.Slips[i]
+		if p.File != id || p.Role.Value == Unused || !p.Role.Given() {
+			continue
+		}
+		text := p.Role.Value + ": " + p.Quantity.Value
+		if p.Model.Given() && p.Role.Value != Reference {
+			text += ", model " + p.Model.Value
+		}
+		if p.Grid.Given() {
+			text += ", grid " + p.Grid.Value
+		}
+		uses = append(uses, text)
+	}
+	return uses
+}
+
+// belongs reports whether a slip is of a question and plays one of the roles.
+func (q *Question) belongs(p *Slip, roles ...string) bool {
+	if p.Case.Value != q.Case || p.Quantity.Value != q.Quantity {
+		return false
+	}
+	for _, role := range roles {
+		if p.Role.Value == role {
+			return true
+		}
+	}
+	return false
+}
+
+// models lists the models that a question has simulations of, in the order
+// of their slips; one nameless model where there is none.
+func (s *Study) models(q *Question) []string {
+	var models []string
+	seen := map[string]bool{}
+	for i := range s.Slips {
+		p := &s.Slips[i]
+		if q.belongs(p, Simulation, GridValues) && !seen[p.Model.Value] {
+			seen[p.Model.Value] = true
+			models = append(models, p.Model.Value)
+		}
+	}
+	if models == nil {
+		return []string{""}
+	}
+	return models
+}
+
+// cell evaluates one question for one model, with the choices that would
+// change an outcome.
+func (e *evaluation) cell(q *Question, model string) Cell {
+	c := e.work(q, model, q.Choices)
+	if e.options.Alternatives && c.Summary != nil {
+		c.Fragile = e.fragile(q, model, c)
+	}
+	return c
+}
+
+// work evaluates one question for one model with given choices.
+func (e *evaluation) work(q *Question, model string, choices Choices) Cell {
+	w := &work{e: e, q: q, model: model, choices: choices}
+	w.cell = Cell{
+		Case: q.Case, Condition: q.Condition, Quantity: q.Quantity, Symbol: q.Symbol, Model: model,
+		Reference: q.ReferenceID, Kind: q.Kind.Value, Use: q.Use.Value, Downward: q.Downward, Choices: choices,
+		Unit: "1", XUnit: "1",
+		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Sources: []SourceLine{}, Fragile: []Fragility{},
+		Notices: []notice.Notice{}, FilesUsed: []string{},
+		Crossings: Crossings{Simulation: []Crossing{}, Reference: []Crossing{}},
+		Curve:     Curve{X: []Written{}, Y: []Written{}, UNum: []Number{}},
+	}
+	w.findReference()
+	w.findSimulation()
+	if w.settleUnits() {
+		w.commonStations()
+		w.family()
+		w.budget()
+		w.agree()
+		w.judge()
+		w.draw()
+	}
+	w.close()
+	return w.cell
+}
+
+// work is the state of one cell while it is evaluated. Slices over the
+// stations are in SI.
+type work struct {
+	e       *evaluation
+	q       *Question
+	model   string
+	choices Choices
+	cell    Cell
+
+	reference *curve
+	runs      []run // finest first
+	grids     *curve
+	sizes     []float64
+
+	xUnit, yUnit unit
+
+	rows []int // of the reference, one a station
+	x, s, d,
+	uInterp []float64
+	gridU    []float64 // standard uncertainty from the grid study; nil where there is none
+	blocked  bool      // the grid study says that there is none
+	parts    []part
+	uD, uNum []float64
+	uInput   []float64
+	uVal     []float64
+	tested   []int // stations with a known u_val
+}
+
+// run is one simulation with the number of cells of its grid.
+type run struct {
+	curve *curve
+	cells float64 // 0 where not given
+}
+
+// tell adds a notice to the cell.
+func (w *work) tell(n notice.Notice) { w.cell.Notices = append(w.cell.Notices, n) }
+
+// need adds an open point with the text of a notice.
+func (w *work) need(course int, blocks bool, missing string, target Target, code string, args ...any) {
+	n := notice.New(code, args...)
+	w.tell(n)
+	w.cell.Open = append(w.cell.Open, Open{Course: course, Blocks: blocks, Missing: missing, Text: n.Text, Target: target})
+}
+
+// id names a question in targets.
+func (q *Question) id() string { return q.Case + "|" + q.Quantity }
+
+func (q *Question) target(field string) Target {
+	return Target{Kind: "question", ID: q.id(), Field: field}
+}
+
+// label names a question for a reader.
+func (q *Question) label() string { return q.Quantity + " at " + q.Case }
+
+// findReference loads the reference of the question.
+func (w *work) findReference() {
+	var found []*Slip
+	for i := range w.e.study.Slips {
+		if p := &w.e.study.Slips[i]; w.q.belongs(p, Reference) {
+			found = append(found, p)
+		}
+	}
+	if len(found) == 0 {
+		w.need(2, true, "reference data", w.q.target("reference"), "reference-missing", w.q.label())
+		return
+	}
+	if len(found) > 1 {
+		w.need(2, false, "the choice of one reference", slipTarget(found[1], "role"), "reference-many", len(found), w.q.label(), w.e.study.fileName(found[0]))
+	}
+	w.reference = w.use(found[0])
+	if w.cell.Reference == "" {
+		w.cell.Reference = w.e.study.fileName(found[0])
+	}
+}
+
+// findSimulation loads the runs of the model, finest first.
+func (w *work) findSimulation() {
+	any := false
+	for i := range w.e.study.Slips {
+		p := &w.e.study.Slips[i]
+		if p.Model.Value != w.model || !w.q.belongs(p, Simulation, GridValues) {
+			continue
+		}
+		any = true
+		c := w.use(p)
+		switch {
+		case c == nil:
+		case p.Role.Value == GridValues:
+			w.takeGrids(c)
+		default:
+			w.runs = append(w.runs, run{c, w.cells(p)})
+		}
+	}
+	if !any {
+		w.need(2, true, "a simulation", w.q.target("simulation"), "simulation-missing", w.q.label())
+	}
+	w.finestFirst()
+	if len(w.runs) > 0 {
+		w.cell.Grid = w.runs[0].curve.slip.Grid.Value
+	}
+}
+
+// finestFirst orders the runs by their cells, keeping the order of slips
+// among equals.
+func (w *work) finestFirst() {
+	for i := 1; i < len(w.runs); i++ {
+		for j := i; j > 0 && w.runs[j].cells > w.runs[j-1].cells; j-- {
+			w.runs[j], w.runs[j-1] = w.runs[j-1], w.runs[j]
+		}
+	}
+}
+
+func (w *work) cells(p *Slip) float64 {
+	if !p.Cells.Given() {
+		return 0
+	}
+	n, err := strconv.ParseFloat(p.Cells.Value, 64)
+	if err != nil || !(n > 0) {
+		w.need(1, true, "the number of cells", slipTarget(p, "cells"), "field-bad", "number of cells", w.e.study.fileName(p), p.Cells.Value)
+		return 0
+	}
+	return n
+}
+
+// takeGrids keeps a table of values over grid sizes.
+func (w *work) takeGrids(c *curve) {
+	column, err := c.table.Column(c.slip.Size.Column.Value)
+	if err != nil {
+		w.tell(asNotice(err))
+		w.stop(1, "the number of cells", slipTarget(c.slip, "size.column"), asNotice(err))
+		return
+	}
+	w.grids, w.sizes = c, column.Values
+}
+
+// stop adds a blocking open point for a notice that is listed already.
+func (w *work) stop(course int, missing string, target Target, n notice.Notice) {
+	w.cell.Open = append(w.cell.Open, Open{Course: course, Blocks: true, Missing: missing, Text: n.Text, Target: target})
+}
+
+func slipTarget(p *Slip, field string) Target { return Target{Kind: "slip", ID: p.ID, Field: field} }
+
+// use loads a slip, lists its guesses and gaps as open points, and notes the
+// file.
+func (w *work) use(p *Slip) *curve {
+	w.fileUsed(p.File)
+	w.doubts(p)
+	c, notices := w.e.load(p)
+	for _, n := range notices {
+		w.tell(n)
+		if n.Severity == notice.Stop || n.Code == "unit-unknown" {
+			w.stop(2, "a readable "+p.Quantity.Value, slipTarget(p, "y.column"), n)
+		}
+	}
+	return c
+}
+
+func (w *work) fileUsed(id string) {
+	for _, have := range w.cell.FilesUsed {
+		if have == id {
+			return
+		}
+	}
+	w.cell.FilesUsed = append(w.cell.FilesUsed, id)
+}
+
+// doubts lists the fields of a slip that are guesses or missing.
+func (w *work) doubts(p *Slip) {
+	file := w.e.study.fileName(p)
+	for _, f := range p.fields() {
+		switch {
+		case f.field.Open():
+			w.need(f.course, true, "acceptance of the "+f.name, slipTarget(p, f.path), "guess-open", capital(f.name), file, f.field.Value)
+		case f.needed && !f.field.Given():
+			w.need(f.course, true, "the "+f.name, slipTarget(p, f.path), "field-missing", capital(f.name), file)
+		}
+	}
+}
+
+// slipField is a field of a slip as doubts are told of it.
+type slipField struct {
+	path   string
+	name   string
+	field  Field
+	needed bool
+	course int
+}
+
+// fields lists the fields of a slip that a statement rests on.
+func (p *Slip) fields() []slipField {
+	all := []slipField{
+		{"role", "role", p.Role, true, 2},
+		{"case", "case", p.Case, true, 2},
+		{"quantity", "quantity", p.Quantity, true, 2},
+		{"y.column", "column of values", p.Y.Column, true, 2},
+		{"y.unit", "unit of " + orWord(p.Y.Column.Value, "the values"), p.Y.Unit, true, 2},
+	}
+	if p.Role.Value != Reference {
+		all = append(all, slipField{"model", "model", p.Model, false, 2})
+	}
+	if p.X.Column.Given() {
+		all = append(all,
+			slipField{"x.column", "column of stations", p.X.Column, true, 2},
+			slipField{"x.unit", "unit of " + p.X.Column.Value, p.X.Unit, true, 2})
+	}
+	if p.U.Column.Given() {
+		all = append(all,
+			slipField{"u.column", "column of uncertainty", p.U.Column, true, 2},
+			slipField{"u_factor", "coverage of " + p.U.Column.Value, p.UFactor, true, 2})
+	}
+	if p.Role.Value == Simulation {
+		all = append(all,
+			slipField{"grid", "grid", p.Grid, false, 1},
+			slipField{"cells", "number of cells", p.Cells, false, 1})
+	}
+	if p.Role.Value == GridValues {
+		all = append(all, slipField{"size.column", "column of cell counts", p.Size.Column, true, 1})
+	}
+	return all
+}
+
+func orWord(text, other string) string {
+	if text == "" {
+		return other
+	}
+	return text
+}
+
+// capital returns text with its first letter, an ASCII one, in upper case.
+func capital(text string) string {
+	if text == "" || text[0] < 'a' || text[0] > 'z' {
+		return text
+	}
+	return string(text[0]-'a'+'A') + text[1:]
+}

@@ -1,0 +1,128 @@
+package study
+
+import (
+	"strconv"
+
+	"weirmark/core/interpolate"
+	"weirmark/core/quantity"
+)
+
+// alternative is a choice that another careful person might have made.
+type alternative struct {
+	change string
+	apply  func(*Choices)
+}
+
+// alternatives lists the other choices open to a cell.
+func alternatives(c Choices) []alternative {
+	all := []alternative{}
+	kNum := 2.0
+	if c.KNum == 2 {
+		kNum = 1.15
+	}
+	all = append(all, alternative{"k_num = " + trim(kNum), func(c *Choices) { c.KNum = kNum }})
+	if c.Bounded {
+		all = append(all, alternative{"plain rule of the grid study", func(c *Choices) { c.Bounded = false }})
+	} else {
+		all = append(all, alternative{"bounded rule of the grid study", func(c *Choices) { c.Bounded = true }})
+	}
+	if c.NumShared {
+		all = append(all, alternative{"u_num independent between stations", func(c *Choices) { c.NumShared = false }})
+	} else {
+		all = append(all, alternative{"u_num shared by all stations", func(c *Choices) { c.NumShared = true }})
+	}
+	other := interpolate.Monotone
+	if c.Interpolation == interpolate.Monotone {
+		other = interpolate.Linear
+	}
+	all = append(all, alternative{string(other) + " interpolation", func(c *Choices) { c.Interpolation = other }})
+	if c.UInterp {
+		all = append(all, alternative{"no interpolation uncertainty", func(c *Choices) { c.UInterp = false }})
+	} else {
+		all = append(all, alternative{"interpolation uncertainty counted", func(c *Choices) { c.UInterp = true }})
+	}
+	return all
+}
+
+func trim(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
+
+// fragile evaluates the cell under every alternative and lists those that
+// change an outcome word.
+func (e *evaluation) fragile(q *Question, model string, have Cell) []Fragility {
+	list := []Fragility{}
+	for _, a := range alternatives(q.Choices) {
+		choices := q.Choices
+		a.apply(&choices)
+		other := e.work(q, model, choices)
+		list = append(list, changes(a.change, have, other)...)
+	}
+	return list
+}
+
+// changes lists the outcome words that differ between two evaluations.
+func changes(change string, have, other Cell) []Fragility {
+	var list []Fragility
+	add := func(what, from, to, detail string) {
+		if from != to {
+			list = append(list, Fragility{Change: change, What: what, From: from, Outcome: to, Detail: detail})
+		}
+	}
+	add("requirement", have.requirementWord(), other.requirementWord(), other.intervalWord())
+	if have.Scalar {
+		add("reading", have.readingWord(), other.readingWord(), "")
+		return list
+	}
+	add("joint statistic", have.jointWord(), other.jointWord(), other.jointDetail())
+	add("remainder", have.remainderWord(), other.remainderWord(), "")
+	return list
+}
+
+func (c *Cell) requirementWord() string {
+	if c.Requirement == nil || c.Requirement.Outcome == "" {
+		return "no outcome"
+	}
+	return c.Requirement.Outcome
+}
+
+func (c *Cell) readingWord() string {
+	if len(c.Stations) != 1 || c.Stations[0].Reading == "" {
+		return "no reading"
+	}
+	return c.Stations[0].Reading
+}
+
+func (c *Cell) jointWord() string {
+	switch {
+	case c.Joint == nil:
+		return "no statistic"
+	case c.Joint.Exceeds:
+		return "exceeds its 95 % point"
+	}
+	return "does not exceed its 95 % point"
+}
+
+func (c *Cell) remainderWord() string {
+	switch {
+	case c.Joint == nil || !c.Joint.Remainder.Known():
+		return "no remainder"
+	case c.Joint.RemainderExceeds:
+		return "exceeds its 95 % point"
+	}
+	return "does not exceed its 95 % point"
+}
+
+// intervalWord is the interval of the model error of a scalar.
+func (c *Cell) intervalWord() string {
+	if !c.Scalar || len(c.Stations) != 1 || !c.Stations[0].Lo.Known() {
+		return ""
+	}
+	s := c.Stations[0]
+	return IntervalText(c, s)
+}
+
+func (c *Cell) jointDetail() string {
+	if c.Joint == nil {
+		return ""
+	}
+	return "statistic " + quantity.Text(float64(c.Joint.Statistic), 3)
+}

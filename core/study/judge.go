@@ -1,0 +1,72 @@
+package study
+
+import (
+	"math"
+
+	"weirmark/core/adequacy"
+	"weirmark/core/quantity"
+)
+
+// judge holds the requirement against the interval of the model error.
+func (w *work) judge() {
+	r := w.q.Requirement
+	if r == nil {
+		w.need(4, false, "an accuracy requirement", w.q.target("requirement"), "requirement-missing", w.q.label())
+		return
+	}
+	j := &Judgement{Limit: None, Percent: None, Who: r.Who, Date: r.Date, Late: r.Late, At: None, UValNeeded: None, UNumNeeded: None, UNumReduction: None}
+	if r.Percent {
+		j.Percent = Number(r.Value)
+	}
+	w.cell.Requirement = j
+	if r.Late {
+		w.need(4, false, "a requirement recorded before results were seen", w.q.target("requirement"), "requirement-late")
+	}
+	if w.uVal == nil || len(w.tested) == 0 {
+		return
+	}
+	limits := make([]float64, len(w.tested))
+	e, u := make([]float64, len(w.tested)), pick(w.uVal, w.tested)
+	for n, i := range w.tested {
+		e[n] = w.s[i] - w.d[i]
+		limits[n] = w.yUnit.StepToSI(r.Value)
+		if r.Percent {
+			limits[n] = math.Abs(w.d[i]) * r.Value / 100
+		}
+	}
+	outcome, at := adequacy.JudgeAll(rounded(e), rounded(u), w.choices.K, rounded(limits))
+	j.Outcome = string(outcome)
+	j.Limit = w.step(limits[at])
+	if !w.cell.Scalar {
+		j.At = Number(w.xUnit.FromSI(w.x[w.tested[at]]))
+	}
+	if outcome == adequacy.NotResolved {
+		w.resolve(j, e[at], w.tested[at], limits[at])
+	}
+}
+
+// rounded keeps ten digits, so that every host decides alike.
+func rounded(values []float64) []float64 {
+	out := make([]float64, len(values))
+	for i, v := range values {
+		out[i] = quantity.Round(v, 10)
+	}
+	return out
+}
+
+// resolve says what uncertainty would show the requirement at the deciding
+// station, E unchanged.
+func (w *work) resolve(j *Judgement, e float64, i int, limit float64) {
+	needed, possible := adequacy.Needed(e, w.choices.K, limit)
+	if !possible {
+		return
+	}
+	j.UValNeeded = w.step(needed)
+	if w.uNum == nil {
+		return
+	}
+	if u, ok := adequacy.PartNeeded(w.uVal[i], w.uNum[i], needed); ok {
+		j.UNumNeeded = w.step(u)
+		j.UNumReduction = Number(1 - u/w.uNum[i])
+	}
+}

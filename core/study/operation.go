@@ -1,0 +1,393 @@
+package study
+
+import (
+	"fmt"
+	"strconv"
+	"strings"
+
+	"weirmark/core/interpolate"
+	"weirmark/core/notice"
+)
+
+// refuse is the error of an operation that was not done.
+func refuse(what, value string) error { return notice.New("operation-refused", what, value) }
+
+// Set enters a value at a target and logs it. The empty value takes the entry
+// back.
+func (s *Study) Set(t Target, value, at, why string) error {
+	before, err := s.enter(t, value)
+	if err != nil {
+		return err
+	}
+	s.log(at, fmt.Sprintf("%s: %s → %s", s.Name(t), shown(before), shown(value)), why, s.revealed(t))
+	return nil
+}
+
+func shown(value string) string {
+	if value == "" {
+		return "(none)"
+	}
+	return value
+}
+
+// Accept accepts the guess at a target and logs it.
+func (s *Study) Accept(t Target, at string) error {
+	f := s.field(t)
+	if f == nil || !f.Given() {
+		return refuse("acceptance of "+s.Name(t), "no guess")
+	}
+	f.By = Accepted
+	s.log(at, fmt.Sprintf("%s: %s accepted", s.Name(t), f.Value), "", s.revealed(t))
+	return nil
+}
+
+// Reveal records that the comparison of a question was looked at.
+func (s *Study) Reveal(id, at string) error {
+	q := s.questionOf(id)
+	if q == nil {
+		return refuse("the showing of a comparison", id)
+	}
+	if !q.Revealed {
+		s.log(at, "Comparison of "+q.label()+" shown", "", false)
+		q.Revealed = true
+	}
+	return nil
+}
+
+// AddSource adds a line to the budget of a question.
+func (s *Study) AddSource(t Target, of, at string) error {
+	q := s.questionOf(t.ID)
+	if q == nil || (of != OfData && of != OfInput && of != OfNumerical) {
+		return refuse("a source of uncertainty", of)
+	}
+	q.Sources = append(q.Sources, Source{Name: "source " + strconv.Itoa(len(q.Sources)+1), Of: of, Basis: Absolute, Pattern: map[string]string{OfData: Common, OfInput: Common, OfNumerical: Independent}[of]})
+	s.log(at, "A source of "+of+" uncertainty of "+q.label()+" added", "", q.Revealed)
+	return nil
+}
+
+// RemoveSource removes a line from the budget of a question.
+func (s *Study) RemoveSource(t Target, at, why string) error {
+	q := s.questionOf(t.ID)
+	i, err := strconv.Atoi(t.Field)
+	if q == nil || err != nil || i < 0 || i >= len(q.Sources) {
+		return refuse("removal of a source", t.Field)
+	}
+	name := q.Sources[i].Name
+	q.Sources = append(q.Sources[:i:i], q.Sources[i+1:]...)
+	s.log(at, "Source "+name+" of "+q.label()+" removed", why, q.Revealed)
+	return nil
+}
+
+// log appends an entry.
+func (s *Study) log(at, what, why string, shown bool) {
+	s.Log = append(s.Log, Entry{Number: len(s.Log) + 1, At: at, What: what, Why: why, Shown: shown})
+}
+
+// Note logs something done by a host, such as undoing an entry.
+func (s *Study) Note(what, at string) { s.log(at, what, "", false) }
+
+// revealed reports whether the comparison a target belongs to was shown.
+func (s *Study) revealed(t Target) bool {
+	if p := s.slip(t.ID); p != nil && t.Kind == "slip" {
+		if q := s.Question(p.Case.Value, p.Quantity.Value); q != nil {
+			return q.Revealed
+		}
+	}
+	if q := s.questionOf(t.ID); q != nil {
+		return q.Revealed
+	}
+	return false
+}
+
+func (s *Study) slip(id string) *Slip {
+	for i := range s.Slips {
+		if s.Slips[i].ID == id {
+			return &s.Slips[i]
+		}
+	}
+	return nil
+}
+
+func (s *Study) questionOf(id string) *Question {
+	for i := range s.Questions {
+		if s.Questions[i].id() == id {
+			return &s.Questions[i]
+		}
+	}
+	return nil
+}
+
+// Name names a target for a reader.
+func (s *Study) Name(t Target) string {
+	switch t.Kind {
+	case "slip":
+		if p := s.slip(t.ID); p != nil {
+			return fieldName(t.Field) + " of " + s.fileName(p)
+		}
+	case "question", "source":
+		if q := s.questionOf(t.ID); q != nil {
+			if i, field, ok := sourceField(t.Field); t.Kind == "source" && ok && i < len(q.Sources) {
+				return field + " of " + q.Sources[i].Name + ", " + q.label()
+			}
+			return fieldName(t.Field) + " of " + q.label()
+		}
+	}
+	return fieldName(t.Field)
+}
+
+var fieldNames = map[string]string{
+	"y.column": "column of values", "y.unit": "unit of values", "x.column": "column of stations", "x.unit": "unit of stations",
+	"u.column": "column of uncertainty", "u.unit": "unit of uncertainty", "u_factor": "coverage", "size.column": "column of cell counts", "cells": "number of cells",
+	"choices.k": "k", "choices.k_num": "k_num", "choices.bounded": "bounded rule", "choices.formal": "formal order", "choices.dimension": "dimension",
+	"choices.interpolation": "interpolation", "choices.u_interp": "interpolation uncertainty", "choices.num_shared": "u_num shared",
+	"requirement.value": "requirement", "requirement.percent": "basis of the requirement", "requirement.who": "who set the requirement", "requirement.date": "date of the requirement",
+	"reference_id": "name of the reference", "prepared.name": "prepared by", "prepared.date": "prepared on", "checked.name": "checked by", "checked.date": "checked on",
+	"approved.name": "approved by", "approved.date": "approved on",
+}
+
+func fieldName(path string) string {
+	if name, ok := fieldNames[path]; ok {
+		return name
+	}
+	return path
+}
+
+// sourceField splits "2.value".
+func sourceField(path string) (int, string, bool) {
+	head, field, found := strings.Cut(path, ".")
+	i, err := strconv.Atoi(head)
+	return i, field, found && err == nil && i >= 0
+}
+
+// field returns the entry with an origin at a target, or nil.
+func (s *Study) field(t Target) *Field {
+	switch t.Kind {
+	case "slip":
+		if p := s.slip(t.ID); p != nil {
+			return p.entry(t.Field)
+		}
+	case "question":
+		if q := s.questionOf(t.ID); q != nil {
+			switch t.Field {
+			case "kind":
+				return &q.Kind
+			case "use":
+				return &q.Use
+			}
+		}
+	case "source":
+		if q := s.questionOf(t.ID); q != nil {
+			if i, field, ok := sourceField(t.Field); ok && i < len(q.Sources) && field == "coverage" {
+				return &q.Sources[i].Coverage
+			}
+		}
+	}
+	return nil
+}
+
+func (p *Slip) entry(path string) *Field {
+	return map[string]*Field{
+		"role": &p.Role, "case": &p.Case, "quantity": &p.Quantity, "model": &p.Model, "grid": &p.Grid, "cells": &p.Cells,
+		"x.column": &p.X.Column, "x.unit": &p.X.Unit, "y.column": &p.Y.Column, "y.unit": &p.Y.Unit,
+		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit,
+	}[path]
+}
+
+// enter changes one entry and returns the text it had.
+func (s *Study) enter(t Target, value string) (string, error) {
+	if f := s.field(t); f != nil {
+		before := f.Value
+		*f = Field{Value: value, By: Entered}
+		if value == "" {
+			f.By = ""
+		}
+		if t.Kind == "slip" {
+			s.askOf(s.slip(t.ID))
+		}
+		return before, nil
+	}
+	if text := s.text(t); text != nil {
+		before := *text
+		*text = value
+		return before, nil
+	}
+	if q := s.questionOf(t.ID); q != nil {
+		switch t.Kind {
+		case "question":
+			return q.enter(t.Field, value)
+		case "source":
+			return q.enterSource(t.Field, value)
+		}
+	}
+	return "", refuse(s.Name(t), value)
+}
+
+// text returns the plain text at a target, or nil.
+func (s *Study) text(t Target) *string {
+	if t.Kind == "study" {
+		return map[string]*string{
+			"title": &s.Title, "purpose": &s.Purpose,
+			"prepared.name": &s.Prepared.Name, "prepared.date": &s.Prepared.Date, "checked.name": &s.Checked.Name, "checked.date": &s.Checked.Date,
+			"approved.name": &s.Approved.Name, "approved.date": &s.Approved.Date,
+		}[t.Field]
+	}
+	q := s.questionOf(t.ID)
+	if q == nil {
+		return nil
+	}
+	if t.Kind == "source" {
+		i, field, ok := sourceField(t.Field)
+		if !ok || i >= len(q.Sources) {
+			return nil
+		}
+		return map[string]*string{"name": &q.Sources[i].Name, "origin": &q.Sources[i].Origin, "model": &q.Sources[i].Model, "column": &q.Sources[i].Column}[field]
+	}
+	if t.Kind == "question" {
+		return map[string]*string{"symbol": &q.Symbol, "condition": &q.Condition, "reference_id": &q.ReferenceID}[t.Field]
+	}
+	return nil
+}
+
+// askOf makes the question a slip belongs to, where there is none.
+func (s *Study) askOf(p *Slip) {
+	if !p.Case.Given() || !p.Quantity.Given() || p.Role.Value == Unused || s.Question(p.Case.Value, p.Quantity.Value) != nil {
+		return
+	}
+	s.Questions = append(s.Questions, Question{Case: p.Case.Value, Quantity: p.Quantity.Value, Sources: []Source{}, Choices: DefaultChoices()})
+}
+
+// enter changes a number or switch of a question.
+func (q *Question) enter(path, value string) (string, error) {
+	if strings.HasPrefix(path, "requirement.") {
+		return q.enterRequirement(strings.TrimPrefix(path, "requirement."), value)
+	}
+	c := &q.Choices
+	switch path {
+	case "choices.k":
+		return number(&c.K, value, 0.1, 10)
+	case "choices.k_num":
+		return number(&c.KNum, value, 0.1, 10)
+	case "choices.formal":
+		return number(&c.Formal, value, 0.5, 10)
+	case "choices.dimension":
+		d := float64(c.Dimension)
+		before, err := number(&d, value, 2, 3)
+		if d != 2 && d != 3 {
+			return before, refuse("dimension", value)
+		}
+		c.Dimension = int(d)
+		return before, err
+	case "choices.bounded":
+		return yesNo(&c.Bounded, value)
+	case "choices.u_interp":
+		return yesNo(&c.UInterp, value)
+	case "choices.num_shared":
+		return yesNo(&c.NumShared, value)
+	case "choices.interpolation":
+		if value != string(interpolate.Linear) && value != string(interpolate.Monotone) {
+			return "", refuse("interpolation", value)
+		}
+		before := string(c.Interpolation)
+		c.Interpolation = interpolate.Method(value)
+		return before, nil
+	case "downward":
+		return yesNo(&q.Downward, value)
+	}
+	return "", refuse(path, value)
+}
+
+func (q *Question) enterRequirement(path, value string) (string, error) {
+	if q.Requirement == nil {
+		q.Requirement = &Requirement{Percent: true, Late: q.Revealed}
+	}
+	r := q.Requirement
+	switch path {
+	case "value":
+		if strings.TrimSpace(value) == "" {
+			before := trim(r.Value)
+			q.Requirement = nil
+			return before, nil
+		}
+		before, err := number(&r.Value, strings.TrimSuffix(strings.TrimPrefix(value, "±"), "%"), 0, 1e30)
+		if err != nil && before == "0" {
+			q.Requirement = nil
+		}
+		if err == nil {
+			r.Late = q.Revealed
+		}
+		return before, err
+	case "percent":
+		return yesNo(&r.Percent, value)
+	case "who":
+		before := r.Who
+		r.Who = value
+		return before, nil
+	case "date":
+		before := r.Date
+		r.Date = value
+		return before, nil
+	}
+	return "", refuse("requirement."+path, value)
+}
+
+func (q *Question) enterSource(path, value string) (string, error) {
+	i, field, ok := sourceField(path)
+	if !ok || i >= len(q.Sources) {
+		return "", refuse(path, value)
+	}
+	s := &q.Sources[i]
+	oneOf := func(text *string, allowed ...string) (string, error) {
+		for _, a := range allowed {
+			if value == a {
+				before := *text
+				*text = value
+				return before, nil
+			}
+		}
+		return "", refuse(field, value)
+	}
+	switch field {
+	case "value":
+		return number(&s.Value, value, 0, 1e30)
+	case "basis":
+		return oneOf(&s.Basis, Absolute, OfReading)
+	case "pattern":
+		return oneOf(&s.Pattern, Independent, Common)
+	case "of":
+		return oneOf(&s.Of, OfData, OfInput, OfNumerical)
+	case "random":
+		return yesNo(&s.Random, value)
+	}
+	return "", refuse(field, value)
+}
+
+// number reads a number between two bounds.
+func number(into *float64, value string, lo, hi float64) (string, error) {
+	before := trim(*into)
+	v, err := strconv.ParseFloat(strings.TrimSpace(value), 64)
+	if err != nil || !(v >= lo && v <= hi) {
+		return before, refuse("a number from "+trim(lo)+" to "+trim(hi), value)
+	}
+	*into = v
+	return before, nil
+}
+
+func yesNo(into *bool, value string) (string, error) {
+	before := word(*into)
+	switch value {
+	case "yes":
+		*into = true
+	case "no":
+		*into = false
+	default:
+		return before, refuse("yes or no", value)
+	}
+	return before, nil
+}
+
+func word(yes bool) string {
+	if yes {
+		return "yes"
+	}
+	return "no"
+}

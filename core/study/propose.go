@@ -1,0 +1,206 @@
+package study
+
+import (
+	"regexp"
+	"strconv"
+	"strings"
+
+	"weirmark/core/quantity"
+	"weirmark/core/tablefile"
+)
+
+// Add takes a file into the study and proposes how its tables may be used.
+// Every proposal is a guess that a person has to accept; what the file itself
+// states, such as a unit in a header, is stated.
+func (s *Study) Add(name string, data []byte, read tablefile.File, at string) []*Slip {
+	id := s.freeID("f", func(id string) bool { return s.File(id) != nil })
+	s.Files = append(s.Files, File{ID: id, Name: name, SHA256: read.SHA256, Data: data})
+	s.log(at, "File "+name+" added", "", false)
+	var added []*Slip
+	for i, t := range read.Tables {
+		ref := ""
+		if len(read.Tables) > 1 {
+			ref = strconv.Itoa(i + 1)
+		}
+		p := propose(name, t)
+		p.ID = s.freeID("s", func(id string) bool { return s.slip(id) != nil })
+		p.File, p.Table = id, ref
+		s.Slips = append(s.Slips, p)
+		added = append(added, &s.Slips[len(s.Slips)-1])
+	}
+	return added
+}
+
+// Remove takes a file and its slips out of the study.
+func (s *Study) Remove(id, at, why string) error {
+	f := s.File(id)
+	if f == nil {
+		return refuse("removal of a file", id)
+	}
+	name := f.Name
+	files, slips := []File{}, []Slip{}
+	for _, f := range s.Files {
+		if f.ID != id {
+			files = append(files, f)
+		}
+	}
+	for _, p := range s.Slips {
+		if p.File != id {
+			slips = append(slips, p)
+		}
+	}
+	s.Files, s.Slips = files, slips
+	s.log(at, "File "+name+" removed", why, false)
+	return nil
+}
+
+// Double adds a second slip for the same table, for a second model or
+// quantity in other columns.
+func (s *Study) Double(id, at string) error {
+	p := s.slip(id)
+	if p == nil {
+		return refuse("a second use of a table", id)
+	}
+	second := *p
+	second.ID = s.freeID("s", func(id string) bool { return s.slip(id) != nil })
+	s.Slips = append(s.Slips, second)
+	s.log(at, "A second use of "+s.fileName(p)+" added", "", false)
+	return nil
+}
+
+func (s *Study) freeID(prefix string, taken func(string) bool) string {
+	for n := 1; ; n++ {
+		if id := prefix + strconv.Itoa(n); !taken(id) {
+			return id
+		}
+	}
+}
+
+var (
+	caseInName  = regexp.MustCompile(`(?:^|[^A-Za-z0-9])(C\d{1,3})(?:[^0-9]|$)`)
+	gridInName  = regexp.MustCompile(`(?:^|[^A-Za-z0-9])((?:G|grid)\d{1,3})(?:[^0-9]|$)`)
+	modelInName = regexp.MustCompile(`(?:^|[_\-. ])([A-Z])(?:[_\-. ]|$)`)
+	measured    = regexp.MustCompile(`(?i)(?:^|[^a-z])(exp|test|meas|measured|measurement|data|tunnel|taps|rig)(?:[^a-z]|$)`)
+	uncertain   = regexp.MustCompile(`(?i)^(u|u[_ ].*|u\(.*|unc.*|err.*|.*error.*|.*uncert.*|sigma.*|std.*|\+/?-.*|±.*)$`)
+	counting    = regexp.MustCompile(`(?i)^(n|cells|n_?cells|cell ?count|grid ?size|points|nodes|elements)$`)
+	spacingName = regexp.MustCompile(`(?i)^(h|\(?1/n\)?.*|sqrt.*|n\^.*|spacing)$`)
+)
+
+func guess(value string) Field {
+	if value == "" {
+		return Field{}
+	}
+	return Field{Value: value, By: Guessed}
+}
+
+// propose guesses the use of one table from its names.
+func propose(file string, t tablefile.Table) Slip {
+	p := Slip{Case: guess(firstMatch(caseInName, file)), Grid: guess(firstMatch(gridInName, file))}
+	if !p.Case.Given() {
+		p.Case = guess("C1")
+	}
+	var size, x, y, u = -1, -1, -1, -1
+	for i, c := range t.Columns {
+		switch {
+		case c.Text != nil && !anyKnown(c.Values):
+		case counting.MatchString(c.Name) && size < 0:
+			size = i
+		case spacingName.MatchString(c.Name):
+		case uncertain.MatchString(c.Name) && y >= 0:
+			if u < 0 {
+				u = i
+			}
+		case x < 0 && size < 0:
+			x = i
+		case y < 0:
+			y = i
+		}
+	}
+	p.Role = guess(role(file, t, size, u))
+	if p.Role.Value == GridValues {
+		p.Size.Column = guess(t.Columns[size].Name)
+		x = -1
+	}
+	if y < 0 && x >= 0 {
+		x, y = -1, x
+	}
+	if y >= 0 {
+		p.Y = columnUse(t.Columns[y])
+		p.Quantity = guess(t.Columns[y].Name)
+	}
+	if x >= 0 {
+		p.X = columnUse(t.Columns[x])
+	}
+	if u >= 0 && p.Role.Value == Reference {
+		p.U = columnUse(t.Columns[u])
+		if !p.U.Unit.Given() {
+			p.U.Unit = p.Y.Unit
+		}
+	}
+	if p.Role.Value != Reference {
+		p.Model = guess(modelOf(file, p))
+	}
+	return p
+}
+
+// modelOf guesses the model from the file's name, else from the name without
+// its ending.
+func modelOf(file string, p Slip) string {
+	if m := firstMatch(modelInName, file); m != "" {
+		return m
+	}
+	name := file
+	if cut := strings.LastIndexByte(name, '.'); cut > 0 {
+		name = name[:cut]
+	}
+	if p.Grid.Given() {
+		name = strings.Trim(strings.Replace(name, p.Grid.Value, "", 1), "._- ")
+	}
+	return name
+}
+
+func role(file string, t tablefile.Table, size, u int) string {
+	switch {
+	case size >= 0 && t.Rows() <= 12:
+		return GridValues
+	case u >= 0 || measured.MatchString(strings.ReplaceAll(file, "_", " ")):
+		return Reference
+	}
+	return Simulation
+}
+
+// columnUse proposes a column; a unit that the file states is stated, one
+// that it does not state is left open.
+func columnUse(c tablefile.Column) ColumnUse {
+	use := ColumnUse{Column: guess(c.Name)}
+	if c.Unit != "" {
+		use.Unit = Field{Value: c.Unit, By: Stated}
+		return use
+	}
+	if pure(c.Name) {
+		use.Unit = Field{Value: "1", By: Guessed}
+	}
+	return use
+}
+
+// pure reports whether a name is that of a pure number by custom, such as
+// x/c, Cp or Cf.
+func pure(name string) bool {
+	if _, err := quantity.Parse(name); err == nil && strings.Contains(name, "/") {
+		return false
+	}
+	lower := strings.ToLower(name)
+	for _, known := range []string{"cp", "cf", "cd", "cl", "cm", "c_p", "c_f", "c_d", "c_l", "c_m", "x/c", "x/h", "y/h", "x/d", "y/d", "x/l", "y/l", "u/u", "y+", "u+"} {
+		if lower == known || strings.HasPrefix(lower, known+"_") || strings.HasPrefix(lower, known+",") || strings.HasPrefix(lower, known+" ") {
+			return true
+		}
+	}
+	return false
+}
+
+func firstMatch(re *regexp.Regexp, text string) string {
+	if m := re.FindStringSubmatch(text); m != nil {
+		return m[1]
+	}
+	return ""
+}

@@ -1,0 +1,197 @@
+package study
+
+import (
+	"math"
+
+	"weirmark/core/interpolate"
+	"weirmark/core/notice"
+	"weirmark/core/quantity"
+	"weirmark/core/station"
+	"weirmark/core/uncertainty"
+)
+
+// Written is a value as a file states it.
+type Written = quantity.Written
+
+// unit is the unit of an axis of the cell; symbol is "" where neither side
+// states one.
+type unit struct {
+	quantity.Unit
+	symbol string
+}
+
+// finest returns the simulation that is compared, or nil.
+func (w *work) finest() *curve {
+	if len(w.runs) > 0 {
+		return w.runs[0].curve
+	}
+	return w.grids
+}
+
+// settleUnits decides the units of the cell and reports whether the two sides
+// can be compared.
+func (w *work) settleUnits() bool {
+	s, d := w.finest(), w.reference
+	lead := d
+	if lead == nil {
+		lead = s
+	}
+	if lead == nil {
+		return false
+	}
+	w.yUnit = axisUnit(lead.yUnit, lead.slip.Y)
+	w.xUnit = axisUnit(lead.xUnit, lead.slip.X)
+	w.cell.Unit, w.cell.XUnit = w.yUnit.symbol, w.xUnit.symbol
+	w.cell.XName, w.cell.Scalar = lead.slip.X.Column.Value, lead.scalar()
+	if s == nil || d == nil {
+		return s != nil // a grid study can be shown without data
+	}
+	if s.scalar() != d.scalar() {
+		n := notice.New("scalar-curve", shape(s), shape(d))
+		w.tell(n)
+		w.stop(2, "a common form of both sides", slipTarget(s.slip, "x.column"), n)
+		return false
+	}
+	ok := w.sameUnits(s.yUnit, d.yUnit, s.slip.Y, d.slip.Y, &w.yUnit, "y.unit")
+	if !s.scalar() {
+		ok = w.sameUnits(s.xUnit, d.xUnit, s.slip.X, d.slip.X, &w.xUnit, "x.unit") && ok
+	}
+	w.cell.Unit, w.cell.XUnit = w.yUnit.symbol, w.xUnit.symbol
+	return ok
+}
+
+func shape(c *curve) string {
+	if c.scalar() {
+		return "one value"
+	}
+	return "a curve"
+}
+
+func axisUnit(a axis, use ColumnUse) unit {
+	if !a.known {
+		return unit{quantity.One, use.Unit.Value}
+	}
+	return unit{a.unit, use.Unit.Value}
+}
+
+// sameUnits settles one axis. Where one side states no unit the other's is
+// taken for both, which the open point of the missing unit says.
+func (w *work) sameUnits(s, d axis, sUse, dUse ColumnUse, u *unit, field string) bool {
+	both, refusal := sameAxis(d, s, dUse.Column.Value, sUse.Column.Value)
+	if refusal != nil {
+		w.tell(*refusal)
+		w.stop(2, "a common unit of "+w.q.Quantity, slipTarget(w.finest().slip, field), *refusal)
+		return false
+	}
+	if !d.known && s.known {
+		*u = unit{both, sUse.Unit.Value}
+	}
+	return true
+}
+
+// inUnit returns the values of one side in SI, reading values without a
+// stated unit in the unit of the cell.
+func inUnit(values []float64, have axis, u unit) []float64 {
+	if have.known {
+		return values
+	}
+	return inSI(values, u.Unit)
+}
+
+// commonStations resamples the finest simulation at the stations of the
+// reference.
+func (w *work) commonStations() {
+	if w.reference == nil {
+		return
+	}
+	if w.reference.scalar() {
+		w.commonScalar()
+		return
+	}
+	r := w.reference
+	rx, ry := inUnit(r.x, r.xUnit, w.xUnit), inUnit(r.y, r.yUnit, w.yUnit)
+	at, rows := make([]float64, 0, len(rx)), make([]int, 0, len(rx))
+	for i, x := range rx {
+		if math.IsNaN(x) || math.IsNaN(ry[i]) {
+			continue
+		}
+		at, rows = append(at, x), append(rows, i)
+	}
+	if missing := len(rx) - len(at); missing > 0 {
+		w.tell(notice.New("station-missing", missing))
+	}
+	w.cell.StationsAll = len(at)
+	got := w.resample(w.finest(), at, w.choices.Interpolation)
+	for _, n := range got.Notices {
+		w.tell(n)
+	}
+	for _, i := range got.Outside {
+		w.cell.Outside = append(w.cell.Outside, Number(w.xUnit.FromSI(at[i])))
+	}
+	n := len(got.Kept)
+	w.rows, w.x, w.d = make([]int, n), make([]float64, n), make([]float64, n)
+	for j, i := range got.Kept {
+		w.rows[j], w.x[j], w.d[j] = rows[i], at[i], ry[rows[i]]
+	}
+	w.s, w.uInterp = got.S, got.UInterp
+	if n == 0 {
+		w.need(2, true, "a common station", slipTarget(w.finest().slip, "x.unit"), "station-common", w.q.label())
+	}
+}
+
+// resample answers stations, in SI, from one simulation.
+func (w *work) resample(c *curve, at []float64, method interpolate.Method) station.Resampled {
+	x, y := inUnit(c.x, c.xUnit, w.xUnit), inUnit(c.y, c.yUnit, w.yUnit)
+	return station.Resample(w.e.study.fileName(c.slip), c.slip.X.Column.Value, x, y, at, station.Options{Method: method})
+}
+
+// commonScalar compares one value with one value. Several rows of the
+// reference are repeated readings, whose mean is compared.
+func (w *work) commonScalar() {
+	readings := known(inUnit(w.reference.y, w.reference.yUnit, w.yUnit))
+	w.cell.StationsAll = 1
+	s, ok := w.scalarOf(w.finest())
+	if len(readings) == 0 || !ok {
+		return
+	}
+	mean, _, _ := uncertainty.Replicates(readings)
+	w.rows, w.x, w.d, w.s = []int{0}, []float64{math.NaN()}, []float64{mean}, []float64{s}
+	w.uInterp = []float64{0}
+}
+
+// scalarOf returns the one value of a simulation, in SI: of the finest grid
+// where it is a table over grids.
+func (w *work) scalarOf(c *curve) (float64, bool) {
+	values := inUnit(c.y, c.yUnit, w.yUnit)
+	if c == w.grids && len(w.runs) == 0 {
+		best := -1
+		for i, n := range w.sizes {
+			if !math.IsNaN(n) && !math.IsNaN(values[i]) && (best < 0 || n > w.sizes[best]) {
+				best = i
+			}
+		}
+		if best < 0 {
+			return 0, false
+		}
+		return values[best], true
+	}
+	all := known(values)
+	if len(all) != 1 {
+		n := notice.New("scalar-rows", w.e.study.fileName(c.slip), len(all))
+		w.tell(n)
+		w.stop(2, "one value of the simulation", slipTarget(c.slip, "x.column"), n)
+		return 0, false
+	}
+	return all[0], true
+}
+
+// known returns the values that are numbers.
+func known(values []float64) []float64 {
+	all := make([]float64, 0, len(values))
+	for _, v := range values {
+		if !math.IsNaN(v) {
+			all = append(all, v)
+		}
+	}
+	return all
+}

@@ -1,0 +1,12 @@
+// Command browser is what the page's worker runs: the core behind one function.
+package main
+
+import (
+	"weirmark/core/message"
+	"weirmark/wasm/bridge"
+)
+
+func main() {
+	session := &message.Session{}
+	bridge.Serve(session.Handle)
+}

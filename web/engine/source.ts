@@ -1,0 +1,70 @@
+// Where the page finds the core and the worker's program: in text blocks of the
+// page itself, or for the core, where the page is served in parts, at an address
+// that its block names.
+
+function block(id: string): HTMLElement {
+  const element = document.getElementById(id);
+  if (element === null) {
+    throw new Error(`the page has no block "${id}"`);
+  }
+  return element;
+}
+
+/** The program of the worker. */
+export function workerSource(): string {
+  return block("worker").textContent ?? "";
+}
+
+/** The core, compiled. */
+export async function compiledCore(): Promise<WebAssembly.Module> {
+  const element = block("core");
+  const address = element.dataset["address"];
+  const response = address === undefined ? unpack(element.textContent ?? "") : await fetch(address);
+  // The text has been decoded and is only a weight from here on.
+  element.textContent = "";
+  if (!response.ok) {
+    throw new Error(`the core could not be had: ${response.status} ${response.statusText}`);
+  }
+  if (response.headers.get("Content-Type") === "application/wasm") {
+    return WebAssembly.compileStreaming(response);
+  }
+  return WebAssembly.compile(await response.arrayBuffer());
+}
+
+/** Decodes base64 of gzip; no fetch, which the single page's policy forbids. */
+function unpack(text: string): Response {
+  const packed = new Blob([fromBase64(text)]);
+  return new Response(packed.stream().pipeThrough(new DecompressionStream("gzip")), {
+    headers: { "Content-Type": "application/wasm" },
+  });
+}
+
+type Decoder = { fromBase64?: (text: string) => Uint8Array<ArrayBuffer> };
+
+/** Decodes base64 without line breaks; text must have its padding. */
+export function fromBase64(text: string, decoder: Decoder = Uint8Array as Decoder): Uint8Array<ArrayBuffer> {
+  return decoder.fromBase64 === undefined ? fromBase64ByTable(text) : decoder.fromBase64(text);
+}
+
+const alphabet = "ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz0123456789+/";
+
+function fromBase64ByTable(text: string): Uint8Array<ArrayBuffer> {
+  const value = new Uint8Array(128);
+  for (let i = 0; i < alphabet.length; i++) {
+    value[alphabet.charCodeAt(i)] = i;
+  }
+  const padding = text.endsWith("==") ? 2 : text.endsWith("=") ? 1 : 0;
+  const bytes = new Uint8Array((text.length / 4) * 3 - padding);
+  for (let from = 0, to = 0; from < text.length; from += 4) {
+    // The mark of padding has the value 0, and a byte beyond the end is not kept.
+    const group =
+      (value[text.charCodeAt(from)]! << 18) |
+      (value[text.charCodeAt(from + 1)]! << 12) |
+      (value[text.charCodeAt(from + 2)]! << 6) |
+      value[text.charCodeAt(from + 3)]!;
+    bytes[to++] = group >> 16;
+    bytes[to++] = group >> 8;
+    bytes[to++] = group;
+  }
+  return bytes;
+}
