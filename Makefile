@@ -1,6 +1,6 @@
 # Every target is one question; the comment above it asks it.
 .DEFAULT_GOAL := help
-.PHONY: help tools setup build run test reference bench clean
+.PHONY: help tools setup build page edge run test reference bench clean
 
 # One set of floating-point bits on every host: no assembly in the numeric libraries.
 GO_BUILD := go build -tags noasm -trimpath
@@ -28,10 +28,20 @@ build: setup
 	go run ./web/build figures
 	$(GO_BUILD) -o dist/weirmark ./core/cmd/weirmark
 
+# Where is the page? (dist/weirmark.html in one file, dist/site in parts)
+page: setup
+	go run ./web/build page
+
+# Does the edge service answer on this machine? (until Ctrl-C)
+edge: page
+	go run ./web/build edge
+
 # What does it say about the demo campaign, or about my study (make run STUDY=file)?
 # (Status 2 says that evidence is incomplete: an answer, not a fault.)
-run: build
+# (Then the page is served on this machine until Ctrl-C; SERVE=0 leaves that out.)
+run: build page
 	$(if $(STUDY),dist/weirmark run $(STUDY) --out dist/study,dist/weirmark demo dist/demo) || test $$? -eq 2
+	$(if $(filter 0,$(SERVE)),,go run ./web/build serve)
 
 # Does everything hold?
 test: build

@@ -93,6 +93,7 @@ type series struct {
 	Encode      *encode           `json:"encode,omitempty"`
 	Symbol      string            `json:"symbol,omitempty"`
 	SymbolSize  float64           `json:"symbolSize,omitempty"`
+	KeepAspect  bool              `json:"symbolKeepAspect,omitempty"`
 	LineStyle   *lineStyle        `json:"lineStyle,omitempty"`
 	ItemStyle   *opts.ItemStyle   `json:"itemStyle,omitempty"`
 	Label       *label            `json:"label,omitempty"`
@@ -196,6 +197,7 @@ func (p *picture) axis(s scale, n int) axis {
 // draw adds marks to panel n, in the order of painting.
 func (p *picture) draw(n, z int, s series) {
 	s.XAxisIndex, s.YAxisIndex, s.Z = n, n, z
+	s.KeepAspect = s.Type == "scatter"
 	p.Series = append(p.Series, s)
 }
 

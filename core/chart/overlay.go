@@ -68,19 +68,19 @@ func overlay(cells []study.Cell, id string, t Theme) (Figure, error) {
 	upper := v.upperKeys()
 	top := topEdge + keyRow*v.keys(v.left, topEdge, upper) + nameRow
 	v.upper(v.add(panel{
-		left: v.left, right: rightEdge, top: top, height: mainHeight, x: v.x, y: v.main, bare: true,
-		yName: v.mainName(), inverse: first.Downward,
+		left: v.left, right: rightEdge, top: top, height: mainHeight, x: v.x, y: v.main, bare: v.striped(),
+		yName: v.mainName(), xName: v.footName(!v.striped()), inverse: first.Downward,
 	}))
 	top += mainHeight
 	for i, c := range v.cells {
+		if !v.striped() {
+			break
+		}
 		name := "E = S − D (" + unitText(c.Unit, v.strip.Exponent) + ")"
 		last := i == len(v.cells)-1
 		frame := panel{
 			left: v.left, right: rightEdge, top: top + nameRow + 10, height: stripHeight, x: v.x, y: v.strip,
-			yName: name, inverse: first.Downward, bare: !last,
-		}
-		if last {
-			frame.xName = axisName(first.XName, "", first.XUnit, v.x.Exponent)
+			yName: name, xName: v.footName(last), inverse: first.Downward, bare: !last,
 		}
 		v.stripOf(v.add(frame), i)
 		if keys := v.stripKeys(i); len(keys) > 0 {
@@ -92,6 +92,22 @@ func overlay(cells []study.Cell, id string, t Theme) (Figure, error) {
 		ID: id, Title: v.title(), Caption: v.caption(cells), Alt: v.alt(cells),
 		Height: top + footRow, Table: v.table(),
 	}.finish(v.option)
+}
+
+// striped reports whether there is anything to show below the curves.
+func (v *curves) striped() bool {
+	return slices.ContainsFunc(v.cells, func(c study.Cell) bool {
+		return slices.ContainsFunc(c.Stations, func(s study.Station) bool { return s.E.Known() })
+	})
+}
+
+// footName is the name of the x axis for the lowest panel, and "" for others.
+func (v *curves) footName(lowest bool) string {
+	if !lowest {
+		return ""
+	}
+	c := v.cells[0]
+	return axisName(c.XName, "", c.XUnit, v.x.Exponent)
 }
 
 // Room around the panels and keys in px.
@@ -346,7 +362,7 @@ func (v *curves) upper(n int) {
 		v.draw(n, 5, series{Type: "scatter", Name: v.dataName(), Symbol: disc, SymbolSize: size, ItemStyle: filled(v.ink), Data: solid})
 	}
 	if len(bars) > 0 {
-		v.draw(n, 4, v.bars(v.dataName(), bars, size/2))
+		v.draw(n, 4, v.bars(v.dataName(), bars))
 	}
 	if len(hollow) > 0 {
 		v.draw(n, 5, series{Type: "scatter", Name: hollowName, Symbol: disc, SymbolSize: size, ItemStyle: v.hollow(v.ink), Data: hollow})
@@ -375,10 +391,15 @@ func markSize(n int) float64 {
 	return 6
 }
 
-// bars returns vertical bars of rows x, low end, high end.
-func (p *picture) bars(name string, rows [][]any, half float64) series {
+// bars returns vertical bars of rows x, low end, high end. Where they stand
+// close they are thin and have no end strokes.
+func (p *picture) bars(name string, rows [][]any) series {
+	thick, end := 1.0, 3.0
+	if len(rows) > 80 {
+		thick, end = 0.6, 0
+	}
 	return series{
-		Type: "custom", Name: name, RenderItem: "errorBar", Thick: 1, Cap: min(half, 3), Silent: true,
+		Type: "custom", Name: name, RenderItem: "errorBar", Thick: thick, Cap: end, Silent: true,
 		Encode: &encode{X: []int{0}, Y: []int{1, 2}}, ItemStyle: filled(p.ink), Data: rows,
 	}
 }
@@ -524,7 +545,9 @@ func (v *curves) caption(cells []study.Cell) string {
 		}
 		sentences = append(sentences, who+counted(cell)+".")
 	}
-	if v.barred() {
+	if len(v.data) == 0 {
+		sentences = append(sentences, "No value of the reference is drawn.")
+	} else if v.barred() {
 		sentences = append(sentences, "Bars are D ± "+times(v.k, "u_D")+" (k = "+factor(v.k)+").")
 	} else {
 		sentences = append(sentences, "D has no bars: u_D is not known.")
@@ -536,7 +559,10 @@ func (v *curves) caption(cells []study.Cell) string {
 	default:
 		sentences = append(sentences, "S has no band: u_num along it is not known.")
 	}
-	sentences = append(sentences, v.stripCaption(), units(c))
+	if v.striped() {
+		sentences = append(sentences, v.stripCaption())
+	}
+	sentences = append(sentences, units(c))
 	if note := v.thinned(cells); note != "" {
 		sentences = append(sentences, note)
 	}

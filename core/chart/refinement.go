@@ -217,7 +217,7 @@ func (p *picture) familyMarks(n int, g *study.Grids, finest study.GridPoint, kno
 		})
 	}
 	if known && g.U.Known() {
-		bar := p.bars(gridBarName, [][]any{{finest.H, finest.Value - g.U, finest.Value + g.U}}, 4)
+		bar := p.bars(gridBarName, [][]any{{finest.H, finest.Value - g.U, finest.Value + g.U}})
 		bar.ItemStyle = filled(p.models[0])
 		p.draw(n, 4, bar)
 	}
@@ -267,7 +267,7 @@ func (p *picture) margin(c study.Cell, d, u float64, top int, ys scale) {
 	x := quantity.Number(0.5)
 	p.draw(n, 5, series{Type: "scatter", Name: marginName(c), Symbol: disc, SymbolSize: 7, ItemStyle: filled(p.ink), Data: [][]any{{x, c.Stations[0].D}}})
 	if wide := quantity.Number(float64(c.Choices.K * u)); wide.Known() {
-		p.draw(n, 4, p.bars(marginName(c), [][]any{{x, quantity.Number(d) - wide, quantity.Number(d) + wide}}, 3))
+		p.draw(n, 4, p.bars(marginName(c), [][]any{{x, quantity.Number(d) - wide, quantity.Number(d) + wide}}))
 	}
 }
 

@@ -15,6 +15,9 @@ type (
 	file   = quantity.Written
 )
 
+// rounded leaves no digits in which hosts differ.
+func rounded(v float64) float64 { return math.Round(1e7*v) / 1e7 }
+
 // taps is a pressure coefficient at 24 stations, negative values upward.
 func taps(model string, shift float64) study.Cell {
 	shape := func(t float64) float64 { return 0.55 - 1.9*math.Exp(-6*(t-0.2)*(t-0.2)) - 0.5*(1-t) }
@@ -36,8 +39,8 @@ func taps(model string, shift float64) study.Cell {
 	}
 	for i := range 121 {
 		t := float64(i) / 120
-		c.Curve.X = append(c.Curve.X, file(t))
-		c.Curve.Y = append(c.Curve.Y, file(shape(t)+shift+0.018*math.Sin(9*t)))
+		c.Curve.X = append(c.Curve.X, file(rounded(t)))
+		c.Curve.Y = append(c.Curve.Y, file(rounded(shape(t)+shift+0.018*math.Sin(9*t))))
 		c.Curve.UNum = append(c.Curve.UNum, number(0.004+0.02*math.Exp(-60*(t-0.2)*(t-0.2))))
 	}
 	return c
@@ -74,8 +77,8 @@ func friction() study.Cell {
 	}
 	for i := range 200 {
 		x := -40 + 60.8*float64(i)/199
-		c.Curve.X = append(c.Curve.X, file(x))
-		c.Curve.Y = append(c.Curve.Y, file(shape(x)+0.0003*math.Sin(x)+0.0003*math.Exp(-(x-5.5)*(x-5.5))))
+		c.Curve.X = append(c.Curve.X, file(rounded(x)))
+		c.Curve.Y = append(c.Curve.Y, file(rounded(shape(x)+0.0003*math.Sin(x)+0.0003*math.Exp(-(x-5.5)*(x-5.5)))))
 	}
 	c.Grids = &study.Grids{
 		Along: true, Points: make([]study.GridPoint, 3), Dimension: 2, Formal: 2, Order: 1.87, Monotone: 25, NonMonotone: 6,

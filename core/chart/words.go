@@ -195,17 +195,20 @@ func setting(c study.Cell) string {
 
 // units returns the sentence of a caption that names the units.
 func units(c study.Cell) string {
-	value := "Values are dimensionless"
-	if c.Unit != "" && c.Unit != "1" {
-		value = "Values are in " + c.Unit
+	in := func(unit string) string {
+		if unit == "" || unit == "1" {
+			return "dimensionless"
+		}
+		return "in " + unit
 	}
-	switch {
+	switch value, x := in(c.Unit), in(c.XUnit); {
 	case c.Scalar || c.XName == "":
-		return value + "."
-	case c.XUnit == "" || c.XUnit == "1":
-		return value + ", " + c.XName + " is dimensionless."
+		return "Values are " + value + "."
+	case value == x:
+		return "Values and " + c.XName + " are " + value + "."
+	default:
+		return "Values are " + value + ", " + c.XName + " is " + x + "."
 	}
-	return value + ", " + c.XName + " is in " + c.XUnit + "."
 }
 
 // capital returns a text with its first letter in upper case.

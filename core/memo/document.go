@@ -68,7 +68,15 @@ func (b *builder) table(role string, caption []Node, head Node, rows ...Node) No
 	b.tables++
 	label := strong(fmt.Sprintf("Table %d. ", b.tables))
 	nodes := []Node{block(Caption, "", append([]Node{label}, caption...)...), head}
-	return block(Table, role, append(nodes, rows...)...)
+	return block(Table, whole(role, len(rows)), append(nodes, rows...)...)
+}
+
+// whole marks a short table: it is not parted between pages.
+func whole(role string, rows int) string {
+	if rows <= 12 {
+		return role + " whole"
+	}
+	return role
 }
 
 // sheet returns a table of names and values without caption or number.

@@ -158,7 +158,7 @@ func TestStationTables(t *testing.T) {
 	tables := func(in Input, id string) []*element {
 		var found []*element
 		for _, e := range parse(t, HTML(Document(in))).byID(id).all("table") {
-			if e.attr["class"] == "stations" {
+			if strings.HasPrefix(e.attr["class"], "stations") {
 				found = append(found, e)
 			}
 		}

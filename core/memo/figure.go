@@ -47,7 +47,7 @@ func (b *builder) dataOf(f Figure, id string) Node {
 		head.Nodes = append(head.Nodes, block(Head, "", text(h)))
 	}
 	at := spread(len(f.Rows), rowLimit)
-	table := block(Table, "data", block(Caption, "", strong(fmt.Sprintf("Data of figure %d. ", b.figures)), text(f.Title)), head)
+	table := block(Table, whole("data", len(at)), block(Caption, "", strong(fmt.Sprintf("Data of figure %d. ", b.figures)), text(f.Title)), head)
 	for _, n := range at {
 		r := block(Row, "")
 		for _, value := range f.Rows[n] {

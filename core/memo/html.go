@@ -5,6 +5,7 @@ import (
 	"encoding/xml"
 	"fmt"
 	"strings"
+	"unicode"
 )
 
 //go:embed memo.css
@@ -44,7 +45,7 @@ func (w *htmlWriter) in(element, class string, n Node, after string) {
 	if n.ID != "" {
 		w.raw(` id="` + escape(n.ID) + `"`)
 	}
-	w.raw(">" + escape(n.Text))
+	w.raw(">" + breakable(n.Text))
 	w.nodes(n.Nodes)
 	w.raw("</" + element + ">" + after)
 }
@@ -69,7 +70,7 @@ func (w *htmlWriter) node(n Node) {
 	case Picture:
 		w.picture(n)
 	case Text:
-		w.raw(escape(n.Text))
+		w.raw(breakable(n.Text))
 	case Number:
 		w.raw(`<data value="` + escape(n.Value) + `" data-field="` + escape(n.Field) + `">` + escape(n.Text) + "</data>")
 	case Mark:
@@ -85,7 +86,7 @@ func (w *htmlWriter) node(n Node) {
 	case Code:
 		w.in("code", "", n, "")
 	case Link:
-		w.raw(`<a href="#` + escape(n.ID) + `">` + escape(n.Text) + "</a>")
+		w.raw(`<a href="#` + escape(n.ID) + `">` + breakable(n.Text) + "</a>")
 	default:
 		panic("memo: no HTML for a node of kind " + string(n.Kind))
 	}
@@ -152,6 +153,44 @@ func (w *htmlWriter) picture(n Node) {
 		w.in("figcaption", "", c, "")
 	}
 	w.raw("</figure>\n")
+}
+
+// longWord is the number of characters from which a word may be parted.
+const longWord = 24
+
+// breakable is escape for running text: words too long for a narrow column get
+// places where the line may break.
+func breakable(s string) string {
+	if len(s) <= longWord {
+		return escape(s)
+	}
+	var out strings.Builder
+	start, run := 0, 0 // of the piece not yet written; length of the word so far
+	for i, r := range s {
+		switch {
+		case unicode.IsSpace(r):
+			run = 0
+			continue
+		case run > 0 && run%(longWord/2) == 0 && wordLength(s[i:])+run > longWord:
+			out.WriteString(escape(s[start:i]) + "<wbr/>")
+			start = i
+		}
+		run++
+	}
+	return out.String() + escape(s[start:])
+}
+
+// wordLength returns the number of characters before the first space, counted
+// no further than needed.
+func wordLength(s string) int {
+	n := 0
+	for _, r := range s {
+		if unicode.IsSpace(r) || n > longWord {
+			return n
+		}
+		n++
+	}
+	return n
 }
 
 // escape makes any text safe between tags and in quoted attributes. Controls

@@ -266,6 +266,19 @@ func TestTextsOfUsersAreEscaped(t *testing.T) {
 	}
 }
 
+func TestLongWordsMayBreak(t *testing.T) {
+	for _, row := range []struct{ in, want string }{
+		{"short words only, but a long text of them", "short words only, but a long text of them"},
+		{"abcdefghijklmnopqrstuvwx", "abcdefghijklmnopqrstuvwx"},
+		{"x abcdefghijklmnopqrstuvwxy", "x abcdefghijkl<wbr/>mnopqrstuvwx<wbr/>y"},
+		{"<<<<<<<<<<<<<<<<<<<<<<<<<<", strings.Repeat("&lt;", 12) + "<wbr/>" + strings.Repeat("&lt;", 12) + "<wbr/>&lt;&lt;"},
+	} {
+		if got := breakable(row.in); got != row.want {
+			t.Errorf("breakable(%q) = %q, want %q", row.in, got, row.want)
+		}
+	}
+}
+
 func TestPageIsSelfContained(t *testing.T) {
 	page := string(HTML(Document(sample())))
 	for _, outside := range []string{"<script", "<link", "<img", "<iframe", "src=", "@import", "http-equiv=\"refresh\""} {

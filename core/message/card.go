@@ -29,8 +29,10 @@ func (s *Session) slipCards() []SlipCard {
 		}
 		card.Read = readWords(t)
 		card.Entries = slipEntries(p, t)
-		for _, e := range card.Entries {
-			if e.By == study.Guessed || e.Value == "" && needed(p, e.Target.Field) {
+		for i := range card.Entries {
+			e := &card.Entries[i]
+			e.Open = e.By == study.Guessed || e.Value == "" && needed(p, e.Target.Field)
+			if e.Open {
 				card.Open++
 			}
 		}
@@ -269,7 +271,8 @@ func patternWords(pattern string) string {
 
 func sourceEntries(q *study.Question, i int, s study.Source) []Entry {
 	entry := func(field, label, value string, by study.Certainty, options []Option, hint string) Entry {
-		return Entry{Target: study.Target{Kind: "source", ID: questionID(q), Field: strconv.Itoa(i) + "." + field}, Label: label, Value: value, By: by, Options: options, Hint: hint}
+		open := by == study.Guessed || field == "coverage" && value == ""
+		return Entry{Target: study.Target{Kind: "source", ID: questionID(q), Field: strconv.Itoa(i) + "." + field}, Label: label, Value: value, By: by, Options: options, Hint: hint, Open: open}
 	}
 	random := "no"
 	if s.Random {
@@ -315,7 +318,8 @@ func choices(q *study.Question) []Entry {
 // questionEntries are the requirement and what is known of the reference.
 func questionEntries(q *study.Question) []Entry {
 	entry := func(field, label, value string, by study.Certainty, options []Option, hint string) Entry {
-		return Entry{Target: study.Target{Kind: "question", ID: questionID(q), Field: field}, Label: label, Value: value, By: by, Options: options, Hint: hint}
+		open := by == study.Guessed || value == "" && (field == "kind" || field == "use")
+		return Entry{Target: study.Target{Kind: "question", ID: questionID(q), Field: field}, Label: label, Value: value, By: by, Options: options, Hint: hint, Open: open}
 	}
 	value, percent, who, date := "", "yes", "", ""
 	if r := q.Requirement; r != nil {

@@ -67,11 +67,7 @@ func notes(c *study.Cell, course int, doubts []study.Open) []string {
 			continue
 		}
 		told[n.Text] = true
-		text := n.Text
-		if place := n.Place(); place != "" {
-			text = place + ": " + text
-		}
-		list = append(list, text)
+		list = append(list, n.Error())
 	}
 	return list
 }

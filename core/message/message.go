@@ -99,7 +99,7 @@ var handlers map[string]handler
 func init() {
 	handlers = map[string]handler{
 		"about": about, "read": readFile, "grids": grids, "compare": compare,
-		"demo": demo, "new": blank, "open": open, "drop": drop, "save": save,
+		"demo": demo, "new": blank, "open": open, "drop": drop, "save": save, "copy": copyStudy,
 		"set": set, "accept": accept, "reveal": reveal, "select": choose,
 		"add source": addSource, "remove source": removeSource, "remove file": removeFile, "double": double,
 		"undo": undo, "redo": redo, "view": view, "results": results, "memo": writeMemo, "stations": writeStations,

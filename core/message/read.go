@@ -48,8 +48,11 @@ func readFile(_ *Session, q *Request, attached [][]byte, r *Reply) ([][]byte, er
 		reply.Tables = append(reply.Tables, table)
 	}
 	r.Read = reply
-	if f.Refused() {
+	switch {
+	case f.Refused():
 		r.Status = Refused
+	case notice.Any(f.Notices, notice.Stop):
+		r.Status = Incomplete // a part of the file could not be read
 	}
 	return nil, nil
 }

@@ -89,7 +89,7 @@ func statements(report *study.Report) []CellStatement {
 func figuresOf(report *study.Report, theme chart.Theme) ([]CellFigure, error) {
 	list := []CellFigure{}
 	for i := 0; i < len(report.Cells); {
-		last := i
+		last, shared := i, false
 		for last < len(report.Cells) && sameQuestion(&report.Cells[i], &report.Cells[last]) {
 			last++
 		}
@@ -100,6 +100,7 @@ func figuresOf(report *study.Report, theme chart.Theme) ([]CellFigure, error) {
 				return nil, err
 			}
 			list = append(list, CellFigure{group[0].Case, group[0].Quantity, "", f})
+			shared = group[0].Scalar // one picture of intervals holds all models
 		}
 		for j := i; j < last; j++ {
 			c := &report.Cells[j]
@@ -108,6 +109,9 @@ func figuresOf(report *study.Report, theme chart.Theme) ([]CellFigure, error) {
 				return nil, err
 			}
 			for _, f := range figures {
+				if shared && !isGridFigure(f) {
+					continue
+				}
 				list = append(list, CellFigure{c.Case, c.Quantity, c.Model, f})
 			}
 		}

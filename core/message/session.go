@@ -185,6 +185,15 @@ func save(s *Session, _ *Request, _ [][]byte, r *Reply) ([][]byte, error) {
 	return [][]byte{data}, nil
 }
 
+// copyStudy returns the study document for the host's own use, such as a new
+// start; the study does not count as saved by it.
+func copyStudy(s *Session, q *Request, attached [][]byte, r *Reply) ([][]byte, error) {
+	saved := s.saved
+	files, err := save(s, q, attached, r)
+	s.saved = saved
+	return files, err
+}
+
 // fileName makes the name of a file to save from a title.
 func fileName(title, ending string) string {
 	name := []rune{}

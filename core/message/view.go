@@ -106,6 +106,7 @@ type Entry struct {
 	By      study.Certainty `json:"by"`
 	Options []Option        `json:"options"` // empty: free text
 	Hint    string          `json:"hint"`
+	Open    bool            `json:"open"` // a guess to accept or a gap to fill
 }
 
 // SlipCard says what was read of one table and how it is used.

@@ -430,16 +430,19 @@ func (w *writer) changes() {
 	if len(w.cell.Fragile) == 0 {
 		return
 	}
-	var texts []string
-	for _, f := range w.cell.Fragile {
-		text := f.Change + " (" + f.What + ": " + f.Outcome
-		if f.Detail != "" {
-			text += ", " + f.Detail
-		}
-		texts = append(texts, text+")")
-	}
 	w.say("Changes if: ")
-	w.mark(strings.Join(texts, "; "), study.FigureOf, w.result("fragility"))
+	for i, f := range w.cell.Fragile {
+		if i > 0 {
+			w.say("; ")
+		}
+		w.number(f.Change, "fragility")
+		w.say(" (" + f.What + " → ")
+		w.mark(f.Outcome, study.WordOf, w.result("fragility"))
+		if f.Detail != "" {
+			w.say(", " + f.Detail)
+		}
+		w.say(")")
+	}
 	w.say(". ")
 }
 

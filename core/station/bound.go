@@ -50,19 +50,26 @@ func linearBound(bound, x, y, at []float64) {
 		return
 	}
 	i := -1
-	var left, right, curvature float64 // |f''| at both ends of interval i, and the larger
+	var right, curvature float64 // |f''| at the upper end of interval i, and the larger of both ends
+	var ahead float64            // slope of interval i+1
 	for j, t := range at {
 		k := max(i, 0)
 		for x[k+1] < t {
 			k++
 		}
 		if k != i {
-			if k == i+1 && i >= 0 {
-				left = right
-			} else {
+			left := right
+			if i < 0 || k != i+1 {
 				left = secondAt(x, y, k)
+				ahead = (y[k+1] - y[k]) / (x[k+1] - x[k])
 			}
-			right = secondAt(x, y, k+1)
+			if k+2 < len(x) {
+				next := (y[k+2] - y[k+1]) / (x[k+2] - x[k+1])
+				right = 2 * math.Abs(next-ahead) / (x[k+2] - x[k])
+				ahead = next
+			} else {
+				right = secondAt(x, y, k+1)
+			}
 			i, curvature = k, max(left, right)
 		}
 		bound[j] = margin / 2 * float64(t-x[i]) * float64(x[i+1]-t) * curvature

@@ -47,6 +47,9 @@ func Evaluate(s *Study, options Options) Report {
 	e.readFiles(&r)
 	for i := range s.Questions {
 		q := &s.Questions[i]
+		if !s.asked(q) {
+			continue // its tables are gone or belong to another question now
+		}
 		for _, model := range s.models(q) {
 			r.Cells = append(r.Cells, e.cell(q, model))
 		}

@@ -197,11 +197,17 @@ func (p *Slip) entry(path string) *Field {
 func (s *Study) enter(t Target, value string) (string, error) {
 	if f := s.field(t); f != nil {
 		before := f.Value
+		var left *Question
+		if t.Kind == "slip" {
+			p := s.slip(t.ID)
+			left = s.Question(p.Case.Value, p.Quantity.Value)
+		}
 		*f = Field{Value: value, By: Entered}
 		if value == "" {
 			f.By = ""
 		}
 		if t.Kind == "slip" {
+			s.follow(left, s.slip(t.ID))
 			s.askOf(s.slip(t.ID))
 		}
 		return before, nil
@@ -254,6 +260,25 @@ func (s *Study) askOf(p *Slip) {
 		return
 	}
 	s.Questions = append(s.Questions, Question{Case: p.Case.Value, Quantity: p.Quantity.Value, Sources: []Source{}, Choices: DefaultChoices()})
+}
+
+// follow lets a question take the new name when the last slip that belonged
+// to it has got one, so that its requirement and sources are not left behind.
+func (s *Study) follow(q *Question, p *Slip) {
+	if q == nil || s.asked(q) || !p.Case.Given() || !p.Quantity.Given() || s.Question(p.Case.Value, p.Quantity.Value) != nil {
+		return
+	}
+	q.Case, q.Quantity = p.Case.Value, p.Quantity.Value
+}
+
+// asked reports whether any slip in use belongs to a question.
+func (s *Study) asked(q *Question) bool {
+	for i := range s.Slips {
+		if q.belongs(&s.Slips[i], Simulation, GridValues, Reference) {
+			return true
+		}
+	}
+	return false
 }
 
 // enter changes a number or switch of a question.

@@ -26,6 +26,7 @@ func (s *Study) Add(name string, data []byte, read tablefile.File, at string) []
 		p.ID = s.freeID("s", func(id string) bool { return s.slip(id) != nil })
 		p.File, p.Table = id, ref
 		s.Slips = append(s.Slips, p)
+		s.askOf(&p)
 		added = append(added, &s.Slips[len(s.Slips)-1])
 	}
 	return added

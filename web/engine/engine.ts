@@ -4,6 +4,10 @@
 
 import { openHost, type Host } from "./host";
 import { compiledCore, workerSource } from "./source";
+import type * as message from "./types";
+
+/** A request without the fields that the engine fills in. */
+export type Request = Omit<message.Request, "protocol" | "number">;
 
 /** Version of the shape of requests; core/message holds the same number. */
 const protocol = 1;
@@ -26,7 +30,7 @@ export interface Change {
   message: string;
 }
 
-export interface Reply<R extends object> {
+export interface Reply<R extends object = message.Reply> {
   reply: R;
   files: Uint8Array<ArrayBuffer>[];
 }
@@ -44,12 +48,12 @@ export class Interrupted extends Error {
 
 export interface Options {
   /** The request that opens a remembered study in a new core. */
-  reopen(study: Uint8Array<ArrayBuffer>): { request: object; files: Uint8Array<ArrayBuffer>[] };
+  reopen(study: Uint8Array<ArrayBuffer>): { request: Request; files: Uint8Array<ArrayBuffer>[] };
 }
 
 interface Waiting {
   number: number;
-  request: object;
+  request: Request;
   files: Uint8Array<ArrayBuffer>[];
   resolve(reply: Reply<never>): void;
   reject(cause: Error): void;
@@ -96,7 +100,7 @@ export class Engine {
    * Asks the core. The files are given away: their bytes move to the worker.
    * Rejects with Interrupted where no reply will come.
    */
-  ask<R extends object>(request: object, files: Uint8Array<ArrayBuffer>[] = []): Promise<Reply<R>> {
+  ask<R extends object = message.Reply>(request: Request, files: Uint8Array<ArrayBuffer>[] = []): Promise<Reply<R>> {
     if (this.#change.state === "stopped") {
       return Promise.reject(new Interrupted(this.#change.message));
     }

@@ -56,13 +56,19 @@ function withMarks(series: Series): Series {
   return { ...series, renderItem: marks[name](series) };
 }
 
+// still is asked of the renderer itself: its style rules for the pointer and for
+// movement have names that count on from figure to figure, and only there they
+// can be left out.
+const still = { useViewBox: true, cssEmphasis: false, cssAnimation: false };
+
 // draw returns a figure as one SVG element with real text. Every id in it
 // begins with idPrefix, so that several may stand in one document.
 export function draw(option: Option, width: number, height: number, idPrefix: string): string {
   const chart = init(null, null, { renderer: 'svg', ssr: true, width, height });
   try {
     chart.setOption(revived(option));
-    return prefixed(inMarkup(chart.renderToSVGString({ useViewBox: true })), idPrefix);
+    const painter = chart.getZr().painter as unknown as { renderToString(options: typeof still): string };
+    return prefixed(inMarkup(painter.renderToString(still)), idPrefix);
   } finally {
     chart.dispose();
   }
@@ -73,7 +79,7 @@ export function draw(option: Option, width: number, height: number, idPrefix: st
 function prefixed(svg: string, idPrefix: string): string {
   return svg
     .replace(/ ecmeta_[a-z_]+="[^"]*"/g, '')
-    .replace(/(\bid="|\bclass="|url\(#|[{}\s]\.|href="#)zr\d+-/g, (_, before: string) => `${before}${idPrefix}-`);
+    .replace(/(\bid="|url\(#)zr\d+-/g, (_, before: string) => `${before}${idPrefix}-`);
 }
 
 // Mounted is a live figure.

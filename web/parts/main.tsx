@@ -3,16 +3,16 @@
 import { render } from "preact";
 import { Engine } from "../engine/engine";
 
-const engine = new Engine({ reopen: (study) => ({ request: { kind: "open" }, files: [study] }) });
+const engine = new Engine({ reopen: (study) => ({ request: { kind: "open", names: ["study"] }, files: [study] }) });
 const root = document.getElementById("page")!;
 
 function Text({ text }: { text: string }) {
   return <p>{text}</p>;
 }
 
-engine.ask<object>({ kind: "about" }).then(
+engine.ask({ kind: "about" }).then(
   ({ reply }) => {
-    render(<Text text={JSON.stringify(reply)} />, root);
+    render(<Text text={JSON.stringify(reply.about)} />, root);
     performance.mark("ready");
     document.documentElement.dataset["state"] = "ready";
   },

@@ -2,7 +2,6 @@ package main
 
 import (
 	"encoding/json"
-	"errors"
 	"fmt"
 	"io"
 	"os"
@@ -104,23 +103,15 @@ func ask(s *message.Session, q message.Request, attached ...[]byte) (message.Rep
 		panic("the core's reply cannot be read: " + err.Error())
 	}
 	if r.Error != nil {
-		return r, files, errors.New(noticeLine(*r.Error))
+		return r, files, *r.Error
 	}
 	return r, files, nil
-}
-
-// noticeLine is a notice with its place before it.
-func noticeLine(n notice.Notice) string {
-	if place := n.Place(); place != "" {
-		return place + ": " + n.Text
-	}
-	return n.Text
 }
 
 // notices writes notices to the error stream: stop and ask by name.
 func (v *invocation) notices(list []notice.Notice) {
 	for _, n := range list {
-		fmt.Fprintf(v.errs, "%s: %s [%s]\n", n.Severity, noticeLine(n), n.Code)
+		fmt.Fprintf(v.errs, "%s: %s [%s]\n", n.Severity, n.Error(), n.Code)
 	}
 }
 

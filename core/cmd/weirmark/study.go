@@ -127,4 +127,3 @@ func (v *invocation) tell(r *message.Results, dir string) {
 		fmt.Fprintf(v.out, "%-32s %s\n", filepath.Join(dir, line.file), line.what)
 	}
 }
-

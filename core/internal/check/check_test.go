@@ -2,6 +2,7 @@ package main
 
 import (
 	"bytes"
+	"errors"
 	"reflect"
 	"strings"
 	"testing"
@@ -139,6 +140,31 @@ func TestCommand(t *testing.T) {
 	command(got, "b", "go", "no-such-verb")
 	if want := (tally{passed: 1, failed: []string{"b: exit status 2"}}); !reflect.DeepEqual(*got, want) {
 		t.Errorf("%+v, want %+v", *got, want)
+	}
+}
+
+func TestTakeCount(t *testing.T) {
+	broken := errors.New("exit status 1")
+	for _, row := range []struct {
+		name, said string
+		ended      error
+		want       tally
+	}{
+		{"passed", "pass one\n2 passed, 0 failed\n", nil, tally{passed: 2}},
+		{"one failed", "FAIL a: why\nfailed: a\n1 passed, 1 failed\n", broken, tally{passed: 1, failed: []string{"x: a"}}},
+		{"one not run", "not run: b: no browser\n1 passed, 0 failed, 1 skipped\n", broken, tally{passed: 1, skipped: []string{"x: b: no browser"}}},
+		{"no count", "Segmentation fault\n", broken, tally{failed: []string{"x: it did not count"}}},
+		{"nothing said", "", nil, tally{failed: []string{"x: it did not count"}}},
+		{"counted in the middle only", "1 passed, 0 failed\npanic\n", broken, tally{failed: []string{"x: it did not count"}}},
+		{"a failure without a name", "1 passed, 1 failed\n", broken,
+			tally{passed: 1, failed: []string{"x: it named 0 failed and 0 not run, and counted 1 passed, 1 failed"}}},
+		{"a status without a failure", "1 passed, 0 failed\n", broken, tally{passed: 1, failed: []string{"x: exit status 1"}}},
+	} {
+		got := tally{}
+		takeCount(&got, "x", row.said, row.ended)
+		if !reflect.DeepEqual(got, row.want) {
+			t.Errorf("%s: %+v, want %+v", row.name, got, row.want)
+		}
 	}
 }
 

@@ -37,6 +37,7 @@ func steps(packages string, fuzz time.Duration) []step {
 		{"go vet, js/wasm", []string{"go"}, func(t *tally) { vet(t, wasm, packages) }},
 		{"go test", []string{"go"}, func(t *tally) { test(t, native, packages) }},
 		{"go test, js/wasm", []string{"go", "node", "bash"}, func(t *tally) { test(t, wasm, packages) }},
+		{"front end", []string{"go", "node"}, func(t *tally) { counted(t, "front end", "node", "web/test/run.mjs") }},
 		{"fuzz", []string{"go"}, func(t *tally) { fuzzAll(t, packages, fuzz) }},
 	}
 }

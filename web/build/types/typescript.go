@@ -4,6 +4,7 @@ import (
 	"encoding"
 	"encoding/json"
 	"fmt"
+	"path"
 	"reflect"
 	"strconv"
 	"strings"
@@ -33,24 +34,71 @@ var written = map[reflect.Type]string{
 // typescript returns interfaces for the types of the values and for all that
 // they contain, in the order of their first use. It fails on a type that JSON
 // cannot hold or that writes itself, since its shape cannot be seen, and where
-// two types of one name meet.
+// two types would have one name.
 func typescript(values []any) (string, error) {
-	w := &writer{names: map[string]reflect.Type{}}
+	w := &writer{seen: map[reflect.Type]bool{}}
 	for _, value := range values {
 		t := reflect.TypeOf(value)
 		if t == nil || t.Kind() != reflect.Struct || t.Name() == "" {
 			return "", fmt.Errorf("%T is no named struct", value)
 		}
-		if err := w.want(t); err != nil {
-			return "", err
-		}
+		w.want(t)
 	}
+	// The first pass finds all types, the second one knows their names.
+	if _, err := w.declarations(); err != nil {
+		return "", err
+	}
+	if err := w.settleNames(reflect.TypeOf(values[0]).PkgPath()); err != nil {
+		return "", err
+	}
+	text, err := w.declarations()
+	return heading + text, err
+}
+
+// writer keeps which types are written, in order, and under which names.
+type writer struct {
+	seen  map[reflect.Type]bool
+	types []reflect.Type
+	names map[reflect.Type]string
+}
+
+// want has the type written once.
+func (w *writer) want(t reflect.Type) {
+	if !w.seen[t] {
+		w.seen[t] = true
+		w.types = append(w.types, t)
+	}
+}
+
+// settleNames gives each type its own name; one of another package than home,
+// where home has that name or two others share it, takes its package's before.
+func (w *writer) settleNames(home string) error {
+	count := map[string]int{}
+	for _, t := range w.types {
+		count[t.Name()]++
+	}
+	w.names = map[reflect.Type]string{}
+	taken := map[string]reflect.Type{}
+	for _, t := range w.types {
+		name := t.Name()
+		if count[name] > 1 && t.PkgPath() != home {
+			from := path.Base(t.PkgPath())
+			name = strings.ToUpper(from[:1]) + from[1:] + name
+		}
+		if other := taken[name]; other != nil {
+			return fmt.Errorf("%s and %s would have the same name", other, t)
+		}
+		taken[name] = t
+		w.names[t] = name
+	}
+	return nil
+}
+
+// declarations returns the text of all types; while it runs, types are added.
+func (w *writer) declarations() (string, error) {
 	var out strings.Builder
-	out.WriteString(heading)
-	for len(w.waiting) > 0 {
-		t := w.waiting[0]
-		w.waiting = w.waiting[1:]
-		text, err := w.declaration(t)
+	for i := 0; i < len(w.types); i++ {
+		text, err := w.declaration(w.types[i])
 		if err != nil {
 			return "", err
 		}
@@ -59,32 +107,13 @@ func typescript(values []any) (string, error) {
 	return out.String(), nil
 }
 
-// writer keeps which types have been named and which are still to be written.
-type writer struct {
-	names   map[string]reflect.Type
-	waiting []reflect.Type
-}
-
-// want has the type written once.
-func (w *writer) want(t reflect.Type) error {
-	known, named := w.names[t.Name()]
-	if named && known != t {
-		return fmt.Errorf("%s and %s would have the same name", known, t)
-	}
-	if !named {
-		w.names[t.Name()] = t
-		w.waiting = append(w.waiting, t)
-	}
-	return nil
-}
-
 func (w *writer) declaration(t reflect.Type) (string, error) {
 	if t.Kind() != reflect.Struct {
 		inner, err := w.shape(t)
-		return fmt.Sprintf("export type %s = %s;\n", t.Name(), inner), err
+		return fmt.Sprintf("export type %s = %s;\n", w.names[t], inner), err
 	}
 	fields, err := w.fields(t)
-	return fmt.Sprintf("export interface %s {\n%s}\n", t.Name(), fields), err
+	return fmt.Sprintf("export interface %s {\n%s}\n", w.names[t], fields), err
 }
 
 // fields returns the lines of a struct, those of embedded structs among them.
@@ -138,7 +167,8 @@ func (w *writer) reference(t reflect.Type) (string, error) {
 	if t.Name() == "" || !strings.HasPrefix(t.PkgPath(), ours) || writes(t, jsonMarshaler) || writes(t, textMarshaler) {
 		return w.shape(t)
 	}
-	return t.Name(), w.want(t)
+	w.want(t)
+	return w.names[t], nil
 }
 
 // writes says whether values of the type write themselves by the interface.

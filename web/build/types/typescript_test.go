@@ -8,6 +8,7 @@ import (
 	"testing"
 
 	"weirmark/core/message"
+	"weirmark/core/notice"
 	"weirmark/core/quantity"
 )
 
@@ -86,6 +87,23 @@ export interface inner {
 	}
 	if have != want {
 		t.Errorf("got\n%s\nwant\n%s", have, want)
+	}
+}
+
+// Notice has the name of a type of another package inside it.
+type Notice struct {
+	Of notice.Notice `json:"of"`
+}
+
+func TestSharedName(t *testing.T) {
+	have, err := typescript([]any{Notice{}})
+	if err != nil {
+		t.Fatal(err)
+	}
+	for _, want := range []string{"export interface Notice {\n  of: NoticeNotice;\n}\n", "export interface NoticeNotice {\n  code: string;\n"} {
+		if !strings.Contains(have, want) {
+			t.Errorf("%q is not in\n%s", want, have)
+		}
 	}
 }
 

@@ -1,0 +1,555 @@
+// Written by go run ./web/build/types from the types of core/message: change those.
+
+export interface Request {
+  protocol: number;
+  number: number;
+  kind: string;
+  names?: string[];
+  at?: string;
+  target?: Target;
+  value?: string;
+  why?: string;
+  cell?: string;
+  theme?: string;
+  grids?: GridsRequest;
+  compare?: CompareRequest;
+  drawings?: Record<string, string>;
+}
+
+export interface Reply {
+  protocol: number;
+  number: number;
+  status: number;
+  error?: Notice;
+  about?: About;
+  read?: ReadReply;
+  grids?: GridsCase[];
+  compare?: CompareReply;
+  results?: Results;
+  view?: View;
+  files?: string[];
+}
+
+export interface Target {
+  kind: string;
+  id: string;
+  field: string;
+}
+
+export interface GridsRequest {
+  size?: string;
+  value?: string;
+  dim?: number;
+  limits: boolean;
+}
+
+export interface CompareRequest {
+  sim_table?: string;
+  ref_table?: string;
+  x: string;
+  y: string;
+  ref_x?: string;
+  ref_y?: string;
+  u?: string;
+  u_k?: string;
+  u_common?: string;
+  u_num?: string;
+  u_input?: string;
+  u_interp: boolean;
+  interp?: string;
+  k?: number;
+}
+
+export interface Notice {
+  code: string;
+  severity: Severity;
+  text: string;
+  file?: string;
+  line: number;
+  column?: number;
+}
+
+export interface About {
+  product: string;
+  version: string;
+  edition: string;
+}
+
+export interface ReadReply {
+  file: string;
+  sha256: string;
+  tables: ReadTable[] | null;
+  notices: Notice[] | null;
+}
+
+export interface GridsCase {
+  table: string;
+  value: string;
+  class: string;
+  order: number | null;
+  extrapolated: number | null;
+  ea: number | null;
+  eext: number | null;
+  gci: number | null;
+  notices: Notice[] | null;
+}
+
+export interface CompareReply {
+  stations: CompareStation[] | null;
+  outside: (number | null)[] | null;
+  summary: CompareSummary;
+  joint: CompareJoint | null;
+  crossings: CompareCrossings;
+  notices: Notice[] | null;
+}
+
+export interface Results {
+  report: Report;
+  statements: CellStatement[] | null;
+  figures: CellFigure[] | null;
+}
+
+export interface View {
+  title: string;
+  purpose: string;
+  status: string;
+  unsaved: boolean;
+  undo: string;
+  redo: string;
+  selected: string;
+  statement: Statement;
+  spoken: string;
+  next: NextPoint | null;
+  open_count: number;
+  board: Board;
+  courses: Course[] | null;
+  slips: SlipCard[] | null;
+  sources: SourceCard[] | null;
+  choices: Entry[] | null;
+  question: Entry[] | null;
+  people: Entry[] | null;
+  files: FileCard[] | null;
+  log: StudyEntry[] | null;
+  notices: string[] | null;
+  veiled: boolean;
+  reveal: Target;
+}
+
+export type Severity = string;
+
+export interface ReadTable {
+  name: string;
+  rows: number;
+  columns: ReadColumn[] | null;
+}
+
+export interface CompareStation {
+  x: number | null;
+  s: number | null;
+  d: number | null;
+  e: number | null;
+  u_d: number | null;
+  u_num: number | null;
+  u_input: number | null;
+  u_val: number | null;
+  ratio: number | null;
+}
+
+export interface CompareSummary {
+  n: number;
+  bias: number | null;
+  mae: number | null;
+  rmse: number | null;
+  max_abs: number | null;
+  within_u_val: number;
+  within_k_u_val: number;
+}
+
+export interface CompareJoint {
+  statistic: number | null;
+  n: number;
+  p_value: number | null;
+}
+
+export interface CompareCrossings {
+  sim: (number | null)[] | null;
+  ref: (number | null)[] | null;
+}
+
+export interface Report {
+  title: string;
+  purpose: string;
+  edition: string;
+  files: FileLine[] | null;
+  cells: Cell[] | null;
+  notices: Notice[] | null;
+  prepared: Signature;
+  checked: Signature;
+  approved: Signature;
+  log: StudyEntry[] | null;
+}
+
+export interface CellStatement {
+  cell: string;
+  case: string;
+  quantity: string;
+  model: string;
+  text: string;
+  sentence: Statement;
+}
+
+export interface CellFigure {
+  case: string;
+  quantity: string;
+  model: string;
+  figure: Figure;
+}
+
+export interface Statement {
+  status: string;
+  phrases: Phrase[] | null;
+}
+
+export interface NextPoint {
+  cell: string;
+  open: Open;
+}
+
+export interface Board {
+  models: string[] | null;
+  rows: BoardRow[] | null;
+  summary: string;
+}
+
+export interface Course {
+  question: string;
+  answer: string;
+  state: State;
+  numbers: Headline[] | null;
+  doubts: Open[] | null;
+  notes: string[] | null;
+  figures: CellFigure[] | null;
+  tables: Table[] | null;
+}
+
+export interface SlipCard {
+  id: string;
+  file: string;
+  name: string;
+  read: string;
+  entries: Entry[] | null;
+  open: number;
+  notices: string[] | null;
+  sketch: Sketch;
+}
+
+export interface SourceCard {
+  target: Target;
+  text: string;
+  share: string;
+  of: string;
+  pattern: string;
+  entries: Entry[] | null;
+}
+
+export interface Entry {
+  target: Target;
+  label: string;
+  value: string;
+  by: Certainty;
+  options: Option[] | null;
+  hint: string;
+  open: boolean;
+}
+
+export interface FileCard {
+  id: string;
+  name: string;
+  sha256: string;
+  size: string;
+  uses: string[] | null;
+  rejects: string[] | null;
+}
+
+export interface StudyEntry {
+  number: number;
+  at: string;
+  what: string;
+  why?: string;
+  shown: boolean;
+}
+
+export interface ReadColumn {
+  name: string;
+  unit: string;
+  values: (number | null)[] | null;
+}
+
+export interface FileLine {
+  id: string;
+  name: string;
+  sha256: string;
+  bytes: number;
+  matches: boolean;
+  uses: string[] | null;
+}
+
+export interface Cell {
+  case: string;
+  condition: string;
+  quantity: string;
+  symbol: string;
+  model: string;
+  grid: string;
+  reference: string;
+  kind: string;
+  use: string;
+  unit: string;
+  x_name: string;
+  x_unit: string;
+  scalar: boolean;
+  downward: boolean;
+  withheld: boolean;
+  provisional: boolean;
+  open: Open[] | null;
+  courses: State[];
+  choices: Choices;
+  stations: Station[] | null;
+  outside: (number | null)[] | null;
+  stations_all: number;
+  summary: Summary | null;
+  joint: Joint | null;
+  crossings: Crossings;
+  grids: Grids | null;
+  sources: SourceLine[] | null;
+  requirement: Judgement | null;
+  fragile: Fragility[] | null;
+  curve: Curve;
+  notices: Notice[] | null;
+  files_used: string[] | null;
+}
+
+export interface Signature {
+  name: string;
+  date: string;
+}
+
+export interface Figure {
+  id: string;
+  title: string;
+  caption: string;
+  alt: string;
+  width: number;
+  height: number;
+  option: unknown;
+  table: ChartTable;
+}
+
+export interface Phrase {
+  text: string;
+  mark: string;
+  target: Target | null;
+}
+
+export interface Open {
+  course: number;
+  blocks: boolean;
+  missing: string;
+  text: string;
+  target: Target;
+}
+
+export interface BoardRow {
+  case: string;
+  quantity: string;
+  stations: string;
+  cells: (BoardCell | null)[] | null;
+}
+
+export type State = string;
+
+export interface Headline {
+  value: string;
+  name: string;
+}
+
+export interface Table {
+  title: string;
+  head: string[] | null;
+  rows: (string[] | null)[] | null;
+}
+
+export interface Sketch {
+  own: ((number | null)[])[] | null;
+  others: (((number | null)[])[] | null)[] | null;
+}
+
+export type Certainty = string;
+
+export interface Option {
+  value: string;
+  label: string;
+}
+
+export interface Choices {
+  k: number;
+  k_num: number;
+  bounded: boolean;
+  formal: number;
+  dimension: number;
+  interpolation: Method;
+  u_interp: boolean;
+  num_shared: boolean;
+}
+
+export interface Station {
+  x: number | null;
+  s: number | null;
+  d: number | null;
+  e: number | null;
+  u_d: number | null;
+  u_num: number | null;
+  u_interp: number | null;
+  u_input: number | null;
+  u_val: number | null;
+  ratio: number | null;
+  lo: number | null;
+  hi: number | null;
+  line: number;
+  reading: string;
+}
+
+export interface Summary {
+  n: number;
+  tested: number;
+  bias: number | null;
+  mae: number | null;
+  rmse: number | null;
+  max_abs: number | null;
+  max_at: number | null;
+  max_ratio: number | null;
+  within_u_val: number;
+  within_k_u_val: number;
+  beyond_chance: number | null;
+}
+
+export interface Joint {
+  statistic: number | null;
+  n: number;
+  p_value: number | null;
+  reference: number | null;
+  exceeds: boolean;
+  pattern: string;
+  independent: number | null;
+  num_shared: number | null;
+  offset: number | null;
+  u_offset: number | null;
+  offset_part: number | null;
+  remainder: number | null;
+  remainder_n: number;
+  remainder_reference: number | null;
+  remainder_exceeds: boolean;
+  offset_resolved: boolean;
+}
+
+export interface Crossings {
+  sim: Crossing[] | null;
+  ref: Crossing[] | null;
+}
+
+export interface Grids {
+  points: GridPoint[] | null;
+  dimension: number;
+  class: string;
+  ratio: number | null;
+  order: number | null;
+  formal: number | null;
+  extrapolated: number | null;
+  ea: number | null;
+  eext: number | null;
+  gci: number | null;
+  u: number | null;
+  u_num: number | null;
+  k_num: number | null;
+  rule: string;
+  r21: number | null;
+  r32: number | null;
+  along: boolean;
+  monotone: number;
+  non_monotone: number;
+  order_low: number | null;
+  order_high: number | null;
+  local: LocalGrid[] | null;
+}
+
+export interface SourceLine {
+  name: string;
+  of: string;
+  text: string;
+  u: number | null;
+  share: number | null;
+  pattern: string;
+  origin: string;
+  open: boolean;
+}
+
+export interface Judgement {
+  limit: number | null;
+  percent: number | null;
+  who: string;
+  date: string;
+  late: boolean;
+  outcome: string;
+  at: number | null;
+  u_val_needed: number | null;
+  u_num_needed: number | null;
+  u_num_reduction: number | null;
+}
+
+export interface Fragility {
+  change: string;
+  what: string;
+  from: string;
+  outcome: string;
+  detail: string;
+}
+
+export interface Curve {
+  x: (number | null)[] | null;
+  y: (number | null)[] | null;
+  u_num: (number | null)[] | null;
+}
+
+export interface ChartTable {
+  head: string[] | null;
+  rows: (string[] | null)[] | null;
+}
+
+export interface BoardCell {
+  id: string;
+  courses: State[];
+  letter: string;
+  spoken: string;
+}
+
+export type Method = string;
+
+export interface Crossing {
+  x: number | null;
+  rising: boolean;
+}
+
+export interface GridPoint {
+  name: string;
+  cells: number | null;
+  h: number | null;
+  value: number | null;
+  used: boolean;
+}
+
+export interface LocalGrid {
+  x: number | null;
+  class: string;
+  order: number | null;
+  u: number | null;
+}
