@@ -49,7 +49,7 @@ var table = map[string]row{
 
 	// Units.
 	"unit-unknown":   {Ask, "Unit %q of column %q is not known. The column is not converted. Choose a unit."},
-	"unit-missing":   {Ask, "No unit is stated for %q. Nothing is assumed. Choose a unit, or say that the column is a pure number."},
+	"unit-missing":   {Ask, "No unit is stated for %q of %s. Nothing is assumed. Choose a unit, or 1 for a pure number."},
 	"unit-guessed":   {Ask, "The unit %s of %q is a guess. Accept or correct it."},
 	"unit-dimension": {Stop, "%q is in %s and %q is in %s: these are different dimensions and cannot be compared. Correct the units, or give the quantity that relates them."},
 	"density-needed": {Stop, "%q is a pressure divided by density (%s) and %q is a pressure (%s). A density is needed before they can be compared."},
@@ -75,7 +75,6 @@ var table = map[string]row{
 	"station-gap":           {Note, "%d stations fall where the simulation has a gap. Not compared; gaps are not bridged."},
 	"station-interp":        {Note, "The interpolation uncertainty reaches %s %% of u_val: the simulation is coarse against the stations."},
 	"interpolation-unknown": {Stop, "No interpolation is called %q: linear or monotone. Nothing was resampled."},
-	"crossing-none":         {Note, "%s does not change sign: no crossing."},
 
 	// Uncertainty.
 	"u-missing":        {Ask, "No experimental uncertainty was given. u_D, u_val and the joint statistic are withheld: this is a comparison only. Blank is not zero."},
@@ -126,7 +125,6 @@ var table = map[string]row{
 	"request-columns":    {Stop, "The columns of stations and values were not named. Give --x and --y."},
 	"request-number":     {Stop, "The %s, %q, is no number and no column."},
 	"request-study":      {Stop, "No study is open. Open one first."},
-	"request-cell":       {Stop, "There is no result %q in this study."},
 	"request-undo":       {Note, "There is nothing to %s."},
 
 	// The study.

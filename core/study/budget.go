@@ -102,6 +102,7 @@ func (w *work) source(at int, s *Source) {
 	w.blanks(u, s.Name, target)
 	common := s.Pattern == Common
 	if s.Of == OfNumerical {
+		w.tell(notice.New("grid-declared", w.q.label(), orWord(s.Origin, "no reason was given.")))
 		common = common || w.choices.NumShared
 	}
 	w.add(s.Of, s.Name, w.sourceText(s), s.Origin, u, common, !knownCoverage || s.Coverage.Open())
@@ -283,6 +284,27 @@ func (w *work) total() {
 		if u > 0 {
 			w.tested = append(w.tested, i)
 		}
+	}
+	w.coarseSimulation()
+}
+
+// coarse is the part of u_val above which the interpolation uncertainty is
+// told.
+const coarse = 0.3
+
+// coarseSimulation tells where the interpolation uncertainty is no small part
+// of u_val.
+func (w *work) coarseSimulation() {
+	worst := 0.0
+	for _, p := range w.parts {
+		if p.interp {
+			for _, i := range w.tested {
+				worst = max(worst, p.u[i]/w.uVal[i])
+			}
+		}
+	}
+	if worst > coarse {
+		w.tell(notice.New("station-interp", quantity.Text(100*worst, 2)))
 	}
 }
 

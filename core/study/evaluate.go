@@ -264,8 +264,24 @@ func (w *work) findSimulation() {
 		w.need(2, true, "a simulation", w.q.target("simulation"), "simulation-missing", w.q.label())
 	}
 	w.finestFirst()
+	w.identicalRuns()
 	if len(w.runs) > 0 {
 		w.cell.Grid = w.runs[0].curve.slip.Grid.Value
+	}
+}
+
+// identicalRuns asks about runs of one family that hold the same bytes.
+func (w *work) identicalRuns() {
+	first := map[string]*Slip{}
+	for _, r := range w.runs {
+		p := r.curve.slip
+		f := w.e.study.File(p.File)
+		key := f.SHA256 + " " + p.Table + " " + p.Y.Column.Value
+		if other, twice := first[key]; twice && other.File != p.File {
+			w.need(1, true, "the right file of grid "+orWord(p.Grid.Value, f.Name), slipTarget(p, "grid"), "grid-identical", w.e.study.fileName(other), f.Name)
+			continue
+		}
+		first[key] = p
 	}
 }
 
@@ -340,6 +356,8 @@ func (w *work) doubts(p *Slip) {
 		switch {
 		case f.field.Open():
 			w.need(f.course, true, "acceptance of the "+f.name, slipTarget(p, f.path), "guess-open", capital(f.name), file, f.field.Value)
+		case f.needed && !f.field.Given() && f.unitOf != "":
+			w.need(f.course, true, "the "+f.name, slipTarget(p, f.path), "unit-missing", f.unitOf, file)
 		case f.needed && !f.field.Given():
 			w.need(f.course, true, "the "+f.name, slipTarget(p, f.path), "field-missing", capital(f.name), file)
 		}
@@ -353,37 +371,38 @@ type slipField struct {
 	field  Field
 	needed bool
 	course int
+	unitOf string // the column, where the field is its unit
 }
 
 // fields lists the fields of a slip that a statement rests on.
 func (p *Slip) fields() []slipField {
 	all := []slipField{
-		{"role", "role", p.Role, true, 2},
-		{"case", "case", p.Case, true, 2},
-		{"quantity", "quantity", p.Quantity, true, 2},
-		{"y.column", "column of values", p.Y.Column, true, 2},
-		{"y.unit", "unit of " + orWord(p.Y.Column.Value, "the values"), p.Y.Unit, true, 2},
+		{path: "role", name: "role", field: p.Role, needed: true, course: 2},
+		{path: "case", name: "case", field: p.Case, needed: true, course: 2},
+		{path: "quantity", name: "quantity", field: p.Quantity, needed: true, course: 2},
+		{path: "y.column", name: "column of values", field: p.Y.Column, needed: true, course: 2},
+		{path: "y.unit", name: "unit of " + orWord(p.Y.Column.Value, "the values"), field: p.Y.Unit, needed: true, course: 2, unitOf: orWord(p.Y.Column.Value, "the values")},
 	}
 	if p.Role.Value != Reference {
-		all = append(all, slipField{"model", "model", p.Model, false, 2})
+		all = append(all, slipField{path: "model", name: "model", field: p.Model, course: 2})
 	}
 	if p.X.Column.Given() {
 		all = append(all,
-			slipField{"x.column", "column of stations", p.X.Column, true, 2},
-			slipField{"x.unit", "unit of " + p.X.Column.Value, p.X.Unit, true, 2})
+			slipField{path: "x.column", name: "column of stations", field: p.X.Column, needed: true, course: 2},
+			slipField{path: "x.unit", name: "unit of " + p.X.Column.Value, field: p.X.Unit, needed: true, course: 2, unitOf: p.X.Column.Value})
 	}
 	if p.U.Column.Given() {
 		all = append(all,
-			slipField{"u.column", "column of uncertainty", p.U.Column, true, 2},
-			slipField{"u_factor", "coverage of " + p.U.Column.Value, p.UFactor, true, 2})
+			slipField{path: "u.column", name: "column of uncertainty", field: p.U.Column, needed: true, course: 2},
+			slipField{path: "u_factor", name: "coverage of " + p.U.Column.Value, field: p.UFactor, needed: true, course: 2})
 	}
 	if p.Role.Value == Simulation {
 		all = append(all,
-			slipField{"grid", "grid", p.Grid, false, 1},
-			slipField{"cells", "number of cells", p.Cells, false, 1})
+			slipField{path: "grid", name: "grid", field: p.Grid, course: 1},
+			slipField{path: "cells", name: "number of cells", field: p.Cells, course: 1})
 	}
 	if p.Role.Value == GridValues {
-		all = append(all, slipField{"size.column", "column of cell counts", p.Size.Column, true, 1})
+		all = append(all, slipField{path: "size.column", name: "column of cell counts", field: p.Size.Column, needed: true, course: 1})
 	}
 	return all
 }

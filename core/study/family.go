@@ -17,7 +17,7 @@ func (c Choices) dimension() int {
 }
 
 func (c Choices) rule() refinement.Options {
-	return refinement.Options{Bounded: c.Bounded, Formal: c.Formal}
+	return refinement.Options{Bounded: c.Bounded, Formal: c.Formal, Method: c.Interpolation}
 }
 
 // family makes the grid study: of a scalar from a table over grids or from

@@ -1,0 +1,76 @@
+// The way from a blank, a number or an open point to the place that answers it.
+
+import type { Target } from "../engine/types";
+import type { Desk } from "./desk";
+
+/** The name of the place of an entry, in data-place. */
+export function placeOf(target: Target): string {
+  return `${target.kind}|${target.id}|${target.field}`;
+}
+
+/** The course where a result of the core stands, by its field. */
+const courseOfResult: Record<string, number> = { stations: 2, uncertainty: 2, agreement: 3, joint: 3, adequacy: 4, fragility: 4 };
+
+/** The course where an entry of a question stands; what is not named stands in the third. */
+export function courseOfEntry(field: string): number {
+  if (/^choices\.(k_num|bounded|formal|dimension|num_shared)$/.test(field)) {
+    return 1;
+  }
+  if (/^(requirement|choices\.k)/.test(field)) {
+    return 4;
+  }
+  return field === "downward" ? 3 : field === "settled" ? 0 : field === "numerical" ? 1 : 2;
+}
+
+/** Shows the place of a target and puts the focus there. */
+export function jump(desk: Desk, target: Target): void {
+  const course = courseOf(target);
+  if (course !== undefined) {
+    openCourse(desk, course);
+  }
+  // What was opened is on the page after the next frame.
+  requestAnimationFrame(() => requestAnimationFrame(() => focusOn(find(target, course))));
+}
+
+/** Opens a course; on a narrow page it is then the only open one. */
+export function openCourse(desk: Desk, course: number): void {
+  const narrow = matchMedia("(max-width: 699px)").matches;
+  desk.lay({ open: desk.layout.open.map((open, i) => i === course || (open && !narrow)) });
+}
+
+function courseOf(target: Target): number | undefined {
+  switch (target.kind) {
+    case "result":
+      return courseOfResult[target.field] ?? 3;
+    case "question":
+      return courseOfEntry(target.field);
+    case "source":
+      return target.field === "numerical" ? 1 : 2;
+    case "course":
+      return Number(target.field);
+  }
+  return undefined;
+}
+
+function find(target: Target, course: number | undefined): HTMLElement | null {
+  const wanted = placeOf(target);
+  const places = Array.from(document.querySelectorAll<HTMLElement>("[data-place]"));
+  const exact = places.find((place) => place.dataset["place"] === wanted);
+  const within = exact ?? places.find((place) => place.dataset["place"]!.startsWith(wanted + "."));
+  if (within !== undefined) {
+    return within;
+  }
+  if (target.kind === "slip" || target.field === "reference" || target.field === "simulation") {
+    return document.querySelector<HTMLElement>(".tray [data-open]") ?? document.querySelector<HTMLElement>(".tray h2");
+  }
+  return course === undefined ? null : document.getElementById(`course-${course + 1}`);
+}
+
+/** Brings an element into sight and gives it the focus. */
+export function focusOn(element: HTMLElement | null): void {
+  if (element === null) {
+    return;
+  }
+  element.scrollIntoView({ block: "center" });
+  element.focus({ preventScroll: true });
+}
