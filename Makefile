@@ -13,7 +13,7 @@ help:
 
 # Are Go, Node, npm and the others here? (as root on Debian they are installed)
 tools:
-	@.ci/packages test
+	@.ci/packages build
 
 # Is everything here that a build needs?
 setup: web/node_modules/.stamp

@@ -114,7 +114,11 @@ func compare(s *Session, q *Request, attached [][]byte, r *Reply) ([][]byte, err
 			return nil, n
 		}
 	}
-	reply := compareReply(c, ask)
+	unitless := true
+	for _, p := range one.Slips {
+		unitless = unitless && !p.X.Unit.Given() && !p.Y.Unit.Given()
+	}
+	reply := compareReply(c, ask, unitless)
 	reply.Notices = append(append(append([]notice.Notice{}, report.Notices...), extra...), reply.Notices...)
 	r.Compare = reply
 	if ask.U == "" || ask.UK == "" || len(reply.Stations) == 0 {
@@ -245,13 +249,15 @@ func orText(text, other string) string {
 // pageOnly are told by the page, not by a command that has no page.
 var pageOnly = map[string]bool{"field-missing": true, "guess-open": true, "monitor-missing": true, "requirement-missing": true, "grid-one": true, "station-common": true, "curve-envelope": true}
 
-func compareReply(c *study.Cell, ask *CompareRequest) *CompareReply {
+// compareReply lays out the cell. Where neither file states a unit, both are
+// in the same one: a command line has no other way to say so.
+func compareReply(c *study.Cell, ask *CompareRequest, unitless bool) *CompareReply {
 	reply := &CompareReply{Stations: []CompareStation{}, Outside: c.Outside, Notices: []notice.Notice{},
 		Crossings: CompareCrossings{Sim: at(c.Crossings.Simulation), Ref: at(c.Crossings.Reference)},
 		Summary:   CompareSummary{Bias: study.None, MAE: study.None, RMSE: study.None, MaxAbs: study.None}}
 	missing := ask.UNum == ""
 	for _, n := range c.Notices {
-		if !pageOnly[n.Code] {
+		if !pageOnly[n.Code] && !(unitless && n.Code == "unit-missing") {
 			reply.Notices = append(reply.Notices, n)
 		}
 	}

@@ -1,5 +1,6 @@
 // The engine in each browser, with a core that fails when it is asked to.
 
+import { readFile, writeFile } from "node:fs/promises";
 import path from "node:path";
 import { pathToFileURL } from "node:url";
 
@@ -69,6 +70,22 @@ export async function engine(name, browser, folder) {
       same(found, ["stopped", message, "broken"], "state, message and study");
     });
   }
+
+  await check(`${name}: engine: runs in the page where its policy forbids a worker`, async () => {
+    const page = await readFile(path.join(folder, "weirmark.html"), "utf8");
+    const other = path.join(folder, "no-worker.html");
+    await writeFile(other, page.replace("worker-src blob:", "worker-src 'none'"));
+    const { page: opened, said, close } = await openPage(browser);
+    try {
+      await opened.goto(pathToFileURL(other).href);
+      await untilReady(opened);
+      same(await opened.evaluate(async () => (await engine.ask({ kind: "a" })).reply.calls), 1, "calls");
+      // The browser reports the refusal; without it the test would have met a worker.
+      holds(said.length > 0 && said.every((line) => line.includes("worker-src")), `console: ${said}`);
+    } finally {
+      await close();
+    }
+  });
 
   await on("cancel ends work without end and goes on with the last study", undefined, async (page) => {
     const found = await page.evaluate(async () => {

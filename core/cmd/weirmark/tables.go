@@ -6,6 +6,7 @@ import (
 	"text/tabwriter"
 
 	"weirmark/core/message"
+	"weirmark/core/notice"
 	"weirmark/core/quantity"
 )
 
@@ -86,10 +87,29 @@ func grids(v *invocation) (int, error) {
 	if err := w.Flush(); err != nil {
 		return message.Refused, err
 	}
-	for _, c := range *r.Grids {
-		v.notices(c.Notices)
-	}
+	v.gridNotices(*r.Grids)
 	return r.Status, nil
+}
+
+// gridNotices writes every notice once: with the names of its cases where it
+// does not hold for all.
+func (v *invocation) gridNotices(cases []message.GridsCase) {
+	holders := map[string][]string{}
+	var order []notice.Notice
+	for _, c := range cases {
+		for _, n := range c.Notices {
+			if holders[n.Text] == nil {
+				order = append(order, n)
+			}
+			holders[n.Text] = append(holders[n.Text], c.Table+" "+c.Value)
+		}
+	}
+	for _, n := range order {
+		if of := holders[n.Text]; len(of) < len(cases) {
+			n.Text = strings.Join(of, "; ") + ": " + n.Text
+		}
+		v.notices([]notice.Notice{n})
+	}
 }
 
 func percent(fraction float64) string {
