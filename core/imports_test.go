@@ -34,11 +34,12 @@ var levels = map[string]int{
 	"core/settling":    2,
 	"core/flow":        2,
 
-	"core/refinement": 3,
-	"core/comparison": 3,
-	"core/metric":     3,
-	"core/derived":    3,
-	"core/dataset":    3,
+	"core/refinement":   3,
+	"core/comparison":   3,
+	"core/metric":       3,
+	"core/derived":      3,
+	"core/plausibility": 3,
+	"core/dataset":      3,
 
 	"core/adequacy": 4,
 	"core/study":    5,

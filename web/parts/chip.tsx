@@ -11,7 +11,15 @@ import { Gap } from "./hatch";
 import { placeOf } from "./jump";
 import { Words } from "./words";
 
-export function Chip({ entry, after }: { entry: Entry; after?: (entry: Entry, value: string) => void }) {
+interface Shown {
+  entry: Entry;
+  /** The label is for ears only; the sentence around says it. */
+  bare?: boolean;
+  /** Called once the entry has got the value. */
+  after?: (entry: Entry, value: string) => void;
+}
+
+export function Chip({ entry, bare, after }: Shown) {
   const desk = useDesk();
   const [editing, setEditing] = useState(false);
   const chip = useRef<HTMLButtonElement>(null);
@@ -67,7 +75,11 @@ export function Chip({ entry, after }: { entry: Entry; after?: (entry: Entry, va
   const state = guessed ? ", guessed: Enter accepts, F2 corrects" : entry.open ? ", missing: Enter fills" : "";
   return (
     <span class="pair">
-      <Words text={entry.label} />{" "}
+      {bare !== true && (
+        <>
+          <Words text={entry.label} />{" "}
+        </>
+      )}
       <button
         ref={chip}
         class={"chip" + (guessed ? " guessed" : entry.open ? " missing" : "")}

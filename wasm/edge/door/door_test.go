@@ -3,8 +3,11 @@ package door
 import (
 	"encoding/base64"
 	"encoding/json"
+	"io"
+	"log"
 	"net/http"
 	"net/http/httptest"
+	"os"
 	"reflect"
 	"strings"
 	"testing"
@@ -85,6 +88,21 @@ func TestSealRefuses(t *testing.T) {
 		if sealed, err := seal([]byte(reply), [][]byte{{1}}); err == nil {
 			t.Errorf("%q was sealed as %s", reply, sealed)
 		}
+	}
+}
+
+func TestPanic(t *testing.T) {
+	log.SetOutput(io.Discard)
+	defer log.SetOutput(os.Stderr)
+	w := httptest.NewRecorder()
+	r := httptest.NewRequest("POST", Path, strings.NewReader("{}"))
+	r.Header.Set("Content-Type", "application/json")
+	Handler(func() Handle { return func([]byte, [][]byte) ([]byte, [][]byte) { panic("fault") } }).ServeHTTP(w, r)
+	if w.Code != http.StatusInternalServerError || !strings.Contains(w.Body.String(), "failed") || strings.Contains(w.Body.String(), "fault") {
+		t.Errorf("status %d, answer %s", w.Code, w.Body)
+	}
+	if w.Header().Get("X-Content-Type-Options") != "nosniff" {
+		t.Error("the answer lacks the headers of the others")
 	}
 }
 

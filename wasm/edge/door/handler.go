@@ -4,8 +4,10 @@ import (
 	"encoding/json"
 	"errors"
 	"io"
+	"log"
 	"mime"
 	"net/http"
+	"runtime/debug"
 )
 
 // Path is where messages are answered.
@@ -17,7 +19,7 @@ const Limit = 4 << 20
 // Handle answers a request of the core; message.Session has one.
 type Handle func(request []byte, attached [][]byte) (reply []byte, files [][]byte)
 
-// Handler returns the service; open gives each call a session of its own.
+// Handler returns the service; session gives each call a session of its own.
 func Handler(session func() Handle) http.Handler {
 	return http.HandlerFunc(func(w http.ResponseWriter, r *http.Request) {
 		strict(w.Header())
@@ -51,6 +53,14 @@ func answer(w http.ResponseWriter, r *http.Request, handle Handle) {
 		refuse(w, http.StatusBadRequest, err.Error())
 		return
 	}
+	// A panic would end the instance without an answer, so that the runtime gives
+	// one of its own without our headers. It is told here and in the service's log.
+	defer func() {
+		if cause := recover(); cause != nil {
+			log.Printf("the core failed: %v\n%s", cause, debug.Stack())
+			refuse(w, http.StatusInternalServerError, "the core failed at this request")
+		}
+	}()
 	sealed, err := seal(handle(request, attached))
 	if err != nil {
 		refuse(w, http.StatusInternalServerError, err.Error())

@@ -1,0 +1,166 @@
+// A course of evidence: a question, its answer, a picture, a few numbers and
+// what stands behind them; in the margin its doubts. Doubts fall downward: the
+// left edge is hatched where the course, or one below it, is in doubt.
+
+import { useState } from "preact/hooks";
+
+import type { Course, Entry, View } from "../engine/types";
+import { Chip } from "./chip";
+import { useDesk } from "./context";
+import { list } from "./desk";
+import { FigureOf } from "./figure";
+import { Hatch } from "./hatch";
+import { courseOfEntry, jump, openCourse } from "./jump";
+import { SourceLines } from "./source";
+import { FoldedTable } from "./table";
+import { Veil } from "./veil";
+import { Words } from "./words";
+
+export function Courses({ view }: { view: View }) {
+  const courses = list(view.courses);
+  const first = courses.findIndex((course) => course.state !== "settled");
+  return (
+    <>
+      {courses.map((course, i) => (
+        <CourseOf key={i} view={view} course={course} place={i} doubtful={first >= 0 && i >= first} />
+      ))}
+    </>
+  );
+}
+
+interface Shown {
+  view: View;
+  course: Course;
+  place: number;
+  doubtful: boolean;
+}
+
+function CourseOf({ view, course, place, doubtful }: Shown) {
+  const desk = useDesk();
+  const open = desk.layout.open[place]!;
+  const doubts = list(course.doubts);
+  const veiled = view.veiled && place >= 3;
+  const id = `course-${place + 1}`;
+  const toggle = () => (open ? desk.lay({ open: desk.layout.open.map((one, i) => one && i !== place) }) : openCourse(desk, place));
+  return (
+    <section class={"course" + (open ? "" : " folded")} aria-labelledby={id} data-state={course.state}>
+      <div class="edge">{doubtful && <Hatch className="doubt-stroke" />}</div>
+      <div class="body">
+        <h2>
+          <button id={id} aria-expanded={open} onClick={toggle}>
+            {course.question}
+          </button>
+        </h2>
+        <p class="answer">
+          <Words text={course.answer} />
+        </p>
+        {open && (veiled ? <Veil view={view} /> : <Evidence view={view} course={course} place={place} />)}
+        {open && <Entries view={view} place={place} />}
+      </div>
+      <div class="margin">
+        {!open && doubts.length > 0 ? (
+          <p class="doubt">{doubts.length === 1 ? "1 doubt" : `${doubts.length} doubts`}</p>
+        ) : (
+          doubts.map((doubt, i) => (
+            <button key={i} class="doubt" onClick={() => jump(desk, doubt.target)}>
+              <Words text={doubt.text} />
+            </button>
+          ))
+        )}
+        {open &&
+          list(course.notes).map((note, i) => (
+            <p key={i} class="note">
+              <Words text={note} />
+            </p>
+          ))}
+      </div>
+    </section>
+  );
+}
+
+/** Pictures, numbers and tables of a course. */
+function Evidence({ view, course, place }: { view: View; course: Course; place: number }) {
+  const tables = list(course.tables);
+  const stations = place === 3 && tables[0] !== undefined && list(tables[0].rows).length > 1 ? tables[0] : undefined;
+  const rows = list(stations?.rows).map(list);
+  const [at, setAt] = useState<number | undefined>(undefined);
+  const row = at === undefined ? undefined : rows[Math.min(at, rows.length - 1)];
+
+  const step = (event: KeyboardEvent) => {
+    const by = event.key === "ArrowRight" ? 1 : event.key === "ArrowLeft" ? -1 : 0;
+    if (by !== 0) {
+      event.preventDefault();
+      event.stopPropagation();
+      const next = at === undefined ? (by > 0 ? 0 : rows.length - 1) : at + by * (event.shiftKey ? 5 : 1);
+      setAt(Math.min(rows.length - 1, Math.max(0, next)));
+    }
+  };
+  const x = row === undefined ? undefined : Number(row[0]!.replace("−", "-"));
+  return (
+    <>
+      {list(course.figures).map(({ figure }) =>
+        stations === undefined ? (
+          <FigureOf key={figure.id} figure={figure} />
+        ) : (
+          <FigureOf key={figure.id} figure={figure} at={x} onKeyDown={step} />
+        ),
+      )}
+      {stations !== undefined && (
+        <p class="ledger" role="status">
+          {row === undefined
+            ? "Put the focus on a picture and use the arrow keys to go from station to station."
+            : list(stations.head).map((name, i) => (
+                <span key={i}>
+                  <Words text={name} /> <b>{row[i]}</b>
+                </span>
+              ))}
+        </p>
+      )}
+      {list(course.numbers).length > 0 && (
+        <dl class="numbers">
+          {list(course.numbers)
+            .slice(0, 3)
+            .map(({ value, name }) => (
+              <div key={name}>
+                <dt>
+                  <Words text={name} />
+                </dt>
+                <dd>{value}</dd>
+              </div>
+            ))}
+        </dl>
+      )}
+      {tables.map((table, i) => (
+        <FoldedTable
+          key={table.title + i}
+          title={table.title}
+          head={list(table.head)}
+          rows={list(table.rows).map(list)}
+          at={table === stations ? at : undefined}
+          choose={table === stations ? setAt : undefined}
+        />
+      ))}
+      {place === 1 && <SourceLines view={view} of={["numerical"]} />}
+      {place === 2 && <SourceLines view={view} of={["data", "input"]} />}
+    </>
+  );
+}
+
+/** What a person enters or chooses in a course. */
+function Entries({ view, place }: { view: View; place: number }) {
+  const here = (entry: Entry) => courseOfEntry(entry.target.field) === place;
+  const entries = [...list(view.question), ...list(view.choices)].filter(here);
+  if (entries.length === 0) {
+    return null;
+  }
+  return (
+    <p class="entries">
+      {entries.map((entry, i) => (
+        <span key={entry.target.field}>
+          {i > 0 && " · "}
+          <Chip entry={entry} />
+        </span>
+      ))}
+    </p>
+  );
+}

@@ -1,0 +1,87 @@
+// A slip says in words what was read of one table and how it is used. Every
+// guess is accepted on its own chip; tables of the same shape can take over an
+// answer that was given on one of them.
+
+import { useState } from "preact/hooks";
+
+import type { Entry, SlipCard } from "../engine/types";
+import { Chip } from "./chip";
+import { useDesk } from "./context";
+import { list } from "./desk";
+import { Removal } from "./removal";
+import { SketchOf } from "./sketch";
+import { Words } from "./words";
+
+/** An answer that other slips of the same shape wait for. */
+interface Offer {
+  entry: Entry;
+  value: string;
+}
+
+/** Tables are of one shape when they have the same columns and play one role. */
+function shape(slip: SlipCard): string {
+  const entries = list(slip.entries);
+  const of = (field: string) => entries.find((entry) => entry.target.field === field);
+  return JSON.stringify([of("role")?.value, list(of("y.column")?.options).map((option) => option.value)]);
+}
+
+function waiting(slip: SlipCard, all: SlipCard[], offer: Offer): Entry[] {
+  return all
+    .filter((other) => other.id !== slip.id && shape(other) === shape(slip))
+    .flatMap((other) => list(other.entries).filter((entry) => entry.target.field === offer.entry.target.field && entry.open))
+    .filter((entry) => entry.value === "" || entry.value === offer.value);
+}
+
+export function SlipOf({ slip, all }: { slip: SlipCard; all: SlipCard[] }) {
+  const desk = useDesk();
+  const [offer, setOffer] = useState<Offer | undefined>(undefined);
+  const others = offer === undefined ? [] : waiting(slip, all, offer);
+  const entries = list(slip.entries);
+
+  const after = (entry: Entry, value: string) => {
+    setOffer({ entry, value });
+    // On to the next chip of this slip that needs a person, else of the tray.
+    requestAnimationFrame(() => {
+      const own = document.querySelector<HTMLElement>(`#slip-${slip.id} [data-open]`);
+      (own ?? document.querySelector<HTMLElement>(".tray [data-open]") ?? document.getElementById("tray-name"))?.focus();
+    });
+  };
+  const share = async () => {
+    for (const entry of others) {
+      await desk.change(entry.value === offer!.value ? { kind: "accept", target: entry.target } : { kind: "set", target: entry.target, value: offer!.value });
+    }
+    setOffer(undefined);
+  };
+  return (
+    <article class="slip" id={"slip-" + slip.id} aria-label={slip.name}>
+      <SketchOf sketch={slip.sketch} name={slip.name} />
+      <h3>{slip.name}</h3>
+      <p>
+        <Words text={slip.read} />{" "}
+        {entries.map((entry, i) => (
+          <span key={entry.target.field}>
+            {i === 0 ? "It " : ", "}
+            <Chip entry={entry} after={after} />
+          </span>
+        ))}
+        .
+      </p>
+      {others.length > 0 && offer !== undefined && (
+        <p class="offer">
+          <button onClick={() => void share()}>
+            Say the same of {others.length === 1 ? "1 more table" : `${others.length} more tables`} of this shape: {offer.entry.label} {offer.value}
+          </button>
+        </p>
+      )}
+      {list(slip.notices).map((text, i) => (
+        <p key={i} class="notice">
+          <Words text={text} />
+        </p>
+      ))}
+      <p class="ways">
+        <button onClick={() => void desk.change({ kind: "double", target: { kind: "slip", id: slip.id, field: "" } })}>use it once more</button>{" "}
+        <Removal what={slip.name} request={{ kind: "remove file", target: { kind: "file", id: slip.file, field: "" } }} />
+      </p>
+    </article>
+  );
+}
