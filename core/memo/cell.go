@@ -25,7 +25,7 @@ func (b *builder) comparisons() Node {
 func (b *builder) cell(i int, c study.Cell) Node {
 	s := b.openWith(2, cellID(i), names(c)...)
 	for _, part := range [][]Node{
-		b.compared(i, c), b.figuresOf(c.Case, c.Quantity, c.Model), b.stations(i, c), b.measures(i, c),
+		b.compared(i, c), b.figuresOf(c.Case, c.Quantity, c.Model), b.stations(i, c), b.excluded(i, c), b.measures(i, c),
 		b.joint(i, c), b.crossings(i, c), b.grids(i, c), b.sources(i, c), b.requirement(i, c), b.fragility(c), b.openPoints(c),
 	} {
 		s.Nodes = append(s.Nodes, part...)
@@ -122,6 +122,25 @@ func (b *builder) fileNames(ids []string) []string {
 		}
 	}
 	return names
+}
+
+// excluded prints the stations a person took out, with the reasons.
+func (b *builder) excluded(i int, c study.Cell) []Node {
+	if len(c.Excluded) == 0 {
+		return nil
+	}
+	rows := make([]Node, len(c.Excluded))
+	for j, e := range c.Excluded {
+		at := func(name string) string { return fmt.Sprintf("cells.%d.excluded.%d.%s", i, j, name) }
+		seen := "no"
+		if e.Late {
+			seen = "yes"
+		}
+		rows[j] = row(figureCell(written(e.X, quantity.Text(float64(e.X), 4), at("x"))), figureCell(writtenBeside(e.D, quantity.None, at("d"))),
+			figureCell(count(e.Line, at("line"))), cell(given(e.Why)), cell(text(seen)))
+	}
+	head := block(Row, "head", block(Head, "number", given(c.XName)), block(Head, "number", say("*D*")...), block(Head, "number", text("Line")), block(Head, "", text("Reason")), block(Head, "", text("Comparison seen before")))
+	return []Node{b.table("plain", say("Stations excluded by a person, not in any number of this cell ({}).", text(unitOf(c.Unit))), head, rows...)}
 }
 
 // measures prints the difference measures of a curve.

@@ -25,6 +25,7 @@ func taps(model string, e []float64, joint study.Joint, requirement *study.Judge
 		Case: "C1", Condition: "α = 4.2°", Quantity: "upper-branch pressure coefficient", Symbol: "Cp", Model: model, Grid: "G4",
 		Reference: "OR-26 taps", Kind: study.KindTest, Use: study.UseValidation, Unit: "1", XName: "x/c", XUnit: "1", Downward: true,
 		Provisional: true, StationsAll: 26, Outside: []study.Number{0.981, 0.995},
+		Excluded:    []study.Excluded{{X: .55, D: -.12, Line: 30, Why: "tap leaked, see the log of the test", Late: true}, {X: .56, D: -.1, Line: 31, Why: "tap leaked"}},
 		Open:        []study.Open{{Course: 0, Missing: "monitor", Text: "No monitor of the run on grid G4: that it has settled is not shown"}},
 		Courses:     [5]study.State{study.Empty, study.Settled, study.Settled, study.Doubts, study.Doubts},
 		Choices:     study.DefaultChoices(),

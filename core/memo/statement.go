@@ -103,6 +103,13 @@ func (b *builder) restrictions(i int, c study.Cell, alone bool) []Node {
 	if n := len(c.Outside); n > 0 {
 		add("{} of {} stations lie outside the simulated range and were not compared. No statement is made there.", text(fmt.Sprint(n)), count(c.StationsAll, at("stations_all")))
 	}
+	if n, late := len(c.Excluded), lateOf(c.Excluded); n > 0 {
+		words := plural(n, "station") + " excluded by a person; the reasons are in the details."
+		if late > 0 {
+			words += fmt.Sprintf(" Of these, %d after the comparison had been seen.", late)
+		}
+		add("{}", text(words))
+	}
 	if alone && c.Use == study.UseTuning {
 		add("These data were used to set the model: agreement here is fit quality.")
 	}
@@ -147,6 +154,17 @@ func (b *builder) requirementWords(i int, c study.Cell) []Node {
 		outcome = text("not judged")
 	}
 	return append(words, say(", set by {}, {}: {}", given(q.Who), given(q.Date), outcome)...)
+}
+
+// lateOf counts the exclusions made after the comparison was seen.
+func lateOf(list []study.Excluded) int {
+	n := 0
+	for _, e := range list {
+		if e.Late {
+			n++
+		}
+	}
+	return n
 }
 
 func firstOpen(c study.Cell) string {

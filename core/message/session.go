@@ -117,6 +117,18 @@ func double(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
 	return s.change(q, r, func(n *study.Study) error { return n.Double(q.target().ID, q.At) })
 }
 
+func exclude(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
+	return s.change(q, r, func(n *study.Study) error { return n.Exclude(q.target(), q.Why, q.At) })
+}
+
+func include(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
+	return s.change(q, r, func(n *study.Study) error { return n.Include(q.target(), q.At) })
+}
+
+func answer(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
+	return s.change(q, r, func(n *study.Study) error { return n.Answer(q.target(), q.Value, q.At) })
+}
+
 // drop takes attached files into the study.
 func drop(s *Session, q *Request, attached [][]byte, r *Reply) ([][]byte, error) {
 	if s.study == nil {

@@ -76,6 +76,21 @@ var table = map[string]row{
 	"station-interp":        {Note, "The interpolation uncertainty reaches %s %% of u_val: the simulation is coarse against the stations."},
 	"interpolation-unknown": {Stop, "No interpolation is called %q: linear or monotone. Nothing was resampled."},
 
+	"station-excluded":      {Note, "%d of %d stations were taken out by hand; they stay in the table with their reasons."},
+	"station-excluded-late": {Ask, "%d stations were taken out after results were seen: logged; the result with them is among the alternatives."},
+
+	// Findings that look like mistakes. Nothing is changed because of them.
+	"finding-answered":  {Note, "%s was answered: %s"},
+	"ratio-constant":    {Ask, "S/D is %s ± %s at the stations%s. Nothing was changed. Check units and references of both sides."},
+	"offset-constant":   {Ask, "E is %s ± %s everywhere: do the two sides have different datums? Nothing was removed."},
+	"range-scaled":      {Ask, "%s of the reference runs from %s to %s, of the simulation from %s to %s: they would fit with a factor %s. Check the units. Nothing was changed."},
+	"curve-shuffled":    {Ask, "Values of %s alternate at neighbouring rows (%d changes of direction): two branches shuffled by sorting? The order cannot be recovered safely; supply the unsorted file."},
+	"curve-outlier":     {Ask, "%s at line %d lies %s robust deviations off its neighbours, %s times what they suggest. Not removed. Exclude it with a reason, or say why it stays."},
+	"curve-magnitude":   {Ask, "%s is never negative but reaches %s: a magnitude? Changes of sign cannot be found in it. Export the signed component."},
+	"readings-ratio":    {Ask, "One of %d readings, at line %d, is %s times the others: another reference area or unit? Nothing was changed."},
+	"curve-constant":    {Ask, "All values of %s are %s: a placeholder? Check the export."},
+	"correlation-unset": {Ask, "Is the error of %q common to all stations? Independent makes the joint statistic %s, common %s."},
+
 	// Uncertainty.
 	"u-missing":        {Ask, "No experimental uncertainty was given. u_D, u_val and the joint statistic are withheld: this is a comparison only. Blank is not zero."},
 	"u-blank":          {Ask, "%d stations have no uncertainty. Blank is not zero: they leave the test. Give a value, or mark them unknown."},

@@ -60,7 +60,7 @@ func ConstantRatio(s, d []float64, known []Cause) (Ratio, bool) {
 	}
 	r := Ratio{}
 	r.Value, r.Spread = middle(ratios)
-	if !(r.Spread <= steady*math.Abs(r.Value)) || math.Abs(r.Value-1) < nearOne {
+	if r.Value == 0 || !(r.Spread <= steady*math.Abs(r.Value)) || math.Abs(r.Value-1) < nearOne {
 		return Ratio{}, false
 	}
 	r.Cause = causeOf(r.Value, known)

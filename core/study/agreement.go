@@ -167,6 +167,7 @@ func (w *work) joint(e []float64) {
 		}),
 		Offset: None, UOffset: None, OffsetPart: None, Remainder: None, RemainderReference: None}
 	w.cell.Joint = j
+	w.doubtCorrelation(tested)
 	if q.Rank < len(tested) {
 		w.tell(notice.New("covariance-rank", q.Rank, len(tested), q.Rank))
 	}

@@ -5,6 +5,7 @@ import (
 	"crypto/sha256"
 	"encoding/hex"
 	"encoding/json"
+	"maps"
 	"reflect"
 	"sort"
 	"strings"
@@ -164,6 +165,8 @@ func (s *Study) Clone() *Study {
 	for i := range c.Questions {
 		q := &c.Questions[i]
 		q.Sources = append([]Source{}, q.Sources...)
+		q.Excluded = append([]Exclusion{}, q.Excluded...)
+		q.Answers = maps.Clone(q.Answers)
 		if q.Requirement != nil {
 			r := *q.Requirement
 			q.Requirement = &r

@@ -143,12 +143,17 @@ func (e *evaluation) cell(q *Question, model string) Cell {
 
 // work evaluates one question for one model with given choices.
 func (e *evaluation) work(q *Question, model string, choices Choices) Cell {
-	w := &work{e: e, q: q, model: model, choices: choices}
+	return e.workWith(&work{e: e, q: q, model: model, choices: choices})
+}
+
+// workWith evaluates the cell that a work was set up for.
+func (e *evaluation) workWith(w *work) Cell {
+	q, model, choices := w.q, w.model, w.choices
 	w.cell = Cell{
 		Case: q.Case, Condition: q.Condition, Quantity: q.Quantity, Symbol: q.Symbol, Model: model,
 		Reference: q.ReferenceID, Kind: q.Kind.Value, Use: q.Use.Value, Downward: q.Downward, Choices: choices,
 		Unit: "1", XUnit: "1",
-		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Sources: []SourceLine{}, Fragile: []Fragility{},
+		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Sources: []SourceLine{}, Fragile: []Fragility{},
 		Notices: []notice.Notice{}, FilesUsed: []string{},
 		Crossings: Crossings{Simulation: []Crossing{}, Reference: []Crossing{}},
 		Curve:     Curve{X: []Written{}, Y: []Written{}, UNum: []Number{}},
@@ -157,9 +162,11 @@ func (e *evaluation) work(q *Question, model string, choices Choices) Cell {
 	w.findSimulation()
 	if w.settleUnits() {
 		w.commonStations()
+		w.doubtCurves()
 		w.family()
 		w.budget()
 		w.agree()
+		w.doubtComparison()
 		w.judge()
 		w.draw()
 	}
@@ -174,7 +181,9 @@ type work struct {
 	q       *Question
 	model   string
 	choices Choices
-	cell    Cell
+	// withExcluded compares the excluded stations too, as an alternative.
+	withExcluded bool
+	cell         Cell
 
 	reference *curve
 	runs      []run // finest first
@@ -209,6 +218,19 @@ func (w *work) need(course int, blocks bool, missing string, target Target, code
 	n := notice.New(code, args...)
 	w.tell(n)
 	w.cell.Open = append(w.cell.Open, Open{Course: course, Blocks: blocks, Missing: missing, Text: n.Text, Target: target})
+}
+
+// ask adds a finding that a person has to answer: an open point until there
+// is an answer, then a notice beside it.
+func (w *work) ask(course int, missing, code string, args ...any) {
+	n := notice.New(code, args...)
+	if answer := w.q.Answers[code]; answer != "" {
+		w.tell(n)
+		w.tell(notice.New("finding-answered", missing, answer))
+		return
+	}
+	w.tell(n)
+	w.cell.Open = append(w.cell.Open, Open{Course: course, Missing: missing, Text: n.Text, Target: Target{Kind: "answer", ID: w.q.id(), Field: code}})
 }
 
 // id names a question in targets.

@@ -56,6 +56,10 @@ func (e *evaluation) fragile(q *Question, model string, have Cell) []Fragility {
 		other := e.work(q, model, choices)
 		list = append(list, changes(a.change, have, other)...)
 	}
+	if len(have.Excluded) > 0 {
+		other := e.workWith(&work{e: e, q: q, model: model, choices: q.Choices, withExcluded: true})
+		list = append(list, changes("the excluded stations counted", have, other)...)
+	}
 	return list
 }
 

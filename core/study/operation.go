@@ -78,6 +78,60 @@ func (s *Study) RemoveSource(t Target, at, why string) error {
 	return nil
 }
 
+// Exclude takes a station of the reference, named by its line, out of the
+// comparison; an empty reason is refused.
+func (s *Study) Exclude(t Target, why, at string) error {
+	q := s.questionOf(t.ID)
+	line, err := strconv.Atoi(t.Field)
+	if q == nil || err != nil || strings.TrimSpace(why) == "" {
+		return refuse("an exclusion without a reason", t.Field)
+	}
+	for _, e := range q.Excluded {
+		if e.Line == line {
+			return refuse("a second exclusion of line", t.Field)
+		}
+	}
+	q.Excluded = append(q.Excluded, Exclusion{Line: line, Why: why, Late: q.Revealed})
+	s.log(at, "Station at line "+t.Field+" of "+q.label()+" excluded", why, q.Revealed)
+	return nil
+}
+
+// Include takes an excluded station back.
+func (s *Study) Include(t Target, at string) error {
+	q := s.questionOf(t.ID)
+	line, err := strconv.Atoi(t.Field)
+	if q == nil || err != nil {
+		return refuse("an inclusion", t.Field)
+	}
+	for i, e := range q.Excluded {
+		if e.Line == line {
+			q.Excluded = append(q.Excluded[:i:i], q.Excluded[i+1:]...)
+			s.log(at, "Station at line "+t.Field+" of "+q.label()+" included again", "", q.Revealed)
+			return nil
+		}
+	}
+	return refuse("an inclusion", t.Field)
+}
+
+// Answer records what a person says to a finding; an empty answer opens it
+// again.
+func (s *Study) Answer(t Target, answer, at string) error {
+	q := s.questionOf(t.ID)
+	if q == nil || t.Field == "" {
+		return refuse("an answer", t.Field)
+	}
+	if q.Answers == nil {
+		q.Answers = map[string]string{}
+	}
+	if answer == "" {
+		delete(q.Answers, t.Field)
+	} else {
+		q.Answers[t.Field] = answer
+	}
+	s.log(at, "Finding "+t.Field+" of "+q.label()+" answered", answer, q.Revealed)
+	return nil
+}
+
 // log appends an entry.
 func (s *Study) log(at, what, why string, shown bool) {
 	s.Log = append(s.Log, Entry{Number: len(s.Log) + 1, At: at, What: what, Why: why, Shown: shown})

@@ -93,6 +93,7 @@ type Cell struct {
 	Stations    []Station    `json:"stations"`
 	Outside     []Number     `json:"outside"`
 	StationsAll int          `json:"stations_all"`
+	Excluded    []Excluded   `json:"excluded"`
 	Summary     *Summary     `json:"summary"`
 	Joint       *Joint       `json:"joint"`
 	Crossings   Crossings    `json:"crossings"`
@@ -151,6 +152,15 @@ type Station struct {
 	Hi      Number           `json:"hi"`
 	Line    int              `json:"line"` // line of the reference file
 	Reading string           `json:"reading"`
+}
+
+// Excluded is a station that a person took out of the comparison.
+type Excluded struct {
+	X    quantity.Written `json:"x"`
+	D    quantity.Written `json:"d"`
+	Line int              `json:"line"`
+	Why  string           `json:"why"`
+	Late bool             `json:"late"`
 }
 
 // Summary counts and averages over the common stations.

@@ -111,16 +111,20 @@ func (w *work) commonStations() {
 	r := w.reference
 	rx, ry := inUnit(r.x, r.xUnit, w.xUnit), inUnit(r.y, r.yUnit, w.yUnit)
 	at, rows := make([]float64, 0, len(rx)), make([]int, 0, len(rx))
+	missing := 0
 	for i, x := range rx {
-		if math.IsNaN(x) || math.IsNaN(ry[i]) {
-			continue
+		switch {
+		case math.IsNaN(x) || math.IsNaN(ry[i]):
+			missing++
+		case !w.excluded(i, x, ry[i]):
+			at, rows = append(at, x), append(rows, i)
 		}
-		at, rows = append(at, x), append(rows, i)
 	}
-	if missing := len(rx) - len(at); missing > 0 {
+	if missing > 0 {
 		w.tell(notice.New("station-missing", missing))
 	}
-	w.cell.StationsAll = len(at)
+	w.cell.StationsAll = len(at) + len(w.cell.Excluded)
+	w.tellExcluded()
 	got := w.resample(w.finest(), at, w.choices.Interpolation)
 	for _, n := range got.Notices {
 		w.tell(n)
@@ -136,6 +140,39 @@ func (w *work) commonStations() {
 	w.s, w.uInterp = got.S, got.UInterp
 	if n == 0 {
 		w.need(2, true, "a common station", slipTarget(w.finest().slip, "x.unit"), "station-common", w.q.label())
+	}
+}
+
+// excluded lists a row of the reference that a person took out, and reports
+// whether it is one.
+func (w *work) excluded(row int, x, d float64) bool {
+	if len(w.q.Excluded) == 0 || w.withExcluded {
+		return false
+	}
+	line := w.reference.table.RowLine(row)
+	for _, e := range w.q.Excluded {
+		if e.Line == line {
+			out := Excluded{X: Written(w.xUnit.FromSI(x)), D: Written(w.yUnit.FromSI(d)), Line: line, Why: e.Why, Late: e.Late}
+			out.X, out.D = w.written(row, out.X, out.D)
+			w.cell.Excluded = append(w.cell.Excluded, out)
+			return true
+		}
+	}
+	return false
+}
+
+func (w *work) tellExcluded() {
+	late := 0
+	for _, e := range w.cell.Excluded {
+		if e.Late {
+			late++
+		}
+	}
+	if n := len(w.cell.Excluded); n > 0 {
+		w.tell(notice.New("station-excluded", n, w.cell.StationsAll))
+		if late > 0 {
+			w.need(2, false, "a station plan made before results were seen", w.q.target("excluded"), "station-excluded-late", late)
+		}
 	}
 }
 

@@ -130,6 +130,18 @@ type Question struct {
 	Choices     Choices      `json:"choices"`
 	Downward    bool         `json:"downward"` // draw with negative values upward, as is usual for Cp
 	Revealed    bool         `json:"revealed"` // the comparison was looked at
+	Excluded    []Exclusion  `json:"excluded,omitempty"`
+	// Answers holds, by the code of a finding, what a person answered to it.
+	// An answered finding is no open point any more; the memo prints both.
+	Answers map[string]string `json:"answers,omitempty"`
+}
+
+// Exclusion takes one station out of the comparison. It stays in the tables,
+// hollow in the figure, and the result with it is told.
+type Exclusion struct {
+	Line int    `json:"line"` // of the reference file
+	Why  string `json:"why"`
+	Late bool   `json:"late"` // after the comparison was seen
 }
 
 // Requirement is the accuracy the decision needs.

@@ -44,7 +44,7 @@ function length(phrases: Phrase[]): string {
 
 export function Claim({ view, next }: { view: View; next(): void }) {
   const phrases = list(view.statement.phrases);
-  const header = useRef<HTMLElement>(null);
+  const header = useRef<HTMLDivElement>(null);
   const [passed, setPassed] = useState(false);
   useEffect(() => {
     const watch = new IntersectionObserver(([entry]) => setPassed(!entry!.isIntersecting));

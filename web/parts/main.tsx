@@ -1,23 +1,23 @@
 // The entry of the page.
 
 import { render } from "preact";
-import { Engine } from "../engine/engine";
 
-const engine = new Engine({ reopen: (study) => ({ request: { kind: "open", names: ["study"] }, files: [study] }) });
+import "../style/page.css";
+import { Desk } from "./desk";
+import { listen } from "./intake";
+import { listenToKeys } from "./keys";
+import { Page } from "./page";
+
 const root = document.getElementById("page")!;
+const show = () => render(<Page desk={desk} />, root);
+const desk: Desk = new Desk(() => show());
 
-function Text({ text }: { text: string }) {
-  return <p>{text}</p>;
-}
-
-engine.ask({ kind: "about" }).then(
-  ({ reply }) => {
-    render(<Text text={JSON.stringify(reply.about)} />, root);
-    performance.mark("ready");
-    document.documentElement.dataset["state"] = "ready";
-  },
-  (cause: Error) => {
-    render(<Text text={cause.message} />, root);
-    document.documentElement.dataset["state"] = "stopped";
-  },
-);
+show();
+listen(desk);
+listenToKeys(desk);
+addEventListener("beforeunload", (event) => {
+  if (desk.unsaved) {
+    event.preventDefault();
+  }
+});
+void desk.demo().then(() => performance.mark("ready"));

@@ -10,7 +10,7 @@ interface Shown {
   rows: string[][];
   /** The row that the cursor is at. */
   at?: number | undefined;
-  choose?: (row: number) => void;
+  choose?: ((row: number) => void) | undefined;
 }
 
 const number = /^[±+−-]?[\d.,\s]+(e[+−-]?\d+)?( ?%)?$|^–?$/;
