@@ -76,6 +76,12 @@ var table = map[string]row{
 	"station-interp":        {Note, "The interpolation uncertainty reaches %s %% of u_val: the simulation is coarse against the stations."},
 	"interpolation-unknown": {Stop, "No interpolation is called %q: linear or monotone. Nothing was resampled."},
 
+	"density-used":          {Note, "%s is a pressure divided by density; it was multiplied by ρ = %s of case %s."},
+	"condition-differs":     {Ask, "%s: simulation at %s, data at %s. %s Correct, count it as an input uncertainty, or accept it with a reason."},
+	"condition-corrected":   {Note, "%s: the simulation was moved from %s to %s with the entered sensitivity, by %s."},
+	"condition-accepted":    {Note, "%s: simulation at %s, data at %s; accepted: %s"},
+	"application-outside":   {Note, "The application point %s lies outside the compared conditions (%s): no statement is made there."},
+	"application-unmatched": {Note, "The application point %s names a condition that no comparison states: whether it lies inside is not known."},
 	"station-excluded":      {Note, "%d of %d stations were taken out by hand; they stay in the table with their reasons."},
 	"station-excluded-late": {Ask, "%d stations were taken out after results were seen: logged; the result with them is among the alternatives."},
 
@@ -131,6 +137,13 @@ var table = map[string]row{
 	"grid-support":        {Note, "%d of %d stations are not answered by all three grids: they have no grid uncertainty."},
 	"grid-curve":          {Stop, "The curve of grid %s could not be brought to the stations: there is no grid uncertainty along the curve."},
 	"grid-declared":       {Note, "The numerical uncertainty of %s was entered, not computed: %s"},
+
+	// Reference laws.
+	"law-outside":   {Note, "%d of %d stations of %s have no value: %s is outside %s, where the law says nothing, or the value is too large to hold."},
+	"law-beyond":    {Note, "%d of %d stations of %s are flagged: %s lies beyond the stated range %s (%s). Use them as a reference only for a reason of your own."},
+	"law-condition": {Note, "%s is %s; the stated range of %s is %s (%s). All values are flagged."},
+	"law-default":   {Note, "%s of %s was not given: %s%s was taken."},
+	"law-unchecked": {Note, "%s of %s was not given: a part of the range is unchecked (%s)."},
 
 	// Requests.
 	"request-damaged":    {Stop, "The request could not be read: %s."},

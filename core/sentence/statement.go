@@ -49,6 +49,7 @@ func Of(c *study.Cell) Statement {
 	}
 	w.requirement()
 	w.kind()
+	w.application()
 	w.changes()
 	w.rests()
 	if c.Provisional {
@@ -422,6 +423,13 @@ func (w *writer) kind() {
 		w.say("These data were used to set the model; agreement here is fit quality. ")
 	case w.cell.Kind == study.KindSimulation:
 		w.say("Code-to-code comparison: it says nothing of the error against measurement. ")
+	}
+}
+
+// application says where no statement is made.
+func (w *writer) application() {
+	if a := w.cell.Application; a != nil && a.Outside {
+		w.say("The application point (" + a.Text + ") lies outside the compared conditions (" + a.Range + "). No statement is made there. ")
 	}
 }
 

@@ -161,11 +161,17 @@ func (s *Study) Clone() *Study {
 	c.Files = append([]File{}, s.Files...)
 	c.Slips = append([]Slip{}, s.Slips...)
 	c.Log = append([]Entry{}, s.Log...)
+	c.Application = append([]Condition{}, s.Application...)
+	c.Cases = append([]Card{}, s.Cases...)
+	for i := range c.Cases {
+		c.Cases[i].References = append([]ReferenceQuantity{}, c.Cases[i].References...)
+	}
 	c.Questions = append([]Question{}, s.Questions...)
 	for i := range c.Questions {
 		q := &c.Questions[i]
 		q.Sources = append([]Source{}, q.Sources...)
 		q.Excluded = append([]Exclusion{}, q.Excluded...)
+		q.Conditions = append([]Matching{}, q.Conditions...)
 		q.Answers = maps.Clone(q.Answers)
 		if q.Requirement != nil {
 			r := *q.Requirement

@@ -140,7 +140,7 @@ func (w *work) doubtComparison() {
 	if len(w.s) < 2 {
 		return
 	}
-	if r, found := plausibility.ConstantRatio(w.s, w.d, nil); found {
+	if r, found := plausibility.ConstantRatio(w.s, w.d, w.knownCauses()); found {
 		why := ""
 		if r.Cause != "" {
 			why = ": " + r.Cause + "?"
@@ -177,4 +177,13 @@ func (w *work) doubtCorrelation(e []float64) {
 		w.tell(n)
 		w.stop(2, "the correlation of "+s.Name, Target{Kind: "source", ID: w.q.id(), Field: strconv.Itoa(i) + ".pattern"}, n)
 	}
+}
+
+// knownCauses are the ratios that the reference quantities of the case would
+// explain.
+func (w *work) knownCauses() []plausibility.Cause {
+	if rho, known := w.density(); known {
+		return []plausibility.Cause{{Ratio: rho, Words: "a pressure divided by density (1/ρ = " + quantity.Text(1/rho, 3) + ") against a pressure"}}
+	}
+	return nil
 }

@@ -153,7 +153,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		Case: q.Case, Condition: q.Condition, Quantity: q.Quantity, Symbol: q.Symbol, Model: model,
 		Reference: q.ReferenceID, Kind: q.Kind.Value, Use: q.Use.Value, Downward: q.Downward, Choices: choices,
 		Unit: "1", XUnit: "1",
-		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Sources: []SourceLine{}, Fragile: []Fragility{},
+		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Conditions: []Compared{}, Sources: []SourceLine{}, Fragile: []Fragility{},
 		Notices: []notice.Notice{}, FilesUsed: []string{},
 		Crossings: Crossings{Simulation: []Crossing{}, Reference: []Crossing{}},
 		Curve:     Curve{X: []Written{}, Y: []Written{}, UNum: []Number{}},
@@ -162,6 +162,7 @@ func (e *evaluation) workWith(w *work) Cell {
 	w.findSimulation()
 	if w.settleUnits() {
 		w.commonStations()
+		w.matchConditions()
 		w.doubtCurves()
 		w.family()
 		w.budget()
@@ -170,6 +171,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		w.judge()
 		w.draw()
 	}
+	w.application()
 	w.close()
 	return w.cell
 }

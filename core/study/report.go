@@ -94,6 +94,8 @@ type Cell struct {
 	Outside     []Number     `json:"outside"`
 	StationsAll int          `json:"stations_all"`
 	Excluded    []Excluded   `json:"excluded"`
+	Conditions  []Compared   `json:"conditions"`
+	Application *Application `json:"application"` // null where no application point is stated
 	Summary     *Summary     `json:"summary"`
 	Joint       *Joint       `json:"joint"`
 	Crossings   Crossings    `json:"crossings"`
@@ -152,6 +154,25 @@ type Station struct {
 	Hi      Number           `json:"hi"`
 	Line    int              `json:"line"` // line of the reference file
 	Reading string           `json:"reading"`
+}
+
+// Compared is one condition on both sides and the effect of its difference.
+type Compared struct {
+	Name       string `json:"name"`
+	Unit       string `json:"unit"`
+	Simulation Number `json:"simulation"`
+	Data       Number `json:"data"`
+	Effect     Number `json:"effect"` // on the quantity, in its unit; null where no sensitivity is given
+	Handling   string `json:"handling"`
+	Why        string `json:"why"`
+}
+
+// Application sets the point of application against the conditions at which
+// the quantity was compared, over all cases of the study.
+type Application struct {
+	Text    string `json:"text"` // e.g. α = 11°
+	Outside bool   `json:"outside"`
+	Range   string `json:"range"` // e.g. α 4.2° to 9°
 }
 
 // Excluded is a station that a person took out of the comparison.

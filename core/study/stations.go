@@ -52,6 +52,7 @@ func (w *work) settleUnits() bool {
 		w.stop(2, "a common form of both sides", slipTarget(s.slip, "x.column"), n)
 		return false
 	}
+	w.byDensity(s, d)
 	ok := w.sameUnits(s.yUnit, d.yUnit, s.slip.Y, d.slip.Y, &w.yUnit, "y.unit")
 	if !s.scalar() {
 		ok = w.sameUnits(s.xUnit, d.xUnit, s.slip.X, d.slip.X, &w.xUnit, "x.unit") && ok

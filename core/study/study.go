@@ -50,7 +50,11 @@ type Study struct {
 	Files     []File     `json:"files"`
 	Slips     []Slip     `json:"slips"`
 	Questions []Question `json:"questions"`
-	Log       []Entry    `json:"log"`
+	Cases     []Card     `json:"cases,omitempty"`
+	// Application is the point the result is meant for, in the conditions of
+	// the questions; empty when it is not stated.
+	Application []Condition `json:"application,omitempty"`
+	Log         []Entry     `json:"log"`
 
 	unknown map[string]json.RawMessage // fields of the document this edition does not know, kept as they came
 }
@@ -131,9 +135,55 @@ type Question struct {
 	Downward    bool         `json:"downward"` // draw with negative values upward, as is usual for Cp
 	Revealed    bool         `json:"revealed"` // the comparison was looked at
 	Excluded    []Exclusion  `json:"excluded,omitempty"`
+	Conditions  []Matching   `json:"conditions,omitempty"`
 	// Answers holds, by the code of a finding, what a person answered to it.
 	// An answered finding is no open point any more; the memo prints both.
 	Answers map[string]string `json:"answers,omitempty"`
+}
+
+// Card holds the reference quantities of a case.
+type Card struct {
+	Name       string              `json:"name"`
+	References []ReferenceQuantity `json:"references"`
+}
+
+// Density is the symbol of the density on a case card: it relates a pressure
+// to a pressure divided by density.
+const Density = "ρ"
+
+// ReferenceQuantity is one quantity of a case card.
+type ReferenceQuantity struct {
+	Symbol string  `json:"symbol"`
+	Value  float64 `json:"value"`
+	Unit   string  `json:"unit"`
+	Origin string  `json:"origin"`
+}
+
+// Condition is the value of one condition, such as an angle.
+type Condition struct {
+	Name  string  `json:"name"`
+	Unit  string  `json:"unit"`
+	Value float64 `json:"value"`
+}
+
+// Ways to treat a difference of conditions between the two sides.
+const (
+	Corrected = "corrected" // the simulation is moved to the condition of the data
+	AsInput   = "input"     // the effect is counted as an input uncertainty
+	Tolerated = "accepted"  // left, with a reason
+)
+
+// Matching is one condition on both sides. Sensitivity is the change of the
+// quantity, in the unit of the data, for one unit of the condition.
+type Matching struct {
+	Name        string   `json:"name"`
+	Unit        string   `json:"unit"`
+	Simulation  float64  `json:"simulation"`
+	Data        float64  `json:"data"`
+	Sensitivity *float64 `json:"sensitivity"`
+	Handling    string   `json:"handling"`
+	Why         string   `json:"why"`
+	Model       string   `json:"model,omitempty"` // the model it belongs to, "" for all
 }
 
 // Exclusion takes one station out of the comparison. It stays in the tables,

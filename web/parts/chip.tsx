@@ -9,6 +9,7 @@ import { useDesk } from "./context";
 import { list } from "./desk";
 import { Gap } from "./hatch";
 import { placeOf } from "./jump";
+import { Way } from "./way";
 import { Words } from "./words";
 
 interface Shown {
@@ -22,7 +23,7 @@ interface Shown {
 export function Chip({ entry, bare, after }: Shown) {
   const desk = useDesk();
   const [editing, setEditing] = useState(false);
-  const chip = useRef<HTMLButtonElement>(null);
+  const chip = useRef<HTMLSpanElement>(null);
   const back = useRef(false);
   const options = list(entry.options);
   const guessed = entry.by === "guessed";
@@ -80,8 +81,9 @@ export function Chip({ entry, bare, after }: Shown) {
           <Words text={entry.label} />{" "}
         </>
       )}
-      <button
-        ref={chip}
+      <Way
+        handle={chip}
+        act={() => setEditing(true)}
         class={"chip" + (guessed ? " guessed" : entry.open ? " missing" : "")}
         data-place={placeOf(entry.target)}
         data-open={entry.open ? "" : undefined}
@@ -100,7 +102,6 @@ export function Chip({ entry, bare, after }: Shown) {
             }
           }
         }}
-        onClick={() => setEditing(true)}
       >
         {shown === "" || shown === "–" ? (
           entry.open ? (
@@ -113,7 +114,7 @@ export function Chip({ entry, bare, after }: Shown) {
         ) : (
           shown
         )}
-      </button>
+      </Way>
       {guessed && (
         <button class="accept" tabIndex={-1} aria-label={`Accept ${entry.label} ${shown}`} onClick={() => void accept()}>
           accept

@@ -8,6 +8,7 @@ import { useDesk } from "./context";
 import { list } from "./desk";
 import { Gap } from "./hatch";
 import { jump } from "./jump";
+import { Way } from "./way";
 import { Words } from "./words";
 
 const said: Record<string, string> = { missing: "missing: ", guessed: "guessed: ", assumed: "assumed: " };
@@ -30,10 +31,10 @@ function PhraseOf({ phrase, bare }: { phrase: Phrase; bare?: boolean }) {
     return <span class={"phrase " + mark}>{inside}</span>;
   }
   return (
-    <button class={"phrase " + mark} onClick={() => jump(desk, target)}>
+    <Way class={"phrase " + mark} act={() => jump(desk, target)}>
       {mark in said && <span class="spoken">{said[mark]}</span>}
       {inside}
-    </button>
+    </Way>
   );
 }
 

@@ -11,7 +11,7 @@ type Files = Uint8Array<ArrayBuffer>[];
 export type Asked = Omit<Request, "protocol" | "number" | "at">;
 
 /** What lies over the page. */
-export type Sheet = "" | "keys" | "help" | "typing" | "find" | "copy" | "new";
+export type Sheet = "" | "keys" | "help" | "typing" | "find" | "copy";
 
 /** How the page is laid out; nothing of it is in the study. */
 export interface Layout {
@@ -21,13 +21,17 @@ export interface Layout {
   tables: boolean;
   open: boolean[];
   board: boolean;
-  whole: boolean;
   sheet: Sheet;
 }
 
 /** Slices that are empty in Go may come as null. */
 export function list<T>(items: T[] | null | undefined): T[] {
   return items ?? [];
+}
+
+/** On a narrow page one course is open at a time. */
+export function narrow(): boolean {
+  return matchMedia("(max-width: 699px)").matches;
 }
 
 /** The time of a line of the log, to the minute; the core has no clock. */
@@ -45,7 +49,13 @@ export class Desk {
   /** Text to be copied by hand where the browser gives no clipboard. */
   byHand = "";
   layout: Layout = {
-    theme: "auto", mono: false, letters: true, tables: false, open: [false, true, false, true, true], board: false, whole: false, sheet: "",
+    theme: "auto",
+    mono: false,
+    letters: true,
+    tables: false,
+    open: narrow() ? [false, false, false, true, false] : [false, true, false, true, true],
+    board: false,
+    sheet: "",
   };
 
   readonly engine = new Engine({ reopen: (study) => ({ request: { kind: "open", names: ["study"] }, files: [study] }) });

@@ -1,7 +1,7 @@
 // The way from a blank, a number or an open point to the place that answers it.
 
 import type { Target } from "../engine/types";
-import type { Desk } from "./desk";
+import { narrow, type Desk } from "./desk";
 
 /** The name of the place of an entry, in data-place. */
 export function placeOf(target: Target): string {
@@ -34,8 +34,8 @@ export function jump(desk: Desk, target: Target): void {
 
 /** Opens a course; on a narrow page it is then the only open one. */
 export function openCourse(desk: Desk, course: number): void {
-  const narrow = matchMedia("(max-width: 699px)").matches;
-  desk.lay({ open: desk.layout.open.map((open, i) => i === course || (open && !narrow)) });
+  const alone = narrow();
+  desk.lay({ open: desk.layout.open.map((open, i) => i === course || (open && !alone)) });
 }
 
 function courseOf(target: Target): number | undefined {

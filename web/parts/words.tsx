@@ -4,8 +4,11 @@ import { Fragment } from "preact";
 
 const index = /(?<![\w.])([uUk])_(val|num|input|D|interp|iter|grid)(?!\w)/;
 
+/** A number stays with its sign and its unit. */
+const unbroken = / [=<>≤≥] (?=[\d±+−])|± (?=\d)| %/g;
+
 export function Words({ text }: { text: string }) {
-  const pieces = text.split(index);
+  const pieces = text.replace(unbroken, (space) => space.replace(/ /g, "\u00a0")).split(index);
   return (
     <>
       {pieces.map((piece, i) =>

@@ -70,21 +70,19 @@ export function Work() {
         <button onClick={() => desk.lay({ sheet: "help" })}>how it computes</button>.
       </p>
       <p>
-        Light:{" "}
+        The page is{" "}
         {(["auto", "light", "dark"] as const).map((one) => (
           <button key={one} aria-pressed={theme === one} onClick={() => void desk.show({ theme: one })}>
             {one === "auto" ? "as the system" : one}
           </button>
         ))}
-        ; colours:{" "}
         <button aria-pressed={mono} onClick={() => void desk.show({ mono: !mono })}>
-          {mono ? "grey" : "on"}
+          monochrome
         </button>
-        ; letter keys:{" "}
+        ; letter keys are{" "}
         <button aria-pressed={letters} onClick={() => desk.lay({ letters: !letters })}>
           {letters ? "on" : "off"}
         </button>
-        .
       </p>
     </section>
   );

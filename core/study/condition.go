@@ -1,0 +1,181 @@
+package study
+
+import (
+	"math"
+	"strconv"
+	"strings"
+
+	"weirmark/core/notice"
+	"weirmark/core/quantity"
+)
+
+// density returns the density of the case, in SI.
+func (w *work) density() (float64, bool) {
+	for _, c := range w.e.study.Cases {
+		if c.Name != w.q.Case {
+			continue
+		}
+		for _, r := range c.References {
+			unit, err := quantity.Parse(r.Unit)
+			if r.Symbol == Density && err == nil && unit.Dimension == (quantity.Dimension{-3, 1}) && r.Value > 0 {
+				return unit.ToSI(r.Value), true
+			}
+		}
+	}
+	return 0, false
+}
+
+// byDensity brings a pressure divided by density to a pressure, where the
+// other side is one and the case states its density.
+func (w *work) byDensity(sides ...*curve) {
+	rho, known := w.density()
+	if !known {
+		return
+	}
+	for i, c := range sides {
+		other := sides[1-i]
+		if !c.yUnit.known || !other.yUnit.known || !c.yUnit.unit.KinematicOf(other.yUnit.unit) {
+			continue
+		}
+		for _, r := range w.curves(c) {
+			r.y, r.u = times(r.y, rho), times(r.u, rho)
+			r.yUnit = axis{unit: quantity.Unit{Symbol: "Pa", Dimension: other.yUnit.unit.Dimension, Factor: 1}, known: true}
+		}
+		if c == w.reference || w.reference == nil {
+			w.yUnit = unit{c.yUnit.unit, "Pa"}
+		}
+		w.tell(notice.New("density-used", c.slip.Y.Column.Value+" of "+w.e.study.fileName(c.slip), quantity.Text(rho, 6)+" kg/m³", w.q.Case))
+	}
+}
+
+// curves returns the curve, and with the finest run all runs of its family.
+func (w *work) curves(c *curve) []*curve {
+	if c != w.finest() {
+		return []*curve{c}
+	}
+	all := []*curve{}
+	for _, r := range w.runs {
+		all = append(all, r.curve)
+	}
+	if w.grids != nil {
+		all = append(all, w.grids)
+	}
+	return all
+}
+
+func times(values []float64, f float64) []float64 {
+	if values == nil {
+		return nil
+	}
+	out := make([]float64, len(values))
+	for i, v := range values {
+		out[i] = v * f
+	}
+	return out
+}
+
+// matchConditions treats the differences of conditions between the two sides.
+func (w *work) matchConditions() {
+	for i := range w.q.Conditions {
+		m := &w.q.Conditions[i]
+		if m.Model == "" || m.Model == w.model {
+			w.matchCondition(i, m)
+		}
+	}
+}
+
+func (w *work) matchCondition(at int, m *Matching) {
+	line := Compared{Name: m.Name, Unit: m.Unit, Simulation: Number(m.Simulation), Data: Number(m.Data), Effect: None, Handling: m.Handling, Why: m.Why}
+	effect := math.NaN() // in SI
+	if m.Sensitivity != nil {
+		effect = w.yUnit.StepToSI(*m.Sensitivity * (m.Data - m.Simulation))
+		line.Effect = w.step(effect)
+	}
+	w.cell.Conditions = append(w.cell.Conditions, line)
+	if m.Simulation == m.Data {
+		return
+	}
+	s, d := valueUnit(m.Simulation, m.Unit), valueUnit(m.Data, m.Unit)
+	target := Target{Kind: "condition", ID: w.q.id(), Field: strconv.Itoa(at) + ".handling"}
+	switch {
+	case m.Handling == Corrected && m.Sensitivity != nil:
+		for i := range w.s {
+			w.s[i] += effect
+		}
+		w.tell(notice.New("condition-corrected", m.Name, s, d, quantity.Signed(float64(line.Effect), 3)+w.cell.UnitSuffix()))
+	case m.Handling == AsInput && m.Sensitivity != nil:
+		u := make([]float64, len(w.s))
+		for i := range u {
+			u[i] = math.Abs(effect)
+		}
+		w.add(OfInput, "difference of "+m.Name, s+" against "+d+", the whole effect as a standard uncertainty", orWord(m.Why, "entered"), u, true, false)
+	case m.Handling == Tolerated && m.Why != "":
+		w.tell(notice.New("condition-accepted", m.Name, s, d, m.Why))
+	default:
+		w.need(2, false, "the same "+m.Name+" on both sides", target, "condition-differs", m.Name, s, d, w.effectWords(m, effect))
+	}
+}
+
+// effectWords says what the difference does to the quantity.
+func (w *work) effectWords(m *Matching, effect float64) string {
+	if m.Sensitivity == nil {
+		return "Its effect is not known: enter a sensitivity."
+	}
+	text := "With the sensitivity " + quantity.Text(*m.Sensitivity, 3) + " per " + orWord(m.Unit, "unit") + " the effect is " + quantity.Text(float64(w.step(effect)), 2) + w.cell.UnitSuffix()
+	if w.cell.Scalar && len(w.d) == 1 && w.d[0] != 0 {
+		text += " (" + quantity.Percent(math.Abs(effect/w.d[0])) + " % of the data)"
+	}
+	return text + "."
+}
+
+func valueUnit(v float64, unit string) string {
+	text := strings.ReplaceAll(trim(v), "-", "−")
+	switch unit {
+	case "", "1":
+		return text
+	case "°", "deg":
+		return text + "°"
+	}
+	return text + " " + unit
+}
+
+// application sets the point of application against the conditions of all
+// questions of the same quantity.
+func (w *work) application() {
+	points := w.e.study.Application
+	if len(points) == 0 {
+		return
+	}
+	a := &Application{}
+	var texts, ranges []string
+	for _, p := range points {
+		lo, hi, found := w.e.conditionRange(p)
+		text := p.Name + " = " + valueUnit(p.Value, p.Unit)
+		texts = append(texts, text)
+		if !found {
+			w.tell(notice.New("application-unmatched", text))
+			continue
+		}
+		ranges = append(ranges, p.Name+" "+valueUnit(lo, p.Unit)+" to "+valueUnit(hi, p.Unit))
+		a.Outside = a.Outside || p.Value < lo || p.Value > hi
+	}
+	a.Text, a.Range = strings.Join(texts, ", "), strings.Join(ranges, ", ")
+	w.cell.Application = a
+	if a.Outside {
+		w.tell(notice.New("application-outside", a.Text, a.Range))
+	}
+}
+
+// conditionRange returns the range of a condition over all questions that
+// state it in the same unit.
+func (e *evaluation) conditionRange(p Condition) (lo, hi float64, found bool) {
+	lo, hi = math.Inf(1), math.Inf(-1)
+	for i := range e.study.Questions {
+		for _, m := range e.study.Questions[i].Conditions {
+			if m.Name == p.Name && m.Unit == p.Unit {
+				lo, hi, found = min(lo, m.Data), max(hi, m.Data), true
+			}
+		}
+	}
+	return lo, hi, found
+}
