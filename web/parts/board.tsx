@@ -7,6 +7,11 @@ import type { View } from "../engine/types";
 import { list } from "./desk";
 import { Stack } from "./stack";
 
+/** A name may be broken after its joints. */
+function breakable(name: string): string {
+  return name.replace(/[_.-](?=.)/g, "$&\u200b");
+}
+
 export function TallyBoard({ view, select }: { view: View; select(cell: string): void }) {
   const grid = useRef<HTMLTableElement>(null);
   const models = list(view.board.models);
@@ -43,7 +48,7 @@ export function TallyBoard({ view, select }: { view: View; select(cell: string):
               <td />
               {models.map((model) => (
                 <th key={model} scope="col" title={model}>
-                  <span class="model">{model === "" ? "–" : model}</span>
+                  <span class="model">{model === "" ? "–" : breakable(model)}</span>
                 </th>
               ))}
             </tr>

@@ -54,7 +54,8 @@ function CourseOf({ view, course, place, doubtful }: Shown) {
         <p class="answer">
           <Words text={course.answer} />
         </p>
-        {open && (veiled ? <Veil view={view} /> : <Evidence view={view} course={course} place={place} />)}
+        {open && !veiled && <Evidence view={view} course={course} place={place} />}
+        {open && veiled && place === 3 && <Veil view={view} />}
         {open && <Entries view={view} place={place} />}
       </div>
       <div class="margin">
