@@ -39,6 +39,9 @@ function now(): string {
   return new Date().toISOString().slice(0, 16).replace("T", " ");
 }
 
+/** How long the core may be at work before the page offers to stop it. */
+const patience = 4000;
+
 /** How long the study has to rest before a copy of it is kept for a new start. */
 const rest = 800;
 
@@ -48,6 +51,8 @@ export class Desk {
   message = "";
   /** Text to be copied by hand where the browser gives no clipboard. */
   byHand = "";
+  /** The core has been at work for long; the person may stop it. */
+  slow = false;
   layout: Layout = {
     theme: "auto",
     mono: false,
@@ -63,6 +68,7 @@ export class Desk {
   #asking = 0;
   #demo = false;
   #lost = false;
+  #patience: ReturnType<typeof setTimeout> | undefined;
   #resting: ReturnType<typeof setTimeout> | undefined;
   #visited: Target[] = [];
 
@@ -116,7 +122,9 @@ export class Desk {
 
   /** Asks the core; the page is busy until the answer is on it. */
   async ask(asked: Asked, files: Files = []): Promise<{ reply: Reply; files: Files } | undefined> {
-    this.#asking++;
+    if (this.#asking++ === 0) {
+      this.#patience = setTimeout(() => this.#long(true), patience);
+    }
     document.documentElement.dataset["state"] = this.view === undefined ? "starting" : "busy";
     try {
       const answer = await this.engine.ask({ ...asked, theme: asked.theme ?? this.theme, at: now() }, files);
@@ -137,9 +145,25 @@ export class Desk {
       await this.#interrupted(cause);
       return undefined;
     } finally {
-      if (--this.#asking === 0 && document.documentElement.dataset["state"] !== "stopped") {
-        document.documentElement.dataset["state"] = "ready";
+      if (--this.#asking === 0) {
+        clearTimeout(this.#patience);
+        this.#long(false);
+        if (this.engine.change.state !== "stopped") {
+          document.documentElement.dataset["state"] = "ready";
+        }
       }
+    }
+  }
+
+  /** Ends what the core is at; it starts again with the study as it was before. */
+  stop(): void {
+    this.engine.cancel();
+  }
+
+  #long(slow: boolean): void {
+    if (this.slow !== slow) {
+      this.slow = slow;
+      this.#changed();
     }
   }
 

@@ -62,6 +62,11 @@ export function Page({ desk }: { desk: Desk }) {
             </p>
           ))}
         </div>
+        {desk.slow && (
+          <p class="message" role="status">
+            The engine is still at work. <button onClick={() => desk.stop()}>Stop it</button> and go on with the study as it was before.
+          </p>
+        )}
         <Spoken text={view.spoken} />
       </header>
       <div class={"bench" + (layout.board ? " drawn" : "")}>
