@@ -2,17 +2,41 @@ package uncertainty
 
 import "math"
 
-// Source is the standard uncertainty of one cause at every station.
+// Source is the standard uncertainty of one cause at every station, with its
+// pattern: independent between stations where none is given, else the first
+// that is given of common, group and length.
 type Source struct {
-	U      []float64 // >= 0; NaN where it is not known
+	// U is >= 0 and NaN where it is not known. Where the error is shared, U
+	// carries the sign with which the shared error acts: a common scale error
+	// has the sign of the reading (see OfScale).
+	U      []float64
 	Common bool      // the same unknown error at all stations, scaled by U
+	Group  []int     // a label for every station: one error for each label
+	X      []float64 // positions of the stations, in the unit of Length
+	Length float64   // > 0: correlation exp(-|x_i - x_j|/Length)
+}
+
+// Grouped is a source whose error is shared within each group of stations and
+// independent between groups: V_ij = U_i U_j where Label_i = Label_j, else 0.
+type Grouped struct {
+	U     []float64
+	Label []int
+}
+
+// Markov is a source with a correlation length:
+// V_ij = U_i U_j exp(-|X_i - X_j|/Length).
+type Markov struct {
+	U, X   []float64
+	Length float64
 }
 
 // Budget is the covariance of the stations: V = diag(Variance) + sum of
-// c cᵀ over the columns of Common.
+// c cᵀ over the columns of Common + the sources of Groups and Markov.
 type Budget struct {
 	Variance []float64
 	Common   [][]float64
+	Groups   []Grouped
+	Markov   []Markov
 }
 
 // Combine returns the budget of independent causes over n stations. Stations
@@ -20,15 +44,25 @@ type Budget struct {
 func Combine(n int, sources []Source) Budget {
 	b := Budget{Variance: make([]float64, n)}
 	for _, s := range sources {
-		if s.Common {
+		switch {
+		case s.Common:
 			b.Common = append(b.Common, s.U)
-			continue
-		}
-		for i, u := range s.U {
-			b.Variance[i] += float64(u * u)
+		case s.Group != nil:
+			b.Groups = append(b.Groups, Grouped{s.U, s.Group})
+		case s.Length > 0:
+			b.Markov = append(b.Markov, Markov{s.U, s.X, s.Length})
+		default:
+			addSquares(b.Variance, s.U)
 		}
 	}
 	return b
+}
+
+// addSquares adds the squares of u to the variance.
+func addSquares(variance, u []float64) {
+	for i, v := range u {
+		variance[i] += float64(v * v)
+	}
 }
 
 // Total returns the standard uncertainty at every station, the square root of
@@ -37,9 +71,13 @@ func (b Budget) Total() []float64 {
 	total := make([]float64, len(b.Variance))
 	copy(total, b.Variance)
 	for _, c := range b.Common {
-		for i, u := range c {
-			total[i] += float64(u * u)
-		}
+		addSquares(total, c)
+	}
+	for _, g := range b.Groups {
+		addSquares(total, g.U)
+	}
+	for _, m := range b.Markov {
+		addSquares(total, m.U)
 	}
 	for i, v := range total {
 		total[i] = math.Sqrt(v)
@@ -47,55 +85,45 @@ func (b Budget) Total() []float64 {
 	return total
 }
 
-// Constant returns n stations of the same standard uncertainty.
-func Constant(n int, u float64) []float64 {
-	all := make([]float64, n)
-	for i := range all {
-		all[i] = u
-	}
-	return all
-}
-
-// OfReading returns fraction times |d| at every station.
-func OfReading(d []float64, fraction float64) []float64 {
-	all := make([]float64, len(d))
-	for i, v := range d {
-		all[i] = math.Abs(v) * fraction
-	}
-	return all
-}
-
-// Scaled returns u divided by the coverage factor k.
-func Scaled(u []float64, k float64) []float64 {
-	all := make([]float64, len(u))
-	for i, v := range u {
-		all[i] = v / k
-	}
-	return all
-}
-
-// Replicates returns the mean of repeated readings, their standard deviation
-// (divisor n-1) and the standard uncertainty of the mean s/sqrt(n), JCGM
-// 100:2008 4.2 (clause from memory). Fewer than two readings have no s, none
-// have no mean. Readings are taken from the first one, so that a large common
-// part takes no digits.
-func Replicates(x []float64) (mean, s, u float64) {
-	if len(x) == 0 {
-		return math.NaN(), math.NaN(), math.NaN()
-	}
-	n := float64(len(x))
+// Covariance returns the element V_ij.
+func (b Budget) Covariance(i, j int) float64 {
 	sum := 0.0
-	for _, v := range x {
-		sum += v - x[0]
+	if i == j {
+		sum = b.Variance[i]
 	}
-	mean = x[0] + sum/n
-	if len(x) < 2 {
-		return mean, math.NaN(), math.NaN()
+	for _, c := range b.Common {
+		sum += float64(c[i] * c[j])
 	}
-	squares := 0.0
-	for _, v := range x {
-		squares += float64((v - mean) * (v - mean))
+	for _, g := range b.Groups {
+		if g.Label[i] == g.Label[j] {
+			sum += float64(g.U[i] * g.U[j])
+		}
 	}
-	s = math.Sqrt(squares / (n - 1))
-	return mean, s, s / math.Sqrt(n)
+	for _, m := range b.Markov {
+		sum += float64(float64(m.U[i]*m.U[j]) * math.Exp(-math.Abs(m.X[i]-m.X[j])/m.Length))
+	}
+	return sum
+}
+
+// At returns the budget of some of the stations, in the order of rows.
+func (b Budget) At(rows []int) Budget {
+	part := Budget{Variance: pick(b.Variance, rows)}
+	for _, c := range b.Common {
+		part.Common = append(part.Common, pick(c, rows))
+	}
+	for _, g := range b.Groups {
+		part.Groups = append(part.Groups, Grouped{pick(g.U, rows), pick(g.Label, rows)})
+	}
+	for _, m := range b.Markov {
+		part.Markov = append(part.Markov, Markov{pick(m.U, rows), pick(m.X, rows), m.Length})
+	}
+	return part
+}
+
+func pick[T any](values []T, rows []int) []T {
+	out := make([]T, len(rows))
+	for k, i := range rows {
+		out[k] = values[i]
+	}
+	return out
 }

@@ -20,6 +20,7 @@ func figures(arguments []string) error {
 	}
 	result := api.Build(api.BuildOptions{
 		EntryPoints:       []string{"web/figures/main.ts"},
+		Tsconfig:          "web/tsconfig.json", // not whatever lies above the checkout
 		Outfile:           out,
 		Bundle:            true,
 		Format:            api.FormatIIFE,

@@ -99,6 +99,7 @@ func bundle(root, entry string) (map[string]string, error) {
 	result := api.Build(api.BuildOptions{
 		AbsWorkingDir:     folder,
 		EntryPoints:       []string{entry},
+		Tsconfig:          filepath.Join(folder, "web", "tsconfig.json"), // not whatever lies above the checkout
 		Outdir:            "dist",
 		Bundle:            true,
 		Format:            api.FormatIIFE,
