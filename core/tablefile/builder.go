@@ -178,7 +178,7 @@ func (b *builder) fits() bool {
 func (b *builder) mostlyNumbers() bool {
 	numbers := 0
 	for _, c := range b.split.cells {
-		if _, kind, _ := b.r.cells.read(b.split.bytes(c)); kind == cellNumber {
+		if _, kind, _ := readCell(b.split.bytes(c)); kind == cellNumber {
 			numbers++
 		}
 	}
@@ -221,8 +221,8 @@ func (b *builder) holdsData() bool {
 			if b.numeric == nil || b.numeric[column] {
 				any = true
 				text := b.split.bytes(c)
-				_, kind, _ := b.r.cells.read(text)
-				if kind != cellText || column == len(b.values)-1 && b.r.cells.isNumberAndRemark(text) {
+				_, kind, _ := readCell(text)
+				if kind != cellText || column == len(b.values)-1 && isNumberAndRemark(text) {
 					return true
 				}
 			}
@@ -235,11 +235,11 @@ func (b *builder) holdsData() bool {
 // readValue returns the number of a cell and records what is not plain. A
 // remark behind the number of the last cell of a row is left out.
 func (b *builder) readValue(column, line int, text []byte, last bool) float64 {
-	value, kind, form := b.r.cells.read(text)
+	value, kind, form := readCell(text)
 	if kind == cellText && last {
 		if head, ok := beforeRemark(text); ok {
 			text = head
-			value, kind, form = b.r.cells.read(text)
+			value, kind, form = readCell(text)
 		}
 	}
 	g := &b.columns[column]
@@ -270,12 +270,12 @@ func beforeRemark(text []byte) ([]byte, bool) {
 	return bytes.TrimSpace(text[:at]), true
 }
 
-func (r cellReader) isNumberAndRemark(text []byte) bool {
+func isNumberAndRemark(text []byte) bool {
 	head, ok := beforeRemark(text)
 	if !ok {
 		return false
 	}
-	_, kind, _ := r.read(head)
+	_, kind, _ := readCell(head)
 	return kind == cellNumber
 }
 

@@ -31,7 +31,6 @@ type layout struct {
 // sample is the first lines of content, split by one separator.
 type sample struct {
 	separator byte
-	cells     cellReader
 	lines     []sampleLine
 	foreign   int // text cells that hold a stronger separator
 	openQuote int // offset of a quote that never closes, else -1
@@ -64,7 +63,7 @@ func (r *reader) sampleEnd(from int) int {
 
 // takeSample splits the lines of content in data[from:end] by separator.
 func (r *reader) takeSample(separator byte, from, end int) sample {
-	s := sample{separator: separator, cells: r.cells, openQuote: -1}
+	s := sample{separator: separator, openQuote: -1}
 	split := splitter{data: r.data, separator: separator}
 	for at := from; at < end; {
 		kind, _ := kindOfLine(r.data, at, separator)
@@ -88,8 +87,8 @@ func (s *sample) look(split *splitter, at, next int) sampleLine {
 	line := sampleLine{at: at, next: next, count: split.count, cells: make([]cellKind, 0, len(split.cells))}
 	for i, c := range split.cells {
 		text := split.bytes(c)
-		_, kind, _ := s.cells.read(text)
-		if kind == cellText && i == len(split.cells)-1 && s.cells.isNumberAndRemark(text) {
+		_, kind, _ := readCell(text)
+		if kind == cellText && i == len(split.cells)-1 && isNumberAndRemark(text) {
 			kind = cellNumber
 		}
 		switch kind {

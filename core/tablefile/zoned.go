@@ -223,7 +223,7 @@ func (z *zones) judgeRow(columns int) (int, byte) {
 	best, bestNumbers, bestColumns := byte(spaces), -1, max(1, columns)
 	for _, separator := range []byte{spaces, ',', '\t', ';'} {
 		split := splitter{data: z.data, separator: separator, repeats: true}
-		s := sample{separator: separator, cells: z.cells}
+		s := sample{separator: separator}
 		split.split(z.at)
 		if split.openQuote >= 0 || split.count == 0 {
 			continue
