@@ -127,6 +127,7 @@ export interface View {
   sources: SourceCard[] | null;
   choices: Entry[] | null;
   question: Entry[] | null;
+  excluded: ExcludedCard[] | null;
   people: Entry[] | null;
   files: FileCard[] | null;
   log: StudyEntry[] | null;
@@ -262,6 +263,11 @@ export interface Entry {
   open: boolean;
 }
 
+export interface ExcludedCard {
+  target: Target;
+  text: string;
+}
+
 export interface FileCard {
   id: string;
   name: string;
@@ -317,6 +323,9 @@ export interface Cell {
   stations: Station[] | null;
   outside: (number | null)[] | null;
   stations_all: number;
+  excluded: Excluded[] | null;
+  conditions: Compared[] | null;
+  application: Application | null;
   summary: Summary | null;
   joint: Joint | null;
   crossings: Crossings;
@@ -417,6 +426,30 @@ export interface Station {
   hi: number | null;
   line: number;
   reading: string;
+}
+
+export interface Excluded {
+  x: number | null;
+  d: number | null;
+  line: number;
+  why: string;
+  late: boolean;
+}
+
+export interface Compared {
+  name: string;
+  unit: string;
+  simulation: number | null;
+  data: number | null;
+  effect: number | null;
+  handling: string;
+  why: string;
+}
+
+export interface Application {
+  text: string;
+  outside: boolean;
+  range: string;
 }
 
 export interface Summary {
