@@ -30,6 +30,7 @@ type View struct {
 	Sources   []SourceCard       `json:"sources"`
 	Choices   []Entry            `json:"choices"`
 	Question  []Entry            `json:"question"` // requirement, kind and use of the reference
+	Excluded  []ExcludedCard     `json:"excluded"` // stations that were taken out, to take them back
 	People    []Entry            `json:"people"`
 	Files     []FileCard         `json:"files"`
 	Log       []study.Entry      `json:"log"`
@@ -138,6 +139,12 @@ type SourceCard struct {
 	Entries []Entry      `json:"entries"`
 }
 
+// ExcludedCard is a station that a person took out of the comparison.
+type ExcludedCard struct {
+	Target study.Target `json:"target"` // to include it again
+	Text   string       `json:"text"`
+}
+
 // FileCard is a file of the study.
 type FileCard struct {
 	ID      string   `json:"id"`
@@ -153,7 +160,7 @@ func (s *Session) view() (*View, error) {
 	report := s.report()
 	v := &View{
 		Title: s.study.Title, Purpose: s.study.Purpose, Status: status(s.study), Unsaved: len(s.study.Log) > s.saved,
-		Board: board(&report), Courses: []Course{}, Slips: s.slipCards(), Sources: []SourceCard{}, Choices: []Entry{}, Question: []Entry{},
+		Board: board(&report), Courses: []Course{}, Slips: s.slipCards(), Sources: []SourceCard{}, Choices: []Entry{}, Question: []Entry{}, Excluded: []ExcludedCard{},
 		People: people(s.study), Files: fileCards(&report), Log: report.Log, Notices: []string{},
 	}
 	if n := len(s.past); n > 0 {
@@ -193,6 +200,12 @@ func (s *Session) view() (*View, error) {
 	v.Courses = courses(c, cellFigures(figures, c), v.Veiled)
 	v.Sources = sourceCards(q, c)
 	v.Choices, v.Question = choices(q), questionEntries(q)
+	for _, e := range c.Excluded {
+		v.Excluded = append(v.Excluded, ExcludedCard{
+			Target: study.Target{Kind: "question", ID: questionID(q), Field: strconv.Itoa(e.Line)},
+			Text:   orText(c.XName, "x") + " = " + written(e.X) + ", D = " + written(e.D) + ", line " + strconv.Itoa(e.Line) + ": " + e.Why,
+		})
+	}
 	return v, nil
 }
 

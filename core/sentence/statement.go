@@ -129,7 +129,7 @@ func (w *writer) subject() {
 		w.blank("", "a simulation")
 	} else {
 		w.item(modelName(c), "acceptance of the model")
-		if grid := finestGrid(c); grid != "" {
+		if grid := c.Grid; grid != "" {
 			w.say(" on grid ")
 			w.item(grid, "acceptance of the grid")
 		}
@@ -157,13 +157,6 @@ func modelName(c *study.Cell) string {
 		return "the simulation"
 	}
 	return "model " + c.Model
-}
-
-func finestGrid(c *study.Cell) string {
-	if c.Grids == nil || len(c.Grids.Points) == 0 {
-		return c.Grid
-	}
-	return c.Grids.Points[len(c.Grids.Points)-1].Name
 }
 
 // kindWord names the reference by its kind.

@@ -149,11 +149,7 @@ func (w *work) joint(e []float64) {
 	budget := w.covariance(w.parts, w.tested)
 	q, err := comparison.Statistic(tested, budget)
 	if err != nil {
-		code := notice.New("covariance-range")
-		if errors.Is(err, comparison.ErrSize) {
-			code = notice.New("covariance-size", len(tested), comparison.MaxDense)
-		}
-		w.tell(code)
+		w.tell(jointRefusal(err, len(tested)))
 		return
 	}
 	reference := comparison.ChiSquare95(q.Rank)
@@ -175,6 +171,17 @@ func (w *work) joint(e []float64) {
 		w.tell(notice.New("joint-low-tail"))
 	}
 	w.split(j, tested, budget)
+}
+
+// jointRefusal says why there is no joint statistic.
+func jointRefusal(err error, n int) notice.Notice {
+	switch {
+	case errors.Is(err, comparison.ErrSize):
+		return notice.New("covariance-size", n, comparison.MaxDense)
+	case errors.Is(err, comparison.ErrFinite):
+		return notice.New("covariance-finite")
+	}
+	return notice.New("covariance-range")
 }
 
 // split parts the statistic into a common offset and the remainder.

@@ -176,7 +176,7 @@ func steps(values []float64, u unit, rows []int) []float64 {
 
 // sourceText says a source in words.
 func (w *work) sourceText(s *Source) string {
-	value := quantity.Text(s.Value, 6)
+	value := trim(s.Value)
 	switch {
 	case s.Column != "":
 		value = "column " + s.Column
@@ -211,7 +211,7 @@ func (w *work) gridPart() {
 	if w.gridU == nil {
 		return
 	}
-	text := "U of the grid study divided by " + quantity.Text(w.choices.KNum, 3)
+	text := "U of the grid study divided by " + trim(w.choices.KNum)
 	if math.IsNaN(float64(w.cell.Grids.U)) && !w.cell.Grids.Along {
 		text = "bound of the grid study divided by √3"
 	}

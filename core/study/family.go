@@ -56,6 +56,7 @@ func (w *work) scalarFamily() []notice.Notice {
 	u := r.StandardUncertainty(w.choices.KNum)
 	g.UNum = w.step(u)
 	w.cell.Grids = g
+	w.cell.Grid = g.Points[len(g.Points)-1].Name
 	if !math.IsNaN(u) && len(w.s) > 0 {
 		w.gridU = []float64{u}
 	}
