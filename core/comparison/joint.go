@@ -4,7 +4,6 @@ import (
 	"errors"
 	"math"
 
-	"gonum.org/v1/gonum/mat"
 	"gonum.org/v1/gonum/stat/distuv"
 
 	"weirmark/core/uncertainty"
@@ -37,39 +36,45 @@ func (j Joint) P() float64 { return distuv.ChiSquared{K: float64(j.Rank)}.Surviv
 // ChiSquare95 returns the 95 % point of the chi-square distribution.
 func ChiSquare95(n int) float64 { return distuv.ChiSquared{K: float64(n)}.Quantile(0.95) }
 
-// Statistic returns e' V^-1 e for the covariance V of b. Where every station
-// has an independent variance the Woodbury identity is used in the form
+// Statistic returns e' V^-1 e for the covariance V of b, as the squared length
+// of the whitened e: linear in the number of stations where every station has a
+// variance that the patterns leave it. Otherwise V is made dense, scaled to the
+// unit diagonal so that a few small uncertainties do not pass for none, and
+// reduced to its rank (eigenvalues below 1e-10 of the largest count as zero).
+// See whitening for the sources.
 //
-//	Q = min over z of |D^-1/2 (e - C z)|^2 + |z|^2,
-//
-// linear in the number of stations and free of cancellation. Otherwise V is
-// made dense, scaled to the unit diagonal so that a few small uncertainties do
-// not pass for none, and reduced to its rank (eigenvalues below 1e-10 of the
-// largest count as zero). Source: Golub and Van Loan, Matrix Computations,
-// 2.1.4 (Woodbury identity; from memory); the minimum form follows from it.
-//
-// It fails with ErrRange, ErrSize or ErrFinite. There must be a station.
+// It fails with ErrRange, ErrSize, ErrPattern or ErrFinite. There must be a
+// station.
 func Statistic(e []float64, b uncertainty.Budget) (Joint, error) {
-	if !finite(e) || !finite(b.Variance) {
+	if !finite(e) {
 		return Joint{}, ErrFinite
 	}
-	for _, c := range b.Common {
-		if !finite(c) {
-			return Joint{}, ErrFinite
-		}
+	w, err := newWhitening(b)
+	if err != nil {
+		return Joint{}, err
 	}
-	if !independent(b) {
-		return dense(e, b)
+	return w.joint(e)
+}
+
+// joint returns the statistic of e.
+func (w *whitening) joint(e []float64) (Joint, error) {
+	if err := w.reaches(e); err != nil {
+		return Joint{}, err
 	}
-	z, ok := commonPart(e, b)
-	if !ok {
-		return Joint{}, ErrFinite
-	}
-	q := quadratic(e, z, b)
+	y := w.apply(e)
+	q := dot(y, y)
 	if !finite([]float64{q}) {
 		return Joint{}, ErrFinite
 	}
-	return Joint{q, len(e)}, nil
+	return Joint{q, w.rank()}, nil
+}
+
+func dot(a, b []float64) float64 {
+	sum := 0.0
+	for i, v := range a {
+		sum += float64(v * b[i])
+	}
+	return sum
 }
 
 // finite reports whether all values are finite.
@@ -92,137 +97,6 @@ func independent(b uncertainty.Budget) bool {
 	return true
 }
 
-// commonPart returns the z that minimises the form above:
-// (I + C' D^-1 C) z = C' D^-1 e. It is not ok where a square overflows: for
-// finite input the matrix is positive definite.
-func commonPart(e []float64, b uncertainty.Budget) (z []float64, ok bool) {
-	m := len(b.Common)
-	if m == 0 {
-		return nil, true
-	}
-	a := mat.NewSymDense(m, nil)
-	right := mat.NewVecDense(m, nil)
-	for i, ci := range b.Common {
-		for j := i; j < m; j++ {
-			sum := 0.0
-			for s, c := range b.Common[j] {
-				sum += float64(ci[s]*c) / b.Variance[s]
-			}
-			if i == j {
-				sum++
-			}
-			a.SetSym(i, j, sum)
-		}
-		sum := 0.0
-		for s, c := range ci {
-			sum += float64(c*e[s]) / b.Variance[s]
-		}
-		right.SetVec(i, sum)
-	}
-	for i := range m {
-		if !finite(a.RawSymmetric().Data[i*m+i : (i+1)*m]) {
-			return nil, false
-		}
-	}
-	if !finite(right.RawVector().Data) {
-		return nil, false
-	}
-	var chol mat.Cholesky
-	if !chol.Factorize(a) {
-		return nil, false
-	}
-	solution := mat.NewVecDense(m, nil)
-	// A condition warning only: the matrix has eigenvalues of one and above.
-	_ = chol.SolveVecTo(solution, right)
-	return solution.RawVector().Data, true
-}
-
-func quadratic(e, z []float64, b uncertainty.Budget) float64 {
-	sum := 0.0
-	for s, v := range e {
-		for i, c := range b.Common {
-			v -= float64(c[s] * z[i])
-		}
-		sum += float64(v*v) / b.Variance[s]
-	}
-	for _, v := range z {
-		sum += float64(v * v)
-	}
-	return sum
-}
-
-// dense treats V as a matrix of correlations between the stations that have an
-// uncertainty; a station that has none must have no difference.
-func dense(e []float64, b uncertainty.Budget) (Joint, error) {
-	if len(e) > MaxDense {
-		return Joint{}, ErrSize
-	}
-	total := b.Total()
-	if !finite(total) {
-		return Joint{}, ErrFinite
-	}
-	var at []int
-	for i, u := range total {
-		switch {
-		case u > 0:
-			at = append(at, i)
-		case e[i] != 0:
-			return Joint{}, ErrRange
-		}
-	}
-	if len(at) == 0 {
-		return Joint{}, ErrRange
-	}
-	scaled := make([]float64, len(at))
-	v := mat.NewSymDense(len(at), nil)
-	for row, i := range at {
-		scaled[row] = e[i] / total[i]
-		v.SetSym(row, row, 1)
-		for column := row + 1; column < len(at); column++ {
-			j := at[column]
-			sum := 0.0
-			for _, c := range b.Common {
-				sum += float64(c[i] / total[i] * (c[j] / total[j]))
-			}
-			v.SetSym(row, column, sum)
-		}
-	}
-	if !finite(scaled) {
-		return Joint{}, ErrFinite
-	}
-	return reduced(scaled, v)
-}
-
-// reduced returns the statistic on the eigenvectors of v that carry variance.
-func reduced(e []float64, v *mat.SymDense) (Joint, error) {
-	var eigen mat.EigenSym
-	if !eigen.Factorize(v, true) {
-		return Joint{}, ErrFinite
-	}
-	values := eigen.Values(nil)
-	var vectors mat.Dense
-	eigen.VectorsTo(&vectors)
-	largest := values[len(e)-1]
-	norm := 0.0
-	for _, x := range e {
-		norm += float64(x * x)
-	}
-	q, rank := 0.0, 0
-	for k, value := range values {
-		p := 0.0
-		for i, x := range e {
-			p += float64(vectors.At(i, k) * x)
-		}
-		if value > 1e-10*largest {
-			q += float64(p*p) / value
-			rank++
-		} else if p*p > 1e-12*norm {
-			return Joint{}, ErrRange
-		}
-	}
-	return Joint{q, rank}, nil
-}
-
 // Split is the decomposition of the statistic into a common offset of E and
 // the remainder.
 type Split struct {
@@ -235,37 +109,24 @@ type Split struct {
 //	a = 1'V^-1 e / 1'V^-1 1,  u(a) = (1'V^-1 1)^-1/2,
 //	part = (a/u(a))^2,  remainder = (e - a)' V^-1 (e - a).
 //
-// It needs an independent variance at every station, finite numbers, and two
+// It needs a variance of its own at every station, finite numbers, and two
 // stations or more; else it is not ok.
 func Offset(e []float64, b uncertainty.Budget) (Split, bool) {
-	if len(e) < 2 || !independent(b) {
+	if len(e) < 2 || !finite(e) {
 		return Split{}, false
 	}
-	one := uncertainty.Constant(len(e), 1)
-	z, ok := commonPart(one, b)
-	if !ok {
+	w, err := newWhitening(b)
+	if err != nil || w.root != nil {
 		return Split{}, false
 	}
-	information := quadratic(one, z, b)
-	weighted := 0.0
-	for s, v := range e {
-		w := 1.0
-		for i, c := range b.Common {
-			w -= float64(c[s] * z[i])
-		}
-		weighted += float64(w*v) / b.Variance[s]
+	one, y := w.apply(uncertainty.Constant(len(e), 1)), w.apply(e)
+	information := dot(one, one)
+	a := dot(one, y) / information
+	remainder := 0.0
+	for i, v := range y {
+		rest := v - float64(a*one[i])
+		remainder += float64(rest * rest)
 	}
-	a := weighted / information
-	rest := make([]float64, len(e))
-	for i, v := range e {
-		rest[i] = v - a
-	}
-	if z, ok = commonPart(rest, b); !ok {
-		return Split{}, false
-	}
-	split := Split{
-		Offset: a, U: 1 / math.Sqrt(information), Part: float64(a*a) * information,
-		Remainder: quadratic(rest, z, b),
-	}
+	split := Split{Offset: a, U: 1 / math.Sqrt(information), Part: float64(a*a) * information, Remainder: remainder}
 	return split, finite([]float64{split.Offset, split.U, split.Part, split.Remainder})
 }

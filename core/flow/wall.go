@@ -18,7 +18,10 @@ func spaldingU(kappa, b, y float64) float64 {
 	if y == 0 {
 		return 0
 	}
-	return root(func(u float64) float64 { return spaldingY(kappa, b, u) - y }, 0, 2*y)
+	// From k = 60 on the exponential outweighs the other terms, so that y+ is
+	// passed there, and the exponential is not evaluated where it overflows.
+	far := (60 + max(0, math.Log(y)+float64(kappa*b))) / kappa
+	return min(y, root(func(u float64) float64 { return spaldingY(kappa, b, u) - y }, 0, min(2*y, far)))
 }
 
 // wallLaws are the layers of a turbulent wall flow in wall units.
@@ -26,9 +29,9 @@ func wallLaws() []Law {
 	const caveat = "smooth wall, mild pressure gradient, no wake: the outer layer lies above it"
 	uplus := plain("u+", "velocity over friction velocity", "1", fromZero)
 	yplus := plain("y+", "distance from the wall over nu/u_tau", "1", fromZero)
-	kappa := Symbol{Name: "kappa", Meaning: "slope of the logarithm", Unit: "1", Domain: positive, Default: number(0.41),
+	kappa := Symbol{Name: "kappa", Meaning: "slope of the logarithm", Unit: "1", Domain: Range{Lo: 0.1, Hi: 1, Source: "bounds of this program"}, Default: number(0.41),
 		Stated: Range{Lo: 0.38, Hi: 0.42, Source: "values in use, from memory"}}
-	b := Symbol{Name: "B", Meaning: "offset of the logarithm", Unit: "1", Domain: anything, Default: number(5.0),
+	b := Symbol{Name: "B", Meaning: "offset of the logarithm", Unit: "1", Domain: Range{Lo: -20, Hi: 20, Source: "bounds of this program"}, Default: number(5.0),
 		Stated: Range{Lo: 4, Hi: 5.5, Source: "values in use, from memory"}}
 	retau := Symbol{Name: "Re_tau", Meaning: "thickness of the layer in wall units, for the outer end 0.15 Re_tau", Unit: "1", Domain: positive, Stated: positive, Optional: true}
 	constants := []Symbol{kappa, b, retau}

@@ -93,10 +93,12 @@ func columnWords(c tablefile.Column) string {
 // needed reports whether an empty entry keeps a slip from being used.
 func needed(p *study.Slip, field string) bool {
 	switch field {
-	case "role", "case", "quantity", "y.column", "y.unit":
+	case "role", "case", "quantity", "y.column":
 		return p.Role.Value != study.Unused
+	case "y.unit":
+		return p.Role.Value != study.Unused && p.Role.Value != study.Balance
 	case "x.unit":
-		return p.X.Column.Given()
+		return p.X.Column.Given() && p.Role.Value != study.Balance && p.Role.Value != study.Monitor
 	case "u_factor":
 		return p.U.Column.Given()
 	case "size.column":
@@ -116,7 +118,7 @@ func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
 		return Entry{Target: study.Target{Kind: "slip", ID: p.ID, Field: field}, Label: label, Value: f.Value, By: f.By, Options: options, Hint: hint}
 	}
 	list := []Entry{
-		entry("role", "looks like", p.Role, []Option{{study.Simulation, "a simulation"}, {study.GridValues, "values over grids"}, {study.Reference, "reference data"}, {study.Unused, "not used"}}, ""),
+		entry("role", "looks like", p.Role, []Option{{study.Simulation, "a simulation"}, {study.GridValues, "values over grids"}, {study.Reference, "reference data"}, {study.Monitor, "a monitor of one run"}, {study.Balance, "a balance of one run"}, {study.Unused, "not used"}}, ""),
 	}
 	if p.Role.Value == study.Unused {
 		return list
@@ -131,14 +133,21 @@ func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
 	case study.GridValues:
 		list = append(list, entry("size.column", "cells in", p.Size.Column, columns, ""), entry("grid", "grid names in", p.Grid, columns, ""))
 	default:
-		list = append(list, entry("x.column", "stations in", p.X.Column, columns, "none for a single value"))
+		label := map[string]string{study.Monitor: "iterations or time in", study.Balance: "what enters in"}[p.Role.Value]
+		list = append(list, entry("x.column", orText(label, "stations in"), p.X.Column, columns, "none for a single value"))
 		if p.X.Column.Given() {
 			list = append(list, entry("x.unit", "unit of stations", p.X.Unit, free, "m, mm, … or 1 for a pure number"))
 		}
 	}
+	if p.Role.Value == study.Monitor {
+		list = append(list, entry("axis", "they are", p.Axis, []Option{{study.AxisIterations, "iterations"}, {study.AxisTime, "samples in time"}}, ""))
+	}
 	list = append(list,
-		entry("y.column", "values in", p.Y.Column, columns, ""),
+		entry("y.column", map[bool]string{true: "what leaves in", false: "values in"}[p.Role.Value == study.Balance], p.Y.Column, columns, ""),
 		entry("y.unit", "unit of values", p.Y.Unit, free, "Pa, m/s, … or 1 for a pure number"))
+	if p.Role.Value == study.Monitor || p.Role.Value == study.Balance {
+		list = append(list, entry("grid", "grid", p.Grid, free, "e.g. G4"))
+	}
 	if p.Role.Value == study.Simulation {
 		list = append(list, entry("grid", "grid", p.Grid, free, "e.g. G4"), entry("cells", "cells", p.Cells, free, "number of cells"))
 	}

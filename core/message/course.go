@@ -14,7 +14,7 @@ import (
 // comparison and what follows from it are left out.
 func courses(c *study.Cell, figures []CellFigure, veiled bool) []Course {
 	list := []Course{
-		{Question: "Has each run settled?", Answer: settledAnswer(c)},
+		{Question: "Has each run settled?", Answer: settledAnswer(c), Tables: settledTables(c)},
 		{Question: "Is the grid fine enough for this quantity?", Answer: gridAnswer(c), Numbers: gridNumbers(c), Tables: gridTables(c)},
 		{Question: "Is it the same thing?", Answer: sameAnswer(c)},
 		{Question: "Do they agree?", Answer: agreeAnswer(c), Numbers: agreeNumbers(c), Tables: agreeTables(c)},
@@ -76,7 +76,7 @@ func notes(c *study.Cell, course int, doubts []study.Open) []string {
 func courseOf(n notice.Notice) int {
 	stage, _, _ := strings.Cut(n.Code, "-")
 	switch stage {
-	case "monitor":
+	case "monitor", "balance", "sampling", "iteration", "residual":
 		return 0
 	case "grid", "dimension":
 		return 1
@@ -92,10 +92,35 @@ func courseOf(n notice.Notice) int {
 }
 
 func settledAnswer(c *study.Cell) string {
+	if text := c.SettledText(); text != "" {
+		return capitalised(text) + "."
+	}
 	if c.Summary == nil && c.Grids == nil {
 		return "No simulation is read yet."
 	}
 	return "Not shown: no monitor is given for " + c.Quantity + "."
+}
+
+func capitalised(text string) string { return strings.ToUpper(text[:1]) + text[1:] }
+
+// settledTables lists the monitors and balances.
+func settledTables(c *study.Cell) []Table {
+	var tables []Table
+	if len(c.Monitors) > 0 {
+		t := Table{Title: "Monitors", Head: []string{"grid", "file", "class", "mean", "u", "window", "rule"}, Rows: [][]string{}}
+		for _, m := range c.Monitors {
+			t.Rows = append(t.Rows, []string{orText(m.Grid, "–"), m.File, m.Class, text(m.Mean, 5), text(m.U, 2), text(m.From, 4) + " to " + text(m.To, 4), m.Rule})
+		}
+		tables = append(tables, t)
+	}
+	if len(c.Balances) > 0 {
+		t := Table{Title: "Balances", Head: []string{"grid", "file", "in", "out", "in less out", "of what enters"}, Rows: [][]string{}}
+		for _, b := range c.Balances {
+			t.Rows = append(t.Rows, []string{orText(b.Grid, "–"), b.File, text(b.In, 5), text(b.Out, 5), text(b.Net, 2), quantity.SignedPercent(float64(b.Fraction)) + " %"})
+		}
+		tables = append(tables, t)
+	}
+	return tables
 }
 
 func gridAnswer(c *study.Cell) string {

@@ -4,10 +4,11 @@ import "math"
 
 // Limits of the search for a cycle. No source.
 const (
-	leastCycles      = 3   // whole cycles in the window
-	leastRepeat      = 0.4 // autocorrelation one period on
-	leastSecond      = 0.3 // and two periods on
-	leastRepeatLater = 0.2 // and at further periods, to sharpen the period
+	leastCycles      = 3    // whole cycles in the window
+	leastRepeat      = 0.4  // autocorrelation one period on
+	leastSecond      = 0.3  // and two periods on
+	leastRepeatLater = 0.2  // and at further periods, to sharpen the period
+	wholeSlack       = 0.01 // of a period that may lack in a whole number of them
 )
 
 // findPeriod returns the period of y in rows, where y less a straight line
@@ -47,7 +48,94 @@ func findPeriod(y []float64) (period float64, ok bool) {
 		}
 		period = sharpened(r, peak) / float64(m)
 	}
-	return period, float64(n) >= leastCycles*period*(1-1e-9)
+	whole := int(math.Floor(float64(n)/period)*period + 0.5)
+	period = fitted(e[n-min(whole, n):], period)
+	return period, float64(n) >= (leastCycles-wholeSlack)*period
+}
+
+// cycleFrom looks for a period behind the start-up, and where there is none
+// also from earlier rows on: a cycle misleads the rule for the start-up, and
+// whole cycles are counted from the end. It returns the first row of the part
+// that repeats itself, and the period in rows.
+func cycleFrom(y []float64, startUp int) (from int, period float64, ok bool) {
+	for part := 3; part > 0; part-- {
+		from = startUp * part / 3
+		if period, ok = findPeriod(y[from:]); ok {
+			return from, period, true
+		}
+		if startUp == 0 {
+			break
+		}
+	}
+	return startUp, 0, false
+}
+
+// fitted returns the period near the given one, within two fifths of what the
+// record resolves, for which a sine on a straight line leaves the least of e:
+// the autocorrelation of a few cycles is skewed by the line taken off. e holds
+// whole cycles, nearly. Forty
+// steps of a golden section, each linear in len(e).
+func fitted(e []float64, period float64) float64 {
+	reach := period * min(0.06, 0.4*period/float64(len(e)))
+	lo, hi := period-reach, period+reach
+	golden := (math.Sqrt(5) - 1) / 2
+	a, b := hi-golden*(hi-lo), lo+golden*(hi-lo)
+	fa, fb := explained(e, a), explained(e, b)
+	for range 40 {
+		if fa >= fb {
+			hi, b, fb = b, a, fa
+			a = hi - golden*(hi-lo)
+			fa = explained(e, a)
+		} else {
+			lo, a, fa = a, b, fb
+			b = lo + golden*(hi-lo)
+			fb = explained(e, b)
+		}
+	}
+	return (lo + hi) / 2
+}
+
+// explained returns the sum of squares of e that a constant, a line, a cosine
+// and a sine of the period explain together: b·x of the normal equations
+// A x = b, whose matrix is positive definite for two periods or more.
+func explained(e []float64, period float64) float64 {
+	const terms = 4
+	var a [terms][terms]float64
+	var b [terms]float64
+	n := float64(len(e))
+	turnSin, turnCos := math.Sincos(2 * math.Pi / period)
+	sin, cos := 0., 1.
+	for i, v := range e {
+		row := [terms]float64{1, 2*float64(i)/n - 1, cos, sin}
+		for j := range terms {
+			for k := range j + 1 {
+				a[j][k] += float64(row[j] * row[k])
+			}
+			b[j] += float64(row[j] * v)
+		}
+		sin, cos = float64(sin*turnCos)+float64(cos*turnSin), float64(cos*turnCos)-float64(sin*turnSin)
+	}
+	// With A = L L^T the sum is |L^-1 b|^2.
+	sum := 0.
+	for j := range terms {
+		for k := range j + 1 {
+			for m := range k {
+				a[j][k] -= float64(a[j][m] * a[k][m])
+			}
+			if k < j {
+				a[j][k] /= a[k][k]
+				b[j] -= float64(a[j][k] * b[k])
+			}
+		}
+		// A period of two rows has no sine: what is left of it explains nothing.
+		if a[j][j] <= rounding*n {
+			return sum
+		}
+		a[j][j] = math.Sqrt(a[j][j])
+		b[j] /= a[j][j]
+		sum += float64(b[j] * b[j])
+	}
+	return sum
 }
 
 // correlogram returns the autocorrelation up to two thirds of the record,
@@ -128,7 +216,7 @@ type cycle struct {
 
 // cycleOf returns the whole cycles at the end of y.
 func cycleOf(y []float64, period float64) cycle {
-	c := cycle{period: period, count: int(float64(len(y))/period + 1e-9)}
+	c := cycle{period: period, count: int(float64(len(y))/period + wholeSlack)}
 	rows := func(k int) int { return min(int(math.Round(float64(k)*period)), len(y)) }
 	one := rows(1)
 	oldest := y[len(y)-rows(c.count):]
@@ -137,17 +225,18 @@ func cycleOf(y []float64, period float64) cycle {
 	}
 	c.length = rows(c.count)
 	c.halfRange = halfRange(y[len(y)-c.length:])
-	means := unitMeans(y, float64(c.count)*period)
+	means := unitMeans(y, min(float64(c.count)*period, float64(len(y))))
 	c.mean = means[len(means)-1]
 	return c
 }
 
 // unitMeans returns the means over successive stretches of length rows, which
 // need not be whole: the rows at the ends count by their part. The stretches
-// end at the end of y; what does not fill one is left out at its front.
+// end at the end of y; what does not fill one, to half a row, is left out at
+// its front.
 func unitMeans(y []float64, length float64) []float64 {
 	n := len(y)
-	count := int(float64(n)/length + 1e-9)
+	count := int((float64(n) + 0.5) / length)
 	base := mean(y)
 	total := make([]float64, n+1)
 	for i, v := range y {

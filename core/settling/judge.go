@@ -36,7 +36,7 @@ type Monitor struct {
 	Period    float64    // in At
 	Cycles    int        // whole cycles in Window
 	HalfRange float64    // of the rows in Window: U_iter where they cycle or stall
-	Remaining float64    // to be added to Last, by geometric extrapolation
+	Remaining float64    // to be added to Last, by geometric extrapolation; NaN where the end does not close in so
 	Stat      *Stat      // of an unsteady run
 	Rule      string
 	Notices   []notice.Notice
@@ -122,12 +122,20 @@ func (j *judgement) use(rows int) {
 	j.Mean, j.HalfRange = mean(y), halfRange(y)
 }
 
-// scale settles Scale, Limit and Per.
+// scale settles Scale, Limit and Per. A mean that is no larger than the
+// scatter is no scale: the largest value takes its place.
 func (j *judgement) scale() {
 	y := j.record.y[j.from:]
 	j.Scale = j.opt.Scale
 	if !(j.Scale > 0) {
-		j.Scale = math.Abs(mean(y))
+		m, sd := spread(y)
+		j.Scale = math.Abs(m)
+		if j.Scale <= sd || j.Scale == 0 {
+			j.Scale = largest(j.record.y)
+			if !j.opt.Time && !(j.opt.UGrid > 0) && j.record.quantum > 0 {
+				j.tell("monitor-scale", j.opt.name(), quantity.Text(m, 2), quantity.Text(j.Scale, 2))
+			}
+		}
 	}
 	j.Limit = j.opt.limit(j.Scale)
 	j.Per = j.opt.Per
@@ -142,9 +150,6 @@ func (j *judgement) scale() {
 
 // fraction returns v of the scale in percent for a reader.
 func (j *judgement) fraction(v float64) string {
-	if j.Scale == 0 {
-		return "–"
-	}
 	return quantity.Text(100*math.Abs(v)/j.Scale, 2)
 }
 
@@ -161,9 +166,7 @@ func (j *judgement) constant() {
 // moves states the drift of a slope per row, and whether it is more than small.
 func (j *judgement) moves(slope float64) bool {
 	change := slope / j.record.step * j.Per
-	if j.Scale > 0 {
-		j.Drift = change / j.Scale
-	}
+	j.Drift = change / j.Scale
 	return quantity.Round(math.Abs(change), 10) > quantity.Round(j.Limit, 10)
 }
 
@@ -183,8 +186,9 @@ func (j *judgement) drifting(slope float64) {
 
 // iterates judges the rows of an iteration.
 func (j *judgement) iterates() {
-	y := j.record.y[j.from:]
-	if period, ok := findPeriod(y); ok {
+	from, period, ok := cycleFrom(j.record.y, j.from)
+	y := j.record.y[from:]
+	if ok {
 		c := cycleOf(y, period)
 		j.Period, j.Cycles = period*j.record.step, c.count
 		if j.between(y, period) {
@@ -284,8 +288,8 @@ func (j *judgement) approached(size int, fromMean float64) {
 
 // samples judges the rows of an unsteady run.
 func (j *judgement) samples() {
-	y := j.record.y[j.from:]
-	period, cyclic := findPeriod(y)
+	from, period, cyclic := cycleFrom(j.record.y, j.from)
+	y := j.record.y[from:]
 	if cyclic {
 		j.Period = period * j.record.step
 		if j.between(y, period) {
@@ -296,7 +300,7 @@ func (j *judgement) samples() {
 		j.drifting(l.slope)
 		return
 	}
-	st := average(j.record, j.from, period, j.opt)
+	st := average(j.record, from, period, j.opt)
 	j.Notices = append(j.Notices, st.Notices...)
 	st.Notices = nil
 	j.use(st.Rows)

@@ -63,9 +63,9 @@ func (l line) rest(y []float64) []float64 {
 	return e
 }
 
-// clear reports whether the slope exceeds four of its standard deviations,
-// with as many independent rows as the autocorrelation of the rest leaves.
-// (Four: no source; two in fifty thousand by chance.)
+// clear reports whether the slope exceeds four of its standard deviations, more
+// where few independent rows are left: as many as the autocorrelation of the
+// rest says, two of which the line takes. (Four: no source.)
 func (l line) clear(y []float64) bool {
 	n := len(y)
 	if n < 4 {
@@ -73,7 +73,7 @@ func (l line) clear(y []float64) bool {
 	}
 	e := l.rest(y)
 	_, sd := spread(e)
-	independent := max(float64(n)/max(correlationTime(e), 1), 2)
+	independent := max(float64(n)/max(correlationTime(e), 1), 3)
 	span := float64(n - 1)
-	return math.Abs(float64(l.slope*span)) > 4*sd*math.Sqrt(12/independent)
+	return math.Abs(float64(l.slope*span)) > 4*sd*math.Sqrt(12/(independent-2))
 }

@@ -60,7 +60,7 @@ func Statistics(s Series, opt Options) Stat {
 		r.tell("sampling-startup", opt.name())
 	}
 	from = min(from, len(r.y)-leastRows)
-	period, _ := findPeriod(r.y[from:])
+	from, period, _ := cycleFrom(r.y, from)
 	st := average(r, from, period, opt)
 	st.Notices = append(r.notices, st.Notices...)
 	return st

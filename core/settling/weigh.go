@@ -7,8 +7,8 @@ import (
 	"weirmark/core/quantity"
 )
 
-// Weight compares the iterative uncertainty with what stands beside it. All
-// are NaN where either side is not known.
+// Weight compares the iterative uncertainty with what stands beside it. A
+// ratio is NaN where either side is not known.
 type Weight struct {
 	OfGrid   float64 // U_iter/U_grid: aim at a tenth or less
 	OfChange float64 // U_iter over the change between the two finest grids
@@ -17,9 +17,9 @@ type Weight struct {
 }
 
 // Weigh compares U_iter, the grid uncertainty U_grid, the change between the
-// two finest grids and the comparison error E, all in one unit; signs do not
-// count, zero or NaN stands for not known, but an E or a change of exactly
-// zero has no ratio either. Both U at one coverage. Name is the quantity in messages.
+// two finest grids and the comparison error E, all in one unit and both U at
+// one coverage. Signs do not count; 0 and NaN stand for not known (of U_iter
+// only NaN). Name is the quantity in messages.
 func Weigh(name string, uIter, uGrid, change, e float64) Weight {
 	ratio := func(of float64) float64 {
 		of = math.Abs(of)

@@ -15,7 +15,8 @@ type part struct {
 	line   SourceLine
 	u      []float64
 	common bool
-	interp bool
+	interp bool // of the interpolation to the stations
+	aside  bool // does not by itself make a numerical uncertainty
 }
 
 // budget collects the sources of the cell at its stations.
@@ -228,10 +229,11 @@ func (w *work) interpolationPart() {
 	w.parts[len(w.parts)-1].interp = true
 }
 
-// has reports whether a part is of one side, interpolation apart.
+// has reports whether a part is of one side, interpolation and iteration
+// apart: alone they are no numerical uncertainty.
 func (w *work) has(of string) bool {
 	for _, p := range w.parts {
-		if p.line.Of == of && !p.interp {
+		if p.line.Of == of && !p.interp && !p.aside {
 			return true
 		}
 	}

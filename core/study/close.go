@@ -96,9 +96,6 @@ func ascending(x, y []float64) ([]float64, []float64) {
 // close lists what no part of the evaluation lists by itself, decides whether
 // a statement is made, and fills the courses.
 func (w *work) close() {
-	if w.finest() != nil {
-		w.need(0, false, "evidence that each run has settled", w.q.target("settled"), "monitor-missing", w.q.label())
-	}
 	if w.reference != nil {
 		w.referenceDoubts()
 	}
@@ -141,7 +138,7 @@ func (w *work) referenceDoubts() {
 // courses sets the state of the five courses of evidence.
 func (w *work) courses() {
 	given := [5]bool{
-		false, // monitors are not read yet by any role
+		len(w.cell.Monitors)+len(w.cell.Balances) > 0,
 		w.cell.Grids != nil || w.has(OfNumerical),
 		w.reference != nil && w.finest() != nil,
 		w.cell.Summary != nil,
@@ -161,7 +158,7 @@ func (w *work) courses() {
 	}
 	for _, n := range w.cell.Notices {
 		if n.Severity == notice.Stop {
-			if course, known := stopsCourse[n.Code]; known {
+			if course, known := stopsCourse[n.Code]; known && w.q.Answers[n.Code] == "" {
 				w.cell.Courses[course] = Blocked
 			}
 		}
@@ -176,6 +173,7 @@ func (w *work) courses() {
 
 // stopsCourse names the course that a stop notice blocks.
 var stopsCourse = map[string]int{
+	"monitor-drift": 0, "monitor-broken": 0, "sampling-none": 0, "balance-open": 0,
 	"grid-diverging": 1,
 	"unit-dimension": 2, "density-needed": 2, "curve-loop": 2, "station-none": 2, "curve-short": 2, "u-negative": 2, "scalar-curve": 2,
 	"covariance-range": 3, "covariance-size": 3,

@@ -153,7 +153,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		Case: q.Case, Condition: q.Condition, Quantity: q.Quantity, Symbol: q.Symbol, Model: model,
 		Reference: q.ReferenceID, Kind: q.Kind.Value, Use: q.Use.Value, Downward: q.Downward, Choices: choices,
 		Unit: "1", XUnit: "1",
-		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Conditions: []Compared{}, Sources: []SourceLine{}, Fragile: []Fragility{},
+		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Monitors: []MonitorLine{}, Balances: []BalanceLine{}, Conditions: []Compared{}, Sources: []SourceLine{}, Fragile: []Fragility{},
 		Notices: []notice.Notice{}, FilesUsed: []string{},
 		Crossings: Crossings{Simulation: []Crossing{}, Reference: []Crossing{}},
 		Curve:     Curve{X: []Written{}, Y: []Written{}, UNum: []Number{}},
@@ -165,6 +165,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		w.matchConditions()
 		w.doubtCurves()
 		w.family()
+		w.settle()
 		w.budget()
 		w.agree()
 		w.doubtComparison()
@@ -405,7 +406,7 @@ func (p *Slip) fields() []slipField {
 		{path: "case", name: "case", field: p.Case, needed: true, course: 2},
 		{path: "quantity", name: "quantity", field: p.Quantity, needed: true, course: 2},
 		{path: "y.column", name: "column of values", field: p.Y.Column, needed: true, course: 2},
-		{path: "y.unit", name: "unit of " + orWord(p.Y.Column.Value, "the values"), field: p.Y.Unit, needed: true, course: 2, unitOf: orWord(p.Y.Column.Value, "the values")},
+		{path: "y.unit", name: "unit of " + orWord(p.Y.Column.Value, "the values"), field: p.Y.Unit, needed: p.Role.Value != Balance, course: 2, unitOf: orWord(p.Y.Column.Value, "the values")},
 	}
 	if p.Role.Value != Reference {
 		all = append(all, slipField{path: "model", name: "model", field: p.Model, course: 2})
@@ -413,14 +414,17 @@ func (p *Slip) fields() []slipField {
 	if p.X.Column.Given() {
 		all = append(all,
 			slipField{path: "x.column", name: "column of stations", field: p.X.Column, needed: true, course: 2},
-			slipField{path: "x.unit", name: "unit of " + p.X.Column.Value, field: p.X.Unit, needed: true, course: 2, unitOf: p.X.Column.Value})
+			slipField{path: "x.unit", name: "unit of " + p.X.Column.Value, field: p.X.Unit, needed: p.Role.Value != Balance && p.Role.Value != Monitor, course: 2, unitOf: p.X.Column.Value})
 	}
 	if p.U.Column.Given() {
 		all = append(all,
 			slipField{path: "u.column", name: "column of uncertainty", field: p.U.Column, needed: true, course: 2},
 			slipField{path: "u_factor", name: "coverage of " + p.U.Column.Value, field: p.UFactor, needed: true, course: 2})
 	}
-	if p.Role.Value == Simulation {
+	if p.Role.Value == Monitor {
+		all = append(all, slipField{path: "axis", name: "kind of monitor", field: p.Axis, needed: true, course: 0})
+	}
+	if p.Role.Value == Simulation || p.Role.Value == Monitor || p.Role.Value == Balance {
 		all = append(all,
 			slipField{path: "grid", name: "grid", field: p.Grid, course: 1},
 			slipField{path: "cells", name: "number of cells", field: p.Cells, course: 1})

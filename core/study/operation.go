@@ -243,7 +243,7 @@ func (p *Slip) entry(path string) *Field {
 	return map[string]*Field{
 		"role": &p.Role, "case": &p.Case, "quantity": &p.Quantity, "model": &p.Model, "grid": &p.Grid, "cells": &p.Cells,
 		"x.column": &p.X.Column, "x.unit": &p.X.Unit, "y.column": &p.Y.Column, "y.unit": &p.Y.Unit,
-		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit,
+		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit, "axis": &p.Axis,
 	}[path]
 }
 

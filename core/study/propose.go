@@ -83,6 +83,8 @@ var (
 	modelInName = regexp.MustCompile(`(?:^|[_\-. ])([A-Z])(?:[_\-. ]|$)`)
 	measured    = regexp.MustCompile(`(?i)(?:^|[^a-z])(exp|test|meas|measured|measurement|data|tunnel|taps|rig)(?:[^a-z]|$)`)
 	uncertain   = regexp.MustCompile(`(?i)^(u|u[_ ].*|u\(.*|unc.*|err.*|.*error.*|.*uncert.*|sigma.*|std.*|\+/?-.*|±.*)$`)
+	history     = regexp.MustCompile(`(?i)^(iter.*|it|its|step.*|time.*|t)$`)
+	timing      = regexp.MustCompile(`(?i)^t(ime.*)?$`)
 	counting    = regexp.MustCompile(`(?i)^(n|cells|n_?cells|cell ?count|grid ?size|points|nodes|elements)$`)
 	spacingName = regexp.MustCompile(`(?i)^(h|\(?1/n\)?.*|sqrt.*|n\^.*|spacing)$`)
 )
@@ -118,6 +120,12 @@ func propose(file string, t tablefile.Table) Slip {
 		}
 	}
 	p.Role = guess(role(file, t, size, u))
+	if p.Role.Value == Monitor {
+		p.Axis = guess(AxisIterations)
+		if timing.MatchString(t.Columns[0].Name) {
+			p.Axis = guess(AxisTime)
+		}
+	}
 	if p.Role.Value == GridValues {
 		p.Size.Column = guess(t.Columns[size].Name)
 		x = -1
@@ -162,6 +170,8 @@ func modelOf(file string, p Slip) string {
 
 func role(file string, t tablefile.Table, size, u int) string {
 	switch {
+	case len(t.Columns) > 0 && history.MatchString(t.Columns[0].Name) && t.Rows() >= 50:
+		return Monitor
 	case size >= 0 && t.Rows() <= 12:
 		return GridValues
 	case u >= 0 || measured.MatchString(strings.ReplaceAll(file, "_", " ")):

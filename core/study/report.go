@@ -90,19 +90,21 @@ type Cell struct {
 	Courses     [5]State `json:"courses"`
 	Choices     Choices  `json:"choices"`
 
-	Stations    []Station    `json:"stations"`
-	Outside     []Number     `json:"outside"`
-	StationsAll int          `json:"stations_all"`
-	Excluded    []Excluded   `json:"excluded"`
-	Conditions  []Compared   `json:"conditions"`
-	Application *Application `json:"application"` // null where no application point is stated
-	Summary     *Summary     `json:"summary"`
-	Joint       *Joint       `json:"joint"`
-	Crossings   Crossings    `json:"crossings"`
-	Grids       *Grids       `json:"grids"`
-	Sources     []SourceLine `json:"sources"`
-	Requirement *Judgement   `json:"requirement"`
-	Fragile     []Fragility  `json:"fragile"` // alternatives that change an outcome word
+	Stations    []Station     `json:"stations"`
+	Outside     []Number      `json:"outside"`
+	StationsAll int           `json:"stations_all"`
+	Excluded    []Excluded    `json:"excluded"`
+	Conditions  []Compared    `json:"conditions"`
+	Application *Application  `json:"application"` // null where no application point is stated
+	Summary     *Summary      `json:"summary"`
+	Joint       *Joint        `json:"joint"`
+	Crossings   Crossings     `json:"crossings"`
+	Monitors    []MonitorLine `json:"monitors"`
+	Balances    []BalanceLine `json:"balances"`
+	Grids       *Grids        `json:"grids"`
+	Sources     []SourceLine  `json:"sources"`
+	Requirement *Judgement    `json:"requirement"`
+	Fragile     []Fragility   `json:"fragile"` // alternatives that change an outcome word
 
 	Curve     Curve           `json:"curve"` // the simulation as read, for the figure
 	Notices   []notice.Notice `json:"notices"`
@@ -229,6 +231,39 @@ type Crossings struct {
 type Crossing struct {
 	X      Number `json:"x"`
 	Rising bool   `json:"rising"`
+}
+
+// MonitorLine is the judgement of one monitor, with the points to draw.
+// Values are in the cell's unit, places in that of the monitor.
+type MonitorLine struct {
+	Grid      string   `json:"grid"`
+	File      string   `json:"file"`
+	Axis      string   `json:"axis"` // iterations or time
+	XName     string   `json:"x_name"`
+	Class     string   `json:"class"`
+	Rule      string   `json:"rule"`
+	Mean      Number   `json:"mean"`
+	U         Number   `json:"u"`    // standard
+	From      Number   `json:"from"` // window of the mean
+	To        Number   `json:"to"`
+	Drift     Number   `json:"drift"` // fraction per Per
+	Per       Number   `json:"per"`
+	Period    Number   `json:"period"`
+	Cycles    int      `json:"cycles"`
+	HalfRange Number   `json:"half_range"`
+	X         []Number `json:"x"`
+	Y         []Number `json:"y"`
+}
+
+// BalanceLine is one balance of a run, in the unit of its file.
+type BalanceLine struct {
+	Grid     string `json:"grid"`
+	File     string `json:"file"`
+	In       Number `json:"in"`
+	Out      Number `json:"out"`
+	Net      Number `json:"net"`
+	Fraction Number `json:"fraction"` // of what enters, with its sign
+	Closed   bool   `json:"closed"`
 }
 
 // Grids is the grid study behind u_num: of a scalar, or along a curve.

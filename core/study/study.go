@@ -78,7 +78,15 @@ const (
 	Simulation = "simulation"  // a curve, or one scalar, of one run
 	GridValues = "grid values" // scalars of several grids: size and value columns
 	Reference  = "reference"   // measured or other reference data
+	Monitor    = "monitor"     // a quantity of one run over iterations or time
+	Balance    = "balance"     // what enters a run (column of stations) and what leaves it (column of values)
 	Unused     = "unused"
+)
+
+// What the stations of a monitor are.
+const (
+	AxisIterations = "iterations"
+	AxisTime       = "time"
 )
 
 // Slip says how one table of a file is used. The same table may stand behind
@@ -98,6 +106,7 @@ type Slip struct {
 	U        ColumnUse `json:"u"`        // uncertainty of the quantity, independent between stations
 	UFactor  Field     `json:"u_factor"` // coverage of U: "1", "2", "95 %", "limits"
 	Size     ColumnUse `json:"size"`     // cell counts, for grid values
+	Axis     Field     `json:"axis"`     // of a monitor: iterations or samples in time
 }
 
 // ColumnUse is a column and the unit its numbers are in.

@@ -66,5 +66,9 @@ func StudentFactor(level, nu float64) (k float64, ok bool) {
 	if math.IsInf(nu, 1) {
 		return distuv.UnitNormal.Quantile(upper), true
 	}
-	return distuv.StudentsT{Sigma: 1, Nu: nu}.Quantile(upper), true
+	student := distuv.StudentsT{Sigma: 1, Nu: nu}
+	k = student.Quantile(upper)
+	// The quantile is iterated to nine digits only; a step of Newton gives the
+	// digits of the tail.
+	return k + (student.Survival(k)-(1-level)/2)/student.Prob(k), true
 }

@@ -164,9 +164,6 @@ func (nested *Nest) components(groups []partition) bool {
 		}
 		square += float64(max(levels[l].Variance, 0) * sizes)
 		nested.Degrees = levels[l].Degrees
-		if l > 0 && levels[l].Degrees > 0 {
-			nested.Degrees = float64(len(groups[l+1].size) - 1)
-		}
 	}
 	nested.U = math.Sqrt(square)
 	return varies

@@ -5,12 +5,14 @@
 import { useState } from "preact/hooks";
 
 import type { Course, Entry, View } from "../engine/types";
+import { DoubtOf } from "./doubt";
+import { Exclusion, ExclusionsOf } from "./exclusion";
 import { Chip } from "./chip";
 import { useDesk } from "./context";
 import { list } from "./desk";
 import { FigureOf } from "./figure";
 import { Hatch } from "./hatch";
-import { courseOfEntry, jump, openCourse } from "./jump";
+import { courseOfEntry, openCourse } from "./jump";
 import { SourceLines } from "./source";
 import { FoldedTable } from "./table";
 import { Veil } from "./veil";
@@ -62,11 +64,7 @@ function CourseOf({ view, course, place, doubtful }: Shown) {
         {!open && doubts.length > 0 ? (
           <p class="doubt">{doubts.length === 1 ? "1 doubt" : `${doubts.length} doubts`}</p>
         ) : (
-          doubts.map((doubt, i) => (
-            <button key={i} class="doubt" onClick={() => jump(desk, doubt.target)}>
-              <Words text={doubt.text} />
-            </button>
-          ))
+          doubts.map((doubt, i) => <DoubtOf key={doubt.target.field + i} doubt={doubt} />)
         )}
         {open &&
           list(course.notes).map((note, i) => (
@@ -85,9 +83,15 @@ function Evidence({ view, course, place }: { view: View; course: Course; place: 
   const stations = place === 3 && tables[0] !== undefined && list(tables[0].rows).length > 1 ? tables[0] : undefined;
   const rows = list(stations?.rows).map(list);
   const [at, setAt] = useState<number | undefined>(undefined);
+  const [excluding, setExcluding] = useState(false);
   const row = at === undefined ? undefined : rows[Math.min(at, rows.length - 1)];
 
   const step = (event: KeyboardEvent) => {
+    if (event.key === "x" && row !== undefined) {
+      event.preventDefault();
+      setExcluding(true);
+      return;
+    }
     const by = event.key === "ArrowRight" ? 1 : event.key === "ArrowLeft" ? -1 : 0;
     if (by !== 0) {
       event.preventDefault();
@@ -109,7 +113,7 @@ function Evidence({ view, course, place }: { view: View; course: Course; place: 
       {stations !== undefined && (
         <p class="ledger" role="status">
           {row === undefined
-            ? "Put the focus on a picture and use the arrow keys to go from station to station."
+            ? "Put the focus on the picture: the arrow keys go from station to station, x excludes one."
             : list(stations.head).map((name, i) => (
                 <span key={i}>
                   <Words text={name} /> <b>{row[i]}</b>
@@ -117,6 +121,10 @@ function Evidence({ view, course, place }: { view: View; course: Course; place: 
               ))}
         </p>
       )}
+      {stations !== undefined && row !== undefined && (
+        <Exclusion view={view} line={row[list(stations.head).indexOf("line")]!} asking={excluding} ask={setExcluding} />
+      )}
+      {place === 3 && <ExclusionsOf view={view} />}
       {list(course.numbers).length > 0 && (
         <dl class="numbers">
           {list(course.numbers)

@@ -22,9 +22,9 @@ export function courseOfEntry(field: string): number {
   return field === "downward" ? 3 : field === "settled" ? 0 : field === "numerical" ? 1 : 2;
 }
 
-/** Shows the place of a target and puts the focus there. */
-export function jump(desk: Desk, target: Target): void {
-  const course = courseOf(target);
+/** Shows the place of a target and puts the focus there; at is the course of the open point it belongs to. */
+export function jump(desk: Desk, target: Target, at?: number): void {
+  const course = courseOf(target) ?? (target.kind === "answer" ? at : undefined);
   if (course !== undefined) {
     openCourse(desk, course);
   }

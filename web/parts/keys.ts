@@ -16,6 +16,7 @@ export const keys: Key[] = [
   { shown: "1 – 5", does: "to a course" },
   { shown: "arrows", does: "on the board from cell to cell, Enter selects; on a picture from station to station, with Shift five at a time" },
   { shown: ". ,", does: "next and previous cell with doubts" },
+  { shown: "x", does: "exclude the station that the cursor of a picture is at, with a reason" },
   { shown: "k", does: "to the coverage factor of the statement" },
   { shown: "t", does: "tables instead of pictures" },
   { shown: "m", does: "monochrome" },
@@ -30,7 +31,7 @@ export const keys: Key[] = [
 export async function goNext(desk: Desk): Promise<void> {
   const open = await desk.next();
   if (open !== undefined) {
-    jump(desk, open.target);
+    jump(desk, open.target, open.course);
   }
 }
 

@@ -12,7 +12,7 @@ import { Removal } from "./removal";
 import { SketchOf } from "./sketch";
 import { Words } from "./words";
 
-/** An answer that other slips of the same shape wait for. */
+/** An answer that other slips of the same shape wait for: the entry as it was, and what it is now. */
 interface Offer {
   entry: Entry;
   value: string;
@@ -29,7 +29,7 @@ function waiting(slip: SlipCard, all: SlipCard[], offer: Offer): Entry[] {
   return all
     .filter((other) => other.id !== slip.id && shape(other) === shape(slip))
     .flatMap((other) => list(other.entries).filter((entry) => entry.target.field === offer.entry.target.field && entry.open))
-    .filter((entry) => entry.value === "" || entry.value === offer.value);
+    .filter((entry) => ["", offer.value, offer.entry.value].includes(entry.value));
 }
 
 export function SlipOf({ slip, all }: { slip: SlipCard; all: SlipCard[] }) {

@@ -95,8 +95,8 @@ const settings = {
 };
 
 /** Opens a page with a cache of its own; what it or its workers print or throw is kept in said. */
-export async function openPage(browser) {
-  const context = await browser.createBrowserContext();
+export async function openPage(browser, options) {
+  const context = await browser.createBrowserContext(options);
   const page = await context.newPage();
   const said = [];
   page.on("console", (message) => said.push(`${message.type()}: ${message.text()}`));

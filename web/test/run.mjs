@@ -1,4 +1,4 @@
-// The tests of the front end: node web/test/run.mjs [messages|edge|page|engine]...
+// The tests of the front end: node web/test/run.mjs [messages|edge|page|engine|work]...
 // Everything is built first, into dist/test, so that what is tested is what is
 // here. The last line counts: "N passed, N failed", with ", N skipped" where a
 // browser is not installed.
@@ -11,6 +11,7 @@ import { edge } from "./edge.mjs";
 import { engine } from "./engine.mjs";
 import { messages } from "./messages.mjs";
 import { pages } from "./page.mjs";
+import { work } from "./work.mjs";
 
 const asked = process.argv.slice(2);
 const wanted = (group) => asked.length === 0 || asked.includes(group);
@@ -24,7 +25,7 @@ if (wanted("messages")) {
 if (wanted("edge")) {
   await group("edge", () => edge(dist));
 }
-if (wanted("page") || wanted("engine")) {
+if (wanted("page") || wanted("engine") || wanted("work")) {
   const source = "web/test/testdata/faulty";
   await run("go", "run", "./web/build", "page", "-out", faulty, "-entry", `${source}/main.ts`, "-core", `./${source}`);
   await inBrowsers();
@@ -36,7 +37,7 @@ async function inBrowsers() {
   const site = await openSite(path.join(dist, "site"));
   for (const one of browsers) {
     if (!installed(one)) {
-      skip(`${one.name}: page and engine`, `${one.program} is not installed`);
+      skip(`${one.name}: page, engine and work`, `${one.program} is not installed`);
       continue;
     }
     await group(one.name, async () => {
@@ -47,6 +48,9 @@ async function inBrowsers() {
         }
         if (wanted("engine")) {
           await engine(one.name, browser, faulty);
+        }
+        if (wanted("work")) {
+          await work(one.name, browser, sink, dist, site);
         }
       } finally {
         await browser.close();
