@@ -146,6 +146,7 @@ func TestRefusedRows(t *testing.T) {
 		{heading + "\na,1,2,,,\nb,1,,,,\n", "blank", 3},
 		{heading + "\na,1,two,,,\nb,1,2,,,\n", "no number", 0},
 		{heading + "\na,1,NaN,,,\nb,1,2,,,\n", "no number", 0},
+		{heading + "\na,1,0x1p-2,,,\nb,1,2,,,\n", "no number", 0},
 		{heading + "\na,1,2,0,,\nb,1,2,,,\n", "not above zero", 2},
 		{heading + "\na,1,2,,wrong,why\nb,1,2,,,\n", "unknown flag", 2},
 		{heading + "\na,1,2,,doubtful,\nb,1,2,,,\n", "without a remark", 2},

@@ -26,7 +26,7 @@ func (n *Number) UnmarshalCSV(cell string) error {
 		return nil
 	}
 	v, err := strconv.ParseFloat(cell, 64)
-	if err != nil || math.IsNaN(v) || math.IsInf(v, 0) {
+	if err != nil || math.IsNaN(v) || math.IsInf(v, 0) || strings.ContainsAny(cell, "xX") {
 		return fmt.Errorf("%q is no number", cell)
 	}
 	n.Value = v

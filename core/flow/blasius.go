@@ -117,6 +117,7 @@ func blasiusLaws() []Law {
 			at: func(_ []float64, x float64) float64 { return at(x) }}
 	}
 	overRoot := func(constant func() float64) func(float64) float64 {
+		constant = sync.OnceValue(constant)
 		return func(re float64) float64 { return constant() / math.Sqrt(re) }
 	}
 	return []Law{
@@ -125,7 +126,7 @@ func blasiusLaws() []Law {
 			func(x float64) float64 { _, f1, _ := blasius(x); return f1 }),
 		law("blasius-normal", "Laminar flat plate, velocity away from the plate", "(v/U) sqrt(Re_x) = (eta f' - f)/2",
 			eta, result("v/U sqrt(Re_x)", "velocity normal to the plate, scaled", "1"),
-			func(x float64) float64 { return normal(x) }),
+			normal),
 		law("blasius-friction", "Laminar flat plate, local skin friction", "cf = 2 f''(0)/sqrt(Re_x)",
 			rex, result("cf", "wall shear stress over rho U^2/2", "1"), overRoot(func() float64 { return 2 * wallSlope() })),
 		law("blasius-drag", "Laminar flat plate, mean friction of one side", "CF = 4 f''(0)/sqrt(Re_L)",

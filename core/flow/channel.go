@@ -21,8 +21,8 @@ func channelLaws() []Law {
 	gap := plain("h", "distance between the walls", "m", positive)
 	diameter := plain("D", "diameter", "m", positive)
 	viscosity := plain("nu", "kinematic viscosity", "m^2/s", positive)
-	across := plain("y", "distance from a wall at rest", "m", fromZero)
-	radius := plain("r", "distance from the axis", "m", fromZero)
+	across := plain("y", "distance from a wall at rest, 0 to h", "m", fromZero)
+	radius := plain("r", "distance from the axis, 0 to D/2", "m", fromZero)
 	u := result("u", "velocity along the walls", "m/s")
 	acrossGap := func(p []float64) Range { return Range{Lo: 0, Hi: p[1], Source: "the walls"} }
 	const derived = "exact solution of the Navier-Stokes equations"

@@ -1,0 +1,101 @@
+package derived
+
+import (
+	"errors"
+	"math"
+)
+
+// ErrOpen says that a loop does not close on itself.
+var ErrOpen = errors.New("the loop does not close: its ends are further apart than its rows are")
+
+// ErrRows says that a curve has too few rows for the question.
+var ErrRows = errors.New("too few rows")
+
+// Section holds the coefficients of the pressure on a closed section, per
+// chord: normal and axial to the chord line, and lift and pressure drag at the
+// angle of attack. Moment is about the leading edge (x = 0), positive nose up.
+// The drag is the pressure part only.
+type Section struct {
+	Normal, Axial float64
+	Lift, Drag    float64
+	Moment        float64
+	Gap           float64 // distance between the two ends, in chords
+	// Closure is the change of Lift when the gap is closed by a straight
+	// segment with the mean pressure of the ends.
+	Closure float64
+}
+
+// Loop integrates the pressure coefficient cp over a closed section with
+// surface points (x, y) in chords, in the order in which the contour runs
+// (either way round, starting anywhere), at the angle of attack alpha in
+// radians, by the trapezium rule over the contour:
+//
+//	Cn = closed integral of cp dx, Ca = -closed integral of cp dy
+//
+// with the sign of a contour that runs clockwise over the upper side. It
+// refuses loops whose ends lie further apart than five times the median step.
+func Loop(x, y, cp []float64, alpha float64) (Section, error) {
+	n := len(cp)
+	if n < 8 {
+		return Section{}, ErrRows
+	}
+	for i := range cp {
+		if math.IsNaN(x[i]) || math.IsNaN(y[i]) || math.IsNaN(cp[i]) {
+			return Section{}, ErrRows
+		}
+	}
+	s := Section{Gap: math.Hypot(x[n-1]-x[0], y[n-1]-y[0])}
+	if s.Gap > 5*typicalStep(x, y) {
+		return Section{}, ErrOpen
+	}
+	area := 0.0
+	for i := 1; i < n; i++ {
+		s.add(x, y, cp, i-1, i)
+		area += float64(x[i-1]*y[i]) - float64(x[i]*y[i-1])
+	}
+	before := s.lift(alpha)
+	s.add(x, y, cp, n-1, 0)
+	area += float64(x[n-1]*y[0]) - float64(x[0]*y[n-1])
+	if area > 0 { // counterclockwise: turn the signs
+		s.Normal, s.Axial, s.Moment, before = -s.Normal, -s.Axial, -s.Moment, -before
+	}
+	sin, cos := math.Sincos(alpha)
+	s.Lift = float64(s.Normal*cos) - float64(s.Axial*sin)
+	s.Drag = float64(s.Normal*sin) + float64(s.Axial*cos)
+	s.Closure = s.Lift - before
+	return s, nil
+}
+
+// add adds the segment from row i to row j of a clockwise contour: over the
+// upper side x grows and pressure pushes down.
+func (s *Section) add(x, y, cp []float64, i, j int) {
+	p := (cp[i] + cp[j]) / 2
+	dx, dy := x[j]-x[i], y[j]-y[i]
+	s.Normal -= float64(p * dx)
+	s.Axial += float64(p * dy)
+	mx, my := (x[i]+x[j])/2, (y[i]+y[j])/2
+	s.Moment += float64(p*float64(mx*dx)) + float64(p*float64(my*dy))
+}
+
+func (s *Section) lift(alpha float64) float64 {
+	sin, cos := math.Sincos(alpha)
+	return float64(s.Normal*cos) - float64(s.Axial*sin)
+}
+
+// typicalStep is the mean distance of neighbouring rows.
+func typicalStep(x, y []float64) float64 {
+	sum := 0.0
+	for i := 1; i < len(x); i++ {
+		sum += math.Hypot(x[i]-x[i-1], y[i]-y[i-1])
+	}
+	return sum / float64(len(x)-1)
+}
+
+// ArcLength returns the length along the contour from its first row.
+func ArcLength(x, y []float64) []float64 {
+	s := make([]float64, len(x))
+	for i := 1; i < len(x); i++ {
+		s[i] = s[i-1] + math.Hypot(x[i]-x[i-1], y[i]-y[i-1])
+	}
+	return s
+}
