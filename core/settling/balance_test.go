@@ -69,7 +69,7 @@ func TestBalanceProperties(t *testing.T) {
 		f := Flux{Kind: Mass, In: flows.Draw(t, "in"), Out: flows.Draw(t, "out")}
 		b := Balance(f, Options{})
 		back := Balance(Flux{Kind: Mass, In: f.Out, Out: f.In}, Options{})
-		if b.Net != -back.Net || math.Abs(b.Scale-back.Scale) > math.Abs(b.Net)*(1+1e-12)+1e-12 {
+		if !near(b.Net, -back.Net, 1e-13) || math.Abs(b.Scale-back.Scale) > math.Abs(b.Net)*(1+1e-12)+1e-12 {
 			t.Fatalf("%+v exchanged is %+v", b, back)
 		}
 		eight := Flux{Kind: Mass}

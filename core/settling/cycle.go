@@ -139,13 +139,14 @@ func explained(e []float64, period float64) float64 {
 }
 
 // correlogram returns the autocorrelation up to two thirds of the record,
-// each lag over as many products as it has.
+// each lag over as many products as it has, to nine decimals, so that what is
+// a peak does not hang on last bits.
 func correlogram(e []float64) []float64 {
 	n := len(e)
 	g := autocovariance(e)
 	r := make([]float64, 2*n/3+2)
 	for k := range r {
-		r[k] = g[k] / g[0] * float64(n) / float64(n-k)
+		r[k] = math.Round(g[k]/g[0]*float64(n)/float64(n-k)*1e9) / 1e9
 	}
 	return r
 }

@@ -1,6 +1,10 @@
 package settling
 
-import "math"
+import (
+	"math"
+
+	"weirmark/core/quantity"
+)
 
 // Geometric is what a sequence that closes in on its limit by a constant
 // ratio leaves to come.
@@ -62,13 +66,12 @@ const (
 )
 
 // decay extrapolates the means of eight equal blocks of y, so that noise from
-// row to row does not hide the approach. It returns the mean of the last
-// block with the length of a block, what remains from that mean and what
-// remains from the last row.
-func decay(y []float64) (last float64, size int, fromMean, fromEnd float64, ok bool) {
+// row to row does not hide the approach. It returns the length of a block, what
+// remains from the mean of the last block and what remains from the last row.
+func decay(y []float64) (size int, fromMean, fromEnd float64, ok bool) {
 	size = len(y) / blocks
 	if size < 2 {
-		return 0, 0, 0, 0, false
+		return 0, 0, 0, false
 	}
 	y = y[len(y)-blocks*size:]
 	means := make([]float64, blocks)
@@ -76,13 +79,13 @@ func decay(y []float64) (last float64, size int, fromMean, fromEnd float64, ok b
 		means[i] = mean(y[i*size : (i+1)*size])
 	}
 	g, ok := Extrapolate(means)
-	if !ok || g.Ratio <= 0 || g.Fit < leastFit {
-		return 0, 0, 0, 0, false
+	if !ok || g.Ratio <= 0 || quantity.Round(g.Fit, 10) < leastFit {
+		return 0, 0, 0, false
 	}
 	// A block's mean is off the limit by a (1-q^m)/(m (1-q)), its last row by
 	// a q^(m-1), with q the ratio from row to row and m rows a block.
 	m := float64(size)
 	log := math.Log(g.Ratio) / m
 	share := m * math.Expm1(log) / math.Expm1(m*log) * math.Exp(log*(m-1))
-	return means[blocks-1], size, g.Remaining, g.Remaining * share, true
+	return size, g.Remaining, g.Remaining * share, true
 }

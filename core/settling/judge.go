@@ -243,19 +243,20 @@ func (j *judgement) last(y []float64) {
 	moving := j.moves(l.slope) && l.clear(end)
 	j.use(rows)
 
-	lastMean, size, fromMean, fromEnd, approach := decay(y)
+	size, fromMean, fromEnd, approach := decay(y)
+	_, sd := spread(end)
 	if approach {
 		j.Remaining = fromEnd
 		if !j.small(math.Abs(fromEnd)) {
 			j.drifting(l.slope)
 			return
 		}
-		if moving || !j.small(math.Abs(lastMean-j.Mean)) {
+		_, sdLast := spread(y[len(y)-size:])
+		if (moving || !j.small(math.Sqrt2*sd)) && j.small(math.Sqrt2*sdLast) {
 			j.approached(size, fromMean)
 			return
 		}
 	}
-	_, sd := spread(end)
 	u, _, _ := standardOfMean(end)
 	switch {
 	case moving:

@@ -1,6 +1,10 @@
 package settling
 
-import "math"
+import (
+	"math"
+
+	"weirmark/core/quantity"
+)
 
 // mean returns the mean of y, summed about its first value.
 func mean(y []float64) float64 {
@@ -75,5 +79,5 @@ func (l line) clear(y []float64) bool {
 	_, sd := spread(e)
 	independent := max(float64(n)/max(correlationTime(e), 1), 3)
 	span := float64(n - 1)
-	return math.Abs(float64(l.slope*span)) > 4*sd*math.Sqrt(12/(independent-2))
+	return quantity.Round(math.Abs(l.slope*span), 10) > quantity.Round(4*sd*math.Sqrt(12/(independent-2)), 10)
 }

@@ -67,7 +67,7 @@ func TestMarkovFactorPublished(t *testing.T) {
 		limit, exact := MarkovFactor(row.rho, row.n)
 		n := float64(row.n)
 		for _, pair := range [][2]float64{{limit, row.limit}, {exact, row.exact}, {n / limit, row.nLimit}, {n / exact, row.nEffExact}} {
-			if !near(pair[0], pair[1], 6e-9*math.Abs(pair[1])+5e-9) { // printed to 8 digits
+			if !near(pair[0], pair[1], 2e-8*math.Abs(pair[1])) { // printed to 8 digits or more
 				t.Errorf("rho %v, n %d: %.10g, want %.10g", row.rho, row.n, pair[0], pair[1])
 			}
 		}

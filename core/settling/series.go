@@ -157,7 +157,7 @@ func (r *record) behindBreaks(at, y []float64, opt Options) ([]float64, []float6
 	return at[last:], y[last:]
 }
 
-// usualStep returns the median of the forward steps, 0 where there is none.
+// usualStep returns the (lower) median of the forward steps, 0 where there is none.
 func usualStep(at []float64) float64 {
 	var steps []float64
 	for i := 1; i < len(at); i++ {
@@ -169,18 +169,20 @@ func usualStep(at []float64) float64 {
 		return 0
 	}
 	slices.Sort(steps)
-	return steps[len(steps)/2]
+	return steps[(len(steps)-1)/2]
 }
 
 // even brings the rows to even steps: as they are where the steps differ by
-// less than a millionth, else by linear interpolation to as many rows.
+// less than a millionth, else by linear interpolation to the usual step, so
+// that a missing row among even ones moves no other.
 func (r *record) even(at, y []float64, opt Options) {
 	n := len(at)
 	r.start, r.step, r.y = at[0], 1, y
 	if n < 2 {
 		return
 	}
-	r.step = (at[n-1] - at[0]) / float64(n-1)
+	span := at[n-1] - at[0]
+	r.step = span / float64(n-1)
 	lo, hi := math.Inf(1), 0.
 	for i := 1; i < n; i++ {
 		step := at[i] - at[i-1]
@@ -189,11 +191,13 @@ func (r *record) even(at, y []float64, opt Options) {
 	if hi-lo <= 1e-6*r.step {
 		return
 	}
-	grid := make([]float64, n)
+	steps := min(max(math.Round(span/usualStep(at)), 1), float64(gapFactor*n))
+	r.step = span / steps
+	grid := make([]float64, int(steps)+1)
 	for i := range grid {
 		grid[i] = min(r.at(i), at[n-1])
 	}
-	r.y = make([]float64, n)
+	r.y = make([]float64, len(grid))
 	if err := interpolate.At(r.y, at, y, grid, interpolate.Linear); err != nil {
 		panic("settling: " + err.Error()) // the grid lies within the rows
 	}

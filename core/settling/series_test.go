@@ -25,8 +25,8 @@ func TestRecord(t *testing.T) {
 		{"inner iterations", []float64{1, 1, 2, 2, 3}, []float64{9, 5, 9, 6, 7}, 1, 1, []float64{5, 6, 7}, []string{"monitor-repeated"}},
 		{"count begins anew", []float64{1, 2, 3, 1, 2}, []float64{1, 2, 3, 8, 9}, 1, 1, []float64{8, 9}, []string{"monitor-restart"}},
 		{"rows missing", []float64{1, 2, 3, 14, 15, 16}, []float64{1, 2, 3, 8, 9, 7}, 14, 1, []float64{8, 9, 7}, []string{"monitor-restart"}},
-		{"a step of ten is no break", []float64{1, 2, 12}, []float64{1, 2, 12}, 1, 5.5, []float64{1, 6.5, 12}, []string{"monitor-uneven"}},
-		{"growing time steps", []float64{0, 1, 3, 7}, []float64{0, 2, 6, 14}, 0, 7. / 3, []float64{0, 14. / 3, 28. / 3, 14}, []string{"monitor-uneven"}},
+		{"a step of ten is no break", []float64{1, 2, 12}, []float64{1, 2, 12}, 1, 1, []float64{1, 2, 3, 4, 5, 6, 7, 8, 9, 10, 11, 12}, []string{"monitor-uneven"}},
+		{"growing time steps", []float64{0, 1, 3, 7}, []float64{0, 2, 6, 14}, 0, 1.75, []float64{0, 3.5, 7, 10.5, 14}, []string{"monitor-uneven"}},
 		{"nothing", nil, nil, 0, 0, nil, []string{}},
 		{"nothing usable", nil, []float64{nan, nan}, 0, 0, nil, []string{"monitor-rows"}},
 	} {

@@ -28,7 +28,7 @@ type Stat struct {
 
 // Limits of the statistics. No source.
 const (
-	leastIndependent = 2  // at or below it no uncertainty is given
+	leastIndependent = 5  // at or below it no uncertainty is given
 	fewIndependent   = 20 // below it the count is told
 	mostBatches      = 20
 	batchTimes       = 5 // correlation times a batch should hold
@@ -43,7 +43,8 @@ const (
 // independent rows this is s/sqrt(n). With a cycle the mean is that of whole
 // cycles at the end of the record, and the same formula is used on the means
 // of the fewest whole cycles that take eight rows. Rows need not be evenly
-// spaced. Cost n log n.
+// spaced. A record shorter than its correlation time looks like one with a
+// short one: no count of samples can tell. Cost n log n.
 func Statistics(s Series, opt Options) Stat {
 	r := newRecord(s, opt)
 	if r.broken || len(r.y) < leastRows {
@@ -115,7 +116,7 @@ func average(r record, from int, period float64, opt Options) Stat {
 }
 
 // standardOfMean returns the standard uncertainty of the mean of y, NaN where
-// y holds no more than two independent values, the correlation time in rows
+// y holds no more than five independent values, the correlation time in rows
 // and the count of independent values.
 func standardOfMean(y []float64) (u, tau, independent float64) {
 	n := float64(len(y))

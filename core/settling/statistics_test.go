@@ -121,7 +121,7 @@ func TestStatisticsNotices(t *testing.T) {
 		{"few rows", short[:19], Options{}, false, []string{"monitor-short"}},
 		{"blown up", append(slices.Clone(short), math.NaN()), Options{}, false, []string{"monitor-broken"}},
 		{"few independent", short, Options{}, true, []string{"sampling-short"}},
-		{"none independent", made(40, func(i float64) float64 { return math.Sqrt(40 - i) }), Options{}, false, []string{"sampling-none"}},
+		{"none independent", made(40, func(i float64) float64 { return math.Sqrt(40 - i) }), Options{}, false, []string{"sampling-startup", "sampling-none"}},
 		{"start-up beyond the middle", append(made(300, func(i float64) float64 { return 50 - i/10 }), markov(generator(1), 0, 200)...), Options{}, true, nil},
 		{"enough", markov(generator(1), 0.5, 3000), Options{}, true, []string{}},
 		{"enough, but large beside u_num", markov(generator(1), 0.5, 3000), Options{UNum: 0.05}, true, []string{"sampling-short"}},

@@ -57,6 +57,21 @@ func Evaluate(s *Study, options Options) Report {
 	return r
 }
 
+// Alternatives returns the choices that would change an outcome of a cell of
+// the study's report: what Evaluate lists for every cell when it is asked to.
+func Alternatives(s *Study, options Options, c *Cell) []Fragility {
+	q := s.Question(c.Case, c.Quantity)
+	if q == nil || c.Summary == nil {
+		return []Fragility{}
+	}
+	if options.Read == nil {
+		options.Read = Read
+	}
+	e := &evaluation{study: s, options: options, files: map[string]tablefile.File{}}
+	e.readFiles(&Report{})
+	return e.fragile(q, c.Model, *c)
+}
+
 // readFiles reads every file once and lists it with its uses.
 func (e *evaluation) readFiles(r *Report) {
 	first := map[string]string{} // by hash

@@ -86,10 +86,8 @@ func (w *work) judgeMonitor(c *curve) {
 	if p.Grid.Given() {
 		name += " on " + p.Grid.Value
 	}
-	opt := settling.Options{Name: name, Time: p.Axis.Value == AxisTime}
-	if w.cell.Grids != nil && w.cell.Grids.U.Known() {
-		opt.UGrid = w.yUnit.StepToSI(float64(w.cell.Grids.U))
-	}
+	opt := w.settlingOptions()
+	opt.Name, opt.Time = name, p.Axis.Value == AxisTime
 	m := settling.Judge(settling.Series{At: c.x, Value: values}, opt)
 	finest := p.Grid.Value == w.cell.Grid
 	w.cell.Monitors = append(w.cell.Monitors, w.monitorLine(c, values, m))
@@ -114,9 +112,26 @@ func (w *work) judgeMonitor(c *curve) {
 	if w.cell.Scalar {
 		e = w.s[0] - w.d[0]
 	}
-	for _, n := range settling.Weigh(w.q.Quantity, 2*m.U, opt.UGrid, change, e).Notices {
+	uIter := 2 * m.U
+	if m.Class == settling.Cycling || m.Class == settling.Stalled {
+		uIter = m.HalfRange // what is printed as U_iter there
+	}
+	for _, n := range settling.Weigh(w.q.Quantity, uIter, opt.UGrid, change, e).Notices {
 		w.tell(n)
 	}
+}
+
+// settlingOptions holds what changes are judged against: the grid
+// uncertainty, the size of the quantity, and the comparison error.
+func (w *work) settlingOptions() settling.Options {
+	opt := settling.Options{}
+	if w.cell.Grids != nil && w.cell.Grids.U.Known() {
+		opt.UGrid = w.yUnit.StepToSI(float64(w.cell.Grids.U))
+	}
+	if w.cell.Scalar && len(w.s) == 1 {
+		opt.Scale, opt.E = math.Abs(w.s[0]), w.s[0]-w.d[0]
+	}
+	return opt
 }
 
 // finding lists a notice of another package: a stop that no one has answered
@@ -165,7 +180,7 @@ func (w *work) judgeBalance(c *curve) {
 	if row < 0 {
 		return
 	}
-	b := settling.Balance(settling.Flux{Kind: settling.Mass, In: []float64{in}, Out: []float64{out}}, settling.Options{})
+	b := settling.Balance(settling.Flux{Kind: settling.Mass, In: []float64{in}, Out: []float64{out}}, w.settlingOptions())
 	w.cell.Balances = append(w.cell.Balances, BalanceLine{Grid: c.slip.Grid.Value, File: w.e.study.fileName(c.slip), In: Number(in), Out: Number(out), Net: Number(b.Net), Fraction: Number(b.Fraction), Closed: b.Closed})
 	for _, n := range b.Notices {
 		if c.slip.Grid.Given() && n.Severity != notice.Note {
