@@ -282,8 +282,43 @@ func agreeTables(c *study.Cell) []Table {
 			{"remainder without the offset", text(j.Remainder, 4), strconv.Itoa(j.RemainderN), text(j.RemainderReference, 3)},
 		}})
 	}
+	tables = append(tables, scoreTables(c)...)
 	if x := c.Crossings; len(x.Simulation)+len(x.Reference) > 0 {
 		tables = append(tables, Table{Title: "Changes of sign", Head: []string{"side", name, "direction"}, Rows: append(crossingRows("simulation", x.Simulation), crossingRows("reference", x.Reference)...)})
+	}
+	return tables
+}
+
+// scoreTables lists the measures with their scales and criteria, and the
+// regions.
+func scoreTables(c *study.Cell) []Table {
+	var tables []Table
+	if len(c.Scores) > 0 {
+		t := Table{Title: "Measures", Head: []string{"measure", "value", "scale", "criterion", "limits", "met", "scope and source"}, Rows: [][]string{}}
+		for _, s := range c.Scores {
+			value := text(s.Value, 3)
+			if s.Word != "" {
+				value += " (" + s.Word + ")"
+			}
+			if len(s.Criteria) == 0 {
+				t.Rows = append(t.Rows, []string{s.Name, value, s.Scale, "", "", "", ""})
+			}
+			for i, k := range s.Criteria {
+				row := []string{"", "", "", k.Name, text(k.Low, 3) + " to " + text(k.High, 3), map[bool]string{true: "yes", false: "no"}[k.Met], k.Scope + "; " + k.Source}
+				if i == 0 {
+					row[0], row[1], row[2] = s.Name, value, s.Scale
+				}
+				t.Rows = append(t.Rows, row)
+			}
+		}
+		tables = append(tables, t)
+	}
+	if len(c.Regions) > 0 {
+		t := Table{Title: "Regions", Head: []string{"region", "from", "to", "n", "mean E", "RMSE", "hit rate", "beyond k u_val"}, Rows: [][]string{}}
+		for _, r := range c.Regions {
+			t.Rows = append(t.Rows, []string{r.Name, text(r.From, 4), text(r.To, 4), strconv.Itoa(r.N), quantity.Signed(float64(r.Bias), 3), text(r.RMSE, 3), text(r.HitRate, 2), strconv.Itoa(r.Beyond)})
+		}
+		tables = append(tables, t)
 	}
 	return tables
 }

@@ -88,34 +88,51 @@ func statements(report *study.Report) []CellStatement {
 // there are several.
 func figuresOf(report *study.Report, theme chart.Theme) ([]CellFigure, error) {
 	list := []CellFigure{}
-	for i := 0; i < len(report.Cells); {
-		last, shared := i, false
-		for last < len(report.Cells) && sameQuestion(&report.Cells[i], &report.Cells[last]) {
-			last++
+	for i := range report.Cells {
+		if i > 0 && sameQuestion(&report.Cells[i-1], &report.Cells[i]) {
+			continue
 		}
-		group := report.Cells[i:last]
-		if drawn := together(group); len(drawn) > 1 {
-			f, err := chart.Compared(drawn, cellID(i), theme)
-			if err != nil {
-				return nil, err
-			}
-			list = append(list, CellFigure{group[0].Case, group[0].Quantity, "", f})
-			shared = group[0].Scalar // one picture of intervals holds all models
+		figures, err := figuresOfQuestion(report, i, theme)
+		if err != nil {
+			return nil, err
 		}
-		for j := i; j < last; j++ {
-			c := &report.Cells[j]
-			figures, err := chart.Figures(*c, cellID(j), theme)
-			if err != nil {
-				return nil, err
-			}
-			for _, f := range figures {
-				if shared && !isGridFigure(f) {
-					continue
-				}
-				list = append(list, CellFigure{c.Case, c.Quantity, c.Model, f})
-			}
+		list = append(list, figures...)
+	}
+	return list, nil
+}
+
+// figuresOfQuestion draws the cells of the question that a cell belongs to;
+// they lie side by side in the report.
+func figuresOfQuestion(report *study.Report, at int, theme chart.Theme) ([]CellFigure, error) {
+	first, last := at, at
+	for first > 0 && sameQuestion(&report.Cells[first-1], &report.Cells[at]) {
+		first--
+	}
+	for last < len(report.Cells) && sameQuestion(&report.Cells[at], &report.Cells[last]) {
+		last++
+	}
+	list, shared := []CellFigure{}, false
+	group := report.Cells[first:last]
+	if drawn := together(group); len(drawn) > 1 {
+		f, err := chart.Compared(drawn, cellID(first), theme)
+		if err != nil {
+			return nil, err
 		}
-		i = last
+		list = append(list, CellFigure{group[0].Case, group[0].Quantity, "", f})
+		shared = group[0].Scalar // one picture of intervals holds all models
+	}
+	for j := first; j < last; j++ {
+		c := &report.Cells[j]
+		figures, err := chart.Figures(*c, cellID(j), theme)
+		if err != nil {
+			return nil, err
+		}
+		for _, f := range figures {
+			if shared && !isGridFigure(f) {
+				continue
+			}
+			list = append(list, CellFigure{c.Case, c.Quantity, c.Model, f})
+		}
 	}
 	return list, nil
 }

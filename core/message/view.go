@@ -157,7 +157,8 @@ type FileCard struct {
 
 // view evaluates the study and lays it out for the page.
 func (s *Session) view() (*View, error) {
-	report := s.report()
+	options := study.Options{Read: s.readOnce}
+	report := study.Evaluate(s.study, options)
 	v := &View{
 		Title: s.study.Title, Purpose: s.study.Purpose, Status: status(s.study), Unsaved: len(s.study.Log) > s.saved,
 		Board: board(&report), Courses: []Course{}, Slips: s.slipCards(), Sources: []SourceCard{}, Choices: []Entry{}, Question: []Entry{}, Excluded: []ExcludedCard{},
@@ -183,6 +184,7 @@ func (s *Session) view() (*View, error) {
 		return v, nil
 	}
 	c := &report.Cells[at]
+	c.Fragile = study.Alternatives(s.study, options, c) // of the others no word is shown
 	v.Selected = cellID(at)
 	v.Statement = sentence.Of(c)
 	v.Spoken = v.Statement.Text()
@@ -193,7 +195,7 @@ func (s *Session) view() (*View, error) {
 		v.Statement = sentence.Veiled(c)
 		v.Spoken = v.Statement.Text()
 	}
-	figures, err := figuresOf(&report, themeOf(s.theme))
+	figures, err := figuresOfQuestion(&report, at, themeOf(s.theme))
 	if err != nil {
 		return nil, err
 	}

@@ -109,6 +109,12 @@ var table = map[string]row{
 	"station-excluded":      {Note, "%d of %d stations were taken out by hand; they stay in the table with their reasons."},
 	"station-excluded-late": {Ask, "%d stations were taken out after results were seen: logged; the result with them is among the alternatives."},
 
+	// Measures.
+	"percent-withheld": {Note, "Percent errors are withheld at %d stations: |D| is below %s %% of its largest value there."},
+	"scores-signed":    {Stop, "%s need values that are not negative; %s changes sign. They were not computed. Use the hit rate or a normalised RMSE."},
+	"scores-positive":  {Note, "%s need positive values; some of %s are zero. They were not computed."},
+	"models-stations":  {Stop, "Models %s and %s were not set against each other for %s: they are compared at different stations (%s and %s). Compare both at the same ones, or not at all."},
+
 	// Findings that look like mistakes. Nothing is changed because of them.
 	"finding-answered":  {Note, "%s was answered: %s"},
 	"ratio-constant":    {Ask, "S/D is %s ± %s at the stations%s. Nothing was changed. Check units and references of both sides."},

@@ -172,6 +172,11 @@ func (s *Study) Clone() *Study {
 		q.Sources = append([]Source{}, q.Sources...)
 		q.Excluded = append([]Exclusion{}, q.Excluded...)
 		q.Conditions = append([]Matching{}, q.Conditions...)
+		q.Regions = append([]Region{}, q.Regions...)
+		if q.Scores != nil {
+			scores := *q.Scores
+			q.Scores = &scores
+		}
 		q.Answers = maps.Clone(q.Answers)
 		if q.Requirement != nil {
 			r := *q.Requirement

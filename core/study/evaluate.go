@@ -40,7 +40,7 @@ func Evaluate(s *Study, options Options) Report {
 	e := &evaluation{study: s, options: options, files: map[string]tablefile.File{}}
 	r := Report{
 		Title: s.Title, Purpose: s.Purpose, Edition: Edition,
-		Files: []FileLine{}, Cells: []Cell{}, Notices: []notice.Notice{},
+		Files: []FileLine{}, Cells: []Cell{}, Differences: []Difference{}, Notices: []notice.Notice{},
 		Prepared: s.Prepared, Checked: s.Checked, Approved: s.Approved,
 		Log: append([]Entry{}, s.Log...),
 	}
@@ -54,6 +54,7 @@ func Evaluate(s *Study, options Options) Report {
 			r.Cells = append(r.Cells, e.cell(q, model))
 		}
 	}
+	e.differences(&r)
 	return r
 }
 
@@ -168,7 +169,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		Case: q.Case, Condition: q.Condition, Quantity: q.Quantity, Symbol: q.Symbol, Model: model,
 		Reference: q.ReferenceID, Kind: q.Kind.Value, Use: q.Use.Value, Downward: q.Downward, Choices: choices,
 		Unit: "1", XUnit: "1",
-		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Monitors: []MonitorLine{}, Balances: []BalanceLine{}, Conditions: []Compared{}, Sources: []SourceLine{}, Fragile: []Fragility{},
+		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Scores: []ScoreLine{}, Regions: []RegionLine{}, Monitors: []MonitorLine{}, Balances: []BalanceLine{}, Conditions: []Compared{}, Sources: []SourceLine{}, Fragile: []Fragility{},
 		Notices: []notice.Notice{}, FilesUsed: []string{},
 		Crossings: Crossings{Simulation: []Crossing{}, Reference: []Crossing{}},
 		Curve:     Curve{X: []Written{}, Y: []Written{}, UNum: []Number{}},
@@ -184,6 +185,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		w.budget()
 		w.agree()
 		w.doubtComparison()
+		w.scores()
 		w.judge()
 		w.draw()
 	}

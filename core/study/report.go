@@ -14,16 +14,17 @@ type Number = quantity.Number
 // Report is everything Evaluate found, and all that sentence, chart and memo
 // may use. All numbers of a cell are in the cell's unit.
 type Report struct {
-	Title    string          `json:"title"`
-	Purpose  string          `json:"purpose"`
-	Edition  string          `json:"edition"` // edition of the methods
-	Files    []FileLine      `json:"files"`
-	Cells    []Cell          `json:"cells"`
-	Notices  []notice.Notice `json:"notices"` // of files and of the study as a whole
-	Prepared Signature       `json:"prepared"`
-	Checked  Signature       `json:"checked"`
-	Approved Signature       `json:"approved"`
-	Log      []Entry         `json:"log"`
+	Title       string          `json:"title"`
+	Purpose     string          `json:"purpose"`
+	Edition     string          `json:"edition"` // edition of the methods
+	Files       []FileLine      `json:"files"`
+	Cells       []Cell          `json:"cells"`
+	Differences []Difference    `json:"differences"` // of models of one question
+	Notices     []notice.Notice `json:"notices"`     // of files and of the study as a whole
+	Prepared    Signature       `json:"prepared"`
+	Checked     Signature       `json:"checked"`
+	Approved    Signature       `json:"approved"`
+	Log         []Entry         `json:"log"`
 }
 
 // Marks of a phrase of a statement.
@@ -98,6 +99,8 @@ type Cell struct {
 	Application *Application  `json:"application"` // null where no application point is stated
 	Summary     *Summary      `json:"summary"`
 	Joint       *Joint        `json:"joint"`
+	Scores      []ScoreLine   `json:"scores"`
+	Regions     []RegionLine  `json:"regions"`
 	Crossings   Crossings     `json:"crossings"`
 	Monitors    []MonitorLine `json:"monitors"`
 	Balances    []BalanceLine `json:"balances"`
@@ -156,6 +159,55 @@ type Station struct {
 	Hi      Number           `json:"hi"`
 	Line    int              `json:"line"` // line of the reference file
 	Reading string           `json:"reading"`
+}
+
+// ScoreLine is one difference measure with its scale and the criteria of its
+// field. A score is a measurement, a criterion is bound to its scope.
+type ScoreLine struct {
+	Name     string          `json:"name"`
+	Value    Number          `json:"value"`
+	Scale    string          `json:"scale"`
+	Word     string          `json:"word"` // e.g. over-prediction
+	Criteria []CriterionLine `json:"criteria"`
+}
+
+// CriterionLine is a limit of a field on a score.
+type CriterionLine struct {
+	Name   string `json:"name"`
+	Low    Number `json:"low"`
+	High   Number `json:"high"`
+	Met    bool   `json:"met"`
+	Scope  string `json:"scope"`
+	Source string `json:"source"`
+}
+
+// RegionLine is the comparison in a part of the stations.
+type RegionLine struct {
+	Name    string `json:"name"`
+	From    Number `json:"from"`
+	To      Number `json:"to"`
+	N       int    `json:"n"`
+	Bias    Number `json:"bias"`
+	RMSE    Number `json:"rmse"`
+	HitRate Number `json:"hit_rate"`
+	Beyond  int    `json:"beyond"` // stations with |E| beyond k u_val
+}
+
+// Difference sets two models of one question against each other at the same
+// stations: mean of S_A - S_B with its standard uncertainty, from which the
+// data cancel.
+type Difference struct {
+	Case     string `json:"case"`
+	Quantity string `json:"quantity"`
+	A        string `json:"a"`
+	B        string `json:"b"`
+	Unit     string `json:"unit"`
+	N        int    `json:"n"`
+	Mean     Number `json:"mean"`
+	U        Number `json:"u"`
+	Resolved bool   `json:"resolved"`
+	RMSA     Number `json:"rms_a"` // root mean square of E
+	RMSB     Number `json:"rms_b"`
 }
 
 // Compared is one condition on both sides and the effect of its difference.

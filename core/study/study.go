@@ -145,9 +145,26 @@ type Question struct {
 	Revealed    bool         `json:"revealed"` // the comparison was looked at
 	Excluded    []Exclusion  `json:"excluded,omitempty"`
 	Conditions  []Matching   `json:"conditions,omitempty"`
+	Scores      *Scoring     `json:"scores,omitempty"`
+	Regions     []Region     `json:"regions,omitempty"`
 	// Answers holds, by the code of a finding, what a person answered to it.
 	// An answered finding is no open point any more; the memo prints both.
 	Answers map[string]string `json:"answers,omitempty"`
+}
+
+// Scoring asks for the measures of a field beside the usual ones.
+type Scoring struct {
+	Dispersion bool    `json:"dispersion"` // FB, NMSE, FAC2, MG, VG: only for values that are not negative
+	Threshold  float64 `json:"threshold"`  // below it a ratio says nothing; in the unit of the data
+	Fraction   float64 `json:"fraction"`   // of the hit rate
+	Allowance  float64 `json:"allowance"`  // of the hit rate, in the unit of the data
+}
+
+// Region is a part of the stations that is told apart.
+type Region struct {
+	Name string  `json:"name"`
+	From float64 `json:"from"` // in the unit of the stations
+	To   float64 `json:"to"`
 }
 
 // Card holds the reference quantities of a case.
