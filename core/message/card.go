@@ -347,6 +347,73 @@ func questionEntries(q *study.Question) []Entry {
 		entry("reference_id", "name of the reference", q.ReferenceID, study.Entered, []Option{}, "e.g. campaign and run"),
 		entry("condition", "condition", q.Condition, study.Entered, []Option{}, "e.g. α = 4.2°"),
 		entry("symbol", "symbol", q.Symbol, study.Entered, []Option{}, "e.g. Cd"),
+		entry("scores.dispersion", "scores of the dispersion field", scoring(q, func(a *study.Scoring) string { return map[bool]string{true: "yes", false: "no"}[a.Dispersion] }, "no"), study.Entered, []Option{{"no", "not asked for"}, {"yes", "asked for"}}, "FB, NMSE, FAC2, MG, VG: values that are not negative"),
+		entry("scores.fraction", "hit rate within, as a fraction of D", scoring(q, func(a *study.Scoring) string { return strconv.FormatFloat(a.Fraction, 'g', -1, 64) }, ""), study.Entered, []Option{}, "e.g. 0.25"),
+		entry("scores.allowance", "or within, in the unit of the data", scoring(q, func(a *study.Scoring) string { return strconv.FormatFloat(a.Allowance, 'g', -1, 64) }, ""), study.Entered, []Option{}, "from the uncertainty of the data"),
 		entry("downward", "drawn", map[bool]string{true: "yes", false: "no"}[q.Downward], study.Entered, []Option{{"no", "positive upward"}, {"yes", "negative upward"}}, ""),
 	}
+}
+
+func scoring(q *study.Question, of func(*study.Scoring) string, none string) string {
+	if q.Scores == nil {
+		return none
+	}
+	return of(q.Scores)
+}
+
+// lists are the conditions of both sides, the regions, the point of
+// application and the card of the case.
+func lists(s *study.Study, q *study.Question) []EntryList {
+	id := questionID(q)
+	entry := func(kind, id, field, label, value string, options []Option, hint string) Entry {
+		return Entry{Target: study.Target{Kind: kind, ID: id, Field: field}, Label: label, Value: value, By: study.Entered, Options: options, Hint: hint}
+	}
+	number := func(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
+	list := func(course int, kind, id, title, hint string) EntryList {
+		return EntryList{Course: course, Title: title, Hint: hint, Add: &study.Target{Kind: kind, ID: id}, Items: []EntryItem{}}
+	}
+	item := func(kind, id string, i int, entries ...Entry) EntryItem {
+		for j := range entries {
+			entries[j].Target.Field = strconv.Itoa(i) + "." + entries[j].Target.Field
+		}
+		return EntryItem{Remove: &study.Target{Kind: kind, ID: id, Field: strconv.Itoa(i)}, Entries: entries}
+	}
+	conditions := list(2, study.ItemCondition, id, "Conditions of both sides", "what was set in the simulation and what the test had")
+	for i, m := range q.Conditions {
+		sensitivity := ""
+		if m.Sensitivity != nil {
+			sensitivity = number(*m.Sensitivity)
+		}
+		k := study.ItemCondition
+		conditions.Items = append(conditions.Items, item(k, id, i,
+			entry(k, id, "name", "condition", m.Name, []Option{}, "e.g. α"), entry(k, id, "unit", "unit", m.Unit, []Option{}, "e.g. °"),
+			entry(k, id, "simulation", "simulation", number(m.Simulation), []Option{}, ""), entry(k, id, "data", "data", number(m.Data), []Option{}, ""),
+			entry(k, id, "sensitivity", "change of the quantity for one unit", sensitivity, []Option{}, "empty: not known"),
+			entry(k, id, "handling", "a difference is", m.Handling, []Option{{"", "open"}, {study.Corrected, "corrected"}, {study.AsInput, "counted as an input uncertainty"}, {study.Tolerated, "accepted, with a reason"}}, ""),
+			entry(k, id, "why", "reason", m.Why, []Option{}, "")))
+	}
+	regions := list(3, study.ItemRegion, id, "Regions", "parts of the stations that are told apart")
+	for i, r := range q.Regions {
+		k := study.ItemRegion
+		regions.Items = append(regions.Items, item(k, id, i, entry(k, id, "name", "region", r.Name, []Option{}, ""), entry(k, id, "from", "from", number(r.From), []Option{}, ""), entry(k, id, "to", "to", number(r.To), []Option{}, "")))
+	}
+	application := list(4, study.ItemApplication, "", "Point of application", "the conditions the result is meant for")
+	for i, c := range s.Application {
+		k := study.ItemApplication
+		application.Items = append(application.Items, item(k, "", i, entry(k, "", "name", "condition", c.Name, []Option{}, "e.g. α"), entry(k, "", "value", "value", number(c.Value), []Option{}, ""), entry(k, "", "unit", "unit", c.Unit, []Option{}, "")))
+	}
+	card := EntryList{Course: 2, Title: "Case " + q.Case, Hint: "reference quantities", Items: []EntryItem{{Entries: []Entry{
+		entry("case", q.Case, "density", "density ρ in kg/m³", density(s, q.Case), []Option{}, "relates a pressure to one divided by density")}}}}
+	return []EntryList{conditions, card, regions, application}
+}
+
+func density(s *study.Study, name string) string {
+	for _, c := range s.Cases {
+		for _, r := range c.References {
+			if c.Name == name && r.Symbol == study.Density {
+				return strconv.FormatFloat(r.Value, 'g', -1, 64)
+			}
+		}
+	}
+	return ""
 }

@@ -101,7 +101,7 @@ func init() {
 		"about": about, "read": readFile, "grids": grids, "compare": compare,
 		"demo": demo, "new": blank, "open": open, "drop": drop, "save": save, "copy": copyStudy,
 		"set": set, "accept": accept, "reveal": reveal, "select": choose,
-		"add source": addSource, "remove source": removeSource, "remove file": removeFile, "exclude": exclude, "include": include, "answer": answer, "double": double,
+		"add source": addSource, "remove source": removeSource, "remove file": removeFile, "exclude": exclude, "include": include, "answer": answer, "add item": addItem, "remove item": removeItem, "double": double,
 		"undo": undo, "redo": redo, "view": view, "results": results, "memo": writeMemo, "stations": writeStations,
 	}
 }

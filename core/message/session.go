@@ -109,6 +109,14 @@ func removeSource(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error
 	return s.change(q, r, func(n *study.Study) error { return n.RemoveSource(q.target(), q.At, q.Why) })
 }
 
+func addItem(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
+	return s.change(q, r, func(n *study.Study) error { return n.AddItem(q.target(), q.At) })
+}
+
+func removeItem(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
+	return s.change(q, r, func(n *study.Study) error { return n.RemoveItem(q.target(), q.At, q.Why) })
+}
+
 func removeFile(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
 	return s.change(q, r, func(n *study.Study) error { return n.Remove(q.target().ID, q.At, q.Why) })
 }

@@ -31,6 +31,7 @@ type View struct {
 	Choices   []Entry            `json:"choices"`
 	Question  []Entry            `json:"question"` // requirement, kind and use of the reference
 	Excluded  []ExcludedCard     `json:"excluded"` // stations that were taken out, to take them back
+	Lists     []EntryList        `json:"lists"`    // conditions, regions, application point, case
 	People    []Entry            `json:"people"`
 	Files     []FileCard         `json:"files"`
 	Log       []study.Entry      `json:"log"`
@@ -108,6 +109,22 @@ type Entry struct {
 	Options []Option        `json:"options"` // empty: free text
 	Hint    string          `json:"hint"`
 	Open    bool            `json:"open"` // a guess to accept or a gap to fill
+}
+
+// EntryList is a list that a person can add to and take from. Where Add is
+// null the items are fixed.
+type EntryList struct {
+	Course int           `json:"course"` // 0 to 4: where it belongs
+	Title  string        `json:"title"`
+	Hint   string        `json:"hint"`
+	Add    *study.Target `json:"add"`
+	Items  []EntryItem   `json:"items"`
+}
+
+// EntryItem is one item of a list. Remove is null where it cannot be removed.
+type EntryItem struct {
+	Remove  *study.Target `json:"remove"`
+	Entries []Entry       `json:"entries"`
 }
 
 // SlipCard says what was read of one table and how it is used.
@@ -201,7 +218,7 @@ func (s *Session) view() (*View, error) {
 	}
 	v.Courses = courses(c, cellFigures(figures, c), v.Veiled)
 	v.Sources = sourceCards(q, c)
-	v.Choices, v.Question = choices(q), questionEntries(q)
+	v.Choices, v.Question, v.Lists = choices(q), questionEntries(q), lists(s.study, q)
 	for _, e := range c.Excluded {
 		v.Excluded = append(v.Excluded, ExcludedCard{
 			Target: study.Target{Kind: "question", ID: questionID(q), Field: strconv.Itoa(e.Line)},

@@ -83,12 +83,13 @@ func (w *work) replicates() {
 // source takes one entered line of the budget.
 func (w *work) source(at int, s *Source) {
 	target := Target{Kind: "source", ID: w.q.id(), Field: strconv.Itoa(at)}
+	coverage := Target{Kind: "source", ID: w.q.id(), Field: target.Field + ".coverage"}
 	k, knownCoverage := uncertainty.CoverageFactor(s.Coverage.Value)
 	if !knownCoverage {
 		k = 1
-		w.need(2, true, "the coverage of "+s.Name, target, "u-coverage", s.Name)
+		w.need(2, true, "the coverage of "+s.Name, coverage, "u-coverage", s.Name)
 	} else if s.Coverage.Open() {
-		w.need(2, true, "acceptance of the coverage of "+s.Name, target, "guess-open", "The coverage", s.Name, s.Coverage.Value)
+		w.need(2, true, "acceptance of the coverage of "+s.Name, coverage, "guess-open", "The coverage", s.Name, s.Coverage.Value)
 	}
 	if s.Value < 0 {
 		n := notice.New("u-negative", quantity.Text(s.Value, 6), s.Name)

@@ -178,6 +178,16 @@ func (s *Study) Name(t Target) string {
 		if p := s.slip(t.ID); p != nil {
 			return fieldName(t.Field) + " of " + s.fileName(p)
 		}
+	case "case":
+		return fieldName(t.Field) + " of case " + t.ID
+	case ItemCondition, ItemRegion:
+		if q := s.questionOf(t.ID); q != nil {
+			_, field, _ := sourceField(t.Field)
+			return field + " of a " + t.Kind + ", " + q.label()
+		}
+	case ItemApplication:
+		_, field, _ := sourceField(t.Field)
+		return field + " of the application point"
 	case "question", "source":
 		if q := s.questionOf(t.ID); q != nil {
 			if i, field, ok := sourceField(t.Field); t.Kind == "source" && ok && i < len(q.Sources) {
@@ -195,6 +205,7 @@ var fieldNames = map[string]string{
 	"choices.k": "k", "choices.k_num": "k_num", "choices.bounded": "bounded rule", "choices.formal": "formal order", "choices.dimension": "dimension",
 	"choices.interpolation": "interpolation", "choices.u_interp": "interpolation uncertainty", "choices.num_shared": "u_num shared",
 	"requirement.value": "requirement", "requirement.percent": "basis of the requirement", "requirement.who": "who set the requirement", "requirement.date": "date of the requirement",
+	"scores.dispersion": "scores of the dispersion field", "scores.threshold": "threshold of the scores", "scores.fraction": "fraction of the hit rate", "scores.allowance": "allowance of the hit rate",
 	"reference_id": "name of the reference", "prepared.name": "prepared by", "prepared.date": "prepared on", "checked.name": "checked by", "checked.date": "checked on",
 	"approved.name": "approved by", "approved.date": "approved on",
 }
@@ -265,6 +276,14 @@ func (s *Study) enter(t Target, value string) (string, error) {
 			s.askOf(s.slip(t.ID))
 		}
 		return before, nil
+	}
+	switch t.Kind {
+	case ItemCondition, ItemRegion, ItemApplication:
+		return s.enterItem(t, value)
+	case "case":
+		if t.Field == "density" {
+			return s.enterDensity(t.ID, value)
+		}
 	}
 	if text := s.text(t); text != nil {
 		before := *text
@@ -339,6 +358,9 @@ func (s *Study) asked(q *Question) bool {
 func (q *Question) enter(path, value string) (string, error) {
 	if strings.HasPrefix(path, "requirement.") {
 		return q.enterRequirement(strings.TrimPrefix(path, "requirement."), value)
+	}
+	if strings.HasPrefix(path, "scores.") {
+		return q.enterScoring(strings.TrimPrefix(path, "scores."), value)
 	}
 	c := &q.Choices
 	switch path {

@@ -128,6 +128,7 @@ export interface View {
   choices: Entry[] | null;
   question: Entry[] | null;
   excluded: ExcludedCard[] | null;
+  lists: EntryList[] | null;
   people: Entry[] | null;
   files: FileCard[] | null;
   log: StudyEntry[] | null;
@@ -183,6 +184,7 @@ export interface Report {
   edition: string;
   files: FileLine[] | null;
   cells: Cell[] | null;
+  differences: Difference[] | null;
   notices: Notice[] | null;
   prepared: Signature;
   checked: Signature;
@@ -268,6 +270,14 @@ export interface ExcludedCard {
   text: string;
 }
 
+export interface EntryList {
+  course: number;
+  title: string;
+  hint: string;
+  add: Target | null;
+  items: EntryItem[] | null;
+}
+
 export interface FileCard {
   id: string;
   name: string;
@@ -328,7 +338,11 @@ export interface Cell {
   application: Application | null;
   summary: Summary | null;
   joint: Joint | null;
+  scores: ScoreLine[] | null;
+  regions: RegionLine[] | null;
   crossings: Crossings;
+  monitors: MonitorLine[] | null;
+  balances: BalanceLine[] | null;
   grids: Grids | null;
   sources: SourceLine[] | null;
   requirement: Judgement | null;
@@ -336,6 +350,20 @@ export interface Cell {
   curve: Curve;
   notices: Notice[] | null;
   files_used: string[] | null;
+}
+
+export interface Difference {
+  case: string;
+  quantity: string;
+  a: string;
+  b: string;
+  unit: string;
+  n: number;
+  mean: number | null;
+  u: number | null;
+  resolved: boolean;
+  rms_a: number | null;
+  rms_b: number | null;
 }
 
 export interface Signature {
@@ -398,6 +426,11 @@ export type Certainty = string;
 export interface Option {
   value: string;
   label: string;
+}
+
+export interface EntryItem {
+  remove: Target | null;
+  entries: Entry[] | null;
 }
 
 export interface Choices {
@@ -485,9 +518,58 @@ export interface Joint {
   offset_resolved: boolean;
 }
 
+export interface ScoreLine {
+  name: string;
+  value: number | null;
+  scale: string;
+  word: string;
+  criteria: CriterionLine[] | null;
+}
+
+export interface RegionLine {
+  name: string;
+  from: number | null;
+  to: number | null;
+  n: number;
+  bias: number | null;
+  rmse: number | null;
+  hit_rate: number | null;
+  beyond: number;
+}
+
 export interface Crossings {
   sim: Crossing[] | null;
   ref: Crossing[] | null;
+}
+
+export interface MonitorLine {
+  grid: string;
+  file: string;
+  axis: string;
+  x_name: string;
+  class: string;
+  rule: string;
+  mean: number | null;
+  u: number | null;
+  from: number | null;
+  to: number | null;
+  drift: number | null;
+  per: number | null;
+  period: number | null;
+  cycles: number;
+  half_range: number | null;
+  x: (number | null)[] | null;
+  y: (number | null)[] | null;
+}
+
+export interface BalanceLine {
+  grid: string;
+  file: string;
+  in: number | null;
+  out: number | null;
+  net: number | null;
+  fraction: number | null;
+  closed: boolean;
 }
 
 export interface Grids {
@@ -566,6 +648,15 @@ export interface BoardCell {
 }
 
 export type Method = string;
+
+export interface CriterionLine {
+  name: string;
+  low: number | null;
+  high: number | null;
+  met: boolean;
+  scope: string;
+  source: string;
+}
 
 export interface Crossing {
   x: number | null;
