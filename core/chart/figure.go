@@ -29,11 +29,19 @@ type Table struct {
 // width of every figure, in px.
 const width = 760
 
-// Figures returns the figures of a cell in the order of reading: the
-// comparison, then the grid study behind u_num. Their IDs begin with id. A cell
-// with neither has none. It fails on a theme that does not exist.
+// Figures returns the figures of a cell in the order of reading: the monitors
+// of its runs, the comparison, the grid study behind u_num, and the sources of
+// u_val. Their IDs begin with id. A cell with none of them has none. It fails on
+// a theme that does not exist.
 func Figures(c study.Cell, id string, t Theme) ([]Figure, error) {
 	figures := []Figure{}
+	if len(c.Monitors) > 0 {
+		f, err := Settling(c, id, t)
+		if err != nil {
+			return nil, err
+		}
+		figures = append(figures, f)
+	}
 	compare, drawable := Overlay, len(c.Stations) > 0 || len(c.Curve.X) > 0
 	if c.Scalar {
 		compare, drawable = Intervals, len(c.Stations) > 0 && c.Stations[0].E.Known()
@@ -47,6 +55,13 @@ func Figures(c study.Cell, id string, t Theme) ([]Figure, error) {
 	}
 	if hasGrids(c.Grids) {
 		f, err := Refinement(c, id, t)
+		if err != nil {
+			return nil, err
+		}
+		figures = append(figures, f)
+	}
+	if hasShares(c) {
+		f, err := Budget(c, id, t)
 		if err != nil {
 			return nil, err
 		}

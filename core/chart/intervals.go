@@ -161,6 +161,9 @@ func intervalCaption(cells []study.Cell, k float64) string {
 	}
 	text += " " + units(first)
 	for _, c := range cells {
+		if apart := unlike(c); apart != "" {
+			text += " " + capital(simulation(c)) + ": " + apart
+		}
 		if c.Withheld && len(cells) == 1 {
 			text += " No statement is made."
 		} else if c.Withheld {

@@ -90,6 +90,7 @@ type series struct {
 	RenderItem  string            `json:"renderItem,omitempty"` // name of a draw function
 	Thick       float64           `json:"thick,omitempty"`      // of the draw function's lines, px
 	Cap         float64           `json:"cap,omitempty"`        // half length of the end strokes, px
+	Hatch       []float64         `json:"hatch,omitempty"`      // of a band: direction right and down, distance of the lines in px
 	Encode      *encode           `json:"encode,omitempty"`
 	Symbol      string            `json:"symbol,omitempty"`
 	SymbolSize  float64           `json:"symbolSize,omitempty"`
@@ -260,6 +261,14 @@ func (p *picture) rule(n int, name string, dash []int, width float32, x0, y0, x1
 		LineStyle: &lineStyle{LineStyle: opts.LineStyle{Color: p.ink, Width: width}, Type: dash},
 		ItemStyle: filled(p.ink),
 		Data:      [][]any{{quantity.Number(x0), quantity.Number(y0)}, {quantity.Number(x1), quantity.Number(y1)}},
+	})
+}
+
+// words writes the names of points so many px right of them.
+func (p *picture) words(n int, rows []named, right int) {
+	p.draw(n, 5, series{
+		Type: "scatter", Name: "words", Symbol: disc, SymbolSize: 1, Silent: true, ItemStyle: filled("transparent"), Data: rows,
+		Label: &label{Label: opts.Label{Show: opts.Bool(true), Formatter: "{b}", Color: p.ink, FontSize: textSize}, Position: []int{right, -6}},
 	})
 }
 

@@ -24,8 +24,8 @@ const (
 // Overlay returns the simulation over the measured values of a curve cell:
 // above, the line S with a band of k u_num and the values D with bars of
 // k u_D; below, on the same x axis, E = S - D with bands of u_val and k u_val.
-// Values that were not compared are hollow. What is not known is left out and
-// the caption says so.
+// Values that were not compared are hollow, those a person took out have a mark
+// of their own. What is not known is left out and the caption says so.
 func Overlay(c study.Cell, id string, t Theme) (Figure, error) {
 	return overlay([]study.Cell{c}, id+"-overlay", t)
 }
@@ -180,6 +180,9 @@ func (v *curves) scales() {
 		for _, o := range c.Outside {
 			x.take(float64(o))
 		}
+		for _, o := range c.Excluded {
+			x.take(float64(o.X))
+		}
 		for _, cx := range c.Curve.X {
 			reach.take(float64(cx))
 		}
@@ -205,6 +208,9 @@ func (v *curves) scales() {
 			if v.single && c.Curve.UNum != nil {
 				y.around(float64(c.Curve.Y[i]), float64(v.k*float64(c.Curve.UNum[i])))
 			}
+		}
+		for _, o := range c.Excluded {
+			y.take(float64(o.D))
 		}
 		for _, s := range c.Stations {
 			y.take(float64(s.S))
@@ -265,6 +271,7 @@ func (v *curves) dataName() string {
 const (
 	hollowName  = "not compared"
 	outsideName = "outside, not compared"
+	removedName = "excluded"
 )
 
 // barred reports whether any u_D is known.
@@ -295,6 +302,19 @@ func (v *curves) outside() []quantity.Number {
 	return most
 }
 
+// removed returns the values that a person took out of any cell's comparison, once each.
+func (v *curves) removed() []study.Excluded {
+	var all []study.Excluded
+	for _, c := range v.cells {
+		for _, x := range c.Excluded {
+			if !slices.ContainsFunc(all, func(o study.Excluded) bool { return o.X == x.X && o.Line == x.Line }) {
+				all = append(all, x)
+			}
+		}
+	}
+	return all
+}
+
 func (v *curves) upperKeys() []entry {
 	keys := []entry{}
 	for i, c := range v.cells {
@@ -312,6 +332,9 @@ func (v *curves) upperKeys() []entry {
 	}
 	if v.uncompared() > 0 {
 		keys = append(keys, entry{Name: hollowName, Icon: discKey, ItemStyle: v.hollow(v.ink)})
+	}
+	if len(v.removed()) > 0 {
+		keys = append(keys, entry{Name: removedName, Icon: square.key(), ItemStyle: v.hollow(v.ink)})
 	}
 	if len(v.outside()) > 0 {
 		keys = append(keys, entry{Name: outsideName, Icon: triangle.key(), ItemStyle: v.hollow(v.ink)})
@@ -366,6 +389,13 @@ func (v *curves) upper(n int) {
 	}
 	if len(hollow) > 0 {
 		v.draw(n, 5, series{Type: "scatter", Name: hollowName, Symbol: disc, SymbolSize: size, ItemStyle: v.hollow(v.ink), Data: hollow})
+	}
+	if removed := v.removed(); len(removed) > 0 {
+		rows := make([][]any, len(removed))
+		for i, x := range removed {
+			rows[i] = []any{x.X, x.D}
+		}
+		v.draw(n, 5, series{Type: "scatter", Name: removedName, Symbol: square.symbol(), SymbolSize: 9, ItemStyle: v.hollow(v.ink), Data: rows})
 	}
 	if outside := v.outside(); len(outside) > 0 {
 		edge := v.main.Min
@@ -563,6 +593,15 @@ func (v *curves) caption(cells []study.Cell) string {
 		sentences = append(sentences, v.stripCaption())
 	}
 	sentences = append(sentences, units(c))
+	for _, cell := range cells {
+		if text := unlike(cell); text != "" {
+			who := ""
+			if !v.single {
+				who = capital(simulation(cell)) + ": "
+			}
+			sentences = append(sentences, who+text)
+		}
+	}
 	if note := v.thinned(cells); note != "" {
 		sentences = append(sentences, note)
 	}
@@ -600,7 +639,7 @@ func (v *curves) stripCaption() string {
 	return text + "."
 }
 
-// counted returns "24 of 24 stations compared".
+// counted returns "23 of 26 stations compared, 3 excluded".
 func counted(c study.Cell) string {
 	n := 0
 	for _, s := range c.Stations {
@@ -615,6 +654,9 @@ func counted(c study.Cell) string {
 	text := fmt.Sprintf("%s of %s stations compared", grouped(n), grouped(all))
 	if outside := len(c.Outside); outside > 0 {
 		text += ", " + grouped(outside) + " outside the simulation"
+	}
+	if excluded := len(c.Excluded); excluded > 0 {
+		text += ", " + grouped(excluded) + " excluded"
 	}
 	return text
 }
@@ -665,6 +707,9 @@ func (v *curves) table() Table {
 	}
 	for _, x := range c.Outside {
 		t.Rows = append(t.Rows, []string{trimmed(x, 6), "outside, not compared", "–", "–", "–", "–", "–", "–", "–"})
+	}
+	for _, x := range c.Excluded {
+		t.Rows = append(t.Rows, []string{written(x.X), "excluded, not compared", written(x.D), "–", "–", "–", "–", "–", "–"})
 	}
 	return t
 }

@@ -1,6 +1,7 @@
 package chart
 
 import (
+	"fmt"
 	"math"
 	"strconv"
 	"strings"
@@ -209,6 +210,27 @@ func units(c study.Cell) string {
 	default:
 		return "Values are " + value + ", " + c.XName + " is " + x + "."
 	}
+}
+
+// unlike names the conditions that differ between simulation and data and are
+// neither corrected nor counted nor accepted; "" where there is none.
+func unlike(c study.Cell) string {
+	names := []string{}
+	for _, m := range c.Conditions {
+		handled := m.Handling == study.Tolerated && m.Why != "" || (m.Handling == study.Corrected || m.Handling == study.AsInput) && m.Effect.Known()
+		if m.Simulation == m.Data || handled {
+			continue
+		}
+		unit := ""
+		if m.Unit != "" && m.Unit != "1" {
+			unit = " " + m.Unit
+		}
+		names = append(names, fmt.Sprintf("%s %s against %s%s", m.Name, trimmed(m.Simulation, 6), trimmed(m.Data, 6), unit))
+	}
+	if len(names) == 0 {
+		return ""
+	}
+	return "Not the same on both sides: " + strings.Join(names, ", ") + "."
 }
 
 // capital returns a text with its first letter in upper case.

@@ -272,8 +272,13 @@ func shareWords(n study.Number) string {
 }
 
 func patternWords(pattern string) string {
-	if pattern == study.Common {
+	switch pattern {
+	case study.Common:
 		return "the same error at all stations"
+	case study.Grouped:
+		return "the same error within groups of stations"
+	case study.Length:
+		return "correlated over a length"
 	}
 	return "independent between stations"
 }
@@ -287,16 +292,30 @@ func sourceEntries(q *study.Question, i int, s study.Source) []Entry {
 	if s.Random {
 		random = "yes"
 	}
-	return []Entry{
+	number := func(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
+	list := []Entry{
 		entry("name", "source", s.Name, study.Entered, []Option{}, ""),
 		entry("of", "of", s.Of, study.Entered, []Option{{study.OfData, "the data"}, {study.OfInput, "the inputs"}, {study.OfNumerical, "the numerics"}}, ""),
-		entry("value", "value", strconv.FormatFloat(s.Value, 'g', -1, 64), study.Entered, []Option{}, ""),
-		entry("basis", "basis", s.Basis, study.Entered, []Option{{study.Absolute, "in the unit of the data"}, {study.OfReading, "% of reading"}}, ""),
+		entry("value", "value", number(s.Value), study.Entered, []Option{}, ""),
+		entry("basis", "basis", s.Basis, study.Entered, []Option{{study.Absolute, "in the unit of the data"}, {study.OfReading, "% of reading"}, {study.OfFullScale, "% of full scale"}}, ""),
 		entry("coverage", "coverage", s.Coverage.Value, s.Coverage.By, coverages(), ""),
 		entry("random", "random", random, study.Entered, []Option{{"no", "systematic"}, {"yes", "random"}}, ""),
-		entry("pattern", "between stations", s.Pattern, study.Entered, []Option{{study.Independent, "independent"}, {study.Common, "the same at all"}}, ""),
+		entry("pattern", "between stations", s.Pattern, study.Entered, []Option{{study.Independent, "independent"}, {study.Common, "the same at all"}, {study.Grouped, "the same within groups"}, {study.Length, "correlated over a length"}}, ""),
 		entry("origin", "where it comes from", s.Origin, study.Entered, []Option{}, ""),
 	}
+	if s.Basis == study.OfFullScale {
+		list = append(list, entry("full_scale", "full scale, in the unit of the data", number(s.FullScale), study.Entered, []Option{}, ""))
+	}
+	switch s.Pattern {
+	case study.Grouped:
+		list = append(list, entry("group", "column with group numbers", s.Group, study.Entered, []Option{}, ""))
+	case study.Length:
+		list = append(list, entry("length", "correlation length, in the unit of the stations", number(s.Length), study.Entered, []Option{}, ""))
+	}
+	if s.Random {
+		list = append(list, entry("degrees", "degrees of freedom", number(s.Degrees), study.Entered, []Option{}, "0: taken as known"))
+	}
+	return list
 }
 
 // choices are the decisions whose effect shows at once.

@@ -219,7 +219,7 @@ func agreeAnswer(c *study.Cell) string {
 	case c.Scalar:
 		return "E is " + text(c.Stations[0].Ratio, 2) + " u_val: " + c.Stations[0].Reading + "."
 	}
-	answer := "|E| exceeds " + strconv.FormatFloat(c.Choices.K, 'g', -1, 64) + " u_val at " + strconv.Itoa(s.Tested-s.WithinKUVal) + " of " + count(s.Tested, "station") + " (" + text(s.BeyondChance, 2) + " expected by chance)"
+	answer := "|E| exceeds " + strconv.FormatFloat(c.Choices.K, 'g', -1, 64) + " u_val at " + strconv.Itoa(s.Tested-s.WithinKUVal) + " of " + count(s.Tested, "station") + " (" + text(s.BeyondChance, 2) + " expected by chance" + chanceWords(c.Joint) + ")"
 	if j := c.Joint; j != nil {
 		answer += "; together the statistic " + exceedsWord(j.Exceeds) + " its 95 % point"
 		if j.Remainder.Known() {
@@ -227,6 +227,15 @@ func agreeAnswer(c *study.Cell) string {
 		}
 	}
 	return answer + "."
+}
+
+// chanceWords is the probability of at least the found number, where it was
+// sampled.
+func chanceWords(j *study.Joint) string {
+	if j == nil || !j.AtLeast.Known() {
+		return ""
+	}
+	return "; at least so many with probability " + text(j.AtLeast, 2)
 }
 
 func exceedsWord(yes bool) string {
@@ -274,19 +283,36 @@ func agreeTables(c *study.Cell) []Table {
 	}
 	tables := []Table{t}
 	if j := c.Joint; j != nil && !c.Scalar {
-		tables = append(tables, Table{Title: "All stations together", Head: []string{"correlation", "statistic", "on", "95 % point"}, Rows: [][]string{
-			{j.Pattern + " (as declared)", text(j.Statistic, 4), strconv.Itoa(j.N), text(j.Reference, 3)},
-			{"every source independent", text(j.Independent, 4), strconv.Itoa(j.N), text(j.Reference, 3)},
-			{"u_num shared by all stations", text(j.NumShared, 4), strconv.Itoa(j.N), text(j.Reference, 3)},
-			{"offset " + quantity.SignedLike(float64(j.Offset), float64(j.UOffset), 3) + " ± " + text(j.UOffset, 3), text(j.OffsetPart, 3), "1", "3.84"},
-			{"remainder without the offset", text(j.Remainder, 4), strconv.Itoa(j.RemainderN), text(j.RemainderReference, 3)},
-		}})
+		tables = append(tables, jointTable(j))
 	}
 	tables = append(tables, scoreTables(c)...)
 	if x := c.Crossings; len(x.Simulation)+len(x.Reference) > 0 {
 		tables = append(tables, Table{Title: "Changes of sign", Head: []string{"side", name, "direction"}, Rows: append(crossingRows("simulation", x.Simulation), crossingRows("reference", x.Reference)...)})
 	}
 	return tables
+}
+
+// jointTable is the statistic as declared, under other patterns, and in parts.
+func jointTable(j *study.Joint) Table {
+	t := Table{Title: "All stations together", Head: []string{"", "statistic", "on", "95 % point"}, Rows: [][]string{
+		{j.Pattern + " correlation, as declared", text(j.Statistic, 4), strconv.Itoa(j.N), text(j.Reference, 3)},
+		{"every source independent", text(j.Independent, 4), strconv.Itoa(j.N), text(j.Reference, 3)},
+		{"u_num shared by all stations", text(j.NumShared, 4), strconv.Itoa(j.N), text(j.Reference, 3)},
+		{"offset " + quantity.SignedLike(float64(j.Offset), float64(j.UOffset), 3) + " ± " + text(j.UOffset, 3), text(j.OffsetPart, 3), "1", "3.84"},
+		{"remainder without the offset", text(j.Remainder, 4), strconv.Itoa(j.RemainderN), text(j.RemainderReference, 3)},
+	}}
+	if j.Scale.Known() {
+		t.Rows = append(t.Rows,
+			[]string{"scale beside an offset " + quantity.SignedLike(float64(j.Scale), float64(j.UScale), 2) + " ± " + text(j.UScale, 2), text(j.ScalePart, 3), "1", "3.84"},
+			[]string{"shape, without offset and scale", text(j.ShapePart, 4), strconv.Itoa(j.ShapeN), ""})
+	}
+	for _, w := range j.Without {
+		t.Rows = append(t.Rows, []string{"without " + w.Region, text(w.Statistic, 4), strconv.Itoa(w.N), text(w.Reference, 3)})
+	}
+	for _, turn := range j.Turns {
+		t.Rows = append(t.Rows, []string{"the conclusion turns where the correlation of " + turn.Source + " is " + text(turn.Rho, 3), "", "", ""})
+	}
+	return t
 }
 
 // scoreTables lists the measures with their scales and criteria, and the

@@ -12,8 +12,8 @@ func Demo() *study.Study {
 	s.Title = "Strut fairing in the Orrowby duct, case C1"
 	s.Purpose = "Choose the fairing setting for a duct retrofit. All of it is invented."
 	ids := map[string]string{}
-	for i, name := range []string{"C1-balance.csv", "C1-drag-grids.csv", "C1-taps-upper.csv", "C1-A-G4-cp.csv", "C1-B-G4-cp.csv"} {
-		data, err := duct.Files.ReadFile(name)
+	for i, name := range []string{"C1-balance.csv", "C1-forces.csv", "C1-taps-upper.csv", "C1-A-G4-cp.csv", "C1-B-G4-cp.csv"} {
+		data, err := duct.Files.ReadFile("second/" + name)
 		if err != nil {
 			panic("message: the demo lacks " + name)
 		}
@@ -37,7 +37,7 @@ func demoDrag(s *study.Study, ids map[string]string) {
 	s.Slips = append(s.Slips, study.Slip{ID: "s1", File: ids["C1-balance.csv"], Role: entered(study.Reference),
 		Case: entered("C1"), Quantity: entered(quantity), Y: pureColumn("Cd")})
 	for i, model := range []string{"A", "B"} {
-		s.Slips = append(s.Slips, study.Slip{ID: "s" + string(rune('2'+i)), File: ids["C1-drag-grids.csv"], Role: entered(study.GridValues),
+		s.Slips = append(s.Slips, study.Slip{ID: "s" + string(rune('2'+i)), File: ids["C1-forces.csv"], Role: entered(study.GridValues),
 			Case: entered("C1"), Quantity: entered(quantity), Model: entered(model), Grid: entered("grid"),
 			Y: pureColumn("Cd " + model), Size: study.ColumnUse{Column: entered("cells")}})
 	}

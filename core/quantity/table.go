@@ -39,7 +39,7 @@ var units = map[string]Unit{
 	"bar": {Dimension: pressure, Factor: 1e5}, "mbar": {Dimension: pressure, Factor: 1e2}, "psi": {Dimension: pressure, Factor: pound * g0 / (inch * inch)}, "atm": {Dimension: pressure, Factor: 101325},
 	"J": {Dimension: energy, Factor: 1}, "kJ": {Dimension: energy, Factor: 1e3}, "W": {Dimension: power, Factor: 1}, "kW": {Dimension: power, Factor: 1e3}, "MW": {Dimension: power, Factor: 1e6},
 	"L": {Dimension: Dimension{3}, Factor: 1e-3}, "l": {Dimension: Dimension{3}, Factor: 1e-3},
-	"%": {Dimension: pureNumber, Factor: 1e-2}, "percent": {Dimension: pureNumber, Factor: 1e-2}, "ppm": {Dimension: pureNumber, Factor: 1e-6}, "1": {Dimension: pureNumber, Factor: 1},
+	"%": {Dimension: pureNumber, Factor: 1e-2}, "percent": {Dimension: pureNumber, Factor: 1e-2}, "‰": {Dimension: pureNumber, Factor: 1e-3}, "ppm": {Dimension: pureNumber, Factor: 1e-6}, "1": {Dimension: pureNumber, Factor: 1},
 }
 
 func find(symbol string) (Unit, bool) {

@@ -123,7 +123,7 @@ func (w *work) shares() {
 	}
 	for _, p := range w.parts {
 		line := p.line
-		sum := squares(p.u, rows)
+		sum := squares(p.source.U, rows)
 		line.U, line.Share = w.step(math.Sqrt(sum/float64(len(rows)))), None
 		if whole > 0 {
 			line.Share = Number(sum / whole)
@@ -155,13 +155,14 @@ func (w *work) joint(e []float64) {
 	reference := comparison.ChiSquare95(q.Rank)
 	j := &Joint{Statistic: Number(q.Statistic), N: q.Rank, P: Number(q.P()), Reference: Number(reference),
 		Exceeds: exceeds(q.Statistic, reference), Pattern: w.pattern(),
-		Independent: w.alternative(tested, func(p *part) { p.common = false }),
+		Independent: w.alternative(tested, func(p *part) { p.source = uncertainty.Source{U: p.source.U} }),
 		NumShared: w.alternative(tested, func(p *part) {
 			if p.line.Of == OfNumerical && !p.interp {
-				p.common = true
+				p.source = uncertainty.Source{U: p.source.U, Common: true}
 			}
 		}),
-		Offset: None, UOffset: None, OffsetPart: None, Remainder: None, RemainderReference: None}
+		Offset: None, UOffset: None, OffsetPart: None, Remainder: None, RemainderReference: None,
+		Scale: None, UScale: None, ScalePart: None, ShapePart: None, AtLeast: None, Turns: []Turning{}, Without: []Leaving{}}
 	w.cell.Joint = j
 	w.doubtCorrelation(tested)
 	if q.Rank < len(tested) {
@@ -171,6 +172,9 @@ func (w *work) joint(e []float64) {
 		w.tell(notice.New("joint-low-tail"))
 	}
 	w.split(j, tested, budget)
+	if w.e.options.Alternatives && !w.inner {
+		w.lookAround(j, tested, budget)
+	}
 }
 
 // jointRefusal says why there is no joint statistic.
@@ -178,6 +182,8 @@ func jointRefusal(err error, n int) notice.Notice {
 	switch {
 	case errors.Is(err, comparison.ErrSize):
 		return notice.New("covariance-size", n, comparison.MaxDense)
+	case errors.Is(err, comparison.ErrPattern):
+		return notice.New("covariance-pattern")
 	case errors.Is(err, comparison.ErrFinite):
 		return notice.New("covariance-finite")
 	}
@@ -200,6 +206,80 @@ func (w *work) split(j *Joint, e []float64, budget uncertainty.Budget) {
 	j.OffsetResolved = exceeds(math.Abs(s.Offset), float64(w.choices.K*s.U))
 }
 
+// lookAround adds what costs more than the statistic itself: the chance of the
+// found count, the correlations at which the conclusion turns, and the
+// statistic without each region.
+func (w *work) lookAround(j *Joint, e []float64, budget uncertainty.Budget) {
+	if d, ok := comparison.Decompose(e, pick(w.s, w.tested), budget); ok {
+		j.Scale, j.UScale = Number(d.Scale), Number(d.UScale)
+		j.ScalePart, j.ShapePart, j.ShapeN = Number(d.ScalePart), Number(d.ShapePart), d.ShapeDegrees
+		j.ScaleResolved = exceeds(math.Abs(d.Scale), float64(w.choices.K*d.UScale))
+	}
+	found := w.cell.Summary.Tested - w.cell.Summary.WithinKUVal
+	if c, err := comparison.BeyondByChance(budget, w.choices.K, found, samplingSeed); err == nil {
+		j.AtLeast = Number(c.AtLeast)
+	}
+	if len(e) <= mostTurned {
+		w.turnings(j, e)
+	}
+	w.withoutRegions(j, e, budget)
+}
+
+// samplingSeed makes sampled numbers the same in every evaluation.
+const samplingSeed = 20260901
+
+// mostTurned is the number of stations above which the correlations are not
+// searched: each source evaluates the statistic some sixty times.
+const mostTurned = 20_000
+
+// turnings finds, for every systematic source of the data, the correlation at
+// which the conclusion turns.
+func (w *work) turnings(j *Joint, e []float64) {
+	for i, p := range w.parts {
+		if p.line.Of != OfData || !p.source.Common {
+			continue
+		}
+		rest := append(append([]part{}, w.parts[:i]...), w.parts[i+1:]...)
+		curve, err := comparison.Correlate(e, w.covariance(rest, w.tested), pick(p.source.U, w.tested), 10)
+		if err != nil {
+			continue
+		}
+		first, last := curve.Points[0], curve.Points[len(curve.Points)-1]
+		if n := len(curve.Flips); n > 0 { // the one nearest to what is declared
+			j.Turns = append(j.Turns, Turning{Source: p.line.Name, Rho: Number(curve.Flips[n-1]), At0: Number(first.Statistic), At1: Number(last.Statistic)})
+		}
+	}
+}
+
+// withoutRegions gives the statistic with each region left out.
+func (w *work) withoutRegions(j *Joint, e []float64, budget uncertainty.Budget) {
+	var regions [][]int
+	var names []string
+	for _, r := range w.q.Regions {
+		lo, hi := w.xUnit.ToSI(r.From), w.xUnit.ToSI(r.To)
+		var rows []int
+		for n, i := range w.tested {
+			if w.x[i] >= lo && w.x[i] <= hi {
+				rows = append(rows, n)
+			}
+		}
+		if len(rows) > 0 && len(rows) < len(e) {
+			regions, names = append(regions, rows), append(names, r.Name)
+		}
+	}
+	if regions == nil {
+		return
+	}
+	left, err := comparison.LeaveOut(e, budget, regions)
+	if err != nil {
+		return // told with the statistic itself
+	}
+	for n, q := range left {
+		reference := comparison.ChiSquare95(q.Rank)
+		j.Without = append(j.Without, Leaving{Region: names[n], Statistic: Number(q.Statistic), N: q.Rank, Reference: Number(reference), Exceeds: exceeds(q.Statistic, reference)})
+	}
+}
+
 // exceeds compares on rounded values, so that every host says the same.
 func exceeds(a, b float64) bool { return quantity.Round(a, 10) > quantity.Round(b, 10) }
 
@@ -218,11 +298,20 @@ func (w *work) alternative(e []float64, change func(*part)) Number {
 
 // pattern says the correlation of the budget in words.
 func (w *work) pattern() string {
-	common, independent := false, false
+	common, independent, other := false, false, false
 	for _, p := range w.parts {
-		common, independent = common || p.common, independent || !p.common
+		switch patternOf(p.source) {
+		case Common:
+			common = true
+		case Independent:
+			independent = true
+		default:
+			other = true
+		}
 	}
 	switch {
+	case other:
+		return "structured"
 	case common && independent:
 		return "independent and common"
 	case common:

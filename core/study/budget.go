@@ -12,11 +12,11 @@ import (
 
 // part is the standard uncertainty of one source at the stations, in SI.
 type part struct {
-	line   SourceLine
-	u      []float64
-	common bool
-	interp bool // of the interpolation to the stations
-	aside  bool // does not by itself make a numerical uncertainty
+	line    SourceLine
+	source  uncertainty.Source
+	degrees float64 // of freedom; +Inf where u is taken as known
+	interp  bool    // of the interpolation to the stations
+	aside   bool    // does not by itself make a numerical uncertainty
 }
 
 // budget collects the sources of the cell at its stations.
@@ -39,13 +39,28 @@ func (w *work) budget() {
 	w.total()
 }
 
-// add appends a source.
-func (w *work) add(of, name, text, origin string, u []float64, common, open bool) {
-	pattern := Independent
-	if common {
-		pattern = Common
+// add appends a source that is independent between stations, or common.
+func (w *work) add(of, name, text, origin string, u []float64, common, open bool) *part {
+	return w.addSource(of, name, text, origin, uncertainty.Source{U: u, Common: common}, open)
+}
+
+// addSource appends a source of any pattern.
+func (w *work) addSource(of, name, text, origin string, source uncertainty.Source, open bool) *part {
+	w.parts = append(w.parts, part{line: SourceLine{Name: name, Of: of, Text: text, Pattern: patternOf(source), Origin: origin, Open: open}, source: source, degrees: math.Inf(1)})
+	return &w.parts[len(w.parts)-1]
+}
+
+// patternOf names the pattern of a source.
+func patternOf(s uncertainty.Source) string {
+	switch {
+	case s.Common:
+		return Common
+	case s.Group != nil:
+		return Grouped
+	case s.Length > 0:
+		return Length
 	}
-	w.parts = append(w.parts, part{line: SourceLine{Name: name, Of: of, Text: text, Pattern: pattern, Origin: origin, Open: open}, u: u, common: common})
+	return Independent
 }
 
 // dataColumn takes the uncertainty column of the reference.
@@ -77,7 +92,15 @@ func (w *work) replicates() {
 	}
 	_, s, u := uncertainty.Replicates(readings)
 	text := "standard deviation " + quantity.Text(float64(w.step(s)), 3) + " of " + count(len(readings), "reading") + ", divided by √" + strconv.Itoa(len(readings))
-	w.add(OfData, "scatter of repeated readings", text, "computed from "+w.e.study.fileName(c.slip), []float64{u}, false, false)
+	w.add(OfData, "scatter of repeated readings", text, "computed from "+w.e.study.fileName(c.slip), []float64{u}, false, false).degrees = float64(len(readings) - 1)
+	w.fewReadings(len(readings))
+}
+
+// fewReadings tells the factor that so few readings need.
+func (w *work) fewReadings(n int) {
+	if k, ok := uncertainty.StudentFactor(0.95, float64(n-1)); ok && n <= 3 {
+		w.tell(notice.New("readings-few", n, quantity.Text(k, 3), trim(w.choices.K)))
+	}
 }
 
 // source takes one entered line of the budget.
@@ -102,12 +125,58 @@ func (w *work) source(at int, s *Source) {
 		return
 	}
 	w.blanks(u, s.Name, target)
-	common := s.Pattern == Common
+	source, ok := w.patterned(s, u, target)
+	if !ok {
+		return
+	}
 	if s.Of == OfNumerical {
 		w.tell(notice.New("grid-declared", w.q.label(), orWord(s.Origin, "no reason was given.")))
-		common = common || w.choices.NumShared
+		if w.choices.NumShared {
+			source = uncertainty.Source{U: u, Common: true}
+		}
 	}
-	w.add(s.Of, s.Name, w.sourceText(s), s.Origin, u, common, !knownCoverage || s.Coverage.Open())
+	p := w.addSource(s.Of, s.Name, w.sourceText(s), s.Origin, source, !knownCoverage || s.Coverage.Open())
+	if s.Degrees > 0 {
+		p.degrees = s.Degrees
+	}
+}
+
+// patterned gives a source its correlation between stations.
+func (w *work) patterned(s *Source, u []float64, target Target) (uncertainty.Source, bool) {
+	switch s.Pattern {
+	case Common:
+		if s.Basis == OfReading { // one unknown factor acts on all readings, with their signs
+			signed := make([]float64, len(u))
+			for i, v := range u {
+				signed[i] = math.Copysign(v, w.d[i])
+			}
+			u = signed
+		}
+		return uncertainty.Source{U: u, Common: true}, true
+	case Grouped:
+		if w.reference == nil || w.cell.Scalar {
+			return uncertainty.Source{U: u}, true
+		}
+		column, err := w.reference.table.Column(s.Group)
+		if err != nil {
+			n := asNotice(err)
+			w.tell(n)
+			w.stop(2, "the groups of "+s.Name, target, n)
+			return uncertainty.Source{}, false
+		}
+		labels := make([]int, len(w.rows))
+		for j, i := range w.rows {
+			labels[j] = int(column.Values[i])
+		}
+		return uncertainty.Source{U: u, Group: labels}, true
+	case Length:
+		if !(s.Length > 0) {
+			w.need(2, true, "the correlation length of "+s.Name, target, "field-missing", "The correlation length", s.Name)
+			return uncertainty.Source{U: u}, true
+		}
+		return uncertainty.Source{U: u, X: w.x, Length: w.xUnit.StepToSI(s.Length)}, true
+	}
+	return uncertainty.Source{U: u}, true
 }
 
 // blanks asks for the stations at which a source has no value.
@@ -132,6 +201,11 @@ func (w *work) sourceValues(s *Source, k float64, target Target) ([]float64, boo
 		return uncertainty.Scaled(u, k), true
 	case s.Basis == OfReading:
 		return uncertainty.Scaled(uncertainty.OfReading(w.d, s.Value/100), k), true
+	case s.Basis == OfFullScale:
+		if !(s.FullScale > 0) {
+			w.need(2, true, "the full scale of "+s.Name, target, "field-missing", "The full scale", s.Name)
+		}
+		return uncertainty.Scaled(uncertainty.OfFullScale(len(w.d), s.Value/100, w.yUnit.StepToSI(s.FullScale)), k), true
 	}
 	return uncertainty.Constant(len(w.d), w.yUnit.StepToSI(s.Value)/k), true
 }
@@ -184,6 +258,8 @@ func (w *work) sourceText(s *Source) string {
 		value = "column " + s.Column
 	case s.Basis == OfReading:
 		value += " % of reading"
+	case s.Basis == OfFullScale:
+		value += " % of the full scale " + trim(s.FullScale) + w.cell.UnitSuffix()
 	case w.cell.Unit != "" && w.cell.Unit != "1":
 		value += " " + w.cell.Unit
 	}
@@ -226,8 +302,7 @@ func (w *work) interpolationPart() {
 	if !w.choices.UInterp || w.cell.Scalar {
 		return
 	}
-	w.add(OfNumerical, "interpolation to the stations", "bound divided by √3, "+string(w.choices.Interpolation), "computed", w.uInterp, false, false)
-	w.parts[len(w.parts)-1].interp = true
+	w.add(OfNumerical, "interpolation to the stations", "bound divided by √3, "+string(w.choices.Interpolation), "computed", w.uInterp, false, false).interp = true
 }
 
 // has reports whether a part is of one side, interpolation and iteration
@@ -270,7 +345,7 @@ func (w *work) total() {
 		var sources []uncertainty.Source
 		for _, p := range w.parts {
 			if p.line.Of == of && p.interp == interp {
-				sources = append(sources, uncertainty.Source{U: p.u, Common: p.common})
+				sources = append(sources, p.source)
 			}
 		}
 		if sources == nil {
@@ -289,6 +364,31 @@ func (w *work) total() {
 		}
 	}
 	w.coarseSimulation()
+	w.degrees()
+}
+
+// degrees gives the effective degrees of freedom of a scalar, and the factor
+// that 95 % would need.
+func (w *work) degrees() {
+	if !w.cell.Scalar {
+		return
+	}
+	var terms []uncertainty.Term
+	for _, p := range w.parts {
+		terms = append(terms, uncertainty.Term{U: p.source.U[0], Degrees: p.degrees})
+	}
+	nu, err := uncertainty.EffectiveDegrees(terms)
+	if err != nil || math.IsInf(nu, 1) {
+		return
+	}
+	k, ok := uncertainty.StudentFactor(0.95, nu)
+	if !ok {
+		return
+	}
+	w.cell.Degrees, w.cell.K95 = Number(nu), Number(k)
+	if exceeds(k, 1.05*w.choices.K) {
+		w.tell(notice.New("degrees-few", quantity.Text(nu, 2), quantity.Text(k, 3), trim(w.choices.K)))
+	}
 }
 
 // coarse is the part of u_val above which the interpolation uncertainty is
@@ -302,7 +402,7 @@ func (w *work) coarseSimulation() {
 	for _, p := range w.parts {
 		if p.interp {
 			for _, i := range w.tested {
-				worst = max(worst, p.u[i]/w.uVal[i])
+				worst = max(worst, p.source.U[i]/w.uVal[i])
 			}
 		}
 	}
@@ -324,9 +424,13 @@ func all(n int) []int {
 func (w *work) covariance(parts []part, at []int) uncertainty.Budget {
 	sources := make([]uncertainty.Source, len(parts))
 	for i, p := range parts {
-		sources[i] = uncertainty.Source{U: pick(p.u, at), Common: p.common}
+		sources[i] = p.source
 	}
-	return uncertainty.Combine(len(at), sources)
+	whole := uncertainty.Combine(len(w.x), sources)
+	if len(at) == len(w.x) {
+		return whole
+	}
+	return whole.At(at)
 }
 
 // pick returns the values at some indices; all of them are not copied.

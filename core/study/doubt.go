@@ -7,6 +7,7 @@ import (
 	"weirmark/core/notice"
 	"weirmark/core/plausibility"
 	"weirmark/core/quantity"
+	"weirmark/core/uncertainty"
 )
 
 // doubtCurves looks for mistakes in each side by itself.
@@ -127,7 +128,7 @@ func (w *work) doubtMagnitude() {
 	if r == nil || s == nil || s.scalar() || r.scalar() {
 		return
 	}
-	if lo, hi := limits(r.y); !(lo < 0 && hi > 0) {
+	if lo, hi := limits(w.d); !(lo < 0 && hi > 0) {
 		return
 	}
 	if least, found := plausibility.Magnitude(s.y); found {
@@ -169,7 +170,7 @@ func (w *work) doubtCorrelation(e []float64) {
 		at := func(common bool) string {
 			return quantity.Text(float64(w.alternative(e, func(p *part) {
 				if p.line.Name == s.Name {
-					p.common = common
+					p.source = uncertainty.Source{U: p.source.U, Common: common}
 				}
 			})), 3)
 		}

@@ -168,7 +168,7 @@ func (e *evaluation) workWith(w *work) Cell {
 	w.cell = Cell{
 		Case: q.Case, Condition: q.Condition, Quantity: q.Quantity, Symbol: q.Symbol, Model: model,
 		Reference: q.ReferenceID, Kind: q.Kind.Value, Use: q.Use.Value, Downward: q.Downward, Choices: choices,
-		Unit: "1", XUnit: "1",
+		Unit: "1", XUnit: "1", Degrees: None, K95: None,
 		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Scores: []ScoreLine{}, Regions: []RegionLine{}, Monitors: []MonitorLine{}, Balances: []BalanceLine{}, Conditions: []Compared{}, Sources: []SourceLine{}, Fragile: []Fragility{},
 		Notices: []notice.Notice{}, FilesUsed: []string{},
 		Crossings: Crossings{Simulation: []Crossing{}, Reference: []Crossing{}},
@@ -203,6 +203,7 @@ type work struct {
 	choices Choices
 	// withExcluded compares the excluded stations too, as an alternative.
 	withExcluded bool
+	inner        bool // an alternative itself: what only the statement shows is left out
 	cell         Cell
 
 	reference *curve

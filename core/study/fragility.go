@@ -53,11 +53,23 @@ func (e *evaluation) fragile(q *Question, model string, have Cell) []Fragility {
 	for _, a := range alternatives(q.Choices) {
 		choices := q.Choices
 		a.apply(&choices)
-		other := e.work(q, model, choices)
+		other := e.workWith(&work{e: e, q: q, model: model, choices: choices, inner: true})
 		list = append(list, changes(a.change, have, other)...)
 	}
+	if j := have.Joint; j != nil {
+		for _, r := range j.Without {
+			if r.Exceeds != j.Exceeds {
+				word := Cell{Joint: &Joint{Exceeds: r.Exceeds}}
+				list = append(list, Fragility{Change: "without " + r.Region, What: "joint statistic", From: have.jointWord(), Outcome: word.jointWord(), Detail: "statistic " + quantity.Text(float64(r.Statistic), 3)})
+			}
+		}
+		for _, t := range j.Turns {
+			word := Cell{Joint: &Joint{Exceeds: !j.Exceeds}}
+			list = append(list, Fragility{Change: "correlation of " + t.Source + " below " + quantity.Text(float64(t.Rho), 3), What: "joint statistic", From: have.jointWord(), Outcome: word.jointWord(), Detail: "statistic " + quantity.Text(float64(t.At0), 3) + " when independent"})
+		}
+	}
 	if len(have.Excluded) > 0 {
-		other := e.workWith(&work{e: e, q: q, model: model, choices: q.Choices, withExcluded: true})
+		other := e.workWith(&work{e: e, q: q, model: model, choices: q.Choices, withExcluded: true, inner: true})
 		list = append(list, changes("the excluded stations counted", have, other)...)
 	}
 	return list

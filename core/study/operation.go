@@ -319,7 +319,7 @@ func (s *Study) text(t Target) *string {
 		if !ok || i >= len(q.Sources) {
 			return nil
 		}
-		return map[string]*string{"name": &q.Sources[i].Name, "origin": &q.Sources[i].Origin, "model": &q.Sources[i].Model, "column": &q.Sources[i].Column}[field]
+		return map[string]*string{"name": &q.Sources[i].Name, "origin": &q.Sources[i].Origin, "model": &q.Sources[i].Model, "column": &q.Sources[i].Column, "group": &q.Sources[i].Group}[field]
 	}
 	if t.Kind == "question" {
 		return map[string]*string{"symbol": &q.Symbol, "condition": &q.Condition, "reference_id": &q.ReferenceID}[t.Field]
@@ -451,9 +451,15 @@ func (q *Question) enterSource(path, value string) (string, error) {
 	case "value":
 		return number(&s.Value, value, 0, 1e30)
 	case "basis":
-		return oneOf(&s.Basis, Absolute, OfReading)
+		return oneOf(&s.Basis, Absolute, OfReading, OfFullScale)
 	case "pattern":
-		return oneOf(&s.Pattern, Independent, Common)
+		return oneOf(&s.Pattern, Independent, Common, Grouped, Length)
+	case "full_scale":
+		return number(&s.FullScale, value, 0, 1e30)
+	case "length":
+		return number(&s.Length, value, 0, 1e30)
+	case "degrees":
+		return number(&s.Degrees, value, 0, 1e9)
 	case "of":
 		return oneOf(&s.Of, OfData, OfInput, OfNumerical)
 	case "random":

@@ -42,6 +42,10 @@ type Phrase struct {
 	Text   string  `json:"text"`
 	Mark   string  `json:"mark"`
 	Target *Target `json:"target"` // where a blank, guess or number comes from; null for plain words
+	// Of a phrase that is one number of the report: where it stands in the
+	// cell, such as "joint.statistic", and its value.
+	Path  string           `json:"path,omitempty"`
+	Value *quantity.Number `json:"value,omitempty"`
 }
 
 // FileLine names a source.
@@ -106,6 +110,8 @@ type Cell struct {
 	Balances    []BalanceLine `json:"balances"`
 	Grids       *Grids        `json:"grids"`
 	Sources     []SourceLine  `json:"sources"`
+	Degrees     Number        `json:"degrees"` // effective degrees of freedom of a scalar; null where all are taken as known
+	K95         Number        `json:"k_95"`    // factor that 95 % needs with them
 	Requirement *Judgement    `json:"requirement"`
 	Fragile     []Fragility   `json:"fragile"` // alternatives that change an outcome word
 
@@ -271,6 +277,35 @@ type Joint struct {
 	RemainderReference Number `json:"remainder_reference"`
 	RemainderExceeds   bool   `json:"remainder_exceeds"`
 	OffsetResolved     bool   `json:"offset_resolved"`
+
+	// E = a + b S + rest: the scale beside an offset, and the shape left over.
+	Scale         Number    `json:"scale"`
+	UScale        Number    `json:"u_scale"`
+	ScalePart     Number    `json:"scale_part"`
+	ShapePart     Number    `json:"shape_part"`
+	ShapeN        int       `json:"shape_n"`
+	ScaleResolved bool      `json:"scale_resolved"`
+	AtLeast       Number    `json:"at_least"` // probability of at least the found number beyond k u_val, by sampling
+	Turns         []Turning `json:"turns"`    // common sources of the data whose correlation turns the conclusion
+	Without       []Leaving `json:"without"`  // the statistic without each region
+}
+
+// Turning is a source whose assumed correlation rho, 0 to 1, turns the
+// conclusion of the joint statistic.
+type Turning struct {
+	Source string `json:"source"`
+	Rho    Number `json:"rho"`
+	At0    Number `json:"at_0"` // statistic with the source independent
+	At1    Number `json:"at_1"` // and fully shared
+}
+
+// Leaving is the statistic with the stations of a region left out.
+type Leaving struct {
+	Region    string `json:"region"`
+	Statistic Number `json:"statistic"`
+	N         int    `json:"n"`
+	Reference Number `json:"reference"`
+	Exceeds   bool   `json:"exceeds"`
 }
 
 // Crossings of zero, in the cell's x unit.

@@ -102,8 +102,7 @@ func (w *work) judgeMonitor(c *curve) {
 	for i := range u {
 		u[i] = m.U
 	}
-	w.add(OfNumerical, "iteration", string(m.Class)+" monitor, "+m.Rule, "computed from "+w.e.study.fileName(p), u, w.choices.NumShared, false)
-	w.parts[len(w.parts)-1].aside = true
+	w.add(OfNumerical, "iteration", string(m.Class)+" monitor, "+m.Rule, "computed from "+w.e.study.fileName(p), u, w.choices.NumShared, false).aside = true
 	change := math.NaN()
 	if g := w.cell.Grids; g != nil && !g.Along && len(g.Points) > 1 {
 		change = w.yUnit.StepToSI(float64(g.Points[len(g.Points)-1].Value - g.Points[len(g.Points)-2].Value))
@@ -112,13 +111,26 @@ func (w *work) judgeMonitor(c *curve) {
 	if w.cell.Scalar {
 		e = w.s[0] - w.d[0]
 	}
-	uIter := 2 * m.U
-	if m.Class == settling.Cycling || m.Class == settling.Stalled {
-		uIter = m.HalfRange // what is printed as U_iter there
-	}
+	uIter, _ := iterative(string(m.Class), m.U, m.HalfRange)
 	for _, n := range settling.Weigh(w.q.Quantity, uIter, opt.UGrid, change, e).Notices {
 		w.tell(n)
 	}
+}
+
+// iterative returns U_iter of a monitor and its coverage factor: twice u, or of
+// iterates that keep changing half their range, a bound without a factor.
+func iterative(class string, u, halfRange float64) (value, k float64) {
+	if class == string(settling.Cycling) || class == string(settling.Stalled) {
+		return halfRange, math.NaN()
+	}
+	return 2 * u, 2
+}
+
+// UIter returns the iterative uncertainty that is printed of the monitor, and
+// its coverage factor, which a bound has not.
+func (m MonitorLine) UIter() (value, k Number) {
+	v, factor := iterative(m.Class, float64(m.U), float64(m.HalfRange))
+	return Number(v), Number(factor)
 }
 
 // settlingOptions holds what changes are judged against: the grid

@@ -240,24 +240,31 @@ const (
 const (
 	Absolute    = "absolute" // in the unit of the data
 	OfReading   = "percent of reading"
+	OfFullScale = "percent of full scale"
 	Independent = "independent"
-	Common      = "common"
+	Common      = "common" // of a percentage of the reading: a common scale
+	Grouped     = "group"  // shared within groups of stations
+	Length      = "length" // with a correlation length
 )
 
 // Source is one line of the uncertainty budget. Its standard uncertainty is
 // Value / CoverageFactor(Coverage). A column of a numerical source is looked
 // up in the simulation first, any other in the reference.
 type Source struct {
-	Name     string  `json:"name"`
-	Of       string  `json:"of"`
-	Model    string  `json:"model"` // for numerical and input sources: the model it belongs to, "" for all
-	Value    float64 `json:"value"`
-	Column   string  `json:"column,omitempty"` // holds the value at each station, in place of Value
-	Basis    string  `json:"basis"`
-	Coverage Field   `json:"coverage"`
-	Random   bool    `json:"random"`
-	Pattern  string  `json:"pattern"`
-	Origin   string  `json:"origin"` // where the number comes from, or the reason it was entered
+	Name      string  `json:"name"`
+	Of        string  `json:"of"`
+	Model     string  `json:"model"` // for numerical and input sources: the model it belongs to, "" for all
+	Value     float64 `json:"value"`
+	Column    string  `json:"column,omitempty"` // holds the value at each station, in place of Value
+	Basis     string  `json:"basis"`
+	Coverage  Field   `json:"coverage"`
+	Random    bool    `json:"random"`
+	Pattern   string  `json:"pattern"`
+	FullScale float64 `json:"full_scale,omitempty"` // in the unit of the data
+	Group     string  `json:"group,omitempty"`      // column of the reference with group numbers
+	Length    float64 `json:"length,omitempty"`     // in the unit of the stations
+	Degrees   float64 `json:"degrees,omitempty"`    // of freedom; 0: taken as known
+	Origin    string  `json:"origin"`               // where the number comes from, or the reason it was entered
 }
 
 // Choices are the decisions whose effect is shown at once.

@@ -2,6 +2,7 @@ package tablefile
 
 import (
 	"bytes"
+	"fmt"
 	"math"
 	"strconv"
 	"testing"
@@ -48,4 +49,18 @@ func BenchmarkRead1MZone(b *testing.B) {
 	data := millionRows(' ')
 	head := []byte("VARIABLES = x y cp\nZONE T=\"a\"\n")
 	benchmarkRead(b, append(head, data[bytes.IndexByte(data, '\n')+1:]...), 1_000_000)
+}
+
+// BenchmarkReadWorkbook reads a sheet of 100,000 rows of three numbers.
+func BenchmarkReadWorkbook(b *testing.B) {
+	rows := []string{`<c t="str"><v>x</v></c><c t="str"><v>y</v></c><c t="str"><v>cp</v></c>`}
+	for i := range 100_000 {
+		x := float64(i) / 1e5
+		row := ""
+		for c, v := range []float64{x, math.Sqrt(x), 1 - 4*x} {
+			row += fmt.Sprintf(`<c r="%s"><v>%v</v></c>`, cellReference(i+2, c+1), v)
+		}
+		rows = append(rows, row)
+	}
+	benchmarkRead(b, makeBook(rowsXML(rows...)), 100_000)
 }

@@ -42,7 +42,7 @@ func (r *reader) readStream(at, line int) stream {
 				break
 			}
 			s.count++
-			s.readLine(r.data, i, r.lineEnd(i), line, room)
+			s.readLine(r.data, r.cells, i, r.lineEnd(i), line, room)
 			if s.over {
 				break
 			}
@@ -55,14 +55,14 @@ func (r *reader) readStream(at, line int) stream {
 }
 
 // readLine reads the values of data[i:end], which stand on line.
-func (s *stream) readLine(data []byte, i, end, line, room int) {
+func (s *stream) readLine(data []byte, cells cellReader, i, end, line, room int) {
 	split := splitter{data: data, separator: spaces, repeats: true}
 	for i < end {
 		if i = skipSeparators(data, i); i >= end || beginsRemark(data, i) {
 			return
 		}
 		value, after := scanNumber(data, i)
-		if after > 0 && (after >= end || data[after] == ',' || blankAt(data, after) > 0) {
+		if after > 0 && cells.decimal != decimalComma && (after >= end || data[after] == ',' || blankAt(data, after) > 0) {
 			s.put(value, line)
 			i = after
 			continue
@@ -76,7 +76,7 @@ func (s *stream) readLine(data []byte, i, end, line, room int) {
 			s.over = true
 			return
 		}
-		value, kind, form := readCell(data[c.start:c.end])
+		value, kind, form := cells.read(data[c.start:c.end])
 		if kind == cellText {
 			s.texts++
 		}

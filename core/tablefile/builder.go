@@ -3,6 +3,7 @@ package tablefile
 import (
 	"bytes"
 	"math"
+	"slices"
 
 	"weirmark/core/notice"
 )
@@ -25,7 +26,9 @@ type builder struct {
 	held             tellOnce
 	heldCells        int // of the first row held back
 	heldLines        int
-	texts            int // lines of text passed over among the rows
+	texts            int            // lines of text passed over among the rows
+	rowsBefore       int            // lines counted as rows before those of the table
+	stop             *notice.Notice // why the table cannot be used, else nil
 }
 
 // gather is what was seen in one column beside plain numbers.
@@ -33,12 +36,13 @@ type gather struct {
 	missing  tellOnce
 	overflow tellOnce
 	comma    tellOnce // cells with a decimal comma
+	date     tellOnce // cells that hold a date or a time of day
 	text     bool     // some cell holds text that is no mark of a missing value
 }
 
 // newBuilder returns a builder of n columns with room for about rows rows.
 func (r *reader) newBuilder(n int, separator byte, rows int) *builder {
-	b := &builder{r: r, split: splitter{data: r.data, separator: separator}, start: r.at, startLine: r.line}
+	b := &builder{r: r, split: splitter{data: r.data, separator: separator}, start: r.at, startLine: r.line, rowsBefore: r.tally.row}
 	b.columns = make([]gather, n)
 	b.values = make([][]float64, n)
 	b.reserve(max(rows, 8))
@@ -131,12 +135,29 @@ func (b *builder) content(rows bool) bool {
 		b.held.tell(line, nil)
 		b.heldLines += lines
 		r.tally.held += lines
+	case !rows && b.statement(at, line):
+		r.tally.stated += lines
 	default:
 		r.passed.tell(line, r.text(at))
 		b.texts++
 		r.tally.text += lines
 	}
 	return true
+}
+
+// statement keeps what the line at offset at states, and reports whether it
+// states anything.
+func (b *builder) statement(at, line int) bool {
+	r := b.r
+	if !r.statements {
+		return false
+	}
+	key, value, ok := rowStatement(r.text(at), b.split.separator)
+	if ok {
+		r.state(key, value, line)
+		r.stated.tell(line, r.text(at))
+	}
+	return ok
 }
 
 // openQuote returns the stop notice for a quote at offset quote in a row that
@@ -178,7 +199,7 @@ func (b *builder) fits() bool {
 func (b *builder) mostlyNumbers() bool {
 	numbers := 0
 	for _, c := range b.split.cells {
-		if _, kind, _ := readCell(b.split.bytes(c)); kind == cellNumber {
+		if _, kind, _ := b.r.cells.read(b.split.bytes(c)); kind == cellNumber {
 			numbers++
 		}
 	}
@@ -209,37 +230,38 @@ func (b *builder) readRow(line int) bool {
 	return true
 }
 
-// holdsData reports whether some column of numbers holds a number or a
-// missing value in the row just split.
+// holdsData reports whether the row just split can be one: some column of
+// numbers holds a number or a mark of a missing value, or none holds text.
 func (b *builder) holdsData() bool {
-	column, any := 0, false
+	column, text := 0, false
 	for _, c := range b.split.cells {
 		for range c.repeat {
 			if column == len(b.values) {
 				break
 			}
 			if b.numeric == nil || b.numeric[column] {
-				any = true
-				text := b.split.bytes(c)
-				_, kind, _ := readCell(text)
-				if kind != cellText || column == len(b.values)-1 && isNumberAndRemark(text) {
+				cell := b.split.bytes(c)
+				_, kind, _ := b.r.cells.read(cell)
+				isText := kind == cellText && !(column == len(b.values)-1 && b.r.cells.isNumberAndRemark(cell))
+				if !isText && len(cell) > 0 {
 					return true
 				}
+				text = text || isText
 			}
 			column++
 		}
 	}
-	return !any
+	return !text
 }
 
 // readValue returns the number of a cell and records what is not plain. A
 // remark behind the number of the last cell of a row is left out.
 func (b *builder) readValue(column, line int, text []byte, last bool) float64 {
-	value, kind, form := readCell(text)
+	value, kind, form := b.r.cells.read(text)
 	if kind == cellText && last {
 		if head, ok := beforeRemark(text); ok {
 			text = head
-			value, kind, form = readCell(text)
+			value, kind, form = b.r.cells.read(text)
 		}
 	}
 	g := &b.columns[column]
@@ -254,6 +276,9 @@ func (b *builder) readValue(column, line int, text []byte, last bool) float64 {
 		return value
 	case cellText:
 		g.text = true
+		if isDate(text) {
+			g.date.tell(line, text)
+		}
 	case cellOverflow:
 		g.overflow.tell(line, text)
 	}
@@ -270,12 +295,12 @@ func beforeRemark(text []byte) ([]byte, bool) {
 	return bytes.TrimSpace(text[:at]), true
 }
 
-func isNumberAndRemark(text []byte) bool {
+func (r cellReader) isNumberAndRemark(text []byte) bool {
 	head, ok := beforeRemark(text)
 	if !ok {
 		return false
 	}
-	_, kind, _ := readCell(head)
+	_, kind, _ := r.read(head)
 	return kind == cellNumber
 }
 
@@ -288,6 +313,8 @@ func (b *builder) comment(i int) {
 	}
 	if len(b.values) > 1 && b.plainRow(i) >= 0 {
 		r.disabled.tell(r.line, r.text(r.at))
+	} else if key, value, ok := statement(commentText(r.text(r.at))); ok && b.rows == 0 {
+		r.state(key, value, r.line)
 	}
 	r.tally.comment++
 	r.skipLine()
@@ -338,5 +365,34 @@ func (b *builder) describe(t *Table, c int, column Column) {
 	if g.missing.count > 0 {
 		r.add(notice.New("value-missing", g.missing.count, g.missing.first, column.Name).At(g.missing.line))
 	}
+	r.dropSentinels(t, column)
 	r.sentinels(t, column)
+	b.constant(t, column)
+	b.dates(c, column)
+}
+
+// constantRows is the least number of rows of which a column of one value is
+// told.
+const constantRows = 3
+
+// constant tells of a column that holds one value in every row.
+func (b *builder) constant(t *Table, column Column) {
+	if value, ok := column.Constant(); ok && len(column.Values) >= constantRows {
+		b.r.add(notice.New("column-constant", column.Name, formatValue(value), len(column.Values)).At(t.Line))
+	}
+}
+
+// dates stops the use of a table that holds a date among the numbers of a
+// column: a spreadsheet may have made it of a number.
+func (b *builder) dates(c int, column Column) {
+	g := &b.columns[c]
+	if g.date.count == 0 || !slices.ContainsFunc(column.Values, func(v float64) bool { return !math.IsNaN(v) }) {
+		return
+	}
+	place := b.r.cellName(g.date.line, c)
+	n := notice.New("value-date", place, dateWords(g.date.first), column.Name, g.date.count).At(g.date.line)
+	b.r.add(n)
+	if b.stop == nil {
+		b.stop = &n
+	}
 }

@@ -28,13 +28,30 @@ const (
 	formPoint                          // a decimal point, told only by readCell
 )
 
+// cellReader reads cells as a person stated that they are written; its zero
+// value reads them as they come.
+type cellReader struct {
+	decimal decimalSign
+	missing map[string]bool // marks of missing values beside the usual ones
+}
+
 // readCell says what a cell holds. The value is NaN unless it is a number.
 func readCell(text []byte) (float64, cellKind, cellForm) {
+	return cellReader{}.read(text)
+}
+
+// read is readCell with what was stated about the file.
+func (r cellReader) read(text []byte) (float64, cellKind, cellForm) {
+	if len(r.missing) > 0 && r.missing[string(text)] {
+		return math.NaN(), cellMissing, 0
+	}
 	if value, end := scanNumber(text, 0); end == len(text) && end > 0 {
-		if bytes.IndexByte(text, '.') >= 0 {
+		switch point := bytes.IndexByte(text, '.') >= 0; {
+		case !point:
+			return value, cellNumber, 0
+		case r.decimal != decimalComma:
 			return value, cellNumber, formPoint
 		}
-		return value, cellNumber, 0
 	}
 	if len(text) > 64 {
 		return math.NaN(), cellText, 0
@@ -44,7 +61,7 @@ func readCell(text []byte) (float64, cellKind, cellForm) {
 	if kind, ok := markKind(plain); ok {
 		return math.NaN(), kind, 0
 	}
-	plain, separators, ok := decimal(plain)
+	plain, separators, ok := decimal(plain, r.decimal)
 	if !ok {
 		return math.NaN(), cellText, 0
 	}
@@ -126,10 +143,21 @@ func markKind(text []byte) (cellKind, bool) {
 }
 
 // decimal brings a number with a decimal comma or with grouped digits into
-// plain writing, in place. It fails where the marks form no number.
-func decimal(text []byte) ([]byte, cellForm, bool) {
+// plain writing, in place. It fails where the marks form no number, or none
+// with the stated decimal sign.
+func decimal(text []byte, stated decimalSign) ([]byte, cellForm, bool) {
 	commas, points := bytes.Count(text, []byte(",")), bytes.Count(text, []byte("."))
 	switch {
+	case stated == decimalPoint && commas == 1 && points == 0:
+		text, ok := ungroup(text, ',')
+		return text, formThousands, ok
+	case stated == decimalComma && points > 0 && commas == 0:
+		text, ok := ungroup(text, '.')
+		return text, formThousands, ok
+	case stated == decimalComma && commas > 1,
+		stated == decimalComma && commas == 1 && bytes.IndexByte(text, ',') < bytes.LastIndexByte(text, '.'),
+		stated == decimalPoint && points > 0 && bytes.IndexByte(text, '.') < bytes.LastIndexByte(text, ','):
+		return text, 0, false
 	case commas == 0 && points == 0:
 		return text, 0, true
 	case commas == 0 && points == 1:
@@ -154,10 +182,11 @@ func decimal(text []byte) ([]byte, cellForm, bool) {
 	return text, 0, false
 }
 
-// ungroup removes mark, in place, where every mark parts a group of three.
+// ungroup removes mark, in place, where every mark parts a group of three and
+// the first group does not begin with zero, as no grouped number does.
 func ungroup(text []byte, mark byte) ([]byte, bool) {
 	leading := bytes.TrimLeft(text[:bytes.IndexByte(text, mark)], "+-")
-	if len(leading) > 3 {
+	if len(leading) > 3 || len(leading) > 0 && leading[0] == '0' {
 		return text, false
 	}
 	for i, c := range text {

@@ -2,6 +2,7 @@ package tablefile
 
 import (
 	"bytes"
+	"slices"
 
 	"weirmark/core/notice"
 )
@@ -16,29 +17,36 @@ const (
 
 // delimited reads the file as one table.
 func (r *reader) delimited() outcome {
-	stated := r.statedSeparator()
+	stated := r.separator
+	if stated == 0 && r.region == nil && len(r.guides) == 0 {
+		stated = r.statedSeparator()
+	}
 	from := r.at
 	l, ok := r.judge(from, stated)
 	if !ok || l.columns > maxColumns {
 		return r.noTable(l.columns)
 	}
 	names := r.findNames(&l, from)
+	r.statements = l.statements
 	estimate := (len(r.data)-l.first)/l.rowBytes + 16
 	b := r.newBuilder(l.columns, l.separator, min(estimate+estimate/32, (len(r.data)-l.first)/l.columns+16))
 	b.trailing, b.numeric = l.trailing, l.numeric
+	b.split.guides, b.split.strict = r.guides, r.strict
 	if !r.delimitedRows(b, l) {
 		if r.refused {
 			return readDelimited
 		}
-		*r = reader{file: r.file, data: r.data, returns: r.returns, line: 1}
+		kept := *r
+		*r = reader{file: kept.file, data: kept.data, returns: kept.returns, line: kept.first, first: kept.first, region: kept.region, opt: kept.opt, answers: kept.answers, tick: progressBytes}
+		r.file.Meta = nil
 		return foundZones
 	}
 	r.nameNotices(&l, &names)
 	if t, ok := b.table("", names.columns); ok {
-		if l.separator == ',' && names.stated*2 <= l.columns && r.commasDoubtful(b, l.first) {
+		if l.separator == ',' && names.stated*2 <= l.columns && r.cells.decimal == decimalOpen && !l.stated && r.commasDoubtful(b, l.first) {
 			r.add(notice.New("comma-ambiguous", excerpt(r.text(l.first)), l.columns).At(t.Line))
 		}
-		r.file.Tables = append(r.file.Tables, t)
+		r.addTable(t, b)
 	}
 	return readDelimited
 }
@@ -81,8 +89,12 @@ func (r *reader) noTable(columns int) outcome {
 // delimitedRows walks the whole file. It reports false where the walk ended
 // early: the file was refused or turned out to be in zones.
 func (r *reader) delimitedRows(b *builder, l layout) bool {
+	plain := l.separator != fixed && r.cells.decimal != decimalComma
 	for r.at < len(r.data) {
-		if r.at >= l.first {
+		if r.at >= r.tick && !r.progress() {
+			return false
+		}
+		if r.at >= l.first && plain {
 			if next := b.plainRow(r.at); next >= 0 {
 				b.commit(r.line)
 				if b.blank {
@@ -143,16 +155,22 @@ func (r *reader) findNames(l *layout, from int) nameSource {
 	above := r.linesAbove(*l, from)
 	var source nameSource
 	content := above.content
+	if l.statements {
+		content = slices.DeleteFunc(content, func(c lineAt) bool {
+			_, _, ok := rowStatement(c.text, l.separator)
+			return ok
+		})
+	}
 	if n := len(content); n > 0 {
-		if names := rowNames(content[n-1].text, *l); names != nil {
-			if units, ok := unitRow(names); ok && source.takeUnits(content[:n-1], *l, units) {
+		if names := r.rowNames(content[n-1].text, *l); names != nil {
+			if units, ok := unitRow(names); ok && source.takeUnits(r, content[:n-1], *l, units) {
 				l.units = content[n-1].at
 				source.unitLine = content[n-1].line
 				n--
 			}
 		}
 		last := content[n-1]
-		if names := rowNames(last.text, *l); names != nil && namesOfRows(names, *l) {
+		if names := r.rowNames(last.text, *l); names != nil && namesOfRows(names, *l) {
 			source.headers, source.line, source.stated = names, last.line, len(names)
 			l.names = last.at
 			return source
@@ -179,11 +197,11 @@ func (r *reader) findNames(l *layout, from int) nameSource {
 }
 
 // takeUnits takes units where a line of names stands above them.
-func (s *nameSource) takeUnits(above []lineAt, l layout, units []string) bool {
+func (s *nameSource) takeUnits(r *reader, above []lineAt, l layout, units []string) bool {
 	if len(above) == 0 {
 		return false
 	}
-	names := rowNames(above[len(above)-1].text, l)
+	names := r.rowNames(above[len(above)-1].text, l)
 	if names == nil || !namesOfRows(names, l) {
 		return false
 	}
@@ -193,9 +211,12 @@ func (s *nameSource) takeUnits(above []lineAt, l layout, units []string) bool {
 
 // rowNames splits a line of content into the names of the columns, or returns
 // nil where their number does not fit.
-func rowNames(text []byte, l layout) []string {
-	if l.separator == spaces {
+func (r *reader) rowNames(text []byte, l layout) []string {
+	switch l.separator {
+	case spaces:
 		return splitNames(text, spaces, l.columns)
+	case fixed:
+		return r.namesByGuides(text)
 	}
 	names := namesBetween(text, l.separator)
 	if l.trailing && len(names) == l.columns+1 && names[l.columns] == "" {
@@ -216,7 +237,7 @@ func namesOfRows(names []string, l layout) bool {
 // misfit returns the number of names of a line above the first row that is a
 // line of names by its separators but does not fit the columns, else 0.
 func (r *reader) misfit(text []byte, l layout) int {
-	if l.separator == spaces {
+	if l.separator == spaces || l.separator == fixed {
 		return 0
 	}
 	names := namesBetween(text, l.separator)
@@ -239,7 +260,7 @@ type linesAbove struct{ content, comments []lineAt }
 // spans the lines of its quoted fields.
 func (r *reader) linesAbove(l layout, from int) linesAbove {
 	var above linesAbove
-	split := splitter{data: r.data, separator: l.separator}
+	split := splitter{data: r.data, separator: l.separator, guides: r.guides}
 	line := r.line
 	for at := from; at < l.first; {
 		kind, mark := kindOfLine(r.data, at, l.separator)
@@ -261,7 +282,12 @@ func (r *reader) linesAbove(l layout, from int) linesAbove {
 // nameNotices makes the columns of the names found and says where they are
 // from.
 func (r *reader) nameNotices(l *layout, s *nameSource) {
-	if l.columns > 1 && !l.stated {
+	switch {
+	case l.separator == fixed && r.strict:
+		r.add(notice.New("fixed-guessed", listGuides(r.guides)))
+	case l.separator == fixed:
+		r.add(notice.New("fixed-stated", listGuides(r.guides)))
+	case l.columns > 1 && !l.stated:
 		r.add(notice.New("delimiter-guessed", separatorName(l.separator)))
 	}
 	if l.trailing {

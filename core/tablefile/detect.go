@@ -16,21 +16,23 @@ const proseScore = 0.1
 // layout is how the rows of a delimited file are written, judged by a sample
 // of its first lines.
 type layout struct {
-	separator byte
-	columns   int
-	trailing  bool   // rows end with a separator
-	numeric   []bool // columns that hold numbers
-	first     int    // offset of the first row
-	names     int    // offset of the line of names, or -1
-	units     int    // offset of the line of units, or -1
-	cells     int    // cells of the line of names, where they do not fit the columns
-	rowBytes  int    // of a row, on average
-	stated    bool   // the file itself gives the separator
+	separator  byte
+	columns    int
+	trailing   bool   // rows end with a separator
+	numeric    []bool // columns that hold numbers
+	first      int    // offset of the first row
+	names      int    // offset of the line of names, or -1
+	units      int    // offset of the line of units, or -1
+	cells      int    // cells of the line of names, where they do not fit the columns
+	rowBytes   int    // of a row, on average
+	stated     bool   // a person or the file itself gives the separator
+	statements bool   // lines of a key and a value above the rows are no rows
 }
 
 // sample is the first lines of content, split by one separator.
 type sample struct {
 	separator byte
+	cells     cellReader
 	lines     []sampleLine
 	foreign   int // text cells that hold a stronger separator
 	openQuote int // offset of a quote that never closes, else -1
@@ -61,10 +63,12 @@ func (r *reader) sampleEnd(from int) int {
 	return at
 }
 
-// takeSample splits the lines of content in data[from:end] by separator.
-func (r *reader) takeSample(separator byte, from, end int) sample {
-	s := sample{separator: separator, openQuote: -1}
-	split := splitter{data: r.data, separator: separator}
+// takeSample splits the lines of content in data[from:end] by separator. With
+// statements, lines of a key and a value before any number are left out.
+func (r *reader) takeSample(separator byte, from, end int, statements bool) sample {
+	s := sample{separator: separator, cells: r.cells, openQuote: -1}
+	split := splitter{data: r.data, separator: separator, guides: r.guides, strict: r.strict}
+	numbers := 0
 	for at := from; at < end; {
 		kind, _ := kindOfLine(r.data, at, separator)
 		if kind != lineContent {
@@ -76,7 +80,15 @@ func (r *reader) takeSample(separator byte, from, end int) sample {
 			s.openQuote = split.openQuote
 			break
 		}
-		s.lines = append(s.lines, s.look(&split, at, next))
+		line := s.look(&split, at, next)
+		stated := false
+		if statements && numbers == 0 {
+			_, _, stated = rowStatement(bytes.TrimRight(r.data[at:next], "\r\n"), separator)
+		}
+		if !stated {
+			s.lines = append(s.lines, line)
+			numbers += line.numbers
+		}
 		at = next
 	}
 	return s
@@ -87,8 +99,8 @@ func (s *sample) look(split *splitter, at, next int) sampleLine {
 	line := sampleLine{at: at, next: next, count: split.count, cells: make([]cellKind, 0, len(split.cells))}
 	for i, c := range split.cells {
 		text := split.bytes(c)
-		_, kind, _ := readCell(text)
-		if kind == cellText && i == len(split.cells)-1 && isNumberAndRemark(text) {
+		_, kind, _ := s.cells.read(text)
+		if kind == cellText && i == len(split.cells)-1 && s.cells.isNumberAndRemark(text) {
 			kind = cellNumber
 		}
 		switch kind {
@@ -158,35 +170,66 @@ func (s *sample) score() (score float64, columns int) {
 }
 
 // judge returns the layout of a delimited file from offset from on, or false
-// where the sample holds no number, or none before a quote that never closes. stated is the separator the file itself
-// gives, or 0.
+// where the sample holds no number, or none before a quote that never closes.
+// stated is the separator that a person or the file itself gives, or 0. Where
+// the rows show that they are parted by position, it sets the guides.
 func (r *reader) judge(from int, stated byte) (layout, bool) {
 	candidates := []byte{'\t', ';', ',', spaces}
-	if stated != 0 {
+	switch {
+	case len(r.guides) > 0:
+		candidates = []byte{fixed}
+	case stated != 0:
 		candidates = []byte{stated}
 	}
 	end := r.sampleEnd(from)
-	var best sample
-	var bestScore float64
-	var bestColumns int
-	quote := -1
-	for _, separator := range candidates {
-		s := r.takeSample(separator, from, end)
-		score, columns := s.score()
-		quote = max(quote, s.openQuote)
-		if score > bestScore || score == bestScore && columns > bestColumns {
-			best, bestScore, bestColumns = s, score, columns
+	best := r.best(candidates, from, end, true)
+	statements := best.columns > 0
+	if !statements {
+		best = r.best(candidates, from, end, false)
+	}
+	if len(r.guides) == 0 && stated == 0 && (best.columns == 0 || best.separator == spaces) {
+		if guides := r.findGuides(from, end); guides != nil {
+			r.guides, r.strict = guides, true
+			best = r.best([]byte{fixed}, from, end, true)
+			statements = true
 		}
 	}
-	if bestColumns == 0 || bestScore <= 0 || best.separator == spaces && bestScore < proseScore {
-		if quote >= 0 {
-			r.refuse(openQuote(r.data, quote, from, r.line))
+	if best.columns == 0 || best.separator == spaces && best.value < proseScore {
+		if best.quote >= 0 {
+			r.refuse(openQuote(r.data, best.quote, from, r.line))
 		}
 		return layout{}, false
 	}
-	l := best.layout(bestColumns)
-	l.stated = stated != 0
+	if best.columns > maxColumns {
+		return layout{columns: best.columns}, true
+	}
+	l := best.layout(best.columns)
+	l.stated, l.statements = stated != 0, statements
 	return l, true
+}
+
+// judged is the sample by the separator that fits best, with its score.
+type judged struct {
+	sample
+	value   float64
+	columns int
+	quote   int // offset of a quote that never closes by some separator, else -1
+}
+
+// best judges the lines in data[from:end] by every candidate.
+func (r *reader) best(candidates []byte, from, end int, statements bool) judged {
+	best := judged{quote: -1}
+	quote := -1
+	for _, separator := range candidates {
+		s := r.takeSample(separator, from, end, statements)
+		value, columns := s.score()
+		quote = max(quote, s.openQuote)
+		if value > 0 && (value > best.value || value == best.value && columns > best.columns) {
+			best = judged{sample: s, value: value, columns: columns}
+		}
+	}
+	best.quote = quote
+	return best
 }
 
 // layout finds the first row and the lines of names and units above it.
@@ -216,7 +259,7 @@ func (s *sample) layout(columns int) layout {
 // endsVoid reports whether every row of the sample ends with a separator, and
 // no line of names gives the column behind it a name.
 func (s *sample) endsVoid(columns int) bool {
-	if s.separator == spaces || columns < 2 {
+	if s.separator == spaces || s.separator == fixed || columns < 2 {
 		return false
 	}
 	for i := range s.lines {

@@ -3,6 +3,7 @@ package tablefile
 import (
 	"crypto/sha256"
 	"encoding/hex"
+	"math"
 	"slices"
 
 	"weirmark/core/notice"
@@ -16,21 +17,18 @@ const defaultMaxBytes = 512 << 20
 // misjudged or the file is not a table.
 const maxColumns = 10000
 
-// Options of Read.
-type Options struct {
-	MaxBytes int // size above which the file is refused; 0 means 512 MB
-}
-
 // File is what was read from one file.
 type File struct {
 	Name    string
 	SHA256  string // of the bytes as given, hexadecimal
 	Size    int    // bytes as given
 	Tables  []Table
+	Meta    []Meta          // what the file states beside its tables
 	Notices []notice.Notice // by line, whole-file notices first
 
 	leftOut []leftOut
 	tally   tally
+	lines   int // written of the ranges of a workbook
 }
 
 // leftOut is a zone that was announced but could not be read.
@@ -59,6 +57,21 @@ type Column struct {
 
 // run says that rows from row on begin on consecutive lines from line on.
 type run struct{ row, line int }
+
+// Constant returns the value that all numbers of the column have, and whether
+// they have one and the same and none is missing. Such a column may be a
+// placeholder.
+func (c Column) Constant() (float64, bool) {
+	if len(c.Values) == 0 || math.IsNaN(c.Values[0]) {
+		return 0, false
+	}
+	for _, v := range c.Values[1:] {
+		if v != c.Values[0] {
+			return 0, false
+		}
+	}
+	return c.Values[0], true
+}
 
 // Rows returns the number of rows.
 func (t Table) Rows() int {
@@ -98,7 +111,7 @@ func Read(name string, data []byte, opt Options) File {
 }
 
 func read(name string, data []byte, opt Options) File {
-	r := &reader{file: File{Name: name, Size: len(data)}}
+	r := &reader{file: File{Name: name, Size: len(data)}, opt: opt, tick: progressBytes}
 	limit := opt.MaxBytes
 	if limit <= 0 {
 		limit = defaultMaxBytes
@@ -107,8 +120,20 @@ func read(name string, data []byte, opt Options) File {
 		r.add(notice.New("file-too-large", len(data), limit))
 		return r.close()
 	}
-	if r.decode(data) {
-		r.read()
+	var err error
+	if r.answers, err = opt.settle(); err != nil {
+		r.refuse(err.(notice.Notice))
+		return r.close()
+	}
+	switch {
+	case isArchive(data):
+		r.workbook(data)
+	case r.decode(data):
+		if isObject(r.data) {
+			r.profile()
+		} else {
+			r.read()
+		}
 	}
 	return r.close()
 }

@@ -2,6 +2,9 @@ package tablefile
 
 import "strconv"
 
+// maxNumber bounds the bytes of a number: what is longer is text.
+const maxNumber = 1024
+
 // powers holds the powers of ten that a double holds exactly.
 var powers = [...]float64{1e0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9, 1e10, 1e11,
 	1e12, 1e13, 1e14, 1e15, 1e16, 1e17, 1e18, 1e19, 1e20, 1e21, 1e22}
@@ -70,6 +73,9 @@ func scanNumber(data []byte, i int) (float64, int) {
 			value = -value
 		}
 		return value, i
+	}
+	if i-start > maxNumber {
+		return 0, -1
 	}
 	value, err := strconv.ParseFloat(string(data[start:i]), 64)
 	if err != nil {

@@ -17,12 +17,21 @@ type reader struct {
 	data     []byte // UTF-8
 	returns  bool   // data holds carriage returns
 	at, line int
+	first    int  // line that data begins with, counted from one
 	refused  bool // a stop notice for the whole file was raised
+	opt      Options
+	answers
+	strict     bool    // the guides are a guess
+	statements bool    // lines above the rows may state a key and a value
+	tick       int     // offset at which progress is told next
+	room       int     // cells that further ranges of a sheet may have
+	region     *region // of the workbook the text is from, else nil
 
 	tally    tally
 	passed   tellOnce // lines of text passed over
 	disabled tellOnce // comments that look like rows
 	gaps     tellOnce // blank lines between rows
+	stated   tellOnce // lines of a key and a value
 	forms    forms
 }
 
@@ -34,6 +43,7 @@ type tally struct {
 	comment int
 	blank   int
 	text    int // passed over, notice text-line
+	stated  int // key and value, notice statement-line
 	held    int // held back, notice column-count
 	left    int // of a zone or record left out
 }
@@ -43,6 +53,18 @@ type tellOnce struct {
 	count int
 	line  int // of the first
 	first string
+}
+
+// add adds the lines of another text.
+func (t *tally) add(o tally) {
+	t.row += o.row
+	t.header += o.header
+	t.comment += o.comment
+	t.blank += o.blank
+	t.text += o.text
+	t.stated += o.stated
+	t.held += o.held
+	t.left += o.left
 }
 
 func (t *tellOnce) tell(line int, text []byte) {
@@ -87,11 +109,12 @@ func (f *forms) tell(form cellForm, line int, text []byte, value float64) {
 
 // excerpt returns the text of a notice about b: at most 60 bytes of it.
 func excerpt(b []byte) string {
-	b = bytes.TrimSpace(b)
-	if len(b) <= 60 {
-		return string(b)
+	b = bytes.Trim(b, " \t\r\n\x1f")
+	tail := ""
+	if len(b) > 60 {
+		b, tail = bytes.ToValidUTF8(b[:60], nil), " ..."
 	}
-	return string(bytes.ToValidUTF8(b[:60], nil)) + " ..."
+	return strings.ReplaceAll(string(b), string(rune(cellMark)), " | ") + tail
 }
 
 // add records a notice of this file.
@@ -105,13 +128,46 @@ func (r *reader) refuse(n notice.Notice) {
 	r.add(n)
 }
 
+// progressBytes is how much is read between two calls of Options.Progress.
+const progressBytes = 1 << 20
+
+// progress tells how far the reading is and reports whether to go on.
+func (r *reader) progress() bool {
+	r.tick = r.at + progressBytes
+	if r.opt.Progress == nil || r.opt.Progress(r.at, len(r.data)) {
+		return true
+	}
+	r.refuse(notice.New("read-ended", r.at, len(r.data)))
+	return false
+}
+
 // read reads the text in data, whichever kind of table it holds.
 func (r *reader) read() {
-	r.line = 1
-	if r.looksZoned() || r.delimited() == foundZones {
+	r.line, r.first = 1, 1
+	if len(r.guides) == 0 && r.looksZoned() || r.delimited() == foundZones {
 		r.zoned()
 	}
 	r.summarise()
+	r.closeEmpty()
+}
+
+// closeEmpty tells of a file without rows.
+func (r *reader) closeEmpty() {
+	if len(r.file.Tables) == 0 && !notice.Any(r.file.Notices, notice.Stop) {
+		r.add(notice.New("file-empty", r.tally.String()))
+	}
+}
+
+// addTable adds the finished table of b, or leaves it out where a stop notice
+// was raised for one of its cells. name is that for a reference to it.
+func (r *reader) addTable(t Table, b *builder) {
+	if b.stop == nil {
+		r.file.Tables = append(r.file.Tables, t)
+		return
+	}
+	r.tally.left += r.tally.row - b.rowsBefore
+	r.tally.row = b.rowsBefore
+	r.file.leftOut = append(r.file.leftOut, leftOut{t.Name, b.stop.In(r.file.Name)})
 }
 
 // summarise turns what was gathered over the whole file into notices.
@@ -124,10 +180,16 @@ func (r *reader) summarise() {
 	}
 	numbers("number-fortran", &f.fortran)
 	numbers("number-signs", &f.signs)
-	if f.comma.count > 0 {
+	switch {
+	case f.comma.count > 0 && r.cells.decimal == decimalComma:
+		numbers("decimal-stated", &f.comma)
+	case f.comma.count > 0:
 		r.add(notice.New("decimal-comma", f.comma.first, formatValue(f.comma.value), f.comma.count).At(f.comma.line))
 	}
-	if f.thousands.count > 0 {
+	switch {
+	case f.thousands.count > 0 && r.cells.decimal != decimalOpen:
+		numbers("groups-stated", &f.thousands)
+	case f.thousands.count > 0:
 		r.add(notice.New("number-thousands", f.thousands.first, formatValue(f.thousands.value), f.thousands.count).At(f.thousands.line))
 	}
 	lines := func(code string, t *tellOnce) {
@@ -137,11 +199,9 @@ func (r *reader) summarise() {
 	}
 	lines("text-line", &r.passed)
 	lines("comment-row", &r.disabled)
+	lines("statement-line", &r.stated)
 	if r.gaps.count > 0 {
 		r.add(notice.New("blank-lines", r.gaps.count).At(r.gaps.line))
-	}
-	if len(r.file.Tables) == 0 && !notice.Any(r.file.Notices, notice.Stop) {
-		r.add(notice.New("file-empty", r.tally.String()))
 	}
 }
 
@@ -151,7 +211,7 @@ func (t tally) String() string {
 	for _, part := range []struct {
 		count int
 		name  string
-	}{{t.header, "header line"}, {t.comment, "comment line"}, {t.text, "line of text"}, {t.held, "row held back"}, {t.left, "line left out"}} {
+	}{{t.header, "header line"}, {t.comment, "comment line"}, {t.text + t.stated, "line of text"}, {t.held, "row held back"}, {t.left, "line left out"}} {
 		if part.count > 0 {
 			text += ", " + plural(part.count, part.name)
 		}

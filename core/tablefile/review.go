@@ -52,7 +52,7 @@ func (b *builder) reviewRow(t *Table, row, line int, kept labels) {
 // reviewPoint refuses the file where a cell of a column with decimal commas
 // has a decimal point. The notice stands where the second of the two is met.
 func (b *builder) reviewPoint(column, line int, text []byte) {
-	_, kind, form := readCell(text)
+	_, kind, form := b.r.cells.read(text)
 	if b.r.refused || kind != cellNumber || form&formPoint == 0 {
 		return
 	}

@@ -3,6 +3,7 @@ package tablefile
 import (
 	"fmt"
 	"math"
+	"slices"
 
 	"weirmark/core/notice"
 )
@@ -44,6 +45,9 @@ func (r *reader) sentinels(t *Table, column Column) {
 }
 
 func (r *reader) askSentinel(t *Table, column Column, mark float64, least int) {
+	if slices.Contains(r.kept, mark) {
+		return
+	}
 	count, first := 0, 0
 	for i, v := range column.Values {
 		if v == mark {
@@ -55,5 +59,25 @@ func (r *reader) askSentinel(t *Table, column Column, mark float64, least int) {
 	}
 	if count >= least {
 		r.add(notice.New("value-sentinel", count, fmt.Sprintf("%s in column %q", formatValue(mark), column.Name)).At(t.RowLine(first)))
+	}
+}
+
+// dropSentinels makes the numbers that a person stated to be marks of missing
+// values missing.
+func (r *reader) dropSentinels(t *Table, column Column) {
+	for _, mark := range r.answers.sentinels {
+		count, first := 0, 0
+		for i, v := range column.Values {
+			if v == mark {
+				if count == 0 {
+					first = i
+				}
+				count++
+				column.Values[i] = math.NaN()
+			}
+		}
+		if count > 0 {
+			r.add(notice.New("sentinel-stated", count, column.Name, formatValue(mark)).At(t.RowLine(first)))
+		}
 	}
 }

@@ -17,7 +17,9 @@ type cell struct {
 type splitter struct {
 	data      []byte
 	separator byte
-	repeats   bool // n*value stands for n cells
+	repeats   bool  // n*value stands for n cells
+	guides    []int // of columns known by position, else nil
+	strict    bool  // the guides are a guess
 	cells     []cell
 	count     int // cells of the row, repeats counted
 	openQuote int // offset of a quote that never closes, else -1
@@ -27,8 +29,11 @@ type splitter struct {
 // and the number of lines the row spans.
 func (s *splitter) split(i int) (next, lines int) {
 	s.cells, s.count, s.openQuote = s.cells[:0], 0, -1
-	if s.separator == spaces {
+	switch s.separator {
+	case spaces:
 		return s.splitSpaces(i), 1
+	case fixed:
+		return s.splitGuides(i), 1
 	}
 	return s.splitSeparated(i)
 }

@@ -26,9 +26,14 @@ func (r *reader) zoned() {
 			r.tally.blank++
 			r.skipLine()
 		case kind == lineComment:
+			z.commentStatement()
 			r.tally.comment++
 			r.skipLine()
-		case isHeadingOf(r.data, i, "title"), isHeadingOf(r.data, i, "filetype"):
+		case isHeadingOf(r.data, i, "title"):
+			r.assignments(i, func(key, value string) { r.state(key, value, r.line) })
+			r.tally.header++
+			r.skipLine()
+		case isHeadingOf(r.data, i, "filetype"):
 			r.tally.header++
 			r.skipLine()
 		case isHeadingOf(r.data, i, "variables"):
@@ -223,7 +228,7 @@ func (z *zones) judgeRow(columns int) (int, byte) {
 	best, bestNumbers, bestColumns := byte(spaces), -1, max(1, columns)
 	for _, separator := range []byte{spaces, ',', '\t', ';'} {
 		split := splitter{data: z.data, separator: separator, repeats: true}
-		s := sample{separator: separator}
+		s := sample{separator: separator, cells: z.cells}
 		split.split(z.at)
 		if split.openQuote >= 0 || split.count == 0 {
 			continue
@@ -264,7 +269,7 @@ func (z *zones) pointRows(columns int, separator byte) {
 	}
 	if t, ok := b.table(h.name, z.columns(columns)); ok {
 		z.separatorNotice(separator)
-		r.file.Tables = append(r.file.Tables, t)
+		r.addTable(t, b)
 	} else if b.held.count == 0 {
 		z.closeHeading()
 	}
@@ -284,8 +289,12 @@ func (z *zones) roomFor(columns int) int {
 // where the file was refused.
 func (z *zones) readPoints(b *builder) bool {
 	r := z.reader
+	plain := r.cells.decimal != decimalComma
 	for r.at < len(r.data) {
-		if next := b.plainRow(r.at); next >= 0 {
+		if r.at >= r.tick && !r.progress() {
+			return false
+		}
+		if next := b.plainRow(r.at); plain && next >= 0 {
 			b.commit(r.line)
 			if b.blank {
 				b.noteGap(r.line)
@@ -335,5 +344,15 @@ func (z *zones) separatorNotice(separator byte) {
 	if separator != spaces && !z.parted {
 		z.parted = true
 		z.add(notice.New("delimiter-guessed", separatorName(separator)))
+	}
+}
+
+// commentStatement keeps what a comment before the first table states.
+func (z *zones) commentStatement() {
+	if len(z.file.Tables) > 0 {
+		return
+	}
+	if key, value, ok := statement(commentText(z.text(z.at))); ok {
+		z.state(key, value, z.reader.line)
 	}
 }

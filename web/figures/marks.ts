@@ -9,6 +9,7 @@ export interface Marks {
   data: (number | null)[][];
   thick?: number; // of the lines, px
   cap?: number; // half length of the strokes at the ends, px
+  hatch?: [number, number, number]; // of an area: direction right and down, distance of the lines in px
   itemStyle?: { color?: string; opacity?: number };
 }
 
@@ -57,23 +58,47 @@ function intervalBar(marks: Marks): Render {
   };
 }
 
-// band fills the area between rows of x, low edge, high edge. A row with a
-// missing value ends an area; the next one begins another.
+// band fills the area between rows of x, low edge, high edge, and hatches it
+// where it is asked to. A row with a missing value ends an area; the next one
+// begins another.
 function band(marks: Marks): Render {
   return (params, api) => {
     if (params.dataIndexInside !== 0) return null;
-    const children = stretches(marks.data).map((rows) => ({
-      type: 'polygon',
-      shape: {
-        points: [
-          ...rows.map((row) => api.coord([row[0], row[2]])),
-          ...[...rows].reverse().map((row) => api.coord([row[0], row[1]])),
-        ],
-      },
-      style: { fill: marks.itemStyle?.color, opacity: marks.itemStyle?.opacity ?? 1 },
-    }));
+    const children = stretches(marks.data).flatMap((rows) => {
+      const points = [
+        ...rows.map((row) => api.coord([row[0], row[2]])),
+        ...[...rows].reverse().map((row) => api.coord([row[0], row[1]])),
+      ] as Point[];
+      const style = { fill: marks.itemStyle?.color, opacity: marks.itemStyle?.opacity ?? 1 };
+      const area = { type: 'polygon', shape: { points }, style };
+      return marks.hatch ? [area, path(hatching(points, marks.hatch), marks)] : [area];
+    });
     return { type: 'group', children } as ReturnType<Render>;
   };
+}
+
+// hatching returns parallel lines within a polygon. They lie on one raster for
+// the whole figure, so that areas side by side join without a seam.
+function hatching(points: Point[], [right, down, distance]: [number, number, number]): Point[][] {
+  const length = Math.sqrt(right * right + down * down);
+  const [ux, uy] = [right / length, down / length];
+  const along = points.map(([x, y]) => x * ux + y * uy);
+  const across = points.map(([x, y]) => y * ux - x * uy);
+  const lines: Point[][] = [];
+  for (let m = Math.ceil(Math.min(...across) / distance); m * distance <= Math.max(...across); m++) {
+    const at = m * distance;
+    const cuts: number[] = [];
+    across.forEach((from, i) => {
+      const next = (i + 1) % across.length;
+      const [a, b] = [from - at, across[next] - at];
+      if (a < 0 !== b < 0) cuts.push(along[i] + ((along[next] - along[i]) * a) / (a - b));
+    });
+    cuts.sort((a, b) => a - b);
+    for (let i = 0; i + 1 < cuts.length; i += 2) {
+      lines.push([cuts[i], cuts[i + 1]].map((t): Point => [t * ux - at * uy, t * uy + at * ux]));
+    }
+  }
+  return lines;
 }
 
 // stretches returns the runs of complete rows.

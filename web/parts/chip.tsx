@@ -2,7 +2,7 @@
 // it is accepted on its own chip: Enter accepts, F2 or the space bar corrects.
 // A gap that has to be filled is hatched.
 
-import { useEffect, useRef, useState } from "preact/hooks";
+import { useLayoutEffect, useRef, useState } from "preact/hooks";
 
 import type { Entry } from "../engine/types";
 import { useDesk } from "./context";
@@ -29,7 +29,8 @@ export function Chip({ entry, bare, after }: Shown) {
   const guessed = entry.by === "guessed";
   const shown = options.find((option) => option.value === entry.value)?.label ?? entry.value;
 
-  useEffect(() => {
+  // At once, not after the next frame: who types fast must not type past the field.
+  useLayoutEffect(() => {
     if (!editing && back.current) {
       back.current = false;
       chip.current?.focus();
@@ -138,7 +139,7 @@ function Editor({ entry, enter, leave }: Editing) {
   const done = useRef(false);
   const options = list(entry.options);
 
-  useEffect(() => {
+  useLayoutEffect(() => {
     field.current?.focus();
     if (options.length === 0) {
       field.current?.select();

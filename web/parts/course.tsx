@@ -10,9 +10,10 @@ import { Exclusion, ExclusionsOf } from "./exclusion";
 import { Chip } from "./chip";
 import { useDesk } from "./context";
 import { list } from "./desk";
-import { FigureOf } from "./figure";
+import { FigureOf, FoldedFigure } from "./figure";
 import { Hatch } from "./hatch";
 import { courseOfEntry, openCourse } from "./jump";
+import { Lists } from "./lists";
 import { SourceLines } from "./source";
 import { FoldedTable } from "./table";
 import { Veil } from "./veil";
@@ -59,6 +60,7 @@ function CourseOf({ view, course, place, doubtful }: Shown) {
         {open && !veiled && <Evidence view={view} course={course} place={place} />}
         {open && veiled && place === 3 && <Veil view={view} />}
         {open && <Entries view={view} place={place} />}
+        {open && <Lists view={view} place={place} />}
       </div>
       <div class="margin">
         {!open && doubts.length > 0 ? (
@@ -100,16 +102,12 @@ function Evidence({ view, course, place }: { view: View; course: Course; place: 
       setAt(Math.min(rows.length - 1, Math.max(0, next)));
     }
   };
+  const keys = stations === undefined ? undefined : step;
+  const [first, ...further] = list(course.figures);
   const x = row === undefined ? undefined : Number(row[0]!.replace("−", "-"));
   return (
     <>
-      {list(course.figures).map(({ figure }) =>
-        stations === undefined ? (
-          <FigureOf key={figure.id} figure={figure} />
-        ) : (
-          <FigureOf key={figure.id} figure={figure} at={x} onKeyDown={step} />
-        ),
-      )}
+      {first !== undefined && <FigureOf key={first.figure.id} figure={first.figure} at={x} onKeyDown={keys} />}
       {stations !== undefined && (
         <p class="ledger" role="status">
           {row === undefined
@@ -121,6 +119,9 @@ function Evidence({ view, course, place }: { view: View; course: Course; place: 
               ))}
         </p>
       )}
+      {further.map(({ figure }) => (
+        <FoldedFigure key={figure.id} figure={figure} at={x} onKeyDown={keys} />
+      ))}
       {stations !== undefined && row !== undefined && (
         <Exclusion view={view} line={row[list(stations.head).indexOf("line")]!} asking={excluding} ask={setExcluding} />
       )}

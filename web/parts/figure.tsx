@@ -12,8 +12,8 @@ import { copyPicture, copyTable, saveAs, toPicture } from "./outlet";
 import { Table } from "./table";
 import { Words } from "./words";
 
-/** Below this the labels of a figure would meet; it is scaled instead. */
-const least = 440;
+/** Below this the labels of a figure would meet; on a narrow page it is moved under the finger instead. */
+const least = 600;
 const most = 920;
 
 interface Grid {
@@ -49,7 +49,20 @@ interface Shown {
   figure: Figure;
   /** The station that the cursor is at. */
   at?: number | undefined;
-  onKeyDown?: (event: KeyboardEvent) => void;
+  onKeyDown?: ((event: KeyboardEvent) => void) | undefined;
+}
+
+/** A second picture of a course is folded away, and drawn when it is opened. */
+export function FoldedFigure(shown: Shown) {
+  const [open, setOpen] = useState(false);
+  return (
+    <details class="folded" onToggle={(event) => setOpen(event.currentTarget.open)}>
+      <summary>
+        <Words text={shown.figure.title} />
+      </summary>
+      {open && <FigureOf {...shown} />}
+    </details>
+  );
 }
 
 export function FigureOf({ figure, at, onKeyDown }: Shown) {
@@ -91,13 +104,15 @@ export function FigureOf({ figure, at, onKeyDown }: Shown) {
       ) : (
         <div
           class={"picture" + (onKeyDown === undefined ? "" : " stepped")}
-          tabIndex={onKeyDown === undefined ? undefined : 0}
-          role={onKeyDown === undefined ? undefined : "group"}
-          aria-label={onKeyDown === undefined ? undefined : "Stations; the arrow keys go from one to the next"}
+          tabIndex={0}
+          role="group"
+          aria-label={onKeyDown === undefined ? figure.title : "Stations; the arrow keys go from one to the next"}
           onKeyDown={onKeyDown}
         >
-          <div ref={picture} role="img" aria-label={figure.alt} />
-          {place !== undefined && <span class="cursor" style={{ left: `${place * 100}%` }} />}
+          <div class="canvas">
+            <div ref={picture} role="img" aria-label={figure.alt} />
+            {place !== undefined && <span class="cursor" style={{ left: `${place * 100}%` }} />}
+          </div>
         </div>
       )}
       <figcaption>

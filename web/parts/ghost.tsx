@@ -4,7 +4,7 @@
 
 const width = 200;
 const height = 72;
-const size = 0.08;
+const size = 0.06;
 
 /** Draws from the normal distribution; the same each time. */
 function normal(): () => number {
@@ -20,8 +20,19 @@ function path(points: [number, number][]): string {
   return "M" + points.map(([x, y]) => `${(4 + x * (width - 8)).toFixed(1)} ${(12 + (1 - y) * (height - 24)).toFixed(1)}`).join("L");
 }
 
-export function Ghost({ data, common }: { data: (number | null)[][]; common: boolean }) {
-  const points = data.filter((row): row is [number, number] => row[0] !== null && row[1] !== null).sort((a, b) => a[0] - b[0]);
+interface Shown {
+  /** Points of the data, scaled to 0 to 1. */
+  data: (number | null)[][];
+  common: boolean;
+  /** Negative values are drawn upward, as in the figures of the quantity. */
+  downward: boolean;
+}
+
+export function Ghost({ data, common, downward }: Shown) {
+  const points = data
+    .filter((row): row is [number, number] => row[0] !== null && row[1] !== null)
+    .map(([x, y]): [number, number] => [x, downward ? 1 - y : y])
+    .sort((a, b) => a[0] - b[0]);
   if (points.length < 3) {
     return null;
   }

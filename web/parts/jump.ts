@@ -1,7 +1,7 @@
 // The way from a blank, a number or an open point to the place that answers it.
 
 import type { Target } from "../engine/types";
-import { narrow, type Desk } from "./desk";
+import { list, narrow, sameTarget, type Desk } from "./desk";
 
 /** The name of the place of an entry, in data-place. */
 export function placeOf(target: Target): string {
@@ -19,12 +19,12 @@ export function courseOfEntry(field: string): number {
   if (/^(requirement|choices\.k)/.test(field)) {
     return 4;
   }
-  return field === "downward" ? 3 : field === "settled" ? 0 : field === "numerical" ? 1 : 2;
+  return /^(downward|scores)/.test(field) ? 3 : field === "settled" ? 0 : field === "numerical" ? 1 : 2;
 }
 
 /** Shows the place of a target and puts the focus there; at is the course of the open point it belongs to. */
 export function jump(desk: Desk, target: Target, at?: number): void {
-  const course = courseOf(target) ?? (target.kind === "answer" ? at : undefined);
+  const course = courseOf(desk, target) ?? (target.kind === "answer" ? at : undefined);
   if (course !== undefined) {
     openCourse(desk, course);
   }
@@ -38,18 +38,26 @@ export function openCourse(desk: Desk, course: number): void {
   desk.lay({ open: desk.layout.open.map((open, i) => i === course || (open && !alone)) });
 }
 
-function courseOf(target: Target): number | undefined {
+function courseOf(desk: Desk, target: Target): number | undefined {
   switch (target.kind) {
     case "result":
       return courseOfResult[target.field] ?? 3;
     case "question":
       return courseOfEntry(target.field);
     case "source":
-      return target.field === "numerical" ? 1 : 2;
+      return courseOfSource(desk, target);
     case "course":
       return Number(target.field);
   }
-  return undefined;
+  const within = list(desk.view?.lists).find((one) => list(one.items).some((item) => list(item.entries).some((entry) => sameTarget(entry.target, target))));
+  return within?.course;
+}
+
+/** Numerical sources stand in the second course, the others in the third. */
+function courseOfSource(desk: Desk, target: Target): number {
+  const [at] = target.field.split(".");
+  const line = list(desk.view?.sources).find((source) => source.target.field === at);
+  return target.field === "numerical" || line?.of === "numerical" ? 1 : 2;
 }
 
 function find(target: Target, course: number | undefined): HTMLElement | null {

@@ -1,7 +1,7 @@
 // A sheet lies over the page until it is put away: the keys, the methods, a
 // table to type, what was found, text to copy by hand.
 
-import { useEffect, useRef, useState } from "preact/hooks";
+import { useLayoutEffect, useRef, useState } from "preact/hooks";
 import type { ComponentChildren } from "preact";
 
 import methods from "../help/methods.txt";
@@ -12,6 +12,7 @@ import { list } from "./desk";
 import { take } from "./intake";
 import { focusOn, jump } from "./jump";
 import { keys } from "./keys";
+import { Words } from "./words";
 
 export function Sheets({ view }: { view: View }) {
   const desk = useDesk();
@@ -33,14 +34,14 @@ export function Sheets({ view }: { view: View }) {
 function Sheet({ name, children }: { name: string; children: ComponentChildren }) {
   const desk = useDesk();
   const dialog = useRef<HTMLDialogElement>(null);
-  useEffect(() => dialog.current!.showModal(), []);
+  useLayoutEffect(() => dialog.current!.showModal(), []);
   return (
     <dialog ref={dialog} class="sheet" aria-label={name} onClose={() => desk.lay({ sheet: "" })}>
-      <h2>{name}</h2>
-      {children}
       <form method="dialog">
         <button class="close">put away</button>
       </form>
+      <h2>{name}</h2>
+      {children}
     </dialog>
   );
 }
@@ -70,7 +71,7 @@ function Prose({ text }: { text: string }) {
       {text
         .trim()
         .split(/\n{2,}/)
-        .map((part, i) => (part.startsWith("# ") ? <h3 key={i}>{part.slice(2)}</h3> : <p key={i}>{part.replace(/\n/g, " ")}</p>))}
+        .map((part, i) => (part.startsWith("# ") ? <h3 key={i}>{part.slice(2)}</h3> : <p key={i}><Words text={part.replace(/\n/g, " ")} /></p>))}
     </>
   );
 }
@@ -100,7 +101,7 @@ function Typing() {
       </label>
       <label class="wide">
         Table
-        <textarea rows={10} spellcheck={false} placeholder={"x [mm],Cp,u(Cp)\n0,-1.20,0.02"} value={text} onInput={(event) => setText(event.currentTarget.value)} />
+        <textarea autofocus rows={10} spellcheck={false} placeholder={"x [mm],Cp,u(Cp)\n0,-1.20,0.02"} value={text} onInput={(event) => setText(event.currentTarget.value)} />
       </label>
       <button class="do" disabled={text.trim() === ""} onClick={add}>
         Add it to the study
@@ -112,11 +113,11 @@ function Typing() {
 function ByHand() {
   const desk = useDesk();
   const area = useRef<HTMLTextAreaElement>(null);
-  useEffect(() => area.current!.select(), []);
+  useLayoutEffect(() => area.current!.select(), []);
   return (
     <Sheet name="Copy by hand">
       <p>This browser gives no clipboard to the page. The text below is selected: copy it with Ctrl+C.</p>
-      <textarea ref={area} rows={12} readOnly value={desk.byHand} aria-label="Text to copy" />
+      <textarea ref={area} autofocus rows={12} readOnly value={desk.byHand} aria-label="Text to copy" />
     </Sheet>
   );
 }
@@ -171,6 +172,7 @@ function Finder({ view }: { view: View }) {
         Look for{" "}
         <input
           type="search"
+          autofocus
           value={asked}
           onInput={(event) => setAsked(event.currentTarget.value)}
           onKeyDown={(event) => {

@@ -15,11 +15,12 @@ export function SourceLines({ view, of }: { view: View; of: string[] }) {
   const desk = useDesk();
   const lines = list(view.sources).filter((source) => of.includes(source.of));
   const data = dataOf(view);
+  const downward = list(view.question).some((entry) => entry.target.field === "downward" && entry.value === "yes");
   const id = view.reveal.id;
   return (
     <div class="sources">
       {lines.map((source, i) => (
-        <SourceLine key={i} source={source} data={data} />
+        <SourceLine key={i} source={source} data={data} downward={downward} />
       ))}
       <p class="add">
         Add a source of{" "}
@@ -50,7 +51,7 @@ function dataOf(view: View): SlipCard | undefined {
   );
 }
 
-function SourceLine({ source, data }: { source: SourceCard; data: SlipCard | undefined }) {
+function SourceLine({ source, data, downward }: { source: SourceCard; data: SlipCard | undefined; downward: boolean }) {
   const entries = new Map(list(source.entries).map((entry) => [entry.target.field.replace(/^\d+\./, ""), entry]));
   const chip = (field: string) => {
     const entry: Entry | undefined = entries.get(field);
@@ -68,7 +69,7 @@ function SourceLine({ source, data }: { source: SourceCard; data: SlipCard | und
           {chip("origin")}. <Removal what="this source" request={{ kind: "remove source", target: source.target }} />
         </p>
       )}
-      {data !== undefined && source.of === "data" && <Ghost data={list(data.sketch.own)} common={source.pattern === "common"} />}
+      {data !== undefined && source.of === "data" && <Ghost data={list(data.sketch.own)} common={source.pattern === "common"} downward={downward} />}
       {source.share !== "" && (
         <p class="share">
           <Words text={source.share} />

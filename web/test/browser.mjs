@@ -71,7 +71,7 @@ const settings = {
       "--no-sandbox", "--disable-gpu", "--disable-quic", "--no-first-run", "--disable-background-networking",
       "--disable-component-update", "--disable-sync", `--proxy-server=127.0.0.1:${port}`,
       // The browser's own calls, which are none of the page's: the time, its extensions, its accounts, its updates.
-      "--disable-features=NetworkTimeServiceQuerying", "--disable-extensions", "--gaia-url=http://127.0.0.1:9/",
+      "--disable-features=NetworkTimeServiceQuerying,AutofillServerCommunication", "--disable-extensions", "--gaia-url=http://127.0.0.1:9/",
       "--component-updater=url-source=http://127.0.0.1:9/",
     ],
   }),

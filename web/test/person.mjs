@@ -26,6 +26,11 @@ export function sharedFolder() {
   }
 }
 
+/** The log of the study, folded away or not. */
+export function log(person) {
+  return person.page.$eval(".log", (one) => one.textContent);
+}
+
 export class Person {
   /** Opens the page at the address; prepare runs in it before its own scripts. */
   static async at(browser, address, { prepare, width = 1440, height = 900 } = {}) {
@@ -104,16 +109,21 @@ export class Person {
     await this.until((before) => document.documentElement.dataset.state === "ready" && document.querySelectorAll(".slip").length !== before, before);
   }
 
-  /** Drops files made of names and texts on the page. */
+  /** Drops files on the page and waits until they are in the study. */
   async drop(files) {
-    await this.page.evaluate((files) => {
+    await this.letFall(files);
+    await this.until(() => document.documentElement.dataset.state === "ready" && document.querySelector(".message") !== null);
+  }
+
+  /** Drops files made of names and texts on the page. */
+  letFall(files) {
+    return this.page.evaluate((files) => {
       const data = new DataTransfer();
       for (const [name, text] of files) {
         data.items.add(new File([text], name));
       }
       document.body.dispatchEvent(new DragEvent("drop", { dataTransfer: data, bubbles: true, cancelable: true }));
     }, files);
-    await this.until(() => document.documentElement.dataset.state === "ready" && document.querySelector(".message") !== null);
   }
 
   slips() {
@@ -156,9 +166,7 @@ export class Person {
     if (select) {
       await this.choosePlace(value);
     } else {
-      await this.page.keyboard.down("Control");
-      await this.page.keyboard.press("a");
-      await this.page.keyboard.up("Control");
+      // What the field held is selected when it opens.
       await this.page.keyboard.type(value);
     }
     await this.page.keyboard.press("Enter");

@@ -4,53 +4,150 @@
 package main
 
 import (
+	"bytes"
 	"fmt"
 	"log"
 	"math"
+	"math/rand/v2"
 	"os"
 	"path/filepath"
+	"sort"
+	"strconv"
 	"strings"
-)
-
-// Comparison errors of the two models at the 24 taps of the upper branch,
-// which the demo locks as constants.
-var (
-	errorA = [24]float64{.0382, .0245, .0315, .0160, .0294, .0392, .0409, .0226, .0264, .0282, .0124, .0409, .0345, .0334, .0368, .0278, .0315, .0355, .0349, .0268, .0218, .0340, .0326, .0229}
-	errorB = [24]float64{.0046, .0150, .0230, .0243, .0219, .0153, -.0045, -.0092, -.0216, -.0218, -.0114, -.0056, .0083, .0154, .0235, .0233, .0131, .0006, -.0058, -.0152, -.0275, -.0239, -.0092, .0047}
 )
 
 func main() {
 	if len(os.Args) != 2 {
 		log.Fatal("make: give the folder to write into")
 	}
-	for name, text := range files() {
-		if err := os.WriteFile(filepath.Join(os.Args[1], name), []byte(text), 0o644); err != nil {
+	all := files()
+	names := make([]string, 0, len(all))
+	for name := range all {
+		names = append(names, name)
+	}
+	sort.Strings(names)
+	for _, name := range names {
+		path := filepath.Join(os.Args[1], filepath.FromSlash(name))
+		if err := os.MkdirAll(filepath.Dir(path), 0o755); err != nil {
+			log.Fatalf("make: %v", err)
+		}
+		if err := os.WriteFile(path, all[name], 0o644); err != nil {
 			log.Fatalf("make: %v", err)
 		}
 	}
 }
 
-// files returns the text of every file by name.
-func files() map[string]string {
-	var taps, a, b strings.Builder
-	taps.WriteString("# Orrowby duct, campaign OR-26, Quillet strut fairing, upper branch (invented)\nx/c,Cp,u(Cp)\n")
-	a.WriteString("x/c,Cp\n")
-	b.WriteString("x/c,Cp\n")
-	for i := range 24 {
+// files returns the bytes of every file by its name below the folder of the
+// campaign: "first" and "second" are the two deliveries.
+func files() map[string][]byte {
+	all := delivery{}
+	all.laboratory()
+	all.solvers()
+	all.monitors()
+	all.sheet()
+	return all
+}
+
+// delivery holds files by name.
+type delivery map[string][]byte
+
+func (d delivery) text(name, text string) { d[name] = []byte(text) }
+
+// rng returns the source of scatter of one file. Every file has a seed of its
+// own, so that a change of one leaves the others alone.
+func rng(seed uint64) *rand.Rand { return rand.New(rand.NewPCG(26, seed)) }
+
+// table is a text table being written.
+type table struct {
+	bytes.Buffer
+	between string
+}
+
+func newTable(between string, head ...string) *table {
+	t := &table{between: between}
+	for _, line := range head {
+		t.WriteString(line + "\n")
+	}
+	return t
+}
+
+// row writes one row.
+func (t *table) row(cells ...string) { t.WriteString(strings.Join(cells, t.between) + "\n") }
+
+// fixed writes a number with n decimals; a zero has no sign.
+func fixed(v float64, n int) string {
+	text := strconv.FormatFloat(v, 'f', n, 64)
+	if strings.Trim(text, "-0.") == "" {
+		return strings.TrimPrefix(text, "-")
+	}
+	return text
+}
+
+func integer(v int) string { return strconv.Itoa(v) }
+
+func round4(v float64) float64 { return math.Round(v*1e4) / 1e4 }
+
+// tap is one pressure tap of the fairing.
+type tap struct {
+	x, y float64 // over the chord
+	d    float64 // measured coefficient
+	s    [2]float64
+}
+
+// upperTaps are the taps of the upper branch from the leading edge on.
+func upperTaps() []tap {
+	taps := make([]tap, 24)
+	for i := range taps {
 		x := 0.02 + 0.95*math.Pow(float64(i)/23, 1.25)
 		sB := round4(-1.05*math.Exp(-math.Pow((x-0.16)/0.2, 2)) - 0.35*(1-x) + 0.28*x*x)
 		d := sB - errorB[i]
-		fmt.Fprintf(&taps, "%.4f,%.4f,0.0060\n", x, d)
-		fmt.Fprintf(&a, "%.4f,%.4f\n", x, d+errorA[i])
-		fmt.Fprintf(&b, "%.4f,%.4f\n", x, sB)
+		taps[i] = tap{x: x, y: halfThickness(x), d: d, s: [2]float64{d + errorA[i], sB}}
 	}
-	return map[string]string{
-		"C1-drag-grids.csv": "grid,cells,Cd A,Cd B\nG1,410000,0.03412,0.03155\nG2,980000,0.03287,0.03068\nG3,2350000,0.03217,0.03021\nG4,5600000,0.03178,0.02995\n",
-		"C1-balance.csv":    "# Orrowby duct, campaign OR-26, balance, five runs over three days (invented)\nrun,Cd\n1,0.02951\n2,0.02968\n3,0.02958\n4,0.02983\n5,0.02940\n",
-		"C1-taps-upper.csv": taps.String(),
-		"C1-A-G4-cp.csv":    a.String(),
-		"C1-B-G4-cp.csv":    b.String(),
-	}
+	return taps
 }
 
-func round4(v float64) float64 { return math.Round(v*1e4) / 1e4 }
+// halfThickness is the height of the fairing over its chord line.
+func halfThickness(x float64) float64 {
+	return thick / 2 * math.Sqrt(x) * (1 - x) / 0.3849001794597505 // the largest value of √x(1−x)
+}
+
+// lowerTaps are those of the lower branch from the leading edge on. The level
+// is the one for which the lift from all taps is 0.436.
+func lowerTaps() []tap {
+	const level = 0.0563
+	taps := make([]tap, 24)
+	for i := range taps {
+		x := 0.026 + 0.94*math.Pow(float64(i)/23, 1.25)
+		d := round4(0.62*math.Exp(-x/0.1) - 0.27*math.Exp(-math.Pow((x-0.34)/0.24, 2)) + 0.11*x + level)
+		taps[i] = tap{x: x, y: -halfThickness(x), d: d, s: [2]float64{d + 0.03 - 0.01*x, d + 0.012*math.Sin(7*x)}}
+	}
+	return taps
+}
+
+// loop are all taps round the fairing, from the trailing edge over the upper
+// side to the leading edge and back below.
+func loop() []tap {
+	upper := upperTaps()
+	taps := make([]tap, 0, 48)
+	for i := len(upper) - 1; i >= 0; i-- {
+		taps = append(taps, upper[i])
+	}
+	return append(taps, lowerTaps()...)
+}
+
+// tapLift is the lift coefficient that the taps give, by the trapezoid rule
+// in x from the first tap to the last.
+func tapLift() float64 {
+	sum := func(taps []tap) float64 {
+		s := 0.
+		for i := 1; i < len(taps); i++ {
+			s += (taps[i].d + taps[i-1].d) / 2 * (taps[i].x - taps[i-1].x)
+		}
+		return s
+	}
+	return sum(lowerTaps()) - sum(upperTaps())
+}
+
+func invented(line string) string { return "# " + line + " (invented)" }
+
+func runName(c, model, grid string) string { return fmt.Sprintf("%s-%s-%s", c, model, grid) }

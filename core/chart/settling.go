@@ -1,0 +1,291 @@
+package chart
+
+import (
+	"cmp"
+	"errors"
+	"fmt"
+	"math"
+	"slices"
+	"strings"
+
+	"github.com/go-echarts/go-echarts/v2/opts"
+
+	"weirmark/core/quantity"
+	"weirmark/core/settling"
+	"weirmark/core/study"
+)
+
+// Measures of the figure of monitors in px.
+const (
+	monitorHeight = 150
+	monitorGap    = 34 // between panels side by side
+)
+
+// mostMonitors is the number of panels of one figure; finer grids go first.
+const mostMonitors = 4
+
+// reach is how many times the range of the later half of a monitor its axis
+// may cover. A start that lies farther off is left outside.
+const reach = 4
+
+const (
+	windowName = "averaging window"
+	meanName   = "mean over the window"
+)
+
+// Settling returns the monitors of a cell's runs, one panel each, coarse to
+// fine: the value against iterations or time, the averaging window, and the
+// mean over it. Every panel has its own axes; a start that would leave the end
+// flat runs out of the axis, and the caption counts what is outside. It fails on
+// a cell without a monitor.
+func Settling(c study.Cell, id string, t Theme) (Figure, error) {
+	if len(c.Monitors) == 0 {
+		return Figure{}, errors.New("drawing monitors: the cell has none")
+	}
+	p, err := newPicture(t)
+	if err != nil {
+		return Figure{}, err
+	}
+	monitors := coarseToFine(c)
+	shown := monitors[max(0, len(monitors)-mostMonitors):]
+	panels := make([]monitorPanel, len(shown))
+	digits := 0
+	for i, m := range shown {
+		panels[i] = newMonitorPanel(m, len(shown) > 1)
+		digits = max(digits, panels[i].y.digits())
+	}
+	left := 20 + digitWidth*digits
+	top := topEdge + keyRow*p.keys(left, topEdge, p.monitorKeys(c, shown)) + nameRow
+	each := width - left - rightEdge
+	if len(shown) > 1 {
+		each = (width - 2*left - rightEdge - monitorGap) / 2
+	}
+	for i := range panels {
+		x := left + (i%2)*(each+left+monitorGap)
+		p.monitor(c, &panels[i], x, width-x-each, top+(i/2)*(monitorHeight+footRow+nameRow))
+	}
+	rows := 1
+	if len(shown) > 1 {
+		rows = (len(shown) + 1) / 2
+	}
+	return Figure{
+		ID: id + "-monitors", Title: "Monitors of " + subject(c) + ", " + simulation(c),
+		Caption: monitorCaption(c, shown, panels), Alt: monitorAlt(c, monitors),
+		Height: top + rows*(monitorHeight+footRow) + (rows-1)*nameRow, Table: monitorTable(c, monitors),
+	}.finish(p.option)
+}
+
+// coarseToFine returns the monitors in the order of the grid study, those of
+// grids that it does not name first.
+func coarseToFine(c study.Cell) []study.MonitorLine {
+	place := func(m study.MonitorLine) int {
+		if c.Grids != nil {
+			for i, g := range c.Grids.Points {
+				if g.Name == m.Grid {
+					return i + 1
+				}
+			}
+		}
+		return 0
+	}
+	list := slices.Clone(c.Monitors)
+	slices.SortStableFunc(list, func(a, b study.MonitorLine) int { return cmp.Compare(place(a), place(b)) })
+	return list
+}
+
+// monitorPanel is one monitor with its axes; early counts the points that lie
+// outside the axis.
+type monitorPanel struct {
+	study.MonitorLine
+	rows  [][]any
+	x, y  scale
+	early int
+}
+
+func newMonitorPanel(m study.MonitorLine, narrow bool) monitorPanel {
+	p := monitorPanel{MonitorLine: m}
+	n := min(len(m.X), len(m.Y))
+	kept := thin(n, mostMarks, func(i int) float64 { return float64(m.Y[i]) })
+	x, whole, late := newBounds(), newBounds(), newBounds()
+	for _, i := range kept {
+		p.rows = append(p.rows, []any{m.X[i], m.Y[i]})
+		x.take(float64(m.X[i]))
+		whole.take(float64(m.Y[i]))
+		if i >= n/2 || m.From.Known() && m.X[i] >= m.From {
+			late.take(float64(m.Y[i]))
+		}
+	}
+	late.take(float64(m.Mean))
+	if room := late.hi - late.lo; !late.empty() && room > 0 && whole.hi-whole.lo > float64(reach*room) {
+		margin := float64((reach - 1) / 2. * room)
+		whole = bounds{math.Max(whole.lo, late.lo-margin), math.Min(whole.hi, late.hi+margin)}
+	}
+	steps := 9
+	if narrow {
+		steps = 5
+	}
+	p.x, p.y = newScale(x, steps), newScale(whole.padded(0.05), 4)
+	for _, i := range kept {
+		if y := float64(m.Y[i]); y < p.y.Min || y > p.y.Max {
+			p.early++
+		}
+	}
+	return p
+}
+
+// along names the axis of a monitor.
+func (m *monitorPanel) along() string {
+	name := m.Axis
+	if name == "" {
+		name = study.AxisIterations
+	}
+	if m.XName != "" && !strings.HasPrefix(name, strings.ToLower(m.XName)) {
+		name = short(m.XName)
+	}
+	if m.x.Exponent != 0 {
+		name += " (10" + superscript(m.x.Exponent) + ")"
+	}
+	return name
+}
+
+// named returns the grid and the class of a monitor.
+func (m *monitorPanel) named() string { return short(gridOf(m.MonitorLine)) + ": " + m.Class }
+
+func gridOf(m study.MonitorLine) string {
+	switch {
+	case m.Grid != "":
+		return "grid " + m.Grid
+	case m.File != "":
+		return m.File
+	}
+	return "run"
+}
+
+// valueName names the values of a cell's monitors in a drawing.
+func valueName(c study.Cell) string {
+	if c.Symbol != "" {
+		return marked(short(c.Symbol))
+	}
+	return short(c.Quantity)
+}
+
+func (p *picture) monitor(c study.Cell, m *monitorPanel, left, right, top int) {
+	n := p.add(panel{
+		left: left, right: right, top: top, height: monitorHeight, x: m.x, y: m.y,
+		xName: m.along(), yName: m.named() + ", " + valueName(c) + " (" + unitText(c.Unit, m.y.Exponent) + ")",
+	})
+	// The name stands over the numbers of its own axis.
+	p.YAxis[n].NameTextStyle.Padding = []int{0, 0, 0, -digitWidth * m.y.digits()}
+	if m.From.Known() && m.To.Known() {
+		low, high := quantity.Number(m.y.Min), quantity.Number(m.y.Max)
+		p.draw(n, 1, band(windowName, shade(p.ink, outerOpacity), [][]any{{m.From, low, high}, {m.To, low, high}}))
+		if m.Mean.Known() {
+			p.draw(n, 3, series{
+				Type: "line", Name: meanName, Symbol: "none", Silent: true, Clip: true, ItemStyle: filled(p.ink),
+				LineStyle: &lineStyle{LineStyle: opts.LineStyle{Color: p.ink, Width: 1.2}, Type: limitDash},
+				Data:      [][]any{{m.From, m.Mean}, {m.To, m.Mean}},
+			})
+		}
+	}
+	p.draw(n, 2, series{
+		Type: "line", Name: monitorName(c), Symbol: "none", Clip: true, ItemStyle: filled(p.models[0]), Data: m.rows,
+		LineStyle: &lineStyle{LineStyle: opts.LineStyle{Color: p.models[0], Width: 1.2}},
+	})
+}
+
+func monitorName(c study.Cell) string { return valueName(c) + " of the run" }
+
+func (p *picture) monitorKeys(c study.Cell, shown []study.MonitorLine) []entry {
+	keys := []entry{{Name: monitorName(c), Icon: lineKey(nil), ItemStyle: filled(p.models[0])}}
+	window := func(m study.MonitorLine) bool { return m.From.Known() && m.To.Known() }
+	if slices.ContainsFunc(shown, window) {
+		keys = append(keys, entry{Name: windowName, Icon: bandKey, ItemStyle: shade(p.ink, outerOpacity)})
+	}
+	if slices.ContainsFunc(shown, func(m study.MonitorLine) bool { return window(m) && m.Mean.Known() }) {
+		keys = append(keys, entry{Name: meanName, Icon: lineKey(limitDash), ItemStyle: filled(p.ink)})
+	}
+	return keys
+}
+
+// iterative says the uncertainty of a monitor's mean.
+func iterative(m study.MonitorLine, unit string) string {
+	value, k := m.UIter()
+	switch {
+	case !value.Known():
+		return "no uncertainty"
+	case m.Class == string(settling.Unsteady):
+		return "U of the mean " + quantity.Text(float64(value), 2) + unit + " (k = " + factor(float64(k)) + ")"
+	case k.Known():
+		return "U_iter " + quantity.Text(float64(value), 2) + unit + " (k = " + factor(float64(k)) + ")"
+	}
+	return "U_iter " + quantity.Text(float64(value), 2) + unit + " (a bound, half the range)"
+}
+
+func monitorCaption(c study.Cell, shown []study.MonitorLine, panels []monitorPanel) string {
+	text := capital(subject(c)) + " against " + axesOf(panels) + ": " + simulation(c)
+	if where := setting(c); where != "" {
+		text += "; " + where
+	}
+	parts := make([]string, len(shown))
+	early := 0
+	for i, m := range shown {
+		parts[i] = gridOf(m) + " " + m.Class
+		if m.From.Known() && m.To.Known() {
+			parts[i] += ", window " + trimmed(m.From, 6) + " to " + trimmed(m.To, 6)
+		}
+		parts[i] += ", " + iterative(m, unitAfter(c))
+		early += panels[i].early
+	}
+	text += ". " + capital(strings.Join(parts, "; ")) + "."
+	if len(shown) > 1 {
+		text += " Each panel has its own scale."
+	}
+	if early > 0 {
+		text += " " + counts(early, "point lies", "points lie") + " beyond the value axis."
+	}
+	if len(shown) < len(c.Monitors) {
+		text += fmt.Sprintf(" %d of %d monitors are drawn, those of the finest grids.", len(shown), len(c.Monitors))
+	}
+	if c.Unit == "" || c.Unit == "1" {
+		return text + " Values are dimensionless."
+	}
+	return text + " Values are in " + c.Unit + "."
+}
+
+// axesOf returns "iterations", "time" or both.
+func axesOf(panels []monitorPanel) string {
+	names := []string{}
+	for i := range panels {
+		name := panels[i].Axis
+		if name == "" {
+			name = study.AxisIterations
+		}
+		if !slices.Contains(names, name) {
+			names = append(names, name)
+		}
+	}
+	return strings.Join(names, " and ")
+}
+
+func monitorAlt(c study.Cell, monitors []study.MonitorLine) string {
+	parts := make([]string, len(monitors))
+	for i, m := range monitors {
+		parts[i] = gridOf(m) + " " + m.Class
+		if m.Mean.Known() {
+			parts[i] += ", mean " + beside(m.Mean, m.U)
+		}
+	}
+	return "Monitors of " + subject(c) + ", coarse to fine: " + strings.Join(parts, "; ") + ". The numbers are in the table."
+}
+
+// monitorTable has one row per monitor: the points of the lines are in the files.
+func monitorTable(c study.Cell, monitors []study.MonitorLine) Table {
+	t := Table{Head: []string{"grid", "class", "from", "to", headUnit("mean", c.Unit), "u", "U"}, Rows: [][]string{}}
+	for _, m := range monitors {
+		value, _ := m.UIter()
+		t.Rows = append(t.Rows, []string{
+			gridOf(m), m.Class, trimmed(m.From, 6), trimmed(m.To, 6), beside(m.Mean, m.U), quantity.Text(float64(m.U), 2), quantity.Text(float64(value), 2),
+		})
+	}
+	return t
+}

@@ -1,0 +1,185 @@
+// The page with bad files, lost workers, a missing clipboard and unsaved work.
+
+import { holds, same } from "./harness.mjs";
+import { pause } from "./person.mjs";
+
+/** Makes the next clipboard call fail, as where a browser gives none. */
+const noClipboard = () => Object.defineProperty(navigator, "clipboard", { value: undefined });
+
+/** Keeps the workers of the page within reach. */
+const keepWorkers = () => {
+  window.workers = [];
+  window.Worker = class extends Worker {
+    constructor(address) {
+      super(address);
+      window.workers.push(this);
+    }
+  };
+};
+
+/** What goes wrong, and ways in that are not a plain choice of files. */
+export async function onTrouble(on, file, served) {
+  await on("names with markup are shown as text", file, async (person) => {
+    const trap = '<img src=x onerror="window.caught=1">';
+    await person.drop([[`${trap}.csv`, `${trap} [m],<b>Cp</b>\n0,1\n1,2\n2,3\n3,4\n`]]);
+    await person.acceptAll({ unit: "1" });
+    await person.page.evaluate(() => document.querySelectorAll("details").forEach((one) => (one.open = true)));
+    holds((await person.text(".tray")).includes(trap), await person.text(".tray"));
+    same(await person.page.evaluate(() => [window.caught ?? 0, document.querySelectorAll("img").length]), [0, 0], "caught and images");
+    holds((await person.page.$eval("#sentence", (one) => one.textContent)).includes("<b>Cp</b>"), await person.sentence());
+  });
+
+  await on("bad files stay in the tray with the reason", file, async (person) => {
+    await person.drop([
+      ["empty.csv", ""],
+      ["picture.png", "\u0089PNG\r\n\u001a\n\u0000\u0000\u0000\rIHDR"],
+      ["letter.txt", "Dear colleague,\nplease find nothing attached.\n"],
+    ]);
+    for (const one of ["empty.csv", "picture.png", "letter.txt"]) {
+      holds((await person.text(".tray")).includes(one), `${one} has disappeared: ${await person.text(".tray")}`);
+    }
+    const rejected = await person.text(".rejected");
+    holds(rejected.length > 60, `reasons: ${rejected}`);
+    holds((await person.sentence()).startsWith("No statement"), await person.sentence());
+  });
+
+  await on("dropping on the untouched demo begins a study, on a touched one it adds", file, async (person) => {
+    const before = await person.slips();
+    await person.goTo("k of the statement");
+    await person.fill("3");
+    await person.drop([["more.csv", "x,Cp\n0,1\n1,2\n2,3\n"]]);
+    same(await person.slips(), before + 1, "slips");
+    await person.click("the demo");
+    await person.drop([["first.csv", "x,Cp\n0,1\n1,2\n2,3\n"]]);
+    same(await person.slips(), 1, "slips");
+    holds((await person.text(".message")).includes("The demo was put aside"), await person.text(".message"));
+    same(person.dialogs, ["confirm"], "asked before the changed demo was left");
+  });
+
+  await on("text is pasted, a table is typed", file, async (person) => {
+    const withControl = async (key) => {
+      await person.page.keyboard.down("Control");
+      await person.page.keyboard.press(key);
+      await person.page.keyboard.up("Control");
+    };
+    await person.click("type a table");
+    await person.page.focus("dialog textarea");
+    await person.type("x,Cp\n0,1\n1,2\n2,3\n");
+    await withControl("a");
+    await withControl("c");
+    await person.press("Escape");
+    await withControl("v");
+    await person.until(() => document.querySelector(".slip h3")?.textContent === "pasted-1.txt");
+    await person.click("type a table");
+    await person.page.type("dialog textarea", "x,Cp\n0,1\n1,2\n");
+    await person.click("Add it to the study", "dialog");
+    await person.until(() => document.querySelectorAll(".slip").length === 2);
+    holds((await person.text(".slip h3")).includes("typed.csv"), await person.text(".slip h3"));
+  });
+
+  await on("unsaved work is asked about before a reload; then the demo is there as it came", file, async (person) => {
+    const first = await person.sentence();
+    await person.goTo("k of the statement");
+    await person.fill("3");
+    holds((await person.sentence()) !== first, "the sentence is as it was");
+    await person.page.reload();
+    await person.settle();
+    same(person.dialogs, ["beforeunload"], "asked");
+    same(await person.sentence(), first, "sentence");
+    await person.goTo("k of the statement");
+    await person.fill("3");
+    await person.click("Save the study");
+    await person.saved("study.json");
+    await person.page.reload();
+    await person.settle();
+    same(person.dialogs, ["beforeunload"], "asked once more after saving");
+  });
+
+  await on("a worker that is lost can be stopped; the study goes on as it was", file, async (person) => {
+    await person.goTo("k of the statement");
+    await person.fill("3");
+    const sentence = await person.sentence();
+    // The copy for a new start is kept once the study has rested.
+    await pause(1500);
+    await person.settle();
+    await person.page.evaluate(() => window.workers.at(-1).terminate());
+    await person.goTo("accuracy requirement ±");
+    await person.page.keyboard.press("Enter");
+    await person.page.waitForSelector("[data-editor]");
+    await person.type("7");
+    await person.page.keyboard.press("Enter");
+    await person.page.waitForFunction(() => document.body.innerText.includes("still at work"), { timeout: 10_000 });
+    const stop = await person.page.evaluateHandle(() => [...document.querySelectorAll("button")].find((one) => one.innerText === "Stop it"));
+    await stop.asElement().click();
+    await person.until(() => document.querySelector(".message")?.innerText.includes("started again") || document.querySelector(".message")?.innerText.includes("Cancelled"));
+    same(await person.sentence(), sentence, "sentence");
+    await person.goTo("accuracy requirement ±");
+    await person.fill("8");
+    holds((await person.sentence()).includes("±8 %"), await person.sentence());
+  }, { prepare: keepWorkers });
+
+  await on("tables are copied; without a clipboard the text is shown to be copied by hand", file, async (person) => {
+    await person.click("copy table");
+    await person.page.waitForSelector("dialog textarea");
+    const text = await person.page.$eval("dialog textarea", (area) => [area.value, area.selectionEnd - area.selectionStart]);
+    holds(text[0].startsWith("grid\tcells"), text[0]);
+    same(text[1], text[0].length, "selected");
+    await person.press("Escape");
+    await person.click("copy picture");
+    await person.page.waitForSelector("dialog textarea");
+    holds((await person.page.$eval("dialog textarea", (area) => area.value)).startsWith("<svg"), "the SVG");
+  }, { prepare: noClipboard });
+
+  await on("a table goes to the clipboard where there is one", served, async (person) => {
+    await person.click("copy table");
+    await person.until(() => document.querySelector(".message")?.innerText.includes("on the clipboard"));
+    same(await person.page.evaluate(() => window.copied.split("\t")[0]), "grid", "copied");
+  }, {
+    prepare: () => {
+      // What is written is seen here: reading a clipboard needs a permission that not every browser has.
+      const clipboard = globalThis.Clipboard?.prototype;
+      const write = clipboard?.writeText;
+      if (write !== undefined) {
+        clipboard.writeText = function (text) {
+          window.copied = text;
+          return write.call(this, text);
+        };
+      }
+    },
+  });
+
+  await on("40 MB are read without holding up the page", file, async (person) => {
+    const longest = await person.page.evaluate(async () => {
+      let text = "x [m],Cp,u\n";
+      for (let i = 0; i < 1_250_000; i++) {
+        text += `${(i * 1e-5).toFixed(6)},${Math.sin(i * 1e-5).toFixed(8)},${(0.01).toFixed(8)}\n`;
+      }
+      const file = new File([new TextEncoder().encode(text)], "large.csv");
+      text = "";
+      // What the making of the file leaves to tidy up is not the page's.
+      await new Promise((resolve) => setTimeout(resolve, 1500));
+      let longest = 0;
+      let last = performance.now();
+      const watch = setInterval(() => {
+        longest = Math.max(longest, performance.now() - last);
+        last = performance.now();
+      }, 1);
+      const data = new DataTransfer();
+      data.items.add(file);
+      document.body.dispatchEvent(new DragEvent("drop", { dataTransfer: data, bubbles: true, cancelable: true }));
+      await new Promise((resolve) => {
+        const wait = setInterval(() => {
+          if (document.documentElement.dataset.state === "ready" && document.querySelector(".slip h3")?.textContent === "large.csv") {
+            clearInterval(wait);
+            resolve();
+          }
+        }, 5);
+      });
+      clearInterval(watch);
+      return { longest, size: file.size };
+    });
+    holds(longest.size > 38e6, `size: ${longest.size}`);
+    holds(longest.longest < 50, `the page stood still for ${Math.round(longest.longest)} ms`);
+    return `longest wait ${Math.round(longest.longest)} ms`;
+  });
+}
