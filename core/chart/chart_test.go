@@ -81,7 +81,7 @@ func all(t *testing.T, theme Theme) []Figure {
 	for _, c := range []struct {
 		id   string
 		cell study.Cell
-	}{{"taps", taps("B", 0.004)}, {"friction", friction()}, {"drag", drag("B", 0.00035)}} {
+	}{{"taps", taps("B", 0.004)}, {"friction", friction()}, {"drag", run()}} {
 		some, err := Figures(c.cell, c.id, theme)
 		if err != nil {
 			t.Fatal(err)
@@ -95,15 +95,19 @@ func all(t *testing.T, theme Theme) []Figure {
 		}
 		figures = append(figures, f)
 	}
-	return figures
+	f, err := Overview([]study.Cell{taps("B", 0.004), friction(), drag("A", 0.0021), drag("B", 0.00035)}, theme)
+	if err != nil {
+		t.Fatal(err)
+	}
+	return append(figures, f)
 }
 
 func TestFiguresAreWhole(t *testing.T) {
 	drawn := map[string]bool{"": true, "errorBar": true, "band": true, "intervalBar": true}
 	for _, theme := range []Theme{Light, Dark, Mono} {
 		figures, again := all(t, theme), all(t, theme)
-		if len(figures) != 7 {
-			t.Fatalf("%s: %d figures, want 7", theme, len(figures))
+		if len(figures) != 11 {
+			t.Fatalf("%s: %d figures, want 11", theme, len(figures))
 		}
 		ids := map[string]bool{}
 		for i, f := range figures {
@@ -165,6 +169,10 @@ func TestSeriesCounts(t *testing.T) {
 		"drag-grids":       {2, 4, 1, 2}, // used, other, extrapolated, D; order; U, bar of D
 		"Cp-compared":      {4, 4, 6, 7}, // D, three E; three S, three zeros; bars, three times two bands
 		"C_D-compared":     {1, 2, 3, 4},
+		"friction-budget":  {2, 1, 5, 5}, // names; two seams, three leaders; data and numerical along x, three sources
+		"drag-monitors":    {3, 0, 6, 3}, // three values, three means; three windows
+		"drag-budget":      {1, 1, 7, 4}, // names; three seams, four leaders; four sources
+		"overview":         {2, 5, 6, 6}, // marks, names twice, outcomes once; zero, two limits twice; four lines, two ranges
 	}
 	for _, f := range all(t, Light) {
 		d := decode(t, f)
@@ -483,4 +491,60 @@ func TestGolden(t *testing.T) {
 		t.Fatal(err)
 	}
 	golden.Compare(t, "taps-overlay.json", append(text, '\n'))
+}
+
+func TestExcludedAreHollowAndCounted(t *testing.T) {
+	c := taps("B", 0.004)
+	c.Excluded = []study.Excluded{{X: 0.3, D: -1.2, Line: 40, Why: "blocked"}, {X: 1.3, D: 0.1, Line: 41, Why: "leak", Late: true}}
+	c.StationsAll = 26
+	f, err := Overlay(c, "x", Light)
+	if err != nil {
+		t.Fatal(err)
+	}
+	d := decode(t, f)
+	rows := d.rows(t, 0, removedName, "")
+	if len(rows) != 2 || *rows[0][0] != 0.3 || *rows[0][1] != -1.2 || d.XAxis[0].Max < 1.3 {
+		t.Errorf("excluded values %v, the axis ends at %v", rows, d.XAxis[0].Max)
+	}
+	if !strings.Contains(f.Caption, "24 of 26 stations compared, 2 excluded.") {
+		t.Errorf("caption %q", f.Caption)
+	}
+	if row := f.Table.Rows[len(f.Table.Rows)-1]; row[0] != "1.3" || row[1] != "excluded, not compared" || row[2] != "0.1" {
+		t.Errorf("last row of the table %v", row)
+	}
+	other := taps("A", 0)
+	other.Excluded = c.Excluded[:1]
+	f, err = Compared([]study.Cell{c, other}, "x", Light)
+	if err != nil {
+		t.Fatal(err)
+	}
+	if n := len(decode(t, f).rows(t, 0, removedName, "")); n != 2 {
+		t.Errorf("%d excluded values under two models, want 2", n)
+	}
+}
+
+func TestConditionsThatDifferAreNamed(t *testing.T) {
+	for _, row := range []struct {
+		of   study.Compared
+		want string
+	}{
+		{study.Compared{Name: "α", Unit: "°", Simulation: 4, Data: 4.2, Effect: quantity.None}, "Not the same on both sides: α 4 against 4.2°."},
+		{study.Compared{Name: "M", Simulation: 0.2, Data: 0.21, Effect: quantity.None, Handling: study.Corrected}, "Not the same on both sides: M 0.2 against 0.21."},
+		{study.Compared{Name: "M", Simulation: 0.2, Data: 0.21, Effect: 0.1, Handling: study.Corrected}, ""},
+		{study.Compared{Name: "M", Simulation: 0.2, Data: 0.21, Effect: quantity.None, Handling: study.Tolerated, Why: "low speed"}, ""},
+		{study.Compared{Name: "M", Simulation: 0.2, Data: 0.2, Effect: quantity.None}, ""},
+	} {
+		c := drag("B", 0)
+		c.Conditions = []study.Compared{row.of}
+		if got := unlike(c); got != row.want {
+			t.Errorf("%+v: %q, want %q", row.of, got, row.want)
+		}
+		f, err := Intervals(c, "x", Light)
+		if err != nil {
+			t.Fatal(err)
+		}
+		if strings.Contains(f.Caption, "Not the same") != (row.want != "") {
+			t.Errorf("caption %q", f.Caption)
+		}
+	}
 }

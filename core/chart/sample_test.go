@@ -80,6 +80,7 @@ func friction() study.Cell {
 		c.Curve.X = append(c.Curve.X, file(rounded(x)))
 		c.Curve.Y = append(c.Curve.Y, file(rounded(shape(x)+0.0003*math.Sin(x)+0.0003*math.Exp(-(x-5.5)*(x-5.5)))))
 	}
+	c.Sources = frictionSources()
 	c.Grids = &study.Grids{
 		Along: true, Points: make([]study.GridPoint, 3), Dimension: 2, Formal: 2, Order: 1.87, Monotone: 25, NonMonotone: 6,
 		OrderLow: 0.31, OrderHigh: 11.2, Extrapolated: quantity.None, U: quantity.None,
@@ -93,6 +94,43 @@ func friction() study.Cell {
 			l.Order = 11.2
 		}
 		c.Grids.Local = append(c.Grids.Local, l)
+	}
+	return c
+}
+
+// frictionSources is the budget of friction: shares of the mean u_val squared.
+func frictionSources() []study.SourceLine {
+	return []study.SourceLine{
+		{Name: "reading of the oil film", Of: study.OfData, U: 0.00016, Share: 0.82},
+		{Name: "wall shear balance", Of: study.OfData, U: 0.00005, Share: 0.08},
+		{Name: "grid", Of: study.OfNumerical, U: 0.00005, Share: 0.1},
+		{Name: "interpolation to the stations", Of: study.OfNumerical, U: 0, Share: 0},
+	}
+}
+
+// history is a monitor of 400 iterations that comes from a far start and then
+// swings about its mean.
+func history(grid, class string, mean, half float64) study.MonitorLine {
+	m := study.MonitorLine{
+		Grid: grid, File: grid + ".dat", Axis: study.AxisIterations, XName: "iteration", Class: class, Mean: number(mean), U: number(half / 1.7),
+		From: 201, To: 400, HalfRange: number(half),
+	}
+	for i := range 400 {
+		m.X = append(m.X, number(float64(i+1)))
+		m.Y = append(m.Y, number(rounded(mean+0.02*math.Exp(-float64(i)/15)+half*math.Sin(float64(i)/4))))
+	}
+	return m
+}
+
+// run is drag with the monitors of its three finest grids and its sources.
+func run() study.Cell {
+	c := drag("B", 0.00035)
+	c.Monitors = []study.MonitorLine{
+		history("G4", "settled", 0.02995, 0.00002), history("G2", "settled", 0.03068, 0.00002), history("G3", "cycling", 0.03021, 0.00012),
+	}
+	c.Sources = []study.SourceLine{
+		{Name: "balance", Of: study.OfData, U: 0.0004, Share: 0.46}, {Name: "angle, speed, turbulence", Of: study.OfInput, U: 0.00025, Share: 0.18},
+		{Name: "grid", Of: study.OfNumerical, U: 0.00036, Share: 0.35}, {Name: "iteration", Of: study.OfNumerical, U: 0.00006, Share: 0.01},
 	}
 	return c
 }

@@ -17,7 +17,7 @@ import (
 
 // Measures of the figure of monitors in px.
 const (
-	monitorHeight = 150
+	monitorHeight = 124
 	monitorGap    = 34 // between panels side by side
 )
 

@@ -222,7 +222,10 @@ func unlike(c study.Cell) string {
 			continue
 		}
 		unit := ""
-		if m.Unit != "" && m.Unit != "1" {
+		switch {
+		case strings.HasPrefix(m.Unit, "°"):
+			unit = m.Unit
+		case m.Unit != "" && m.Unit != "1":
 			unit = " " + m.Unit
 		}
 		names = append(names, fmt.Sprintf("%s %s against %s%s", m.Name, trimmed(m.Simulation, 6), trimmed(m.Data, 6), unit))

@@ -168,7 +168,10 @@ func coverages() []Option {
 }
 
 // sketchPoints is the number of points of a sketch.
-const sketchPoints = 80
+const sketchPoints = 60
+
+// mostOthers is the number of other curves a sketch is drawn beside.
+const mostOthers = 4
 
 // sketch draws the columns of a slip beside the other slips of its question.
 func (s *Session) sketch(p *study.Slip, t tablefile.Table) Sketch {
@@ -176,7 +179,7 @@ func (s *Session) sketch(p *study.Slip, t tablefile.Table) Sketch {
 	var others [][][2]float64
 	for i := range s.study.Slips {
 		o := &s.study.Slips[i]
-		if o.ID == p.ID || o.Case.Value != p.Case.Value || o.Quantity.Value != p.Quantity.Value || len(others) == 8 {
+		if o.ID == p.ID || o.Case.Value != p.Case.Value || o.Quantity.Value != p.Quantity.Value || len(others) == mostOthers {
 			continue
 		}
 		if f := s.study.File(o.File); f != nil {
@@ -231,7 +234,7 @@ func scaled(list [][2]float64, box [4]float64) [][2]study.Number {
 		if hi == lo {
 			return 0.5
 		}
-		return study.Number(quantity.Round((v-lo)/(hi-lo), 4))
+		return study.Number(math.Round(1000*(v-lo)/(hi-lo)) / 1000)
 	}
 	for _, at := range list {
 		out = append(out, [2]study.Number{unit(at[0], box[0], box[1]), unit(at[1], box[2], box[3])})

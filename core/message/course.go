@@ -4,6 +4,7 @@ import (
 	"strconv"
 	"strings"
 
+	"weirmark/core/chart"
 	"weirmark/core/notice"
 	"weirmark/core/quantity"
 	"weirmark/core/refinement"
@@ -21,10 +22,7 @@ func courses(c *study.Cell, figures []CellFigure, veiled bool) []Course {
 		{Question: "What can be said?", Answer: sayAnswer(c), Numbers: sayNumbers(c), Tables: sayTables(c)},
 	}
 	for _, f := range figures {
-		at := 3
-		if isGridFigure(f.Figure) {
-			at = 1
-		}
+		at := courseOfFigure(f.Figure)
 		list[at].Figures = append(list[at].Figures, f)
 	}
 	if veiled {
@@ -53,6 +51,19 @@ func courses(c *study.Cell, figures []CellFigure, veiled bool) []Course {
 		}
 	}
 	return list
+}
+
+// courseOfFigure tells the course of a figure by the end of its name.
+func courseOfFigure(f chart.Figure) int {
+	switch _, kind, _ := strings.Cut(f.ID, "-"); kind {
+	case "monitors":
+		return 0
+	case "grids":
+		return 1
+	case "budget":
+		return 2
+	}
+	return 3
 }
 
 // notes are the notices of a course that are not open points already.

@@ -11,40 +11,39 @@ import (
 
 // DemoReceived returns the campaign as it came: every file of the first
 // delivery was dropped. What the campaign sheet states (which file is what,
-// requirements, conditions, some uncertainties) is stated; columns are guesses,
-// and what no one stated is open.
+// requirements, conditions, some uncertainties) is stated; columns of the
+// laboratory are guesses, and what no one stated is open.
 func DemoReceived(read func(study.File) tablefile.File) *study.Study {
 	s := study.New()
 	entries, err := fs.ReadDir(duct.Files, "first")
 	if err != nil {
 		panic("message: the demo lacks its first delivery")
 	}
+	files := map[string]tablefile.File{}
 	for _, entry := range entries {
 		f := demoFile("first/" + entry.Name())
-		s.Add(f.Name, f.Data, read(f), "")
+		files[f.Name] = read(f)
+		s.Add(f.Name, f.Data, files[f.Name], "")
 	}
 	proposed := s.Slips
 	s.Slips, s.Questions = nil, receivedQuestions()
 	demoSetting(s)
-	uses := receivedUses()
 	taken := map[string]bool{}
-	for _, use := range uses {
-		key := use.file + " " + use.table
-		for i := range proposed {
-			p := proposed[i]
-			if s.File(p.File).Name != base(use.file) || p.Table != use.table {
-				continue
+	for _, use := range receivedUses() {
+		for _, p := range proposed {
+			if name := s.File(p.File).Name; name == base(use.file) && p.Table == use.table {
+				table, err := files[name].Table(p.Table)
+				if err != nil {
+					panic("message: the demo lacks a table of " + name)
+				}
+				taken[p.ID] = true
+				use.state(&p, table)
+				s.Slips = append(s.Slips, p)
 			}
-			if taken[key] {
-				p.ID = "" // a second use of the table
-			}
-			taken[key] = true
-			use.state(&p)
-			s.Slips = append(s.Slips, p)
 		}
 	}
-	for i := range proposed { // tables the sheet says nothing of
-		if p := proposed[i]; !taken["first/"+s.File(p.File).Name+" "+p.Table] {
+	for _, p := range proposed { // tables the sheet says nothing of
+		if !taken[p.ID] {
 			p.Role = study.Field{Value: study.Unused, By: study.Stated}
 			s.Slips = append(s.Slips, p)
 		}
@@ -53,9 +52,11 @@ func DemoReceived(read func(study.File) tablefile.File) *study.Study {
 	return s
 }
 
-// state sets what the sheet states of a use; columns and their units stay as
-// they were proposed, unless another column of the table is meant.
-func (use demoUse) state(p *study.Slip) {
+// state sets what the sheet states of a use. Columns stay as they were
+// proposed unless another one is meant; of the solvers' tables the sheet names
+// them. A unit is stated where the file states it, or where a solver's column
+// is a pure number.
+func (use demoUse) state(p *study.Slip, table tablefile.Table) {
 	stated := func(text string) study.Field {
 		if text == "" {
 			return study.Field{}
@@ -64,35 +65,34 @@ func (use demoUse) state(p *study.Slip) {
 	}
 	p.Role, p.Case, p.Quantity = stated(use.role), stated(use.case_), stated(use.quantity)
 	p.Model, p.Grid, p.Cells = stated(use.model), stated(use.grid), stated(demoCells[use.grid])
+	solver := use.role != study.Reference
 	aim := func(c *study.ColumnUse, column string) {
 		if c.Column.Value != column {
 			*c = study.ColumnUse{}
 			if column != "" {
 				c.Column = study.Field{Value: column, By: study.Guessed}
+				if found, err := table.Column(column); err == nil {
+					c.Unit = stated(found.Unit)
+				}
+			}
+		}
+		if c.Column.Given() && solver {
+			c.Column.By = study.Stated
+			if !c.Unit.Given() || c.Unit.Open() {
+				c.Unit = stated("1")
 			}
 		}
 	}
 	aim(&p.X, use.x)
 	aim(&p.Y, use.y)
 	aim(&p.U, use.u)
-	aim(&p.Size, use.size)
-	unit := func(c *study.ColumnUse, text string) {
-		if c.Column.Given() && !c.Unit.Given() && text != "" {
-			c.Unit = stated(text)
-		}
+	if p.U.Column.Given() && !p.U.Unit.Given() {
+		p.U.Unit = p.Y.Unit
 	}
-	unit(&p.X, use.xUnit)
-	unit(&p.Y, use.yUnit)
-	if p.Role.Value == study.Monitor {
+	p.Size = study.ColumnUse{Column: stated(use.size)}
+	p.Axis = study.Field{}
+	if use.role == study.Monitor {
 		p.Axis = stated(study.AxisIterations)
-	}
-	// The solvers' sheets name the columns; those of the laboratory are guesses.
-	if p.Role.Value != study.Reference {
-		for _, f := range []*study.Field{&p.X.Column, &p.Y.Column, &p.Size.Column, &p.X.Unit, &p.Y.Unit} {
-			if f.Open() {
-				f.By = study.Stated
-			}
-		}
 	}
 }
 

@@ -82,6 +82,7 @@ type Session struct {
 	selected string
 	theme    string
 	read     map[string]tablefile.File // by hash and name
+	memory   study.Memory              // of the last evaluation
 	notices  []notice.Notice           // of opening the study
 }
 

@@ -36,7 +36,7 @@ type CellFigure struct {
 
 // report evaluates the study of the session.
 func (s *Session) report() study.Report {
-	return study.Evaluate(s.study, study.Options{Read: s.readOnce, Alternatives: true})
+	return study.Evaluate(s.study, study.Options{Read: s.readOnce, Alternatives: true, Memory: &s.memory})
 }
 
 // results evaluates the study: the report, the statements, and the figures as
@@ -84,10 +84,17 @@ func statements(report *study.Report) []CellStatement {
 	return list
 }
 
-// figuresOf draws every cell, and the models of a question together where
-// there are several.
+// figuresOf draws the overview of several cells, which is of no case, then every
+// cell, and the models of a question together where there are several.
 func figuresOf(report *study.Report, theme chart.Theme) ([]CellFigure, error) {
 	list := []CellFigure{}
+	if intervals(report.Cells) > 1 {
+		f, err := chart.Overview(report.Cells, theme)
+		if err != nil {
+			return nil, err
+		}
+		list = append(list, CellFigure{Figure: f})
+	}
 	for i := range report.Cells {
 		if i > 0 && sameQuestion(&report.Cells[i-1], &report.Cells[i]) {
 			continue
@@ -128,13 +135,27 @@ func figuresOfQuestion(report *study.Report, at int, theme chart.Theme) ([]CellF
 			return nil, err
 		}
 		for _, f := range figures {
-			if shared && !isGridFigure(f) {
+			if shared && courseOfFigure(f) == comparison {
 				continue
 			}
 			list = append(list, CellFigure{c.Case, c.Quantity, c.Model, f})
 		}
 	}
 	return list, nil
+}
+
+// comparison is the course of the figures that show E.
+const comparison = 3
+
+// intervals counts the cells that state an interval of the model error.
+func intervals(cells []study.Cell) int {
+	n := 0
+	for _, c := range cells {
+		if !c.Withheld && c.Summary != nil && c.Summary.Tested > 0 {
+			n++
+		}
+	}
+	return n
 }
 
 func sameQuestion(a, b *study.Cell) bool { return a.Case == b.Case && a.Quantity == b.Quantity }

@@ -7,9 +7,21 @@ import (
 	"weirmark/core/study"
 )
 
-// demo opens the demo study.
+// demo opens the demo campaign: as received, worked through, or with one byte
+// altered for a checker.
 func demo(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
-	s.start(Demo(), nil)
+	switch q.Value {
+	case "received":
+		s.start(DemoReceived(s.readOnce), nil)
+	case "worked":
+		s.start(DemoWorked(), nil)
+	case "review":
+		s.start(DemoReview(), nil)
+	case "": // one case of it, worked through
+		s.start(Demo(), nil)
+	default:
+		return nil, notice.New("request-kind", "demo "+q.Value)
+	}
 	return show(s, q, r)
 }
 

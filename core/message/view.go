@@ -2,9 +2,7 @@ package message
 
 import (
 	"strconv"
-	"strings"
 
-	"weirmark/core/chart"
 	"weirmark/core/notice"
 	"weirmark/core/sentence"
 	"weirmark/core/study"
@@ -385,9 +383,4 @@ func people(s *study.Study) []Entry {
 		entry("approved.name", "Approved by", s.Approved.Name, ""),
 		entry("approved.date", "on", s.Approved.Date, "date"),
 	}
-}
-
-// isGridFigure tells the grid study from the comparison by its name.
-func isGridFigure(f chart.Figure) bool {
-	return strings.HasSuffix(f.ID, "-grids")
 }

@@ -68,14 +68,15 @@ func Veiled(c *study.Cell) Statement {
 	return Statement{Withheld, w.phrases}
 }
 
-// writer collects phrases; neighbouring plain words are one phrase.
+// writer collects phrases; neighbouring plain words are one phrase, numbers
+// stand apart.
 type writer struct {
 	cell    *study.Cell
 	phrases []study.Phrase
 }
 
 func (w *writer) say(text string) {
-	if n := len(w.phrases); n > 0 && w.phrases[n-1].Mark == study.Plain && w.phrases[n-1].Target == nil {
+	if n := len(w.phrases); n > 0 && w.phrases[n-1].Mark == study.Plain && w.phrases[n-1].Target == nil && w.phrases[n-1].Value == nil {
 		w.phrases[n-1].Text += text
 		return
 	}
@@ -86,9 +87,36 @@ func (w *writer) mark(text, mark string, target study.Target) {
 	w.phrases = append(w.phrases, study.Phrase{Text: text, Mark: mark, Target: &target})
 }
 
+// figure is a number of the report: its place in the cell, its value, and its
+// text. Over is the place of what a percentage is taken of.
+type figure struct {
+	path, over string
+	value      study.Number
+	text       string
+}
+
+// of returns a figure that is a value of the report itself.
+func of(path string, value study.Number, text string) figure { return figure{path, "", value, text} }
+
+// counted returns a whole number of the report.
+func counted(path string, n int) figure { return of(path, study.Number(n), strconv.Itoa(n)) }
+
 // number says a computed number and the part of the page that shows it.
-func (w *writer) number(text, where string) {
-	w.mark(text, study.FigureOf, study.Target{Kind: "result", ID: w.cell.Case + "|" + w.cell.Quantity + "|" + w.cell.Model, Field: where})
+func (w *writer) number(f figure, where string) {
+	w.mark(f.text, study.FigureOf, w.result(where))
+	w.holds(f)
+}
+
+// value says a number of the report as plain words.
+func (w *writer) value(f figure) {
+	w.phrases = append(w.phrases, study.Phrase{Text: f.text})
+	w.holds(f)
+}
+
+// holds notes that the last phrase is a number of the report.
+func (w *writer) holds(f figure) {
+	p := &w.phrases[len(w.phrases)-1]
+	p.Path, p.Over, p.Value = f.path, f.over, &f.value
 }
 
 // blank says a missing item, or the text where it is there. The open point
@@ -216,22 +244,25 @@ func (w *writer) difference() {
 	c := w.cell
 	if c.Scalar && len(c.Stations) == 1 {
 		s := c.Stations[0]
+		e := of("stations.0.e", s.E, quantity.Signed(float64(s.E), 3))
 		if c.InPercent() {
-			w.number(quantity.SignedPercent(float64(s.E)/absolute(float64(s.D)))+" %", "agreement")
-			return
+			e = w.scaled("e", s.E, true)
 		}
-		w.number(quantity.Signed(float64(s.E), 3)+c.UnitSuffix(), "agreement")
+		w.number(e, "agreement")
+		w.say(w.unit())
 		return
 	}
-	w.number(quantity.Signed(float64(c.Summary.Bias), 3)+c.UnitSuffix(), "agreement")
-	w.say(" on average over " + stations(c.Summary.N))
+	w.number(of("summary.bias", c.Summary.Bias, quantity.Signed(float64(c.Summary.Bias), 3)), "agreement")
+	w.say(c.UnitSuffix() + " on average over ")
+	w.value(counted("summary.n", c.Summary.N))
+	w.say(stationsWord(c.Summary.N))
 }
 
-func stations(n int) string {
+func stationsWord(n int) string {
 	if n == 1 {
-		return "1 station"
+		return " station"
 	}
-	return strconv.Itoa(n) + " stations"
+	return " stations"
 }
 
 func absolute(v float64) float64 {
@@ -245,15 +276,15 @@ func absolute(v float64) float64 {
 func (w *writer) scalar() {
 	c := w.cell
 	s := c.Stations[0]
-	e, u := w.scaled(s.E, true), w.scaled(s.UVal, false)
+	e := w.scaled("e", s.E, true)
 	w.say(": E = ")
 	w.number(e, "agreement")
-	w.say(" against u_val = ")
-	w.number(u, "uncertainty")
+	w.say(w.unit() + " against u_val = ")
+	w.number(w.scaled("u_val", s.UVal, false), "uncertainty")
+	w.say(w.unit())
 	w.kNum()
 	w.say(". ")
 	k := entered(c.Choices.K)
-	e = strings.TrimLeft(e, "+−")
 	switch s.Reading {
 	case study.SignResolved:
 		side := "above"
@@ -266,31 +297,46 @@ func (w *writer) scalar() {
 	case study.Between:
 		w.say("E lies between u_val and " + k + " u_val; its sign is not resolved; the model error lies within ")
 	default:
-		w.say("|E| = " + e + " does not exceed u_val. The model error is not distinguishable from the combined numerical, input and experimental uncertainty. This does not show that it is small; it lies within ")
+		w.say("|E| = " + strings.TrimLeft(e.text, "+−") + w.unit() + " does not exceed u_val. The model error is not distinguishable from the combined numerical, input and experimental uncertainty. This does not show that it is small; it lies within ")
 	}
-	w.number(study.IntervalText(c, s), "agreement")
-	w.say(" (k = " + k + "). ")
+	w.number(w.scaled("lo", s.Lo, true), "agreement")
+	if c.InPercent() {
+		w.say(w.unit())
+	}
+	w.say(" to ")
+	w.number(w.scaled("hi", s.Hi, true), "agreement")
+	w.say(w.unit() + " (k = " + k + "). ")
 }
 
 func (w *writer) result(field string) study.Target {
 	return study.Target{Kind: "result", ID: w.cell.Case + "|" + w.cell.Quantity + "|" + w.cell.Model, Field: field}
 }
 
-// scaled prints a difference of a scalar in percent or in its unit.
-func (w *writer) scaled(v study.Number, signed bool) string {
+// scaled returns a difference of a scalar in percent of |D| or in its unit,
+// without the unit.
+func (w *writer) scaled(name string, v study.Number, signed bool) figure {
 	c := w.cell
 	s := c.Stations[0]
-	if c.InPercent() {
+	path := "stations.0." + name
+	switch {
+	case c.InPercent() && signed:
 		f := float64(v) / absolute(float64(s.D))
-		if signed {
-			return quantity.SignedPercent(f) + " %"
-		}
-		return quantity.Percent(f) + " %"
+		return figure{path, "stations.0.d", study.Number(100 * f), quantity.SignedPercent(f)}
+	case c.InPercent():
+		f := float64(v) / absolute(float64(s.D))
+		return figure{path, "stations.0.d", study.Number(100 * f), quantity.Percent(f)}
+	case signed:
+		return of(path, v, quantity.SignedLike(float64(v), float64(s.UVal), 2))
 	}
-	if signed {
-		return quantity.SignedLike(float64(v), float64(s.UVal), 2) + c.UnitSuffix()
+	return of(path, v, quantity.Text(float64(v), 2))
+}
+
+// unit returns what stands behind a scaled difference.
+func (w *writer) unit() string {
+	if w.cell.InPercent() {
+		return " %"
 	}
-	return quantity.Text(float64(v), 2) + c.UnitSuffix()
+	return w.cell.UnitSuffix()
 }
 
 // kNum says the factor between the grid uncertainty and u_num, an assumption
@@ -301,6 +347,7 @@ func (w *writer) kNum() {
 	}
 	w.say(" (k_num = ")
 	w.mark(entered(w.cell.Choices.KNum), study.Assumed, study.Target{Kind: "question", ID: w.cell.Case + "|" + w.cell.Quantity, Field: "choices.k_num"})
+	w.holds(of("choices.k_num", study.Number(w.cell.Choices.KNum), ""))
 	w.say(")")
 }
 
@@ -310,16 +357,23 @@ func (w *writer) curve() {
 	s := c.Summary
 	k := entered(c.Choices.K)
 	w.say(" at ")
-	w.number(strconv.Itoa(s.N)+" of "+stations(c.StationsAll), "stations")
-	w.say(": mean E = ")
-	w.number(quantity.Signed(float64(s.Bias), 3)+c.UnitSuffix(), "agreement")
-	w.say(", root mean square ")
-	w.number(quantity.Text(float64(s.RMSE), 3)+c.UnitSuffix(), "agreement")
+	w.number(counted("summary.n", s.N), "stations")
+	w.say(" of ")
+	w.value(counted("stations_all", c.StationsAll))
+	w.say(stationsWord(c.StationsAll) + ": mean E = ")
+	w.number(of("summary.bias", s.Bias, quantity.Signed(float64(s.Bias), 3)), "agreement")
+	w.say(c.UnitSuffix() + ", root mean square ")
+	w.number(of("summary.rmse", s.RMSE, quantity.Text(float64(s.RMSE), 3)), "agreement")
+	w.say(c.UnitSuffix())
 	w.kNum()
 	w.say("; |E| exceeds " + k + " u_val at ")
-	w.number(strconv.Itoa(s.Tested-s.WithinKUVal)+" of "+strconv.Itoa(s.Tested), "agreement")
-	w.say(" (" + quantity.Text(float64(s.BeyondChance), 2) + " expected by chance), largest |E|/u_val ")
-	w.number(quantity.Text(float64(s.MaxRatio), 3), "agreement")
+	w.mark(strconv.Itoa(s.Tested-s.WithinKUVal), study.FigureOf, w.result("agreement"))
+	w.say(" of ")
+	w.value(counted("summary.tested", s.Tested))
+	w.say(" (")
+	w.value(of("summary.beyond_chance", s.BeyondChance, quantity.Text(float64(s.BeyondChance), 2)))
+	w.say(" expected by chance), largest |E|/u_val ")
+	w.number(of("summary.max_ratio", s.MaxRatio, quantity.Text(float64(s.MaxRatio), 3)), "agreement")
 	w.say(". ")
 	w.joint(k)
 }
@@ -332,9 +386,13 @@ func (w *writer) joint(k string) {
 		w.say("No joint statistic is available. ")
 		return
 	}
-	w.say("Over n = " + strconv.Itoa(j.N) + " the joint statistic is ")
-	w.number(quantity.Text(float64(j.Statistic), 3), "joint")
-	w.say(" (95 % point " + quantity.Text(float64(j.Reference), 3) + ") with " + j.Pattern + " correlation: it ")
+	w.say("Over n = ")
+	w.value(counted("joint.n", j.N))
+	w.say(" the joint statistic is ")
+	w.number(of("joint.statistic", j.Statistic, quantity.Text(float64(j.Statistic), 3)), "joint")
+	w.say(" (95 % point ")
+	w.value(of("joint.reference", j.Reference, quantity.Text(float64(j.Reference), 3)))
+	w.say(") with " + j.Pattern + " correlation: it ")
 	w.mark(exceedsWord(j.Exceeds), study.WordOf, w.result("joint"))
 	w.say(" its 95 % point. ")
 	if !j.Offset.Known() {
@@ -342,13 +400,17 @@ func (w *writer) joint(k string) {
 	}
 	w.say("Offset ")
 	u := float64(j.UOffset)
-	w.number(quantity.SignedLike(float64(j.Offset), u, 3)+" ± "+quantity.Like(u, u, 3)+c.UnitSuffix(), "joint")
+	w.number(of("joint.offset", j.Offset, quantity.SignedLike(float64(j.Offset), u, 3)), "joint")
+	w.say(" ± ")
+	w.value(of("joint.u_offset", j.UOffset, quantity.Like(u, u, 3)))
 	resolved := " (standard), not resolved at k = "
 	if j.OffsetResolved {
 		resolved = " (standard), resolved at k = "
 	}
-	w.say(resolved + k + "; the remainder, ")
-	w.number(quantity.Text(float64(j.Remainder), 3)+" on "+strconv.Itoa(j.RemainderN), "joint")
+	w.say(c.UnitSuffix() + resolved + k + "; the remainder, ")
+	w.number(of("joint.remainder", j.Remainder, quantity.Text(float64(j.Remainder), 3)), "joint")
+	w.say(" on ")
+	w.value(counted("joint.remainder_n", j.RemainderN))
 	w.say(", ")
 	w.mark(exceedsWord(j.RemainderExceeds), study.WordOf, w.result("joint"))
 	w.say(" its 95 % point. ")
@@ -374,15 +436,17 @@ func (w *writer) requirement() {
 	if r.Outcome == "" {
 		return
 	}
-	limit := "±" + quantity.Text(float64(r.Limit), 4) + c.UnitSuffix()
+	limit, unit := of("requirement.limit", r.Limit, quantity.Text(float64(r.Limit), 4)), c.UnitSuffix()
 	if r.Percent.Known() {
-		limit = "±" + entered(float64(r.Percent)) + " %"
+		limit, unit = of("requirement.percent", r.Percent, entered(float64(r.Percent))), " %"
 	}
 	if by := strings.Join(nonEmpty(r.Who, r.Date), ", "); by != "" {
-		limit += " (" + by + ")"
+		unit += " (" + by + ")"
 	}
 	words := map[string]string{study.Shown: "shown", study.NotMet: "refuted", study.NotResolved: "neither shown nor refuted"}
-	w.say("That the model error stays within " + limit + " is ")
+	w.say("That the model error stays within ±")
+	w.value(limit)
+	w.say(unit + " is ")
 	w.mark(words[r.Outcome], study.WordOf, w.result("adequacy"))
 	w.say(" at k = " + entered(c.Choices.K) + ", under the stated uncertainties, at " + setPoints(c) + " only. ")
 	w.resolve(r)
@@ -401,10 +465,11 @@ func (w *writer) resolve(r *study.Judgement) {
 		return
 	}
 	w.say("To resolve, with E unchanged: u_val ≤ ")
-	w.number(quantity.Text(float64(r.UValNeeded), 3)+w.cell.UnitSuffix(), "adequacy")
+	w.number(of("requirement.u_val_needed", r.UValNeeded, quantity.Text(float64(r.UValNeeded), 3)), "adequacy")
+	w.say(w.cell.UnitSuffix())
 	if r.UNumNeeded.Known() {
 		w.say(", e.g. u_num reduced by ")
-		w.number(quantity.Percent(float64(r.UNumReduction))+" %", "adequacy")
+		w.number(of("requirement.u_num_reduction", r.UNumReduction, quantity.Percent(float64(r.UNumReduction))+" %"), "adequacy")
 	}
 	w.say(". ")
 }
@@ -436,7 +501,7 @@ func (w *writer) changes() {
 		if i > 0 {
 			w.say("; ")
 		}
-		w.number(f.Change, "fragility")
+		w.mark(f.Change, study.FigureOf, w.result("fragility"))
 		w.say(" (" + f.What + " → ")
 		w.mark(f.Outcome, study.WordOf, w.result("fragility"))
 		if f.Detail != "" {
@@ -452,7 +517,7 @@ func (w *writer) rests() {
 	if !w.cell.Provisional {
 		return
 	}
-	w.say("Provisional: rests on ")
+	w.say("Provisional while these are open: ")
 	for i, o := range w.cell.Open {
 		if i > 0 {
 			w.say(", ")

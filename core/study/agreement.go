@@ -216,7 +216,9 @@ func (w *work) lookAround(j *Joint, e []float64, budget uncertainty.Budget) {
 		j.ScaleResolved = exceeds(math.Abs(d.Scale), float64(w.choices.K*d.UScale))
 	}
 	found := w.cell.Summary.Tested - w.cell.Summary.WithinKUVal
-	if c, err := comparison.BeyondByChance(budget, w.choices.K, found, samplingSeed); err == nil {
+	if found == 0 {
+		j.AtLeast = 1
+	} else if c, err := comparison.BeyondByChance(budget, w.choices.K, found, samplingSeed); err == nil {
 		j.AtLeast = Number(c.AtLeast)
 	}
 	if len(e) <= mostTurned {

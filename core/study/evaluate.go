@@ -4,6 +4,7 @@ import (
 	"strconv"
 
 	"weirmark/core/notice"
+	"weirmark/core/settling"
 	"weirmark/core/tablefile"
 )
 
@@ -18,6 +19,9 @@ type Options struct {
 	// Alternatives asks for the list of choices that would change an outcome;
 	// every one evaluates its cell again.
 	Alternatives bool
+	// Memory, where a host keeps one, saves what did not change since the
+	// evaluation before.
+	Memory *Memory
 }
 
 // Read reads the bytes of a file.
@@ -28,6 +32,7 @@ type evaluation struct {
 	study   *Study
 	options Options
 	files   map[string]tablefile.File // by ID; only those whose bytes have their recorded hash
+	judged  map[judgedSeries]settling.Monitor
 }
 
 // Evaluate returns everything that can be said of a study. It is a pure
@@ -37,7 +42,7 @@ func Evaluate(s *Study, options Options) Report {
 	if options.Read == nil {
 		options.Read = Read
 	}
-	e := &evaluation{study: s, options: options, files: map[string]tablefile.File{}}
+	e := &evaluation{study: s, options: options, files: map[string]tablefile.File{}, judged: map[judgedSeries]settling.Monitor{}}
 	r := Report{
 		Title: s.Title, Purpose: s.Purpose, Edition: Edition,
 		Files: []FileLine{}, Cells: []Cell{}, Differences: []Difference{}, Notices: []notice.Notice{},
@@ -45,13 +50,18 @@ func Evaluate(s *Study, options Options) Report {
 		Log: append([]Entry{}, s.Log...),
 	}
 	e.readFiles(&r)
+	if m := options.Memory; m != nil {
+		m.begin()
+		defer m.end()
+		e.judged = m.judged
+	}
 	for i := range s.Questions {
 		q := &s.Questions[i]
 		if !s.asked(q) {
 			continue // its tables are gone or belong to another question now
 		}
 		for _, model := range s.models(q) {
-			r.Cells = append(r.Cells, e.cell(q, model))
+			r.Cells = append(r.Cells, e.remembered(q, model))
 		}
 	}
 	e.differences(&r)
@@ -68,7 +78,7 @@ func Alternatives(s *Study, options Options, c *Cell) []Fragility {
 	if options.Read == nil {
 		options.Read = Read
 	}
-	e := &evaluation{study: s, options: options, files: map[string]tablefile.File{}}
+	e := &evaluation{study: s, options: options, files: map[string]tablefile.File{}, judged: map[judgedSeries]settling.Monitor{}}
 	e.readFiles(&Report{})
 	return e.fragile(q, c.Model, *c)
 }

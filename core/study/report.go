@@ -42,10 +42,12 @@ type Phrase struct {
 	Text   string  `json:"text"`
 	Mark   string  `json:"mark"`
 	Target *Target `json:"target"` // where a blank, guess or number comes from; null for plain words
-	// Of a phrase that is one number of the report: where it stands in the
-	// cell, such as "joint.statistic", and its value.
-	Path  string           `json:"path,omitempty"`
-	Value *quantity.Number `json:"value,omitempty"`
+	// Of a phrase that is one number of the report: where it stands in the cell,
+	// such as "joint.statistic", and the value there. Where Over names another
+	// place, the value is the first in percent of the magnitude of the second.
+	Path  string  `json:"path,omitempty"`
+	Over  string  `json:"over,omitempty"`
+	Value *Number `json:"value,omitempty"`
 }
 
 // FileLine names a source.

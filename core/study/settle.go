@@ -6,6 +6,7 @@ import (
 	"strings"
 
 	"weirmark/core/notice"
+	"weirmark/core/quantity"
 	"weirmark/core/settling"
 )
 
@@ -88,7 +89,7 @@ func (w *work) judgeMonitor(c *curve) {
 	}
 	opt := w.settlingOptions()
 	opt.Name, opt.Time = name, p.Axis.Value == AxisTime
-	m := settling.Judge(settling.Series{At: c.x, Value: values}, opt)
+	m := w.e.judge(c, values, opt)
 	finest := p.Grid.Value == w.cell.Grid
 	w.cell.Monitors = append(w.cell.Monitors, w.monitorLine(c, values, m))
 	blocked := false
@@ -144,6 +145,26 @@ func (w *work) settlingOptions() settling.Options {
 		opt.Scale, opt.E = math.Abs(w.s[0]), w.s[0]-w.d[0]
 	}
 	return opt
+}
+
+// judgedSeries names a judgement: the same columns of the same bytes, read in
+// the same units, under the same options.
+type judgedSeries struct {
+	hash, table, x, y string
+	xUnit, yUnit      quantity.Unit
+	opt               settling.Options
+}
+
+// judge judges a monitor once for equal ingredients.
+func (e *evaluation) judge(c *curve, values []float64, opt settling.Options) settling.Monitor {
+	p := c.slip
+	key := judgedSeries{e.files[p.File].SHA256, p.Table, p.X.Column.Value, p.Y.Column.Value, c.xUnit.unit, c.yUnit.unit, opt}
+	if m, known := e.judged[key]; known {
+		return m
+	}
+	m := settling.Judge(settling.Series{At: c.x, Value: values}, opt)
+	e.judged[key] = m
+	return m
 }
 
 // finding lists a notice of another package: a stop that no one has answered

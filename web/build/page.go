@@ -90,6 +90,26 @@ func makeParts(root, entry, corePath string) (*parts, error) {
 	return &parts{script: front[".js"], style: front[".css"], worker: worker[".js"], core: core}, nil
 }
 
+// wordy lists packages that make text or are asked once in a while. Inlining
+// makes their code larger and nothing visibly faster: without it the page is
+// 0.2 MB smaller. What reads, resamples and compares is left alone.
+var wordy = []string{
+	"weirmark/core/memo", "weirmark/core/chart", "weirmark/core/sentence", "weirmark/core/message", "weirmark/core/study",
+	"weirmark/core/settling", "weirmark/core/plausibility", "weirmark/core/notice",
+	"github.com/gocarina/gocsv", "mime/multipart", "net/textproto", "regexp", "regexp/syntax", "encoding/xml", "encoding/json",
+	"archive/zip", "time", "fmt", "reflect", "gonum.org/v1/gonum/lapack/gonum", "gonum.org/v1/gonum/mat",
+}
+
+// small returns the compiler flags that leave inlining out of the wordy
+// packages.
+func small() []string {
+	var flags []string
+	for _, name := range wordy {
+		flags = append(flags, "-gcflags="+name+"=-l")
+	}
+	return flags
+}
+
 // bundle returns what an entry point comes to, by the ending of the file.
 func bundle(root, entry string) (map[string]string, error) {
 	folder, err := filepath.Abs(root)
@@ -147,7 +167,7 @@ func buildCore(root, corePath string) ([]byte, error) {
 	}
 	defer os.RemoveAll(folder)
 	name := filepath.Join(folder, "core.wasm")
-	build := exec.Command("go", "build", "-tags", "noasm", "-trimpath", "-ldflags=-s -w", "-o", name, corePath)
+	build := exec.Command("go", append(append([]string{"build", "-tags", "noasm", "-trimpath", "-ldflags=-s -w"}, small()...), "-o", name, corePath)...)
 	build.Dir = root
 	build.Env = append(os.Environ(), "GOOS=js", "GOARCH=wasm")
 	build.Stderr = os.Stderr

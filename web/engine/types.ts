@@ -345,6 +345,8 @@ export interface Cell {
   balances: BalanceLine[] | null;
   grids: Grids | null;
   sources: SourceLine[] | null;
+  degrees: number | null;
+  k_95: number | null;
   requirement: Judgement | null;
   fragile: Fragility[] | null;
   curve: Curve;
@@ -386,6 +388,9 @@ export interface Phrase {
   text: string;
   mark: string;
   target: Target | null;
+  path?: string;
+  over?: string;
+  value?: number;
 }
 
 export interface Open {
@@ -516,6 +521,15 @@ export interface Joint {
   remainder_reference: number | null;
   remainder_exceeds: boolean;
   offset_resolved: boolean;
+  scale: number | null;
+  u_scale: number | null;
+  scale_part: number | null;
+  shape_part: number | null;
+  shape_n: number;
+  scale_resolved: boolean;
+  at_least: number | null;
+  turns: Turning[] | null;
+  without: Leaving[] | null;
 }
 
 export interface ScoreLine {
@@ -648,6 +662,21 @@ export interface BoardCell {
 }
 
 export type Method = string;
+
+export interface Turning {
+  source: string;
+  rho: number | null;
+  at_0: number | null;
+  at_1: number | null;
+}
+
+export interface Leaving {
+  region: string;
+  statistic: number | null;
+  n: number;
+  reference: number | null;
+  exceeds: boolean;
+}
 
 export interface CriterionLine {
   name: string;

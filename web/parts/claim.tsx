@@ -70,8 +70,14 @@ export function Claim({ view, next }: { view: View; next(): void }) {
 
 /** The sentence in two lines while the reader is further down. */
 function Pinned({ view, phrases, next }: { view: View; phrases: Phrase[]; next(): void }) {
+  const { message } = useDesk();
   return (
     <div class="pinned">
+      {message !== "" && (
+        <p class="told" aria-hidden="true">
+          {message}
+        </p>
+      )}
       <p aria-hidden="true">
         {phrases.map((phrase, i) => (
           <PhraseOf key={i} phrase={phrase} bare />

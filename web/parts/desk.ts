@@ -177,9 +177,9 @@ export class Desk {
     return done;
   }
 
-  /** Opens the demo. */
-  async demo(): Promise<void> {
-    this.#begin(await this.change({ kind: "demo" }), true);
+  /** Opens a demo by its name; the empty one is the first that is shown. */
+  async demo(value = ""): Promise<void> {
+    this.#begin(await this.change({ kind: "demo", value }), true);
   }
 
   /** Begins an empty study. */

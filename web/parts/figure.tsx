@@ -90,10 +90,26 @@ export function FigureOf({ figure, at, onKeyDown }: Shown) {
   useLayoutEffect(() => {
     if (width === 0 || table) {
       last.current = "";
-    } else if (last.current !== key) {
+      return;
+    }
+    if (last.current === key) {
+      return;
+    }
+    const drawNow = () => {
       last.current = key;
       picture.current!.innerHTML = drawn(figure, width, "page-" + figure.id);
+    };
+    if (last.current === "") {
+      drawNow();
+      return;
     }
+    // A picture that is there already is redrawn once the words are on screen.
+    let timer: ReturnType<typeof setTimeout> | undefined;
+    const frame = requestAnimationFrame(() => (timer = setTimeout(drawNow)));
+    return () => {
+      cancelAnimationFrame(frame);
+      clearTimeout(timer);
+    };
   }, [key, table]);
 
   const place = at === undefined || width === 0 ? undefined : across(figure, width, at);

@@ -49,7 +49,9 @@ export function Work() {
       <p>
         <button onClick={() => void saveStudy(desk)}>Save the study</button>
         {desk.unsaved ? " (it has changes)" : ""}, <button onClick={() => document.current!.click()}>open one</button>, begin{" "}
-        <button onClick={() => mayLeave(desk) && void desk.blank()}>a new one</button>, or see <button onClick={() => mayLeave(desk) && void desk.demo()}>the demo</button>.
+        <button onClick={() => mayLeave(desk) && void desk.blank()}>a new one</button>, or see <button onClick={() => mayLeave(desk) && void desk.demo()}>the demo</button>: one case, its whole campaign{" "}
+        <button onClick={() => mayLeave(desk) && void desk.demo("received")}>as received</button> or{" "}
+        <button onClick={() => mayLeave(desk) && void desk.demo("worked")}>worked through</button>.
         <input
           ref={document}
           id="study"

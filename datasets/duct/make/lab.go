@@ -45,7 +45,7 @@ func (d delivery) taps() {
 // laboratory: tap 9 stands twice with two values, and tap 17 slipped by a
 // factor of ten.
 func tapRepeat(repeat int, taps []tap, flawed bool) *table {
-	t := newTable(",", invented(campaign+", C1, pressure taps, repeat "+integer(repeat)), "# u is 0.25 % of full scale ("+integer(fullSpan)+" Pa)", "tap,x [mm],y [mm],p-p_ref [Pa],u(p)")
+	t := newTable(",", invented(campaign+", C1, pressure taps, repeat "+integer(repeat)), "# u is 0.25 % of full scale ("+integer(fullSpan)+" Pa)", "tap,x [mm],y [mm],p-p_ref [Pa],u(p) [%]")
 	r := rng(uint64(repeat))
 	for i, at := range taps {
 		p := dynamic*at.d + 3*r.NormFloat64()

@@ -1,0 +1,83 @@
+package study
+
+import (
+	"encoding/json"
+
+	"weirmark/core/settling"
+)
+
+// Memory keeps the cells of one evaluation for the next, so that a change
+// evaluates only what it touches. A cell is taken from it when everything it
+// is made of is the same: the result is that of a fresh evaluation.
+type Memory struct {
+	cells  map[string]Cell
+	next   map[string]Cell
+	judged map[judgedSeries]settling.Monitor
+}
+
+// ingredients is everything that a cell is made of.
+type ingredients struct {
+	Question    *Question
+	Model       string
+	Slips       []*Slip
+	Files       []string // hash and name of the file of each slip; empty where it was not used
+	Cases       []Card
+	Application []Condition
+	Conditions  [][]Matching // of all questions, where a point of application is stated
+	Alternative bool
+}
+
+// key returns a text that is equal for equal ingredients.
+func (e *evaluation) key(q *Question, model string) string {
+	in := ingredients{Question: q, Model: model, Cases: e.study.Cases, Application: e.study.Application, Alternative: e.options.Alternatives}
+	for i := range e.study.Slips {
+		p := &e.study.Slips[i]
+		if p.Case.Value != q.Case || p.Quantity.Value != q.Quantity {
+			continue
+		}
+		in.Slips = append(in.Slips, p)
+		file := ""
+		if f, used := e.files[p.File]; used {
+			file = f.SHA256 + " " + f.Name
+		}
+		in.Files = append(in.Files, file)
+	}
+	if len(e.study.Application) > 0 {
+		for i := range e.study.Questions {
+			in.Conditions = append(in.Conditions, e.study.Questions[i].Conditions)
+		}
+	}
+	text, err := json.Marshal(in)
+	if err != nil {
+		return "" // a number that is not finite: such a cell is evaluated anew
+	}
+	return string(text)
+}
+
+// remembered evaluates a cell, or takes it from memory.
+func (e *evaluation) remembered(q *Question, model string) Cell {
+	m := e.options.Memory
+	if m == nil {
+		return e.cell(q, model)
+	}
+	key := e.key(q, model)
+	c, known := m.cells[key]
+	if !known || key == "" {
+		c = e.cell(q, model)
+	}
+	m.next[key] = c
+	return c
+}
+
+// mostJudged is the number of judged monitors above which all are forgotten.
+const mostJudged = 2000
+
+// begin and end bound an evaluation: cells it did not ask for are forgotten.
+func (m *Memory) begin() {
+	m.next = map[string]Cell{}
+	if m.judged == nil || len(m.judged) > mostJudged {
+		m.judged = map[judgedSeries]settling.Monitor{}
+	}
+}
+
+func (m *Memory) end() { m.cells, m.next = m.next, nil }
