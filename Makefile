@@ -1,6 +1,6 @@
 # Every target is one question; the comment above it asks it.
 .DEFAULT_GOAL := help
-.PHONY: help tools setup build page edge run test reference bench clean
+.PHONY: help tools setup build page edge run test reference bench clean demo-data fixtures
 
 # One set of floating-point bits on every host: no assembly in the numeric libraries.
 GO_BUILD := go build -tags noasm -trimpath
@@ -9,7 +9,7 @@ PYTHON ?= /usr/bin/python3
 
 # What can I ask?
 help:
-	@awk '/^# [^(]/{question=substr($$0,3)} /^[a-z]+:/{sub(":.*",""); printf "make %-10s %s\n",$$0,question}' Makefile
+	@awk '/^# [^(]/{question=substr($$0,3)} /^[a-z-]+:/{sub(":.*",""); printf "make %-10s %s\n",$$0,question}' Makefile
 
 # Are Go, Node, npm and the others here? (as root on Debian they are installed)
 tools:
@@ -51,6 +51,16 @@ test: build
 reference:
 	@.ci/packages figures
 	$(PYTHON) testdata/published/reference.py
+
+# Do the demo files still come out of their program, byte for byte?
+demo-data:
+	go run ./datasets/duct/make datasets/duct
+	test -z "$$(git status --porcelain -- datasets/duct)"
+
+# Can LibreOffice and openpyxl make the workbooks of the tests anew?
+fixtures:
+	@.ci/packages fixtures
+	PYTHON=$(PYTHON) core/tablefile/testdata/workbook/fixtures.sh
 
 # How fast is it, beside pandas, numpy and scipy on the same input?
 bench:

@@ -2,6 +2,7 @@ package memo
 
 import (
 	"fmt"
+	"slices"
 
 	"weirmark/core/study"
 )
@@ -34,7 +35,7 @@ func assumptions(in Input) []assumption {
 		for _, p := range s.Phrases {
 			if p.Mark == study.Guess || p.Mark == study.Assumed || p.Mark == study.Missing {
 				add(key{s.Case, s.Quantity, s.Model}, assumption{Kind: p.Mark, What: p.Text,
-					Where: say("statement, case {}, {}, model {}", text(s.Case), text(s.Quantity), text(s.Model))})
+					Where: say("{}, {}, {}", text(s.Case), text(s.Quantity), text(s.Model))})
 			}
 		}
 	}
@@ -42,12 +43,12 @@ func assumptions(in Input) []assumption {
 		for _, source := range c.Sources {
 			if source.Open {
 				add(key{c.Case, c.Quantity, ""}, assumption{Kind: study.Guess, What: "uncertainty source: " + source.Name,
-					Where: say("case {}, {}", text(c.Case), text(c.Quantity))})
+					Where: say("{}, {}", text(c.Case), text(c.Quantity))})
 			}
 		}
 	}
 	for i, c := range in.Report.Cells {
-		add(key{c.Case, c.Quantity, ""}, assumption{Kind: chosen, Value: choices(i, c), Where: say("case {}, {}", text(c.Case), text(c.Quantity))})
+		add(key{c.Case, c.Quantity, ""}, assumption{Kind: chosen, Value: choices(i, c), Where: say("{}, {}", text(c.Case), text(c.Quantity))})
 	}
 	return all
 }
@@ -79,13 +80,22 @@ func (b *builder) assumptionSection() Node {
 		s.Nodes = append(s.Nodes, paragraph(text("None is recorded.")))
 		return s
 	}
-	rows := make([]Node, len(b.assumed))
+	var rows []Node
 	for i, a := range b.assumed {
-		what := a.Value
+		first := slices.IndexFunc(b.assumed, func(o assumption) bool { return o.Kind == a.Kind && o.What == a.What && a.What != "" })
+		if first >= 0 && first < i {
+			continue
+		}
+		what, where := a.Value, a.Where
 		if a.What != "" {
 			what = typeset(a.What)
+			for _, o := range b.assumed[i+1:] {
+				if o.Kind == a.Kind && o.What == a.What {
+					where = append(append(where, text("; ")), o.Where...)
+				}
+			}
 		}
-		rows[i] = row(figureCell(text(fmt.Sprint(i+1))), cell(text(a.Kind)), cell(what...), cell(a.Where...))
+		rows = append(rows, row(figureCell(text(fmt.Sprint(len(rows)+1))), cell(text(a.Kind)), cell(what...), cell(where...)))
 	}
 	s.Nodes = append(s.Nodes, b.table("plain", say("What the statements rest on and no computation gave."), headRow("#No.", "Kind", "What", "Where"), rows...))
 	return s

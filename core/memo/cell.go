@@ -24,13 +24,23 @@ func (b *builder) comparisons() Node {
 
 func (b *builder) cell(i int, c study.Cell) Node {
 	s := b.openWith(2, cellID(i), names(c)...)
+	b.lacking = nil
 	for _, part := range [][]Node{
-		b.compared(i, c), b.figuresOf(c.Case, c.Quantity, c.Model), b.stations(i, c), b.excluded(i, c), b.measures(i, c),
-		b.joint(i, c), b.crossings(i, c), b.grids(i, c), b.sources(i, c), b.requirement(i, c), b.fragility(c), b.openPoints(c),
+		b.compared(i, c), b.conditions(i, c), b.figuresOf(c, ""), b.stations(i, c), b.excluded(i, c), b.measures(i, c), b.scores(i, c),
+		b.joint(i, c), b.crossings(i, c), b.settling(i, c), b.grids(i, c), b.sources(i, c), b.requirement(i, c), b.openPoints(c),
 	} {
 		s.Nodes = append(s.Nodes, part...)
 	}
+	if len(b.lacking) > 0 {
+		s.Nodes = append(s.Nodes, note(typeset(strings.Join(b.lacking, " "))...))
+	}
 	return s
+}
+
+// lacks notes what a cell has not.
+func (b *builder) lacks(sentence string) []Node {
+	b.lacking = append(b.lacking, sentence)
+	return nil
 }
 
 var kinds = map[string]string{
@@ -70,27 +80,44 @@ func (b *builder) compared(i int, c study.Cell) []Node {
 	if c.Scalar {
 		of = plural(len(c.Stations), "value")
 	}
-	range1 := say("{} of {}", text(of), count(c.StationsAll, at("stations_all")))
+	points := say("{} of {}", text(of), count(c.StationsAll, at("stations_all")))
 	if c.StationsAll == 0 {
-		range1 = []Node{text(of)}
+		points = []Node{text(of)}
 	}
 	if lines := linesOf(c.Stations); lines != "" {
-		range1 = append(range1, text(", "+lines+" of the reference file"))
+		points = append(points, text(", "+lines+" of the reference file"))
 	}
-	files := []Node{text("Not provided")}
+	files := "Not provided"
 	if len(c.FilesUsed) > 0 {
-		files = []Node{text(strings.Join(b.fileNames(c.FilesUsed), ", "))}
+		files = strings.Join(b.fileNames(c.FilesUsed), ", ")
 	}
-	return []Node{sheet(
-		line(say("Condition"), given(c.Condition)),
-		line(say("Simulation"), say("model {}, grid {}", given(c.Model), given(c.Grid))...),
-		line(say("Reference"), say("{}; kind: {}; use: {}", given(c.Reference), given(word(kinds, c.Kind)), given(word(uses, c.Use)))...),
-		line(say("Unit"), text(unitOf(c.Unit))),
-		line(say("Compared at"), range1...),
-		line(say("Files"), files...),
-		line(say("Choices"), choices(i, c)...),
+	nodes := []Node{sheet(
+		line(say("Simulation"), say("model {}, grid {}; condition {}; unit: {}", given(c.Model), given(c.Grid), given(c.Condition), text(unitOf(c.Unit)))...),
+		line(say("Reference"), append(say("{}; kind: {}; use: {}; ", given(c.Reference), given(word(kinds, c.Kind)), given(word(uses, c.Use))), points...)...),
+		line(say("Files"), text(files)),
 		line(say("Evidence"), text(strings.Join(evidence, "; "))),
 	)}
+	if words := claim(c); words != "" {
+		nodes = append(nodes, note(text(words)))
+	}
+	return nodes
+}
+
+// claim says what the kind and the use of the reference do to the claim.
+func claim(c study.Cell) string {
+	words := ""
+	switch c.Kind {
+	case study.KindLaw:
+		words = "The reference is a law: it holds in its own range, and its uncertainty is that of the law there."
+	case study.KindCorrelation:
+		words = "The reference is a correlation: the scatter of the data behind it belongs to its uncertainty."
+	case study.KindSimulation:
+		words = "The reference is another simulation: this says nothing of the error against measurement."
+	}
+	if c.Use == study.UseTuning {
+		words = strings.TrimSpace(words + " These data were used to set the model: agreement here is fit quality.")
+	}
+	return words
 }
 
 // linesOf returns the span of the reference lines.
@@ -174,7 +201,7 @@ func (b *builder) measures(i int, c study.Cell) []Node {
 	} else {
 		rows = append(rows, line(say("Against the uncertainty"), say("not available: *u*_{val} is not known")...))
 	}
-	return []Node{heading("Difference measures"), sheet(rows...)}
+	return []Node{heading("Difference measures"), pairs(rows...)}
 }
 
 // joint prints the statistic of all stations together and its parts.
@@ -185,7 +212,7 @@ func (b *builder) joint(i int, c study.Cell) []Node {
 	title := heading("All stations together")
 	j := c.Joint
 	if j == nil {
-		return []Node{title, paragraph(text("No joint statistic is available for this cell."))}
+		return b.lacks("No joint statistic is available for this cell.")
 	}
 	at := func(name string) string { return fmt.Sprintf("cells.%d.joint.%s", i, name) }
 	against := func(exceeds bool) Node {
@@ -202,26 +229,49 @@ func (b *builder) joint(i int, c study.Cell) []Node {
 			row(cell(text("\u2003remainder")), figureCell(hundredths(j.Remainder, at("remainder"))), figureCell(count(j.RemainderN, at("remainder_n"))),
 				figureCell(hundredths(j.RemainderReference, at("remainder_reference"))), cell(against(j.RemainderExceeds))))
 	}
+	if known(j.ScalePart) {
+		rows = append(rows,
+			row(cell(text("\u2003\u2003of which a scale")), figureCell(hundredths(j.ScalePart, at("scale_part"))), figureCell(text("1")), figureCell(text("")), cell()),
+			row(cell(text("\u2003\u2003shape")), figureCell(hundredths(j.ShapePart, at("shape_part"))), figureCell(count(j.ShapeN, at("shape_n"))), figureCell(text("")), cell()))
+	}
 	nodes := []Node{title, b.table("plain", say("Joint statistic over {} with correlation: {}.", text(plural(len(c.Stations), "station")), given(j.Pattern)),
 		headRow("", "#Value", "#Degrees of freedom", "#95 % point", "Reading"), rows...)}
 	words := say("The tail probability at the stated uncertainties is {}.", digits(j.P, 2, at("p_value")))
-	if known(j.Offset) {
-		resolved := "not resolved"
-		if j.OffsetResolved {
-			resolved = "resolved"
+	resolution := func(yes bool) string {
+		if yes {
+			return "resolved"
 		}
+		return "not resolved"
+	}
+	if known(j.Offset) {
 		words = append(words, say(" The common offset of *E* is ")...)
 		words = append(words, withUnit(signedBeside(j.Offset, j.UOffset, at("offset")), c.Unit)...)
 		words = append(words, text(" ± "))
 		words = append(words, withUnit(digits(j.UOffset, 2, at("u_offset")), c.Unit)...)
-		words = append(words, text(" (standard), "+resolved+" at this level."))
+		words = append(words, text(" (standard), "+resolution(j.OffsetResolved)+" at this level."))
 	}
-	nodes = append(nodes, paragraph(words...))
+	if known(j.Scale) {
+		words = append(words, say(" With a scale beside it, *E* = *a* + *b* *S*, *b* is {} ± {}, {}.",
+			signedBeside(j.Scale, j.UScale, at("scale")), digits(j.UScale, 2, at("u_scale")), text(resolution(j.ScaleResolved)))...)
+	}
+	if known(j.AtLeast) {
+		words = append(words, say(" At least as many stations beyond *k* *u*_{val} as found have a probability of {}, by sampling.", digits(j.AtLeast, 2, at("at_least")))...)
+	}
 	if known(j.Independent, j.NumShared) {
-		nodes = append(nodes, paragraph(say("Other correlations of the same sources: with every source independent between stations the statistic is {}; with the numerical uncertainty fully shared it is {}.",
-			hundredths(j.Independent, at("independent")), hundredths(j.NumShared, at("num_shared")))...))
+		words = append(words, say(" Other correlations: {} with every source independent between stations, {} with the numerical uncertainty fully shared.",
+			hundredths(j.Independent, at("independent")), hundredths(j.NumShared, at("num_shared")))...)
 	}
-	return nodes
+	for n, turn := range j.Turns {
+		of := func(name string) string { return fmt.Sprintf(at("turns.%d.%s"), n, name) }
+		words = append(words, say(" The reading turns where the correlation of {} is {} ({} when independent, {} when fully shared).",
+			text(turn.Source), digits(turn.Rho, 3, of("rho")), hundredths(turn.At0, of("at_0")), hundredths(turn.At1, of("at_1")))...)
+	}
+	for n, left := range j.Without {
+		of := func(name string) string { return fmt.Sprintf(at("without.%d.%s"), n, name) }
+		words = append(words, say(" Without {}: {} on {}, 95 % point {}, {}.", text(left.Region), hundredths(left.Statistic, of("statistic")), count(left.N, of("n")),
+			hundredths(left.Reference, of("reference")), against(left.Exceeds))...)
+	}
+	return append(nodes, paragraph(words...))
 }
 
 // crossings lists the changes of sign of a curve.
@@ -229,9 +279,9 @@ func (b *builder) crossings(i int, c study.Cell) []Node {
 	if len(c.Crossings.Simulation)+len(c.Crossings.Reference) == 0 {
 		return nil
 	}
-	side := func(name, key string, list []study.Crossing) Node {
+	side := func(key string, list []study.Crossing) []Node {
 		if len(list) == 0 {
-			return line(say(name), text("none"))
+			return []Node{text("none")}
 		}
 		var nodes []Node
 		for j, x := range list {
@@ -244,17 +294,19 @@ func (b *builder) crossings(i int, c study.Cell) []Node {
 			}
 			nodes = append(append(nodes, withUnit(trimmed(x.X, 5, fmt.Sprintf("cells.%d.crossings.%s.%d.x", i, key, j)), c.XUnit)...), text(way))
 		}
-		return line(say(name), nodes...)
+		return nodes
 	}
-	return []Node{heading("Zero crossings"), sheet(side("Simulation", "sim", c.Crossings.Simulation), side("Reference", "ref", c.Crossings.Reference)),
-		note(text("Linear between neighbours of opposite sign. No uncertainty of the position is given."))}
+	words := append([]Node{strong("Zero crossings"), text(", linear between neighbours, without an uncertainty of the position: simulation ")}, side("sim", c.Crossings.Simulation)...)
+	words = append(append(words, text(", reference ")), side("ref", c.Crossings.Reference)...)
+	return []Node{paragraph(append(words, text("."))...)}
 }
 
 // sources prints the uncertainty budget.
 func (b *builder) sources(i int, c study.Cell) []Node {
-	title := heading("Uncertainty sources")
+	figures := b.figuresOf(c, "budget")
 	if len(c.Sources) == 0 {
-		return []Node{title, paragraph(text("No source is recorded. Blank is not zero."))}
+		b.lacks("No source is recorded. Blank is not zero.")
+		return figures
 	}
 	rows := make([]Node, len(c.Sources))
 	for j, s := range c.Sources {
@@ -266,27 +318,25 @@ func (b *builder) sources(i int, c study.Cell) []Node {
 		rows[j] = row(cell(name), cell(text(s.Of)), cell(text(s.Text)), figureCell(digits(s.U, 2, at("u"))), figureCell(percent(s.Share, at("share"))), cell(text(s.Pattern)), cell(text(s.Origin)))
 	}
 	caption := say("Uncertainty sources, {}. *u* is standard, for curves its root mean square over the stations; the share is of the mean *u*_{val}^{2}.", text(unitOf(c.Unit)))
-	return []Node{title, b.table("plain", caption, headRow("Source", "Of", "As entered", "#*u*", "#Share", "Pattern", "Origin"), rows...)}
+	nodes := []Node{heading("Uncertainty sources"), b.table("plain", caption, headRow("Source", "Of", "As entered", "#*u*", "#Share", "Pattern", "Origin"), rows...)}
+	return append(nodes, figures...)
 }
 
-// requirement prints the requirement, its outcome and what would resolve it.
+// requirement prints the requirement, its outcome, what would resolve it, and
+// the choices that change a word.
 func (b *builder) requirement(i int, c study.Cell) []Node {
-	title := heading("Requirement")
 	q := c.Requirement
 	if q == nil {
-		return []Node{title, paragraph(text("None is recorded: adequacy is not judged."))}
+		b.lacks("No requirement is recorded: adequacy is not judged.")
+		return b.fragility(c)
 	}
 	at := func(name string) string { return fmt.Sprintf("cells.%d.requirement.%s", i, name) }
-	words := append(b.requirementWords(i, c), text("."))
-	if q.Late {
-		words = append(words, text(" It was recorded after the comparison had been seen."))
-	}
+	words := append(b.requirementWords(i, c), text("."+late(c)))
 	if !c.Scalar && q.At.Known() {
 		words = append(words, say(" The deciding station is {} = ", given(c.XName))...)
 		words = append(words, withUnit(trimmed(q.At, 4, at("at")), c.XUnit)...)
 		words = append(words, text("."))
 	}
-	nodes := []Node{title, paragraph(words...)}
 	var needed []Node
 	if q.UValNeeded.Known() {
 		needed = append(needed, say("With *E* unchanged it would be shown at *u*_{val} ≤ ")...)
@@ -302,29 +352,29 @@ func (b *builder) requirement(i int, c study.Cell) []Node {
 		needed = append(needed, text("."))
 	}
 	if len(needed) > 0 {
-		nodes = append(nodes, paragraph(append([]Node{strong("To resolve: ")}, needed...)...))
+		words = append(append(words, text(" "), strong("To resolve: ")), needed...)
 	}
-	return nodes
+	return append([]Node{heading("Requirement"), paragraph(words...)}, b.fragility(c)...)
 }
 
 // fragility prints the alternatives that change the outcome word.
 func (b *builder) fragility(c study.Cell) []Node {
-	title := heading("Choices that change the outcome")
 	if len(c.Fragile) == 0 {
-		return []Node{title, paragraph(text("None of the alternatives that were tried changes an outcome word."))}
+		return b.lacks("None of the alternatives that were tried changes an outcome word.")
 	}
 	rows := make([]Node, len(c.Fragile))
 	for j, f := range c.Fragile {
 		rows[j] = row(cell(typeset(f.Change)...), cell(text(f.What)), cell(text(f.From)), cell(strong(f.Outcome)), cell(text(f.Detail)))
 	}
-	return []Node{title, b.table("plain", say("Alternatives that change an outcome word."), headRow("If", "Word of", "Now", "Then", "Detail"), rows...)}
+	return []Node{b.table("plain", say("Choices that change an outcome word."), headRow("If", "Word of", "Now", "Then", "Detail"), rows...)}
 }
 
 // openPoints lists open points and notices of a cell.
 func (b *builder) openPoints(c study.Cell) []Node {
-	nodes := []Node{heading("Open points and notices")}
 	var items []Node
+	told := map[string]bool{}
 	for _, o := range c.Open {
+		told[o.Text] = true
 		kind := "open"
 		if o.Blocks {
 			kind = "open, withholds the statement"
@@ -336,12 +386,14 @@ func (b *builder) openPoints(c study.Cell) []Node {
 		items = append(items, item(append(say("{}{}: ", strong(kind), text(course)), typeset(sentenceEnd(o.Text))...)...))
 	}
 	for _, n := range c.Notices {
-		items = append(items, noticeItem(n))
+		if !told[n.Text] {
+			items = append(items, noticeItem(n))
+		}
 	}
 	if len(items) == 0 {
-		return append(nodes, paragraph(text("None.")))
+		return b.lacks("There are no open points and no notices.")
 	}
-	return append(nodes, list(items...))
+	return []Node{heading("Open points and notices"), list(items...)}
 }
 
 func noticeItem(n notice.Notice) Node {

@@ -15,8 +15,9 @@ type builder struct {
 	assumed    []assumption
 	section    [3]int
 	figures    int
+	lacking    []string // what a cell has not, printed at its end
 	tables     int
-	data       []Node // tables behind the figures, printed at the end
+	data       []Node // tables behind figures of no cell, printed together
 	printed    []bool // which figures stand in the document
 }
 
@@ -32,7 +33,7 @@ func Document(in Input) Node {
 	root.Nodes = append(root.Nodes, b.identity()...)
 	for _, part := range []func() Node{
 		b.statementSection, b.summarySection, b.comparisons, b.methods, b.assumptionSection,
-		b.notProvided, b.findings, b.files, b.log, b.limits, b.signatures, b.figureData,
+		b.notProvided, b.findings, b.figureData, b.files, b.log, b.limits, b.signatures,
 	} {
 		if section := part(); section.Kind != "" {
 			root.Nodes = append(root.Nodes, section)
@@ -81,6 +82,22 @@ func whole(role string, rows int) string {
 
 // sheet returns a table of names and values without caption or number.
 func sheet(rows ...Node) Node { return block(Table, "sheet", rows...) }
+
+// pairs returns a table of names and values in two columns of pairs.
+func pairs(lines ...Node) Node {
+	half := (len(lines) + 1) / 2
+	rows := make([]Node, half)
+	for i := range rows {
+		rows[i] = row(lines[i].Nodes...)
+		switch {
+		case half+i < len(lines):
+			rows[i].Nodes = append(rows[i].Nodes, lines[half+i].Nodes...)
+		case half > 1:
+			rows[i].Nodes = append(rows[i].Nodes, block(Head, ""), cell())
+		}
+	}
+	return block(Table, "pairs", rows...)
+}
 
 // line is a row of a sheet: the name, and the value.
 func line(name []Node, value ...Node) Node {
@@ -173,9 +190,7 @@ func (b *builder) identity() []Node {
 		line(say("Purpose and intended use"), given(r.Purpose)),
 		line(say("Status"), text(state(r))),
 		line(say("Compared"), say("{} in {}, from {}", text(plural(len(r.Cells), "cell")), text(plural(questions(r), "question")), text(plural(len(r.Files), "file")))...),
-		line(say("Made"), made),
-		line(say("Program"), given(b.in.Product)),
-		line(say("Edition of the methods"), given(b.in.Edition)),
+		line(say("Made"), say("{}, by {}, methods {}", made, given(b.in.Product), given(b.in.Edition))...),
 		line(say("SHA-256 of the study"), hash...),
 	}
 	return []Node{

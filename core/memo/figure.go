@@ -3,32 +3,45 @@ package memo
 import (
 	"fmt"
 	"strings"
+
+	"weirmark/core/study"
 )
 
-// figuresOf returns the figures of a cell that are not printed yet. Those of
-// no model stand with the first cell of their question.
-func (b *builder) figuresOf(caseName, quantity, model string) []Node {
+// figuresOf returns the figures of a cell and of one kind that are not printed
+// yet. Those of no model stand with the first cell of their question.
+func (b *builder) figuresOf(c study.Cell, kind string) []Node {
 	var nodes []Node
 	for i, f := range b.in.Figures {
-		if b.printed[i] || f.Case != caseName || f.Quantity != quantity || (f.Model != model && f.Model != "") {
+		if b.printed[i] || f.Case != c.Case || f.Quantity != c.Quantity || (f.Model != c.Model && f.Model != "") || kindOf(f) != kind {
 			continue
 		}
 		b.printed[i] = true
-		nodes = append(nodes, b.figure(f))
+		nodes = append(nodes, b.figure(f, f.Case == "" && f.Quantity == ""))
 	}
 	return nodes
 }
 
-// figure returns a drawing with its caption, and keeps its table for the end.
-func (b *builder) figure(f Figure) Node {
+// kindOf tells by its name where a figure stands: with the runs, the grids, the
+// sources or, "", the comparison.
+func kindOf(f Figure) string {
+	switch _, kind, _ := strings.Cut(f.ID, "-"); kind {
+	case "monitors", "grids", "budget":
+		return kind
+	}
+	return ""
+}
+
+// figure returns a drawing with its caption. The numbers of a figure of a cell
+// are in the tables of the cell; others keep their own for later.
+func (b *builder) figure(f Figure, own bool) Node {
 	b.figures++
 	id := fmt.Sprintf("figure-%d", b.figures)
 	caption := []Node{strong(fmt.Sprintf("Figure %d. ", b.figures))}
-	if f.Title != "" {
-		caption = append(caption, text(sentenceEnd(f.Title)+" "))
+	if f.Caption == "" {
+		caption = append(caption, text(sentenceEnd(f.Title)))
 	}
 	caption = append(caption, typeset(f.Caption)...)
-	if len(f.Rows) > 0 {
+	if own && len(f.Rows) > 0 {
 		caption = append(caption, say(" Numbers: {}.", Node{Kind: Link, ID: id + "-data", Text: "data of the figure"})...)
 		b.data = append(b.data, b.dataOf(f, id))
 	}

@@ -8,13 +8,14 @@ import (
 
 // grids prints the grid study behind u_num.
 func (b *builder) grids(i int, c study.Cell) []Node {
-	title := heading("Grid study")
 	g := c.Grids
+	figures := b.figuresOf(c, "grids")
 	if g == nil {
-		return []Node{title, paragraph(text("No grid study is available for this cell."))}
+		b.lacks("No grid study is available for this cell.")
+		return figures
 	}
 	at := func(name string) string { return fmt.Sprintf("cells.%d.grids.%s", i, name) }
-	nodes := []Node{title}
+	nodes := append([]Node{heading("Grid study")}, figures...)
 	if len(g.Points) > 0 {
 		nodes = append(nodes, b.gridPoints(i, c))
 	}
@@ -66,10 +67,10 @@ func (b *builder) grids(i int, c study.Cell) []Node {
 	default:
 		add("*u*_{num}", text("not available"))
 	}
+	nodes = append(nodes, pairs(rows...))
 	if g.Rule != "" {
-		add("Rule", text(g.Rule))
+		nodes = append(nodes, note(text("Rule: "+sentenceEnd(g.Rule))))
 	}
-	nodes = append(nodes, sheet(rows...))
 	if len(g.Local) > 0 {
 		nodes = append(nodes, b.localGrids(i, c)...)
 	}

@@ -72,7 +72,11 @@ func (w *htmlWriter) node(n Node) {
 	case Text:
 		w.raw(breakable(n.Text))
 	case Number:
-		w.raw(`<data value="` + escape(n.Value) + `" data-field="` + escape(n.Field) + `">` + escape(n.Text) + "</data>")
+		w.raw(`<data value="` + escape(n.Value) + `" data-field="` + escape(n.Field) + `"`)
+		if n.Over != "" {
+			w.raw(` data-over="` + escape(n.Over) + `"`)
+		}
+		w.raw(">" + escape(n.Text) + "</data>")
 	case Mark:
 		w.in("span", n.Role, n, "")
 	case Strong:

@@ -72,7 +72,7 @@ func (w *markdownWriter) rule(head string, n int) {
 func inline(nodes []Node) string {
 	var out strings.Builder
 	for _, n := range nodes {
-		text := markdownText(n.Text)
+		text := markdownText(n.Text) + inline(n.Nodes)
 		switch n.Kind {
 		case Strong:
 			text = "**" + strings.TrimSpace(text) + "**"

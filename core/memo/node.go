@@ -29,7 +29,7 @@ const (
 
 	Text   Kind = "text"
 	Number Kind = "number" // Text: rounded; Value: ten digits; Field: path in the report
-	Mark   Kind = "mark"   // Role: mark of a phrase
+	Mark   Kind = "mark"   // Role: mark of a phrase; Text, or a Number
 	Strong Kind = "strong"
 	Italic Kind = "italic"
 	Sub    Kind = "sub"
@@ -47,6 +47,7 @@ type Node struct {
 	Text  string `json:"text,omitempty"`
 	Value string `json:"value,omitempty"`
 	Field string `json:"field,omitempty"`
+	Over  string `json:"over,omitempty"` // of a Number in percent: path of what it is a part of
 	Nodes []Node `json:"nodes,omitempty"`
 }
 

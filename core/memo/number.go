@@ -79,6 +79,16 @@ func percent(v quantity.Number, field string) Node {
 	return number(v, quantity.Percent(float64(v))+"\u202f%", field)
 }
 
+// signedPercent is percent with a plus sign on positive values.
+func signedPercent(v quantity.Number, field string) Node {
+	return number(v, quantity.SignedPercent(float64(v))+"\u202f%", field)
+}
+
+// signed returns v with n significant digits and its sign.
+func signed(v quantity.Number, n int, field string) Node {
+	return number(v, quantity.Signed(float64(v), n), field)
+}
+
 // beside returns v with the decimals that u needs for two digits, the way a
 // value is printed beside its uncertainty; five digits where u is not known.
 func beside(v, u quantity.Number, field string) Node {

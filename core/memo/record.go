@@ -10,16 +10,34 @@ import (
 // notProvided names what reviewers ask for and a study cannot hold.
 func (b *builder) notProvided() Node {
 	s := b.open(1, "not-provided", "Evidence this memo does not hold")
-	s.Nodes = append(s.Nodes,
-		paragraph(text("The following is not part of the study and is not provided here. The statements do not rest on it and do not replace it.")),
-		list(
-			item(text("Description of the facility, geometry as built, instruments and corrections: not provided.")),
-			item(text("Equations, closures, constants and wall treatment of the models: not provided.")),
-			item(text("Boundary and initial conditions of simulation and reference side by side: not provided.")),
-			item(text("Program, schemes, precision, time step and stopping rule of the simulations: not provided.")),
-			item(text("Code verification: not provided.")),
-			item(text("Monitors, residuals and balances of the runs, and averaging times of unsteady runs: not provided unless an open point or notice names them.")),
-		))
+	lines := []Node{
+		item(text("Description of the facility, geometry as built, instruments and corrections: not provided.")),
+		item(text("Equations, closures, constants and wall treatment of the models: not provided.")),
+		item(text("Program, schemes, precision, time step and stopping rule of the simulations: not provided.")),
+		item(text("Code verification: not provided.")),
+	}
+	for _, missing := range []struct {
+		lacks func(study.Cell) bool
+		what  string
+	}{
+		{func(c study.Cell) bool { return len(c.Conditions) == 0 }, "Conditions of simulation and reference side by side"},
+		{func(c study.Cell) bool { return len(c.Monitors) == 0 }, "Monitors of the runs"},
+		{func(c study.Cell) bool { return len(c.Balances) == 0 }, "Balances of the runs"},
+	} {
+		n := 0
+		for _, c := range b.in.Report.Cells {
+			if missing.lacks(c) {
+				n++
+			}
+		}
+		switch {
+		case n == len(b.in.Report.Cells):
+			lines = append(lines, item(text(missing.what+": not provided.")))
+		case n > 0:
+			lines = append(lines, item(text(fmt.Sprintf("%s: not provided for %d of %s.", missing.what, n, plural(len(b.in.Report.Cells), "cell")))))
+		}
+	}
+	s.Nodes = append(s.Nodes, paragraph(text("The statements do not rest on the following and do not replace it.")), list(lines...))
 	return s
 }
 

@@ -2,6 +2,7 @@ package memo
 
 import (
 	"fmt"
+	"strings"
 
 	"weirmark/core/notice"
 	"weirmark/core/study"
@@ -24,7 +25,7 @@ func (b *builder) statementSection() Node {
 		seen[k] = true
 		box.Nodes = append(box.Nodes, block(Box, "statement",
 			block(Paragraph, "of", say("Case {} · {} · model {}", text(k.Case), text(k.Quantity), text(k.Model))...),
-			paragraph(phrases(statement.Phrases)...),
+			paragraph(phrases(statement.Phrases, "")...),
 			list(item(text("The report holds no results for this statement.")))))
 	}
 	if len(box.Nodes) == 0 {
@@ -43,12 +44,16 @@ func (b *builder) statement(i int, c study.Cell) Node {
 		status = statusOf(c)
 	}
 	head := append(names(c), say(" · {} · {}", strong(status), Node{Kind: Link, ID: cellID(i), Text: "details"})...)
-	sentence := paragraph(phrases(given.Phrases)...)
+	sentence := paragraph(phrases(given.Phrases, fmt.Sprintf("cells.%d.", i))...)
 	if !found || len(given.Phrases) == 0 {
 		sentence = paragraph(text("No statement was made of this cell."))
 	}
 	sentence.Role = "sentence"
-	return block(Box, "statement", block(Paragraph, "of", head...), sentence, list(b.restrictions(i, c, !found)...))
+	box := block(Box, "statement", block(Paragraph, "of", head...), sentence)
+	if limits := b.restrictions(i, c, !found); len(limits) > 0 {
+		box.Nodes = append(box.Nodes, list(limits...))
+	}
+	return box
 }
 
 func statusOf(c study.Cell) string {
@@ -63,15 +68,28 @@ func statusOf(c study.Cell) string {
 
 func cellID(i int) string { return fmt.Sprintf("cell-%d", i+1) }
 
-// phrases returns the pieces of a statement with their marks.
-func phrases(list []study.Phrase) []Node {
+// phrases returns the pieces of a statement with their marks. Numbers stand in
+// the report below the place of the cell; without a cell they are words.
+func phrases(list []study.Phrase, cell string) []Node {
 	var nodes []Node
 	for _, p := range list {
-		if p.Mark == study.Plain {
-			nodes = append(nodes, typeset(p.Text)...)
-			continue
+		inner := Node{Kind: Text, Text: p.Text}
+		if p.Value != nil && cell != "" {
+			inner = number(*p.Value, p.Text, cell+p.Path)
+			if p.Over != "" {
+				inner.Over = cell + p.Over
+			}
 		}
-		nodes = append(nodes, Node{Kind: Mark, Role: p.Mark, Text: p.Text})
+		switch {
+		case p.Mark == study.Plain && inner.Kind == Number:
+			nodes = append(nodes, inner)
+		case p.Mark == study.Plain:
+			nodes = append(nodes, typeset(p.Text)...)
+		case inner.Kind == Number:
+			nodes = append(nodes, Node{Kind: Mark, Role: p.Mark, Nodes: []Node{inner}})
+		default:
+			nodes = append(nodes, Node{Kind: Mark, Role: p.Mark, Text: p.Text})
+		}
 	}
 	return nodes
 }
@@ -84,21 +102,21 @@ func (b *builder) restrictions(i int, c study.Cell, alone bool) []Node {
 	add := func(template string, args ...Node) { items = append(items, item(say(template, args...)...)) }
 	at := func(name string) string { return fmt.Sprintf("cells.%d.%s", i, name) }
 
-	if first := firstOpen(c); first != "" {
+	if first := firstOpen(c); first != "" && (alone || c.Open[0].Blocks) {
 		words := append([]Node{strong("Open: ")}, typeset(sentenceEnd(first))...)
 		if more := len(c.Open) - 1; more > 0 {
 			words = append(words, text(fmt.Sprintf(" Further open points: %d.", more)))
 		}
 		items = append(items, item(words...))
 	}
-	if c.Requirement == nil {
+	switch {
+	case c.Requirement == nil && alone:
 		add("No accuracy requirement is recorded: adequacy is not judged.")
-	} else {
-		words := append(b.requirementWords(i, c), text("."))
-		if c.Requirement.Late {
-			words = append(words, text(" It was recorded after the comparison had been seen."))
-		}
-		items = append(items, item(words...))
+	case c.Requirement == nil:
+	case alone:
+		items = append(items, item(append(b.requirementWords(i, c), text("."+late(c)))...))
+	case c.Requirement.Late:
+		items = append(items, item(text(strings.TrimSpace(late(c)))))
 	}
 	if n := len(c.Outside); n > 0 {
 		add("{} of {} stations lie outside the simulated range and were not compared. No statement is made there.", text(fmt.Sprint(n)), count(c.StationsAll, at("stations_all")))
@@ -109,6 +127,9 @@ func (b *builder) restrictions(i int, c study.Cell, alone bool) []Node {
 			words += fmt.Sprintf(" Of these, %d after the comparison had been seen.", late)
 		}
 		add("{}", text(words))
+	}
+	if a := c.Application; a != nil && a.Outside && alone {
+		add("The application point ({}) lies outside the compared conditions ({}). No statement is made there.", text(a.Text), text(a.Range))
 	}
 	if alone && c.Use == study.UseTuning {
 		add("These data were used to set the model: agreement here is fit quality.")
@@ -130,6 +151,14 @@ func (b *builder) restrictions(i int, c study.Cell, alone bool) []Node {
 		}
 	}
 	return items
+}
+
+// late says that a requirement came after the comparison.
+func late(c study.Cell) string {
+	if c.Requirement.Late {
+		return " The requirement was recorded after the comparison had been seen."
+	}
+	return ""
 }
 
 // requirementWords returns "requirement ± a (who, date): outcome".

@@ -50,16 +50,15 @@ var stationColumns = []column{
 	{"Line", "line", ofLine, nil},
 }
 
-// stations prints the values at the stations: of a curve as a table, of a
-// scalar as a sheet.
+// stations prints the values at the stations: one row for each.
 func (b *builder) stations(i int, c study.Cell) []Node {
 	if len(c.Stations) == 0 {
-		return []Node{heading("Values"), paragraph(text("No station is common to simulation and reference: nothing was compared."))}
+		return []Node{paragraph(text("No station is common to simulation and reference: nothing was compared."))}
 	}
 	if c.Scalar {
 		return b.scalar(i, c)
 	}
-	nodes := []Node{heading("Values at the stations")}
+	var nodes []Node
 	var columns []column
 	var without []Node
 	for _, k := range stationColumns {
@@ -265,24 +264,22 @@ func (b *builder) outside(i int, c study.Cell) Node {
 func (b *builder) scalar(i int, c study.Cell) []Node {
 	s := c.Stations[0]
 	at := func(name string) string { return fmt.Sprintf("cells.%d.stations.0.%s", i, name) }
-	unit := func(n Node) []Node { return withUnit(n, c.Unit) }
-	rows := []Node{
-		line(say("Simulation *S*"), unit(beside(s.S, s.UVal, at("s")))...),
-		line(say("Reference *D*"), unit(writtenBeside(s.D, s.UVal, at("d")))...),
-		line(say("Comparison error *E* = *S* − *D*"), unit(signedBeside(s.E, s.UVal, at("e")))...),
-		line(say("Experimental uncertainty *u*_{D}"), unit(digits(s.UD, 2, at("u_d")))...),
-		line(say("Numerical uncertainty *u*_{num}"), unit(digits(s.UNum, 2, at("u_num")))...),
-		line(say("Input uncertainty *u*_{input}"), unit(digits(s.UInput, 2, at("u_input")))...),
-		line(say("Validation uncertainty *u*_{val}"), unit(digits(s.UVal, 2, at("u_val")))...),
-		line(say("|*E*|/*u*_{val}"), digits(s.Ratio, 2, at("ratio"))),
-	}
+	from := []Node{text(absent)}
 	if known(s.Lo, s.Hi) {
-		rows = append(rows, line(say("Model error lies within"), append(interval(signedBeside(s.Lo, s.UVal, at("lo")), signedBeside(s.Hi, s.UVal, at("hi"))), say(" (*k* = {})", asWritten(c.Choices.K, fmt.Sprintf("cells.%d.choices.k", i)))...)...))
+		from = interval(signedBeside(s.Lo, s.UVal, at("lo")), signedBeside(s.Hi, s.UVal, at("hi")))
 	}
 	reading := s.Reading
 	if reading == "" {
-		reading = "none: the uncertainty is not known"
+		reading = "none"
 	}
-	rows = append(rows, line(say("Reading"), text(reading)))
-	return []Node{heading("Values"), sheet(rows...), note(say("Uncertainties are standard. “{}” is a value that is not known; it is not zero.", text(absent))...)}
+	values := row(figureCell(beside(s.S, s.UVal, at("s"))), figureCell(writtenBeside(s.D, s.UVal, at("d"))), figureCell(signedBeside(s.E, s.UVal, at("e"))),
+		figureCell(digits(s.UD, 2, at("u_d"))), figureCell(digits(s.UNum, 2, at("u_num"))), figureCell(digits(s.UInput, 2, at("u_input"))), figureCell(digits(s.UVal, 2, at("u_val"))),
+		figureCell(digits(s.Ratio, 2, at("ratio"))), figureCell(from...), cell(text(reading)))
+	caption := say("Values ({}), *k* = {}. Uncertainties are standard. “{}” is a value that is not known; it is not zero.",
+		text(unitOf(c.Unit)), asWritten(c.Choices.K, fmt.Sprintf("cells.%d.choices.k", i)), text(absent))
+	if known(c.Degrees, c.K95) {
+		caption = append(caption, say(" With {} effective degrees of freedom, 95 % needs *k* = {}.",
+			digits(c.Degrees, 2, fmt.Sprintf("cells.%d.degrees", i)), digits(c.K95, 3, fmt.Sprintf("cells.%d.k_95", i)))...)
+	}
+	return []Node{b.table("plain", caption, headRow("#*S*", "#*D*", "#*E* = *S* − *D*", "#*u*_{D}", "#*u*_{num}", "#*u*_{input}", "#*u*_{val}", "#|*E*|/*u*_{val}", "#Model error within", "Reading"), values)}
 }

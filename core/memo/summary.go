@@ -23,7 +23,9 @@ func (b *builder) summarySection() Node {
 		b.table("summary", say("Comparison error *E* = *S* − *D*, validation uncertainty *u*_{val} and interval of the model error by cell."),
 			headRow("Case", "Quantity", "Model", "#*n*", "#*E*", "#*u*_{val}", "#|*E*|/*u*_{val}", "#Model error within", "Requirement", "Outcome"), rows...),
 		note(say("For curves, *E* is the mean over the stations, *u*_{val} runs from its smallest to its largest value, |*E*|/*u*_{val} is the largest, and the interval is the envelope of all stations. The interval is *E* ± *k* *u*_{val}. “{}” stands where the study has no value; it is never a zero.", text(absent))...))
-	s.Nodes = append(s.Nodes, b.figuresOf("", "", "")...)
+	s.Nodes = append(s.Nodes, b.figuresOf(study.Cell{}, "")...)
+	s.Nodes = append(s.Nodes, b.differences()...)
+	s.Nodes = append(s.Nodes, b.application()...)
 	return s
 }
 

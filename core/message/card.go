@@ -2,6 +2,7 @@ package message
 
 import (
 	"math"
+	"slices"
 	"strconv"
 
 	"weirmark/core/notice"
@@ -438,4 +439,50 @@ func density(s *study.Study, name string) string {
 		}
 	}
 	return ""
+}
+
+// readingEntries are the answers about how a file is read: those that were
+// given, and those that an open question of the reader calls for.
+func readingEntries(f *study.File, asked map[string]string) []Entry {
+	list := []Entry{}
+	entry := func(field, label, value string, options []Option, hint string) {
+		list = append(list, Entry{Target: study.Target{Kind: "file", ID: f.ID, Field: field}, Label: label, Value: value, By: study.Entered, Options: options, Hint: hint})
+	}
+	calls := map[string][]string{
+		"decimal": {"decimal-comma", "comma-ambiguous", "number-thousands"}, "delimiter": {"comma-ambiguous"},
+		"sentinels": {"value-sentinel"}, "data": {"value-sentinel"}, "hidden": {"hidden-cells"}, "guides": {"fixed-guessed"},
+	}
+	words := map[string]string{"decimal": "decimals are written with", "delimiter": "columns are separated by", "sentinels": "these mark missing values", "data": "these are data", "hidden": "hidden cells are", "range": "range of cells", "guides": "further columns begin after characters"}
+	options := map[string][]Option{
+		"decimal":   {{"", "–"}, {"point", "a point"}, {"comma", "a comma"}},
+		"delimiter": {{"", "–"}, {"comma", "commas"}, {"semicolon", "semicolons"}, {"tab", "tabs"}, {"stroke", "strokes"}, {"blanks", "blanks"}},
+		"hidden":    {{"", "–"}, {"include", "included"}, {"leave out", "left out"}},
+	}
+	for _, field := range study.ReadingFields {
+		value, called := f.ReadingValue(field), false
+		for _, code := range calls[field] {
+			called = called || asked[code] != ""
+		}
+		if value != "" || called {
+			choices := options[field]
+			if choices == nil {
+				choices = []Option{}
+			}
+			entry(field, words[field], value, choices, "")
+		}
+	}
+	codes := []string{}
+	for code := range asked {
+		codes = append(codes, code)
+	}
+	for code := range f.Answers {
+		if asked[code] == "" {
+			codes = append(codes, code)
+		}
+	}
+	slices.Sort(codes)
+	for _, code := range codes {
+		entry("answer."+code, orText(asked[code], "answered"), f.Answers[code], []Option{}, "your answer")
+	}
+	return list
 }

@@ -82,6 +82,7 @@ func TestTracerScores(t *testing.T) {
 	if len(c.Regions) != 1 || c.Regions[0].N != 11 {
 		t.Fatalf("regions %+v, want the third row with 11 ports", c.Regions)
 	}
+	check(t, []printed{{"hit rate of the third row", c.Regions[0].HitRate, .45455, 5}})
 }
 
 // TestClosingStatement holds the sentences of the worked state against the

@@ -170,7 +170,7 @@ func attachedFile(q *Request, attached [][]byte, i int) (string, []byte, error) 
 
 // readOnce reads a file of the study, or answers from what was read before.
 func (s *Session) readOnce(f study.File) tablefile.File {
-	if have, ok := s.read[f.SHA256+" "+f.Name]; ok && have.Size == len(f.Data) {
+	if have, ok := s.read[f.Key()]; ok && have.Size == len(f.Data) {
 		return have
 	}
 	read := study.Read(f)
@@ -186,5 +186,5 @@ func (s *Session) keep(f study.File, read tablefile.File) {
 	if s.read == nil {
 		s.read = map[string]tablefile.File{}
 	}
-	s.read[f.SHA256+" "+f.Name] = read
+	s.read[f.Key()] = read
 }

@@ -168,6 +168,8 @@ type FileCard struct {
 	Size    string   `json:"size"`
 	Uses    []string `json:"uses"`
 	Rejects []string `json:"rejects"` // why nothing of it could be used
+	Stated  []string `json:"stated"`  // what the file says of itself
+	Reading []Entry  `json:"reading"` // answers to what the reader asked
 }
 
 // view evaluates the study and lays it out for the page.
@@ -177,7 +179,7 @@ func (s *Session) view() (*View, error) {
 	v := &View{
 		Title: s.study.Title, Purpose: s.study.Purpose, Status: status(s.study), Unsaved: len(s.study.Log) > s.saved,
 		Board: board(&report), Courses: []Course{}, Slips: s.slipCards(), Sources: []SourceCard{}, Choices: []Entry{}, Question: []Entry{}, Excluded: []ExcludedCard{},
-		People: people(s.study), Files: fileCards(&report), Log: report.Log, Notices: []string{},
+		People: people(s.study), Files: s.fileCards(&report), Log: report.Log, Notices: []string{},
 	}
 	if n := len(s.past); n > 0 {
 		v.Undo = s.past[n-1].what
@@ -353,15 +355,27 @@ func cellFigures(all []CellFigure, c *study.Cell) []CellFigure {
 	return own
 }
 
-// fileCards lists the files with what was refused.
-func fileCards(r *study.Report) []FileCard {
+// fileCards lists the files with what was refused, what they say of
+// themselves, and the answers to what the reader asked.
+func (s *Session) fileCards(r *study.Report) []FileCard {
 	cards := []FileCard{}
 	for _, f := range r.Files {
-		card := FileCard{ID: f.ID, Name: f.Name, SHA256: f.SHA256, Size: count(f.Bytes, "byte"), Uses: f.Uses, Rejects: []string{}}
+		card := FileCard{ID: f.ID, Name: f.Name, SHA256: f.SHA256, Size: count(f.Bytes, "byte"), Uses: f.Uses, Rejects: []string{}, Stated: []string{}, Reading: []Entry{}}
+		asked := map[string]string{} // by code
 		for _, n := range r.Notices {
-			if n.File == f.Name && n.Severity == notice.Stop {
+			switch {
+			case n.File != f.Name:
+			case n.Severity == notice.Stop:
 				card.Rejects = append(card.Rejects, n.Text)
+			case n.Severity == notice.Ask:
+				asked[n.Code] = n.Text
 			}
+		}
+		if file := s.study.File(f.ID); file != nil {
+			for _, m := range s.readOnce(*file).Meta {
+				card.Stated = append(card.Stated, m.Key+": "+m.Value)
+			}
+			card.Reading = readingEntries(file, asked)
 		}
 		cards = append(cards, card)
 	}

@@ -25,7 +25,12 @@ type Options struct {
 }
 
 // Read reads the bytes of a file.
-func Read(f File) tablefile.File { return tablefile.Read(f.Name, f.Data, tablefile.Options{}) }
+func Read(f File) tablefile.File {
+	if f.Reading != nil {
+		return tablefile.Read(f.Name, f.Data, *f.Reading)
+	}
+	return tablefile.Read(f.Name, f.Data, tablefile.Options{})
+}
 
 // evaluation is one run of Evaluate.
 type evaluation struct {
@@ -381,7 +386,9 @@ func slipTarget(p *Slip, field string) Target { return Target{Kind: "slip", ID: 
 // use loads a slip, lists its guesses and gaps as open points, and notes the
 // file.
 func (w *work) use(p *Slip) *curve {
-	w.fileUsed(p.File)
+	if w.fileUsed(p.File) {
+		w.readerAsks(p)
+	}
 	w.doubts(p)
 	c, notices := w.e.load(p)
 	for _, n := range notices {
@@ -393,13 +400,32 @@ func (w *work) use(p *Slip) *curve {
 	return c
 }
 
-func (w *work) fileUsed(id string) {
+// fileUsed lists a file of the cell and reports whether it is new there.
+func (w *work) fileUsed(id string) bool {
 	for _, have := range w.cell.FilesUsed {
 		if have == id {
-			return
+			return false
 		}
 	}
 	w.cell.FilesUsed = append(w.cell.FilesUsed, id)
+	return true
+}
+
+// readerAsks lists what the reader asked about the file of a slip and no one
+// has answered.
+func (w *work) readerAsks(p *Slip) {
+	file := w.e.study.File(p.File)
+	for _, n := range w.e.files[p.File].Notices {
+		if n.Severity != notice.Ask {
+			continue
+		}
+		n = n.In(file.Name)
+		if answer := file.Answers[n.Code]; answer != "" {
+			w.tell(notice.New("finding-answered", "A question on "+file.Name+" ("+n.Text+")", answer))
+			continue
+		}
+		w.cell.Open = append(w.cell.Open, Open{Course: 2, Blocks: true, Missing: "an answer on " + file.Name, Text: n.Error(), Target: Target{Kind: "file", ID: p.File, Field: "answer." + n.Code}})
+	}
 }
 
 // doubts lists the fields of a slip that are guesses or missing.

@@ -4,6 +4,7 @@ import (
 	"encoding/json"
 
 	"weirmark/core/settling"
+	"weirmark/core/tablefile"
 )
 
 // Memory keeps the cells of one evaluation for the next, so that a change
@@ -21,6 +22,8 @@ type ingredients struct {
 	Model       string
 	Slips       []*Slip
 	Files       []string // hash and name of the file of each slip; empty where it was not used
+	Readings    []*tablefile.Options
+	Answers     []map[string]string
 	Cases       []Card
 	Application []Condition
 	Conditions  [][]Matching // of all questions, where a point of application is stated
@@ -41,6 +44,9 @@ func (e *evaluation) key(q *Question, model string) string {
 			file = f.SHA256 + " " + f.Name
 		}
 		in.Files = append(in.Files, file)
+		if f := e.study.File(p.File); f != nil {
+			in.Readings, in.Answers = append(in.Readings, f.Reading), append(in.Answers, f.Answers)
+		}
 	}
 	if len(e.study.Application) > 0 {
 		for i := range e.study.Questions {

@@ -178,6 +178,10 @@ func (s *Study) Name(t Target) string {
 		if p := s.slip(t.ID); p != nil {
 			return fieldName(t.Field) + " of " + s.fileName(p)
 		}
+	case "file":
+		if f := s.File(t.ID); f != nil {
+			return "reading of " + f.Name + ", " + t.Field
+		}
 	case "case":
 		return fieldName(t.Field) + " of case " + t.ID
 	case ItemCondition, ItemRegion:
@@ -278,6 +282,8 @@ func (s *Study) enter(t Target, value string) (string, error) {
 		return before, nil
 	}
 	switch t.Kind {
+	case "file":
+		return s.enterReading(t, value)
 	case ItemCondition, ItemRegion, ItemApplication:
 		return s.enterItem(t, value)
 	case "case":

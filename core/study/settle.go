@@ -158,7 +158,7 @@ type judgedSeries struct {
 // judge judges a monitor once for equal ingredients.
 func (e *evaluation) judge(c *curve, values []float64, opt settling.Options) settling.Monitor {
 	p := c.slip
-	key := judgedSeries{e.files[p.File].SHA256, p.Table, p.X.Column.Value, p.Y.Column.Value, c.xUnit.unit, c.yUnit.unit, opt}
+	key := judgedSeries{e.files[p.File].SHA256 + e.study.File(p.File).readingText(), p.Table, p.X.Column.Value, p.Y.Column.Value, c.xUnit.unit, c.yUnit.unit, opt}
 	if m, known := e.judged[key]; known {
 		return m
 	}

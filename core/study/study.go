@@ -7,6 +7,7 @@ import (
 	"encoding/json"
 
 	"weirmark/core/interpolate"
+	"weirmark/core/tablefile"
 )
 
 // Format and Version name the study file.
@@ -71,6 +72,12 @@ type File struct {
 	Name   string `json:"name"`
 	SHA256 string `json:"sha256"`
 	Data   []byte `json:"data"`
+	// Reading holds the answers to what the reader asked about the file, such
+	// as its decimal sign; nil where nothing was asked or answered.
+	Reading *tablefile.Options `json:"reading,omitempty"`
+	// Answers holds what a person answered to other questions of the reader,
+	// by the code of the question.
+	Answers map[string]string `json:"answers,omitempty"`
 }
 
 // Roles of a slip.

@@ -80,7 +80,7 @@ export function TallyBoard({ view, select }: { view: View; select(cell: string):
                           <b class="letter" aria-hidden="true">
                             {cell.letter}
                           </b>
-                          <Stack courses={cell.courses} />
+                          <Stack courses={cell.courses} width={models.length > 2 ? 20 : 30} />
                         </button>
                       </td>
                     ),

@@ -21,6 +21,8 @@ export interface Layout {
   tables: boolean;
   open: boolean[];
   board: boolean;
+  /** Slips that stay unfolded although nothing of them is open. */
+  slips: string[];
   sheet: Sheet;
 }
 
@@ -60,6 +62,7 @@ export class Desk {
     tables: false,
     open: narrow() ? [false, false, false, true, false] : [false, true, false, true, true],
     board: false,
+    slips: [],
     sheet: "",
   };
 

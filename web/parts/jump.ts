@@ -28,8 +28,18 @@ export function jump(desk: Desk, target: Target, at?: number): void {
   if (course !== undefined) {
     openCourse(desk, course);
   }
+  if (target.kind === "slip") {
+    unfold(desk, target.id);
+  }
   // What was opened is on the page after the next frame.
   requestAnimationFrame(() => requestAnimationFrame(() => focusOn(find(target, course))));
+}
+
+/** Keeps a slip unfolded. */
+export function unfold(desk: Desk, slip: string): void {
+  if (!desk.layout.slips.includes(slip)) {
+    desk.lay({ slips: [...desk.layout.slips, slip] });
+  }
 }
 
 /** Opens a course; on a narrow page it is then the only open one. */

@@ -147,7 +147,7 @@ function places(view: View, go: (open: () => void) => () => void, leap: (target:
     }
   });
   for (const slip of list(view.slips)) {
-    hits.push({ text: slip.name + ": " + slip.read, kind: "table", go: go(() => focusOn(document.querySelector(`#slip-${slip.id} .chip`))) });
+    hits.push({ text: slip.name + ": " + slip.read, kind: "table", go: go(() => focusOn(document.querySelector(`#slip-${slip.id} .chip, #slip-${slip.id} h3 button`))) });
   }
   for (const entry of [...list(view.question), ...list(view.choices)]) {
     hits.push({ text: `${entry.label} ${entry.value}`, kind: "entry", go: go(() => leap(entry.target)) });

@@ -8,6 +8,7 @@ import type { Entry, SlipCard } from "../engine/types";
 import { Chip } from "./chip";
 import { useDesk } from "./context";
 import { list } from "./desk";
+import { unfold } from "./jump";
 import { Removal } from "./removal";
 import { SketchOf } from "./sketch";
 import { Words } from "./words";
@@ -32,13 +33,36 @@ function waiting(slip: SlipCard, all: SlipCard[], offer: Offer): Entry[] {
     .filter((entry) => ["", offer.value, offer.entry.value].includes(entry.value));
 }
 
+/** Above this number, slips of which nothing is open are folded. */
+const many = 8;
+
+/** A slip, or one line of it where there are many and nothing of it is open. */
 export function SlipOf({ slip, all }: { slip: SlipCard; all: SlipCard[] }) {
+  const desk = useDesk();
+  if (all.length <= many || slip.open > 0 || desk.layout.slips.includes(slip.id)) {
+    return <Unfolded slip={slip} all={all} />;
+  }
+  const values = list(slip.entries).map((entry) => list(entry.options).find((option) => option.value === entry.value)?.label ?? entry.value);
+  return (
+    <article class="slip" id={"slip-" + slip.id} aria-label={slip.name}>
+      <h3>
+        <button aria-expanded="false" onClick={() => unfold(desk, slip.id)}>
+          {slip.name}
+        </button>
+      </h3>
+      <p class="quiet">{values.slice(0, 4).filter(Boolean).join(", ")}</p>
+    </article>
+  );
+}
+
+function Unfolded({ slip, all }: { slip: SlipCard; all: SlipCard[] }) {
   const desk = useDesk();
   const [offer, setOffer] = useState<Offer | undefined>(undefined);
   const others = offer === undefined ? [] : waiting(slip, all, offer);
   const entries = list(slip.entries);
 
   const after = (entry: Entry, value: string) => {
+    unfold(desk, slip.id);
     setOffer({ entry, value });
     // On to the next chip of this slip that needs a person, else of the tray.
     requestAnimationFrame(() => {

@@ -3,11 +3,10 @@
 
 import type { State } from "../engine/types";
 
-const width = 30;
 const height = 6;
 const step = 7.5;
 
-export function Stack({ courses }: { courses: State[] }) {
+export function Stack({ courses, width }: { courses: State[]; width: number }) {
   return (
     <svg class="stack" width={width} height={courses.length * step} aria-hidden="true">
       {courses.map((state, i) => (

@@ -23,7 +23,7 @@ weirmark compare --sim FILE[@TABLE] --ref FILE[@TABLE] --x COL --y COL [--ref-x 
                  [--u COL|NUMBER|NUMBER%] [--u-k NUMBER] [--u-common COL|NUMBER] [--u-num COL|NUMBER] [--u-input NUMBER]
                  [--u-interp on|off] [--interp linear|monotone] [--k NUMBER] [--json]
 weirmark run STUDY --out DIR
-weirmark demo DIR
+weirmark demo DIR [--state received|worked|review]
 
 Exit: 0 done, 2 evidence incomplete, 3 input refused or wrong usage, 4 internal fault.
 `
@@ -50,7 +50,7 @@ func run(args []string, out, errs io.Writer) (status int) {
 		"grids":   {map[string]bool{"json": false, "size": true, "value": true, "dim": true, "limits": true}, grids},
 		"compare": {map[string]bool{"json": false, "sim": true, "ref": true, "x": true, "y": true, "ref-x": true, "ref-y": true, "u": true, "u-k": true, "u-common": true, "u-num": true, "u-input": true, "u-interp": true, "interp": true, "k": true}, compare},
 		"run":     {map[string]bool{"out": true}, runStudy},
-		"demo":    {map[string]bool{}, runDemo},
+		"demo":    {map[string]bool{"state": true}, runDemo},
 	}
 	if args[0] == "help" || args[0] == "--help" || args[0] == "-h" {
 		fmt.Fprint(out, usage)

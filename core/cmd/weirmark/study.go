@@ -30,14 +30,15 @@ func runStudy(v *invocation) (int, error) {
 	return v.write(s, v.flags["out"])
 }
 
-// runDemo evaluates the bundled demo study into a folder.
+// runDemo evaluates the bundled demo study into a folder: one case of the
+// campaign, or the whole of it in one of its states.
 func runDemo(v *invocation) (int, error) {
 	dir, err := v.file("folder")
 	if err != nil {
 		return message.Refused, err
 	}
 	s := &message.Session{}
-	if r, _, err := ask(s, message.Request{Kind: "demo"}); err != nil {
+	if r, _, err := ask(s, message.Request{Kind: "demo", Value: v.flags["state"]}); err != nil {
 		return r.Status, err
 	}
 	return v.write(s, dir)

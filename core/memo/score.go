@@ -1,0 +1,77 @@
+package memo
+
+import (
+	"fmt"
+
+	"weirmark/core/study"
+)
+
+// scores prints the measures of a field with their criteria, and the regions.
+func (b *builder) scores(i int, c study.Cell) []Node {
+	var nodes []Node
+	if len(c.Scores) > 0 {
+		nodes = append(nodes, b.scoreTable(i, c))
+	}
+	if len(c.Regions) > 0 {
+		nodes = append(nodes, b.regions(i, c))
+	}
+	return nodes
+}
+
+func (b *builder) scoreTable(i int, c study.Cell) Node {
+	var rows []Node
+	for j, s := range c.Scores {
+		at := func(name string) string { return fmt.Sprintf("cells.%d.scores.%d.%s", i, j, name) }
+		value := []Node{digits(s.Value, 3, at("value"))}
+		if s.Word != "" {
+			value = append(value, text(" "+s.Word))
+		}
+		measure := []Node{cell(typeset(s.Name)...), figureCell(value...), cell(typeset(s.Scale)...)}
+		if len(s.Criteria) == 0 {
+			rows = append(rows, row(append(measure, cell(), cell())...))
+		}
+		for m, k := range s.Criteria {
+			met := strong("not met")
+			if k.Met {
+				met = text("met")
+			}
+			limits := say("{}: {} to {}, {}", text(k.Name), digits(k.Low, 3, at(fmt.Sprintf("criteria.%d.low", m))), digits(k.High, 3, at(fmt.Sprintf("criteria.%d.high", m))), met)
+			rows = append(rows, row(append(measure, cell(limits...), cell(text(k.Scope+"; "+k.Source)))...))
+			measure = []Node{cell(), cell(), cell()}
+		}
+	}
+	return b.table("plain", say("Measures with their scales, and criteria of the field with their scope and source."),
+		headRow("Measure", "#Value", "Scale", "Criterion", "Scope and source"), rows...)
+}
+
+func (b *builder) regions(i int, c study.Cell) Node {
+	rows := make([]Node, len(c.Regions))
+	for j, r := range c.Regions {
+		at := func(name string) string { return fmt.Sprintf("cells.%d.regions.%d.%s", i, j, name) }
+		rows[j] = row(cell(text(r.Name)), figureCell(interval(trimmed(r.From, 6, at("from")), trimmed(r.To, 6, at("to")))...), figureCell(count(r.N, at("n"))),
+			figureCell(signed(r.Bias, 3, at("bias"))), figureCell(digits(r.RMSE, 3, at("rmse"))), figureCell(digits(r.HitRate, 3, at("hit_rate"))), figureCell(count(r.Beyond, at("beyond"))))
+	}
+	return b.table("plain", say("Parts of the stations ({}).", text(unitOf(c.Unit))),
+		headRow("Region", "#Range", "#*n*", "#Mean *E*", "#RMS *E*", "#Hit rate", "#|*E*| > *k* *u*_{val}"), rows...)
+}
+
+// differences sets models of one question against each other.
+func (b *builder) differences() []Node {
+	list := b.in.Report.Differences
+	if len(list) == 0 {
+		return nil
+	}
+	rows := make([]Node, len(list))
+	for j, d := range list {
+		at := func(name string) string { return fmt.Sprintf("differences.%d.%s", j, name) }
+		resolved := "not resolved"
+		if d.Resolved {
+			resolved = "resolved"
+		}
+		mean := append(withUnit(signedBeside(d.Mean, d.U, at("mean")), d.Unit), text(" ± "))
+		rows[j] = row(cell(text(d.Case)), cell(text(d.Quantity)), cell(text(d.A+" − "+d.B)), figureCell(count(d.N, at("n"))),
+			figureCell(append(mean, digits(d.U, 2, at("u")))...), cell(text(resolved)), figureCell(interval(digits(d.RMSA, 3, at("rms_a")), digits(d.RMSB, 3, at("rms_b")))...))
+	}
+	return []Node{b.table("plain", say("Models against each other: the data cancel. Mean difference ± its standard uncertainty, and the root mean square of *E* of the one and the other."),
+		headRow("Case", "Quantity", "Models", "#*n*", "#Mean difference", "", "#RMS *E*"), rows...)}
+}
