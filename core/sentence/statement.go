@@ -52,10 +52,18 @@ func Of(c *study.Cell) Statement {
 	w.application()
 	w.changes()
 	w.rests()
+	w.end()
 	if c.Provisional {
 		return Statement{Provisional, w.phrases}
 	}
 	return Statement{Stated, w.phrases}
+}
+
+// end takes the space away that a further sentence would have needed.
+func (w *writer) end() {
+	if n := len(w.phrases); n > 0 {
+		w.phrases[n-1].Text = strings.TrimRight(w.phrases[n-1].Text, " ")
+	}
 }
 
 // Veiled returns what may be said before a comparison is looked at: its
