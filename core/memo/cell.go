@@ -26,8 +26,8 @@ func (b *builder) cell(i int, c study.Cell) Node {
 	s := b.openWith(2, cellID(i), names(c)...)
 	b.lacking = nil
 	for _, part := range [][]Node{
-		b.compared(i, c), b.conditions(i, c), b.figuresOf(c, ""), b.stations(i, c), b.excluded(i, c), b.measures(i, c), b.scores(i, c),
-		b.joint(i, c), b.crossings(i, c), b.settling(i, c), b.grids(i, c), b.sources(i, c), b.requirement(i, c), b.openPoints(c),
+		b.compared(i, c), b.conditions(i, c), b.measures(i, c), b.scores(i, c), b.joint(i, c), b.crossings(i, c),
+		b.figuresOf(c, ""), b.stations(i, c), b.excluded(i, c), b.settling(i, c), b.grids(i, c), b.sources(i, c), b.requirement(i, c), b.openPoints(c),
 	} {
 		s.Nodes = append(s.Nodes, part...)
 	}
@@ -254,7 +254,7 @@ func (b *builder) joint(i int, c study.Cell) []Node {
 		words = append(words, say(" With a scale beside it, *E* = *a* + *b* *S*, *b* is {} ± {}, {}.",
 			signedBeside(j.Scale, j.UScale, at("scale")), digits(j.UScale, 2, at("u_scale")), text(resolution(j.ScaleResolved)))...)
 	}
-	if known(j.AtLeast) {
+	if m := c.Summary; known(j.AtLeast) && m != nil && m.WithinKUVal < m.Tested {
 		words = append(words, say(" At least as many stations beyond *k* *u*_{val} as found have a probability of {}, by sampling.", digits(j.AtLeast, 2, at("at_least")))...)
 	}
 	if known(j.Independent, j.NumShared) {

@@ -40,17 +40,22 @@ func checked() Input {
 
 func TestSections(t *testing.T) {
 	titles := []string{"1\u2002Statements", "2\u2002Summary of all cells", "3\u2002Comparisons", "4\u2002Methods", "5\u2002Assumptions, guesses and choices", "6\u2002Evidence this memo does not hold",
-		"7\u2002Findings in the files and the study", "8\u2002Files", "9\u2002Log", "10\u2002Limits of use", "11\u2002Roles"}
+		"7\u2002Findings in the files and the study"}
+	rest := []string{"Files", "Log", "Limits of use", "Roles"}
 	for name, row := range map[string]struct {
 		in   Input
 		more []string
-	}{"sample": {sample(), []string{"12\u2002Data of the figures"}}, "nothing": {Input{}, nil}} {
+	}{"sample": {withData(), []string{"Data of the figures"}}, "nothing": {Input{}, nil}} {
 		root := parse(t, HTML(Document(row.in)))
 		var got []string
 		for _, h := range root.all("h2") {
 			got = append(got, h.content)
 		}
-		if want := append(append([]string{}, titles...), row.more...); fmt.Sprint(got) != fmt.Sprint(want) {
+		want := append([]string{}, titles...)
+		for _, title := range append(append([]string{}, row.more...), rest...) {
+			want = append(want, fmt.Sprintf("%d\u2002%s", len(want)+1, title))
+		}
+		if fmt.Sprint(got) != fmt.Sprint(want) {
 			t.Errorf("%s: sections %q, want %q", name, got, want)
 		}
 		for _, s := range root.all("section") {
@@ -68,6 +73,13 @@ func TestSections(t *testing.T) {
 	}
 }
 
+// withData is the sample with a table behind the figure of no cell.
+func withData() Input {
+	in := sample()
+	in.Figures[2].Head, in.Figures[2].Rows = []string{"cell", "from", "to"}, [][]string{{"Cd, B", "−0.6", "+1.0"}}
+	return in
+}
+
 // What limits a statement stands inside its box; what the sentence says is not
 // said twice, unless there is no sentence.
 func TestLimitsStandInTheBox(t *testing.T) {
@@ -80,14 +92,15 @@ func TestLimitsStandInTheBox(t *testing.T) {
 		"2 of 26 stations lie outside the simulated range",
 		"2 stations excluded by a person; the reasons are in the details. Of these, 1 after the comparison had been seen.",
 		"recorded after the comparison had been seen",
-		"set by decision owner, 2026-03-02: not met",
 		"Open: No experimental uncertainty was given. Further open points: 1.",
-		"Open: The grid factor 1.15 is assumed. State why it may be used.",
-		"No accuracy requirement is recorded",
 		"This memo is supporting evidence only.",
 	}
 	withSentence := []string{"The report holds no results for this statement.", "Items marked guessed or assumed: 3."}
 	withoutSentence := []string{
+		"set by decision owner, 2026-03-02: not met",
+		"Open: The grid factor 1.15 is assumed. State why it may be used.",
+		"No accuracy requirement is recorded",
+		"The application point (α = 11°) lies outside the compared conditions (α 4.2° to 9°).",
 		"No statement was made of this cell.",
 		"The joint statistic 125.03 exceeds its 95 % point 36.41.",
 		"Changes if: k_num = 2 (requirement: shown).",
@@ -119,7 +132,7 @@ func TestLimitsStandInTheBox(t *testing.T) {
 	for _, s := range box.all("span") {
 		marks[s.attr["class"]] += s.content + "|"
 	}
-	for mark, want := range map[string]string{"missing": "experimental uncertainty", "guessed": "reference pressure common", "assumed": "1.15", "outcome": "not resolved", "number": "+1.2 %"} {
+	for mark, want := range map[string]string{"missing": "experimental uncertainty", "guessed": "reference pressure common", "assumed": "1.15", "outcome": "not resolved", "number": "+1.2"} {
 		if !strings.Contains(marks[mark], want+"|") {
 			t.Errorf("%q is not marked %s: %q", want, mark, marks[mark])
 		}
@@ -204,6 +217,73 @@ func TestSpread(t *testing.T) {
 		if got := fmt.Sprint(spread(row.n, row.limit)); got != row.want {
 			t.Errorf("spread(%d, %d) = %s, want %s", row.n, row.limit, got, row.want)
 		}
+	}
+}
+
+func TestRunsConditionsAndApplication(t *testing.T) {
+	root := parse(t, HTML(Document(sample())))
+	for _, row := range []struct {
+		id   string
+		want []string
+		no   []string
+	}{
+		{"cell-3", []string{
+			"G3c1-g3-monitor.datsettled401 to 6000.030210002.0e−74.0e−7mean over the last third; drift −0.0001\u202f% per 100 iterations",
+			"cycling111 to 6000.0299510.0000710.00012 (bound)mean over whole cycles; period 70, 7 in the window; half-range 0.00012",
+			"1.2041.2038+0.00020+0.017\u202f%closed", "10.4−0.40−4.0\u202f%not closed", "With 7.3 effective degrees of freedom, 95\u202f% needs k = 2.34",
+		}, []string{"Tu"}},
+		{"cell-1", []string{
+			"α [°]4.254.2−0.0021simulation moved to the condition of the data: run at the setting of the sheet", "Re11000001200000–differs, not handled", "Tu [%]0.40.4–the same on both sides",
+			"house limit: 0 to 0.0500, met", "narrow: 0 to 0.0200, not met", "nose0.02 to 0.39+0.0123", "tap leaked, see the log of the testyes",
+			"The reading turns where the correlation of reference pressure is 0.684 (50.98 when independent, 27.05 when fully shared). Without nose: 14.20 on 15, 95 % point 25.00, does not exceed it.",
+		}, []string{"Runs settled"}},
+		{"summary", []string{"Application point α = 11°: outside the compared conditions (α 4.2° to 9°).", "A − B24+0.0286 ± 0.0013resolved0.0310 to 0.0165"}, nil},
+	} {
+		content := strings.ReplaceAll(root.byID(row.id).content, "\n", "")
+		for _, want := range row.want {
+			if !strings.Contains(content, strings.ReplaceAll(want, "95\u202f%", "95 %")) {
+				t.Errorf("%s does not say %q", row.id, want)
+			}
+		}
+		for _, no := range row.no {
+			if strings.Contains(content, no) {
+				t.Errorf("%s says %q", row.id, no)
+			}
+		}
+	}
+}
+
+func TestKindAndUseOfTheReference(t *testing.T) {
+	for _, row := range []struct{ kind, use, want string }{
+		{study.KindTest, study.UseValidation, ""},
+		{study.KindLaw, study.UseValidation, "The reference is a law"},
+		{study.KindCorrelation, "", "The reference is a correlation"},
+		{study.KindSimulation, "", "another simulation: this says nothing of the error against measurement."},
+		{study.KindTest, study.UseTuning, "agreement here is fit quality."},
+	} {
+		in := sample()
+		in.Report.Cells[2].Kind, in.Report.Cells[2].Use = row.kind, row.use
+		content := parse(t, HTML(Document(in))).byID("cell-3").content
+		if row.want == "" && (strings.Contains(content, "The reference is a") || strings.Contains(content, "fit quality")) || !strings.Contains(content, row.want) {
+			t.Errorf("kind %q, use %q: %q is missing, or said of a test kept apart", row.kind, row.use, row.want)
+		}
+	}
+}
+
+// Figures stand where their matter is told.
+func TestFiguresStandByTheirMatter(t *testing.T) {
+	in := sample()
+	for _, kind := range []string{"budget", "grids", "monitors", "intervals"} {
+		in.Figures = append(in.Figures, Figure{Case: "C1", Quantity: "drag coefficient", Model: "B", ID: "c3-" + kind, Caption: "picture of " + kind, SVG: "<svg/>"})
+	}
+	content := parse(t, HTML(Document(in))).byID("cell-3").content
+	last := 0
+	for _, part := range []string{"picture of intervals", "Runs settled", "picture of monitors", "Grid study", "picture of grids", "Uncertainty sources", "picture of budget", "Requirement"} {
+		at := strings.Index(content, part)
+		if at < last {
+			t.Errorf("%q stands at %d, after %d was expected", part, at, last)
+		}
+		last = at
 	}
 }
 

@@ -133,7 +133,13 @@ func TestEveryNumberIsTheReports(t *testing.T) {
 			t.Errorf("%s is no number of the report", field)
 			continue
 		}
-		if n.attr["value"] != want {
+		if over := n.attr["data-over"]; over != "" {
+			of, _ := lookUp(tree, over)
+			want = partOf(t, want, of)
+			if !agrees(n.attr["value"], want) {
+				t.Errorf("%s over %s: value %s, the report gives %s", field, over, n.attr["value"], want)
+			}
+		} else if n.attr["value"] != want {
 			t.Errorf("%s: value %s, the report has %s", field, n.attr["value"], want)
 		}
 		if !agrees(n.content, want) {
@@ -141,10 +147,12 @@ func TestEveryNumberIsTheReports(t *testing.T) {
 		}
 	}
 	// Numbers of the report that no memo prints: places, the curve to draw,
-	// counts of a study along a curve where there is none, and a k_num that the
-	// estimate did not use (it stands among the choices).
+	// counts of a study along a curve where there is none, a k_num that the
+	// estimate did not use (it stands among the choices), the choices of the
+	// second model of a question (they are those of the question), and the cycles
+	// of a monitor that has none.
 	unprinted := func(path string) bool {
-		for _, part := range []string{".curve.", ".target.", ".course", ".line", ".column", "s.2.grids.monotone", "s.2.grids.non_monotone", "s.3.grids.monotone", "s.3.grids.non_monotone", "s.3.grids.k_num"} {
+		for _, part := range []string{".curve.", ".target.", ".course", ".line", ".column", "s.2.grids.monotone", "s.2.grids.non_monotone", "s.3.grids.monotone", "s.3.grids.non_monotone", "s.3.grids.k_num", "s.1.choices.", "monitors.0.cycles"} {
 			if strings.Contains(path, part) {
 				return true
 			}
@@ -161,6 +169,17 @@ func TestEveryNumberIsTheReports(t *testing.T) {
 	if missing == 0 && len(printed) < 700 {
 		t.Errorf("only %d different numbers are in the page", len(printed))
 	}
+}
+
+// partOf returns a number in percent of the magnitude of another, as JSON has it.
+func partOf(t *testing.T, part, whole string) string {
+	t.Helper()
+	p, err := strconv.ParseFloat(part, 64)
+	w, other := strconv.ParseFloat(whole, 64)
+	if err != nil || other != nil || w == 0 {
+		t.Fatalf("%q in percent of %q", part, whole)
+	}
+	return strconv.FormatFloat(100*p/math.Abs(w), 'g', -1, 64)
 }
 
 func walk(tree any, path string, number func(string)) {

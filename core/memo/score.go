@@ -2,6 +2,7 @@ package memo
 
 import (
 	"fmt"
+	"slices"
 
 	"weirmark/core/study"
 )
@@ -20,6 +21,7 @@ func (b *builder) scores(i int, c study.Cell) []Node {
 
 func (b *builder) scoreTable(i int, c study.Cell) Node {
 	var rows []Node
+	judged := slices.ContainsFunc(c.Scores, func(s study.ScoreLine) bool { return len(s.Criteria) > 0 })
 	for j, s := range c.Scores {
 		at := func(name string) string { return fmt.Sprintf("cells.%d.scores.%d.%s", i, j, name) }
 		value := []Node{digits(s.Value, 3, at("value"))}
@@ -27,7 +29,10 @@ func (b *builder) scoreTable(i int, c study.Cell) Node {
 			value = append(value, text(" "+s.Word))
 		}
 		measure := []Node{cell(typeset(s.Name)...), figureCell(value...), cell(typeset(s.Scale)...)}
-		if len(s.Criteria) == 0 {
+		switch {
+		case !judged:
+			rows = append(rows, row(measure...))
+		case len(s.Criteria) == 0:
 			rows = append(rows, row(append(measure, cell(), cell())...))
 		}
 		for m, k := range s.Criteria {
@@ -39,6 +44,9 @@ func (b *builder) scoreTable(i int, c study.Cell) Node {
 			rows = append(rows, row(append(measure, cell(limits...), cell(text(k.Scope+"; "+k.Source)))...))
 			measure = []Node{cell(), cell(), cell()}
 		}
+	}
+	if !judged {
+		return b.table("plain", say("Measures with their scales."), headRow("Measure", "#Value", "Scale"), rows...)
 	}
 	return b.table("plain", say("Measures with their scales, and criteria of the field with their scope and source."),
 		headRow("Measure", "#Value", "Scale", "Criterion", "Scope and source"), rows...)

@@ -100,7 +100,7 @@ func needed(p *study.Slip, field string) bool {
 		return p.Role.Value != study.Unused && p.Role.Value != study.Balance
 	case "x.unit":
 		return p.X.Column.Given() && p.Role.Value != study.Balance && p.Role.Value != study.Monitor
-	case "u_factor":
+	case "u_factor", "u_basis":
 		return p.U.Column.Given()
 	case "size.column":
 		return p.Role.Value == study.GridValues
@@ -158,6 +158,9 @@ func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
 			list = append(list,
 				entry("u.unit", "its unit", p.U.Unit, free, "as the values, or % of reading"),
 				entry("u_factor", "its coverage", p.UFactor, coverages(), "what the bars mean"))
+			if p.U.Unit.Value == "%" && p.Y.Unit.Value != "%" {
+				list = append(list, entry("u_basis", "percent of", p.UBasis, free, "reading, or the number of the full scale"))
+			}
 		}
 	}
 	return list

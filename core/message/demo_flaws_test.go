@@ -14,11 +14,6 @@ import (
 // will. It is the one place that says so: a row leaves it for the table of
 // TestPlantedFlaws.
 var later = []struct{ flaw, seen, part string }{
-	{"F2", "17: u and v of C1-A-G2-line.dat are swapped", "study: columns of a run held against the other runs of its case (plausibility.Correlation is there)"},
-	{"F3", "18: y⁺ without u_τ; so far the two dimensions are refused", "study: wall units of an abscissa"},
-	{"F6", "25: tap 9 has two values", "study: repeated rows of a reference that is a loop"},
-	{"F7", "49: 0.25 % of reading or of full scale", "study: basis of an uncertainty in percent"},
-	{"F10", "40: y⁺ 38, 27, 12, 0.9 over the grids", "study: wall treatment of a family"},
 	{"F22", "66: Cl of the taps 0.436, of the balance 0.412", "study: integrated pressures against a balance (integrate is there)"},
 }
 
@@ -78,12 +73,17 @@ func TestPlantedFlaws(t *testing.T) {
 	}{
 		{"F1", states.received, "C3", demoZoneName(2), "A", "range-scaled", []string{"with a factor 0.001"}},
 		{"F1", states.received, "C3", demoZoneName(2), "A", "station-none", nil},
+		{"F2", states.received, "C1", demoLineName, "A", "columns-swapped", []string{"C1-A-G2-line.dat"}},
+		{"F3", states.received, "C3", demoZoneName(0), "B", "wall-units", []string{"y+", "u_tau"}},
 		{"F4", states.received, "C2", demoRowName, "B", "ratio-constant", []string{"0.836", "divided by density"}},
 		{"F5", evaluateAfter(t, "OR26_C1_taps_old.csv alone"), "C1", demoLoopName, "A", "curve-shuffled", []string{"OR26_C1_taps_old.csv"}},
 		{"F6", states.received, "C1", demoLoopName, "A", "curve-outlier", []string{"line 21"}},
-		{"F7", states.received, "C1", demoLoopName, "A", "field-missing", []string{"Coverage of u(p)"}},
-		{"F7", states.received, "C3", demoZoneName(0), "A", "field-missing", []string{"Coverage of u_95"}},
-		{"F7", states.received, "C3", demoTracerName, "A", "field-missing", []string{"Coverage of u(C/C0)"}},
+		{"F6", states.received, "C1", demoLoopName, "A", "rows-repeated", nil},
+		{"F7", states.received, "C1", demoLoopName, "A", "u-basis", []string{"u(p)"}},
+		{"F10", states.received, "C2", demoDragName, "A", "grid-wall", []string{"38, 27, 12, 0.90"}},
+		{"F7", states.received, "C1", demoLoopName, "A", "u-coverage", []string{"u(p)"}},
+		{"F7", states.received, "C3", demoZoneName(0), "A", "u-coverage", []string{"u_95"}},
+		{"F7", states.received, "C3", demoTracerName, "A", "u-coverage", []string{"u(C/C0)"}},
 		{"F7", states.received, "C2", demoRowName, "A", "u-coverage", []string{"full scale"}},
 		{"F8", states.received, "C3", demoZoneName(0), "A", "station-outside", []string{"4 of 26"}},
 		{"F9", states.worked, "C1", demoLiftName, "A", "grid-oscillatory", []string{"−0.556", "0.00225"}},

@@ -125,6 +125,10 @@ var table = map[string]row{
 	"curve-magnitude":   {Ask, "%s is never negative but reaches %s: a magnitude? Changes of sign cannot be found in it. Export the signed component."},
 	"readings-ratio":    {Ask, "One of %d readings, at line %d, is %s times the others: another reference area or unit? Nothing was changed."},
 	"curve-constant":    {Ask, "All values of %s are %s: a placeholder? Check the export."},
+	"wall-units":        {Stop, "Abscissa %s of %s is in wall units, %s of %s is a length. To compare them, u_tau and nu are needed, and whose u_tau. Nothing was compared; export the length."},
+	"grid-wall":         {Ask, "The wall distance y+ is %s over the grids: the wall treatment changes between them. These are not one family; study those of one treatment, or say why they belong together."},
+	"columns-swapped":   {Ask, "%q of %s matches what the other runs have, not %q (%s runs, r = %s against %s): are the headers swapped? Nothing was changed. Correct the columns."},
+	"rows-repeated":     {Ask, "%s has the values %s and %s (lines %d and %d): repeat readings, a jump, or a mistake? Exclude one with a reason, or say why both stay."},
 	"correlation-unset": {Ask, "Is the error of %q common to all stations? Independent makes the joint statistic %s, common %s."},
 
 	// Uncertainty.
@@ -132,7 +136,8 @@ var table = map[string]row{
 	"u-blank":            {Ask, "%d stations have no uncertainty. Blank is not zero: they leave the test. Give a value, or mark them unknown."},
 	"u-zero":             {Ask, "An uncertainty of exactly 0 is stated at %d stations. Exact by definition? Otherwise mark it unknown."},
 	"u-negative":         {Stop, "A negative uncertainty (%s) is stated at %s. Limits or half-widths? Columns swapped?"},
-	"u-coverage":         {Ask, "The coverage of %q is not stated: standard (k = 1), 95 %%, or limits? No statement is made until it is known."},
+	"u-basis":            {Ask, "Column %q of %s is in percent: of the reading, or of a full scale? No statement is made until it is known."},
+	"u-coverage":         {Ask, "The coverage of %s is not stated: standard (k = 1), 95 %%, or limits? No statement is made until it is known."},
 	"coverage-assumed":   {Ask, "The coverage factor of the given uncertainty was not stated; k = 1 was taken. Give it with --u-k."},
 	"u-num-missing":      {Note, "No numerical uncertainty was given: u_val holds the other parts only. A statement on the model needs it."},
 	"u-input-missing":    {Note, "No input uncertainty was given: u_val does not contain it."},

@@ -146,6 +146,7 @@ func (l *loader) uncertainty(c *curve) {
 	if !known {
 		k, c.uOpen = 1, true
 	}
+	fullScale, _ := strconv.ParseFloat(slip.UBasis.Value, 64) // a word is no full scale
 	c.u = make([]float64, len(column.Values))
 	zeros := 0
 	for i, v := range column.Values {
@@ -157,7 +158,10 @@ func (l *loader) uncertainty(c *curve) {
 			zeros++
 		}
 		u := step.StepToSI(v)
-		if percent {
+		switch {
+		case percent && fullScale > 0:
+			u = c.yUnit.unit.StepToSI(fullScale) * v / 100
+		case percent:
 			u = math.Abs(c.y[i]) * v / 100
 		}
 		c.u[i] = u / k

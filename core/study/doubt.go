@@ -24,6 +24,9 @@ func (w *work) doubtCurves() {
 			w.ask(2, "the order of "+w.e.study.fileName(c.slip), "curve-shuffled", w.e.study.fileName(c.slip), turns)
 		}
 	}
+	w.doubtSwapped()
+	w.doubtWallTreatment()
+	w.doubtRepeated()
 	w.doubtReadings()
 	w.doubtOutliers()
 	w.doubtRanges()

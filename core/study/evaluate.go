@@ -435,6 +435,10 @@ func (w *work) doubts(p *Slip) {
 		switch {
 		case f.field.Open():
 			w.need(f.course, true, "acceptance of the "+f.name, slipTarget(p, f.path), "guess-open", capital(f.name), file, f.field.Value)
+		case f.needed && !f.field.Given() && f.path == "u_factor":
+			w.need(f.course, true, "the "+f.name, slipTarget(p, f.path), "u-coverage", "column "+p.U.Column.Value+" of "+file)
+		case f.needed && !f.field.Given() && f.path == "u_basis":
+			w.need(f.course, true, "the "+f.name, slipTarget(p, f.path), "u-basis", p.U.Column.Value, file)
 		case f.needed && !f.field.Given() && f.unitOf != "":
 			w.need(f.course, true, "the "+f.name, slipTarget(p, f.path), "unit-missing", f.unitOf, file)
 		case f.needed && !f.field.Given():
@@ -474,6 +478,9 @@ func (p *Slip) fields() []slipField {
 		all = append(all,
 			slipField{path: "u.column", name: "column of uncertainty", field: p.U.Column, needed: true, course: 2},
 			slipField{path: "u_factor", name: "coverage of " + p.U.Column.Value, field: p.UFactor, needed: true, course: 2})
+		if p.percentU() {
+			all = append(all, slipField{path: "u_basis", name: "basis of " + p.U.Column.Value, field: p.UBasis, needed: true, course: 2})
+		}
 	}
 	if p.Role.Value == Monitor {
 		all = append(all, slipField{path: "axis", name: "kind of monitor", field: p.Axis, needed: true, course: 0})
@@ -488,6 +495,9 @@ func (p *Slip) fields() []slipField {
 	}
 	return all
 }
+
+// percentU reports whether the uncertainty is in percent of something.
+func (p *Slip) percentU() bool { return p.U.Unit.Value == "%" && p.Y.Unit.Value != "%" }
 
 func orWord(text, other string) string {
 	if text == "" {

@@ -205,7 +205,7 @@ func (s *Study) Name(t Target) string {
 
 var fieldNames = map[string]string{
 	"y.column": "column of values", "y.unit": "unit of values", "x.column": "column of stations", "x.unit": "unit of stations",
-	"u.column": "column of uncertainty", "u.unit": "unit of uncertainty", "u_factor": "coverage", "size.column": "column of cell counts", "cells": "number of cells",
+	"u.column": "column of uncertainty", "u.unit": "unit of uncertainty", "u_factor": "coverage", "u_basis": "basis of the uncertainty", "size.column": "column of cell counts", "cells": "number of cells",
 	"choices.k": "k", "choices.k_num": "k_num", "choices.bounded": "bounded rule", "choices.formal": "formal order", "choices.dimension": "dimension",
 	"choices.interpolation": "interpolation", "choices.u_interp": "interpolation uncertainty", "choices.num_shared": "u_num shared",
 	"requirement.value": "requirement", "requirement.percent": "basis of the requirement", "requirement.who": "who set the requirement", "requirement.date": "date of the requirement",
@@ -258,7 +258,7 @@ func (p *Slip) entry(path string) *Field {
 	return map[string]*Field{
 		"role": &p.Role, "case": &p.Case, "quantity": &p.Quantity, "model": &p.Model, "grid": &p.Grid, "cells": &p.Cells,
 		"x.column": &p.X.Column, "x.unit": &p.X.Unit, "y.column": &p.Y.Column, "y.unit": &p.Y.Unit,
-		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit, "axis": &p.Axis,
+		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit, "axis": &p.Axis, "u_basis": &p.UBasis,
 	}[path]
 }
 

@@ -52,6 +52,9 @@ func (w *work) settleUnits() bool {
 		w.stop(2, "a common form of both sides", slipTarget(s.slip, "x.column"), n)
 		return false
 	}
+	if w.doubtWallUnits(s, d) {
+		return false
+	}
 	w.byDensity(s, d)
 	ok := w.sameUnits(s.yUnit, d.yUnit, s.slip.Y, d.slip.Y, &w.yUnit, "y.unit")
 	if !s.scalar() {

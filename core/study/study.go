@@ -112,6 +112,7 @@ type Slip struct {
 	Y        ColumnUse `json:"y"`        // the quantity
 	U        ColumnUse `json:"u"`        // uncertainty of the quantity, independent between stations
 	UFactor  Field     `json:"u_factor"` // coverage of U: "1", "2", "95 %", "limits"
+	UBasis   Field     `json:"u_basis"`  // of U in percent: BasisReading, or the full scale in the unit of Y
 	Size     ColumnUse `json:"size"`     // cell counts, for grid values
 	Axis     Field     `json:"axis"`     // of a monitor: iterations or samples in time
 }
@@ -121,6 +122,9 @@ type ColumnUse struct {
 	Column Field `json:"column"`
 	Unit   Field `json:"unit"`
 }
+
+// BasisReading is the basis of an uncertainty in percent of the reading.
+const BasisReading = "reading"
 
 // Kinds of reference; the kind drives the wording of the claim.
 const (

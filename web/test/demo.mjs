@@ -150,6 +150,28 @@ export async function onDemo(on, file) {
     holds((await log(person)).includes("entered twice"), "the log lacks the reason");
   });
 
+  await on("conditions are added to their list, said and taken away", file, async (person) => {
+    await person.press("3");
+    await person.click("add one", ".list");
+    await person.correct("condition", "angle", ".list");
+    holds((await person.text(".list")).includes("angle"), await person.text(".list"));
+    await person.click("remove", ".list");
+    await person.press("Enter");
+    holds(!(await person.text(".list")).includes("angle"), await person.text(".list"));
+  });
+
+  await on("the whole campaign: a full board, and slips that are folded until one is needed", file, async (person) => {
+    await person.click("worked through");
+    holds((await person.page.$$(".cell")).length > 20, await person.text(".board"));
+    const folded = (await person.page.$$('.slip [aria-expanded="false"]')).length;
+    holds(folded > 20, `${folded} folded slips`);
+    await person.click("C1-balance.csv", ".slip");
+    same((await person.page.$$('.slip [aria-expanded="false"]')).length, folded - 1, "folded slips");
+    holds((await person.text("#slip-s1, .slip:has(.chip)")).includes("C1-balance.csv"), "the slip is unfolded");
+    const over = await person.page.evaluate(() => document.scrollingElement.scrollWidth - innerWidth);
+    holds(over <= 0, `${over} pixels too wide`);
+  });
+
   await on("memo, stations, study, SVG and PNG are saved; the study opens again", file, async (person) => {
     await person.click("Save the memo");
     const memo = await person.saved("memo.html");

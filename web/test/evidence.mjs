@@ -53,7 +53,7 @@ export async function onSharedFiles(on, file, served, files) {
     holds((await person.focused()).startsWith("coverage"), `focus: ${await person.focused()}`);
     await person.fill("standard");
     const stated = await person.sentence();
-    for (const part of ["against test cf.exp.dat", "20 of 20", "joint statistic", "That the model error stays within ±30 %", "Provisional: rests on"]) {
+    for (const part of ["against test cf.exp.dat", "20 of 20", "joint statistic", "That the model error stays within ±30 %", "Provisional"]) {
       holds(stated.includes(part), `the sentence lacks “${part}”: ${stated}`);
     }
     // The files' own record names the reattachment that this model predicts as near 6.1 step heights.
