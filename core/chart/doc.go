@@ -5,7 +5,7 @@
 //
 // An option is JSON for the drawing library that the page and the command
 // share. It carries data and looks, never code: a custom mark names its draw
-// function ("errorBar", "band") and an axis names how its numbers are printed
+// function ("errorBar", "band"; an area may say how it is hatched) and an axis names how its numbers are printed
 // ("decimals:2:0"); web/figures holds both tables. Numbers are finite; a value
 // that is not there is null and leaves a gap. Texts may carry a subscript as
 // "u_{val}", which the drawing side sets; captions and tables write u_val.

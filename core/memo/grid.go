@@ -15,7 +15,7 @@ func (b *builder) grids(i int, c study.Cell) []Node {
 		return figures
 	}
 	at := func(name string) string { return fmt.Sprintf("cells.%d.grids.%s", i, name) }
-	nodes := append([]Node{heading("Grid study")}, figures...)
+	nodes := []Node{heading("Grid study")}
 	if len(g.Points) > 0 {
 		nodes = append(nodes, b.gridPoints(i, c))
 	}
@@ -74,7 +74,7 @@ func (b *builder) grids(i int, c study.Cell) []Node {
 	if len(g.Local) > 0 {
 		nodes = append(nodes, b.localGrids(i, c)...)
 	}
-	return nodes
+	return append(nodes, figures...)
 }
 
 func (b *builder) gridPoints(i int, c study.Cell) Node {

@@ -109,7 +109,7 @@ func say(template string, args ...Node) []Node {
 
 // symbols are names of quantities that texts handed over write with an
 // underscore.
-var symbols = []string{"u_val", "u_num", "u_input", "u_interp", "u_D", "k_num", "U_iter"}
+var symbols = []string{"u_val", "u_num", "u_input", "u_interp", "u_D", "k_num", "U_iter", "U_grid"}
 
 // typeset returns a text with these symbols set as in the tables.
 func typeset(s string) []Node {

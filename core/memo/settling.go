@@ -13,14 +13,14 @@ func (b *builder) settling(i int, c study.Cell) []Node {
 	if len(c.Monitors)+len(c.Balances)+len(figures) == 0 {
 		return nil
 	}
-	nodes := append([]Node{heading("Runs settled")}, figures...)
+	nodes := []Node{heading("Runs settled")}
 	if len(c.Monitors) > 0 {
 		nodes = append(nodes, b.monitors(i, c))
 	}
 	if len(c.Balances) > 0 {
 		nodes = append(nodes, b.balances(i, c))
 	}
-	return nodes
+	return append(nodes, figures...)
 }
 
 func (b *builder) monitors(i int, c study.Cell) Node {

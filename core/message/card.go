@@ -149,6 +149,12 @@ func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
 	if p.Role.Value == study.Monitor || p.Role.Value == study.Balance {
 		list = append(list, entry("grid", "grid", p.Grid, free, "e.g. G4"))
 	}
+	if p.X.Column.Given() && (p.Role.Value == study.Simulation || p.Role.Value == study.Reference) {
+		list = append(list, entry("derive", "taken", p.Derive, []Option{{"", "as a curve"}, {study.DeriveLift, "as the lift of a closed section"}}, ""))
+		if p.Derive.Value == study.DeriveLift {
+			list = append(list, entry("contour.column", "second coordinate in", p.Contour.Column, columns, ""), entry("contour.unit", "its unit", p.Contour.Unit, free, "m, mm, … or 1 for a pure number"))
+		}
+	}
 	if p.Role.Value == study.Simulation {
 		list = append(list, entry("grid", "grid", p.Grid, free, "e.g. G4"), entry("cells", "cells", p.Cells, free, "number of cells"))
 	}
@@ -429,19 +435,11 @@ func lists(s *study.Study, q *study.Question) []EntryList {
 		application.Items = append(application.Items, item(k, "", i, entry(k, "", "name", "condition", c.Name, []Option{}, "e.g. α"), entry(k, "", "value", "value", number(c.Value), []Option{}, ""), entry(k, "", "unit", "unit", c.Unit, []Option{}, "")))
 	}
 	card := EntryList{Course: 2, Title: "Case " + q.Case, Hint: "reference quantities", Items: []EntryItem{{Entries: []Entry{
-		entry("case", q.Case, "density", "density ρ in kg/m³", density(s, q.Case), []Option{}, "relates a pressure to one divided by density")}}}}
+		entry("case", q.Case, "density", "density ρ in kg/m³", s.CardValue(q.Case, "density"), []Option{}, "relates a pressure to one divided by density"),
+		entry("case", q.Case, "pressure", "dynamic pressure q in Pa", s.CardValue(q.Case, "pressure"), []Option{}, "makes a pressure a coefficient"),
+		entry("case", q.Case, "length", "reference length L in m", s.CardValue(q.Case, "length"), []Option{}, "e.g. the chord"),
+		entry("case", q.Case, "angle", "angle of attack α in degrees", s.CardValue(q.Case, "angle"), []Option{}, "")}}}}
 	return []EntryList{conditions, card, regions, application}
-}
-
-func density(s *study.Study, name string) string {
-	for _, c := range s.Cases {
-		for _, r := range c.References {
-			if c.Name == name && r.Symbol == study.Density {
-				return strconv.FormatFloat(r.Value, 'g', -1, 64)
-			}
-		}
-	}
-	return ""
 }
 
 // readingEntries are the answers about how a file is read: those that were

@@ -44,5 +44,9 @@ func demoSetting(s *study.Study) {
 	for _, name := range []string{"C1", "C2", "C3"} {
 		s.Cases = append(s.Cases, study.Card{Name: name, References: []study.ReferenceQuantity{{Symbol: study.Density, Value: 1.196, Unit: "kg/m³", Origin: demoSheet}}})
 	}
+	s.Cases[0].References = append(s.Cases[0].References,
+		study.ReferenceQuantity{Symbol: study.DynamicPressure, Value: 574.7, Unit: "Pa", Origin: demoSheet},
+		study.ReferenceQuantity{Symbol: study.RefLength, Value: 0.240, Unit: "m", Origin: demoSheet},
+		study.ReferenceQuantity{Symbol: study.Angle, Value: 4.2, Unit: "deg", Origin: demoSheet})
 	s.Application = []study.Condition{{Name: "α", Unit: "°", Value: 11}}
 }

@@ -37,6 +37,7 @@ type demoUse struct {
 	model, grid                 string
 	x, xUnit, y, yUnit, u, size string
 	uFactor                     string
+	contour                     string // second coordinate of a section whose lift is taken
 }
 
 // slip returns a use as a person enters it.
@@ -62,6 +63,9 @@ func (use demoUse) slip() study.Slip {
 	}
 	if use.size != "" {
 		p.Size.Column = entered(use.size)
+	}
+	if use.contour != "" {
+		p.Derive, p.Contour = entered(study.DeriveLift), demoColumn(use.contour, use.xUnit)
 	}
 	if use.role == study.Monitor {
 		p.Axis = entered(study.AxisIterations)

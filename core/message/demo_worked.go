@@ -112,7 +112,8 @@ func workedUses() []demoUse {
 	}
 	return join(
 		demoMonitors("C1", demoDragName, "Cd", latest),
-		[]demoUse{{file: "second/C1-balance.csv", role: study.Reference, case_: "C1", quantity: demoLiftName, y: "Cl"}},
+		[]demoUse{{file: "second/C1-balance.csv", role: study.Reference, case_: "C1", quantity: demoLiftName, y: "Cl"},
+			{file: "second/OR26_C1_taps_r1.csv", role: study.Reference, case_: "C1", quantity: demoLiftName, x: "x", xUnit: "mm", contour: "y", y: "p-p_ref", yUnit: "Pa"}},
 		demoFamily(forces, "C1", demoLiftName, "Cl"),
 		demoMonitors("C1", demoLiftName, "Cl", latest),
 		[]demoUse{{file: "first/legacy_Cp_digitised.csv", role: study.Reference, case_: "C1", quantity: demoLegacyName, x: "x/c", y: "Cp"}},
@@ -149,7 +150,6 @@ func workedUnused() []unusedFile {
 	return []unusedFile{
 		{"first/OR26_C1_balance.xlsx", "C1", demoDragName},
 		{"first/OR26_C1_taps_old.csv", "C1", demoLoopName},
-		{"second/OR26_C1_taps_r1.csv", "C1", demoLoopName},
 		{"first/OR26_C1_taps_r2.csv", "C1", demoLoopName},
 		{"first/OR26_C1_taps_r3.csv", "C1", demoLoopName},
 		{"first/C1-A-G4-surface.csv", "C1", demoLoopName},
@@ -169,7 +169,8 @@ var demoLog = []struct {
 	{"Files of the second delivery added; the ones they replace removed", "corrected or missing files", false},
 	{"OR26_C1_balance.xlsx left out", "a setting of 3/2 became a date; the laboratory sent text instead", false},
 	{"OR26_C1_taps_old.csv left out", "a loop sorted by x; its order cannot be recovered", false},
-	{"The taps of the whole loop left out", "the laboratory and the solvers reduced the upper branch: C1-taps-upper.csv and the cp files", false},
+	{"OR26_C1_taps_r1.csv: its lift held against the balance", "a check of the data with themselves", false},
+	{"The other taps of the whole loop left out", "the laboratory and the solvers reduced the upper branch: C1-taps-upper.csv and the cp files", false},
 	{"OR26_C3_laser_r1.dat, x/H = 2: unit of y set to mm", "0.2 to 60 under a header of m", false},
 	{"C1-A-G2-line.dat: column v taken as u", "the headers are swapped: it follows u of the other seven runs", false},
 	{"C3-B-G4-profiles.dat left out", "y⁺ without its friction velocity", false},
@@ -186,6 +187,7 @@ func workedQuestions() []study.Question {
 		demoSource(study.OfData, "balance calibration and corrections", .0031, study.Common, demoSheet),
 		demoSource(study.OfInput, "inputs (α, U, turbulence)", .010, study.Common, "run pairs of the analyst"))
 	lift.Condition, lift.Conditions = "α = 4.2°", demoAngle(4.2, 4.2, 0)
+	lift.Answers = map[string]string{"references-differ": "the balance holds: 48 taps miss the suction peak and the ends; data consistency stays open with the laboratory"}
 	legacy := demoQuestion("C1", demoLegacyName, "Cp", "older report",
 		demoSource(study.OfNumerical, "grid, from a study at other taps", .004, study.Independent, "entered: borrowed from a study of the same family"))
 	legacy.Use, legacy.Downward = entered(study.UseTuning), true

@@ -11,18 +11,8 @@ import (
 
 // density returns the density of the case, in SI.
 func (w *work) density() (float64, bool) {
-	for _, c := range w.e.study.Cases {
-		if c.Name != w.q.Case {
-			continue
-		}
-		for _, r := range c.References {
-			unit, err := quantity.Parse(r.Unit)
-			if r.Symbol == Density && err == nil && unit.Dimension == (quantity.Dimension{-3, 1}) && r.Value > 0 {
-				return unit.ToSI(r.Value), true
-			}
-		}
-	}
-	return 0, false
+	rho, known := w.e.cardValue(w.q.Case, Density, quantity.Dimension{-3, 1})
+	return rho, known && rho > 0
 }
 
 // byDensity brings a pressure divided by density to a pressure, where the

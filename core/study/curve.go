@@ -62,6 +62,10 @@ func (e *evaluation) load(slip *Slip) (*curve, []notice.Notice) {
 	if notice.Any(l.notices, notice.Stop) {
 		return nil, l.notices
 	}
+	if slip.Derive.Value == DeriveLift {
+		scalar, more := e.deriveLoop(c)
+		return scalar, append(l.notices, more...)
+	}
 	return c, l.notices
 }
 

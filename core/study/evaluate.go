@@ -200,6 +200,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		w.budget()
 		w.agree()
 		w.doubtComparison()
+		w.otherReferences()
 		w.scores()
 		w.judge()
 		w.draw()
@@ -222,7 +223,8 @@ type work struct {
 	cell         Cell
 
 	reference *curve
-	runs      []run // finest first
+	others    []*curve // further references of a scalar
+	runs      []run    // finest first
 	grids     *curve
 	sizes     []float64
 
@@ -291,10 +293,15 @@ func (w *work) findReference() {
 		w.need(2, true, "reference data", w.q.target("reference"), "reference-missing", w.q.label())
 		return
 	}
-	if len(found) > 1 {
-		w.need(2, false, "the choice of one reference", slipTarget(found[1], "role"), "reference-many", len(found), w.q.label(), w.e.study.fileName(found[0]))
-	}
 	w.reference = w.use(found[0])
+	for _, p := range found[1:] {
+		c := w.use(p)
+		if c != nil && c.scalar() && w.reference != nil && w.reference.scalar() {
+			w.others = append(w.others, c) // held against the first
+			continue
+		}
+		w.need(2, false, "the choice of one reference", slipTarget(p, "role"), "reference-many", len(found), w.q.label(), w.e.study.fileName(found[0]))
+	}
 	if w.cell.Reference == "" {
 		w.cell.Reference = w.e.study.fileName(found[0])
 	}
@@ -489,6 +496,10 @@ func (p *Slip) fields() []slipField {
 		all = append(all,
 			slipField{path: "grid", name: "grid", field: p.Grid, course: 1},
 			slipField{path: "cells", name: "number of cells", field: p.Cells, course: 1})
+	}
+	if p.Derive.Value == DeriveLift {
+		all = append(all, slipField{path: "contour.column", name: "second coordinate", field: p.Contour.Column, needed: true, course: 2},
+			slipField{path: "contour.unit", name: "unit of the second coordinate", field: p.Contour.Unit, needed: true, course: 2, unitOf: orWord(p.Contour.Column.Value, "the second coordinate")})
 	}
 	if p.Role.Value == GridValues {
 		all = append(all, slipField{path: "size.column", name: "column of cell counts", field: p.Size.Column, needed: true, course: 1})

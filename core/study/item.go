@@ -138,25 +138,49 @@ func (m *Matching) enterSensitivity(value string) (string, error) {
 	return before, nil
 }
 
-// enterDensity sets the density of a case card, in kg/m³; the empty value
-// takes it back.
-func (s *Study) enterDensity(caseName, value string) (string, error) {
+// cardFields are the reference quantities of a case that are entered by name.
+var cardFields = map[string]ReferenceQuantity{
+	"density":  {Symbol: Density, Unit: "kg/m^3"},
+	"pressure": {Symbol: DynamicPressure, Unit: "Pa"},
+	"length":   {Symbol: RefLength, Unit: "m"},
+	"angle":    {Symbol: Angle, Unit: "deg"},
+}
+
+// CardValue returns what was entered for a field of a case card, as text.
+func (s *Study) CardValue(caseName, field string) string {
+	for _, c := range s.Cases {
+		for _, r := range c.References {
+			if c.Name == caseName && r.Symbol == cardFields[field].Symbol {
+				return trim(r.Value)
+			}
+		}
+	}
+	return ""
+}
+
+// enterCard sets a reference quantity of a case in the unit of its field; the
+// empty value takes it back.
+func (s *Study) enterCard(caseName string, r ReferenceQuantity, value string) (string, error) {
 	card := s.card(caseName)
 	before := ""
 	kept := []ReferenceQuantity{}
-	for _, r := range card.References {
-		if r.Symbol == Density {
-			before = trim(r.Value)
+	for _, have := range card.References {
+		if have.Symbol == r.Symbol {
+			before = trim(have.Value)
 			continue
 		}
-		kept = append(kept, r)
+		kept = append(kept, have)
 	}
 	if strings.TrimSpace(value) != "" {
-		v := 0.0
-		if _, err := number(&v, value, 1e-9, 1e9); err != nil {
+		lowest := 1e-12
+		if r.Symbol == Angle {
+			lowest = -360
+		}
+		if _, err := number(&r.Value, value, lowest, 1e12); err != nil {
 			return before, err
 		}
-		kept = append(kept, ReferenceQuantity{Symbol: Density, Value: v, Unit: "kg/m^3", Origin: "entered"})
+		r.Origin = "entered"
+		kept = append(kept, r)
 	}
 	card.References = kept
 	return before, nil

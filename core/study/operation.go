@@ -258,7 +258,7 @@ func (p *Slip) entry(path string) *Field {
 	return map[string]*Field{
 		"role": &p.Role, "case": &p.Case, "quantity": &p.Quantity, "model": &p.Model, "grid": &p.Grid, "cells": &p.Cells,
 		"x.column": &p.X.Column, "x.unit": &p.X.Unit, "y.column": &p.Y.Column, "y.unit": &p.Y.Unit,
-		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit, "axis": &p.Axis, "u_basis": &p.UBasis,
+		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit, "axis": &p.Axis, "derive": &p.Derive, "contour.column": &p.Contour.Column, "contour.unit": &p.Contour.Unit, "u_basis": &p.UBasis,
 	}[path]
 }
 
@@ -287,8 +287,8 @@ func (s *Study) enter(t Target, value string) (string, error) {
 	case ItemCondition, ItemRegion, ItemApplication:
 		return s.enterItem(t, value)
 	case "case":
-		if t.Field == "density" {
-			return s.enterDensity(t.ID, value)
+		if r, known := cardFields[t.Field]; known {
+			return s.enterCard(t.ID, r, value)
 		}
 	}
 	if text := s.text(t); text != nil {

@@ -113,6 +113,8 @@ type Slip struct {
 	U        ColumnUse `json:"u"`        // uncertainty of the quantity, independent between stations
 	UFactor  Field     `json:"u_factor"` // coverage of U: "1", "2", "95 %", "limits"
 	UBasis   Field     `json:"u_basis"`  // of U in percent: BasisReading, or the full scale in the unit of Y
+	Derive   Field     `json:"derive"`   // DeriveLift, or empty: the values as they are
+	Contour  ColumnUse `json:"contour"`  // second coordinate of a section, for DeriveLift
 	Size     ColumnUse `json:"size"`     // cell counts, for grid values
 	Axis     Field     `json:"axis"`     // of a monitor: iterations or samples in time
 }

@@ -110,9 +110,9 @@ export class Engine {
     });
   }
 
-  /** Keeps the study that a new core opens first; the bytes are copied. */
-  remember(study: Uint8Array): void {
-    this.#study = new Uint8Array(study);
+  /** Keeps the study that a new core opens first; the bytes are kept as they are and must not be changed. */
+  remember(study: Uint8Array<ArrayBuffer>): void {
+    this.#study = study;
   }
 
   /**

@@ -285,6 +285,8 @@ export interface FileCard {
   size: string;
   uses: string[] | null;
   rejects: string[] | null;
+  stated: string[] | null;
+  reading: Entry[] | null;
 }
 
 export interface StudyEntry {

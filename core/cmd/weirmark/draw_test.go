@@ -201,6 +201,56 @@ func TestBarsHaveTheirLength(t *testing.T) {
 	}
 }
 
+// The strokes of a hatched area stay inside it, at the distance asked for.
+func TestHatchingStaysInItsArea(t *testing.T) {
+	c := bump()
+	c.Sources = []study.SourceLine{{Name: "balance", Of: study.OfData, Share: 0.25}, {Name: "angle", Of: study.OfInput, Share: 0.5}, {Name: "grid", Of: study.OfNumerical, Share: 0.25}}
+	f, err := chart.Budget(c, "x", chart.Light)
+	if err != nil {
+		t.Fatal(err)
+	}
+	all, _ := elements(t, svgOf(t, started(t), f, "x"))
+	place := regexp.MustCompile(`([\d.]+) ([\d.]+)`)
+	points := func(d string) (list [][2]float64) {
+		for _, m := range place.FindAllStringSubmatch(d, -1) {
+			x, _ := strconv.ParseFloat(m[1], 64)
+			y, _ := strconv.ParseFloat(m[2], 64)
+			list = append(list, [2]float64{x, y})
+		}
+		return list
+	}
+	// The library rounds places to 0.1 px.
+	const room = 0.11
+	hatched := 0
+	for i, e := range all[1:] {
+		area, strokes := points(attribute(all[i], "points")), points(attribute(e, "d"))
+		if e.Name.Local != "path" || len(area) == 0 || len(strokes) == 0 {
+			continue
+		}
+		hatched++
+		low, high := area[0], area[0]
+		for _, a := range area {
+			for k := range a {
+				low[k], high[k] = min(low[k], a[k]), max(high[k], a[k])
+			}
+		}
+		for _, s := range strokes {
+			if s[0] < low[0]-room || s[0] > high[0]+room || s[1] < low[1]-room || s[1] > high[1]+room {
+				t.Errorf("a stroke at %v leaves its area %v to %v", s, low, high)
+			}
+		}
+		// Level strokes lie 4 px apart.
+		for k := 2; strokes[0][1] == strokes[1][1] && k < len(strokes); k += 2 {
+			if step := strokes[k][1] - strokes[k-2][1]; math.Abs(step-4) > room {
+				t.Errorf("strokes lie %v px apart, want 4", step)
+			}
+		}
+	}
+	if hatched != 2 {
+		t.Errorf("%d hatched areas, want 2: input and numerical", hatched)
+	}
+}
+
 func TestSVGRefuses(t *testing.T) {
 	r := started(t)
 	f := figuresOf(t)[0]

@@ -112,9 +112,9 @@ func halfThickness(x float64) float64 {
 }
 
 // lowerTaps are those of the lower branch from the leading edge on. The level
-// is the one for which the lift from all taps is 0.436.
+// is the one for which the lift from the taps of repeat 1 is 0.436.
 func lowerTaps() []tap {
-	const level = 0.0563
+	const level = 0.0515
 	taps := make([]tap, 24)
 	for i := range taps {
 		x := 0.026 + 0.94*math.Pow(float64(i)/23, 1.25)
@@ -135,17 +135,19 @@ func loop() []tap {
 	return append(taps, lowerTaps()...)
 }
 
-// tapLift is the lift coefficient that the taps give, by the trapezoid rule
-// in x from the first tap to the last.
+// tapLift is the lift coefficient that the taps give, by the trapezium rule
+// round the closed contour at 4.2 degrees.
 func tapLift() float64 {
-	sum := func(taps []tap) float64 {
-		s := 0.
-		for i := 1; i < len(taps); i++ {
-			s += (taps[i].d + taps[i-1].d) / 2 * (taps[i].x - taps[i-1].x)
-		}
-		return s
+	taps := loop()
+	normal, axial := 0., 0.
+	for i := range taps {
+		a, b := taps[i], taps[(i+1)%len(taps)]
+		p := (a.d + b.d) / 2
+		normal += p * (b.x - a.x) // the contour runs from the trailing edge over the upper side
+		axial -= p * (b.y - a.y)
 	}
-	return sum(lowerTaps()) - sum(upperTaps())
+	alpha := 4.2 * math.Pi / 180
+	return normal*math.Cos(alpha) - axial*math.Sin(alpha)
 }
 
 func invented(line string) string { return "# " + line + " (invented)" }

@@ -76,7 +76,7 @@ func TestStoryNumbers(t *testing.T) {
 	}{
 		{"mean Cd of the balance", mean(balanceDrag[:]), .02960, 5e-6},
 		{"mean Cl of the balance", mean(balanceLift[:]), .412, 5e-5},
-		{"Cl of the taps", tapLift(), .436, 5e-4},
+		{"Cl of the taps without scatter", tapLift(), .4343, 5e-4}, // repeat 1 with its scatter gives 0.436, which core/message tests
 		{"ratio of areas", frontal, 1 / thick, .01},
 		{"dynamic pressure", density * speed * speed / 2, dynamic, .05},
 	} {
