@@ -292,11 +292,17 @@ func (b *builder) crossings(i int, c study.Cell) []Node {
 			if x.Rising {
 				way = " (rising)"
 			}
-			nodes = append(append(nodes, withUnit(trimmed(x.X, 5, fmt.Sprintf("cells.%d.crossings.%s.%d.x", i, key, j)), c.XUnit)...), text(way))
+			at := fmt.Sprintf("cells.%d.crossings.%s.%d.", i, key, j)
+			place := trimmed(x.X, 5, at+"x")
+			if x.U.Known() {
+				nodes = append(nodes, place, text(" ± "))
+				place = trimmed(x.U, 2, at+"u")
+			}
+			nodes = append(append(nodes, withUnit(place, c.XUnit)...), text(way))
 		}
 		return nodes
 	}
-	words := append([]Node{strong("Zero crossings"), text(", linear between neighbours, without an uncertainty of the position: simulation ")}, side("sim", c.Crossings.Simulation)...)
+	words := append([]Node{strong("Zero crossings"), text(", linear between neighbours, ± the standard uncertainty of the values (u_num of the simulation, u_D of the data) over the slope there: simulation ")}, side("sim", c.Crossings.Simulation)...)
 	words = append(append(words, text(", reference ")), side("ref", c.Crossings.Reference)...)
 	return []Node{paragraph(append(words, text("."))...)}
 }

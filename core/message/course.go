@@ -200,11 +200,14 @@ func sameAnswer(c *study.Cell) string {
 	if c.Summary == nil {
 		return "Not compared yet: " + firstBlocking(c)
 	}
-	unit := orText(c.Unit, "no stated unit")
-	if unit == "1" {
-		unit = "a pure number"
+	unit := "in " + c.Unit
+	switch c.Unit {
+	case "":
+		unit = "without a stated unit"
+	case "1":
+		unit = "pure numbers"
 	}
-	answer := "Both sides in " + unit + "; " + stationsOf(c) + " compared against " + orText(c.Reference, "the reference")
+	answer := "Both sides are " + unit + "; " + stationsOf(c) + " compared against " + orText(c.Reference, "the reference")
 	if c.Kind != "" {
 		answer += " (" + c.Kind + ")"
 	}
@@ -298,7 +301,7 @@ func agreeTables(c *study.Cell) []Table {
 	}
 	tables = append(tables, scoreTables(c)...)
 	if x := c.Crossings; len(x.Simulation)+len(x.Reference) > 0 {
-		tables = append(tables, Table{Title: "Changes of sign", Head: []string{"side", name, "direction"}, Rows: append(crossingRows("simulation", x.Simulation), crossingRows("reference", x.Reference)...)})
+		tables = append(tables, Table{Title: "Changes of sign", Head: []string{"side", name, "u", "direction"}, Rows: append(crossingRows("simulation", x.Simulation), crossingRows("reference", x.Reference)...)})
 	}
 	return tables
 }
@@ -371,7 +374,7 @@ func crossingRows(side string, list []study.Crossing) [][]string {
 		if x.Rising {
 			direction = "rising"
 		}
-		rows = append(rows, []string{side, text(x.X, 4), direction})
+		rows = append(rows, []string{side, text(x.X, 4), text(x.U, 2), direction})
 	}
 	return rows
 }

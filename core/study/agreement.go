@@ -8,6 +8,7 @@ import (
 
 	"weirmark/core/comparison"
 	"weirmark/core/derived"
+	"weirmark/core/interpolate"
 	"weirmark/core/metric"
 	"weirmark/core/notice"
 	"weirmark/core/quantity"
@@ -327,15 +328,33 @@ func (w *work) crossings() {
 	if w.cell.Scalar {
 		return
 	}
-	list := func(c *curve) []Crossing {
+	list := func(c *curve, u []float64) []Crossing {
 		out := []Crossing{}
 		if c == nil || c.scalar() {
 			return out
 		}
-		for _, at := range derived.Crossings(inUnit(c.x, c.xUnit, w.xUnit), inUnit(c.y, c.yUnit, w.yUnit)) {
-			out = append(out, Crossing{X: Number(w.xUnit.FromSI(at.X)), Rising: at.Rising})
+		x, y := inUnit(c.x, c.xUnit, w.xUnit), inUnit(c.y, c.yUnit, w.yUnit)
+		for _, at := range derived.Crossings(x, y) {
+			place := Crossing{X: Number(w.xUnit.FromSI(at.X)), U: None, Rising: at.Rising}
+			if v, known := w.between(at.X, u); known {
+				place.U = Number(w.xUnit.StepFromSI(derived.CrossingU(x, y, at.X, v)))
+			}
+			out = append(out, place)
 		}
 		return out
 	}
-	w.cell.Crossings = Crossings{Simulation: list(w.finest()), Reference: list(w.reference)}
+	w.cell.Crossings = Crossings{Simulation: list(w.finest(), w.uNum), Reference: list(w.reference, w.uD)}
+}
+
+// between returns an uncertainty between the stations around a place.
+func (w *work) between(at float64, u []float64) (float64, bool) {
+	if u == nil || len(w.x) < 2 {
+		return 0, false
+	}
+	x, y := ascending(w.x, u)
+	value := make([]float64, 1)
+	if len(x) < 2 || interpolate.At(value, x, y, []float64{at}, interpolate.Linear) != nil || math.IsNaN(value[0]) {
+		return 0, false
+	}
+	return value[0], true
 }

@@ -130,3 +130,15 @@ func TestLeavingOutRegions(t *testing.T) {
 		t.Errorf("alternatives %+v", c.Fragile)
 	}
 }
+
+// The place of a crossing carries the uncertainty of the values over the
+// slope: y = x - 0.41 with u_num = u_D = 0.01 has u = 0.01 in x.
+func TestCrossingUncertainty(t *testing.T) {
+	f := func(x float64) float64 { return x - .41 }
+	c := only(t, pair(rows(30, even, f), rows(20, func(i int) float64 { return float64(i) / 19 }, f), "m", "m"))
+	for name, list := range map[string][]study.Crossing{"simulation": c.Crossings.Simulation, "reference": c.Crossings.Reference} {
+		if len(list) != 1 || math.Abs(float64(list[0].X)-.41) > 1e-6 || math.Abs(float64(list[0].U)-.01) > 1e-5 {
+			t.Errorf("%s: %+v", name, list)
+		}
+	}
+}

@@ -316,9 +316,12 @@ type Crossings struct {
 	Reference  []Crossing `json:"ref"`
 }
 
-// Crossing is one change of sign.
+// Crossing is one change of sign. U is the standard uncertainty of its place,
+// from that of the values there over the slope: of the simulation by u_num,
+// of the data by u_D; null outside the stations.
 type Crossing struct {
 	X      Number `json:"x"`
+	U      Number `json:"u"`
 	Rising bool   `json:"rising"`
 }
 

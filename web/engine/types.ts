@@ -691,6 +691,7 @@ export interface CriterionLine {
 
 export interface Crossing {
   x: number | null;
+  u: number | null;
   rising: boolean;
 }
 
