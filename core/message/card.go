@@ -6,6 +6,7 @@ import (
 	"strconv"
 
 	"weirmark/core/notice"
+	"weirmark/core/profile"
 	"weirmark/core/quantity"
 	"weirmark/core/study"
 	"weirmark/core/tablefile"
@@ -151,7 +152,14 @@ func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
 	}
 	if p.X.Column.Given() && (p.Role.Value == study.Simulation || p.Role.Value == study.Reference) {
 		list = append(list, entry("derive", "taken", p.Derive, []Option{{"", "as a curve"}, {study.DeriveLift, "as the lift of a closed section"}}, ""))
-		if p.Derive.Value == study.DeriveLift {
+		loop := false
+		if x, err := t.Column(p.X.Column.Value); err == nil {
+			loop = profile.Loop(x.Values)
+		}
+		if loop || p.Branch.Given() {
+			list = append(list, entry("branch", "branch", p.Branch, []Option{{"", "the whole"}, {profile.Upper, "upper"}, {profile.Lower, "lower"}, {profile.First, "first in the file"}, {profile.Second, "second in the file"}}, "upper and lower need the second coordinate"))
+		}
+		if p.Derive.Value == study.DeriveLift || p.Branch.Given() {
 			list = append(list, entry("contour.column", "second coordinate in", p.Contour.Column, columns, ""), entry("contour.unit", "its unit", p.Contour.Unit, free, "m, mm, … or 1 for a pure number"))
 		}
 	}

@@ -89,6 +89,9 @@ var table = map[string]row{
 	// Curves and stations.
 	"curve-unsorted":        {Note, "Rows of %s were not in order of %s; they were ordered for resampling. The file order is kept in the record."},
 	"curve-loop":            {Stop, "%s goes out and back in %s: a curve with %d branches has no single value at a station. It was not resampled. Split it into branches first."},
+	"branch-none":           {Stop, "%s was to be split into branches, but %s. Nothing of it was used. Choose the whole curve, or check the column of stations."},
+	"branch-taken":          {Note, "Of %s the %s branch was taken: %d of %d rows, named %s."},
+	"branch-name":           {Stop, "There is no branch %q of %s: its branches are %s and %s. Choose one of them, or give the second coordinate."},
 	"curve-duplicate":       {Note, "%d repeated rows of %s (same abscissa, same value) were used once."},
 	"curve-jump":            {Ask, "At %s = %s, %s has the values %s and %s: repeat readings, a jump, or a mistake? Stations there are not compared."},
 	"curve-jumps":           {Ask, "There are %d more places of %s where %s has different values. Stations there are not compared."},

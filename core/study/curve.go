@@ -5,6 +5,7 @@ import (
 	"strconv"
 
 	"weirmark/core/notice"
+	"weirmark/core/profile"
 	"weirmark/core/quantity"
 	"weirmark/core/tablefile"
 	"weirmark/core/uncertainty"
@@ -62,6 +63,12 @@ func (e *evaluation) load(slip *Slip) (*curve, []notice.Notice) {
 	if notice.Any(l.notices, notice.Stop) {
 		return nil, l.notices
 	}
+	if slip.Branch.Given() && c.x != nil {
+		l.takeBranch(c)
+	}
+	if notice.Any(l.notices, notice.Stop) {
+		return nil, l.notices
+	}
 	if slip.Derive.Value == DeriveLift {
 		scalar, more := e.deriveLoop(c)
 		return scalar, append(l.notices, more...)
@@ -75,6 +82,50 @@ func asNotice(err error) notice.Notice {
 		return n
 	}
 	return notice.New("study-error", err.Error())
+}
+
+// takeBranch keeps the rows of one branch; the others become gaps at the ends,
+// so that rows keep their lines.
+func (l *loader) takeBranch(c *curve) {
+	var height []float64
+	if c.slip.Contour.Column.Given() {
+		height, _ = l.column(c.slip.Contour)
+	}
+	branches, err := profile.Branches(c.x, height)
+	if err != nil {
+		l.tell(notice.New("branch-none", l.file, err.Error()))
+		return
+	}
+	for _, b := range branches {
+		if b.Name != c.slip.Branch.Value {
+			continue
+		}
+		x, y := blank(len(c.x)), blank(len(c.y))
+		for _, r := range b.Rows {
+			x[r], y[r] = c.x[r], c.y[r]
+		}
+		c.x, c.y = x, y
+		l.tell(notice.New("branch-taken", l.file, b.Name, len(b.Rows), len(c.table.Columns[0].Values), branchSide(c)))
+		return
+	}
+	l.tell(notice.New("branch-name", c.slip.Branch.Value, l.file, branches[0].Name, branches[1].Name))
+}
+
+// branchSide says by what the branches were named.
+func branchSide(c *curve) string {
+	if c.slip.Contour.Column.Given() {
+		return "by " + c.slip.Contour.Column.Value
+	}
+	return "by their order in the file"
+}
+
+// blank returns n missing values.
+func blank(n int) []float64 {
+	out := make([]float64, n)
+	for i := range out {
+		out[i] = math.NaN()
+	}
+	return out
 }
 
 type loader struct {

@@ -489,6 +489,9 @@ func (p *Slip) fields() []slipField {
 			all = append(all, slipField{path: "u_basis", name: "basis of " + p.U.Column.Value, field: p.UBasis, needed: true, course: 2})
 		}
 	}
+	if p.Branch.Given() {
+		all = append(all, slipField{path: "branch", name: "branch", field: p.Branch, course: 2})
+	}
 	if p.Role.Value == Monitor {
 		all = append(all, slipField{path: "axis", name: "kind of monitor", field: p.Axis, needed: true, course: 0})
 	}

@@ -258,7 +258,7 @@ func (p *Slip) entry(path string) *Field {
 	return map[string]*Field{
 		"role": &p.Role, "case": &p.Case, "quantity": &p.Quantity, "model": &p.Model, "grid": &p.Grid, "cells": &p.Cells,
 		"x.column": &p.X.Column, "x.unit": &p.X.Unit, "y.column": &p.Y.Column, "y.unit": &p.Y.Unit,
-		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit, "axis": &p.Axis, "derive": &p.Derive, "contour.column": &p.Contour.Column, "contour.unit": &p.Contour.Unit, "u_basis": &p.UBasis,
+		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit, "axis": &p.Axis, "branch": &p.Branch, "derive": &p.Derive, "contour.column": &p.Contour.Column, "contour.unit": &p.Contour.Unit, "u_basis": &p.UBasis,
 	}[path]
 }
 

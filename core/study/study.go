@@ -113,8 +113,9 @@ type Slip struct {
 	U        ColumnUse `json:"u"`        // uncertainty of the quantity, independent between stations
 	UFactor  Field     `json:"u_factor"` // coverage of U: "1", "2", "95 %", "limits"
 	UBasis   Field     `json:"u_basis"`  // of U in percent: BasisReading, or the full scale in the unit of Y
+	Branch   Field     `json:"branch"`   // of a curve that goes out and back: a name of package profile, or empty
 	Derive   Field     `json:"derive"`   // DeriveLift, or empty: the values as they are
-	Contour  ColumnUse `json:"contour"`  // second coordinate of a section, for DeriveLift
+	Contour  ColumnUse `json:"contour"`  // second coordinate of a section, for branches and DeriveLift
 	Size     ColumnUse `json:"size"`     // cell counts, for grid values
 	Axis     Field     `json:"axis"`     // of a monitor: iterations or samples in time
 }

@@ -160,10 +160,18 @@ export async function onTrouble(on, file, served) {
       await new Promise((resolve) => setTimeout(resolve, 1500));
       let longest = 0;
       let last = performance.now();
-      const watch = setInterval(() => {
-        longest = Math.max(longest, performance.now() - last);
-        last = performance.now();
-      }, 1);
+      let watch;
+      let tasks;
+      if (PerformanceObserver.supportedEntryTypes.includes("longtask")) {
+        tasks = new PerformanceObserver((all) => all.getEntries().forEach((one) => (longest = Math.max(longest, one.duration))));
+        tasks.observe({ type: "longtask" });
+      } else {
+        // Without the browser's own account a timer sees each task, and what it waits itself.
+        watch = setInterval(() => {
+          longest = Math.max(longest, performance.now() - last);
+          last = performance.now();
+        }, 1);
+      }
       const data = new DataTransfer();
       data.items.add(file);
       document.body.dispatchEvent(new DragEvent("drop", { dataTransfer: data, bubbles: true, cancelable: true }));
@@ -175,7 +183,9 @@ export async function onTrouble(on, file, served) {
           }
         }, 5);
       });
+      await new Promise((resolve) => setTimeout(resolve, 100));
       clearInterval(watch);
+      tasks?.disconnect();
       return { longest, size: file.size };
     }, name);
     // The better of two: what else the machine does holds the page up as well.
@@ -183,6 +193,6 @@ export async function onTrouble(on, file, served) {
     const longest = Math.min(...runs.map((run) => run.longest));
     holds(runs.every((run) => run.size > 38e6), `sizes: ${runs.map((run) => run.size)}`);
     holds(longest < 50, `the page stood still for ${runs.map((run) => Math.round(run.longest))} ms`);
-    return `longest wait ${runs.map((run) => Math.round(run.longest)).join(" and ")} ms`;
+    return `longest task over 50 ms, or longest wait: ${runs.map((run) => Math.round(run.longest)).join(" and ")} ms`;
   });
 }
