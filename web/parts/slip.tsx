@@ -74,7 +74,7 @@ function Unfolded({ slip, all }: { slip: SlipCard; all: SlipCard[] }) {
     for (const entry of others) {
       await desk.change(entry.value === offer!.value ? { kind: "accept", target: entry.target } : { kind: "set", target: entry.target, value: offer!.value });
     }
-    setOffer(undefined);
+    setOffer((now) => (now === offer ? undefined : now)); // another may have come meanwhile
   };
   return (
     <article class="slip" id={"slip-" + slip.id} aria-label={slip.name}>

@@ -153,11 +153,11 @@ export async function onDemo(on, file) {
   await on("conditions are added to their list, said and taken away", file, async (person) => {
     await person.press("3");
     await person.click("add one", ".list");
-    await person.correct("condition", "angle", ".list");
-    holds((await person.text(".list")).includes("angle"), await person.text(".list"));
+    await person.correct("condition", "incidence", ".list");
+    holds((await person.text(".list")).includes("incidence"), await person.text(".list"));
     await person.click("remove", ".list");
     await person.press("Enter");
-    holds(!(await person.text(".list")).includes("angle"), await person.text(".list"));
+    holds(!(await person.text(".list")).includes("incidence"), await person.text(".list"));
   });
 
   await on("the whole campaign: a full board, and slips that are folded until one is needed", file, async (person) => {

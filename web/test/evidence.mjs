@@ -58,7 +58,7 @@ export async function onSharedFiles(on, file, served, files) {
     }
     // The files' own record names the reattachment that this model predicts as near 6.1 step heights.
     const rising = await person.page.evaluate(() =>
-      [...document.querySelectorAll(".folded-table tr")].map((row) => [...row.cells].map((cell) => cell.textContent)).filter(([side, , way]) => side === "simulation" && way === "rising"),
+      [...document.querySelectorAll(".folded-table tr")].map((row) => [...row.cells].map((cell) => cell.textContent)).filter(([side, , , way]) => side === "simulation" && way === "rising"),
     );
     holds(rising.some(([, x]) => Math.abs(Number(x) - 6.1) < 0.1), `changes of sign: ${JSON.stringify(rising)}`);
     await person.page.evaluate(() => [...document.querySelectorAll("button")].find((one) => one.innerText === "Save the memo").focus());
@@ -92,6 +92,7 @@ export async function onSharedFiles(on, file, served, files) {
       await person.correct(label, value, first);
       holds((await person.text(`${first} .offer`)).includes("4 more tables"), `offer for ${label}: ${await person.text(first)}`);
       await person.click("Say the same", `${first} .offer`);
+      await person.until((offer) => document.querySelector(offer) === null, `${first} .offer`);
     }
     same(await person.page.$$eval(".slip [data-place$='|y.column']", (all) => all.slice(0, 5).map((one) => one.innerText)), Array(5).fill("c5"), "columns");
     const cells = ["901120", "225280", "56320", "14080", "3520"];
