@@ -68,7 +68,7 @@ func demoPressure(s *study.Study, ids map[string]string) {
 		Kind: entered(study.KindTest), Use: entered(study.UseValidation),
 		Sources: []study.Source{
 			{Name: "reference pressure of the tunnel", Of: study.OfData, Value: .020, Basis: study.Absolute, Coverage: entered("standard"), Pattern: study.Common, Origin: "stated by the test lead"},
-			{Name: "grid, from a study at other taps", Of: study.OfNumerical, Value: .004, Basis: study.Absolute, Coverage: entered("standard"), Pattern: study.Independent, Origin: "entered: borrowed from a study of the same family"},
+			{Name: "grid, from a study at other taps", Of: study.OfNumerical, Value: .004, Basis: study.Absolute, Coverage: entered("standard"), Pattern: study.Independent, Origin: "borrowed from a study of the same family"},
 		},
 		Choices: study.DefaultChoices(),
 	})

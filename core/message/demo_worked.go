@@ -189,10 +189,10 @@ func workedQuestions() []study.Question {
 	lift.Condition, lift.Conditions = "α = 4.2°", demoAngle(4.2, 4.2, 0)
 	lift.Answers = map[string]string{"references-differ": "the balance holds: 48 taps miss the suction peak and the ends; data consistency stays open with the laboratory"}
 	legacy := demoQuestion("C1", demoLegacyName, "Cp", "older report",
-		demoSource(study.OfNumerical, "grid, from a study at other taps", .004, study.Independent, "entered: borrowed from a study of the same family"))
+		demoSource(study.OfNumerical, "grid, from a study at other taps", .004, study.Independent, "borrowed from a study of the same family"))
 	legacy.Use, legacy.Downward = entered(study.UseTuning), true
 	wake := demoQuestion("C1", demoWakeName, "U", "OR-26 hot film",
-		demoSource(study.OfNumerical, "grid, from the runs of the drag", .10, study.Independent, "entered: borrowed from a study of the same family"),
+		demoSource(study.OfNumerical, "grid, from the runs of the drag", .10, study.Independent, "borrowed from a study of the same family"),
 		demoSource(study.OfInput, "inputs (α, U, turbulence)", .05, study.Common, "run pairs of the analyst"))
 	wake.Conditions = demoAngle(4.2, 4.2, 0)
 	line := demoQuestion("C1", demoLineName, "u", "OR-26 laser", demoSource(study.OfInput, "inputs (α, U, turbulence)", .05, study.Common, "run pairs of the analyst"))
@@ -200,7 +200,7 @@ func workedQuestions() []study.Question {
 	drag := demoQuestion("C2", demoDragName, "Cd", "OR-26/5",
 		demoSource(study.OfData, "balance calibration and corrections", .00055, study.Common, demoSheet),
 		demoSource(study.OfInput, "inputs (α, U, turbulence)", .0004, study.Common, "run pairs of the analyst"),
-		ofModel("A", demoSource(study.OfNumerical, "grid, no family", .0103, study.Independent, "entered: three times the range of the four grids at 95 %, halved")))
+		ofModel("A", demoSource(study.OfNumerical, "grid, no family", .0103, study.Independent, "three times the range of the four grids at 95 %, halved")))
 	drag.Condition, drag.Requirement, drag.Conditions = "α = 9°", demoLimit(5), demoAngle(9, 9, 0)
 	drag.Answers = map[string]string{"monitor-cycle": "The mean flow is asked for; the half-range is counted as U_iter."}
 	scanner := demoSource(study.OfData, demoScanner, demoScannerHalf, study.Independent, demoSheet)
@@ -213,12 +213,12 @@ func workedQuestions() []study.Question {
 	length.Requirement = demoLimit(6)
 	least := demoQuestion("C3", demoLeastName, "Cf,min", "OR-26 oil film", demoSource(study.OfInput, "inputs (U, turbulence)", .00003, study.Common, "run pairs of the analyst"))
 	friction := demoQuestion("C3", demoFrictionName, "Cf", "OR-26 oil film",
-		ofModel("A", demoSource(study.OfNumerical, "grid, from the least value", .04, study.Independent, "entered: borrowed from a study of the same family")),
+		ofModel("A", demoSource(study.OfNumerical, "grid, from the least value", .04, study.Independent, "borrowed from a study of the same family")),
 		demoSource(study.OfInput, "inputs (U, turbulence)", .03, study.Common, "run pairs of the analyst"))
 	all := []study.Question{lift, legacy, wake, line, drag, row, length, least, friction}
 	for z := range demoZones {
 		q := demoQuestion("C3", demoZoneName(z), "u", "OR-26 laser",
-			demoSource(study.OfNumerical, "grid, from the line of C1", .15, study.Independent, "entered: borrowed from a study of the same family"),
+			demoSource(study.OfNumerical, "grid, from the line of C1", .15, study.Independent, "borrowed from a study of the same family"),
 			demoSource(study.OfInput, "inputs (U, turbulence)", .05, study.Common, "run pairs of the analyst"))
 		if z == 2 {
 			q.Scores = &study.Scoring{Dispersion: true} // the preset of the tracer, asked of a signed velocity
@@ -226,7 +226,7 @@ func workedQuestions() []study.Question {
 		all = append(all, q)
 	}
 	tracer := demoQuestion("C3", demoTracerName, "C/C0", "OR-26 ports",
-		demoSource(study.OfNumerical, "grid, from two runs", .006, study.Independent, "entered: borrowed from a study of the same family"),
+		demoSource(study.OfNumerical, "grid, from two runs", .006, study.Independent, "borrowed from a study of the same family"),
 		demoSource(study.OfInput, "inputs (U, source)", .01, study.Common, "run pairs of the analyst"))
 	tracer.Scores = &study.Scoring{Dispersion: true, Fraction: .25, Allowance: .03}
 	tracer.Regions = []study.Region{{Name: "third row", From: 25, To: 36}}

@@ -219,13 +219,16 @@ func (w *writer) withheld() {
 	case w.open("the uncertainty of the data"):
 		w.say(": E = ")
 		w.difference()
-		w.say(" against an experimental uncertainty of ")
+		w.say(", without ")
 		w.blank("", "the uncertainty of the data")
 		w.say(". Comparison only. Experimental uncertainty is not available; no validation statement is made. ")
 	default:
 		w.say(": E = ")
 		w.difference()
 		w.say(". ")
+	}
+	if c.Summary != nil {
+		w.kind()
 	}
 	w.say("No statement: ")
 	if len(c.Open) == 0 {
@@ -303,7 +306,7 @@ func (w *writer) scalar() {
 		w.mark(side, study.WordOf, w.result("agreement"))
 		w.say(" the data by more than they account for; E ± " + k + " u_val spans ")
 	case study.Between:
-		w.say("E lies between u_val and " + k + " u_val; its sign is not resolved; the model error lies within ")
+		w.say("|E| lies between u_val and " + k + " u_val; its sign is not resolved; the model error lies within ")
 	default:
 		w.say("|E| = " + strings.TrimLeft(e.text, "+−") + w.unit() + " does not exceed u_val. The model error is not distinguishable from the combined numerical, input and experimental uncertainty. This does not show that it is small; it lies within ")
 	}
@@ -348,9 +351,10 @@ func (w *writer) unit() string {
 }
 
 // kNum says the factor between the grid uncertainty and u_num, an assumption
-// that the statement can turn on.
+// that the statement can turn on. The bound of an oscillatory family has none.
 func (w *writer) kNum() {
-	if w.cell.Grids == nil || !w.cell.Grids.UNum.Known() {
+	g := w.cell.Grids
+	if g == nil || !g.UNum.Known() || !g.Along && !g.U.Known() {
 		return
 	}
 	w.say(" (k_num = ")
@@ -436,7 +440,7 @@ func (w *writer) requirement() {
 	c := w.cell
 	r := c.Requirement
 	if r == nil {
-		w.say("Adequacy is not judged: ")
+		w.say("Adequacy is not judged without ")
 		w.blank("", "an accuracy requirement")
 		w.say(". ")
 		return
