@@ -143,7 +143,7 @@ func alongCaption(c study.Cell, shown, beyond int) string {
 	text += fmt.Sprintf("; %s, %s. %s monotone, %s not.", counts(len(g.Points), "grid", "grids"),
 		counts(len(g.Local), "station", "stations"), grouped(g.Monotone), grouped(g.NonMonotone))
 	if g.OrderLow.Known() && g.OrderHigh.Known() {
-		text += fmt.Sprintf(" Local orders from %s to %s", quantity.Text(float64(g.OrderLow), 2), quantity.Text(float64(g.OrderHigh), 2))
+		text += fmt.Sprintf(" Half of the local orders lie between %s and %s", quantity.Text(float64(g.OrderLow), 2), quantity.Text(float64(g.OrderHigh), 2))
 		if g.Order.Known() {
 			text += "; common order " + trimmed(g.Order, 3)
 		}

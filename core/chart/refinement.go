@@ -287,6 +287,8 @@ func familyCaption(c study.Cell, measured bool) string {
 	}
 	if g.U.Known() {
 		text += " The bar on the finest grid is ± U = " + quantity.Text(float64(g.U), 2) + unitAfter(c) + " (95 %)."
+	} else if g.UNum.Known() {
+		text += " There is no bar: of such a family only a bound is known, u_num = " + quantity.Text(float64(g.UNum), 2) + unitAfter(c) + " (standard)."
 	} else {
 		text += " There is no bar: no grid uncertainty is available."
 	}

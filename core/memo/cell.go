@@ -234,7 +234,7 @@ func (b *builder) joint(i int, c study.Cell) []Node {
 			row(cell(text("\u2003\u2003of which a scale")), figureCell(hundredths(j.ScalePart, at("scale_part"))), figureCell(text("1")), figureCell(text("")), cell()),
 			row(cell(text("\u2003\u2003shape")), figureCell(hundredths(j.ShapePart, at("shape_part"))), figureCell(count(j.ShapeN, at("shape_n"))), figureCell(text("")), cell()))
 	}
-	nodes := []Node{title, b.table("plain", say("Joint statistic over {} with correlation: {}.", text(plural(len(c.Stations), "station")), given(j.Pattern)),
+	nodes := []Node{title, b.table("plain", say("Joint statistic over {} with correlation: {}.", text(plural(j.N, "station")), given(j.Pattern)),
 		headRow("", "#Value", "#Degrees of freedom", "#95 % point", "Reading"), rows...)}
 	words := say("The tail probability at the stated uncertainties is {}.", digits(j.P, 2, at("p_value")))
 	resolution := func(yes bool) string {
@@ -255,7 +255,11 @@ func (b *builder) joint(i int, c study.Cell) []Node {
 			signedBeside(j.Scale, j.UScale, at("scale")), digits(j.UScale, 2, at("u_scale")), text(resolution(j.ScaleResolved)))...)
 	}
 	if m := c.Summary; known(j.AtLeast) && m != nil && m.WithinKUVal < m.Tested {
-		words = append(words, say(" At least as many stations beyond *k* *u*_{val} as found have a probability of {}, by sampling.", digits(j.AtLeast, 2, at("at_least")))...)
+		chance := []Node{text(" of "), digits(j.AtLeast, 2, at("at_least"))}
+		if j.AtLeast == 0 {
+			chance = []Node{text(" too small for the draws to show: "), digits(j.AtLeast, 2, at("at_least")), text(" of them reached it")}
+		}
+		words = append(append(append(words, say(" At least as many stations beyond *k* *u*_{val} as found have a probability")...), chance...), text(", by sampling."))
 	}
 	if known(j.Independent, j.NumShared) {
 		words = append(words, say(" Other correlations: {} with every source independent between stations, {} with the numerical uncertainty fully shared.",

@@ -65,7 +65,12 @@ func grouped(digits string) string {
 	if len(digits) < 5 {
 		return digits
 	}
-	return grouped(digits[:len(digits)-3]) + "\u202f" + digits[len(digits)-3:]
+	groups := ""
+	for len(digits) > 3 {
+		groups = "\u202f" + digits[len(digits)-3:] + groups
+		digits = digits[:len(digits)-3]
+	}
+	return digits + groups
 }
 
 // digits returns v with n significant digits.

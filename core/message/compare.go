@@ -38,7 +38,7 @@ type CompareReply struct {
 	Summary   CompareSummary   `json:"summary"`
 	Joint     *CompareJoint    `json:"joint"`
 	Crossings CompareCrossings `json:"crossings"`
-	Notices   []notice.Notice  `json:"notices"`
+	Notices   []Finding        `json:"notices"`
 }
 
 // CompareStation is one common station.
@@ -107,7 +107,7 @@ func compare(s *Session, q *Request, attached [][]byte, r *Reply) ([][]byte, err
 	if err != nil {
 		return nil, err
 	}
-	report := study.Evaluate(one, study.Options{Read: func(f study.File) tablefile.File { return read[f.ID] }})
+	report := study.Evaluate(one, study.Options{Partial: true, Read: func(f study.File) tablefile.File { return read[f.ID] }})
 	c := &report.Cells[0]
 	for _, n := range c.Notices {
 		if n.Severity == notice.Stop && refusing[n.Code] {
@@ -118,14 +118,15 @@ func compare(s *Session, q *Request, attached [][]byte, r *Reply) ([][]byte, err
 	for _, p := range one.Slips {
 		unitless = unitless && !p.X.Unit.Given() && !p.Y.Unit.Given()
 	}
-	reply := compareReply(c, ask, unitless)
-	reply.Notices = append(append(append([]notice.Notice{}, report.Notices...), extra...), reply.Notices...)
+	reply := compareReply(c, ask)
+	notices := append(append(append([]notice.Notice{}, report.Notices...), extra...), compareNotices(c, ask, unitless)...)
+	reply.Notices = findings(notices, true)
 	r.Compare = reply
 	if ask.U == "" || ask.UK == "" || len(reply.Stations) == 0 {
 		r.Status = Incomplete
 	}
-	for _, n := range reply.Notices {
-		if n.Code == "u-coverage" || n.Code == "u-blank" || n.Code == "covariance-range" || n.Code == "covariance-size" {
+	for _, n := range notices {
+		if n.Severity != notice.Note { // a question is open, or a part was refused
 			r.Status = Incomplete
 		}
 	}
@@ -229,6 +230,8 @@ func sourceOf(name, of, pattern, value, coverage string) (study.Source, error) {
 		return s, notice.New("request-number", name, value)
 	case err != nil:
 		s.Column = value
+	case math.IsNaN(v) || math.IsInf(v, 0):
+		return s, notice.New("request-number", name, value)
 	case v < 0:
 		return s, notice.New("u-negative", value, name)
 	case percent:
@@ -249,21 +252,30 @@ func orText(text, other string) string {
 // pageOnly are told by the page, not by a command that has no page.
 var pageOnly = map[string]bool{"field-missing": true, "guess-open": true, "monitor-missing": true, "requirement-missing": true, "grid-one": true, "station-common": true, "curve-envelope": true}
 
-// compareReply lays out the cell. Where neither file states a unit, both are
-// in the same one: a command line has no other way to say so.
-func compareReply(c *study.Cell, ask *CompareRequest, unitless bool) *CompareReply {
-	reply := &CompareReply{Stations: []CompareStation{}, Outside: c.Outside, Notices: []notice.Notice{},
-		Crossings: CompareCrossings{Sim: at(c.Crossings.Simulation), Ref: at(c.Crossings.Reference)},
-		Summary:   CompareSummary{Bias: study.None, MAE: study.None, RMSE: study.None, MaxAbs: study.None}}
-	missing := ask.UNum == ""
+// compareNotices are the notices of the cell that a command line can answer.
+// Where neither file states a unit, both are in the same one: a command line
+// has no other way to say so.
+func compareNotices(c *study.Cell, ask *CompareRequest, unitless bool) []notice.Notice {
+	list := []notice.Notice{}
 	for _, n := range c.Notices {
 		if !pageOnly[n.Code] && !(unitless && n.Code == "unit-missing") {
-			reply.Notices = append(reply.Notices, n)
+			list = append(list, n)
 		}
 	}
-	if missing {
-		reply.Notices = append(reply.Notices, notice.New("u-num-missing"))
+	if ask.UNum == "" {
+		list = append(list, notice.New("u-num-missing"))
 	}
+	if ask.U == "" && !notice.Has(list, "u-missing") {
+		list = append(list, notice.New("u-missing"))
+	}
+	return list
+}
+
+// compareReply lays out the cell.
+func compareReply(c *study.Cell, ask *CompareRequest) *CompareReply {
+	reply := &CompareReply{Stations: []CompareStation{}, Outside: c.Outside,
+		Crossings: CompareCrossings{Sim: at(c.Crossings.Simulation), Ref: at(c.Crossings.Reference)},
+		Summary:   CompareSummary{Bias: study.None, MAE: study.None, RMSE: study.None, MaxAbs: study.None}}
 	for _, s := range c.Stations {
 		line := CompareStation{X: s.X, S: s.S, D: s.D, E: s.E, UD: s.UD, UNum: s.UNum, UInput: s.UInput, UVal: s.UVal, Ratio: s.Ratio}
 		if ask.UInterp {
@@ -292,9 +304,6 @@ func (r *CompareReply) withoutU() {
 	for i := range r.Stations {
 		s := &r.Stations[i]
 		s.UD, s.UVal, s.Ratio = study.None, study.None, study.None
-	}
-	if !notice.Has(r.Notices, "u-missing") {
-		r.Notices = append(r.Notices, notice.New("u-missing"))
 	}
 }
 

@@ -148,7 +148,7 @@ func TestStatementNeedsItsEvidence(t *testing.T) {
 		{"no input uncertainty", func(s *study.Study) { s.Questions[0].Sources = s.Questions[0].Sources[:1] }, "the input uncertainty", true, "Cd", true},
 		{"kind unknown", func(s *study.Study) { s.Questions[0].Kind = study.Field{} }, "the kind of reference", true, "Cd", true},
 		{"use unknown", func(s *study.Study) { s.Questions[0].Use = study.Field{} }, "what the data were used for", true, "Cd", true},
-		{"changed byte", func(s *study.Study) { s.Files[0].Data = append([]byte{}, append(s.Files[0].Data, ' ')...) }, "a readable drag coefficient", false, "Cd", false},
+		{"changed byte", func(s *study.Study) { s.Files[0].Data = append([]byte{}, append(s.Files[0].Data, ' ')...) }, "the unaltered file C1-balance.csv", false, "Cd", false},
 	}
 	plain := demoReport(t)
 	for _, row := range rows {

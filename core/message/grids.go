@@ -22,15 +22,15 @@ type GridsRequest struct {
 
 // GridsCase is the grid study of one column of one table.
 type GridsCase struct {
-	Table        string          `json:"table"`
-	Value        string          `json:"value"`
-	Class        string          `json:"class"`
-	Order        study.Number    `json:"order"`
-	Extrapolated study.Number    `json:"extrapolated"`
-	Ea           study.Number    `json:"ea"`
-	Eext         study.Number    `json:"eext"`
-	GCI          study.Number    `json:"gci"`
-	Notices      []notice.Notice `json:"notices"`
+	Table        string       `json:"table"`
+	Value        string       `json:"value"`
+	Class        string       `json:"class"`
+	Order        study.Number `json:"order"`
+	Extrapolated study.Number `json:"extrapolated"`
+	Ea           study.Number `json:"ea"`
+	Eext         study.Number `json:"eext"`
+	GCI          study.Number `json:"gci"`
+	Notices      []Finding    `json:"notices"`
 }
 
 // grids makes the grid study of every value column of every table.
@@ -102,7 +102,7 @@ func gridCases(file string, t tablefile.Table, ask GridsRequest) ([]GridsCase, e
 		res := refinement.Three(size.Values, c.Values, dim, refinement.Options{Bounded: ask.Limits, Formal: study.DefaultChoices().Formal})
 		cases = append(cases, GridsCase{Table: t.Name, Value: c.Name, Class: string(res.Class),
 			Order: study.Number(res.Order), Extrapolated: study.Number(res.Extrapolated), Ea: study.Number(res.Ea), Eext: study.Number(res.Eext), GCI: study.Number(res.GCI),
-			Notices: append(append([]notice.Notice{}, notices...), res.Notices...)})
+			Notices: findings(append(append([]notice.Notice{}, notices...), res.Notices...), false)})
 	}
 	return cases, nil
 }

@@ -8,10 +8,32 @@ import (
 
 // ReadReply says what a file holds; values are as written.
 type ReadReply struct {
-	File    string          `json:"file"`
-	SHA256  string          `json:"sha256"`
-	Tables  []ReadTable     `json:"tables"`
-	Notices []notice.Notice `json:"notices"`
+	File    string      `json:"file"`
+	SHA256  string      `json:"sha256"`
+	Tables  []ReadTable `json:"tables"`
+	Notices []Finding   `json:"notices"`
+}
+
+// Finding is a notice as the command prints it.
+type Finding struct {
+	Code     string          `json:"code"`
+	Severity notice.Severity `json:"severity"`
+	Text     string          `json:"text"`
+	Line     int             `json:"line"` // 0 where it is of the whole file
+}
+
+// findings returns notices as the command prints them; with several files
+// the text begins with the name of its own.
+func findings(list []notice.Notice, named bool) []Finding {
+	out := []Finding{}
+	for _, n := range list {
+		text := n.Text
+		if named && n.File != "" {
+			text = n.File + ": " + text
+		}
+		out = append(out, Finding{n.Code, n.Severity, text, n.Line})
+	}
+	return out
 }
 
 // ReadTable is one table.
@@ -35,7 +57,7 @@ func readFile(_ *Session, q *Request, attached [][]byte, r *Reply) ([][]byte, er
 		return nil, err
 	}
 	f := tablefile.Read(name, data, tablefile.Options{})
-	reply := &ReadReply{File: f.Name, SHA256: f.SHA256, Tables: []ReadTable{}, Notices: append([]notice.Notice{}, f.Notices...)}
+	reply := &ReadReply{File: f.Name, SHA256: f.SHA256, Tables: []ReadTable{}, Notices: findings(f.Notices, false)}
 	for _, t := range f.Tables {
 		table := ReadTable{Name: t.Name, Rows: t.Rows(), Columns: []ReadColumn{}}
 		for _, c := range t.Columns {

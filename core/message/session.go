@@ -20,7 +20,7 @@ func demo(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
 	case "": // one case of it, worked through
 		s.start(Demo(), nil)
 	default:
-		return nil, notice.New("request-kind", "demo "+q.Value)
+		return nil, notice.New("request-state", q.Value)
 	}
 	return show(s, q, r)
 }

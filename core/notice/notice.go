@@ -8,6 +8,7 @@ package notice
 import (
 	"fmt"
 	"slices"
+	"strings"
 )
 
 // Severity says what a notice asks of the reader.
@@ -38,7 +39,35 @@ func New(code string, args ...any) Notice {
 	if !ok {
 		panic("notice: no message for code " + code)
 	}
-	return Notice{Code: code, Severity: row.severity, Text: fmt.Sprintf(row.format, args...)}
+	return Notice{Code: code, Severity: row.severity, Text: singular(fmt.Sprintf(row.format, args...))}
+}
+
+// counted are the nouns that messages count.
+var counted = []string{"stations", "rows", "columns", "cells", "lines", "numbers", "grids", "values", "readings", "points", "names", "places", "bytes", "files", "independent samples"}
+
+// singular writes "1 row" for "1 rows".
+func singular(text string) string {
+	for _, noun := range counted {
+		plural, one := "1 "+noun, "1 "+strings.TrimSuffix(noun, "s")
+		for from := 0; ; {
+			i := strings.Index(text[from:], plural)
+			if i < 0 {
+				break
+			}
+			at := from + i
+			from = at + len(one)
+			if at > 0 && strings.ContainsAny(text[at-1:at], "0123456789.") || letterAt(text, at+len(plural)) {
+				continue
+			}
+			text = text[:at] + one + text[at+len(plural):]
+		}
+	}
+	return text
+}
+
+// letterAt reports whether a small letter goes on at a place of a text.
+func letterAt(text string, at int) bool {
+	return at < len(text) && text[at] >= 'a' && text[at] <= 'z'
 }
 
 // At returns n placed at a line of its file.

@@ -212,3 +212,13 @@ func checkUse(t *testing.T, files *token.FileSet, call *ast.CallExpr) {
 		t.Errorf("%s: %s has %d places and gets %d", at, code, want, len(call.Args)-1)
 	}
 }
+
+func TestSingular(t *testing.T) {
+	for text, want := range map[string]string{
+		"1 rows of 11 rows": "1 row of 11 rows", "at 1 stations": "at 1 station", "0.1 values": "0.1 values", "1 cellsize": "1 cellsize", "21 lines, 1 lines.": "21 lines, 1 line.",
+	} {
+		if got := singular(text); got != want {
+			t.Errorf("%q became %q, want %q", text, got, want)
+		}
+	}
+}

@@ -221,6 +221,7 @@ var table = map[string]row{
 	"request-damaged":    {Stop, "The request could not be read: %s."},
 	"request-protocol":   {Stop, "The request speaks protocol %d, this program speaks %d. Use parts of one version."},
 	"request-kind":       {Stop, "There is no request of kind %q."},
+	"request-state":      {Stop, "The demo has no state %q. Its states are received, worked and review."},
 	"request-attachment": {Stop, "Attachment %d with its name is missing from the request."},
 	"request-columns":    {Stop, "The columns of stations and values were not named. Give --x and --y."},
 	"request-number":     {Stop, "The %s, %q, is no number and no column."},

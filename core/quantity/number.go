@@ -81,6 +81,16 @@ func Text(v float64, n int) string {
 	return plain(v, n, false)
 }
 
+// Plain returns v with at most n significant digits and no trailing zeros: the
+// way a place is named.
+func Plain(v float64, n int) string {
+	text := Text(v, n)
+	if strings.ContainsAny(text, "e–") || !strings.Contains(text, ".") {
+		return text
+	}
+	return strings.TrimRight(strings.TrimRight(text, "0"), ".")
+}
+
 // Signed is Text with a plus sign on positive values.
 func Signed(v float64, n int) string {
 	if math.IsNaN(v) || math.IsInf(v, 0) {

@@ -404,7 +404,7 @@ func (w *writer) joint(k string) {
 	w.number(of("joint.statistic", j.Statistic, quantity.Text(float64(j.Statistic), 3)), "joint")
 	w.say(" (95 % point ")
 	w.value(of("joint.reference", j.Reference, quantity.Text(float64(j.Reference), 3)))
-	w.say(") with " + j.Pattern + " correlation: it ")
+	w.say(") with " + j.Pattern + " sources: it ")
 	w.mark(exceedsWord(j.Exceeds), study.WordOf, w.result("joint"))
 	w.say(" its 95 % point. ")
 	if !j.Offset.Known() {
@@ -476,7 +476,11 @@ func (w *writer) resolve(r *study.Judgement) {
 	if r.Outcome != study.NotResolved || !r.UValNeeded.Known() {
 		return
 	}
-	w.say("To resolve, with E unchanged: u_val ≤ ")
+	sign := "≤ "
+	if r.Toward == study.NotMet {
+		sign = "< " // then it would be refuted
+	}
+	w.say("To resolve, with E unchanged: u_val " + sign)
 	w.number(of("requirement.u_val_needed", r.UValNeeded, quantity.Text(float64(r.UValNeeded), 3)), "adequacy")
 	w.say(w.cell.UnitSuffix())
 	if r.UNumNeeded.Known() {

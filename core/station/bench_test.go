@@ -27,7 +27,7 @@ func benchmarkResample(b *testing.B, m interpolate.Method) {
 	x, y, at := million()
 	b.ReportAllocs()
 	for b.Loop() {
-		if r := Resample("s", "x", x, y, at, Options{m}); len(r.Kept) != len(at) {
+		if r := Resample("s", "x", x, y, at, Options{Method: m}); len(r.Kept) != len(at) {
 			b.Fatalf("%d stations kept, notices %v", len(r.Kept), r.Notices)
 		}
 	}

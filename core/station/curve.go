@@ -198,7 +198,7 @@ func assemble(name, xname string, rows []row) (curve, []notice.Notice) {
 		c.put(g.x, g.last, false)
 		c.pieces[len(c.pieces)-1].jumpBefore = true
 		if jumps++; jumps <= maxJumps {
-			notices = append(notices, notice.New("curve-jump", xname, quantity.Text(g.x, 10), name, quantity.Text(g.lo, 10), quantity.Text(g.hi, 10)))
+			notices = append(notices, notice.New("curve-jump", xname, quantity.Plain(g.x, 10), name, quantity.Plain(g.lo, 10), quantity.Plain(g.hi, 10)))
 		}
 	}
 	if jumps > maxJumps {

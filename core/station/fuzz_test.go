@@ -39,7 +39,7 @@ func FuzzResample(f *testing.F) {
 		x, y, at := numbersOf(xs), numbersOf(ys), numbersOf(stations)
 		n := min(len(x), len(y))
 		x, y = x[:n], y[:n]
-		opt := Options{interpolate.Linear}
+		opt := Options{Method: interpolate.Linear}
 		if cubic {
 			opt.Method = interpolate.Monotone
 		}

@@ -12,6 +12,16 @@ import (
 // Options are the choices of a resampling. The zero value is linear.
 type Options struct {
 	Method interpolate.Method
+	// Show prints a place on the axis of stations in messages; nil prints up to
+	// six digits. A host that keeps values in SI prints them in their own unit.
+	Show func(x float64) string
+}
+
+func (o Options) show(x float64) string {
+	if o.Show != nil {
+		return o.Show(x)
+	}
+	return quantity.Plain(x, 6)
 }
 
 // Resampled is a curve at the stations it can answer. Kept, Outside, Gap and
@@ -74,7 +84,7 @@ func Resample(name, xname string, x, y, at []float64, opt Options) Resampled {
 	}
 	s, u, states := c.answer(sorted, opt.Method)
 	r.collect(s, u, states, order)
-	r.tell(name, c, sorted)
+	r.tell(name, c, sorted, opt)
 	return r
 }
 
@@ -215,14 +225,14 @@ func (r *Resampled) collect(s, u []float64, states []uint8, order []int) {
 }
 
 // tell adds what the reader must know of the stations left out.
-func (r *Resampled) tell(name string, c curve, at []float64) {
-	lo, hi := quantity.Text(c.x[0], 6), quantity.Text(c.x[len(c.x)-1], 6)
+func (r *Resampled) tell(name string, c curve, at []float64, opt Options) {
+	lo, hi := opt.show(c.x[0]), opt.show(c.x[len(c.x)-1])
 	switch {
 	case len(c.x) == 1 && len(r.Kept) == 0 && len(r.Jump) == 0:
 		r.refuse(notice.New("curve-short", name, 1))
 		return
 	case len(r.Outside) == len(at):
-		r.refuse(notice.New("station-none", quantity.Text(at[0], 6), quantity.Text(at[len(at)-1], 6), lo, hi))
+		r.refuse(notice.New("station-none", opt.show(at[0]), opt.show(at[len(at)-1]), lo, hi))
 		return
 	case len(r.Outside) > 0:
 		r.Notices = append(r.Notices, notice.New("station-outside", len(r.Outside), len(at), lo, hi))

@@ -103,7 +103,7 @@ func TestResample(t *testing.T) {
 }
 
 func TestUnknownMethod(t *testing.T) {
-	r := Resample("s", "x", []float64{0, 1}, []float64{0, 1}, []float64{0.5}, Options{"spline"})
+	r := Resample("s", "x", []float64{0, 1}, []float64{0, 1}, []float64{0.5}, Options{Method: "spline"})
 	if !r.Refused || len(r.Kept) != 0 || !slices.Equal(codes(r.Notices), []string{"interpolation-unknown"}) {
 		t.Errorf("%+v", r)
 	}
@@ -274,7 +274,7 @@ func TestUncertainties(t *testing.T) {
 		{"convex", []float64{0, 1, 2}, []float64{0, 1, 4}, 0.5, interpolate.Monotone, 0.1875 / root3},
 		{"one point", []float64{0}, []float64{1}, 0, interpolate.Linear, 0},
 	} {
-		r := Resample("s", "x", row.x, row.y, []float64{row.at}, Options{row.m})
+		r := Resample("s", "x", row.x, row.y, []float64{row.at}, Options{Method: row.m})
 		if len(r.UInterp) != 1 || math.Abs(r.UInterp[0]-row.want) > 1e-15 {
 			t.Errorf("%s, %s: u %v, want %v", row.what, row.m, r.UInterp, row.want)
 		}
@@ -296,7 +296,7 @@ func TestShuffled(t *testing.T) {
 		}
 		at := rapid.SliceOfN(rapid.Float64Range(-1, float64(n)), 1, 40).Draw(t, "stations")
 		slices.Sort(at)
-		opt := Options{rapid.SampledFrom([]interpolate.Method{interpolate.Linear, interpolate.Monotone}).Draw(t, "method")}
+		opt := Options{Method: rapid.SampledFrom([]interpolate.Method{interpolate.Linear, interpolate.Monotone}).Draw(t, "method")}
 		plain := Resample("s", "x", x, y, at, opt)
 
 		rows := rapid.Permutation(count0(n)).Draw(t, "order of rows")

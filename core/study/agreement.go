@@ -334,6 +334,9 @@ func (w *work) crossings() {
 			return out
 		}
 		x, y := inUnit(c.x, c.xUnit, w.xUnit), inUnit(c.y, c.yUnit, w.yUnit)
+		if c == w.reference {
+			y = w.withoutExcluded(c, y)
+		}
 		for _, at := range derived.Crossings(x, y) {
 			place := Crossing{X: Number(w.xUnit.FromSI(at.X)), U: None, Rising: at.Rising}
 			if v, known := w.between(at.X, u); known {
@@ -344,6 +347,20 @@ func (w *work) crossings() {
 		return out
 	}
 	w.cell.Crossings = Crossings{Simulation: list(w.finest(), w.uNum), Reference: list(w.reference, w.uD)}
+}
+
+// withoutExcluded makes the excluded rows of the reference gaps.
+func (w *work) withoutExcluded(c *curve, y []float64) []float64 {
+	if len(w.cell.Excluded) == 0 {
+		return y
+	}
+	out := append([]float64{}, y...)
+	for i := range out {
+		if w.isExcluded(c.table.RowLine(i)) {
+			out[i] = math.NaN()
+		}
+	}
+	return out
 }
 
 // between returns an uncertainty between the stations around a place.

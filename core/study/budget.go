@@ -125,6 +125,7 @@ func (w *work) source(at int, s *Source) {
 		return
 	}
 	w.blanks(u, s.Name, target)
+	w.zeros(u, s.Name, target)
 	source, ok := w.patterned(s, u, target)
 	if !ok {
 		return
@@ -179,6 +180,19 @@ func (w *work) patterned(s *Source, u []float64, target Target) (uncertainty.Sou
 	return uncertainty.Source{U: u}, true
 }
 
+// zeros asks about uncertainties of exactly zero.
+func (w *work) zeros(u []float64, name string, target Target) {
+	n := 0
+	for _, v := range u {
+		if v == 0 {
+			n++
+		}
+	}
+	if n > 0 {
+		w.need(2, false, "whether "+name+" is zero by definition", target, "u-zero", n)
+	}
+}
+
 // blanks asks for the stations at which a source has no value.
 func (w *work) blanks(u []float64, name string, target Target) {
 	n := len(u) - len(known(u))
@@ -221,7 +235,7 @@ func (w *work) sourceColumn(s *Source) ([]float64, error) {
 				return steps(column.Values, w.yUnit, []int{0}), nil
 			}
 			x := inUnit(run.x, run.xUnit, w.xUnit)
-			got := station.Resample(w.e.study.fileName(run.slip), run.slip.X.Column.Value, x, column.Values, w.x, station.Options{Method: w.choices.Interpolation})
+			got := station.Resample(w.e.study.fileName(run.slip), run.slip.X.Column.Value, x, column.Values, w.x, station.Options{Method: w.choices.Interpolation, Show: w.place})
 			u := uncertainty.Constant(len(w.x), math.NaN())
 			for j, i := range got.Kept {
 				u[i] = w.yUnit.StepToSI(got.S[j])
@@ -354,7 +368,7 @@ func (w *work) total() {
 		return uncertainty.Combine(n, sources).Total()
 	}
 	w.uD, w.uNum, w.uInput = side(OfData, false), side(OfNumerical, false), side(OfInput, false)
-	if w.uD == nil {
+	if w.uD == nil || !w.has(OfNumerical) && !w.e.options.Partial {
 		return
 	}
 	w.uVal = w.covariance(w.parts, all(n)).Total()

@@ -104,6 +104,9 @@ func (w *work) close() {
 		if a.Blocks != b.Blocks {
 			return a.Blocks
 		}
+		if altered := (a.Target.Kind == "file") != (b.Target.Kind == "file"); altered && a.Blocks {
+			return a.Target.Kind == "file" // what the files are comes before what they say
+		}
 		return a.Course < b.Course
 	})
 	for _, o := range w.cell.Open {

@@ -139,14 +139,18 @@ func (w *work) application() {
 	a := &Application{}
 	var texts, ranges []string
 	for _, p := range points {
-		lo, hi, found := w.e.conditionRange(p)
+		lo, hi, found := w.e.conditionRange(w.q.Quantity, p)
 		text := p.Name + " = " + valueUnit(p.Value, p.Unit)
 		texts = append(texts, text)
 		if !found {
 			w.tell(notice.New("application-unmatched", text))
 			continue
 		}
-		ranges = append(ranges, p.Name+" "+valueUnit(lo, p.Unit)+" to "+valueUnit(hi, p.Unit))
+		span := valueUnit(lo, p.Unit)
+		if hi > lo {
+			span += " to " + valueUnit(hi, p.Unit)
+		}
+		ranges = append(ranges, p.Name+" "+span)
 		a.Outside = a.Outside || p.Value < lo || p.Value > hi
 	}
 	a.Text, a.Range = strings.Join(texts, ", "), strings.Join(ranges, ", ")
@@ -156,11 +160,14 @@ func (w *work) application() {
 	}
 }
 
-// conditionRange returns the range of a condition over all questions that
-// state it in the same unit.
-func (e *evaluation) conditionRange(p Condition) (lo, hi float64, found bool) {
+// conditionRange returns the range of a condition over all questions of one
+// quantity that state it in the same unit.
+func (e *evaluation) conditionRange(quantity string, p Condition) (lo, hi float64, found bool) {
 	lo, hi = math.Inf(1), math.Inf(-1)
 	for i := range e.study.Questions {
+		if e.study.Questions[i].Quantity != quantity {
+			continue
+		}
 		for _, m := range e.study.Questions[i].Conditions {
 			if m.Name == p.Name && m.Unit == p.Unit {
 				lo, hi, found = min(lo, m.Data), max(hi, m.Data), true

@@ -62,7 +62,14 @@ func TestApplicationPoint(t *testing.T) {
 	}{{11, true}, {4.2, false}, {6, false}, {4, true}} {
 		s := message.Demo()
 		s.Questions[0].Conditions = []study.Matching{{Name: "α", Unit: "°", Simulation: 4.2, Data: 4.2}}
-		s.Questions[1].Conditions = []study.Matching{{Name: "α", Unit: "°", Simulation: 9, Data: 9}}
+		other := s.Questions[0]
+		other.Case, other.Conditions = "C2", []study.Matching{{Name: "α", Unit: "°", Simulation: 9, Data: 9}}
+		s.Questions[1].Conditions = []study.Matching{{Name: "α", Unit: "°", Simulation: 20, Data: 20}} // another quantity
+		s.Questions = append(s.Questions, other)
+		for _, p := range s.Slips[:3] {
+			p.Case.Value = "C2"
+			s.Slips = append(s.Slips, p)
+		}
 		s.Application = []study.Condition{{Name: "α", Unit: "°", Value: row.alpha}}
 		c := study.Evaluate(s, study.Options{}).Cells[0]
 		if c.Application == nil || c.Application.Outside != row.outside {

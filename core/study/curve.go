@@ -45,6 +45,9 @@ func (s *Study) fileName(slip *Slip) string {
 func (e *evaluation) load(slip *Slip) (*curve, []notice.Notice) {
 	file, ok := e.files[slip.File]
 	if !ok {
+		if altered := e.study.File(slip.File); altered != nil {
+			return nil, []notice.Notice{notice.New("hash-changed", altered.Name).In(altered.Name)}
+		}
 		return nil, []notice.Notice{notice.New("file-unknown", slip.File, slip.ID)}
 	}
 	table, err := file.Table(slip.Table)

@@ -19,6 +19,9 @@ type Options struct {
 	// Alternatives asks for the list of choices that would change an outcome;
 	// every one evaluates its cell again.
 	Alternatives bool
+	// Partial gives u_val without its numerical part too, for a host that says
+	// so beside it: a study has no u_val while a part is missing.
+	Partial bool
 	// Memory, where a host keeps one, saves what did not change since the
 	// evaluation before.
 	Memory *Memory
@@ -400,6 +403,10 @@ func (w *work) use(p *Slip) *curve {
 	c, notices := w.e.load(p)
 	for _, n := range notices {
 		w.tell(n)
+		if n.Code == "hash-changed" {
+			w.stop(2, "the unaltered file "+w.e.study.fileName(p), Target{Kind: "file", ID: p.File}, n)
+			continue
+		}
 		if n.Severity == notice.Stop || n.Code == "unit-unknown" {
 			w.stop(2, "a readable "+p.Quantity.Value, slipTarget(p, "y.column"), n)
 		}

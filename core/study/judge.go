@@ -58,8 +58,12 @@ func rounded(values []float64) []float64 {
 // station, E unchanged.
 func (w *work) resolve(j *Judgement, e float64, i int, limit float64) {
 	needed, possible := adequacy.Needed(e, w.choices.K, limit)
+	j.Toward = Shown
 	if !possible {
-		return
+		needed, j.Toward = (math.Abs(e)-limit)/w.choices.K, NotMet
+		if !(needed > 0) {
+			return
+		}
 	}
 	j.UValNeeded = w.step(needed)
 	if w.uNum == nil {

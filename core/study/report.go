@@ -424,6 +424,7 @@ type Judgement struct {
 	Outcome       string `json:"outcome"`
 	At            Number `json:"at"` // the deciding station, for curves
 	UValNeeded    Number `json:"u_val_needed"`
+	Toward        string `json:"toward"` // the outcome that UValNeeded would give, E unchanged
 	UNumNeeded    Number `json:"u_num_needed"`
 	UNumReduction Number `json:"u_num_reduction"` // fraction
 }

@@ -183,7 +183,16 @@ func (w *work) tellExcluded() {
 // resample answers stations, in SI, from one simulation.
 func (w *work) resample(c *curve, at []float64, method interpolate.Method) station.Resampled {
 	x, y := inUnit(c.x, c.xUnit, w.xUnit), inUnit(c.y, c.yUnit, w.yUnit)
-	return station.Resample(w.e.study.fileName(c.slip), c.slip.X.Column.Value, x, y, at, station.Options{Method: method})
+	return station.Resample(w.e.study.fileName(c.slip), c.slip.X.Column.Value, x, y, at, station.Options{Method: method, Show: w.place})
+}
+
+// place prints a place on the axis of stations, in the unit of the cell.
+func (w *work) place(si float64) string {
+	text := quantity.Plain(w.xUnit.FromSI(si), 6)
+	if u := w.xUnit.symbol; u != "" && u != "1" {
+		text += " " + u
+	}
+	return text
 }
 
 // commonScalar compares one value with one value. Several rows of the

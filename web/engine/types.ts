@@ -79,7 +79,7 @@ export interface ReadReply {
   file: string;
   sha256: string;
   tables: ReadTable[] | null;
-  notices: Notice[] | null;
+  notices: Finding[] | null;
 }
 
 export interface GridsCase {
@@ -91,7 +91,7 @@ export interface GridsCase {
   ea: number | null;
   eext: number | null;
   gci: number | null;
-  notices: Notice[] | null;
+  notices: Finding[] | null;
 }
 
 export interface CompareReply {
@@ -100,7 +100,7 @@ export interface CompareReply {
   summary: CompareSummary;
   joint: CompareJoint | null;
   crossings: CompareCrossings;
-  notices: Notice[] | null;
+  notices: Finding[] | null;
 }
 
 export interface Results {
@@ -143,6 +143,13 @@ export interface ReadTable {
   name: string;
   rows: number;
   columns: ReadColumn[] | null;
+}
+
+export interface Finding {
+  code: string;
+  severity: Severity;
+  text: string;
+  line: number;
 }
 
 export interface CompareStation {
@@ -633,6 +640,7 @@ export interface Judgement {
   outcome: string;
   at: number | null;
   u_val_needed: number | null;
+  toward: string;
   u_num_needed: number | null;
   u_num_reduction: number | null;
 }

@@ -10,7 +10,6 @@ import (
 	"strings"
 
 	"weirmark/core/message"
-	"weirmark/core/notice"
 )
 
 // invocation is one call of the command.
@@ -109,9 +108,13 @@ func ask(s *message.Session, q message.Request, attached ...[]byte) (message.Rep
 }
 
 // notices writes notices to the error stream: stop and ask by name.
-func (v *invocation) notices(list []notice.Notice) {
+func (v *invocation) notices(list []message.Finding) {
 	for _, n := range list {
-		fmt.Fprintf(v.errs, "%s: %s [%s]\n", n.Severity, n.Error(), n.Code)
+		at := ""
+		if n.Line > 0 {
+			at = fmt.Sprintf("line %d: ", n.Line)
+		}
+		fmt.Fprintf(v.errs, "%s: %s%s [%s]\n", n.Severity, at, n.Text, n.Code)
 	}
 }
 

@@ -98,10 +98,8 @@ func TestReadShape(t *testing.T) {
 	}
 	for _, n := range v["notices"].([]any) {
 		m := n.(map[string]any)
-		for _, key := range []string{"code", "severity", "text", "line"} {
-			if _, there := m[key]; !there {
-				t.Errorf("a notice has no %s: %v", key, m)
-			}
+		if got := keys(t, m); got != "code line severity text" {
+			t.Errorf("notice keys %s", got)
 		}
 		if s := m["severity"]; s != "stop" && s != "ask" && s != "note" {
 			t.Errorf("severity %v", s)

@@ -6,7 +6,6 @@ import (
 	"text/tabwriter"
 
 	"weirmark/core/message"
-	"weirmark/core/notice"
 	"weirmark/core/quantity"
 )
 
@@ -95,7 +94,7 @@ func grids(v *invocation) (int, error) {
 // does not hold for all.
 func (v *invocation) gridNotices(cases []message.GridsCase) {
 	holders := map[string][]string{}
-	var order []notice.Notice
+	var order []message.Finding
 	for _, c := range cases {
 		for _, n := range c.Notices {
 			if holders[n.Text] == nil {
@@ -108,7 +107,7 @@ func (v *invocation) gridNotices(cases []message.GridsCase) {
 		if of := holders[n.Text]; len(of) < len(cases) {
 			n.Text = strings.Join(of, "; ") + ": " + n.Text
 		}
-		v.notices([]notice.Notice{n})
+		v.notices([]message.Finding{n})
 	}
 }
 
