@@ -23,13 +23,34 @@ func (s *Study) Add(name string, data []byte, read tablefile.File, at string) []
 			ref = strconv.Itoa(i + 1)
 		}
 		p := propose(name, t)
+		kind := statedKind(read, t.Name)
+		if kind != "" {
+			p.Role, p.Model = Field{Value: Reference, By: Guessed}, Field{}
+		}
 		p.ID = s.freeID("s", func(id string) bool { return s.slip(id) != nil })
 		p.File, p.Table = id, ref
 		s.Slips = append(s.Slips, p)
 		s.askOf(&p)
+		if q := s.Question(p.Case.Value, p.Quantity.Value); q != nil && kind != "" && !q.Kind.Given() {
+			q.Kind = Field{Value: kind, By: Stated}
+		}
 		added = append(added, &s.Slips[len(s.Slips)-1])
 	}
 	return added
+}
+
+// statedKind is the kind of reference that a file states of itself in a line
+// such as "# kind: law".
+func statedKind(read tablefile.File, table string) string {
+	for _, m := range read.Meta {
+		if strings.EqualFold(m.Key, "kind") && (m.Table == "" || m.Table == table) {
+			switch kind := strings.ToLower(m.Value); kind {
+			case KindTest, KindLaw, KindCorrelation, KindSimulation:
+				return kind
+			}
+		}
+	}
+	return ""
 }
 
 // Remove takes a file and its slips out of the study.

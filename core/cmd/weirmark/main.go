@@ -22,6 +22,7 @@ weirmark grids FILE [--size COL] [--value COL] [--dim 2|3] [--limits on|off] [--
 weirmark compare --sim FILE[@TABLE] --ref FILE[@TABLE] --x COL --y COL [--ref-x COL] [--ref-y COL]
                  [--u COL|NUMBER|NUMBER%] [--u-k NUMBER] [--u-common COL|NUMBER] [--u-num COL|NUMBER] [--u-input NUMBER]
                  [--u-interp on|off] [--interp linear|monotone] [--k NUMBER] [--json]
+weirmark shelf [NAME] [--set NAME=VALUE,...] [--at NUMBER,...] [--curve NAME]
 weirmark run STUDY --out DIR
 weirmark demo DIR [--state received|worked|review]
 
@@ -49,6 +50,7 @@ func run(args []string, out, errs io.Writer) (status int) {
 		"read":    {map[string]bool{"json": false}, read},
 		"grids":   {map[string]bool{"json": false, "size": true, "value": true, "dim": true, "limits": true}, grids},
 		"compare": {map[string]bool{"json": false, "sim": true, "ref": true, "x": true, "y": true, "ref-x": true, "ref-y": true, "u": true, "u-k": true, "u-common": true, "u-num": true, "u-input": true, "u-interp": true, "interp": true, "k": true}, compare},
+		"shelf":   {map[string]bool{"set": true, "at": true, "curve": true}, runShelf},
 		"run":     {map[string]bool{"out": true}, runStudy},
 		"demo":    {map[string]bool{"state": true}, runDemo},
 	}

@@ -378,6 +378,42 @@ func TestRunRefusals(t *testing.T) {
 	}
 }
 
+// The shelf prints tables that the reader takes as they are: a law with its
+// source, a table without its misprints; outside its range a law refuses.
+func TestShelf(t *testing.T) {
+	status, out, errs := call(t, nil, "shelf")
+	if status != 0 || !strings.Contains(out, "backstep-cf-test") || strings.Count(out, "\n") < 50 {
+		t.Fatalf("status %d, %d lines, %s", status, strings.Count(out, "\n"), errs)
+	}
+	// ITTC-57 at 1e6, 1e7: 0.0046875 and 0.003 exactly (0.075/(log10 Re - 2)²).
+	id := ""
+	for line := range strings.Lines(out) {
+		if strings.Contains(line, "ITTC") {
+			id = strings.Fields(line)[0]
+		}
+	}
+	status, table, errs := call(t, nil, "shelf", id, "--at", "1e6,1e7")
+	if status != 0 || !strings.Contains(table, "# source:") || !strings.Contains(table, "1000000,0.0046875\n") || !strings.Contains(table, "10000000,0.003\n") {
+		t.Errorf("%s: status %d, %s%s", id, status, table, errs)
+	}
+	status, table, _ = call(t, map[string]string{"law.csv": table}, "read", "law.csv", "--json")
+	if status != 0 || !strings.Contains(table, "0.0046875") {
+		t.Errorf("the law is not read back: status %d, %s", status, table)
+	}
+	if status, _, errs := call(t, nil, "shelf", id, "--at", "-1"); status != 3 || errs == "" {
+		t.Errorf("outside the range: status %d, %s", status, errs)
+	}
+	status, table, errs = call(t, nil, "shelf", "cavity-v-ghia", "--curve", "Re = 400")
+	if status != 0 || strings.Contains(table, "-0.23827") || !strings.Contains(errs, "misprint") {
+		t.Errorf("a known misprint is on the shelf: status %d, %s%s", status, table, errs)
+	}
+	for _, args := range [][]string{{"shelf", "nothing"}, {"shelf", "cavity-v-ghia"}, {"shelf", id, "--set", "x"}, {"shelf", id, "--at", "many"}, {"shelf", "a", "b"}} {
+		if status, _, errs := call(t, nil, args...); status != 3 || errs == "" {
+			t.Errorf("%v: status %d, %q", args, status, errs)
+		}
+	}
+}
+
 // A fault of our own ends with 4, not with a stack that looks like usage.
 func TestFaultsAreInternal(t *testing.T) {
 	status := run([]string{"read", "x"}, nil, panicking{})
