@@ -28,7 +28,7 @@ type Branch struct {
 // other, each more than half its range, with two turns at most.
 func Loop(x []float64) bool {
 	up, down, turns := travel(usable(x), x)
-	lo, hi := limits(x)
+	lo, hi := Limits(x)
 	return hi > lo && up > (hi-lo)/2 && down > (hi-lo)/2 && turns <= 2
 }
 
@@ -80,7 +80,8 @@ func usable(x []float64) []int {
 	return rows
 }
 
-func limits(x []float64) (lo, hi float64) {
+// Limits returns the least and the greatest of the known values.
+func Limits(x []float64) (lo, hi float64) {
 	lo, hi = math.Inf(1), math.Inf(-1)
 	for _, v := range x {
 		if !math.IsNaN(v) {

@@ -6,6 +6,7 @@ import (
 
 	"weirmark/core/notice"
 	"weirmark/core/plausibility"
+	"weirmark/core/profile"
 	"weirmark/core/quantity"
 	"weirmark/core/uncertainty"
 )
@@ -103,25 +104,14 @@ func (w *work) doubtRanges() {
 	if r == nil || s == nil || r.scalar() || s.scalar() {
 		return
 	}
-	rLo, rHi := limits(inUnit(r.x, r.xUnit, w.xUnit))
-	sLo, sHi := limits(inUnit(s.x, s.xUnit, w.xUnit))
+	rLo, rHi := profile.Limits(inUnit(r.x, r.xUnit, w.xUnit))
+	sLo, sHi := profile.Limits(inUnit(s.x, s.xUnit, w.xUnit))
 	factor, found := plausibility.ScaledRange(rLo, rHi, sLo, sHi)
 	if !found {
 		return
 	}
 	print := func(v float64) string { return quantity.Text(w.xUnit.FromSI(v), 4) }
 	w.ask(2, "the unit of "+r.slip.X.Column.Value, "range-scaled", r.slip.X.Column.Value, print(rLo), print(rHi), print(sLo), print(sHi), quantity.Text(factor, 4))
-}
-
-// limits returns the least and greatest of the known values.
-func limits(x []float64) (lo, hi float64) {
-	lo, hi = math.Inf(1), math.Inf(-1)
-	for _, v := range x {
-		if !math.IsNaN(v) {
-			lo, hi = min(lo, v), max(hi, v)
-		}
-	}
-	return lo, hi
 }
 
 // doubtMagnitude asks about a simulation without a sign where the reference
@@ -131,7 +121,7 @@ func (w *work) doubtMagnitude() {
 	if r == nil || s == nil || s.scalar() || r.scalar() {
 		return
 	}
-	if lo, hi := limits(w.d); !(lo < 0 && hi > 0) {
+	if lo, hi := profile.Limits(w.d); !(lo < 0 && hi > 0) {
 		return
 	}
 	if least, found := plausibility.Magnitude(s.y); found {
@@ -156,7 +146,7 @@ func (w *work) doubtComparison() {
 	for i := range e {
 		e[i] = w.s[i] - w.d[i]
 	}
-	lo, hi := limits(w.d)
+	lo, hi := profile.Limits(w.d)
 	if offset, half, found := plausibility.ConstantOffset(e, hi-lo); found {
 		w.ask(2, "the datum of the two sides", "offset-constant", quantity.Text(float64(w.step(offset)), 3)+w.cell.UnitSuffix(), quantity.Text(float64(w.step(half)), 1))
 	}

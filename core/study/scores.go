@@ -7,6 +7,7 @@ import (
 
 	"weirmark/core/metric"
 	"weirmark/core/notice"
+	"weirmark/core/profile"
 	"weirmark/core/quantity"
 )
 
@@ -20,7 +21,7 @@ func (w *work) scores() {
 	if w.cell.Scalar || len(w.s) < 2 {
 		return
 	}
-	lo, hi := limits(w.d)
+	lo, hi := profile.Limits(w.d)
 	largest := max(math.Abs(lo), math.Abs(hi))
 	e := w.errors()
 	m := metric.Summarise(e)
