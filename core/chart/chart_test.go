@@ -256,6 +256,24 @@ func TestGridBar(t *testing.T) {
 	}
 }
 
+// A fit over more than three grids does not go through the line of the order
+// and the finest value: there is no line, and no key of one.
+func TestNoLineOfAFit(t *testing.T) {
+	c := drag("B", 0.00035)
+	before, err := Refinement(c, "x", Light)
+	if err != nil {
+		t.Fatal(err)
+	}
+	c.Grids.Points[0].Used = true
+	after, err := Refinement(c, "x", Light)
+	if err != nil {
+		t.Fatal(err)
+	}
+	if had, has := strings.Contains(string(before.Option), orderName), strings.Contains(string(after.Option), orderName); !had || has {
+		t.Errorf("the line is drawn over three grids: %v, over four: %v", had, has)
+	}
+}
+
 func TestWhatIsNotKnownIsAGap(t *testing.T) {
 	f, err := Overlay(friction(), "x", Light)
 	if err != nil {

@@ -126,9 +126,11 @@ const (
 	gridBarName = "± U_{grid}, 95 %"
 )
 
-// lined reports whether the line of the observed order can be drawn.
+// lined reports whether the line of the observed order can be drawn: it goes
+// through the three finest grids, and a fit over more does not.
 func lined(g *study.Grids, finest study.GridPoint) bool {
-	return g.Extrapolated.Known() && g.Order.Known() && g.Order > 0 && finest.H > 0
+	used, _ := usedPoints(g)
+	return len(used) <= 3 && g.Extrapolated.Known() && g.Order.Known() && g.Order > 0 && finest.H > 0
 }
 
 func (p *picture) familyKeys(c study.Cell, measured bool) []entry {

@@ -65,8 +65,8 @@ func choices(i int, c study.Cell) []Node {
 		return text(b)
 	}
 	h := c.Choices
-	words := say("*k* = {}; *k*_{num} = {}; grid study by the {} rule, formal order {}, {} dimensions",
-		asWritten(h.K, at("k")), asWritten(h.KNum, at("k_num")), pick(h.Bounded, "bounded", "plain"), asWritten(h.Formal, at("formal")), count(h.Dimension, at("dimension")))
+	words := say("*k* = {}; *k*_{num} = {}; grid study by the {}, formal order {}, {} dimensions",
+		asWritten(h.K, at("k")), asWritten(h.KNum, at("k_num")), text(h.RuleName()), asWritten(h.Formal, at("formal")), count(h.Dimension, at("dimension")))
 	if c.Scalar {
 		return words
 	}

@@ -67,6 +67,9 @@ func (b *builder) grids(i int, c study.Cell) []Node {
 	default:
 		add("*u*_{num}", text("not available"))
 	}
+	if known(g.NextCells, g.NextCost) {
+		add("To resolve the requirement, with *E* unchanged", say("about {} cells; {} times the cost of the finest run, by cells^{4/3} (a run in time)", cellCount(g.NextCells, at("next_cells")), digits(g.NextCost, 3, at("next_cost")))...)
+	}
 	nodes = append(nodes, pairs(rows...))
 	if g.Rule != "" {
 		nodes = append(nodes, note(text("Rule: "+sentenceEnd(g.Rule))))

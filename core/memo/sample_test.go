@@ -49,7 +49,7 @@ func taps(model string, e []float64, joint study.Joint, requirement *study.Judge
 			{Name: "grid", Of: study.OfNumerical, Text: "from the grid study, per station", U: .004, Share: .0353982301, Pattern: study.Independent, Origin: "computed", Open: model == "B"},
 		},
 		Grids: &study.Grids{
-			Dimension: 3, Along: true, Monotone: 19, NonMonotone: 5, OrderLow: .62, OrderHigh: 2.9, Ratio: quantity.None, Order: 1.71, Formal: 2,
+			Dimension: 3, Along: true, Monotone: 19, NonMonotone: 5, OrderLow: .62, OrderHigh: 2.9, Ratio: quantity.None, NextCells: quantity.None, NextCost: quantity.None, Order: 1.71, Formal: 2,
 			Extrapolated: quantity.None, Ea: quantity.None, Eext: quantity.None, GCI: quantity.None, U: quantity.None, UNum: .004, KNum: 1.15,
 			Rule: "three finest grids, common order along the curve", R21: 1.336, R32: 1.338,
 			Points: gridPoints(quantity.None, quantity.None, quantity.None, quantity.None),
@@ -115,7 +115,7 @@ func drag() study.Cell {
 		Grids: &study.Grids{
 			Points: gridPoints(.03155, .03068, .03021, .02995), Dimension: 3, Class: "monotone", Ratio: .5531914894, Order: 2.0149, Formal: 2, Extrapolated: .02962,
 			Ea: .0086811352, Eext: .0111411209, GCI: .013723, U: .000411, UNum: .000357391304, KNum: 1.15, Rule: "three finest grids, bounded rule", R21: 1.336, R32: 1.338,
-			OrderLow: quantity.None, OrderHigh: quantity.None,
+			OrderLow: quantity.None, OrderHigh: quantity.None, NextCells: 6880000, NextCost: 1.316,
 		},
 		Sources: []study.SourceLine{
 			{Name: "balance", Of: study.OfData, Text: "0.00040, absolute, standard", U: .0004, Share: .4569, Pattern: study.Common, Origin: "five runs over three days and the calibration"},
@@ -140,7 +140,7 @@ func oscillating() study.Cell {
 	s.S, s.D, s.E, s.UD, s.UVal, s.Ratio, s.Lo, s.Hi, s.Reading = 36.172, 35.31, .862, quantity.None, quantity.None, quantity.None, quantity.None, quantity.None, ""
 	s.UNum, s.UInput = .1075, quantity.None
 	none := quantity.None
-	c.Grids = &study.Grids{Points: gridPoints(35.68, 36.34, 35.96, 36.172), Dimension: 3, Class: "oscillatory", Ratio: -.5578947, Order: none, Formal: 2, Extrapolated: none, Ea: none, Eext: none, GCI: none, U: none, UNum: .1075, KNum: 1.15, Rule: "half-range of the three finest as a bound", R21: 1.336, R32: 1.338, OrderLow: none, OrderHigh: none}
+	c.Grids = &study.Grids{Points: gridPoints(35.68, 36.34, 35.96, 36.172), Dimension: 3, Class: "oscillatory", Ratio: -.5578947, Order: none, Formal: 2, Extrapolated: none, Ea: none, Eext: none, GCI: none, U: none, UNum: .1075, KNum: 1.15, Rule: "half-range of the three finest as a bound", R21: 1.336, R32: 1.338, OrderLow: none, OrderHigh: none, NextCells: none, NextCost: none}
 	c.Sources = c.Sources[2:]
 	c.Sources[0].Share = none
 	c.Degrees, c.K95, c.Monitors, c.Balances = quantity.None, quantity.None, nil, nil

@@ -73,13 +73,16 @@ func (b *builder) differences() []Node {
 	for j, d := range list {
 		at := func(name string) string { return fmt.Sprintf("differences.%d.%s", j, name) }
 		resolved := "not resolved"
-		if d.Resolved {
+		switch {
+		case d.Resolved:
 			resolved = "resolved"
+		case !d.U.Known():
+			resolved = "uncertainty not known"
 		}
 		mean := append(withUnit(signedBeside(d.Mean, d.U, at("mean")), d.Unit), text(" ± "))
 		rows[j] = row(cell(text(d.Case)), cell(text(d.Quantity)), cell(text(d.A+" − "+d.B)), figureCell(count(d.N, at("n"))),
 			figureCell(append(mean, digits(d.U, 2, at("u")))...), cell(text(resolved)), figureCell(interval(digits(d.RMSA, 3, at("rms_a")), digits(d.RMSB, 3, at("rms_b")))...))
 	}
-	return []Node{b.table("plain", say("Models against each other: the data cancel. Mean difference ± its standard uncertainty, and the root mean square of *E* of the one and the other."),
+	return []Node{b.table("plain", say("Models against each other: the data cancel. Mean difference ± its standard uncertainty, in which the inputs count in full for both models, since how they move one against the other is not known; and the root mean square of *E* of the one and the other."),
 		headRow("Case", "Quantity", "Models", "#*n*", "#Mean difference", "", "#RMS *E*"), rows...)}
 }

@@ -8,6 +8,7 @@ import (
 	"weirmark/core/notice"
 	"weirmark/core/profile"
 	"weirmark/core/quantity"
+	"weirmark/core/refinement"
 	"weirmark/core/study"
 	"weirmark/core/tablefile"
 )
@@ -289,6 +290,9 @@ func shareWords(n study.Number) string {
 	if !n.Known() {
 		return ""
 	}
+	if n < 0.001 {
+		return "below 0.1 % of u_val²"
+	}
 	return quantity.Text(float64(n)*100, 2) + " % of u_val²"
 }
 
@@ -352,10 +356,18 @@ func choices(q *study.Question) []Entry {
 		}
 		return "no"
 	}
+	rule, rules := c.Rule, []Option{}
+	if rule == "" {
+		rule = refinement.RuleThree
+	}
+	for _, r := range refinement.Rules {
+		rules = append(rules, Option{r, study.RuleName(r)})
+	}
 	return []Entry{
 		entry("k", "k of the statement", number(c.K), []Option{}, "2 covers about 95 % of a normal distribution"),
 		entry("k_num", "k_num, from U of the grids to u_num", number(c.KNum), []Option{}, "1.15: U about the fine grid; 2: normal"),
-		entry("bounded", "grid study", yes(c.Bounded), []Option{{"yes", "bounded rule"}, {"no", "plain rule"}}, ""),
+		entry("bounded", "order of the three finest", yes(c.Bounded), []Option{{"yes", "bounded rule"}, {"no", "plain rule"}}, ""),
+		entry("rule", "grids of one value", rule, rules, "along a curve: the three finest"),
 		entry("formal", "formal order", number(c.Formal), []Option{}, ""),
 		entry("dimension", "grids are", strconv.Itoa(c.Dimension), []Option{{"2", "two-dimensional"}, {"3", "three-dimensional"}}, ""),
 		entry("interpolation", "simulation at the stations", string(c.Interpolation), []Option{{"linear", "linear"}, {"monotone", "monotone cubic"}}, ""),

@@ -150,13 +150,31 @@ func gridAnswer(c *study.Cell) string {
 	}
 	switch g.Class {
 	case string(refinement.Monotone):
-		return "Monotone over the three finest of " + count(len(g.Points), "grid") + "; observed order " + text(g.Order, 3) + " against " + text(g.Formal, 2) + "; grid uncertainty " + quantity.Percent(float64(g.GCI)) + " % at 95 %."
+		order := "no order is given"
+		if g.Order.Known() {
+			order = "observed order " + text(g.Order, 3) + " against " + text(g.Formal, 2)
+		}
+		return "Monotone over the three finest of " + count(len(g.Points), "grid") + "; " + order + "; grid uncertainty " + quantity.Percent(float64(g.GCI)) + " % at 95 %" + ruleWords(c) + "."
 	case string(refinement.Oscillatory):
+		if g.U.Known() {
+			return "The three finest grids oscillate; no order is given; grid uncertainty " + text(g.U, 2) + c.UnitSuffix() + " at 95 %" + ruleWords(c) + "."
+		}
 		return "The three finest grids oscillate; a bound is taken from their range, no order is given."
 	case string(refinement.Insufficient):
+		if g.U.Known() {
+			return "Two grids: whether the value converges cannot be told; grid uncertainty " + text(g.U, 2) + c.UnitSuffix() + " at 95 %" + ruleWords(c) + "."
+		}
 		return "Too few usable grids: the order cannot be observed."
 	}
 	return "The three finest grids are " + g.Class + ": there is no grid uncertainty."
+}
+
+// ruleWords names a rule other than that of the three finest grids.
+func ruleWords(c *study.Cell) string {
+	if c.Choices.Rule == "" {
+		return ""
+	}
+	return " (" + c.Choices.RuleName() + ")"
 }
 
 func gridNumbers(c *study.Cell) []Headline {
@@ -172,7 +190,9 @@ func gridNumbers(c *study.Cell) []Headline {
 	}
 	add(g.Order, 3, "observed order")
 	if g.U.Known() {
-		list = append(list, Headline{quantity.Like(float64(g.Extrapolated), float64(g.U), 2) + c.UnitSuffix(), "extrapolated " + orText(c.Symbol, c.Quantity)})
+		if g.Extrapolated.Known() {
+			list = append(list, Headline{quantity.Like(float64(g.Extrapolated), float64(g.U), 2) + c.UnitSuffix(), "extrapolated " + orText(c.Symbol, c.Quantity)})
+		}
 		list = append(list, Headline{"± " + quantity.Text(float64(g.U), 2) + c.UnitSuffix(), "grid uncertainty, 95 %"})
 	} else if g.UNum.Known() {
 		list = append(list, Headline{quantity.Text(float64(g.UNum), 2) + c.UnitSuffix(), "u_num, standard"})
@@ -398,10 +418,21 @@ func sayAnswer(c *study.Cell) string {
 		return "The requirement cannot be judged without u_val."
 	}
 	answer := "The requirement is " + r.Outcome + " at k = " + strconv.FormatFloat(c.Choices.K, 'g', -1, 64) + "."
+	if g := c.Grids; g != nil && g.NextCells.Known() {
+		answer += " With E unchanged, about " + cellWords(float64(g.NextCells)) + " cells would resolve it, at " + text(g.NextCost, 2) + " times the cost of the finest run."
+	}
 	if len(c.Fragile) > 0 {
 		answer += " " + count(len(c.Fragile), "other choice") + " would change a word."
 	}
 	return answer
+}
+
+// cellWords prints a number of cells, in millions from there on.
+func cellWords(n float64) string {
+	if n < 1e6 {
+		return quantity.Text(n, 3)
+	}
+	return quantity.Text(n/1e6, 3) + " million"
 }
 
 func sayNumbers(c *study.Cell) []Headline {

@@ -56,6 +56,24 @@ func TestWorkedNumbers(t *testing.T) {
 			t.Errorf("%s: %q, want %q", row.name, row.got, row.want)
 		}
 	}
+	// Least squares over four grids resolves neither length; the order held at 2,
+	// below those observed, changes no word. The grid that resolves Cd B was
+	// computed apart from this program by a few lines of Python: 6882793 cells at
+	// 1.3165446 times the cost.
+	for _, c := range []*study.Cell{a, b} {
+		if len(c.Fragile) != 1 || c.Fragile[0].Change != "least squares over all grids" || c.Fragile[0].Outcome != study.NotResolved || c.Grids.Order <= c.Grids.Formal {
+			t.Errorf("x_r %s: order %v, alternatives %+v", c.Model, c.Grids.Order, c.Fragile)
+		}
+	}
+	check(t, []printed{{"Cd B: cells that resolve it", dragB.Grids.NextCells / 1e6, 6.88, 2}, {"Cd B: their cost", dragB.Grids.NextCost, 1.32, 2}})
+	if answer := sayAnswer(dragB); !strings.Contains(answer, "about 6.88 million cells would resolve it, at 1.3 times the cost") {
+		t.Error(answer)
+	}
+	for _, c := range []*study.Cell{a, b, lift, least} {
+		if c.Grids.NextCells.Known() || c.Grids.NextCost.Known() {
+			t.Errorf("%s %s: a next grid of %v cells, where none would resolve anything", c.Quantity, c.Model, c.Grids.NextCells)
+		}
+	}
 	if least.Grids.UNum.Known() || !least.Withheld {
 		t.Error("Cf,min of B has a grid uncertainty or a statement")
 	}

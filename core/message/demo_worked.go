@@ -17,6 +17,7 @@ func DemoWorked() *study.Study {
 	s := Demo()
 	demoSetting(s)
 	s.Questions[0].Conditions, s.Questions[1].Conditions = demoAngle(4.2, 4.2, 0), demoAngle(4.2, 4.2, 0)
+	s.Questions[0].Answers = map[string]string{"monitor-value": movedForces}
 	s.Questions = append(s.Questions, workedQuestions()...)
 	for _, use := range workedUses() {
 		addUse(s, use)
@@ -31,6 +32,10 @@ func DemoWorked() *study.Study {
 	}
 	return s
 }
+
+// movedForces answers why the monitors of C1 settle beside the values that
+// are used.
+const movedForces = "the runs are at 4.0°; the forces of the second delivery were moved to 4.2°, by 0.0004 in Cd and 0.020 in Cl, except those of B on G4, which was run at 4.2°"
 
 // DemoReview returns the campaign as a checker gets it, with one byte of
 // profile P2 altered after its hash was recorded.
@@ -187,7 +192,7 @@ func workedQuestions() []study.Question {
 		demoSource(study.OfData, "balance calibration and corrections", .0031, study.Common, demoSheet),
 		demoSource(study.OfInput, "inputs (α, U, turbulence)", .010, study.Common, "run pairs of the analyst"))
 	lift.Condition, lift.Conditions = "α = 4.2°", demoAngle(4.2, 4.2, 0)
-	lift.Answers = map[string]string{"references-differ": "the balance holds: 48 taps miss the suction peak and the ends; data consistency stays open with the laboratory"}
+	lift.Answers = map[string]string{"monitor-value": movedForces, "references-differ": "the balance holds: 48 taps miss the suction peak and the ends; data consistency stays open with the laboratory"}
 	legacy := demoQuestion("C1", demoLegacyName, "Cp", "older report",
 		demoSource(study.OfNumerical, "grid, from a study at other taps", .004, study.Independent, "borrowed from a study of the same family"))
 	legacy.Use, legacy.Downward = entered(study.UseTuning), true

@@ -8,6 +8,10 @@
 // h = count^(-1/dimension), e21 = f2 - f1, e32 = f3 - f2.
 //
 // Uncertainties U are expanded, at about 95 %, and in the unit of the values.
+// Study is the entry for one value, by one of Rules; Along for a curve; Steps and
+// Joint for time steps; NextGrid for what a finer grid would cost; Verify for the
+// order against an exact solution; RoundOff for the floor below all of them.
+//
 // Nothing here can tell whether the grids are similar, whether the runs have
 // settled, or whether the three values lie in the asymptotic range.
 package refinement

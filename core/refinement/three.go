@@ -11,6 +11,7 @@ import (
 
 // Options are the choices of a grid study.
 type Options struct {
+	Rule    string             // one of Rules, or empty for the three finest grids; not along a curve
 	Bounded bool               // limit the index where the order is below 0.95 or above 3.05
 	Formal  float64            // formal order of the scheme; 0 stands for 2
 	Method  interpolate.Method // along a curve: how a grid's curve is brought to the stations
@@ -50,21 +51,22 @@ type Result struct {
 	Ea             float64    // |e21/f1|, a fraction
 	Eext           float64    // |(extrapolated - f1)/extrapolated|, a fraction
 	GCI            float64    // U/|f1|, a fraction
-	U              float64    // expanded, in the unit of the values; monotone only
+	U              float64    // expanded, in the unit of the values
 	UStandard      float64    // standard, where the rule gives that; oscillatory only
 	HalfRange      float64    // half the range of the three
 	Range          float64    // range of all values given
+	Used           int        // grids that the result rests on
 	Rule           string     // what was done
 	Notices        []notice.Notice
 }
 
-// StandardUncertainty returns the standard uncertainty of the grid: U/k for
-// monotone values, the half-range over sqrt(3) for oscillatory ones, and NaN
-// for diverging and insufficient ones. It is NaN for flat values as well:
+// StandardUncertainty returns the standard uncertainty of the grid: U/k, the
+// half-range over sqrt(3) for oscillatory values (U/k where the rule asked for
+// gives a U for them), and NaN for diverging and insufficient ones. It is NaN for flat values as well:
 // three equal values may be printed too coarsely, or be copies of one run, so
 // they are no evidence that the uncertainty is zero.
 func (r Result) StandardUncertainty(k float64) float64 {
-	if r.Class == Oscillatory {
+	if math.IsNaN(r.U) {
 		return r.UStandard
 	}
 	return r.U / k
@@ -85,32 +87,8 @@ func (r Result) StandardUncertainty(k float64) float64 {
 // insufficient. Both slices have one length; dim is 1, 2 or 3. Source: as at
 // the constants.
 func Three(counts, values []float64, dim int, opt Options) Result {
-	r := Result{
-		Class: Insufficient, Ratio: math.NaN(), R21: math.NaN(), R32: math.NaN(),
-		Values: unknown(), Counts: unknown(),
-		Order: math.NaN(), Extrapolated: math.NaN(), Ea: math.NaN(), Eext: math.NaN(), GCI: math.NaN(),
-		U: math.NaN(), UStandard: math.NaN(), HalfRange: math.NaN(), Range: math.NaN(),
-		Rule: "no order: three grids of different counts are needed",
-	}
-	runs := usable(counts, values)
-	if len(runs) > 0 {
-		r.Range = rangeOf(runs)
-	}
-	three, notices, ok := finest(runs)
-	r.Notices = notices
-	for i, g := range three {
-		r.Values[i], r.Counts[i] = g.value, g.count
-	}
-	if !ok {
-		return r
-	}
-	if dim < 1 || dim > 3 {
-		r.tell("grid-dimension", dim)
-		return r
-	}
-	r.R21, r.R32 = ratio(three[0].count, three[1].count, dim), ratio(three[1].count, three[2].count, dim)
-	r.judge(opt)
-	return r
+	opt.Rule = RuleThree
+	return Study(counts, values, dim, opt)
 }
 
 func (r *Result) tell(code string, args ...any) {
@@ -150,10 +128,10 @@ func rangeOf(runs []run) float64 {
 }
 
 // finest returns the three runs with the largest different counts, fewer
-// where there are no more, and whether they can be classified.
-func finest(runs []run) (three []run, notices []notice.Notice, ok bool) {
+// where there are no more, the number of different counts, and whether the
+// three can be classified.
+func finest(runs []run) (three []run, different int, notices []notice.Notice, ok bool) {
 	ok = true
-	different := 0
 	for i, r := range runs {
 		if i == 0 || r.count != runs[i-1].count {
 			different++
@@ -169,13 +147,7 @@ func finest(runs []run) (three []run, notices []notice.Notice, ok bool) {
 			ok = false
 		}
 	}
-	switch {
-	case different < 3:
-		return three, append(notices, notice.New("grid-few", different)), false
-	case different > 3:
-		notices = append(notices, notice.New("grid-finest-three", different))
-	}
-	return three, notices, ok
+	return three, different, notices, ok && different >= 3
 }
 
 // ratio returns (fine/coarse)^(1/dim).
@@ -209,9 +181,7 @@ func (r *Result) judge(opt Options) {
 	case Monotone:
 		r.monotone(t, e21, e32, opt)
 	case Oscillatory:
-		r.UStandard = r.HalfRange / math.Sqrt(3)
-		r.Rule = "oscillatory: the half-range of the three finest grids is a bound, u = half-range/√3; no order"
-		r.tell("grid-oscillatory", r.shownRatio(t, e21, e32), quantity.Text(r.HalfRange, 3))
+		r.oscillatory(t, e21, e32, opt)
 	case Diverging, OscillatoryDiverging:
 		r.Rule = "differences grow with refinement: no order and no uncertainty"
 		p := usualOrder(r.R21, r.R32, e21, e32)
@@ -246,28 +216,55 @@ func (r *Result) monotone(t triple, e21, e32 float64, opt Options) {
 	if r.Extrapolated != 0 {
 		r.Eext = math.Abs((r.Extrapolated - r.Values[0]) / r.Extrapolated)
 	}
-	limit := none
-	r.U, limit = indexed(t, math.Abs(e21), p, opt.Bounded)
-	r.Rule = "U = 1.25 |f2 - f1|/(r^p - 1) of the three finest grids, " + limit.words(opt.Bounded)
-	if r.Values[0] != 0 {
-		r.GCI = r.U / math.Abs(r.Values[0])
-	} else {
-		r.tell("grid-zero-value")
+	switch opt.Rule {
+	case RuleTwo:
+		r.two(e21, opt)
+	case RuleFormal:
+		r.held(t, e21, opt)
+	case RuleCorrection:
+		r.correction(e21, opt)
+	case RuleFactor:
+		r.factor(e21, opt)
+	default:
+		r.plain(t, e21, opt)
 	}
-	order := quantity.Text(p, 3)
+	r.index()
+	r.offFormal(opt)
+}
+
+// offFormal tells an order that is off the formal one by half of it (no
+// source).
+func (r *Result) offFormal(opt Options) {
+	if credible(r.Order, opt) {
+		return
+	}
+	code := "grid-order-low"
+	if r.Order > opt.formal() {
+		code = "grid-order-high"
+	}
+	r.tell(code, quantity.Text(r.Order, 3), quantity.Text(opt.formal(), 3))
+}
+
+// plain takes U by the rule of the three finest grids, bounded if asked.
+func (r *Result) plain(t triple, e21 float64, opt Options) {
+	limit := none
+	r.U, limit = indexed(t, math.Abs(e21), r.Order, opt.Bounded)
+	r.Rule = "U = 1.25 |f2 - f1|/(r^p - 1) of the three finest grids, " + limit.words(opt.Bounded)
 	switch limit {
 	case low:
-		r.tell("grid-bounded-low", order)
+		r.tell("grid-bounded-low", quantity.Text(r.Order, 3))
 	case high:
-		r.tell("grid-bounded-high", order)
+		r.tell("grid-bounded-high", quantity.Text(r.Order, 3))
 	}
-	// No source: an order off the formal one by half of it is told.
-	switch formal, rounded := opt.formal(), quantity.Round(p, 10); {
-	case rounded > 1.5*formal:
-		r.tell("grid-order-high", order, quantity.Text(formal, 3))
-	case rounded < 0.5*formal:
-		r.tell("grid-order-low", order, quantity.Text(formal, 3))
+}
+
+// index relates U to the value of the finest grid.
+func (r *Result) index() {
+	if r.Values[0] == 0 {
+		r.tell("grid-zero-value")
+		return
 	}
+	r.GCI = r.U / math.Abs(r.Values[0])
 }
 
 // bound says which limit of the bounded rule decided U.

@@ -135,6 +135,12 @@ func TestOperationsAreLogged(t *testing.T) {
 			return s.Set(study.Target{Kind: "question", ID: q, Field: "choices.k_num"}, "2", "09:00", "as the reviewer asked")
 		}, "k_num of drag coefficient at C1: 1.15 → 2"},
 		{func() error {
+			return s.Set(study.Target{Kind: "question", ID: q, Field: "choices.rule"}, "least squares", "09:00", "")
+		}, "rule of the grid study of drag coefficient at C1: three → least squares"},
+		{func() error {
+			return s.Set(study.Target{Kind: "question", ID: q, Field: "choices.rule"}, "three", "09:00", "")
+		}, "rule of the grid study of drag coefficient at C1: least squares → three"},
+		{func() error {
 			return s.Set(study.Target{Kind: "question", ID: q, Field: "requirement.value"}, "4", "09:01", "")
 		}, "requirement of drag coefficient at C1: 5 → 4"},
 		{func() error {
@@ -164,7 +170,7 @@ func TestOperationsAreLogged(t *testing.T) {
 			t.Errorf("entry %+v, want %q", last, step.want)
 		}
 	}
-	if s.Log[0].Why != "as the reviewer asked" || s.Log[0].Shown || !s.Log[6].Shown {
+	if s.Log[0].Why != "as the reviewer asked" || s.Log[0].Shown || !s.Log[8].Shown {
 		t.Errorf("log %+v", s.Log)
 	}
 	if r := s.Questions[0].Requirement; !r.Late || r.Value != 6 {
@@ -182,6 +188,7 @@ func TestRefusedOperations(t *testing.T) {
 		{study.Target{Kind: "question", ID: q, Field: "choices.k"}, "-1"},
 		{study.Target{Kind: "question", ID: q, Field: "choices.dimension"}, "2.5"},
 		{study.Target{Kind: "question", ID: q, Field: "choices.interpolation"}, "spline"},
+		{study.Target{Kind: "question", ID: q, Field: "choices.rule"}, "best"},
 		{study.Target{Kind: "question", ID: "nowhere", Field: "choices.k"}, "2"},
 		{study.Target{Kind: "source", ID: q, Field: "9.value"}, "2"},
 		{study.Target{Kind: "source", ID: q, Field: "0.value"}, "-2"},

@@ -4,6 +4,7 @@ import (
 	"strconv"
 
 	"weirmark/core/notice"
+	"weirmark/core/refinement"
 	"weirmark/core/settling"
 	"weirmark/core/tablefile"
 )
@@ -236,6 +237,7 @@ type work struct {
 	rows []int // of the reference, one a station
 	x, s, d,
 	uInterp []float64
+	refined  refinement.Result
 	gridU    []float64 // standard uncertainty from the grid study; nil where there is none
 	blocked  bool      // the grid study says that there is none
 	parts    []part

@@ -16,10 +16,6 @@ func (c Choices) dimension() int {
 	return 3
 }
 
-func (c Choices) rule() refinement.Options {
-	return refinement.Options{Bounded: c.Bounded, Formal: c.Formal, Method: c.Interpolation}
-}
-
 // family makes the grid study: of a scalar from a table over grids or from
 // runs with their cell counts, of a curve along its stations.
 func (w *work) family() {
@@ -45,17 +41,20 @@ func (w *work) scalarFamily() []notice.Notice {
 	if len(counts) < 2 {
 		return nil
 	}
-	r := refinement.Three(counts, values, w.choices.dimension(), w.choices.rule())
+	r := refinement.Study(counts, values, w.choices.dimension(), w.choices.rule())
 	g := w.grid(counts, names)
 	for i := range g.Points {
 		g.Points[i].Value = w.yNumber(values[indexOf(counts, names, g.Points[i])])
+		if r.Used > 0 {
+			g.Points[i].Used = i >= len(g.Points)-r.Used
+		}
 	}
 	g.Class, g.Ratio, g.R21, g.R32, g.Rule = string(r.Class), Number(r.Ratio), Number(r.R21), Number(r.R32), r.Rule
 	g.Order, g.Ea, g.Eext, g.GCI = Number(r.Order), Number(r.Ea), Number(r.Eext), Number(r.GCI)
 	g.Extrapolated, g.U = w.yNumber(r.Extrapolated), w.step(r.U)
 	u := r.StandardUncertainty(w.choices.KNum)
 	g.UNum = w.step(u)
-	w.cell.Grids = g
+	w.cell.Grids, w.refined = g, r
 	w.cell.Grid = g.Points[len(g.Points)-1].Name
 	if !math.IsNaN(u) && len(w.s) > 0 {
 		w.gridU = []float64{u}
@@ -131,7 +130,7 @@ func (w *work) curveFamily() []notice.Notice {
 func (w *work) grid(counts []float64, names []string) *Grids {
 	g := &Grids{Dimension: w.choices.dimension(), Formal: Number(w.choices.Formal), KNum: Number(w.choices.KNum),
 		Ratio: None, Order: None, Extrapolated: None, Ea: None, Eext: None, GCI: None, U: None, UNum: None, R21: None, R32: None,
-		OrderLow: None, OrderHigh: None, Local: []LocalGrid{}, Points: []GridPoint{}}
+		OrderLow: None, OrderHigh: None, NextCells: None, NextCost: None, Local: []LocalGrid{}, Points: []GridPoint{}}
 	order := make([]int, len(counts))
 	for i := range order {
 		order[i] = i

@@ -5,6 +5,7 @@ import (
 
 	"weirmark/core/interpolate"
 	"weirmark/core/quantity"
+	"weirmark/core/refinement"
 )
 
 // alternative is a choice that another careful person might have made.
@@ -14,7 +15,7 @@ type alternative struct {
 }
 
 // alternatives lists the other choices open to a cell.
-func alternatives(c Choices) []alternative {
+func alternatives(c Choices, grids *Grids) []alternative {
 	all := []alternative{}
 	kNum := 2.0
 	if c.KNum == 2 {
@@ -26,6 +27,7 @@ func alternatives(c Choices) []alternative {
 	} else {
 		all = append(all, alternative{"bounded rule of the grid study", func(c *Choices) { c.Bounded = true }})
 	}
+	all = append(all, rules(c, grids)...)
 	if c.NumShared {
 		all = append(all, alternative{"u_num independent between stations", func(c *Choices) { c.NumShared = false }})
 	} else {
@@ -44,13 +46,37 @@ func alternatives(c Choices) []alternative {
 	return all
 }
 
+// rules lists the other rules that fit a grid study of one value.
+func rules(c Choices, g *Grids) []alternative {
+	all := []alternative{}
+	if g == nil || g.Along {
+		return all
+	}
+	add := func(change, rule string) {
+		if c.Rule != rule {
+			all = append(all, alternative{change, func(c *Choices) { c.Rule = rule }})
+		}
+	}
+	add("three finest grids", "")
+	if len(g.Points) >= 4 {
+		add("least squares over all grids", refinement.RuleLeastSquares)
+	}
+	if g.Order > g.Formal {
+		add("order held at the formal one", refinement.RuleFormal)
+	}
+	if g.Class == string(refinement.Oscillatory) {
+		add("3 times the range of the oscillating grids as U", refinement.RuleRange)
+	}
+	return all
+}
+
 func trim(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
 
 // fragile evaluates the cell under every alternative and lists those that
 // change an outcome word.
 func (e *evaluation) fragile(q *Question, model string, have Cell) []Fragility {
 	list := []Fragility{}
-	for _, a := range alternatives(q.Choices) {
+	for _, a := range alternatives(q.Choices, have.Grids) {
 		choices := q.Choices
 		a.apply(&choices)
 		other := e.workWith(&work{e: e, q: q, model: model, choices: choices, inner: true})

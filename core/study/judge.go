@@ -5,6 +5,7 @@ import (
 
 	"weirmark/core/adequacy"
 	"weirmark/core/quantity"
+	"weirmark/core/refinement"
 )
 
 // judge holds the requirement against the interval of the model error.
@@ -66,6 +67,7 @@ func (w *work) resolve(j *Judgement, e float64, i int, limit float64) {
 		}
 	}
 	j.UValNeeded = w.step(needed)
+	w.nextGrid(needed)
 	if w.uNum == nil {
 		return
 	}
@@ -73,4 +75,19 @@ func (w *work) resolve(j *Judgement, e float64, i int, limit float64) {
 		j.UNumNeeded = w.step(u)
 		j.UNumReduction = Number(1 - u/w.uNum[i])
 	}
+}
+
+// nextGrid tells the grid that would bring u_val of a scalar to what is
+// needed, the other parts unchanged.
+func (w *work) nextGrid(needed float64) {
+	if w.cell.Grids == nil || !w.cell.Scalar || w.gridU == nil {
+		return
+	}
+	u, ok := adequacy.PartNeeded(w.uVal[0], w.gridU[0], needed)
+	if !ok {
+		return
+	}
+	next := refinement.NextGrid(w.refined, w.choices.dimension(), w.choices.rule(), w.gridU[0], u, refinement.CostExponent)
+	// An order is good for no more than three digits of a cell count.
+	w.cell.Grids.NextCells, w.cell.Grids.NextCost = Number(quantity.Round(next.Cells, 3)), Number(next.Cost)
 }

@@ -206,7 +206,7 @@ func (s *Study) Name(t Target) string {
 var fieldNames = map[string]string{
 	"y.column": "column of values", "y.unit": "unit of values", "x.column": "column of stations", "x.unit": "unit of stations",
 	"u.column": "column of uncertainty", "u.unit": "unit of uncertainty", "u_factor": "coverage", "u_basis": "basis of the uncertainty", "size.column": "column of cell counts", "cells": "number of cells",
-	"choices.k": "k", "choices.k_num": "k_num", "choices.bounded": "bounded rule", "choices.formal": "formal order", "choices.dimension": "dimension",
+	"choices.k": "k", "choices.k_num": "k_num", "choices.bounded": "bounded rule", "choices.rule": "rule of the grid study", "choices.formal": "formal order", "choices.dimension": "dimension",
 	"choices.interpolation": "interpolation", "choices.u_interp": "interpolation uncertainty", "choices.num_shared": "u_num shared",
 	"requirement.value": "requirement", "requirement.percent": "basis of the requirement", "requirement.who": "who set the requirement", "requirement.date": "date of the requirement",
 	"scores.dispersion": "scores of the dispersion field", "scores.threshold": "threshold of the scores", "scores.fraction": "fraction of the hit rate", "scores.allowance": "allowance of the hit rate",
@@ -384,6 +384,8 @@ func (q *Question) enter(path, value string) (string, error) {
 		}
 		c.Dimension = int(d)
 		return before, err
+	case "choices.rule":
+		return c.enterRule(value)
 	case "choices.bounded":
 		return yesNo(&c.Bounded, value)
 	case "choices.u_interp":

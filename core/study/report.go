@@ -377,6 +377,9 @@ type Grids struct {
 	R21          Number      `json:"r21"`
 	R32          Number      `json:"r32"`
 
+	NextCells Number `json:"next_cells"` // of a grid that would resolve the requirement with E unchanged
+	NextCost  Number `json:"next_cost"`  // of its run, relative to the finest
+
 	Along       bool        `json:"along"` // a study along a curve
 	Monotone    int         `json:"monotone"`
 	NonMonotone int         `json:"non_monotone"`
@@ -391,7 +394,7 @@ type GridPoint struct {
 	Cells Number `json:"cells"`
 	H     Number `json:"h"` // relative to the finest
 	Value Number `json:"value"`
-	Used  bool   `json:"used"` // one of the three finest
+	Used  bool   `json:"used"` // in the estimate
 }
 
 // LocalGrid is the grid study at one station.

@@ -149,6 +149,7 @@ func (e *evaluation) difference(a, b *Cell) (Difference, bool) {
 	for i := range a.Stations {
 		x, y := a.Stations[i], b.Stations[i]
 		sum += float64(x.S-y.S) / n
+		known = known && x.UInput.Known() && y.UInput.Known()
 		for _, u := range []Number{x.UNum, y.UNum} {
 			known = known && u.Known()
 			square += float64(u*u) / float64(n*n)

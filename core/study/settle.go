@@ -46,7 +46,7 @@ func (w *work) slips(role string) []*Slip {
 }
 
 // usedGrids are the names of the runs that the numbers of the cell rest on:
-// the three finest of a family, or the finest run.
+// those in the estimate of a family, or the finest run.
 func (w *work) usedGrids() []string {
 	if w.cell.Grids == nil {
 		return []string{w.cell.Grid}
@@ -96,6 +96,7 @@ func (w *work) judgeMonitor(c *curve) {
 	for _, n := range m.Notices {
 		blocked = w.finding(0, "a settled "+name, n) || blocked
 	}
+	w.doubtMonitorValue(name, p.Grid.Value, m, opt)
 	if !finest || math.IsNaN(m.U) || len(w.x) == 0 || blocked {
 		return
 	}
@@ -132,6 +133,25 @@ func iterative(class string, u, halfRange float64) (value, k float64) {
 func (m MonitorLine) UIter() (value, k Number) {
 	v, factor := iterative(m.Class, float64(m.U), float64(m.HalfRange))
 	return Number(v), Number(factor)
+}
+
+// doubtMonitorValue asks where a monitor settles elsewhere than the value that
+// is used of its grid: by more than its own uncertainty, a tenth of the grid
+// uncertainty and a thousandth of the value.
+func (w *work) doubtMonitorValue(name, grid string, m settling.Monitor, opt settling.Options) {
+	if w.cell.Grids == nil || w.cell.Grids.Along || math.IsNaN(m.Mean) || math.IsNaN(m.U) {
+		return
+	}
+	for _, p := range w.cell.Grids.Points {
+		if p.Name != grid || !p.Value.Known() {
+			continue
+		}
+		value := w.yUnit.ToSI(float64(p.Value))
+		small := max(2*m.U, 0.1*opt.UGrid, 1e-3*math.Abs(value))
+		if exceeds(math.Abs(m.Mean-value), small) {
+			w.ask(0, "the value of "+grid, "monitor-value", name, quantity.Text(float64(w.yNumber(m.Mean)), 4)+w.cell.UnitSuffix(), quantity.Text(float64(p.Value), 4)+w.cell.UnitSuffix())
+		}
+	}
 }
 
 // settlingOptions holds what changes are judged against: the grid

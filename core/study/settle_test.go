@@ -77,6 +77,20 @@ func TestMonitors(t *testing.T) {
 	}
 }
 
+// A monitor that settles beside the value of its grid is asked about; one
+// that settles at it is not.
+func TestMonitorValue(t *testing.T) {
+	for _, row := range []struct {
+		end   float64
+		found bool
+	}{{.02995, false}, {.02955, true}} {
+		c := study.Evaluate(monitored(map[string]string{"G4": history(settled(row.end))}), study.Options{}).Cells[1]
+		if found := notice.Has(c.Notices, "monitor-value"); found != row.found {
+			t.Errorf("settling at %v: found %v", row.end, found)
+		}
+	}
+}
+
 // What iteration leaves open in the finest run counts in u_num.
 func TestIterationCounts(t *testing.T) {
 	quiet := study.Evaluate(monitored(map[string]string{"G4": history(settled(.02995))}), study.Options{}).Cells[1]

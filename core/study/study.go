@@ -112,7 +112,7 @@ type Slip struct {
 	Y        ColumnUse `json:"y"`        // the quantity
 	U        ColumnUse `json:"u"`        // uncertainty of the quantity, independent between stations
 	UFactor  Field     `json:"u_factor"` // coverage of U: "1", "2", "95 %", "limits"
-	UBasis   Field     `json:"u_basis"`  // of U in percent: BasisReading, or the full scale in the unit of Y
+	UBasis   Field     `json:"u_basis"`  // of U in percent: "reading", or the full scale in the unit of Y
 	Branch   Field     `json:"branch"`   // of a curve that goes out and back: a name of package profile, or empty
 	Derive   Field     `json:"derive"`   // DeriveLift, or empty: the values as they are
 	Contour  ColumnUse `json:"contour"`  // second coordinate of a section, for branches and DeriveLift
@@ -125,9 +125,6 @@ type ColumnUse struct {
 	Column Field `json:"column"`
 	Unit   Field `json:"unit"`
 }
-
-// BasisReading is the basis of an uncertainty in percent of the reading.
-const BasisReading = "reading"
 
 // Kinds of reference; the kind drives the wording of the claim.
 const (
@@ -283,14 +280,15 @@ type Source struct {
 
 // Choices are the decisions whose effect is shown at once.
 type Choices struct {
-	K             float64            `json:"k"`             // coverage factor of the statement
-	KNum          float64            `json:"k_num"`         // U_num to u_num
-	Bounded       bool               `json:"bounded"`       // bounded rule of the grid study
-	Formal        float64            `json:"formal"`        // formal order of the scheme
-	Dimension     int                `json:"dimension"`     // 2 or 3
-	Interpolation interpolate.Method `json:"interpolation"` // of the simulation to the stations
-	UInterp       bool               `json:"u_interp"`      // count the interpolation uncertainty
-	NumShared     bool               `json:"num_shared"`    // u_num fully shared between stations
+	K             float64            `json:"k"`              // coverage factor of the statement
+	KNum          float64            `json:"k_num"`          // U_num to u_num
+	Bounded       bool               `json:"bounded"`        // bounded rule of the grid study
+	Rule          string             `json:"rule,omitempty"` // of the grid study of one value, a name of refinement.Rules; empty: the three finest grids
+	Formal        float64            `json:"formal"`         // formal order of the scheme
+	Dimension     int                `json:"dimension"`      // 2 or 3
+	Interpolation interpolate.Method `json:"interpolation"`  // of the simulation to the stations
+	UInterp       bool               `json:"u_interp"`       // count the interpolation uncertainty
+	NumShared     bool               `json:"num_shared"`     // u_num fully shared between stations
 }
 
 // DefaultChoices are the choices of a new question.

@@ -362,6 +362,91 @@ def joint():
     return json.dumps(document, indent=1, ensure_ascii=True) + "\n"
 
 
+# ----------------------------------------------------------- least squares
+
+FAMILIES = [
+    # name, dimension, cells fine to coarse, values
+    ("3 + 0.1 h^1.5", 1, [1, 1 / 1.25, 1 / 1.5, 0.5, 0.4], [3 + 0.1 * h ** 1.5 for h in (1, 1.25, 1.5, 2, 2.5)]),
+    ("3 + 0.1 h^3", 1, [1, 1 / 1.25, 1 / 1.5, 0.5, 0.4], [3 + 0.1 * h ** 3 for h in (1, 1.25, 1.5, 2, 2.5)]),
+    ("3 + 0.1 h + 0.02 h^2", 1, [1, 1 / 1.25, 1 / 1.5, 0.5, 0.4], [3 + 0.1 * h + 0.02 * h * h for h in (1, 1.25, 1.5, 2, 2.5)]),
+    ("flat plate SA CFL3D CD", 2, [208896, 52224, 13056, 3264, 816],
+     [0.285985288e-2, 0.286130951e-2, 0.286620917e-2, 0.288437885e-2, 0.295438152e-2]),
+    ("flat plate SA CFL3D cf(0.97)", 2, [208896, 52224, 13056, 3264, 816],
+     [0.270562153e-2, 0.270673749e-2, 0.271115173e-2, 0.272834697e-2, 0.279568508e-2]),
+    ("demo x_r A", 3, [5.60e6, 2.35e6, 0.98e6, 0.41e6], [6.38, 6.31, 6.18, 5.92]),
+    ("demo x_r B", 3, [5.60e6, 2.35e6, 0.98e6, 0.41e6], [5.715, 5.67, 5.58, 5.41]),
+    ("demo Cd A", 3, [5.60e6, 2.35e6, 0.98e6, 0.41e6], [0.03178, 0.03217, 0.03287, 0.03412]),
+    ("demo Cd B", 3, [5.60e6, 2.35e6, 0.98e6, 0.41e6], [0.02995, 0.03021, 0.03068, 0.03155]),
+    ("scattered", 1, [1, 1 / 1.3, 1 / 1.7, 1 / 2.2, 1 / 2.9], [1.00, 1.02, 1.10, 0.55, 1.15]),
+]
+
+
+def fitted(h, f, w, shapes):
+    """Coefficients, fit and weighted sum of squares of f on a constant and shapes."""
+    root = numpy.sqrt(w)
+    matrix = numpy.stack([numpy.ones_like(h)] + shapes, 1)
+    c = numpy.linalg.lstsq(matrix * root[:, None], f * root, rcond=None)[0]
+    fit = matrix @ c
+    return c, fit, math.fsum(w * (f - fit) ** 2)
+
+
+def free_order(h, f, w):
+    """The order of either sign with the least sum of squares, None at an end of the search."""
+    def total(p):
+        return fitted(h, f, w, [h ** p])[2]
+
+    def slope(p):
+        c, fit, _ = fitted(h, f, w, [h ** p])
+        return -c[1] * math.fsum(w * (f - fit) * h ** p * numpy.log(h))
+
+    ps = numpy.arange(-997, 998, 2) / 100
+    i = int(numpy.argmin([total(p) for p in ps]))
+    if i in (0, len(ps) - 1):
+        return None
+    return optimize.brentq(slope, ps[i - 1], ps[i + 1], xtol=1e-14)
+
+
+def least_squares():
+    rows = []
+    for name, dim, cells, values in FAMILIES:
+        n, f = len(cells), numpy.array(values) - values[0]
+        h = (cells[0] / numpy.array(cells, float)) ** (1 / dim)
+        step = (max(values) - min(values)) / (n - 1)
+        weights = [("weighted", 1 / h / math.fsum(1 / h)), ("equal", numpy.full(n, 1 / n))]
+
+        def candidate(form, weighting, w, shapes, m):
+            c, fit, squares = fitted(h, f, w, shapes)
+            return math.sqrt(n * squares / (n - m)), form, weighting, c, fit
+
+        free = []
+        for weighting, w in weights:
+            p = free_order(h, f, w)
+            if p is not None and p > 0:
+                free.append(candidate("power", weighting, w, [h ** p], 3) + (p,))
+        p, best = None, None
+        if free:
+            best = min(free, key=lambda x: x[0])
+            p = best[5]
+        if p is None or not 0.5 <= p <= 2:
+            shapes = [("first", [h], 2), ("second", [h * h], 2)]
+            if p is None or p < 0.5:
+                shapes.append(("both", [h, h * h], 3))
+            best = min((candidate(form, weighting, w, s, m) for form, s, m in shapes for weighting, w in weights), key=lambda x: x[0])
+        scatter, form, weighting, c, fit = best[:5]
+        error, off = abs(fit[0] - c[0]), abs(f[0] - fit[0])
+        safe = 1.25 if scatter < step and p is not None and 0.5 <= p < 2.1 else 3
+        u = safe * error + scatter + off if scatter < step else 3 * scatter / step * (error + scatter + off)
+        eight = lambda v: "%.8g" % v
+        rows.append([name, form, "" if form == "power" and scatter < 1e-9 else weighting, "" if p is None else eight(p), eight(values[0] + c[0]), eight(u)])
+    notes = [
+        "Least squares over four or more grids, by the formulas in core/refinement/leastsquares.go",
+        "source of the formulas: a description of Eca and Hoekstra, J. Comput. Phys. 262 (2014) 104; no published table checks them",
+        "flat plate: %s; demo: invented; the others are formulas of h" % TMR,
+        "order: of the free fit with the smaller scatter, empty without one; weighting: empty where both fits are exact; eight digits",
+    ]
+    return table(notes, ["family", "form", "weighting", "order", "extrapolated", "u"], rows)
+
+
 # ------------------------------------------------------------------- files
 
 def files():
@@ -373,6 +458,7 @@ def files():
     result["flatplate-friction.csv"] = flatplate_friction()
     result["distributions.csv"] = distributions()
     result["joint.json"] = joint()
+    result["least-squares.csv"] = least_squares()
     return result
 
 

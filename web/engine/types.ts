@@ -451,6 +451,7 @@ export interface Choices {
   k: number;
   k_num: number;
   bounded: boolean;
+  rule?: string;
   formal: number;
   dimension: number;
   interpolation: Method;
@@ -612,6 +613,8 @@ export interface Grids {
   rule: string;
   r21: number | null;
   r32: number | null;
+  next_cells: number | null;
+  next_cost: number | null;
   along: boolean;
   monotone: number;
   non_monotone: number;

@@ -13,7 +13,7 @@ const courseOfResult: Record<string, number> = { stations: 2, uncertainty: 2, ag
 
 /** The course where an entry of a question stands; what is not named stands in the third. */
 export function courseOfEntry(field: string): number {
-  if (/^choices\.(k_num|bounded|formal|dimension|num_shared)$/.test(field)) {
+  if (/^choices\.(k_num|bounded|rule|formal|dimension|num_shared)$/.test(field)) {
     return 1;
   }
   if (/^(requirement|choices\.k)/.test(field)) {

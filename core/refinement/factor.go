@@ -1,0 +1,20 @@
+package refinement
+
+// factor takes U by the factor of safety: with P = p/q, q the formal order, and
+// the estimate d = |e21|/(r21^p - 1),
+//
+//	U = (2.45 - 0.85 P) d   for P <= 1,
+//	U = (16.4 P - 14.8) d   for P > 1.
+//
+// Source: Xing and Stern, J. Fluids Eng. 132 (2010) 061403; coefficients from
+// memory.
+func (r *Result) factor(e21 float64, opt Options) {
+	part := r.Order / opt.formal()
+	factor := 2.45 - float64(0.85*part)
+	if part > 1 {
+		factor = float64(16.4*part) - 14.8
+	}
+	r.U = factor * r.estimate(e21, r.Order)
+	r.Rule = "factor of safety of the three finest grids, formal order " + orderWords(opt.formal()) + "; coefficients from memory"
+	r.tell("grid-memory-rule", "factor-of-safety")
+}
