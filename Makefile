@@ -47,10 +47,11 @@ run: build page
 test: build
 	go run -tags noasm ./core/internal/check
 
-# Do numpy and scipy, by themselves, still give the committed reference figures?
+# Do numpy and scipy still give the committed figures, and the outside checks their page?
 reference:
 	@.ci/packages figures
 	$(PYTHON) testdata/published/reference.py
+	go run -tags noasm ./core/internal/outside
 
 # Do the demo files still come out of their program, byte for byte?
 demo-data:

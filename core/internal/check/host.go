@@ -21,7 +21,7 @@ var (
 )
 
 // nativeOnly are packages that are no part of what runs under js/wasm.
-var nativeOnly = []string{"weirmark/core/cmd", "weirmark/core/internal/check", "weirmark/core/internal/bench", "weirmark/web"}
+var nativeOnly = []string{"weirmark/core/cmd", "weirmark/core/internal/check", "weirmark/core/internal/bench", "weirmark/core/internal/outside", "weirmark/web"}
 
 // kept are the variables that a run under js/wasm gets. Its runtime holds
 // arguments and environment in one small block, so all others are left out.
