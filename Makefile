@@ -1,6 +1,6 @@
 # Every target is one question; the comment above it asks it.
 .DEFAULT_GOAL := help
-.PHONY: help tools setup build page edge run test reference bench clean demo-data fixtures
+.PHONY: help tools setup build page edge run test reference bench clean demo-data fixtures picture
 
 # One set of floating-point bits on every host: no assembly in the numeric libraries.
 GO_BUILD := go build -tags noasm -trimpath
@@ -31,6 +31,10 @@ build: setup
 # Where is the page? (dist/weirmark.html in one file, dist/site in parts)
 page: setup
 	go run ./web/build page
+
+# How does the page look? (the picture in README.md, made anew)
+picture: page
+	node web/test/picture.mjs
 
 # Does the edge service answer on this machine? (until Ctrl-C)
 edge: page
