@@ -76,9 +76,9 @@ func (b *builder) compared(i int, c study.Cell) []Node {
 	for j, name := range courses {
 		evidence[j] = name + ": " + word(states, c.Courses[j])
 	}
-	of := plural(len(c.Stations), "station")
+	of := quantity.Counted(len(c.Stations), "station")
 	if c.Scalar {
-		of = plural(len(c.Stations), "value")
+		of = quantity.Counted(len(c.Stations), "value")
 	}
 	points := say("{} of {}", text(of), count(c.StationsAll, at("stations_all")))
 	if c.StationsAll == 0 {
@@ -234,7 +234,7 @@ func (b *builder) joint(i int, c study.Cell) []Node {
 			row(cell(text("\u2003\u2003of which a scale")), figureCell(hundredths(j.ScalePart, at("scale_part"))), figureCell(text("1")), figureCell(text("")), cell()),
 			row(cell(text("\u2003\u2003shape")), figureCell(hundredths(j.ShapePart, at("shape_part"))), figureCell(count(j.ShapeN, at("shape_n"))), figureCell(text("")), cell()))
 	}
-	nodes := []Node{title, b.table("plain", say("Joint statistic over {} with correlation: {}.", text(plural(j.N, "station")), given(j.Pattern)),
+	nodes := []Node{title, b.table("plain", say("Joint statistic over {} with correlation: {}.", text(quantity.Counted(j.N, "station")), given(j.Pattern)),
 		headRow("", "#Value", "#Degrees of freedom", "#95 % point", "Reading"), rows...)}
 	words := say("The tail probability at the stated uncertainties is {}.", digits(j.P, 2, at("p_value")))
 	resolution := func(yes bool) string {

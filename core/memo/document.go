@@ -189,7 +189,7 @@ func (b *builder) identity() []Node {
 	rows := []Node{
 		line(say("Purpose and intended use"), given(r.Purpose)),
 		line(say("Status"), text(state(r))),
-		line(say("Compared"), say("{} in {}, from {}", text(plural(len(r.Cells), "cell")), text(plural(questions(r), "question")), text(plural(len(r.Files), "file")))...),
+		line(say("Compared"), say("{} in {}, from {}", text(quantity.Counted(len(r.Cells), "cell")), text(quantity.Counted(questions(r), "question")), text(quantity.Counted(len(r.Files), "file")))...),
 		line(say("Made"), say("{}, by {}, methods {}", made, given(b.in.Product), given(b.in.Edition))...),
 		line(say("SHA-256 of the study"), hash...),
 	}
@@ -207,13 +207,6 @@ func questions(r study.Report) int {
 		seen[key{c.Case, c.Quantity, ""}] = true
 	}
 	return len(seen)
-}
-
-func plural(n int, noun string) string {
-	if n == 1 {
-		return "1 " + noun
-	}
-	return fmt.Sprintf("%d %ss", n, noun)
 }
 
 // unitOf returns a unit for a reader.

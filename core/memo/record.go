@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"strings"
 
+	"weirmark/core/quantity"
 	"weirmark/core/study"
 )
 
@@ -34,7 +35,7 @@ func (b *builder) notProvided() Node {
 		case n == len(b.in.Report.Cells):
 			lines = append(lines, item(text(missing.what+": not provided.")))
 		case n > 0:
-			lines = append(lines, item(text(fmt.Sprintf("%s: not provided for %d of %s.", missing.what, n, plural(len(b.in.Report.Cells), "cell")))))
+			lines = append(lines, item(text(fmt.Sprintf("%s: not provided for %d of %s.", missing.what, n, quantity.Counted(len(b.in.Report.Cells), "cell")))))
 		}
 	}
 	s.Nodes = append(s.Nodes, paragraph(text("The statements do not rest on the following and do not replace it.")), list(lines...))

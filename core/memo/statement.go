@@ -5,6 +5,7 @@ import (
 	"strings"
 
 	"weirmark/core/notice"
+	"weirmark/core/quantity"
 	"weirmark/core/study"
 )
 
@@ -122,7 +123,7 @@ func (b *builder) restrictions(i int, c study.Cell, alone bool) []Node {
 		add("{} of {} stations lie outside the simulated range and were not compared. No statement is made there.", text(fmt.Sprint(n)), count(c.StationsAll, at("stations_all")))
 	}
 	if n, late := len(c.Excluded), lateOf(c.Excluded); n > 0 {
-		words := plural(n, "station") + " excluded by a person; the reasons are in the details."
+		words := quantity.Counted(n, "station") + " excluded by a person; the reasons are in the details."
 		if late > 0 {
 			words += fmt.Sprintf(" Of these, %d after the comparison had been seen.", late)
 		}

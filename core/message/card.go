@@ -1,6 +1,7 @@
 package message
 
 import (
+	"cmp"
 	"math"
 	"slices"
 	"strconv"
@@ -56,10 +57,10 @@ func readWords(t tablefile.Table) string {
 	if t.Name != "" {
 		text = "Table “" + t.Name + "”: "
 	}
-	text += count(t.Rows(), "row") + ", " + count(len(t.Columns), "column") + ", order kept."
+	text += quantity.Counted(t.Rows(), "row") + ", " + quantity.Counted(len(t.Columns), "column") + ", order kept."
 	for i, c := range t.Columns {
 		if i == 6 {
-			return text + " And " + count(len(t.Columns)-6, "further column") + "."
+			return text + " And " + quantity.Counted(len(t.Columns)-6, "further column") + "."
 		}
 		text += " " + columnWords(c)
 	}
@@ -137,7 +138,7 @@ func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
 		list = append(list, entry("size.column", "cells in", p.Size.Column, columns, ""), entry("grid", "grid names in", p.Grid, columns, ""))
 	default:
 		label := map[string]string{study.Monitor: "iterations or time in", study.Balance: "what enters in"}[p.Role.Value]
-		list = append(list, entry("x.column", orText(label, "stations in"), p.X.Column, columns, "none for a single value"))
+		list = append(list, entry("x.column", cmp.Or(label, "stations in"), p.X.Column, columns, "none for a single value"))
 		if p.X.Column.Given() {
 			list = append(list, entry("x.unit", "unit of stations", p.X.Unit, free, "m, mm, … or 1 for a pure number"))
 		}
@@ -317,11 +318,10 @@ func sourceEntries(q *study.Question, i int, s study.Source) []Entry {
 	if s.Random {
 		random = "yes"
 	}
-	number := func(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
 	list := []Entry{
 		entry("name", "source", s.Name, study.Entered, []Option{}, ""),
 		entry("of", "of", s.Of, study.Entered, []Option{{study.OfData, "the data"}, {study.OfInput, "the inputs"}, {study.OfNumerical, "the numerics"}}, ""),
-		entry("value", "value", number(s.Value), study.Entered, []Option{}, ""),
+		entry("value", "value", quantity.Typed(s.Value), study.Entered, []Option{}, ""),
 		entry("basis", "basis", s.Basis, study.Entered, []Option{{study.Absolute, "in the unit of the data"}, {study.OfReading, "% of reading"}, {study.OfFullScale, "% of full scale"}}, ""),
 		entry("coverage", "coverage", s.Coverage.Value, s.Coverage.By, coverages(), ""),
 		entry("random", "random", random, study.Entered, []Option{{"no", "systematic"}, {"yes", "random"}}, ""),
@@ -329,16 +329,16 @@ func sourceEntries(q *study.Question, i int, s study.Source) []Entry {
 		entry("origin", "where it comes from", s.Origin, study.Entered, []Option{}, ""),
 	}
 	if s.Basis == study.OfFullScale {
-		list = append(list, entry("full_scale", "full scale, in the unit of the data", number(s.FullScale), study.Entered, []Option{}, ""))
+		list = append(list, entry("full_scale", "full scale, in the unit of the data", quantity.Typed(s.FullScale), study.Entered, []Option{}, ""))
 	}
 	switch s.Pattern {
 	case study.Grouped:
 		list = append(list, entry("group", "column with group numbers", s.Group, study.Entered, []Option{}, ""))
 	case study.Length:
-		list = append(list, entry("length", "correlation length, in the unit of the stations", number(s.Length), study.Entered, []Option{}, ""))
+		list = append(list, entry("length", "correlation length, in the unit of the stations", quantity.Typed(s.Length), study.Entered, []Option{}, ""))
 	}
 	if s.Random {
-		list = append(list, entry("degrees", "degrees of freedom", number(s.Degrees), study.Entered, []Option{}, "0: taken as known"))
+		list = append(list, entry("degrees", "degrees of freedom", quantity.Typed(s.Degrees), study.Entered, []Option{}, "0: taken as known"))
 	}
 	return list
 }
@@ -349,7 +349,6 @@ func choices(q *study.Question) []Entry {
 	entry := func(field, label, value string, options []Option, hint string) Entry {
 		return Entry{Target: study.Target{Kind: "question", ID: questionID(q), Field: "choices." + field}, Label: label, Value: value, By: study.Entered, Options: options, Hint: hint}
 	}
-	number := func(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
 	yes := func(b bool) string {
 		if b {
 			return "yes"
@@ -364,11 +363,11 @@ func choices(q *study.Question) []Entry {
 		rules = append(rules, Option{r, study.RuleName(r)})
 	}
 	return []Entry{
-		entry("k", "k of the statement", number(c.K), []Option{}, "2 covers about 95 % of a normal distribution"),
-		entry("k_num", "k_num, from U of the grids to u_num", number(c.KNum), []Option{}, "1.15: U about the fine grid; 2: normal"),
+		entry("k", "k of the statement", quantity.Typed(c.K), []Option{}, "2 covers about 95 % of a normal distribution"),
+		entry("k_num", "k_num, from U of the grids to u_num", quantity.Typed(c.KNum), []Option{}, "1.15: U about the fine grid; 2: normal"),
 		entry("bounded", "order of the three finest", yes(c.Bounded), []Option{{"yes", "bounded rule"}, {"no", "plain rule"}}, ""),
 		entry("rule", "grids of one value", rule, rules, "along a curve: the three finest"),
-		entry("formal", "formal order", number(c.Formal), []Option{}, ""),
+		entry("formal", "formal order", quantity.Typed(c.Formal), []Option{}, ""),
 		entry("dimension", "grids are", strconv.Itoa(c.Dimension), []Option{{"2", "two-dimensional"}, {"3", "three-dimensional"}}, ""),
 		entry("interpolation", "simulation at the stations", string(c.Interpolation), []Option{{"linear", "linear"}, {"monotone", "monotone cubic"}}, ""),
 		entry("u_interp", "interpolation uncertainty", yes(c.UInterp), []Option{{"yes", "counted"}, {"no", "not counted"}}, ""),
@@ -384,7 +383,7 @@ func questionEntries(q *study.Question) []Entry {
 	}
 	value, percent, who, date := "", "yes", "", ""
 	if r := q.Requirement; r != nil {
-		value, who, date = strconv.FormatFloat(r.Value, 'g', -1, 64), r.Who, r.Date
+		value, who, date = quantity.Typed(r.Value), r.Who, r.Date
 		if !r.Percent {
 			percent = "no"
 		}
@@ -400,8 +399,8 @@ func questionEntries(q *study.Question) []Entry {
 		entry("condition", "condition", q.Condition, study.Entered, []Option{}, "e.g. α = 4.2°"),
 		entry("symbol", "symbol", q.Symbol, study.Entered, []Option{}, "e.g. Cd"),
 		entry("scores.dispersion", "scores of the dispersion field", scoring(q, func(a *study.Scoring) string { return map[bool]string{true: "yes", false: "no"}[a.Dispersion] }, "no"), study.Entered, []Option{{"no", "not asked for"}, {"yes", "asked for"}}, "FB, NMSE, FAC2, MG, VG: values that are not negative"),
-		entry("scores.fraction", "hit rate within, as a fraction of D", scoring(q, func(a *study.Scoring) string { return strconv.FormatFloat(a.Fraction, 'g', -1, 64) }, ""), study.Entered, []Option{}, "e.g. 0.25"),
-		entry("scores.allowance", "or within, in the unit of the data", scoring(q, func(a *study.Scoring) string { return strconv.FormatFloat(a.Allowance, 'g', -1, 64) }, ""), study.Entered, []Option{}, "from the uncertainty of the data"),
+		entry("scores.fraction", "hit rate within, as a fraction of D", scoring(q, func(a *study.Scoring) string { return quantity.Typed(a.Fraction) }, ""), study.Entered, []Option{}, "e.g. 0.25"),
+		entry("scores.allowance", "or within, in the unit of the data", scoring(q, func(a *study.Scoring) string { return quantity.Typed(a.Allowance) }, ""), study.Entered, []Option{}, "from the uncertainty of the data"),
 		entry("downward", "drawn", map[bool]string{true: "yes", false: "no"}[q.Downward], study.Entered, []Option{{"no", "positive upward"}, {"yes", "negative upward"}}, ""),
 	}
 }
@@ -420,7 +419,6 @@ func lists(s *study.Study, q *study.Question) []EntryList {
 	entry := func(kind, id, field, label, value string, options []Option, hint string) Entry {
 		return Entry{Target: study.Target{Kind: kind, ID: id, Field: field}, Label: label, Value: value, By: study.Entered, Options: options, Hint: hint}
 	}
-	number := func(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
 	list := func(course int, kind, id, title, hint string) EntryList {
 		return EntryList{Course: course, Title: title, Hint: hint, Add: &study.Target{Kind: kind, ID: id}, Items: []EntryItem{}}
 	}
@@ -434,12 +432,12 @@ func lists(s *study.Study, q *study.Question) []EntryList {
 	for i, m := range q.Conditions {
 		sensitivity := ""
 		if m.Sensitivity != nil {
-			sensitivity = number(*m.Sensitivity)
+			sensitivity = quantity.Typed(*m.Sensitivity)
 		}
 		k := study.ItemCondition
 		conditions.Items = append(conditions.Items, item(k, id, i,
 			entry(k, id, "name", "condition", m.Name, []Option{}, "e.g. α"), entry(k, id, "unit", "unit", m.Unit, []Option{}, "e.g. °"),
-			entry(k, id, "simulation", "simulation", number(m.Simulation), []Option{}, ""), entry(k, id, "data", "data", number(m.Data), []Option{}, ""),
+			entry(k, id, "simulation", "simulation", quantity.Typed(m.Simulation), []Option{}, ""), entry(k, id, "data", "data", quantity.Typed(m.Data), []Option{}, ""),
 			entry(k, id, "sensitivity", "change of the quantity for one unit", sensitivity, []Option{}, "empty: not known"),
 			entry(k, id, "handling", "a difference is", m.Handling, []Option{{"", "open"}, {study.Corrected, "corrected"}, {study.AsInput, "counted as an input uncertainty"}, {study.Tolerated, "accepted, with a reason"}}, ""),
 			entry(k, id, "why", "reason", m.Why, []Option{}, "")))
@@ -447,12 +445,12 @@ func lists(s *study.Study, q *study.Question) []EntryList {
 	regions := list(3, study.ItemRegion, id, "Regions", "parts of the stations that are told apart")
 	for i, r := range q.Regions {
 		k := study.ItemRegion
-		regions.Items = append(regions.Items, item(k, id, i, entry(k, id, "name", "region", r.Name, []Option{}, ""), entry(k, id, "from", "from", number(r.From), []Option{}, ""), entry(k, id, "to", "to", number(r.To), []Option{}, "")))
+		regions.Items = append(regions.Items, item(k, id, i, entry(k, id, "name", "region", r.Name, []Option{}, ""), entry(k, id, "from", "from", quantity.Typed(r.From), []Option{}, ""), entry(k, id, "to", "to", quantity.Typed(r.To), []Option{}, "")))
 	}
 	application := list(4, study.ItemApplication, "", "Point of application", "the conditions the result is meant for")
 	for i, c := range s.Application {
 		k := study.ItemApplication
-		application.Items = append(application.Items, item(k, "", i, entry(k, "", "name", "condition", c.Name, []Option{}, "e.g. α"), entry(k, "", "value", "value", number(c.Value), []Option{}, ""), entry(k, "", "unit", "unit", c.Unit, []Option{}, "")))
+		application.Items = append(application.Items, item(k, "", i, entry(k, "", "name", "condition", c.Name, []Option{}, "e.g. α"), entry(k, "", "value", "value", quantity.Typed(c.Value), []Option{}, ""), entry(k, "", "unit", "unit", c.Unit, []Option{}, "")))
 	}
 	card := EntryList{Course: 2, Title: "Case " + q.Case, Hint: "reference quantities", Items: []EntryItem{{Entries: []Entry{
 		entry("case", q.Case, "density", "density ρ in kg/m³", s.CardValue(q.Case, "density"), []Option{}, "relates a pressure to one divided by density"),
@@ -503,7 +501,7 @@ func readingEntries(f *study.File, asked map[string]string) []Entry {
 	}
 	slices.Sort(codes)
 	for _, code := range codes {
-		entry("answer."+code, orText(asked[code], "answered"), f.Answers[code], []Option{}, "your answer")
+		entry("answer."+code, cmp.Or(asked[code], "answered"), f.Answers[code], []Option{}, "your answer")
 	}
 	return list
 }

@@ -1,6 +1,7 @@
 package message
 
 import (
+	"cmp"
 	"math"
 	"strconv"
 	"strings"
@@ -159,7 +160,7 @@ func compareStudy(one *study.Study, ask *CompareRequest, read map[string]tablefi
 			X: study.ColumnUse{Column: enter(x)}, Y: study.ColumnUse{Column: enter(y)}}
 	}
 	sim := slip("sim", ask.SimTable, ask.X, ask.Y, study.Simulation)
-	ref := slip("ref", ask.RefTable, orText(ask.RefX, ask.X), orText(ask.RefY, ask.Y), study.Reference)
+	ref := slip("ref", ask.RefTable, cmp.Or(ask.RefX, ask.X), cmp.Or(ask.RefY, ask.Y), study.Reference)
 	for _, p := range []*study.Slip{&sim, &ref} {
 		statedUnits(read[p.File], p)
 	}
@@ -240,13 +241,6 @@ func sourceOf(name, of, pattern, value, coverage string) (study.Source, error) {
 		s.Value = v
 	}
 	return s, nil
-}
-
-func orText(text, other string) string {
-	if text == "" {
-		return other
-	}
-	return text
 }
 
 // pageOnly are told by the page, not by a command that has no page.

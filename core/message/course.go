@@ -1,6 +1,7 @@
 package message
 
 import (
+	"cmp"
 	"strconv"
 	"strings"
 
@@ -120,14 +121,14 @@ func settledTables(c *study.Cell) []Table {
 	if len(c.Monitors) > 0 {
 		t := Table{Title: "Monitors", Head: []string{"grid", "file", "class", "mean", "u", "window", "rule"}, Rows: [][]string{}}
 		for _, m := range c.Monitors {
-			t.Rows = append(t.Rows, []string{orText(m.Grid, "–"), m.File, m.Class, text(m.Mean, 5), text(m.U, 2), text(m.From, 4) + " to " + text(m.To, 4), m.Rule})
+			t.Rows = append(t.Rows, []string{cmp.Or(m.Grid, "–"), m.File, m.Class, text(m.Mean, 5), text(m.U, 2), text(m.From, 4) + " to " + text(m.To, 4), m.Rule})
 		}
 		tables = append(tables, t)
 	}
 	if len(c.Balances) > 0 {
 		t := Table{Title: "Balances", Head: []string{"grid", "file", "in", "out", "in less out", "of what enters"}, Rows: [][]string{}}
 		for _, b := range c.Balances {
-			t.Rows = append(t.Rows, []string{orText(b.Grid, "–"), b.File, text(b.In, 5), text(b.Out, 5), text(b.Net, 2), quantity.SignedPercent(float64(b.Fraction)) + " %"})
+			t.Rows = append(t.Rows, []string{cmp.Or(b.Grid, "–"), b.File, text(b.In, 5), text(b.Out, 5), text(b.Net, 2), quantity.SignedPercent(float64(b.Fraction)) + " %"})
 		}
 		tables = append(tables, t)
 	}
@@ -146,7 +147,7 @@ func gridAnswer(c *study.Cell) string {
 	}
 	if g.Along {
 		all := g.Monotone + g.NonMonotone
-		return strconv.Itoa(g.Monotone) + " of " + count(all, "station") + " converge monotonically; common order " + text(g.Order, 3) + ", rms u_num " + text(g.UNum, 3) + c.UnitSuffix() + "."
+		return strconv.Itoa(g.Monotone) + " of " + quantity.Counted(all, "station") + " converge monotonically; common order " + text(g.Order, 3) + ", rms u_num " + text(g.UNum, 3) + c.UnitSuffix() + "."
 	}
 	switch g.Class {
 	case string(refinement.Monotone):
@@ -154,7 +155,7 @@ func gridAnswer(c *study.Cell) string {
 		if g.Order.Known() {
 			order = "observed order " + text(g.Order, 3) + " against " + text(g.Formal, 2)
 		}
-		return "Monotone over the three finest of " + count(len(g.Points), "grid") + "; " + order + "; grid uncertainty " + quantity.Percent(float64(g.GCI)) + " % at 95 %" + ruleWords(c) + "."
+		return "Monotone over the three finest of " + quantity.Counted(len(g.Points), "grid") + "; " + order + "; grid uncertainty " + quantity.Percent(float64(g.GCI)) + " % at 95 %" + ruleWords(c) + "."
 	case string(refinement.Oscillatory):
 		if g.U.Known() {
 			return "The three finest grids oscillate; no order is given; grid uncertainty " + text(g.U, 2) + c.UnitSuffix() + " at 95 %" + ruleWords(c) + "."
@@ -191,7 +192,7 @@ func gridNumbers(c *study.Cell) []Headline {
 	add(g.Order, 3, "observed order")
 	if g.U.Known() {
 		if g.Extrapolated.Known() {
-			list = append(list, Headline{quantity.Like(float64(g.Extrapolated), float64(g.U), 2) + c.UnitSuffix(), "extrapolated " + orText(c.Symbol, c.Quantity)})
+			list = append(list, Headline{quantity.Like(float64(g.Extrapolated), float64(g.U), 2) + c.UnitSuffix(), "extrapolated " + cmp.Or(c.Symbol, c.Quantity)})
 		}
 		list = append(list, Headline{"± " + quantity.Text(float64(g.U), 2) + c.UnitSuffix(), "grid uncertainty, 95 %"})
 	} else if g.UNum.Known() {
@@ -205,13 +206,13 @@ func gridTables(c *study.Cell) []Table {
 	if g == nil {
 		return nil
 	}
-	t := Table{Title: "Grids, coarse to fine", Head: []string{"grid", "cells", "h / h(finest)", orText(c.Symbol, "value"), "used"}, Rows: [][]string{}}
+	t := Table{Title: "Grids, coarse to fine", Head: []string{"grid", "cells", "h / h(finest)", cmp.Or(c.Symbol, "value"), "used"}, Rows: [][]string{}}
 	for _, p := range g.Points {
 		used := ""
 		if p.Used {
 			used = "yes"
 		}
-		t.Rows = append(t.Rows, []string{orText(p.Name, "–"), strconv.FormatFloat(float64(p.Cells), 'f', 0, 64), text(p.H, 4), quantity.Text(float64(p.Value), 6), used})
+		t.Rows = append(t.Rows, []string{cmp.Or(p.Name, "–"), strconv.FormatFloat(float64(p.Cells), 'f', 0, 64), text(p.H, 4), quantity.Text(float64(p.Value), 6), used})
 	}
 	return []Table{t}
 }
@@ -227,7 +228,7 @@ func sameAnswer(c *study.Cell) string {
 	case "1":
 		unit = "pure numbers"
 	}
-	answer := "Both sides are " + unit + "; " + stationsOf(c) + " compared against " + orText(c.Reference, "the reference")
+	answer := "Both sides are " + unit + "; " + stationsOf(c) + " compared against " + cmp.Or(c.Reference, "the reference")
 	if c.Kind != "" {
 		answer += " (" + c.Kind + ")"
 	}
@@ -253,7 +254,7 @@ func agreeAnswer(c *study.Cell) string {
 	case c.Scalar:
 		return "E is " + text(c.Stations[0].Ratio, 2) + " u_val: " + c.Stations[0].Reading + "."
 	}
-	answer := "|E| exceeds " + strconv.FormatFloat(c.Choices.K, 'g', -1, 64) + " u_val at " + strconv.Itoa(s.Tested-s.WithinKUVal) + " of " + count(s.Tested, "station") + " (" + text(s.BeyondChance, 2) + " expected by chance" + chanceWords(c.Joint) + ")"
+	answer := "|E| exceeds " + quantity.Typed(c.Choices.K) + " u_val at " + strconv.Itoa(s.Tested-s.WithinKUVal) + " of " + quantity.Counted(s.Tested, "station") + " (" + text(s.BeyondChance, 2) + " expected by chance" + chanceWords(c.Joint) + ")"
 	if j := c.Joint; j != nil {
 		answer += "; together the statistic " + exceedsWord(j.Exceeds) + " its 95 % point"
 		if j.Remainder.Known() {
@@ -303,7 +304,7 @@ func agreeTables(c *study.Cell) []Table {
 	if c.Summary == nil {
 		return nil
 	}
-	name := orText(c.XName, "x")
+	name := cmp.Or(c.XName, "x")
 	if c.XUnit != "" && c.XUnit != "1" {
 		name += " [" + c.XUnit + "]"
 	}
@@ -417,12 +418,12 @@ func sayAnswer(c *study.Cell) string {
 	case r.Outcome == "":
 		return "The requirement cannot be judged without u_val."
 	}
-	answer := "The requirement is " + r.Outcome + " at k = " + strconv.FormatFloat(c.Choices.K, 'g', -1, 64) + "."
+	answer := "The requirement is " + r.Outcome + " at k = " + quantity.Typed(c.Choices.K) + "."
 	if g := c.Grids; g != nil && g.NextCells.Known() {
 		answer += " With E unchanged, about " + cellWords(float64(g.NextCells)) + " cells would resolve it, at " + text(g.NextCost, 2) + " times the cost of the finest run."
 	}
 	if len(c.Fragile) > 0 {
-		answer += " " + count(len(c.Fragile), "other choice") + " would change a word."
+		answer += " " + quantity.Counted(len(c.Fragile), "other choice") + " would change a word."
 	}
 	return answer
 }
@@ -442,12 +443,12 @@ func sayNumbers(c *study.Cell) []Headline {
 	}
 	var list []Headline
 	if c.Scalar {
-		list = append(list, Headline{study.IntervalText(c, c.Stations[0]), "E ± " + strconv.FormatFloat(c.Choices.K, 'g', -1, 64) + " u_val"})
+		list = append(list, Headline{study.IntervalText(c, c.Stations[0]), "E ± " + quantity.Typed(c.Choices.K) + " u_val"})
 	}
 	if r != nil && r.Outcome != "" {
 		limit := "± " + text(r.Limit, 3) + c.UnitSuffix()
 		if r.Percent.Known() {
-			limit = "± " + strconv.FormatFloat(float64(r.Percent), 'g', -1, 64) + " %"
+			limit = "± " + quantity.Typed(float64(r.Percent)) + " %"
 		}
 		list = append(list, Headline{limit, "requirement"})
 		if r.UValNeeded.Known() {

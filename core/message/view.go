@@ -1,9 +1,11 @@
 package message
 
 import (
+	"cmp"
 	"strconv"
 
 	"weirmark/core/notice"
+	"weirmark/core/quantity"
 	"weirmark/core/sentence"
 	"weirmark/core/study"
 )
@@ -222,7 +224,7 @@ func (s *Session) view() (*View, error) {
 	for _, e := range c.Excluded {
 		v.Excluded = append(v.Excluded, ExcludedCard{
 			Target: study.Target{Kind: "question", ID: questionID(q), Field: strconv.Itoa(e.Line)},
-			Text:   orText(c.XName, "x") + " = " + written(e.X) + ", D = " + written(e.D) + ", line " + strconv.Itoa(e.Line) + ": " + e.Why,
+			Text:   cmp.Or(c.XName, "x") + " = " + written(e.X) + ", D = " + written(e.D) + ", line " + strconv.Itoa(e.Line) + ": " + e.Why,
 		})
 	}
 	return v, nil
@@ -303,15 +305,8 @@ func board(r *study.Report) Board {
 			complete++
 		}
 	}
-	b.Summary = count(len(r.Cells), "cell") + ": " + strconv.Itoa(complete) + " complete, " + strconv.Itoa(doubts) + " with doubts, " + strconv.Itoa(empty) + " with nothing compared. A blank low in a stack is the next job."
+	b.Summary = quantity.Counted(len(r.Cells), "cell") + ": " + strconv.Itoa(complete) + " complete, " + strconv.Itoa(doubts) + " with doubts, " + strconv.Itoa(empty) + " with nothing compared. A blank low in a stack is the next job."
 	return b
-}
-
-func count(n int, thing string) string {
-	if n == 1 {
-		return "1 " + thing
-	}
-	return strconv.Itoa(n) + " " + thing + "s"
 }
 
 func stationsOf(c *study.Cell) string {
@@ -321,7 +316,7 @@ func stationsOf(c *study.Cell) string {
 	if c.Scalar {
 		return "one value"
 	}
-	return strconv.Itoa(c.Summary.N) + " of " + count(c.StationsAll, "station")
+	return strconv.Itoa(c.Summary.N) + " of " + quantity.Counted(c.StationsAll, "station")
 }
 
 var courseNames = [5]string{"settled", "fine enough", "same thing", "agreement", "what can be said"}
@@ -337,7 +332,7 @@ func boardCell(id string, c *study.Cell) *BoardCell {
 	for i, state := range c.Courses {
 		b.Spoken += courseNames[i] + " " + string(state) + ", "
 	}
-	b.Spoken += count(len(c.Open), "open point")
+	b.Spoken += quantity.Counted(len(c.Open), "open point")
 	if outcome != "" {
 		b.Spoken += ", requirement " + outcome
 	}
@@ -360,7 +355,7 @@ func cellFigures(all []CellFigure, c *study.Cell) []CellFigure {
 func (s *Session) fileCards(r *study.Report) []FileCard {
 	cards := []FileCard{}
 	for _, f := range r.Files {
-		card := FileCard{ID: f.ID, Name: f.Name, SHA256: f.SHA256, Size: count(f.Bytes, "byte"), Uses: f.Uses, Rejects: []string{}, Stated: []string{}, Reading: []Entry{}}
+		card := FileCard{ID: f.ID, Name: f.Name, SHA256: f.SHA256, Size: quantity.Counted(f.Bytes, "byte"), Uses: f.Uses, Rejects: []string{}, Stated: []string{}, Reading: []Entry{}}
 		asked := map[string]string{} // by code
 		for _, n := range r.Notices {
 			switch {

@@ -91,6 +91,18 @@ func Plain(v float64, n int) string {
 	return strings.TrimRight(strings.TrimRight(text, "0"), ".")
 }
 
+// Typed prints a number as a person typed it: the shortest text that reads
+// back to the same value.
+func Typed(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
+
+// Counted says a number of things: "1 row", "3 rows".
+func Counted(n int, noun string) string {
+	if n == 1 {
+		return "1 " + noun
+	}
+	return strconv.Itoa(n) + " " + noun + "s"
+}
+
 // Signed is Text with a plus sign on positive values.
 func Signed(v float64, n int) string {
 	if math.IsNaN(v) || math.IsInf(v, 0) {

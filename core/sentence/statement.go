@@ -295,7 +295,7 @@ func (w *writer) scalar() {
 	w.say(w.unit())
 	w.kNum()
 	w.say(". ")
-	k := entered(c.Choices.K)
+	k := quantity.Typed(c.Choices.K)
 	switch s.Reading {
 	case study.SignResolved:
 		side := "above"
@@ -358,7 +358,7 @@ func (w *writer) kNum() {
 		return
 	}
 	w.say(" (k_num = ")
-	w.mark(entered(w.cell.Choices.KNum), study.Assumed, study.Target{Kind: "question", ID: w.cell.Case + "|" + w.cell.Quantity, Field: "choices.k_num"})
+	w.mark(quantity.Typed(w.cell.Choices.KNum), study.Assumed, study.Target{Kind: "question", ID: w.cell.Case + "|" + w.cell.Quantity, Field: "choices.k_num"})
 	w.holds(of("choices.k_num", study.Number(w.cell.Choices.KNum), ""))
 	w.say(")")
 }
@@ -367,7 +367,7 @@ func (w *writer) kNum() {
 func (w *writer) curve() {
 	c := w.cell
 	s := c.Summary
-	k := entered(c.Choices.K)
+	k := quantity.Typed(c.Choices.K)
 	w.say(" at ")
 	w.number(counted("summary.n", s.N), "stations")
 	w.say(" of ")
@@ -450,7 +450,7 @@ func (w *writer) requirement() {
 	}
 	limit, unit := of("requirement.limit", r.Limit, quantity.Text(float64(r.Limit), 4)), c.UnitSuffix()
 	if r.Percent.Known() {
-		limit, unit = of("requirement.percent", r.Percent, entered(float64(r.Percent))), " %"
+		limit, unit = of("requirement.percent", r.Percent, quantity.Typed(float64(r.Percent))), " %"
 	}
 	if by := strings.Join(nonEmpty(r.Who, r.Date), ", "); by != "" {
 		unit += " (" + by + ")"
@@ -460,7 +460,7 @@ func (w *writer) requirement() {
 	w.value(limit)
 	w.say(unit + " is ")
 	w.mark(words[r.Outcome], study.WordOf, w.result("adequacy"))
-	w.say(" at k = " + entered(c.Choices.K) + ", under the stated uncertainties, at " + setPoints(c) + " only. ")
+	w.say(" at k = " + quantity.Typed(c.Choices.K) + ", under the stated uncertainties, at " + setPoints(c) + " only. ")
 	w.resolve(r)
 }
 
@@ -542,9 +542,6 @@ func (w *writer) rests() {
 	}
 	w.say(".")
 }
-
-// entered prints a number as a person typed it.
-func entered(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
 
 func nonEmpty(texts ...string) []string {
 	var all []string

@@ -1,6 +1,7 @@
 package study
 
 import (
+	"cmp"
 	"math"
 	"strconv"
 
@@ -91,7 +92,7 @@ func (w *work) replicates() {
 		return
 	}
 	_, s, u := uncertainty.Replicates(readings)
-	text := "standard deviation " + quantity.Text(float64(w.step(s)), 3) + " of " + count(len(readings), "reading") + ", divided by √" + strconv.Itoa(len(readings))
+	text := "standard deviation " + quantity.Text(float64(w.step(s)), 3) + " of " + quantity.Counted(len(readings), "reading") + ", divided by √" + strconv.Itoa(len(readings))
 	w.add(OfData, "scatter of repeated readings", text, "computed from "+w.e.study.fileName(c.slip), []float64{u}, false, false).degrees = float64(len(readings) - 1)
 	w.fewReadings(len(readings))
 }
@@ -99,7 +100,7 @@ func (w *work) replicates() {
 // fewReadings tells the factor that so few readings need.
 func (w *work) fewReadings(n int) {
 	if k, ok := uncertainty.StudentFactor(0.95, float64(n-1)); ok && n <= 3 {
-		w.tell(notice.New("readings-few", n, quantity.Text(k, 3), trim(w.choices.K)))
+		w.tell(notice.New("readings-few", n, quantity.Text(k, 3), quantity.Typed(w.choices.K)))
 	}
 }
 
@@ -131,7 +132,7 @@ func (w *work) source(at int, s *Source) {
 		return
 	}
 	if s.Of == OfNumerical {
-		w.tell(notice.New("grid-declared", w.q.label(), orWord(s.Origin, "no reason was given.")))
+		w.tell(notice.New("grid-declared", w.q.label(), cmp.Or(s.Origin, "no reason was given.")))
 		if w.choices.NumShared {
 			source = uncertainty.Source{U: u, Common: true}
 		}
@@ -197,7 +198,7 @@ func (w *work) zeros(u []float64, name string, target Target) {
 func (w *work) blanks(u []float64, name string, target Target) {
 	n := len(u) - len(known(u))
 	if n > 0 {
-		w.need(2, false, name+" at "+count(n, "station"), target, "u-blank", n)
+		w.need(2, false, name+" at "+quantity.Counted(n, "station"), target, "u-blank", n)
 	}
 }
 
@@ -266,14 +267,14 @@ func steps(values []float64, u unit, rows []int) []float64 {
 
 // sourceText says a source in words.
 func (w *work) sourceText(s *Source) string {
-	value := trim(s.Value)
+	value := quantity.Typed(s.Value)
 	switch {
 	case s.Column != "":
 		value = "column " + s.Column
 	case s.Basis == OfReading:
 		value += " % of reading"
 	case s.Basis == OfFullScale:
-		value += " % of the full scale " + trim(s.FullScale) + w.cell.UnitSuffix()
+		value += " % of the full scale " + quantity.Typed(s.FullScale) + w.cell.UnitSuffix()
 	case w.cell.Unit != "" && w.cell.Unit != "1":
 		value += " " + w.cell.Unit
 	}
@@ -303,7 +304,7 @@ func (w *work) gridPart() {
 	if w.gridU == nil {
 		return
 	}
-	text := "U of the grid study divided by " + trim(w.choices.KNum)
+	text := "U of the grid study divided by " + quantity.Typed(w.choices.KNum)
 	if math.IsNaN(float64(w.cell.Grids.U)) && !w.cell.Grids.Along {
 		text = "bound of the grid study divided by √3"
 	}
@@ -401,7 +402,7 @@ func (w *work) degrees() {
 	}
 	w.cell.Degrees, w.cell.K95 = Number(nu), Number(k)
 	if exceeds(k, 1.05*w.choices.K) {
-		w.tell(notice.New("degrees-few", quantity.Text(nu, 2), quantity.Text(k, 3), trim(w.choices.K)))
+		w.tell(notice.New("degrees-few", quantity.Text(nu, 2), quantity.Text(k, 3), quantity.Typed(w.choices.K)))
 	}
 }
 
@@ -457,12 +458,4 @@ func pick(values []float64, at []int) []float64 {
 		out[j] = values[i]
 	}
 	return out
-}
-
-// count says a number of things.
-func count(n int, thing string) string {
-	if n == 1 {
-		return "1 " + thing
-	}
-	return strconv.Itoa(n) + " " + thing + "s"
 }

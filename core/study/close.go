@@ -166,9 +166,11 @@ func (w *work) courses() {
 			}
 		}
 	}
-	// What stands on an open course is itself in doubt.
-	for i := 2; i < 5; i++ {
-		if w.cell.Withheld && w.cell.Courses[i] == Settled && i >= 3 {
+	if !w.cell.Withheld {
+		return
+	}
+	for _, i := range []int{3, 4} { // what stands on an open course is itself in doubt
+		if w.cell.Courses[i] == Settled {
 			w.cell.Courses[i] = Doubts
 		}
 	}

@@ -1,6 +1,7 @@
 package study
 
 import (
+	"cmp"
 	"math"
 	"strconv"
 	"strings"
@@ -98,7 +99,7 @@ func (w *work) matchCondition(at int, m *Matching) {
 		for i := range u {
 			u[i] = math.Abs(effect)
 		}
-		w.add(OfInput, "difference of "+m.Name, s+" against "+d+", the whole effect as a standard uncertainty", orWord(m.Why, "entered"), u, true, false)
+		w.add(OfInput, "difference of "+m.Name, s+" against "+d+", the whole effect as a standard uncertainty", cmp.Or(m.Why, "entered"), u, true, false)
 	case m.Handling == Tolerated && m.Why != "":
 		w.tell(notice.New("condition-accepted", m.Name, s, d, m.Why))
 	default:
@@ -111,7 +112,7 @@ func (w *work) effectWords(m *Matching, effect float64) string {
 	if m.Sensitivity == nil {
 		return "Its effect is not known: enter a sensitivity."
 	}
-	text := "With the sensitivity " + quantity.Text(*m.Sensitivity, 3) + " per " + orWord(m.Unit, "unit") + " the effect is " + quantity.Text(float64(w.step(effect)), 2) + w.cell.UnitSuffix()
+	text := "With the sensitivity " + quantity.Text(*m.Sensitivity, 3) + " per " + cmp.Or(m.Unit, "unit") + " the effect is " + quantity.Text(float64(w.step(effect)), 2) + w.cell.UnitSuffix()
 	if w.cell.Scalar && len(w.d) == 1 && w.d[0] != 0 {
 		text += " (" + quantity.Percent(math.Abs(effect/w.d[0])) + " % of the data)"
 	}
@@ -119,7 +120,7 @@ func (w *work) effectWords(m *Matching, effect float64) string {
 }
 
 func valueUnit(v float64, unit string) string {
-	text := strings.ReplaceAll(trim(v), "-", "−")
+	text := strings.ReplaceAll(quantity.Typed(v), "-", "−")
 	switch unit {
 	case "", "1":
 		return text

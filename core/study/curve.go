@@ -209,7 +209,7 @@ func (l *loader) uncertainty(c *curve) {
 	zeros := 0
 	for i, v := range column.Values {
 		if v < 0 {
-			l.tell(notice.New("u-negative", strconv.FormatFloat(v, 'g', -1, 64), place(c, i)).At(l.table.RowLine(i)))
+			l.tell(notice.New("u-negative", quantity.Typed(v), place(c, i)).At(l.table.RowLine(i)))
 			return
 		}
 		if v == 0 {

@@ -94,7 +94,7 @@ func (w *work) otherReferences() {
 		difference := all[0] - w.d[0]
 		if exceeds(math.Abs(difference), float64(w.choices.K*w.uD[0])) {
 			w.ask(2, "which of the references holds", "references-differ", w.cell.Reference, quantity.Text(w.yUnit.FromSI(w.d[0]), 4), w.e.study.fileName(c.slip), quantity.Text(w.yUnit.FromSI(all[0]), 4),
-				quantity.Percent(math.Abs(difference/w.d[0])), trim(w.choices.K))
+				quantity.Percent(math.Abs(difference/w.d[0])), quantity.Typed(w.choices.K))
 		}
 	}
 }

@@ -1,6 +1,7 @@
 package study
 
 import (
+	"cmp"
 	"strconv"
 
 	"weirmark/core/notice"
@@ -44,14 +45,24 @@ type evaluation struct {
 	judged  map[judgedSeries]settling.Monitor
 }
 
-// Evaluate returns everything that can be said of a study. It is a pure
-// function: the same study gives the same report in every host. Values of a
-// cell are in the unit of its data (of the simulation where there are none).
-func Evaluate(s *Study, options Options) Report {
+// begin starts an evaluation; monitors that the memory has judged are not
+// judged again.
+func begin(s *Study, options Options) *evaluation {
 	if options.Read == nil {
 		options.Read = Read
 	}
 	e := &evaluation{study: s, options: options, files: map[string]tablefile.File{}, judged: map[judgedSeries]settling.Monitor{}}
+	if options.Memory != nil {
+		e.judged = options.Memory.monitors()
+	}
+	return e
+}
+
+// Evaluate returns everything that can be said of a study. It is a pure
+// function: the same study gives the same report in every host. Values of a
+// cell are in the unit of its data (of the simulation where there are none).
+func Evaluate(s *Study, options Options) Report {
+	e := begin(s, options)
 	r := Report{
 		Title: s.Title, Purpose: s.Purpose, Edition: Edition,
 		Files: []FileLine{}, Cells: []Cell{}, Differences: []Difference{}, Notices: []notice.Notice{},
@@ -62,7 +73,6 @@ func Evaluate(s *Study, options Options) Report {
 	if m := options.Memory; m != nil {
 		m.begin()
 		defer m.end()
-		e.judged = m.judged
 	}
 	for i := range s.Questions {
 		q := &s.Questions[i]
@@ -84,10 +94,7 @@ func Alternatives(s *Study, options Options, c *Cell) []Fragility {
 	if q == nil || c.Summary == nil {
 		return []Fragility{}
 	}
-	if options.Read == nil {
-		options.Read = Read
-	}
-	e := &evaluation{study: s, options: options, files: map[string]tablefile.File{}, judged: map[judgedSeries]settling.Monitor{}}
+	e := begin(s, options)
 	e.readFiles(&Report{})
 	return e.fragile(q, c.Model, *c)
 }
@@ -266,14 +273,7 @@ func (w *work) need(course int, blocks bool, missing string, target Target, code
 // ask adds a finding that a person has to answer: an open point until there
 // is an answer, then a notice beside it.
 func (w *work) ask(course int, missing, code string, args ...any) {
-	n := notice.New(code, args...)
-	if answer := w.q.Answers[code]; answer != "" {
-		w.tell(n)
-		w.tell(notice.New("finding-answered", missing, answer))
-		return
-	}
-	w.tell(n)
-	w.cell.Open = append(w.cell.Open, Open{Course: course, Missing: missing, Text: n.Text, Target: Target{Kind: "answer", ID: w.q.id(), Field: code}})
+	w.finding(course, missing, notice.New(code, args...))
 }
 
 // id names a question in targets.
@@ -348,7 +348,7 @@ func (w *work) identicalRuns() {
 		f := w.e.study.File(p.File)
 		key := f.SHA256 + " " + p.Table + " " + p.Y.Column.Value
 		if other, twice := first[key]; twice && other.File != p.File {
-			w.need(1, true, "the right file of grid "+orWord(p.Grid.Value, f.Name), slipTarget(p, "grid"), "grid-identical", w.e.study.fileName(other), f.Name)
+			w.need(1, true, "the right file of grid "+cmp.Or(p.Grid.Value, f.Name), slipTarget(p, "grid"), "grid-identical", w.e.study.fileName(other), f.Name)
 			continue
 		}
 		first[key] = p
@@ -480,7 +480,7 @@ func (p *Slip) fields() []slipField {
 		{path: "case", name: "case", field: p.Case, needed: true, course: 2},
 		{path: "quantity", name: "quantity", field: p.Quantity, needed: true, course: 2},
 		{path: "y.column", name: "column of values", field: p.Y.Column, needed: true, course: 2},
-		{path: "y.unit", name: "unit of " + orWord(p.Y.Column.Value, "the values"), field: p.Y.Unit, needed: p.Role.Value != Balance, course: 2, unitOf: orWord(p.Y.Column.Value, "the values")},
+		{path: "y.unit", name: "unit of " + cmp.Or(p.Y.Column.Value, "the values"), field: p.Y.Unit, needed: p.Role.Value != Balance, course: 2, unitOf: cmp.Or(p.Y.Column.Value, "the values")},
 	}
 	if p.Role.Value != Reference {
 		all = append(all, slipField{path: "model", name: "model", field: p.Model, course: 2})
@@ -511,7 +511,7 @@ func (p *Slip) fields() []slipField {
 	}
 	if p.Derive.Value == DeriveLift {
 		all = append(all, slipField{path: "contour.column", name: "second coordinate", field: p.Contour.Column, needed: true, course: 2},
-			slipField{path: "contour.unit", name: "unit of the second coordinate", field: p.Contour.Unit, needed: true, course: 2, unitOf: orWord(p.Contour.Column.Value, "the second coordinate")})
+			slipField{path: "contour.unit", name: "unit of the second coordinate", field: p.Contour.Unit, needed: true, course: 2, unitOf: cmp.Or(p.Contour.Column.Value, "the second coordinate")})
 	}
 	if p.Role.Value == GridValues {
 		all = append(all, slipField{path: "size.column", name: "column of cell counts", field: p.Size.Column, needed: true, course: 1})
@@ -521,13 +521,6 @@ func (p *Slip) fields() []slipField {
 
 // percentU reports whether the uncertainty is in percent of something.
 func (p *Slip) percentU() bool { return p.U.Unit.Value == "%" && p.Y.Unit.Value != "%" }
-
-func orWord(text, other string) string {
-	if text == "" {
-		return other
-	}
-	return text
-}
 
 // capital returns text with its first letter, an ASCII one, in upper case.
 func capital(text string) string {

@@ -1,8 +1,6 @@
 package study
 
 import (
-	"strconv"
-
 	"weirmark/core/interpolate"
 	"weirmark/core/quantity"
 	"weirmark/core/refinement"
@@ -21,7 +19,7 @@ func alternatives(c Choices, grids *Grids) []alternative {
 	if c.KNum == 2 {
 		kNum = 1.15
 	}
-	all = append(all, alternative{"k_num = " + trim(kNum), func(c *Choices) { c.KNum = kNum }})
+	all = append(all, alternative{"k_num = " + quantity.Typed(kNum), func(c *Choices) { c.KNum = kNum }})
 	if c.Bounded {
 		all = append(all, alternative{"plain rule of the grid study", func(c *Choices) { c.Bounded = false }})
 	} else {
@@ -69,8 +67,6 @@ func rules(c Choices, g *Grids) []alternative {
 	}
 	return all
 }
-
-func trim(v float64) string { return strconv.FormatFloat(v, 'g', -1, 64) }
 
 // fragile evaluates the cell under every alternative and lists those that
 // change an outcome word.

@@ -3,6 +3,8 @@ package study
 import (
 	"strconv"
 	"strings"
+
+	"weirmark/core/quantity"
 )
 
 // Kinds of list items that a person can add to a question or to the study.
@@ -124,7 +126,7 @@ func (m *Matching) enter(field, value string) (string, error) {
 func (m *Matching) enterSensitivity(value string) (string, error) {
 	before := ""
 	if m.Sensitivity != nil {
-		before = trim(*m.Sensitivity)
+		before = quantity.Typed(*m.Sensitivity)
 	}
 	if strings.TrimSpace(value) == "" {
 		m.Sensitivity = nil
@@ -151,7 +153,7 @@ func (s *Study) CardValue(caseName, field string) string {
 	for _, c := range s.Cases {
 		for _, r := range c.References {
 			if c.Name == caseName && r.Symbol == cardFields[field].Symbol {
-				return trim(r.Value)
+				return quantity.Typed(r.Value)
 			}
 		}
 	}
@@ -166,7 +168,7 @@ func (s *Study) enterCard(caseName string, r ReferenceQuantity, value string) (s
 	kept := []ReferenceQuantity{}
 	for _, have := range card.References {
 		if have.Symbol == r.Symbol {
-			before = trim(have.Value)
+			before = quantity.Typed(have.Value)
 			continue
 		}
 		kept = append(kept, have)

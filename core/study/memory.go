@@ -78,12 +78,15 @@ func (e *evaluation) remembered(q *Question, model string) Cell {
 // mostJudged is the number of judged monitors above which all are forgotten.
 const mostJudged = 2000
 
-// begin and end bound an evaluation: cells it did not ask for are forgotten.
-func (m *Memory) begin() {
-	m.next = map[string]Cell{}
+// monitors returns the judged monitors to look in and add to.
+func (m *Memory) monitors() map[judgedSeries]settling.Monitor {
 	if m.judged == nil || len(m.judged) > mostJudged {
 		m.judged = map[judgedSeries]settling.Monitor{}
 	}
+	return m.judged
 }
+
+// begin and end bound an evaluation: cells it did not ask for are forgotten.
+func (m *Memory) begin() { m.next = map[string]Cell{} }
 
 func (m *Memory) end() { m.cells, m.next = m.next, nil }

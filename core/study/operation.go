@@ -7,6 +7,7 @@ import (
 
 	"weirmark/core/interpolate"
 	"weirmark/core/notice"
+	"weirmark/core/quantity"
 )
 
 // refuse is the error of an operation that was not done.
@@ -413,7 +414,7 @@ func (q *Question) enterRequirement(path, value string) (string, error) {
 	switch path {
 	case "value":
 		if strings.TrimSpace(value) == "" {
-			before := trim(r.Value)
+			before := quantity.Typed(r.Value)
 			q.Requirement = nil
 			return before, nil
 		}
@@ -478,10 +479,10 @@ func (q *Question) enterSource(path, value string) (string, error) {
 
 // number reads a number between two bounds.
 func number(into *float64, value string, lo, hi float64) (string, error) {
-	before := trim(*into)
+	before := quantity.Typed(*into)
 	v, err := strconv.ParseFloat(strings.TrimSpace(value), 64)
 	if err != nil || !(v >= lo && v <= hi) {
-		return before, refuse("a number from "+trim(lo)+" to "+trim(hi), value)
+		return before, refuse("a number from "+quantity.Typed(lo)+" to "+quantity.Typed(hi), value)
 	}
 	*into = v
 	return before, nil

@@ -62,7 +62,7 @@ func (w *work) fieldScores() {
 	if ask.Fraction > 0 || ask.Allowance > 0 {
 		allowance := w.yUnit.StepToSI(ask.Allowance)
 		if q, err := metric.HitRate(w.s, w.d, ask.Fraction, allowance); err == nil {
-			w.scored("q", "hit rate", q, "within "+trim(100*ask.Fraction)+" % of D or "+trim(ask.Allowance)+w.cell.UnitSuffix(), "")
+			w.scored("q", "hit rate", q, "within "+quantity.Typed(100*ask.Fraction)+" % of D or "+quantity.Typed(ask.Allowance)+w.cell.UnitSuffix(), "")
 		}
 	}
 	if !ask.Dispersion {
@@ -79,7 +79,7 @@ func (w *work) fieldScores() {
 	}
 	w.scored("FB", "fractional bias FB", r.FB, "means of D and S", word)
 	w.scored("NMSE", "normalised mean square error NMSE", r.NMSE, "product of the means; "+quantity.Percent(r.Systematic/r.NMSE)+" % of it from the mean bias", "")
-	w.scored("FAC2", "within a factor of two, FAC2", r.FAC2, count(r.Below, "pair")+" below the threshold counted as met", "")
+	w.scored("FAC2", "within a factor of two, FAC2", r.FAC2, quantity.Counted(r.Below, "pair")+" below the threshold counted as met", "")
 	if mg, vg, err := metric.Geometric(w.s, w.d); err != nil {
 		w.refuseScores("MG and VG", err)
 	} else {

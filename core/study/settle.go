@@ -1,6 +1,7 @@
 package study
 
 import (
+	"cmp"
 	"math"
 	"strconv"
 	"strings"
@@ -65,7 +66,7 @@ func (w *work) missingMonitors(judged map[string]bool) {
 	var missing []string
 	for _, name := range w.usedGrids() {
 		if !judged[name] {
-			missing = append(missing, orWord(name, "the run"))
+			missing = append(missing, cmp.Or(name, "the run"))
 		}
 	}
 	if len(missing) == 0 {
@@ -209,7 +210,7 @@ const monitorPoints = 400
 
 func (w *work) monitorLine(c *curve, values []float64, m settling.Monitor) MonitorLine {
 	line := MonitorLine{
-		Grid: c.slip.Grid.Value, File: w.e.study.fileName(c.slip), Axis: orWord(c.slip.Axis.Value, AxisIterations), XName: c.slip.X.Column.Value,
+		Grid: c.slip.Grid.Value, File: w.e.study.fileName(c.slip), Axis: cmp.Or(c.slip.Axis.Value, AxisIterations), XName: c.slip.X.Column.Value,
 		Class: string(m.Class), Rule: m.Rule, Mean: w.yNumber(m.Mean), U: w.step(m.U), From: Number(m.Window[0]), To: Number(m.Window[1]),
 		Drift: Number(m.Drift), Per: Number(m.Per), Period: Number(m.Period), Cycles: m.Cycles, HalfRange: w.step(m.HalfRange),
 		X: []Number{}, Y: []Number{},
@@ -239,7 +240,7 @@ func (w *work) judgeBalance(c *curve) {
 		if c.slip.Grid.Given() && n.Severity != notice.Note {
 			n.Text = "Grid " + c.slip.Grid.Value + ": " + n.Text
 		}
-		w.finding(0, "a closed balance of "+orWord(c.slip.Grid.Value, "the run"), n)
+		w.finding(0, "a closed balance of "+cmp.Or(c.slip.Grid.Value, "the run"), n)
 	}
 }
 
@@ -251,7 +252,7 @@ func (c *Cell) SettledText() string {
 		if classes[m.Class] == nil {
 			order = append(order, m.Class)
 		}
-		classes[m.Class] = append(classes[m.Class], orWord(m.Grid, "the run"))
+		classes[m.Class] = append(classes[m.Class], cmp.Or(m.Grid, "the run"))
 	}
 	for _, class := range order {
 		texts = append(texts, class+": "+strings.Join(classes[class], ", "))
@@ -263,7 +264,7 @@ func (c *Cell) SettledText() string {
 		}
 	}
 	if n := len(c.Balances); n > 0 {
-		texts = append(texts, count(n, "balance")+", "+strconv.Itoa(open)+" not closed")
+		texts = append(texts, quantity.Counted(n, "balance")+", "+strconv.Itoa(open)+" not closed")
 	}
 	return strings.Join(texts, "; ")
 }
