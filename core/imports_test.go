@@ -71,7 +71,7 @@ var hosts = []string{"core/cmd", "core/internal", "datasets/duct/make", "wasm", 
 var only = map[string][]string{
 	"gonum.org/v1/gonum":        {"core"},
 	"github.com/go-echarts":     {"core/chart"},
-	"github.com/gocarina/gocsv": {"core/dataset", "core/memo", "core/internal/outside"},
+	"github.com/gocarina/gocsv": {"core/dataset", "core/internal/outside"},
 	"github.com/dop251/goja":    {"core/cmd"},
 	"github.com/evanw/esbuild":  {"web/build"},
 	"github.com/syumai/workers": {"wasm/edge"},

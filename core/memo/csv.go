@@ -1,38 +1,43 @@
 package memo
 
 import (
+	"bytes"
+	"encoding/csv"
+	"errors"
 	"fmt"
 	"strconv"
 	"strings"
-
-	"github.com/gocarina/gocsv"
 
 	"weirmark/core/quantity"
 	"weirmark/core/study"
 )
 
-// stationRow is one station in the CSV. Numbers are texts, so that every one
-// has the digits of the report and an unknown one is blank, not zero.
-type stationRow struct {
-	Case      string `csv:"case"`
-	Quantity  string `csv:"quantity"`
-	Model     string `csv:"model"`
-	X         string `csv:"x"`
-	XUnit     string `csv:"x_unit"`
-	S         string `csv:"s"`
-	D         string `csv:"d"`
-	E         string `csv:"e"`
-	UD        string `csv:"u_d"`
-	UNum      string `csv:"u_num"`
-	UInterp   string `csv:"u_interp"`
-	UInput    string `csv:"u_input"`
-	UVal      string `csv:"u_val"`
-	Ratio     string `csv:"ratio"`
-	Lo        string `csv:"lo"`
-	Hi        string `csv:"hi"`
-	Unit      string `csv:"unit"`
-	Reference string `csv:"reference"`
-	Line      string `csv:"line"` // of the reference file
+// exportedColumns are the columns of the CSV, in their order. Numbers are texts,
+// so that every one has the digits of the report and an unknown one is blank,
+// not zero.
+var exportedColumns = []struct {
+	name string
+	text func(*study.Cell, *study.Station) string
+}{
+	{"case", func(c *study.Cell, _ *study.Station) string { return guarded(c.Case) }},
+	{"quantity", func(c *study.Cell, _ *study.Station) string { return guarded(c.Quantity) }},
+	{"model", func(c *study.Cell, _ *study.Station) string { return guarded(c.Model) }},
+	{"x", func(_ *study.Cell, s *study.Station) string { return plain(s.X) }},
+	{"x_unit", func(c *study.Cell, _ *study.Station) string { return guarded(c.XUnit) }},
+	{"s", func(_ *study.Cell, s *study.Station) string { return plain(s.S) }},
+	{"d", func(_ *study.Cell, s *study.Station) string { return plain(s.D) }},
+	{"e", func(_ *study.Cell, s *study.Station) string { return plain(s.E) }},
+	{"u_d", func(_ *study.Cell, s *study.Station) string { return plain(s.UD) }},
+	{"u_num", func(_ *study.Cell, s *study.Station) string { return plain(s.UNum) }},
+	{"u_interp", func(_ *study.Cell, s *study.Station) string { return plain(s.UInterp) }},
+	{"u_input", func(_ *study.Cell, s *study.Station) string { return plain(s.UInput) }},
+	{"u_val", func(_ *study.Cell, s *study.Station) string { return plain(s.UVal) }},
+	{"ratio", func(_ *study.Cell, s *study.Station) string { return plain(s.Ratio) }},
+	{"lo", func(_ *study.Cell, s *study.Station) string { return plain(s.Lo) }},
+	{"hi", func(_ *study.Cell, s *study.Station) string { return plain(s.Hi) }},
+	{"unit", func(c *study.Cell, _ *study.Station) string { return guarded(c.Unit) }},
+	{"reference", func(c *study.Cell, _ *study.Station) string { return guarded(c.Reference) }},
+	{"line", func(_ *study.Cell, s *study.Station) string { return lineText(s.Line) }}, // of the reference file
 }
 
 // Stations returns the stations of the cells as CSV: one row for each, numbers
@@ -40,22 +45,26 @@ type stationRow struct {
 // Texts that a spreadsheet would take for a formula are begun with an
 // apostrophe.
 func Stations(cells []study.Cell) ([]byte, error) {
-	rows := []stationRow{}
-	for _, c := range cells {
-		for _, s := range c.Stations {
-			rows = append(rows, stationRow{
-				Case: guarded(c.Case), Quantity: guarded(c.Quantity), Model: guarded(c.Model),
-				X: plain(s.X), XUnit: guarded(c.XUnit), S: plain(s.S), D: plain(s.D), E: plain(s.E),
-				UD: plain(s.UD), UNum: plain(s.UNum), UInterp: plain(s.UInterp), UInput: plain(s.UInput), UVal: plain(s.UVal),
-				Ratio: plain(s.Ratio), Lo: plain(s.Lo), Hi: plain(s.Hi), Unit: guarded(c.Unit), Reference: guarded(c.Reference), Line: lineText(s.Line),
-			})
+	var out bytes.Buffer
+	rows := csv.NewWriter(&out)
+	row := make([]string, len(exportedColumns))
+	for i, column := range exportedColumns {
+		row[i] = column.name
+	}
+	err := rows.Write(row)
+	for i := range cells {
+		for j := range cells[i].Stations {
+			for k, column := range exportedColumns {
+				row[k] = column.text(&cells[i], &cells[i].Stations[j])
+			}
+			err = errors.Join(err, rows.Write(row))
 		}
 	}
-	data, err := gocsv.MarshalBytes(rows)
-	if err != nil {
+	rows.Flush()
+	if err := errors.Join(err, rows.Error()); err != nil {
 		return nil, fmt.Errorf("writing the stations as CSV: %w", err)
 	}
-	return data, nil
+	return out.Bytes(), nil
 }
 
 // plain returns a number as in JSON, or nothing where it is not known.

@@ -96,7 +96,7 @@ func makeParts(root, entry, corePath string) (*parts, error) {
 var wordy = []string{
 	"weirmark/core/memo", "weirmark/core/chart", "weirmark/core/sentence", "weirmark/core/message", "weirmark/core/study",
 	"weirmark/core/settling", "weirmark/core/plausibility", "weirmark/core/notice",
-	"github.com/gocarina/gocsv", "mime/multipart", "net/textproto", "regexp", "regexp/syntax", "encoding/xml", "encoding/json",
+	"regexp", "regexp/syntax", "encoding/xml", "encoding/json",
 	"archive/zip", "time", "fmt", "reflect", "gonum.org/v1/gonum/lapack/gonum", "gonum.org/v1/gonum/mat",
 }
 
