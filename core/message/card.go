@@ -17,6 +17,8 @@ import (
 // slipCards says of every slip what was read and how it is used.
 func (s *Session) slipCards() []SlipCard {
 	cards := []SlipCard{}
+	var slips []*study.Slip
+	var tables []tablefile.Table
 	for i := range s.study.Slips {
 		p := &s.study.Slips[i]
 		f := s.study.File(p.File)
@@ -28,7 +30,7 @@ func (s *Session) slipCards() []SlipCard {
 		card := SlipCard{ID: p.ID, File: p.File, Name: f.Name, Notices: []string{}, Entries: []Entry{}, Sketch: Sketch{Own: [][2]study.Number{}, Others: [][][2]study.Number{}}}
 		if err != nil {
 			card.Read = asNotice(err).Text
-			cards = append(cards, card)
+			cards, slips, tables = append(cards, card), append(slips, p), append(tables, t)
 			continue
 		}
 		card.Read = readWords(t)
@@ -46,8 +48,9 @@ func (s *Session) slipCards() []SlipCard {
 			}
 		}
 		card.Sketch = s.sketch(p, t)
-		cards = append(cards, card)
+		cards, slips, tables = append(cards, card), append(slips, p), append(tables, t)
 	}
+	group(cards, slips, tables)
 	return cards
 }
 

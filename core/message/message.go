@@ -102,7 +102,7 @@ func init() {
 		"about": about, "read": readFile, "grids": grids, "compare": compare,
 		"demo": demo, "new": blank, "open": open, "drop": drop, "save": save, "copy": copyStudy,
 		"set": set, "accept": accept, "reveal": reveal, "select": choose,
-		"add source": addSource, "remove source": removeSource, "remove file": removeFile, "exclude": exclude, "include": include, "answer": answer, "add item": addItem, "remove item": removeItem, "double": double,
+		"add source": addSource, "remove source": removeSource, "remove file": removeFile, "exclude": exclude, "include": include, "answer": answer, "add item": addItem, "remove item": removeItem, "double": double, "accept like": acceptLike, "accept names": acceptNames,
 		"undo": undo, "redo": redo, "view": view, "results": results, "memo": writeMemo, "stations": writeStations,
 	}
 }

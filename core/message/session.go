@@ -137,6 +137,14 @@ func double(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
 	return s.change(q, r, func(n *study.Study) error { return n.Double(q.target().ID, q.At) })
 }
 
+func acceptLike(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
+	return s.change(q, r, func(n *study.Study) error { return n.Like(q.target().ID, s.like(q.target().ID), q.At) })
+}
+
+func acceptNames(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
+	return s.change(q, r, func(n *study.Study) error { return n.AcceptNames(q.Value, q.At) })
+}
+
 func exclude(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
 	return s.change(q, r, func(n *study.Study) error { return n.Exclude(q.target(), q.Why, q.At) })
 }

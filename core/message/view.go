@@ -2,6 +2,7 @@ package message
 
 import (
 	"cmp"
+	"slices"
 	"strconv"
 
 	"weirmark/core/notice"
@@ -26,6 +27,8 @@ type View struct {
 	OpenCount int                `json:"open_count"`
 	Board     Board              `json:"board"`
 	Courses   []Course           `json:"courses"`
+	Names     Names              `json:"names"`
+	Clashes   []string           `json:"clashes"` // what of the files contradicts each other, in any cell
 	Slips     []SlipCard         `json:"slips"`
 	Sources   []SourceCard       `json:"sources"`
 	Choices   []Entry            `json:"choices"`
@@ -127,6 +130,14 @@ type EntryItem struct {
 	Entries []Entry       `json:"entries"`
 }
 
+// Names is how the names of files are read: the pattern, what it makes of
+// each name, and what does not fit or is said twice.
+type Names struct {
+	Pattern Entry    `json:"pattern"`
+	Table   *Table   `json:"table"` // null where there is no pattern
+	Notices []string `json:"notices"`
+}
+
 // SlipCard says what was read of one table and how it is used.
 type SlipCard struct {
 	ID      string   `json:"id"`
@@ -134,7 +145,9 @@ type SlipCard struct {
 	Name    string   `json:"name"`
 	Read    string   `json:"read"` // what was read, in words
 	Entries []Entry  `json:"entries"`
-	Open    int      `json:"open"` // guesses to accept and gaps to fill
+	Open    int      `json:"open"`  // guesses to accept and gaps to fill
+	Group   string   `json:"group"` // tables of one shape have the same; empty: not used
+	Odd     string   `json:"odd"`   // how it differs from most of its group
 	Notices []string `json:"notices"`
 	Sketch  Sketch   `json:"sketch"`
 }
@@ -180,7 +193,7 @@ func (s *Session) view() (*View, error) {
 	report := study.Evaluate(s.study, options)
 	v := &View{
 		Title: s.study.Title, Purpose: s.study.Purpose, Status: status(s.study), Unsaved: len(s.study.Log) > s.saved,
-		Board: board(&report), Courses: []Course{}, Slips: s.slipCards(), Sources: []SourceCard{}, Choices: []Entry{}, Question: []Entry{}, Excluded: []ExcludedCard{},
+		Board: board(&report), Courses: []Course{}, Names: names(s.study), Slips: s.slipCards(), Sources: []SourceCard{}, Choices: []Entry{}, Question: []Entry{}, Excluded: []ExcludedCard{},
 		People: people(s.study), Files: s.fileCards(&report), Log: report.Log, Notices: []string{},
 	}
 	if n := len(s.past); n > 0 {
@@ -193,6 +206,7 @@ func (s *Session) view() (*View, error) {
 		v.Notices = append(v.Notices, n.Text)
 	}
 	at := s.selectedCell(&report)
+	v.Clashes = clashes(&report)
 	for i := range report.Cells {
 		v.OpenCount += len(report.Cells[i].Open)
 	}
@@ -228,6 +242,21 @@ func (s *Session) view() (*View, error) {
 		})
 	}
 	return v, nil
+}
+
+// clashes lists, once each, the open findings of the third course that hold one
+// file against another: they are told beside the slips, before anything is
+// accepted.
+func clashes(r *study.Report) []string {
+	list := []string{}
+	for i := range r.Cells {
+		for _, o := range r.Cells[i].Open {
+			if o.Course == 2 && o.Target.Kind == "answer" && !slices.Contains(list, o.Text) {
+				list = append(list, o.Text)
+			}
+		}
+	}
+	return list
 }
 
 func nothingYet(s *study.Study) string {

@@ -122,7 +122,7 @@ var table = map[string]row{
 	"finding-answered":  {Note, "%s was answered: %s"},
 	"ratio-constant":    {Ask, "S/D is %s ± %s at the stations%s. Nothing was changed. Check units and references of both sides."},
 	"offset-constant":   {Ask, "E is %s ± %s everywhere: do the two sides have different datums? Nothing was removed."},
-	"range-scaled":      {Ask, "%s of the reference runs from %s to %s, of the simulation from %s to %s: they would fit with a factor %s. Check the units. Nothing was changed."},
+	"range-scaled":      {Ask, "%s of the reference runs from %s to %s, of the simulation from %s to %s: they would fit with a factor %s%s. Check the units. Nothing was changed."},
 	"curve-shuffled":    {Ask, "Values of %s alternate at neighbouring rows (%d changes of direction): two branches shuffled by sorting? The order cannot be recovered safely; supply the unsorted file."},
 	"curve-outlier":     {Ask, "%s at line %d lies %s robust deviations off its neighbours, %s times what they suggest. Not removed. Exclude it with a reason, or say why it stays."},
 	"curve-magnitude":   {Ask, "%s is never negative but reaches %s: a magnitude? Changes of sign cannot be found in it. Export the signed component."},
@@ -264,5 +264,7 @@ var table = map[string]row{
 	"scalar-rows":          {Stop, "%s holds %d values where one is needed. Choose the column of stations, or a table with one row."},
 	"station-common":       {Ask, "No common station of %s: nothing is compared. Check the ranges and units of both sides."},
 	"curve-envelope":       {Note, "Numbers use all %d points of the simulation; figures show an envelope of %d."},
+	"names-collide":        {Ask, "%s both claim to be %s. Both are used as they stand: correct the name of one, or set one not to be used."},
+	"names-unfit":          {Note, "%d of %d names do not fit the pattern: %s. What was guessed of them otherwise is kept: correct the pattern or fill their slips by hand."},
 	"files-identical":      {Ask, "%s and %s are byte-identical. If they stand for different runs, one is a copy by mistake."},
 }

@@ -111,8 +111,27 @@ func (w *work) doubtRanges() {
 		return
 	}
 	print := func(v float64) string { return quantity.Text(w.xUnit.FromSI(v), 4) }
-	w.ask(2, "the unit of "+r.slip.X.Column.Value, "range-scaled", r.slip.X.Column.Value, print(rLo), print(rHi), print(sLo), print(sHi), quantity.Text(factor, 4))
+	w.ask(2, "the unit of "+r.slip.X.Column.Value, "range-scaled", r.slip.X.Column.Value, print(rLo), print(rHi), print(sLo), print(sHi), quantity.Text(factor, 4), scaleWords(factor))
 }
+
+// scales are the pairs of units whose numbers differ by a factor.
+var scales = []struct {
+	factor float64
+	words  string
+}{{1000, "millimetres against metres"}, {100, "centimetres against metres"}, {10, "millimetres against centimetres"}, {25.4, "millimetres against inches"}, {39.37, "inches against metres"}, {3.281, "feet against metres"}, {12, "inches against feet"}, {57.3, "degrees against radians"}}
+
+// scaleWords names the units that a factor suggests, whichever way round.
+func scaleWords(factor float64) string {
+	for _, s := range scales {
+		if near(factor, s.factor) || near(1/factor, s.factor) {
+			return " (" + s.words + "?)"
+		}
+	}
+	return ""
+}
+
+// near allows for the ends of two ranges that are not quite the same.
+func near(a, b float64) bool { return math.Abs(a/b-1) < 0.02 }
 
 // doubtMagnitude asks about a simulation without a sign where the reference
 // changes it.

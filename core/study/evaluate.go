@@ -342,9 +342,13 @@ func (w *work) findSimulation() {
 
 // identicalRuns asks about runs of one family that hold the same bytes.
 func (w *work) identicalRuns() {
-	first := map[string]*Slip{}
+	first, grids := map[string]*Slip{}, map[string]*Slip{}
 	for _, r := range w.runs {
 		p := r.curve.slip
+		if other, twice := grids[p.Grid.Value]; twice && p.Grid.Given() && other.File != p.File {
+			w.need(1, true, "the run of grid "+p.Grid.Value, slipTarget(p, "grid"), "names-collide", w.e.study.fileName(other)+" and "+w.e.study.fileName(p), w.q.label()+", grid "+p.Grid.Value)
+		}
+		grids[p.Grid.Value] = p
 		f := w.e.study.File(p.File)
 		key := f.SHA256 + " " + p.Table + " " + p.Y.Column.Value
 		if other, twice := first[key]; twice && other.File != p.File {

@@ -211,7 +211,7 @@ var fieldNames = map[string]string{
 	"choices.interpolation": "interpolation", "choices.u_interp": "interpolation uncertainty", "choices.num_shared": "u_num shared",
 	"requirement.value": "requirement", "requirement.percent": "basis of the requirement", "requirement.who": "who set the requirement", "requirement.date": "date of the requirement",
 	"scores.dispersion": "scores of the dispersion field", "scores.threshold": "threshold of the scores", "scores.fraction": "fraction of the hit rate", "scores.allowance": "allowance of the hit rate",
-	"reference_id": "name of the reference", "prepared.name": "prepared by", "prepared.date": "prepared on", "checked.name": "checked by", "checked.date": "checked on",
+	"pattern": "pattern of the names", "reference_id": "name of the reference", "prepared.name": "prepared by", "prepared.date": "prepared on", "checked.name": "checked by", "checked.date": "checked on",
 	"approved.name": "approved by", "approved.date": "approved on",
 }
 
@@ -285,6 +285,10 @@ func (s *Study) enter(t Target, value string) (string, error) {
 	switch t.Kind {
 	case "file":
 		return s.enterReading(t, value)
+	case "study":
+		if t.Field == "pattern" {
+			return s.enterPattern(value)
+		}
 	case ItemCondition, ItemRegion, ItemApplication:
 		return s.enterItem(t, value)
 	case "case":

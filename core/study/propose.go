@@ -23,6 +23,9 @@ func (s *Study) Add(name string, data []byte, read tablefile.File, at string) []
 			ref = strconv.Itoa(i + 1)
 		}
 		p := propose(name, t)
+		if naming, ok := ParseNaming(s.Pattern); ok {
+			p.named(naming.Of(name))
+		}
 		kind := statedKind(read, t.Name)
 		if kind != "" {
 			p.Role, p.Model = Field{Value: Reference, By: Guessed}, Field{}

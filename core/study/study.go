@@ -56,6 +56,8 @@ type Study struct {
 	// the questions; empty when it is not stated.
 	Application []Condition `json:"application,omitempty"`
 	Log         []Entry     `json:"log"`
+	// Pattern says how names of files are read; see Naming.
+	Pattern string `json:"pattern,omitempty"`
 
 	unknown map[string]json.RawMessage // fields of the document this edition does not know, kept as they came
 }

@@ -123,6 +123,8 @@ export interface View {
   open_count: number;
   board: Board;
   courses: Course[] | null;
+  names: Names;
+  clashes: string[] | null;
   slips: SlipCard[] | null;
   sources: SourceCard[] | null;
   choices: Entry[] | null;
@@ -242,6 +244,12 @@ export interface Course {
   tables: Table[] | null;
 }
 
+export interface Names {
+  pattern: Entry;
+  table: Table | null;
+  notices: string[] | null;
+}
+
 export interface SlipCard {
   id: string;
   file: string;
@@ -249,6 +257,8 @@ export interface SlipCard {
   read: string;
   entries: Entry[] | null;
   open: number;
+  group: string;
+  odd: string;
   notices: string[] | null;
   sketch: Sketch;
 }

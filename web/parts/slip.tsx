@@ -1,6 +1,7 @@
 // A slip says in words what was read of one table and how it is used. Every
 // guess is accepted on its own chip; tables of the same shape can take over an
-// answer that was given on one of them.
+// answer that was given on one of them, or its whole reading once nothing of it
+// is open. The odd one of a group says how it differs.
 
 import { useState } from "preact/hooks";
 
@@ -19,16 +20,9 @@ interface Offer {
   value: string;
 }
 
-/** Tables are of one shape when they have the same columns and play one role. */
-function shape(slip: SlipCard): string {
-  const entries = list(slip.entries);
-  const of = (field: string) => entries.find((entry) => entry.target.field === field);
-  return JSON.stringify([of("role")?.value, list(of("y.column")?.options).map((option) => option.value)]);
-}
-
 function waiting(slip: SlipCard, all: SlipCard[], offer: Offer): Entry[] {
   return all
-    .filter((other) => other.id !== slip.id && shape(other) === shape(slip))
+    .filter((other) => other.id !== slip.id && other.group !== "" && other.group === slip.group && other.odd === "")
     .flatMap((other) => list(other.entries).filter((entry) => entry.target.field === offer.entry.target.field && entry.open))
     .filter((entry) => ["", offer.value, offer.entry.value].includes(entry.value));
 }
@@ -60,6 +54,7 @@ function Unfolded({ slip, all }: { slip: SlipCard; all: SlipCard[] }) {
   const [offer, setOffer] = useState<Offer | undefined>(undefined);
   const others = offer === undefined ? [] : waiting(slip, all, offer);
   const entries = list(slip.entries);
+  const like = slip.open > 0 || slip.odd !== "" || slip.group === "" ? 0 : all.filter((other) => other.id !== slip.id && other.group === slip.group && other.odd === "" && other.open > 0).length;
 
   const after = (entry: Entry, value: string) => {
     unfold(desk, slip.id);
@@ -95,6 +90,18 @@ function Unfolded({ slip, all }: { slip: SlipCard; all: SlipCard[] }) {
           <button onClick={() => void share()}>
             Say the same of {others.length === 1 ? "1 more table" : `${others.length} more tables`} of this shape: {offer.entry.label} {offer.value}
           </button>
+        </p>
+      )}
+      {like > 0 && (
+        <p class="offer">
+          <button onClick={() => void desk.change({ kind: "accept like", target: { kind: "slip", id: slip.id, field: "" } })}>
+            {like === 1 ? "Read the one like table the same way" : `Read the ${like} like tables the same way`}
+          </button>
+        </p>
+      )}
+      {slip.odd !== "" && (
+        <p class="notice">
+          <Words text={slip.odd} />
         </p>
       )}
       {list(slip.notices).map((text, i) => (

@@ -3,8 +3,10 @@
 
 import type { View } from "../engine/types";
 import { list } from "./desk";
+import { Names } from "./names";
 import { Removal } from "./removal";
 import { SlipOf } from "./slip";
+import { Words } from "./words";
 
 function toDo(open: number): string {
   return open === 0 ? "Nothing is left to accept." : open === 1 ? "1 entry to accept or fill." : `${open} entries to accept or fill.`;
@@ -23,8 +25,14 @@ export function Tray({ view }: { view: View }) {
       <p class="quiet" data-count={open}>
         {slips.length === 0 ? "No table yet." : toDo(open)} Enter accepts a guess on its own chip; F2 or a click corrects it.
       </p>
+      {list(view.clashes).map((text) => (
+        <p key={text} class="notice clash">
+          <Words text={text} />
+        </p>
+      ))}
+      <Names view={view} />
       <div class="slips">
-        {slips.map((slip) => (
+        {[...slips].sort((a, b) => Number(b.odd !== "") - Number(a.odd !== "")).map((slip) => (
           <SlipOf key={slip.id} slip={slip} all={slips} />
         ))}
         {rejected.map((file) => (
