@@ -48,7 +48,7 @@ func (b *builder) grids(i int, c study.Cell) []Node {
 	if known(g.GCI) {
 		add("Grid convergence index", percent(g.GCI, at("gci")))
 	}
-	if g.Along {
+	if g.Along && known(g.R32) {
 		add("Stations", say("{} monotone, {} not monotone", count(g.Monotone, at("monotone")), count(g.NonMonotone, at("non_monotone")))...)
 		if known(g.OrderLow, g.OrderHigh) {
 			add("Quartiles of the local orders", interval(digits(g.OrderLow, 3, at("order_low")), digits(g.OrderHigh, 3, at("order_high")))...)

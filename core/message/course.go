@@ -147,6 +147,9 @@ func gridAnswer(c *study.Cell) string {
 	}
 	if g.Along {
 		all := g.Monotone + g.NonMonotone
+		if !g.R32.Known() && g.UNum.Known() {
+			return "Two grids: whether the curve converges cannot be told; rms u_num " + text(g.UNum, 3) + c.UnitSuffix() + " by factor 3 and the formal order " + text(g.Formal, 2) + "."
+		}
 		return strconv.Itoa(g.Monotone) + " of " + quantity.Counted(all, "station") + " converge monotonically; common order " + text(g.Order, 3) + ", rms u_num " + text(g.UNum, 3) + c.UnitSuffix() + "."
 	}
 	switch g.Class {
@@ -163,7 +166,7 @@ func gridAnswer(c *study.Cell) string {
 		return "The three finest grids oscillate; a bound is taken from their range, no order is given."
 	case string(refinement.Insufficient):
 		if g.U.Known() {
-			return "Two grids: whether the value converges cannot be told; grid uncertainty " + text(g.U, 2) + c.UnitSuffix() + " at 95 %" + ruleWords(c) + "."
+			return "Two grids: whether the value converges cannot be told; grid uncertainty " + text(g.U, 2) + c.UnitSuffix() + " at 95 % by factor 3 and the formal order " + text(g.Formal, 2) + "."
 		}
 		return "Too few usable grids: the order cannot be observed."
 	}

@@ -2,7 +2,9 @@ package message
 
 import (
 	"math"
+	"slices"
 	"strconv"
+	"strings"
 
 	"weirmark/core/notice"
 	"weirmark/core/quantity"
@@ -16,8 +18,11 @@ import (
 type GridsRequest struct {
 	Size   string `json:"size,omitempty"`
 	Value  string `json:"value,omitempty"`
-	Dim    int    `json:"dim,omitempty"` // 2 or 3; 0 is not stated
+	Dim    int    `json:"dim,omitempty"` // 1, 2 or 3; 0 is not stated
 	Limits bool   `json:"limits"`        // the bounded rule
+	// Rule is a name of refinement.Rules, its blanks written as hyphens or not.
+	Rule   string  `json:"rule,omitempty"`
+	Formal float64 `json:"formal,omitempty"` // order of the scheme; 0 is not stated
 }
 
 // GridsCase is the grid study of one column of one table.
@@ -30,6 +35,8 @@ type GridsCase struct {
 	Ea           study.Number `json:"ea"`
 	Eext         study.Number `json:"eext"`
 	GCI          study.Number `json:"gci"`
+	U            study.Number `json:"u"`    // expanded, in the unit of the values
+	Rule         string       `json:"rule"` // what was done
 	Notices      []Finding    `json:"notices"`
 }
 
@@ -42,6 +49,13 @@ func grids(_ *Session, q *Request, attached [][]byte, r *Reply) ([][]byte, error
 	ask := GridsRequest{}
 	if q.Grids != nil {
 		ask = *q.Grids
+	}
+	ask.Rule = strings.ReplaceAll(ask.Rule, "-", " ")
+	if ask.Rule != "" && !slices.Contains(refinement.Rules, ask.Rule) {
+		return nil, notice.New("operation-refused", "a rule of the grid study", ask.Rule+" (known are: "+strings.Join(refinement.Rules, ", ")+")")
+	}
+	if ask.Formal == 0 {
+		ask.Formal = study.DefaultChoices().Formal
 	}
 	f := tablefile.Read(name, data, tablefile.Options{})
 	if _, err := f.Table("1"); err != nil {
@@ -99,9 +113,9 @@ func gridCases(file string, t tablefile.Table, ask GridsRequest) ([]GridsCase, e
 	}
 	var cases []GridsCase
 	for _, c := range values {
-		res := refinement.Three(size.Values, c.Values, dim, refinement.Options{Bounded: ask.Limits, Formal: study.DefaultChoices().Formal})
+		res := refinement.Study(size.Values, c.Values, dim, refinement.Options{Rule: ask.Rule, Bounded: ask.Limits, Formal: ask.Formal})
 		cases = append(cases, GridsCase{Table: t.Name, Value: c.Name, Class: string(res.Class),
-			Order: study.Number(res.Order), Extrapolated: study.Number(res.Extrapolated), Ea: study.Number(res.Ea), Eext: study.Number(res.Eext), GCI: study.Number(res.GCI),
+			Order: study.Number(res.Order), Extrapolated: study.Number(res.Extrapolated), Ea: study.Number(res.Ea), Eext: study.Number(res.Eext), GCI: study.Number(res.GCI), U: study.Number(res.U), Rule: res.Rule,
 			Notices: findings(append(append([]notice.Notice{}, notices...), res.Notices...), false)})
 	}
 	return cases, nil

@@ -83,8 +83,8 @@ func TestRulesAndConvergence(t *testing.T) {
 	}
 }
 
-// TestTwoGridsOfAStudy: a family of two grids has a statement by the rule of
-// two grids only.
+// TestTwoGridsOfAStudy: a family of two grids takes the rule of two grids,
+// asked for or not, and names it.
 func TestTwoGridsOfAStudy(t *testing.T) {
 	shorten := func(s *study.Study) {
 		for i := range s.Files {
@@ -94,16 +94,18 @@ func TestTwoGridsOfAStudy(t *testing.T) {
 			}
 		}
 	}
-	if c := ruled(t, "C3", demoLengthName, "B", refinement.RuleThree, shorten); c.Grids.UNum.Known() || !c.Withheld {
-		t.Errorf("three: %+v", c.Grids)
-	}
-	c := ruled(t, "C3", demoLengthName, "B", refinement.RuleTwo, shorten)
 	want := 3 * .045 / (math.Pow(5.6/2.35, 2./3) - 1)
-	if math.Abs(float64(c.Grids.U)-want) > 1e-9 || c.Grids.Order.Known() || c.Withheld || !notice.Has(c.Notices, "grid-two") || !strings.HasPrefix(gridAnswer(c), "Two grids: whether the value converges cannot be told") {
-		t.Errorf("two: U %v, want %v; withheld %v, open %+v, %s", c.Grids.U, want, c.Withheld, c.Open, gridAnswer(c))
-	}
-	if len(gridNumbers(c)) != 1 {
-		t.Errorf("%+v", gridNumbers(c))
+	for _, rule := range []string{refinement.RuleThree, refinement.RuleTwo} {
+		c := ruled(t, "C3", demoLengthName, "B", rule, shorten)
+		if math.Abs(float64(c.Grids.U)-want) > 1e-9 || c.Grids.Order.Known() || c.Withheld || !notice.Has(c.Notices, "grid-two") || !strings.HasPrefix(gridAnswer(c), "Two grids: whether the value converges cannot be told") {
+			t.Errorf("%s: U %v, want %v; withheld %v, open %+v, %s", rule, c.Grids.U, want, c.Withheld, c.Open, gridAnswer(c))
+		}
+		if !strings.Contains(gridAnswer(c), "factor 3") {
+			t.Errorf("%s: %s", rule, gridAnswer(c))
+		}
+		if len(gridNumbers(c)) != 1 {
+			t.Errorf("%+v", gridNumbers(c))
+		}
 	}
 }
 

@@ -4,6 +4,7 @@ import (
 	"cmp"
 	"math"
 	"slices"
+	"strconv"
 
 	"weirmark/core/notice"
 	"weirmark/core/quantity"
@@ -22,9 +23,10 @@ type Grid struct {
 type LocalPoint struct {
 	X      float64
 	Class  Class
-	Order  float64 // observed at this station alone; monotone only
-	U      float64 // expanded
-	Values [3]float64
+	Order  float64    // observed at this station alone; monotone only
+	U      float64    // expanded
+	Values [3]float64 // fine first; NaN for a third grid that there is not
+	known  bool       // all grids that are used answer here
 }
 
 // StandardUncertainty returns U/k.
@@ -62,6 +64,12 @@ const leastOrder = 0.5
 // stations around it: a tenth of all, at least five (see floor). Only where no
 // station differs between the grids is there no U, with the notice grid-flat.
 //
+// The other rules of Rules, where asked for: two grids and no class, three
+// times the error of the formal order; the correction factor and the factor of
+// safety with the common order at monotone stations; least squares over four
+// grids or more at every station that converges; the data range at all
+// stations. The common order is held at the formal one by any of them.
+//
 // Source of the common order and of the factors: the procedure of Celik et al.
 // (J. Fluids Eng. 130 (2008) 078001) for profiles uses a mean order; the
 // median and the floor are our own.
@@ -74,11 +82,26 @@ func Along(grids []Grid, at []float64, dim int, opt Options) Local {
 	for i, x := range at {
 		l.Points[i] = LocalPoint{X: x, Class: Insufficient, Order: math.NaN(), U: math.NaN(), Values: unknown()}
 	}
-	three, ok := l.choose(grids, dim)
-	if !ok || !l.resample(three, at, opt) {
+	some, ok := l.choose(grids, dim, opt)
+	if !ok {
 		return l
 	}
-	l.judge(opt)
+	values, ok := l.resample(some, at, opt)
+	if !ok {
+		return l
+	}
+	if len(some) == 2 {
+		l.judgeTwo(opt)
+		return l
+	}
+	if !l.judge(opt) {
+		return l
+	}
+	if len(some) > 3 {
+		l.fit(some, values, dim, opt)
+	}
+	l.floor()
+	l.say(opt, len(some))
 	return l
 }
 
@@ -86,8 +109,10 @@ func (l *Local) tell(code string, args ...any) {
 	l.Notices = append(l.Notices, notice.New(code, args...))
 }
 
-// choose returns the three finest grids and sets the ratios.
-func (l *Local) choose(grids []Grid, dim int) ([]Grid, bool) {
+// choose returns the grids that the rule takes, fine first, and sets the
+// ratios: the three finest, two where the rule makes do with them and there
+// are no more, or all by least squares.
+func (l *Local) choose(grids []Grid, dim int, opt Options) ([]Grid, bool) {
 	if dim < 1 || dim > 3 {
 		l.tell("grid-dimension", dim)
 		return nil, false
@@ -111,30 +136,53 @@ func (l *Local) choose(grids []Grid, dim int) ([]Grid, bool) {
 			return nil, false
 		}
 	}
+	all := opt.Rule == RuleLeastSquares && len(different) > 3
 	switch {
+	case len(different) == 2 && opt.two():
+		l.R21 = ratio(different[0].Count, different[1].Count, dim)
+		l.tellRatio(l.R21)
+		return different, true
 	case len(different) < 3:
 		l.tell("grid-few", len(different))
 		return nil, false
-	case len(different) > 3:
+	case opt.Rule == RuleLeastSquares && !all:
+		l.tell("grid-rule-few", len(different))
+	case len(different) > 3 && !all:
 		l.tell("grid-finest-three", len(different))
+	}
+	if !isRule(opt.Rule) {
+		l.tell("grid-rule-unknown", opt.Rule)
 	}
 	l.R21 = ratio(different[0].Count, different[1].Count, dim)
 	l.R32 = ratio(different[1].Count, different[2].Count, dim)
-	if least := quantity.Round(min(l.R21, l.R32), 10); least < leastRatio {
-		l.tell("grid-ratio", quantity.Text(least, 4))
+	l.tellRatio(min(l.R21, l.R32))
+	if all {
+		return different, true
 	}
 	return different[:3], true
 }
 
-// resample fills in the values of the three grids.
-func (l *Local) resample(three []Grid, at []float64, opt Options) bool {
+func (l *Local) tellRatio(least float64) {
+	if least = quantity.Round(least, 10); least < leastRatio {
+		l.tell("grid-ratio", quantity.Text(least, 4))
+	}
+}
+
+// resample brings the grids to the stations and fills in the values of the
+// three finest. It returns the values of every grid at every station.
+func (l *Local) resample(some []Grid, at []float64, opt Options) ([][]float64, bool) {
 	asked := 0
 	for _, x := range at {
 		if !math.IsNaN(x) {
 			asked++
 		}
 	}
-	for k, g := range three {
+	values := make([][]float64, len(some))
+	for k, g := range some {
+		values[k] = make([]float64, len(at))
+		for i := range values[k] {
+			values[k][i] = math.NaN()
+		}
 		r := station.Resample(g.Name, "x", g.X, g.Y, at, station.Options{Method: opt.Method})
 		for _, n := range r.Notices {
 			// Stations left out are counted once for all grids, below.
@@ -144,33 +192,38 @@ func (l *Local) resample(three []Grid, at []float64, opt Options) bool {
 		}
 		if r.Refused {
 			l.tell("grid-curve", g.Name)
-			return false
+			return nil, false
 		}
 		for j, i := range r.Kept {
-			l.Points[i].Values[k] = r.S[j]
+			values[k][i] = r.S[j]
 		}
 	}
 	answered := 0
 	for i := range l.Points {
 		p := &l.Points[i]
-		if p.answered() {
-			answered++
-		} else {
-			p.Values = unknown()
+		p.known = true
+		for k := range some {
+			p.known = p.known && !math.IsNaN(values[k][i])
+		}
+		if !p.known {
+			continue
+		}
+		answered++
+		for k := range min(3, len(some)) {
+			p.Values[k] = values[k][i]
 		}
 	}
 	if answered < asked {
 		l.tell("grid-support", asked-answered, asked)
 	}
-	return answered > 0
+	return values, answered > 0
 }
 
-func (p LocalPoint) answered() bool {
-	return !math.IsNaN(p.Values[0]) && !math.IsNaN(p.Values[1]) && !math.IsNaN(p.Values[2])
-}
+func (p LocalPoint) answered() bool { return p.known }
 
-// judge classifies the stations and gives each its uncertainty.
-func (l *Local) judge(opt Options) {
+// judge classifies the stations and gives each its uncertainty from the three
+// finest grids. It reports whether any station differs between them.
+func (l *Local) judge(opt Options) bool {
 	scale := 0.0
 	for _, p := range l.Points {
 		if p.answered() {
@@ -199,7 +252,7 @@ func (l *Local) judge(opt Options) {
 	if flat {
 		l.Rule = "no difference between the three finest grids: no uncertainty"
 		l.tell("grid-flat")
-		return
+		return false
 	}
 	if len(orders) > 0 {
 		slices.Sort(orders)
@@ -211,18 +264,76 @@ func (l *Local) judge(opt Options) {
 			p.U = l.expanded(*p, opt)
 		}
 	}
-	l.floor()
-	l.say(opt)
+	return true
 }
 
 // expanded returns U of one station before the floor.
 func (l *Local) expanded(p LocalPoint, opt Options) float64 {
 	t := triple{p.Values, l.R21, l.R32}
-	if p.Class != Monotone {
+	if p.Class != Monotone || opt.Rule == RuleRange {
 		return wideSafety * t.dataRange()
 	}
-	u, _ := indexed(t, math.Abs(p.Values[1]-p.Values[0]), l.Common, opt.Bounded)
+	e := math.Abs(p.Values[1] - p.Values[0])
+	d := e / powerLessOne(l.R21, l.Common)
+	switch opt.Rule {
+	case RuleTwo:
+		return wideSafety * e / powerLessOne(l.R21, opt.formal())
+	case RuleCorrection:
+		return correctionFactor(l.R21, l.Common, opt.formal()) * d
+	case RuleFactor:
+		return factorOfSafety(l.Common, opt.formal()) * d
+	}
+	u, _ := indexed(t, e, l.Common, opt.Bounded)
 	return u
+}
+
+// fit takes U and the order of the stations whose three finest grids converge
+// from the fit over all grids.
+func (l *Local) fit(grids []Grid, values [][]float64, dim int, opt Options) {
+	counts, own := make([]float64, len(grids)), make([]float64, len(grids))
+	for k, g := range grids {
+		counts[k] = g.Count
+	}
+	for i := range l.Points {
+		p := &l.Points[i]
+		if p.Class != Monotone && p.Class != Oscillatory {
+			continue
+		}
+		for k := range grids {
+			own[k] = values[k][i]
+		}
+		if r := Study(counts, own, dim, opt); !math.IsNaN(r.U) {
+			p.U, p.Order = r.U, r.Order
+		}
+	}
+}
+
+// judgeTwo gives every station of two grids three times the error that the
+// formal order estimates. Nothing shows that they converge: no station has a
+// class or an order.
+func (l *Local) judgeTwo(opt Options) {
+	flat := true
+	for i := range l.Points {
+		p := &l.Points[i]
+		if !p.answered() {
+			continue
+		}
+		l.NonMonotone++
+		e := math.Abs(p.Values[1] - p.Values[0])
+		flat = flat && e == 0
+		p.U = wideSafety * e / powerLessOne(l.R21, opt.formal())
+	}
+	if flat {
+		for i := range l.Points {
+			l.Points[i].U = math.NaN()
+		}
+		l.Rule = "no difference between the two grids: no uncertainty"
+		l.tell("grid-flat")
+		return
+	}
+	l.floor()
+	l.Rule = twoWords(opt) + "; nowhere below the median of the neighbours"
+	l.tell("grid-two", orderWords(opt.formal()))
 }
 
 // floor lifts every U to the median of its neighbourhood: up to ten stations
@@ -266,7 +377,17 @@ func quantile(sorted []float64, q float64) float64 {
 	return sorted[i] + float64((sorted[i+1]-sorted[i])*(at-float64(i)))
 }
 
-func (l *Local) say(opt Options) {
+func (l *Local) say(opt Options, grids int) {
+	const others, floor = "3 times the range of the three finest grids at the others", "; nowhere below the median of the neighbours"
+	if opt.Rule == RuleRange {
+		l.Rule = "U = 3 times the range of the three finest grids at every station, asked for" + floor
+		return
+	}
+	if grids > 3 {
+		l.Rule = "least squares over " + strconv.Itoa(grids) + " grids at stations that converge, " + others + "; implemented from a description of the procedure" + floor
+		l.tell("grid-local-fitted", grids)
+		return
+	}
 	switch all := l.Monotone + l.NonMonotone; {
 	case l.Monotone == 0:
 		l.Rule = "U = 3 times the range of the three finest grids at every station"
@@ -275,9 +396,20 @@ func (l *Local) say(opt Options) {
 	case l.NonMonotone > 0:
 		l.tell("grid-local-mixed", l.Monotone, all, quantity.Text(l.Common, 3))
 	}
-	l.Rule = "common order at monotone stations, U = 1.25 times the estimated error"
-	if opt.Bounded {
-		l.Rule += " (bounded rule)"
+	switch opt.Rule {
+	case RuleTwo:
+		l.Rule = "monotone stations: " + twoWords(opt)
+	case RuleCorrection:
+		l.Rule = "common order at monotone stations, U by the correction factor, formal order " + orderWords(opt.formal()) + ", coefficients from memory"
+		l.tell("grid-memory-rule", "correction-factor")
+	case RuleFactor:
+		l.Rule = "common order at monotone stations, U by the factor of safety, formal order " + orderWords(opt.formal()) + ", coefficients from memory"
+		l.tell("grid-memory-rule", "factor-of-safety")
+	default:
+		l.Rule = "common order at monotone stations, U = 1.25 times the estimated error"
+		if opt.Bounded {
+			l.Rule += " (bounded rule)"
+		}
 	}
-	l.Rule += "; 3 times the range of the three finest grids at the others; nowhere below the median of the neighbours"
+	l.Rule += "; " + others + floor
 }

@@ -67,6 +67,7 @@ func (r *Result) leastSquares(runs []run, dim int, opt Options) {
 		return
 	}
 	r.Extrapolated = s.first + f.c[0]
+	r.Fit = f.line(s.first, p)
 	if r.Extrapolated != 0 {
 		r.Eext = math.Abs((r.Extrapolated - r.Values[0]) / r.Extrapolated)
 	}

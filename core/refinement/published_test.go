@@ -331,3 +331,47 @@ func TestDemo(t *testing.T) {
 		t.Errorf("Cf,min B: %s", text)
 	}
 }
+
+// TestTwoCodesHeadToOneValue: on the flat plate of the NASA Turbulence Modeling
+// Resource two codes solve one model on the same grids, so that their values at
+// zero spacing are estimates of one number (the resource's purpose, "to verify
+// that the model is implemented correctly"; quoted from memory). Of every pair
+// of the table whose two families converge the extrapolated values agree within
+// the root sum of squares of their U.
+func TestTwoCodesHeadToOneValue(t *testing.T) {
+	type family struct {
+		row printedRow
+		r   Result
+	}
+	pairs, compared := map[string][]family{}, 0
+	var order []string
+	for _, row := range printedRows(t) {
+		if !strings.HasPrefix(row.Page, "flatplate_") {
+			continue
+		}
+		r := Three([]float64{row.Cells1, row.Cells2, row.Cells3}, []float64{row.Value1, row.Value2, row.Value3}, 2, Options{Bounded: true})
+		key := row.Page + " " + row.Quantity
+		if pairs[key] == nil {
+			order = append(order, key)
+		}
+		pairs[key] = append(pairs[key], family{row, r})
+	}
+	for _, key := range order {
+		for i, a := range pairs[key] {
+			for _, b := range pairs[key][:i] {
+				if a.r.Class != Monotone || b.r.Class != Monotone {
+					continue
+				}
+				compared++
+				name := key + " " + b.row.Code + " " + a.row.Code
+				d, u := math.Abs(a.r.Extrapolated-b.r.Extrapolated), math.Hypot(a.r.U, b.r.U)
+				if !(d <= u) {
+					t.Errorf("%s: the extrapolated values differ by %.3g, U is %.3g", name, d, u)
+				}
+			}
+		}
+	}
+	if compared != 16 {
+		t.Errorf("%d pairs, want 16", compared)
+	}
+}

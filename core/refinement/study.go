@@ -6,7 +6,7 @@ import (
 	"weirmark/core/quantity"
 )
 
-// The rules of a study of one value. An empty rule is RuleThree.
+// The rules of a study. An empty rule is RuleThree, and of two grids RuleTwo.
 const (
 	RuleThree        = "three"             // the three finest grids, bounded or plain
 	RuleTwo          = "two"               // the two finest grids with the formal order and factor 3
@@ -23,8 +23,8 @@ var Rules = []string{RuleThree, RuleTwo, RuleFormal, RuleLeastSquares, RuleCorre
 // Study studies values over cell counts by the rule of opt. Whatever the rule,
 // the three finest grids of different counts are classified first (see Class),
 // and where they diverge, are flat, or cannot be classified, no rule gives an
-// order or an uncertainty. Two grids have no class; only the rule of two grids
-// gives them a U, without an order.
+// order or an uncertainty. Two grids have no class; the rule of two grids gives
+// them a U, without an order, where it is asked for or no rule is.
 //
 // Rows without a count above zero or without a value are left out; equal
 // counts with equal values count once, with different ones the case is
@@ -40,14 +40,14 @@ func Study(counts, values []float64, dim int, opt Options) Result {
 	for i, g := range three {
 		r.Values[i], r.Counts[i] = g.value, g.count
 	}
-	if different < 3 && !(different == 2 && opt.Rule == RuleTwo) {
+	if different < 3 && !(different == 2 && opt.two()) {
 		r.tell("grid-few", different)
 	}
 	if dim < 1 || dim > 3 {
 		r.tell("grid-dimension", dim)
 		return r
 	}
-	if different == 2 && opt.Rule == RuleTwo && len(notices) == 0 {
+	if different == 2 && opt.two() && len(notices) == 0 {
 		r.onlyTwo(ratio(three[0].count, three[1].count, dim), opt)
 	}
 	if !ok {
@@ -72,6 +72,9 @@ func Study(counts, values []float64, dim int, opt Options) Result {
 	r.judge(opt)
 	return r
 }
+
+// two reports whether two grids get an uncertainty where there is no third.
+func (o Options) two() bool { return o.Rule == RuleTwo || o.Rule == "" }
 
 // isRule reports whether a rule has a name known here.
 func isRule(name string) bool {

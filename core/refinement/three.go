@@ -11,7 +11,7 @@ import (
 
 // Options are the choices of a grid study.
 type Options struct {
-	Rule    string             // one of Rules, or empty for the three finest grids; not along a curve
+	Rule    string             // one of Rules, or empty for the three finest grids
 	Bounded bool               // limit the index where the order is below 0.95 or above 3.05
 	Formal  float64            // formal order of the scheme; 0 stands for 2
 	Method  interpolate.Method // along a curve: how a grid's curve is brought to the stations
@@ -56,6 +56,7 @@ type Result struct {
 	HalfRange      float64    // half the range of the three
 	Range          float64    // range of all values given
 	Used           int        // grids that the result rests on
+	Fit            *Fit       // the line behind U where it is not that of the observed order through three grids
 	Rule           string     // what was done
 	Notices        []notice.Notice
 }

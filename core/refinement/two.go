@@ -8,6 +8,7 @@ import "math"
 func (r *Result) two(e21 float64, opt Options) {
 	r.Used = 2
 	r.U = wideSafety * r.estimate(e21, opt.formal())
+	r.Fit = r.through(e21, opt.formal())
 	r.Rule = twoWords(opt)
 }
 

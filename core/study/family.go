@@ -101,7 +101,7 @@ func (w *work) curveFamily() []notice.Notice {
 			X: inUnit(r.curve.x, r.curve.xUnit, w.xUnit), Y: inUnit(r.curve.y, r.curve.yUnit, w.yUnit)})
 		counts, names = append(counts, r.cells), append(names, name)
 	}
-	if len(grids) < 3 || len(w.x) == 0 {
+	if len(grids) < 2 || len(w.x) == 0 {
 		return nil
 	}
 	l := refinement.Along(grids, w.x, w.choices.dimension(), w.choices.rule())

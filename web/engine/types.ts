@@ -41,6 +41,8 @@ export interface GridsRequest {
   value?: string;
   dim?: number;
   limits: boolean;
+  rule?: string;
+  formal?: number;
 }
 
 export interface CompareRequest {
@@ -91,6 +93,8 @@ export interface GridsCase {
   ea: number | null;
   eext: number | null;
   gci: number | null;
+  u: number | null;
+  rule: string;
   notices: Finding[] | null;
 }
 

@@ -18,7 +18,8 @@ import (
 const internal = 4
 
 const usage = `weirmark read FILE [--json]
-weirmark grids FILE [--size COL] [--value COL] [--dim 2|3] [--limits on|off] [--json]
+weirmark grids FILE [--size COL] [--value COL] [--dim 1|2|3] [--formal NUMBER] [--limits on|off] [--rule RULE] [--json]
+                 RULE: three, two, formal-order, least-squares, correction-factor, factor-of-safety, data-range
 weirmark compare --sim FILE[@TABLE] --ref FILE[@TABLE] --x COL --y COL [--ref-x COL] [--ref-y COL]
                  [--u COL|NUMBER|NUMBER%] [--u-k NUMBER] [--u-common COL|NUMBER] [--u-num COL|NUMBER] [--u-input NUMBER]
                  [--u-interp on|off] [--interp linear|monotone] [--k NUMBER] [--json]
@@ -48,7 +49,7 @@ func run(args []string, out, errs io.Writer) (status int) {
 		do    func(*invocation) (int, error)
 	}{
 		"read":    {map[string]bool{"json": false}, read},
-		"grids":   {map[string]bool{"json": false, "size": true, "value": true, "dim": true, "limits": true}, grids},
+		"grids":   {map[string]bool{"json": false, "size": true, "value": true, "dim": true, "limits": true, "rule": true, "formal": true}, grids},
 		"compare": {map[string]bool{"json": false, "sim": true, "ref": true, "x": true, "y": true, "ref-x": true, "ref-y": true, "u": true, "u-k": true, "u-common": true, "u-num": true, "u-input": true, "u-interp": true, "interp": true, "k": true}, compare},
 		"shelf":   {map[string]bool{"set": true, "at": true, "curve": true}, runShelf},
 		"run":     {map[string]bool{"out": true}, runStudy},

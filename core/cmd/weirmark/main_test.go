@@ -136,7 +136,7 @@ func TestGridsShape(t *testing.T) {
 		t.Fatalf("%d cases", len(list))
 	}
 	c := list[0].(map[string]any)
-	if got := keys(t, c); got != "class ea eext extrapolated gci notices order table value" {
+	if got := keys(t, c); got != "class ea eext extrapolated gci notices order rule table u value" {
 		t.Errorf("keys %s", got)
 	}
 	for key, want := range map[string][2]float64{"order": {1.53, .01}, "extrapolated": {6.1685, .0005}, "ea": {.015, .0005}, "gci": {.022, .0005}} {
@@ -150,11 +150,48 @@ func TestGridsShape(t *testing.T) {
 	if status != 2 || c["class"] != "insufficient" || c["order"] != nil {
 		t.Errorf("two grids: status %d, %v", status, c)
 	}
+	if u := c["u"].(float64); math.Abs(u-3*0.091/(math.Pow(2.25, 2./3)-1)) > 1e-9 || !strings.Contains(c["rule"].(string), "assumed and not observed") {
+		t.Errorf("two grids: %v", c)
+	}
 	// A diverging family has no order, index or extrapolate.
 	status, out, _ = call(t, map[string]string{"g.csv": "N,phi\n400,1.39\n200,1.12\n100,0.98\n"}, "grids", "--json", "g.csv")
 	c = decode(t, out).([]any)[0].(map[string]any)
 	if status != 0 || c["class"] != "diverging" || c["order"] != nil || c["extrapolated"] != nil || c["gci"] != nil || c["eext"] != nil {
 		t.Errorf("diverging: status %d, %v", status, c)
+	}
+}
+
+// TestGridsByRule: the command takes every rule, the dimension and the formal
+// order. Grids 2 and 3 of the family are those of Celik et al. as above; U of
+// each rule is that of its formula.
+func TestGridsByRule(t *testing.T) {
+	file := map[string]string{"g.csv": "N,phi\n18000,6.063\n8000,5.972\n4500,5.863\n"}
+	p, r := 1.5339690, 1.5
+	d := 0.091 / (math.Pow(r, p) - 1)
+	for _, row := range []struct {
+		flags []string
+		want  float64
+	}{
+		{nil, 1.25 * d},
+		{[]string{"--rule", "three"}, 1.25 * d},
+		{[]string{"--rule", "two"}, 3 * 0.091 / (r*r - 1)},
+		{[]string{"--rule", "two", "--formal", "1"}, 3 * 0.091 / (r - 1)},
+		{[]string{"--rule", "formal-order", "--formal", "1"}, 1.25 * 0.091 / (r - 1)},
+		{[]string{"--rule", "factor-of-safety"}, (2.45 - 0.85*p/2) * d},
+		{[]string{"--rule", "data range"}, 1.25 * d},
+	} {
+		status, out, errs := call(t, file, append([]string{"grids", "g.csv", "--dim=2", "--json"}, row.flags...)...)
+		if status != 0 {
+			t.Fatalf("%v: status %d, %s", row.flags, status, errs)
+		}
+		if u := decode(t, out).([]any)[0].(map[string]any)["u"].(float64); math.Abs(u-row.want) > 1e-6*row.want {
+			t.Errorf("%v: U %v, want %v", row.flags, u, row.want)
+		}
+	}
+	for _, flags := range [][]string{{"--rule", "best"}, {"--formal", "0"}, {"--formal", "x"}, {"--dim", "4"}} {
+		if status, _, errs := call(t, file, append([]string{"grids", "g.csv"}, flags...)...); status != 3 || errs == "" {
+			t.Errorf("%v: status %d, %q", flags, status, errs)
+		}
 	}
 }
 

@@ -56,15 +56,18 @@ func grids(v *invocation) (int, error) {
 	if err != nil {
 		return message.Refused, err
 	}
-	q := message.GridsRequest{Size: v.flags["size"], Value: v.flags["value"], Limits: limits}
-	switch v.flags["dim"] {
+	q := message.GridsRequest{Size: v.flags["size"], Value: v.flags["value"], Limits: limits, Rule: v.flags["rule"]}
+	switch text := v.flags["dim"]; text {
 	case "":
-	case "2":
-		q.Dim = 2
-	case "3":
-		q.Dim = 3
+	case "1", "2", "3":
+		q.Dim = int(text[0] - '0')
 	default:
-		return message.Refused, fmt.Errorf("--dim is 2 or 3, not %q", v.flags["dim"])
+		return message.Refused, fmt.Errorf("--dim is 1, 2 or 3, not %q", text)
+	}
+	if text := v.flags["formal"]; text != "" {
+		if q.Formal, err = number(text); err != nil || !(q.Formal >= 0.5 && q.Formal <= 10) {
+			return message.Refused, fmt.Errorf("--formal is a number from 0.5 to 10, not %q", text)
+		}
 	}
 	name, data, err := load(path)
 	if err != nil {
@@ -78,10 +81,10 @@ func grids(v *invocation) (int, error) {
 		return r.Status, v.printJSON(r.Grids)
 	}
 	w := tabwriter.NewWriter(v.out, 0, 0, 2, ' ', 0)
-	fmt.Fprintln(w, "table\tvalue\tclass\torder\textrapolated\te_a\te_ext\tGCI")
+	fmt.Fprintln(w, "table\tvalue\tclass\torder\textrapolated\te_a\te_ext\tGCI\tU (95 %)\trule")
 	for _, c := range *r.Grids {
-		fmt.Fprintf(w, "%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\n", c.Table, c.Value, c.Class, quantity.Text(float64(c.Order), 3), quantity.Text(float64(c.Extrapolated), 6),
-			percent(float64(c.Ea)), percent(float64(c.Eext)), percent(float64(c.GCI)))
+		fmt.Fprintf(w, "%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\n", c.Table, c.Value, c.Class, quantity.Text(float64(c.Order), 3), quantity.Text(float64(c.Extrapolated), 6),
+			percent(float64(c.Ea)), percent(float64(c.Eext)), percent(float64(c.GCI)), quantity.Text(float64(c.U), 3), c.Rule)
 	}
 	if err := w.Flush(); err != nil {
 		return message.Refused, err
