@@ -106,8 +106,8 @@ func TestFiguresAreWhole(t *testing.T) {
 	drawn := map[string]bool{"": true, "errorBar": true, "band": true, "intervalBar": true}
 	for _, theme := range []Theme{Light, Dark, Mono} {
 		figures, again := all(t, theme), all(t, theme)
-		if len(figures) != 11 {
-			t.Fatalf("%s: %d figures, want 11", theme, len(figures))
+		if len(figures) != 13 {
+			t.Fatalf("%s: %d figures, want 13", theme, len(figures))
 		}
 		ids := map[string]bool{}
 		for i, f := range figures {
@@ -163,6 +163,8 @@ func TestSeriesCounts(t *testing.T) {
 	// name: panels; marks, lines, custom series
 	want := map[string][4]int{
 		"taps-overlay":     {2, 2, 2, 4}, // D, E; S, zero; bars, u_num, u_val, 2 u_val
+		"taps-residuals":   {1, 1, 3, 1}, // residuals; zero, two limits; stems
+		"taps-correlation": {1, 1, 3, 0}, // the turn; statistic, 95 % and 1 % points
 		"friction-overlay": {2, 4, 4, 3}, // D, not compared, outside, E; S, zero, two limits; bars, u_val, k u_val
 		"friction-grids":   {2, 4, 1, 0}, // U, U without order, order, beyond; formal order
 		"drag-intervals":   {1, 1, 3, 2}, // E; zero, two limits; u_val, 2 u_val

@@ -30,8 +30,8 @@ type Table struct {
 const width = 760
 
 // Figures returns the figures of a cell in the order of reading: the monitors
-// of its runs, the comparison, the grid study behind u_num, and the sources of
-// u_val. Their IDs begin with id. A cell with none of them has none. It fails on
+// of its runs, the comparison, the parts of the joint statistic and what a
+// correlation does to it, the grid study behind u_num, and the sources of u_val. Their IDs begin with id. A cell with none of them has none. It fails on
 // a theme that does not exist.
 func Figures(c study.Cell, id string, t Theme) ([]Figure, error) {
 	figures := []Figure{}
@@ -48,6 +48,20 @@ func Figures(c study.Cell, id string, t Theme) ([]Figure, error) {
 	}
 	if drawable {
 		f, err := compare(c, id, t)
+		if err != nil {
+			return nil, err
+		}
+		figures = append(figures, f)
+	}
+	if hasResiduals(c) {
+		f, err := Residuals(c, id, t)
+		if err != nil {
+			return nil, err
+		}
+		figures = append(figures, f)
+	}
+	if j := c.Joint; j != nil && len(j.Correlations) > 0 {
+		f, err := Correlation(c, id, t)
 		if err != nil {
 			return nil, err
 		}

@@ -37,6 +37,15 @@ func taps(model string, shift float64) study.Cell {
 			UVal: number(uval), Ratio: number(math.Abs(e) / uval), Lo: number(e - 2*uval), Hi: number(e + 2*uval), Line: i + 2,
 		})
 	}
+	c.Joint = &study.Joint{Statistic: 31.4, N: 24, Pattern: "independent and common", Worst: 3.1, WorstAt: 0.6, Correlations: []study.CorrelationLine{{Source: "reference pressure", N: 24, Top: 36.41502850, Low: 10.85636148}}}
+	for i := range c.Stations {
+		c.Stations[i].Whitened = number(rounded(0.4 + 2.7*math.Sin(7*float64(c.Stations[i].X))))
+	}
+	for i := range 11 {
+		rho := float64(i) / 10
+		c.Joint.Correlations[0].Points = append(c.Joint.Correlations[0].Points, study.CorrelationPoint{Rho: number(rho), Statistic: number(rounded(52 - 60*rho + 42*rho*rho))})
+	}
+	c.Joint.Correlations[0].Flips = []number{0.3218}
 	for i := range 121 {
 		t := float64(i) / 120
 		c.Curve.X = append(c.Curve.X, file(rounded(t)))

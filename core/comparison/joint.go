@@ -34,7 +34,11 @@ type Joint struct {
 func (j Joint) P() float64 { return distuv.ChiSquared{K: float64(j.Rank)}.Survival(j.Statistic) }
 
 // ChiSquare95 returns the 95 % point of the chi-square distribution.
-func ChiSquare95(n int) float64 { return distuv.ChiSquared{K: float64(n)}.Quantile(0.95) }
+func ChiSquare95(n int) float64 { return ChiSquare(0.95, n) }
+
+// ChiSquare returns the value that a chi-square variable on n degrees of
+// freedom lies below with probability p.
+func ChiSquare(p float64, n int) float64 { return distuv.ChiSquared{K: float64(n)}.Quantile(p) }
 
 // Statistic returns e' V^-1 e for the covariance V of b, as the squared length
 // of the whitened e: linear in the number of stations where every station has a

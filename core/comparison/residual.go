@@ -9,6 +9,7 @@ import (
 // Residuals are differences freed of their covariance: each is a number of
 // standard uncertainties, and their squares sum to the joint statistic.
 type Residuals struct {
+	Joint    // the sum of their squares, and the rank
 	Whitened []float64
 	Worst    int // the station with the largest |Whitened|, the first of equal ones
 }
@@ -29,7 +30,8 @@ func Whiten(e []float64, b uncertainty.Budget) (Residuals, error) {
 		return Residuals{}, err
 	}
 	r := Residuals{Whitened: w.apply(e)}
-	if !finite(r.Whitened) {
+	r.Joint = Joint{dot(r.Whitened, r.Whitened), w.rank()}
+	if !finite([]float64{r.Statistic}) {
 		return Residuals{}, ErrFinite
 	}
 	for i, v := range r.Whitened {

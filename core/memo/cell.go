@@ -275,7 +275,8 @@ func (b *builder) joint(i int, c study.Cell) []Node {
 		words = append(words, say(" Without {}: {} on {}, 95 % point {}, {}.", text(left.Region), hundredths(left.Statistic, of("statistic")), count(left.N, of("n")),
 			hundredths(left.Reference, of("reference")), against(left.Exceeds))...)
 	}
-	return append(nodes, paragraph(words...))
+	nodes = append(nodes, paragraph(words...))
+	return append(nodes, b.around(i, c)...)
 }
 
 // crossings lists the changes of sign of a curve.

@@ -35,6 +35,7 @@ var exportedColumns = []struct {
 	{"ratio", func(_ *study.Cell, s *study.Station) string { return plain(s.Ratio) }},
 	{"lo", func(_ *study.Cell, s *study.Station) string { return plain(s.Lo) }},
 	{"hi", func(_ *study.Cell, s *study.Station) string { return plain(s.Hi) }},
+	{"whitened", func(_ *study.Cell, s *study.Station) string { return plain(s.Whitened) }},
 	{"unit", func(c *study.Cell, _ *study.Station) string { return guarded(c.Unit) }},
 	{"reference", func(c *study.Cell, _ *study.Station) string { return guarded(c.Reference) }},
 	{"line", func(_ *study.Cell, s *study.Station) string { return lineText(s.Line) }}, // of the reference file

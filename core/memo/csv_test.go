@@ -23,7 +23,7 @@ func TestStationsCSV(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	if want := "case,quantity,model,x,x_unit,s,d,e,u_d,u_num,u_interp,u_input,u_val,ratio,lo,hi,unit,reference,line"; strings.Join(rows[0], ",") != want {
+	if want := "case,quantity,model,x,x_unit,s,d,e,u_d,u_num,u_interp,u_input,u_val,ratio,lo,hi,whitened,unit,reference,line"; strings.Join(rows[0], ",") != want {
 		t.Errorf("columns %q", rows[0])
 	}
 	if len(rows) != 1+24+24+2 {

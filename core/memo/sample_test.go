@@ -65,7 +65,7 @@ func taps(model string, e []float64, joint study.Joint, requirement *study.Judge
 		const uVal = .0212602916
 		c.Stations = append(c.Stations, study.Station{
 			X: quantity.Written(x), S: number10(d + ei), D: quantity.Written(math.Round(d*1e4) / 1e4), E: number10(ei), UD: .0208806130, UNum: .004, UInterp: number10(.0001 + .00002*float64(i%5)),
-			UInput: quantity.None, UVal: uVal, Ratio: number10(math.Abs(ei) / uVal), Lo: number10(ei - 2*uVal), Hi: number10(ei + 2*uVal), Line: 5 + i,
+			UInput: quantity.None, UVal: uVal, Ratio: number10(math.Abs(ei) / uVal), Lo: number10(ei - 2*uVal), Hi: number10(ei + 2*uVal), Line: 5 + i, Whitened: number10(ei/uVal - .3),
 			Reading: map[bool]string{true: study.Between, false: study.WithinNoise}[math.Abs(ei) > uVal],
 		})
 		c.Grids.Local = append(c.Grids.Local, study.LocalGrid{X: number10(x), Class: map[bool]string{true: "oscillatory", false: "monotone"}[i%5 == 3], Order: map[bool]study.Number{true: quantity.None, false: number10(1.2 + .05*float64(i))}[i%5 == 3], U: .0046})
@@ -84,6 +84,10 @@ func taps(model string, e []float64, joint study.Joint, requirement *study.Judge
 	c.Joint.Scale, c.Joint.UScale, c.Joint.ScalePart, c.Joint.ShapePart, c.Joint.ShapeN, c.Joint.AtLeast = .0123, .0091, 1.8265, 22.9633, 22, .0514
 	c.Joint.Turns = []study.Turning{{Source: "reference pressure", Rho: .6842, At0: 50.98, At1: 27.05}}
 	c.Joint.Without = []study.Leaving{{Region: "nose", Statistic: 14.2, N: 15, Reference: 24.9958}}
+	c.Joint.Merged, c.Joint.Worst, c.Joint.WorstAt, c.Joint.Condition, c.Joint.Turning = 2, -2.3456, .61, 277.8, 3
+	c.Joint.Eigenvalues = []study.Number{0, .0451, 21.3}
+	c.Joint.Station = &study.Leaving{Region: "0.61", Statistic: 21.54, N: 23, Reference: 35.17}
+	c.Joint.Correlations = []study.CorrelationLine{{Source: "reference pressure", N: 24, Top: 36.415, Low: 10.856, Points: []study.CorrelationPoint{{Rho: 0, Statistic: 50.98}, {Rho: .5, Statistic: 9.42}, {Rho: 1, Statistic: 27.05}}, Flips: []study.Number{.0215}}}
 	c.Crossings = study.Crossings{Simulation: []study.Crossing{{X: .7123456789, Rising: true}}, Reference: []study.Crossing{{X: .6987654321, Rising: true}, {X: .95, Rising: false}}}
 	return c
 }
@@ -110,7 +114,7 @@ func drag() study.Cell {
 		Balances: []study.BalanceLine{{Grid: "G4", File: "c1-mass.dat", In: 1.204, Out: 1.2038, Net: .0002, Fraction: .000166113, Closed: true}, {File: "c1-heat.dat", In: 10, Out: 10.4, Net: -.4, Fraction: -.04}},
 		Open:     []study.Open{{Course: 4, Missing: "second requirement", Text: "The grid factor 1.15 is assumed. State why it may be used", Target: study.Target{Kind: "question", ID: "C1", Field: "k_num"}}},
 		Stations: []study.Station{{
-			X: quantity.Written(quantity.None), S: .02995, D: .0296, E: .00035, UD: .0004, UNum: .000357391304, UInterp: quantity.None, UInput: .00025, UVal: .000591741, Ratio: .5914751, Lo: -.000833482, Hi: .001533482, Line: 7, Reading: study.WithinNoise,
+			X: quantity.Written(quantity.None), S: .02995, D: .0296, E: .00035, UD: .0004, UNum: .000357391304, UInterp: quantity.None, UInput: .00025, UVal: .000591741, Ratio: .5914751, Lo: -.000833482, Hi: .001533482, Line: 7, Whitened: quantity.None, Reading: study.WithinNoise,
 		}},
 		Grids: &study.Grids{
 			Points: gridPoints(.03155, .03068, .03021, .02995), Dimension: 3, Class: "monotone", Ratio: .5531914894, Order: 2.0149, Formal: 2, Extrapolated: .02962,

@@ -311,13 +311,13 @@ func agreeTables(c *study.Cell) []Table {
 	if c.XUnit != "" && c.XUnit != "1" {
 		name += " [" + c.XUnit + "]"
 	}
-	t := Table{Title: "Stations", Head: []string{name, "S", "D", "E", "u_D", "u_num", "u_input", "u_val", "|E|/u_val", "line"}, Rows: [][]string{}}
+	t := Table{Title: "Stations", Head: []string{name, "S", "D", "E", "u_D", "u_num", "u_input", "u_val", "|E|/u_val", "whitened", "line"}, Rows: [][]string{}}
 	for i, s := range c.Stations {
 		if i == maxTableRows {
 			t.Title += ", the first " + strconv.Itoa(maxTableRows) + " (all are in the exported table)"
 			break
 		}
-		t.Rows = append(t.Rows, []string{written(s.X), text(s.S, 5), written(s.D), quantity.Signed(float64(s.E), 3), text(s.UD, 3), text(s.UNum, 3), text(s.UInput, 3), text(s.UVal, 3), text(s.Ratio, 3), strconv.Itoa(s.Line)})
+		t.Rows = append(t.Rows, []string{written(s.X), text(s.S, 5), written(s.D), quantity.Signed(float64(s.E), 3), text(s.UD, 3), text(s.UNum, 3), text(s.UInput, 3), text(s.UVal, 3), text(s.Ratio, 3), quantity.Signed(float64(s.Whitened), 3), strconv.Itoa(s.Line)})
 	}
 	tables := []Table{t}
 	if j := c.Joint; j != nil && !c.Scalar {
@@ -347,10 +347,31 @@ func jointTable(j *study.Joint) Table {
 	for _, w := range j.Without {
 		t.Rows = append(t.Rows, []string{"without " + w.Region, text(w.Statistic, 4), strconv.Itoa(w.N), text(w.Reference, 3)})
 	}
+	if left := j.Station; left != nil {
+		t.Rows = append(t.Rows, []string{"without the station at " + left.Region + ", the one that changes it most (leaving one out turns the conclusion at " + strconv.Itoa(j.Turning) + ")", text(left.Statistic, 4), strconv.Itoa(left.N), text(left.Reference, 3)})
+	}
+	if j.Worst.Known() {
+		t.Rows = append(t.Rows, []string{"largest whitened residual " + quantity.Signed(float64(j.Worst), 3) + ", at " + text(j.WorstAt, 4), "", "", ""})
+	}
+	if j.Condition.Known() {
+		t.Rows = append(t.Rows, []string{"condition of the matrix behind it " + text(j.Condition, 3) + eigenvalueWords(j), "", "", ""})
+	}
 	for _, turn := range j.Turns {
 		t.Rows = append(t.Rows, []string{"the conclusion turns where the correlation of " + turn.Source + " is " + text(turn.Rho, 3), "", "", ""})
 	}
 	return t
+}
+
+// eigenvalueWords lists the eigenvalues of a covariance that was treated whole.
+func eigenvalueWords(j *study.Joint) string {
+	if len(j.Eigenvalues) == 0 {
+		return ""
+	}
+	list := make([]string, len(j.Eigenvalues))
+	for i, v := range j.Eigenvalues {
+		list[i] = text(v, 3)
+	}
+	return "; eigenvalues of V on the unit diagonal " + strings.Join(list, ", ")
 }
 
 // scoreTables lists the measures with their scales and criteria, and the

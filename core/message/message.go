@@ -83,6 +83,7 @@ type Session struct {
 	theme    string
 	read     map[string]tablefile.File // by hash and name
 	memory   study.Memory              // of the last evaluation
+	near     study.Memory              // of the cell last shown
 	notices  []notice.Notice           // of opening the study
 }
 

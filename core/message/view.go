@@ -217,7 +217,8 @@ func (s *Session) view() (*View, error) {
 		return v, nil
 	}
 	c := &report.Cells[at]
-	c.Fragile = study.Alternatives(s.study, options, c) // of the others no word is shown
+	options.Memory = &s.near
+	*c = study.Closely(s.study, options, c) // of the others no word is shown
 	v.Selected = cellID(at)
 	v.Statement = sentence.Of(c)
 	v.Spoken = v.Statement.Text()

@@ -43,7 +43,7 @@ func (w *work) stationLines(e, ratio []float64) {
 	}
 	lines := make([]Station, len(w.x))
 	for i := range lines {
-		s := Station{
+		s := Station{Whitened: None,
 			X: Written(w.xUnit.FromSI(w.x[i])), S: w.yNumber(w.s[i]), D: Written(w.yUnit.FromSI(w.d[i])), E: w.step(e[i]),
 			UD: at(w.uD, i), UNum: at(w.uNum, i), UInput: at(w.uInput, i), UVal: at(w.uVal, i), UInterp: None,
 			Ratio: None, Lo: None, Hi: None, Line: w.reference.table.RowLine(w.rows[i]),
@@ -146,9 +146,10 @@ func (w *work) joint(e []float64) {
 	if w.uVal == nil || len(w.tested) == 0 {
 		return
 	}
-	tested := pick(e, w.tested)
-	budget := w.covariance(w.parts, w.tested)
-	q, err := comparison.Statistic(tested, budget)
+	w.mergeRepeated()
+	tested := pick(e, w.joined)
+	budget := w.covariance(w.parts, w.joined)
+	q, err := comparison.Whiten(tested, budget)
 	if err != nil {
 		w.tell(jointRefusal(err, len(tested)))
 		return
@@ -163,8 +164,10 @@ func (w *work) joint(e []float64) {
 			}
 		}),
 		Offset: None, UOffset: None, OffsetPart: None, Remainder: None, RemainderReference: None,
-		Scale: None, UScale: None, ScalePart: None, ShapePart: None, AtLeast: None, Turns: []Turning{}, Without: []Leaving{}}
+		Scale: None, UScale: None, ScalePart: None, ShapePart: None, AtLeast: None, Turns: []Turning{}, Without: []Leaving{},
+		Merged: len(w.tested) - len(w.joined), Worst: None, WorstAt: None, Condition: None, Eigenvalues: []Number{}, Correlations: []CorrelationLine{}}
 	w.cell.Joint = j
+	w.residuals(j, q)
 	w.doubtCorrelation(tested)
 	if q.Rank < len(tested) {
 		w.tell(notice.New("covariance-rank", q.Rank, len(tested), q.Rank))
@@ -211,21 +214,23 @@ func (w *work) split(j *Joint, e []float64, budget uncertainty.Budget) {
 // found count, the correlations at which the conclusion turns, and the
 // statistic without each region.
 func (w *work) lookAround(j *Joint, e []float64, budget uncertainty.Budget) {
-	if d, ok := comparison.Decompose(e, pick(w.s, w.tested), budget); ok {
+	if d, ok := comparison.Decompose(e, pick(w.s, w.joined), budget); ok {
 		j.Scale, j.UScale = Number(d.Scale), Number(d.UScale)
 		j.ScalePart, j.ShapePart, j.ShapeN = Number(d.ScalePart), Number(d.ShapePart), d.ShapeDegrees
 		j.ScaleResolved = exceeds(math.Abs(d.Scale), float64(w.choices.K*d.UScale))
 	}
-	found := w.cell.Summary.Tested - w.cell.Summary.WithinKUVal
+	found := len(w.joined) - metric.Within(comparison.Ratio(e, budget.Total()), w.choices.K)
 	if found == 0 {
 		j.AtLeast = 1
 	} else if c, err := comparison.BeyondByChance(budget, w.choices.K, found, samplingSeed); err == nil {
 		j.AtLeast = Number(c.AtLeast)
 	}
-	if len(e) <= mostTurned {
+	if len(e) > 1 && len(e) <= mostTurned {
 		w.turnings(j, e)
 	}
 	w.withoutRegions(j, e, budget)
+	w.withoutStations(j, e, budget)
+	w.conditioning(j, budget)
 }
 
 // samplingSeed makes sampled numbers the same in every evaluation.
@@ -243,10 +248,11 @@ func (w *work) turnings(j *Joint, e []float64) {
 			continue
 		}
 		rest := append(append([]part{}, w.parts[:i]...), w.parts[i+1:]...)
-		curve, err := comparison.Correlate(e, w.covariance(rest, w.tested), pick(p.source.U, w.tested), 10)
+		curve, err := comparison.Correlate(e, w.covariance(rest, w.joined), pick(p.source.U, w.joined), correlationSteps)
 		if err != nil {
-			continue
+			continue // told with the statistic itself
 		}
+		w.correlationLine(j, p.line.Name, curve)
 		first, last := curve.Points[0], curve.Points[len(curve.Points)-1]
 		if n := len(curve.Flips); n > 0 { // the one nearest to what is declared
 			j.Turns = append(j.Turns, Turning{Source: p.line.Name, Rho: Number(curve.Flips[n-1]), At0: Number(first.Statistic), At1: Number(last.Statistic)})
@@ -261,7 +267,7 @@ func (w *work) withoutRegions(j *Joint, e []float64, budget uncertainty.Budget) 
 	for _, r := range w.q.Regions {
 		lo, hi := w.xUnit.ToSI(r.From), w.xUnit.ToSI(r.To)
 		var rows []int
-		for n, i := range w.tested {
+		for n, i := range w.joined {
 			if w.x[i] >= lo && w.x[i] <= hi {
 				rows = append(rows, n)
 			}
@@ -278,8 +284,7 @@ func (w *work) withoutRegions(j *Joint, e []float64, budget uncertainty.Budget) 
 		return // told with the statistic itself
 	}
 	for n, q := range left {
-		reference := comparison.ChiSquare95(q.Rank)
-		j.Without = append(j.Without, Leaving{Region: names[n], Statistic: Number(q.Statistic), N: q.Rank, Reference: Number(reference), Exceeds: exceeds(q.Statistic, reference)})
+		j.Without = append(j.Without, w.leaving(names[n], q))
 	}
 }
 
@@ -292,7 +297,7 @@ func (w *work) alternative(e []float64, change func(*part)) Number {
 	for i := range parts {
 		change(&parts[i])
 	}
-	q, err := comparison.Statistic(e, w.covariance(parts, w.tested))
+	q, err := comparison.Statistic(e, w.covariance(parts, w.joined))
 	if err != nil {
 		return None
 	}

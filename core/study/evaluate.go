@@ -87,16 +87,21 @@ func Evaluate(s *Study, options Options) Report {
 	return r
 }
 
-// Alternatives returns the choices that would change an outcome of a cell of
-// the study's report: what Evaluate lists for every cell when it is asked to.
-func Alternatives(s *Study, options Options, c *Cell) []Fragility {
+// Closely returns a cell of the study's report as Evaluate gives it when it is
+// asked for alternatives, for a host that shows one cell at a time.
+func Closely(s *Study, options Options, c *Cell) Cell {
 	q := s.Question(c.Case, c.Quantity)
 	if q == nil || c.Summary == nil {
-		return []Fragility{}
+		return *c
 	}
+	options.Alternatives = true
 	e := begin(s, options)
 	e.readFiles(&Report{})
-	return e.fragile(q, c.Model, *c)
+	if m := options.Memory; m != nil {
+		m.begin()
+		defer m.end()
+	}
+	return e.remembered(q, c.Model)
 }
 
 // readFiles reads every file once and lists it with its uses.
@@ -252,6 +257,7 @@ type work struct {
 	uInput   []float64
 	uVal     []float64
 	tested   []int // stations with a known u_val
+	joined   []int // of these, the stations of the joint statistic: every reading once
 }
 
 // run is one simulation with the number of cells of its grid.

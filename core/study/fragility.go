@@ -85,6 +85,10 @@ func (e *evaluation) fragile(q *Question, model string, have Cell) []Fragility {
 				list = append(list, Fragility{Change: "without " + r.Region, What: "joint statistic", From: have.jointWord(), Outcome: word.jointWord(), Detail: "statistic " + quantity.Text(float64(r.Statistic), 3)})
 			}
 		}
+		if j.Turning > 0 {
+			word := Cell{Joint: &Joint{Exceeds: !j.Exceeds}}
+			list = append(list, Fragility{Change: "one station left out, any of " + quantity.Counted(j.Turning, "station"), What: "joint statistic", From: have.jointWord(), Outcome: word.jointWord(), Detail: "largest change without " + j.Station.Region})
+		}
 		for _, t := range j.Turns {
 			word := Cell{Joint: &Joint{Exceeds: !j.Exceeds}}
 			list = append(list, Fragility{Change: "correlation of " + t.Source + " below " + quantity.Text(float64(t.Rho), 3), What: "joint statistic", From: have.jointWord(), Outcome: word.jointWord(), Detail: "statistic " + quantity.Text(float64(t.At0), 3) + " when independent"})

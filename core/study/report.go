@@ -167,6 +167,10 @@ type Station struct {
 	Hi      Number           `json:"hi"`
 	Line    int              `json:"line"` // line of the reference file
 	Reading string           `json:"reading"`
+	// Whitened is what E is worth once its covariance is taken out, in standard
+	// uncertainties; the squares sum to the joint statistic. Null at a station
+	// that the statistic does not count.
+	Whitened Number `json:"whitened"`
 }
 
 // ScoreLine is one difference measure with its scale and the criteria of its
@@ -290,6 +294,32 @@ type Joint struct {
 	AtLeast       Number    `json:"at_least"` // probability of at least the found number beyond k u_val, by sampling
 	Turns         []Turning `json:"turns"`    // common sources of the data whose correlation turns the conclusion
 	Without       []Leaving `json:"without"`  // the statistic without each region
+
+	Merged       int               `json:"merged"`       // stations that repeat a reading, each counted once
+	Worst        Number            `json:"worst"`        // the largest whitened residual, with its sign
+	WorstAt      Number            `json:"worst_at"`     // its station
+	Condition    Number            `json:"condition"`    // of the matrix that the statistic rests on
+	Eigenvalues  []Number          `json:"eigenvalues"`  // of V scaled to the unit diagonal, ascending, where V was treated whole: the ends of the list where it is long
+	Correlations []CorrelationLine `json:"correlations"` // the statistic against the correlation of a common source of the data
+	Station      *Leaving          `json:"station"`      // without the one station that changes it most; null where not asked
+	Turning      int               `json:"turning"`      // stations each of which, left out alone, turns the conclusion
+}
+
+// CorrelationLine is the joint statistic against the assumed correlation of
+// one source: a part rho of its variance shared, the rest independent.
+type CorrelationLine struct {
+	Source string             `json:"source"`
+	N      int                `json:"n"`         // rank
+	Top    Number             `json:"reference"` // 95 % point
+	Low    Number             `json:"low"`       // 1 % point
+	Points []CorrelationPoint `json:"points"`
+	Flips  []Number           `json:"flips"` // where the conclusion changes
+}
+
+// CorrelationPoint is the statistic at one correlation, 0 to 1.
+type CorrelationPoint struct {
+	Rho       Number `json:"rho"`
+	Statistic Number `json:"statistic"`
 }
 
 // Turning is a source whose assumed correlation rho, 0 to 1, turns the
@@ -303,7 +333,7 @@ type Turning struct {
 
 // Leaving is the statistic with the stations of a region left out.
 type Leaving struct {
-	Region    string `json:"region"`
+	Region    string `json:"region"` // or the place of a single station
 	Statistic Number `json:"statistic"`
 	N         int    `json:"n"`
 	Reference Number `json:"reference"`

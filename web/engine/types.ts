@@ -488,6 +488,7 @@ export interface Station {
   hi: number | null;
   line: number;
   reading: string;
+  whitened: number | null;
 }
 
 export interface Excluded {
@@ -554,6 +555,14 @@ export interface Joint {
   at_least: number | null;
   turns: Turning[] | null;
   without: Leaving[] | null;
+  merged: number;
+  worst: number | null;
+  worst_at: number | null;
+  condition: number | null;
+  eigenvalues: (number | null)[] | null;
+  correlations: CorrelationLine[] | null;
+  station: Leaving | null;
+  turning: number;
 }
 
 export interface ScoreLine {
@@ -705,6 +714,15 @@ export interface Leaving {
   exceeds: boolean;
 }
 
+export interface CorrelationLine {
+  source: string;
+  n: number;
+  reference: number | null;
+  low: number | null;
+  points: CorrelationPoint[] | null;
+  flips: (number | null)[] | null;
+}
+
 export interface CriterionLine {
   name: string;
   low: number | null;
@@ -733,4 +751,9 @@ export interface LocalGrid {
   class: string;
   order: number | null;
   u: number | null;
+}
+
+export interface CorrelationPoint {
+  rho: number | null;
+  statistic: number | null;
 }
