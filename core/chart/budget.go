@@ -70,6 +70,9 @@ func Budget(c study.Cell, id string, t Theme) (Figure, error) {
 	if err != nil {
 		return Figure{}, err
 	}
+	if c.Shared != nil {
+		c.Stations = leftInE(c.Stations)
+	}
 	columns := shareColumns(c)
 	height := 20 + pileLine*min(len(c.Sources)+1, mostSources+len(sides))
 	if len(columns) > 0 {
@@ -100,6 +103,17 @@ func Budget(c study.Cell, id string, t Theme) (Figure, error) {
 		ID: id + "-budget", Title: "Sources of u_val of " + subject(c) + ", " + simulation(c), Caption: budgetCaption(c, columns), Alt: budgetAlt(c),
 		Height: top + height + foot, Table: budgetTable(c),
 	}.finish(p.option)
+}
+
+// leftInE puts what the data leave in u_val in the place of u_D, for cells with
+// sources that act on both sides.
+func leftInE(stations []study.Station) []study.Station {
+	left := slices.Clone(stations)
+	for i, s := range left {
+		rest := square2(s.UVal) - square2(s.UInput) - square2(s.UNum) - square2(s.UInterp)
+		left[i].UD = quantity.Number(math.Sqrt(max(rest, 0)))
+	}
+	return left
 }
 
 // segment is a piece of the bar, in percent.

@@ -163,6 +163,25 @@ var table = map[string]row{
 	"joint-stations":        {Note, "%d stations are too many to leave out one by one; no single station was looked for. Name regions to leave out."},
 	"joint-low-tail":        {Note, "The joint statistic lies below the 1 %% point: the stated uncertainties look too large, or correlated more than declared."},
 
+	// Sources of uncertainty, inputs and bars.
+	"u-unknown":         {Ask, "The size of %s is marked as unknown. Unknown is not zero: u_val and every statement on it are withheld. Give a value when there is one."},
+	"u-form":            {Ask, "The coverage %q of %s does not go with a %s distribution. No statement is made until it does: change one of the two, or give the degrees of freedom."},
+	"u-input-none":      {Note, "The inputs were declared free of uncertainty: %s"},
+	"input-sensitivity": {Ask, "What %s does to the quantity is not known: there is no run with it changed, and no sensitivity was entered. Its uncertainty is not counted. Give one of the two."},
+	"input-shared":      {Ask, "%s acts on the data too, but what it does to them was not entered. Its uncertainty is not counted. Enter the change of the data for one unit of it."},
+	"input-grids":       {Ask, "The runs with %s changed are on the grids %s and %s: their difference holds that of the grids. It was used as it is. Give runs of one grid."},
+	"shared-twice":      {Ask, "%s is a source of the data and an input that acts on both sides: its error counts twice. Remove one of the two lines."},
+	"source-shared":     {Note, "The error of %s acts on both sides: of its standard uncertainty %s in the data, %s is left in E. Only that is in u_val."},
+	"source-interval":   {Note, "%s is known as an interval only: it widens the interval of the model error by %s (root mean square) at both ends and is neither in u_val nor in the joint statistic."},
+	"members-few":       {Ask, "%s holds %d runs with sampled inputs: two are needed for a scatter. Nothing was taken from it. Check the column of values."},
+	"members-mean":      {Note, "The mean of the %d runs with sampled inputs of %s differs from the compared run by up to %s. The compared run was not moved."},
+	"limits-crossed":    {Stop, "A limit in column %q lies %s its value at %d stations (first at %s): limits or half-widths? Columns swapped? The column was not used."},
+	"sides-unequal":     {Note, "The two sides of %s differ at %s: the side facing E is used, and the mean of the data lies up to %s off their value. The total is made by sampling."},
+	"sides-data":        {Ask, "%s has two sides, which only a source of the data can have. The lower one was used. Enter one half-width."},
+	"sampled-none":      {Note, "No interval was made by sampling: %s."},
+	"sampled-cap":       {Note, "Sampling ended at %d draws before the second digit had settled: its last digit may still change."},
+	"degrees-used":      {Note, "The factor k = %s follows from %s effective degrees of freedom at 95 %%, as was chosen."},
+
 	// Grid studies.
 	"grid-few":            {Note, "%d usable grids: the order cannot be observed. At least three different cell counts are needed."},
 	"grid-one":            {Ask, "One grid: the grid uncertainty is unknown. A comparison is possible, a validation statement is not."},

@@ -56,9 +56,10 @@ func (w *work) stationLines(e, ratio []float64) {
 			s.UInterp = w.step(w.uInterp[i])
 		}
 		if ratio != nil && !math.IsNaN(ratio[i]) {
+			half := float64(k*w.uVal[i]) + w.boundAt(i)
 			s.Ratio = Number(ratio[i])
-			s.Lo, s.Hi = w.step(e[i]-float64(k*w.uVal[i])), w.step(e[i]+float64(k*w.uVal[i]))
-			s.Reading = reading(ratio[i], k)
+			s.Lo, s.Hi = w.step(e[i]-half), w.step(e[i]+half)
+			s.Reading = reading(max(math.Abs(e[i])-w.boundAt(i), 0)/w.uVal[i], k)
 		}
 		lines[i] = s
 	}
@@ -131,6 +132,7 @@ func (w *work) shares() {
 		}
 		w.cell.Sources = append(w.cell.Sources, line)
 	}
+	w.cell.Sources = append(w.cell.Sources, w.aparts...)
 }
 
 func squares(u []float64, rows []int) float64 {
@@ -157,7 +159,7 @@ func (w *work) joint(e []float64) {
 	reference := comparison.ChiSquare95(q.Rank)
 	j := &Joint{Statistic: Number(q.Statistic), N: q.Rank, P: Number(q.P()), Reference: Number(reference),
 		Exceeds: exceeds(q.Statistic, reference), Pattern: w.pattern(),
-		Independent: w.alternative(tested, func(p *part) { p.source = uncertainty.Source{U: p.source.U} }),
+		Independent: w.alternative(tested, func(p *part) { p.source, p.members = uncertainty.Source{U: p.source.U}, nil }),
 		NumShared: w.alternative(tested, func(p *part) {
 			if p.line.Of == OfNumerical && !p.interp {
 				p.source = uncertainty.Source{U: p.source.U, Common: true}
@@ -308,7 +310,7 @@ func (w *work) alternative(e []float64, change func(*part)) Number {
 func (w *work) pattern() string {
 	common, independent, other := false, false, false
 	for _, p := range w.parts {
-		switch patternOf(p.source) {
+		switch p.line.Pattern {
 		case Common:
 			common = true
 		case Independent:

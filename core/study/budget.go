@@ -3,6 +3,7 @@ package study
 import (
 	"cmp"
 	"math"
+	"slices"
 	"strconv"
 
 	"weirmark/core/notice"
@@ -18,6 +19,27 @@ type part struct {
 	degrees float64 // of freedom; +Inf where u is taken as known
 	interp  bool    // of the interpolation to the stations
 	aside   bool    // does not by itself make a numerical uncertainty
+
+	own     []float64            // of a source of the data that acts on both sides: its uncertainty there; source is what is left in E
+	members []uncertainty.Source // of sampled runs: the sources whose sum source.U is
+	sides   []uncertainty.TwoPiece
+	form    uncertainty.Distribution // of a scalar, for sampling; empty: normal
+}
+
+// sources returns what the part adds to the covariance of E.
+func (p *part) sources() []uncertainty.Source {
+	if p.members != nil {
+		return p.members
+	}
+	return []uncertainty.Source{p.source}
+}
+
+// ofSide is the standard uncertainty of the part on its own side.
+func (p *part) ofSide() uncertainty.Source {
+	if p.own != nil {
+		return uncertainty.Source{U: p.own}
+	}
+	return p.source
 }
 
 // budget collects the sources of the cell at its stations.
@@ -26,6 +48,7 @@ func (w *work) budget() {
 		w.missingParts()
 		return
 	}
+	w.findInputRuns()
 	w.dataColumn()
 	w.replicates()
 	for i := range w.q.Sources {
@@ -34,6 +57,7 @@ func (w *work) budget() {
 			w.source(i, s)
 		}
 	}
+	w.members()
 	w.gridPart()
 	w.interpolationPart()
 	w.missingParts()
@@ -75,7 +99,10 @@ func (w *work) dataColumn() {
 	if c.uOpen && c.slip.UFactor.Given() {
 		w.need(2, true, "the coverage of u_D", slipTarget(c.slip, "u_factor"), "u-coverage", c.slip.U.Column.Value)
 	}
-	w.add(OfData, "column "+c.slip.U.Column.Value, "at each station, "+coverageWords(c.slip.UFactor.Value), "stated in "+w.e.study.fileName(c.slip), u, false, c.uOpen)
+	p := w.add(OfData, "column "+c.slip.U.Column.Value, "at each station, "+coverageWords(c.slip.UFactor.Value), "stated in "+w.e.study.fileName(c.slip), u, false, c.uOpen)
+	if c.uPlus != nil {
+		w.twoSided(p, u, pick(c.uPlus, w.rows))
+	}
 }
 
 // replicates takes the scatter of repeated readings of a scalar.
@@ -87,7 +114,10 @@ func (w *work) replicates() {
 	readings := known(inUnit(c.y, c.yUnit, w.yUnit))
 	if len(readings) < 2 {
 		if c.u != nil && len(c.u) == 1 {
-			w.add(OfData, "column "+c.slip.U.Column.Value, coverageWords(c.slip.UFactor.Value), "stated in "+w.e.study.fileName(c.slip), c.u, false, c.uOpen)
+			p := w.add(OfData, "column "+c.slip.U.Column.Value, coverageWords(c.slip.UFactor.Value), "stated in "+w.e.study.fileName(c.slip), c.u, false, c.uOpen)
+			if c.uPlus != nil {
+				w.twoSided(p, c.u, c.uPlus)
+			}
 		}
 		return
 	}
@@ -107,40 +137,81 @@ func (w *work) fewReadings(n int) {
 // source takes one entered line of the budget.
 func (w *work) source(at int, s *Source) {
 	target := Target{Kind: "source", ID: w.q.id(), Field: strconv.Itoa(at)}
-	coverage := Target{Kind: "source", ID: w.q.id(), Field: target.Field + ".coverage"}
-	k, knownCoverage := uncertainty.CoverageFactor(s.Coverage.Value)
-	if !knownCoverage {
-		k = 1
-		w.need(2, true, "the coverage of "+s.Name, coverage, "u-coverage", s.Name)
-	} else if s.Coverage.Open() {
-		w.need(2, true, "acceptance of the coverage of "+s.Name, coverage, "guess-open", "The coverage", s.Name, s.Coverage.Value)
+	if s.Unknown {
+		w.unknown = append(w.unknown, s.Of)
+		w.need(2, true, "the size of "+s.Name, Target{Kind: "source", ID: w.q.id(), Field: target.Field + ".value"}, "u-unknown", s.Name)
+		return
 	}
+	k, knownCoverage := w.divisor(s, target)
 	if s.Value < 0 {
 		n := notice.New("u-negative", quantity.Text(s.Value, 6), s.Name)
 		w.tell(n)
 		w.stop(2, "a valid "+s.Name, target, n)
 		return
 	}
-	u, ok := w.sourceValues(s, k, target)
+	var source uncertainty.Source
+	var ok bool
+	if s.Input != "" {
+		source, ok = w.inputSource(s, k, target)
+	} else {
+		source, ok = w.entered(s, k, target)
+	}
 	if !ok {
 		return
 	}
-	w.blanks(u, s.Name, target)
-	w.zeros(u, s.Name, target)
-	source, ok := w.patterned(s, u, target)
-	if !ok {
+	if s.Form == Interval {
+		w.apart(s, source.U)
 		return
 	}
 	if s.Of == OfNumerical {
 		w.tell(notice.New("grid-declared", w.q.label(), cmp.Or(s.Origin, "no reason was given.")))
 		if w.choices.NumShared {
-			source = uncertainty.Source{U: u, Common: true}
+			source = uncertainty.Source{U: source.U, Common: true}
 		}
 	}
 	p := w.addSource(s.Of, s.Name, w.sourceText(s), s.Origin, source, !knownCoverage || s.Coverage.Open())
+	p.form = uncertainty.Distribution(s.Form)
 	if s.Degrees > 0 {
 		p.degrees = s.Degrees
 	}
+	if s.Upper != nil && s.Column == "" {
+		w.asymmetric(p, s, k, target)
+	}
+	if s.Shared && s.Of == OfData {
+		w.share(p, s, k)
+	}
+}
+
+// divisor returns what the half-width of a source is divided by, and asks
+// where that is not known. Limits of an interval are not divided.
+func (w *work) divisor(s *Source, target Target) (k float64, known bool) {
+	if s.Form == Interval {
+		return 1, true
+	}
+	coverage := Target{Kind: "source", ID: w.q.id(), Field: target.Field + ".coverage"}
+	k, known = uncertainty.Divisor(s.Coverage.Value, uncertainty.Distribution(s.Form), s.Degrees)
+	switch _, plain := uncertainty.CoverageFactor(s.Coverage.Value); {
+	case !known && plain:
+		w.need(2, true, "the coverage of "+s.Name, coverage, "u-form", s.Coverage.Value, s.Name, s.Form)
+		k = 1
+	case !known:
+		w.need(2, true, "the coverage of "+s.Name, coverage, "u-coverage", s.Name)
+		k = 1
+	case s.Coverage.Open():
+		w.need(2, true, "acceptance of the coverage of "+s.Name, coverage, "guess-open", "The coverage", s.Name, s.Coverage.Value)
+	}
+	return k, known
+}
+
+// entered returns a source that is stated as an uncertainty of the quantity.
+func (w *work) entered(s *Source, k float64, target Target) (uncertainty.Source, bool) {
+	u, ok := w.sourceValues(s, k, target)
+	if !ok {
+		return uncertainty.Source{}, false
+	}
+	w.blanks(u, s.Name, target)
+	w.zeros(u, s.Name, target)
+	return w.patterned(s, u, target)
 }
 
 // patterned gives a source its correlation between stations.
@@ -148,11 +219,7 @@ func (w *work) patterned(s *Source, u []float64, target Target) (uncertainty.Sou
 	switch s.Pattern {
 	case Common:
 		if s.Basis == OfReading { // one unknown factor acts on all readings, with their signs
-			signed := make([]float64, len(u))
-			for i, v := range u {
-				signed[i] = math.Copysign(v, w.d[i])
-			}
-			u = signed
+			u = signedLike(u, w.d)
 		}
 		return uncertainty.Source{U: u, Common: true}, true
 	case Grouped:
@@ -179,6 +246,15 @@ func (w *work) patterned(s *Source, u []float64, target Target) (uncertainty.Sou
 		return uncertainty.Source{U: u, X: w.x, Length: w.xUnit.StepToSI(s.Length)}, true
 	}
 	return uncertainty.Source{U: u}, true
+}
+
+// signedLike returns u with the signs of values.
+func signedLike(u, values []float64) []float64 {
+	signed := make([]float64, len(u))
+	for i, v := range u {
+		signed[i] = math.Copysign(v, values[i])
+	}
+	return signed
 }
 
 // zeros asks about uncertainties of exactly zero.
@@ -221,17 +297,24 @@ func (w *work) sourceValues(s *Source, k float64, target Target) ([]float64, boo
 			w.need(2, true, "the full scale of "+s.Name, target, "field-missing", "The full scale", s.Name)
 		}
 		return uncertainty.Scaled(uncertainty.OfFullScale(len(w.d), s.Value/100, w.yUnit.StepToSI(s.FullScale)), k), true
+	case s.Basis == OfCounts:
+		if !(s.PerCount > 0) {
+			w.need(2, true, "the size of one count of "+s.Name, target, "field-missing", "The size of one count", s.Name)
+		}
+		return uncertainty.Scaled(uncertainty.OfCounts(len(w.d), s.Value, w.yUnit.StepToSI(s.PerCount)), k), true
 	}
 	return uncertainty.Constant(len(w.d), w.yUnit.StepToSI(s.Value)/k), true
 }
 
 // sourceColumn returns a column of half-widths at the stations: of the
-// simulation, resampled, for numerical sources that name one there, else of
-// the reference.
+// simulation, resampled, for numerical sources and inputs that name one there,
+// else of the reference.
 func (w *work) sourceColumn(s *Source) ([]float64, error) {
-	if run := w.finest(); s.Of == OfNumerical && run != nil {
+	if run := w.finest(); s.Of != OfData && run != nil {
 		if column, err := run.table.Column(s.Column); err == nil {
-			w.tell(notice.New("u-num-column", column.Name, "simulation"))
+			if s.Of == OfNumerical {
+				w.tell(notice.New("u-num-column", column.Name, "simulation"))
+			}
 			if run.scalar() {
 				return steps(column.Values, w.yUnit, []int{0}), nil
 			}
@@ -268,9 +351,18 @@ func steps(values []float64, u unit, rows []int) []float64 {
 // sourceText says a source in words.
 func (w *work) sourceText(s *Source) string {
 	value := quantity.Typed(s.Value)
+	if s.Upper != nil {
+		value = "−" + value + " +" + quantity.Typed(*s.Upper)
+	}
 	switch {
 	case s.Column != "":
 		value = "column " + s.Column
+	case s.Input != "" && s.Basis == OfReading:
+		value += " % of " + s.Input + " = " + valueUnit(s.Nominal, s.Unit)
+	case s.Input != "":
+		value = valueUnit(s.Value, s.Unit) + " of " + s.Input
+	case s.Basis == OfCounts:
+		value += " counts of " + quantity.Typed(s.PerCount) + w.cell.UnitSuffix()
 	case s.Basis == OfReading:
 		value += " % of reading"
 	case s.Basis == OfFullScale:
@@ -282,7 +374,21 @@ func (w *work) sourceText(s *Source) string {
 	if s.Random {
 		kind = "random"
 	}
-	return value + ", " + coverageWords(s.Coverage.Value) + ", " + kind
+	if s.Form == Interval {
+		return "± " + value + ", an interval and no standard uncertainty, " + kind
+	}
+	words := value + ", " + coverageWords(s.Coverage.Value) + ", "
+	if s.Form != "" {
+		words += s.Form + ", "
+	}
+	words += kind
+	if s.Type != "" {
+		words += ", type " + s.Type
+	}
+	if s.Shared {
+		words += ", acts on both sides"
+	}
+	return words
 }
 
 // coverageWords says a coverage in words.
@@ -328,19 +434,31 @@ func (w *work) has(of string) bool {
 			return true
 		}
 	}
+	for _, line := range w.aparts {
+		if line.Of == of && of == OfInput { // an interval says what is known of an input
+			return true
+		}
+	}
 	return false
 }
 
+// isUnknown reports whether a source of a side is marked as unknown.
+func (w *work) isUnknown(of string) bool { return slices.Contains(w.unknown, of) }
+
 // missingParts lists what the budget lacks.
 func (w *work) missingParts() {
-	if w.reference != nil && len(w.x) > 0 && !w.has(OfData) {
+	if w.reference != nil && len(w.x) > 0 && !w.has(OfData) && !w.isUnknown(OfData) {
 		w.need(2, true, "the uncertainty of the data", Target{Kind: "source", ID: w.q.id(), Field: OfData}, "u-missing")
 	}
-	if w.finest() != nil && !w.has(OfNumerical) && !w.blocked {
+	if w.finest() != nil && !w.has(OfNumerical) && !w.blocked && !w.isUnknown(OfNumerical) {
 		w.need(1, true, "the numerical uncertainty", Target{Kind: "source", ID: w.q.id(), Field: OfNumerical}, w.gridsMissing())
 	}
-	if w.finest() != nil && len(w.x) > 0 && !w.has(OfInput) {
-		w.need(2, false, "the input uncertainty", Target{Kind: "source", ID: w.q.id(), Field: OfInput}, "u-input-missing")
+	if w.finest() != nil && len(w.x) > 0 && !w.has(OfInput) && !w.isUnknown(OfInput) {
+		if w.q.NoInput != "" {
+			w.tell(notice.New("u-input-none", w.q.NoInput))
+		} else {
+			w.need(2, false, "the input uncertainty", Target{Kind: "source", ID: w.q.id(), Field: OfInput}, "u-input-missing")
+		}
 	}
 }
 
@@ -360,16 +478,17 @@ func (w *work) total() {
 		var sources []uncertainty.Source
 		for _, p := range w.parts {
 			if p.line.Of == of && p.interp == interp {
-				sources = append(sources, p.source)
+				sources = append(sources, p.ofSide())
 			}
 		}
-		if sources == nil {
+		if sources == nil || w.isUnknown(of) {
 			return nil
 		}
 		return uncertainty.Combine(n, sources).Total()
 	}
 	w.uD, w.uNum, w.uInput = side(OfData, false), side(OfNumerical, false), side(OfInput, false)
-	if w.uD == nil || !w.has(OfNumerical) && !w.e.options.Partial {
+	w.bounding()
+	if w.uD == nil || !w.has(OfNumerical) && !w.e.options.Partial || len(w.unknown) > 0 {
 		return
 	}
 	w.uVal = w.covariance(w.parts, all(n)).Total()
@@ -382,25 +501,31 @@ func (w *work) total() {
 	w.degrees()
 }
 
-// degrees gives the effective degrees of freedom of a scalar, and the factor
-// that 95 % would need.
+// degrees gives the effective degrees of freedom, of a curve the least over its
+// tested stations, and the factor that 95 % would need with them; the factor of
+// the statement follows where that was chosen.
 func (w *work) degrees() {
-	if !w.cell.Scalar {
-		return
-	}
-	var terms []uncertainty.Term
-	for _, p := range w.parts {
-		terms = append(terms, uncertainty.Term{U: p.source.U[0], Degrees: p.degrees})
-	}
-	nu, err := uncertainty.EffectiveDegrees(terms)
-	if err != nil || math.IsInf(nu, 1) {
-		return
+	nu := math.Inf(1)
+	for _, i := range w.tested {
+		var terms []uncertainty.Term
+		for _, p := range w.parts {
+			terms = append(terms, uncertainty.Term{U: math.Abs(p.source.U[i]), Degrees: p.degrees})
+		}
+		if at, err := uncertainty.EffectiveDegrees(terms); err == nil {
+			nu = min(nu, at)
+		}
 	}
 	k, ok := uncertainty.StudentFactor(0.95, nu)
-	if !ok {
+	if math.IsInf(nu, 1) || !ok {
 		return
 	}
 	w.cell.Degrees, w.cell.K95 = Number(nu), Number(k)
+	if w.choices.KStudent {
+		w.choices.K = quantity.Round(k, 3)
+		w.cell.Choices.K = w.choices.K
+		w.tell(notice.New("degrees-used", quantity.Typed(w.choices.K), quantity.Text(nu, 2)))
+		return
+	}
 	if exceeds(k, 1.05*w.choices.K) {
 		w.tell(notice.New("degrees-few", quantity.Text(nu, 2), quantity.Text(k, 3), quantity.Typed(w.choices.K)))
 	}
@@ -437,9 +562,9 @@ func all(n int) []int {
 
 // covariance returns the budget of parts at some of the stations.
 func (w *work) covariance(parts []part, at []int) uncertainty.Budget {
-	sources := make([]uncertainty.Source, len(parts))
-	for i, p := range parts {
-		sources[i] = p.source
+	sources := make([]uncertainty.Source, 0, len(parts))
+	for i := range parts {
+		sources = append(sources, parts[i].sources()...)
 	}
 	whole := uncertainty.Combine(len(w.x), sources)
 	if len(at) == len(w.x) {

@@ -29,7 +29,7 @@ func (w *work) byDensity(sides ...*curve) {
 			continue
 		}
 		for _, r := range w.curves(c) {
-			r.y, r.u = times(r.y, rho), times(r.u, rho)
+			r.y, r.u, r.uPlus = times(r.y, rho), times(r.u, rho), times(r.uPlus, rho)
 			r.yUnit = axis{unit: quantity.Unit{Symbol: "Pa", Dimension: other.yUnit.unit.Dimension, Factor: 1}, known: true}
 		}
 		if c == w.reference || w.reference == nil {

@@ -19,6 +19,7 @@ type curve struct {
 	x     []float64 // nil for scalars
 	y     []float64
 	u     []float64 // standard, independent between stations; nil when there is no column
+	uPlus []float64 // of the upper side where the bars are two columns; u is then the lower
 	uOpen bool      // u is there but its coverage is not known
 	xUnit axis
 	yUnit axis
@@ -175,18 +176,31 @@ func inSI(values []float64, unit quantity.Unit) []float64 {
 	return out
 }
 
-// uncertainty reads the uncertainty column: half-widths in the unit of the
-// quantity, or percent of the reading where its unit is % and the quantity's
-// is not.
+// uncertainty reads the uncertainty column, and that of the upper side where
+// there is one: half-widths in the unit of the quantity, or percent of the
+// reading where their unit is % and the quantity's is not; or limits.
 func (l *loader) uncertainty(c *curve) {
-	slip := c.slip
-	column, err := l.table.Column(slip.U.Column.Value)
-	if err != nil {
-		l.tell(asNotice(err))
+	k, known := uncertainty.CoverageFactor(c.slip.UFactor.Value)
+	if !known {
+		k, c.uOpen = 1, true
+	}
+	if c.u = l.bars(c, c.slip.U, k, -1); c.u == nil || !c.slip.Upper.Column.Given() {
 		return
 	}
+	c.uPlus = l.bars(c, c.slip.Upper, k, 1)
+}
+
+// bars reads one side of the bars, above the values (1) or below (-1), as
+// standard uncertainties; nil where it is refused.
+func (l *loader) bars(c *curve, use ColumnUse, k, side float64) []float64 {
+	slip := c.slip
+	column, err := l.table.Column(use.Column.Value)
+	if err != nil {
+		l.tell(asNotice(err))
+		return nil
+	}
 	step, percent := c.yUnit.unit, false
-	if symbol := slip.U.Unit.Value; symbol != "" && symbol != slip.Y.Unit.Value {
+	if symbol := use.Unit.Value; symbol != "" && symbol != slip.Y.Unit.Value {
 		unit, err := quantity.Parse(symbol)
 		switch {
 		case err != nil:
@@ -195,22 +209,21 @@ func (l *loader) uncertainty(c *curve) {
 			percent = true
 		case !unit.Same(c.yUnit.unit):
 			l.tell(notice.New("unit-dimension", slip.Y.Column.Value, slip.Y.Unit.Value, column.Name, symbol))
-			return
+			return nil
 		default:
 			step = unit
 		}
 	}
-	k, known := uncertainty.CoverageFactor(slip.UFactor.Value)
-	if !known {
-		k, c.uOpen = 1, true
+	if slip.BarsAs.Value == BarsLimits {
+		return l.limits(c, column, inSI(column.Values, step), k, side)
 	}
 	fullScale, _ := strconv.ParseFloat(slip.UBasis.Value, 64) // a word is no full scale
-	c.u = make([]float64, len(column.Values))
+	all := make([]float64, len(column.Values))
 	zeros := 0
 	for i, v := range column.Values {
 		if v < 0 {
 			l.tell(notice.New("u-negative", quantity.Typed(v), place(c, i)).At(l.table.RowLine(i)))
-			return
+			return nil
 		}
 		if v == 0 {
 			zeros++
@@ -222,11 +235,34 @@ func (l *loader) uncertainty(c *curve) {
 		case percent:
 			u = math.Abs(c.y[i]) * v / 100
 		}
-		c.u[i] = u / k
+		all[i] = u / k
 	}
 	if zeros > 0 {
 		l.tell(notice.New("u-zero", zeros))
 	}
+	return all
+}
+
+// limits turns limits, in SI, into half-widths; those on the wrong side of
+// their value are refused.
+func (l *loader) limits(c *curve, column tablefile.Column, values []float64, k, side float64) []float64 {
+	all := make([]float64, len(values))
+	wrong, first := 0, 0
+	for i, v := range values {
+		all[i] = side * (v - c.y[i]) / k
+		if all[i] < 0 {
+			if wrong == 0 {
+				first = i
+			}
+			wrong++
+		}
+	}
+	if wrong > 0 {
+		words := map[float64]string{-1: "above", 1: "below"}
+		l.tell(notice.New("limits-crossed", column.Name, words[side], wrong, place(c, first)).At(l.table.RowLine(first)))
+		return nil
+	}
+	return all
 }
 
 // place names row i of a curve for a reader.

@@ -214,7 +214,9 @@ func (e *evaluation) workWith(w *work) Cell {
 		w.family()
 		w.settle()
 		w.budget()
+		w.inputForm()
 		w.agree()
+		w.sample()
 		w.doubtComparison()
 		w.otherReferences()
 		w.scores()
@@ -258,6 +260,11 @@ type work struct {
 	uVal     []float64
 	tested   []int // stations with a known u_val
 	joined   []int // of these, the stations of the joint statistic: every reading once
+
+	unknown []string     // sides with a source that is marked as unknown
+	aparts  []SourceLine // sources known as intervals only
+	bound   []float64    // what these can do to E at the stations; nil where there are none
+	changed []inputRun
 }
 
 // run is one simulation with the number of cells of its grid.
@@ -504,6 +511,10 @@ func (p *Slip) fields() []slipField {
 		all = append(all,
 			slipField{path: "u.column", name: "column of uncertainty", field: p.U.Column, needed: true, course: 2},
 			slipField{path: "u_factor", name: "coverage of " + p.U.Column.Value, field: p.UFactor, needed: true, course: 2})
+		if p.Upper.Column.Given() {
+			all = append(all, slipField{path: "upper.column", name: "column of the upper bar", field: p.Upper.Column, needed: true, course: 2},
+				slipField{path: "bars_as", name: "meaning of the bars", field: p.BarsAs, needed: true, course: 2})
+		}
 		if p.percentU() {
 			all = append(all, slipField{path: "u_basis", name: "basis of " + p.U.Column.Value, field: p.UBasis, needed: true, course: 2})
 		}
@@ -522,6 +533,9 @@ func (p *Slip) fields() []slipField {
 	if p.Derive.Value == DeriveLift {
 		all = append(all, slipField{path: "contour.column", name: "second coordinate", field: p.Contour.Column, needed: true, course: 2},
 			slipField{path: "contour.unit", name: "unit of the second coordinate", field: p.Contour.Unit, needed: true, course: 2, unitOf: cmp.Or(p.Contour.Column.Value, "the second coordinate")})
+	}
+	if p.Role.Value == InputRun {
+		all = append(all, slipField{path: "input", name: "input of the run", field: p.Input, needed: true, course: 2}, slipField{path: "input_at", name: "value of the input", field: p.InputAt, needed: true, course: 2})
 	}
 	if p.Role.Value == GridValues {
 		all = append(all, slipField{path: "size.column", name: "column of cell counts", field: p.Size.Column, needed: true, course: 1})

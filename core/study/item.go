@@ -112,7 +112,7 @@ func (m *Matching) enter(field, value string) (string, error) {
 	case "data":
 		return number(&m.Data, value, -1e30, 1e30)
 	case "sensitivity":
-		return m.enterSensitivity(value)
+		return optional(&m.Sensitivity, value, -1e30)
 	case "handling":
 		switch value {
 		case "", Corrected, AsInput, Tolerated:
@@ -120,24 +120,6 @@ func (m *Matching) enter(field, value string) (string, error) {
 		}
 	}
 	return "", refuse(field, value)
-}
-
-// enterSensitivity keeps "not known" apart from zero.
-func (m *Matching) enterSensitivity(value string) (string, error) {
-	before := ""
-	if m.Sensitivity != nil {
-		before = quantity.Typed(*m.Sensitivity)
-	}
-	if strings.TrimSpace(value) == "" {
-		m.Sensitivity = nil
-		return before, nil
-	}
-	v := 0.0
-	if _, err := number(&v, value, -1e30, 1e30); err != nil {
-		return before, err
-	}
-	m.Sensitivity = &v
-	return before, nil
 }
 
 // cardFields are the reference quantities of a case that are entered by name.

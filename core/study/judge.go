@@ -2,6 +2,7 @@ package study
 
 import (
 	"math"
+	"slices"
 
 	"weirmark/core/adequacy"
 	"weirmark/core/quantity"
@@ -27,9 +28,12 @@ func (w *work) judge() {
 		return
 	}
 	limits := make([]float64, len(w.tested))
-	e, u := make([]float64, len(w.tested)), pick(w.uVal, w.tested)
+	e, u := make([]float64, len(w.tested)), slices.Clone(pick(w.uVal, w.tested))
 	for n, i := range w.tested {
 		e[n] = w.s[i] - w.d[i]
+		if b := w.boundAt(i); b > 0 { // the interval of E is wider by it at both ends
+			u[n] += b / w.choices.K
+		}
 		limits[n] = w.yUnit.StepToSI(r.Value)
 		if r.Percent {
 			limits[n] = math.Abs(w.d[i]) * r.Value / 100
@@ -58,10 +62,11 @@ func rounded(values []float64) []float64 {
 // resolve says what uncertainty would show the requirement at the deciding
 // station, E unchanged.
 func (w *work) resolve(j *Judgement, e float64, i int, limit float64) {
-	needed, possible := adequacy.Needed(e, w.choices.K, limit)
+	bound := w.boundAt(i)
+	needed, possible := adequacy.Needed(math.Abs(e)+bound, w.choices.K, limit)
 	j.Toward = Shown
 	if !possible {
-		needed, j.Toward = (math.Abs(e)-limit)/w.choices.K, NotMet
+		needed, j.Toward = (math.Abs(e)-bound-limit)/w.choices.K, NotMet
 		if !(needed > 0) {
 			return
 		}

@@ -208,10 +208,14 @@ var fieldNames = map[string]string{
 	"y.column": "column of values", "y.unit": "unit of values", "x.column": "column of stations", "x.unit": "unit of stations",
 	"u.column": "column of uncertainty", "u.unit": "unit of uncertainty", "u_factor": "coverage", "u_basis": "basis of the uncertainty", "size.column": "column of cell counts", "cells": "number of cells",
 	"choices.k": "k", "choices.k_num": "k_num", "choices.bounded": "bounded rule", "choices.rule": "rule of the grid study", "choices.formal": "formal order", "choices.dimension": "dimension",
-	"choices.interpolation": "interpolation", "choices.u_interp": "interpolation uncertainty", "choices.num_shared": "u_num shared",
+	"choices.interpolation": "interpolation", "choices.u_interp": "interpolation uncertainty", "choices.num_shared": "u_num shared", "choices.k_student": "k by degrees of freedom", "choices.sampled": "interval by sampling",
 	"requirement.value": "requirement", "requirement.percent": "basis of the requirement", "requirement.who": "who set the requirement", "requirement.date": "date of the requirement",
 	"scores.dispersion": "scores of the dispersion field", "scores.threshold": "threshold of the scores", "scores.fraction": "fraction of the hit rate", "scores.allowance": "allowance of the hit rate",
-	"pattern": "pattern of the names", "reference_id": "name of the reference", "prepared.name": "prepared by", "prepared.date": "prepared on", "checked.name": "checked by", "checked.date": "checked on",
+	"pattern": "pattern of the names",
+	"input":   "input of the run", "input_at": "value of the input", "upper.column": "column of the upper bar", "upper.unit": "unit of the upper bar", "bars_as": "what the bars hold",
+	"levels.facility": "column of the facility", "levels.day": "column of the day", "levels.rig": "column of the set-up", "levels.run": "column of the run",
+	"digitised": "record of the digitising", "no_input": "why the inputs have no uncertainty", "resolution": "resolution of the data", "flow_rate": "stated flow rate", "flow_rate_u": "uncertainty of the stated flow rate",
+	"reference_id": "name of the reference", "prepared.name": "prepared by", "prepared.date": "prepared on", "checked.name": "checked by", "checked.date": "checked on",
 	"approved.name": "approved by", "approved.date": "approved on",
 }
 
@@ -260,6 +264,10 @@ func (p *Slip) entry(path string) *Field {
 		"role": &p.Role, "case": &p.Case, "quantity": &p.Quantity, "model": &p.Model, "grid": &p.Grid, "cells": &p.Cells,
 		"x.column": &p.X.Column, "x.unit": &p.X.Unit, "y.column": &p.Y.Column, "y.unit": &p.Y.Unit,
 		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit, "axis": &p.Axis, "branch": &p.Branch, "derive": &p.Derive, "contour.column": &p.Contour.Column, "contour.unit": &p.Contour.Unit, "u_basis": &p.UBasis,
+		"input": &p.Input, "input_at": &p.InputAt, "upper.column": &p.Upper.Column, "upper.unit": &p.Upper.Unit, "bars_as": &p.BarsAs, "flow_rate": &p.FlowRate, "flow_rate_u": &p.FlowRateU,
+		"levels.facility": &p.Levels.Facility, "levels.day": &p.Levels.Day, "levels.rig": &p.Levels.Rig, "levels.run": &p.Levels.Run,
+		"digitised": &p.Digitised.Is, "digitised.x_scale": &p.Digitised.XScale, "digitised.x_zero": &p.Digitised.XZero, "digitised.y_scale": &p.Digitised.YScale,
+		"digitised.y_zero": &p.Digitised.YZero, "digitised.line": &p.Digitised.Line, "digitised.pixel": &p.Digitised.Pixel,
 	}[path]
 }
 
@@ -330,10 +338,11 @@ func (s *Study) text(t Target) *string {
 		if !ok || i >= len(q.Sources) {
 			return nil
 		}
-		return map[string]*string{"name": &q.Sources[i].Name, "origin": &q.Sources[i].Origin, "model": &q.Sources[i].Model, "column": &q.Sources[i].Column, "group": &q.Sources[i].Group}[field]
+		return map[string]*string{"name": &q.Sources[i].Name, "origin": &q.Sources[i].Origin, "model": &q.Sources[i].Model, "column": &q.Sources[i].Column, "group": &q.Sources[i].Group,
+			"input": &q.Sources[i].Input, "unit": &q.Sources[i].Unit}[field]
 	}
 	if t.Kind == "question" {
-		return map[string]*string{"symbol": &q.Symbol, "condition": &q.Condition, "reference_id": &q.ReferenceID}[t.Field]
+		return map[string]*string{"symbol": &q.Symbol, "condition": &q.Condition, "reference_id": &q.ReferenceID, "no_input": &q.NoInput}[t.Field]
 	}
 	return nil
 }
@@ -393,6 +402,10 @@ func (q *Question) enter(path, value string) (string, error) {
 		return c.enterRule(value)
 	case "choices.bounded":
 		return yesNo(&c.Bounded, value)
+	case "choices.k_student":
+		return yesNo(&c.KStudent, value)
+	case "choices.sampled":
+		return yesNo(&c.Sampled, value)
 	case "choices.u_interp":
 		return yesNo(&c.UInterp, value)
 	case "choices.num_shared":
@@ -406,6 +419,8 @@ func (q *Question) enter(path, value string) (string, error) {
 		return before, nil
 	case "downward":
 		return yesNo(&q.Downward, value)
+	case "resolution":
+		return oneOf(&q.Resolution, value, "", Counted)
 	}
 	return "", refuse(path, value)
 }
@@ -442,43 +457,6 @@ func (q *Question) enterRequirement(path, value string) (string, error) {
 		return before, nil
 	}
 	return "", refuse("requirement."+path, value)
-}
-
-func (q *Question) enterSource(path, value string) (string, error) {
-	i, field, ok := sourceField(path)
-	if !ok || i >= len(q.Sources) {
-		return "", refuse(path, value)
-	}
-	s := &q.Sources[i]
-	oneOf := func(text *string, allowed ...string) (string, error) {
-		for _, a := range allowed {
-			if value == a {
-				before := *text
-				*text = value
-				return before, nil
-			}
-		}
-		return "", refuse(field, value)
-	}
-	switch field {
-	case "value":
-		return number(&s.Value, value, 0, 1e30)
-	case "basis":
-		return oneOf(&s.Basis, Absolute, OfReading, OfFullScale)
-	case "pattern":
-		return oneOf(&s.Pattern, Independent, Common, Grouped, Length)
-	case "full_scale":
-		return number(&s.FullScale, value, 0, 1e30)
-	case "length":
-		return number(&s.Length, value, 0, 1e30)
-	case "degrees":
-		return number(&s.Degrees, value, 0, 1e9)
-	case "of":
-		return oneOf(&s.Of, OfData, OfInput, OfNumerical)
-	case "random":
-		return yesNo(&s.Random, value)
-	}
-	return "", refuse(field, value)
 }
 
 // number reads a number between two bounds.

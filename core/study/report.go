@@ -112,8 +112,15 @@ type Cell struct {
 	Balances    []BalanceLine `json:"balances"`
 	Grids       *Grids        `json:"grids"`
 	Sources     []SourceLine  `json:"sources"`
-	Degrees     Number        `json:"degrees"` // effective degrees of freedom of a scalar; null where all are taken as known
-	K95         Number        `json:"k_95"`    // factor that 95 % needs with them
+	Inputs      []InputLine   `json:"inputs,omitempty"`
+	InputForm   string        `json:"input_form,omitempty"` // InputsCounted or InputsNominal, where compared
+	Members     *MemberLine   `json:"members,omitempty"`    // runs with sampled inputs
+	Shared      []SharedLine  `json:"shared,omitempty"`     // sources that act on both sides
+	Bound       *BoundLine    `json:"bound,omitempty"`      // what sources known as intervals do
+	Sampled     *SampledLine  `json:"sampled,omitempty"`    // the interval of the model error by sampling
+	Bounding    *Bounding     `json:"bounding,omitempty"`   // what u_D would change, where it is unknown
+	Degrees     Number        `json:"degrees"`              // effective degrees of freedom of a scalar; null where all are taken as known
+	K95         Number        `json:"k_95"`                 // factor that 95 % needs with them
 	Requirement *Judgement    `json:"requirement"`
 	Fragile     []Fragility   `json:"fragile"` // alternatives that change an outcome word
 
@@ -445,6 +452,78 @@ type SourceLine struct {
 	Pattern string `json:"pattern"`
 	Origin  string `json:"origin"`
 	Open    bool   `json:"open"`
+}
+
+// Whether the uncertainty of the inputs is in u_val: E then tells of the model
+// with its inputs as far as they are known, else of model and inputs together.
+const (
+	InputsCounted = "counted"
+	InputsNominal = "nominal"
+)
+
+// InputLine is an input of the simulation with its uncertainty, in its own
+// unit, and how it acts on the quantity. Sensitivities of a curve are root mean
+// squares over its stations.
+type InputLine struct {
+	Name            string `json:"name"`
+	Unit            string `json:"unit"`
+	Nominal         Number `json:"nominal"`
+	U               Number `json:"u"` // standard; of an interval its half-width
+	Sensitivity     Number `json:"sensitivity"`
+	DataSensitivity Number `json:"data_sensitivity"`
+	Method          string `json:"method"` // where the sensitivity is from
+	Shared          bool   `json:"shared"`
+	Text            string `json:"text"`
+	Origin          string `json:"origin"`
+}
+
+// MemberLine is what runs with sampled inputs come to.
+type MemberLine struct {
+	N    int    `json:"n"`
+	U    Number `json:"u"`    // deviation of the runs, root mean square over the stations
+	Mean Number `json:"mean"` // of their means less the compared run, the largest by magnitude
+	Rank int    `json:"rank"` // greatest rank of their covariance
+}
+
+// SharedLine is a source of the data that acts on the simulation too.
+type SharedLine struct {
+	Source string `json:"source"`
+	U      Number `json:"u"`    // in the data
+	Left   Number `json:"left"` // in E
+}
+
+// BoundLine is the largest part that sources known as intervals can have in E:
+// it widens the interval of the model error at both ends.
+type BoundLine struct {
+	Half Number `json:"half"`
+	At   Number `json:"at"` // station, for curves
+}
+
+// SampledLine is the model error by sampling, at the one value or at the
+// station of the largest |E|/u_val: two-piece normal bars, few readings and other
+// forms as they are. Plus, Minus and Shift are of the sources with two sides
+// together; null where there are none.
+type SampledLine struct {
+	At      Number `json:"at"`
+	Value   Number `json:"value"` // mean, of few readings the median
+	U       Number `json:"u"`     // null where few readings leave an interval only
+	Lo      Number `json:"lo"`
+	Hi      Number `json:"hi"`
+	Level   Number `json:"level"`
+	Draws   int    `json:"draws"`
+	Settled bool   `json:"settled"`
+	Minus   Number `json:"minus"`
+	Plus    Number `json:"plus"`
+	Shift   Number `json:"shift"` // of the mean of the data against their value
+}
+
+// Bounding says how far a word rests on the unknown u_D.
+type Bounding struct {
+	What  string `json:"what"` // requirement or sign
+	Word  string `json:"word"` // with u_D = 0
+	UD    Number `json:"u_d"`  // up to which the word stays; null where no u_D changes it
+	At    Number `json:"at"`   // station, for curves
+	After string `json:"after"`
 }
 
 // Judgement holds the requirement against the interval of the model error.

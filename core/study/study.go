@@ -87,6 +87,9 @@ const (
 	Simulation = "simulation"  // a curve, or one scalar, of one run
 	GridValues = "grid values" // scalars of several grids: size and value columns
 	Reference  = "reference"   // measured or other reference data
+	InputRun   = "input run"   // a simulation with one input changed
+	Members    = "members"     // simulations with sampled inputs: a column each from the column of values on, or a row each of a scalar
+	Replicates = "replicates"  // repeated readings at the stations of a reference
 	Monitor    = "monitor"     // a quantity of one run over iterations or time
 	Balance    = "balance"     // what enters a run (column of stations) and what leaves it (column of values)
 	Unused     = "unused"
@@ -120,6 +123,43 @@ type Slip struct {
 	Contour  ColumnUse `json:"contour"`  // second coordinate of a section, for branches and DeriveLift
 	Size     ColumnUse `json:"size"`     // cell counts, for grid values
 	Axis     Field     `json:"axis"`     // of a monitor: iterations or samples in time
+
+	Input     Field      `json:"input,omitzero"`       // of an input run: the name of the input
+	InputAt   Field      `json:"input_at,omitzero"`    // and its value in this run
+	Upper     ColumnUse  `json:"upper,omitzero"`       // column of the upper half-width, or upper limit; U is then the lower
+	BarsAs    Field      `json:"bars_as,omitzero"`     // BarsWidths or BarsLimits
+	Levels    Levels     `json:"levels,omitzero"`      // of repeated readings
+	Digitised Digitising `json:"digitised,omitzero"`   // of a curve read off a figure
+	FlowRate  Field      `json:"flow_rate,omitzero"`   // what the integral of the reference over its stations should be, in SI
+	FlowRateU Field      `json:"flow_rate_u,omitzero"` // standard uncertainty of it
+}
+
+// What two columns of bars hold.
+const (
+	BarsWidths = "half-widths"
+	BarsLimits = "limits"
+)
+
+// Levels are the columns that tell the levels of replication apart, from the
+// outermost inwards; readings with the same entries are repeats.
+type Levels struct {
+	Facility Field `json:"facility,omitzero"`
+	Day      Field `json:"day,omitzero"`
+	Rig      Field `json:"rig,omitzero"` // set-up: the model mounted anew
+	Run      Field `json:"run,omitzero"`
+}
+
+// Digitising is the record of a curve read off a figure: standard
+// uncertainties of the calibration of both axes, the scales in percent, and the
+// widths of line and pixel, all in the units of the slip.
+type Digitising struct {
+	Is     Field `json:"is,omitzero"` // "yes"
+	XScale Field `json:"x_scale,omitzero"`
+	XZero  Field `json:"x_zero,omitzero"`
+	YScale Field `json:"y_scale,omitzero"`
+	YZero  Field `json:"y_zero,omitzero"`
+	Line   Field `json:"line,omitzero"`
+	Pixel  Field `json:"pixel,omitzero"`
 }
 
 // ColumnUse is a column and the unit its numbers are in.
@@ -160,10 +200,15 @@ type Question struct {
 	Conditions  []Matching   `json:"conditions,omitempty"`
 	Scores      *Scoring     `json:"scores,omitempty"`
 	Regions     []Region     `json:"regions,omitempty"`
+	NoInput     string       `json:"no_input,omitempty"`   // why the inputs are taken to have no uncertainty; empty: not decided
+	Resolution  string       `json:"resolution,omitempty"` // Counted: the resolution seen in the data is a source
 	// Answers holds, by the code of a finding, what a person answered to it.
 	// An answered finding is no open point any more; the memo prints both.
 	Answers map[string]string `json:"answers,omitempty"`
 }
+
+// Counted is the choice to make a source of what was found.
+const Counted = "counted"
 
 // Scoring asks for the measures of a field beside the usual ones.
 type Scoring struct {
@@ -254,15 +299,25 @@ const (
 	Absolute    = "absolute" // in the unit of the data
 	OfReading   = "percent of reading"
 	OfFullScale = "percent of full scale"
+	OfCounts    = "counts" // of PerCount each
 	Independent = "independent"
 	Common      = "common" // of a percentage of the reading: a common scale
 	Grouped     = "group"  // shared within groups of stations
 	Length      = "length" // with a correlation length
 )
 
+// Interval is the form of a source known only to lie within its limits: it has
+// no standard uncertainty and widens the interval of the model error.
+const Interval = "interval"
+
 // Source is one line of the uncertainty budget. Its standard uncertainty is
-// Value / CoverageFactor(Coverage). A column of a numerical source is looked
-// up in the simulation first, any other in the reference.
+// Value / Divisor(Coverage, Form, Degrees). A column of a numerical source or
+// of an input is looked up in the simulation first, any other in the reference.
+//
+// A source that names an Input is an uncertainty of that input, in the unit of
+// the input; runs with the input changed, or the entered sensitivity, bring it
+// to the quantity. A source that is Shared acts on both sides, and only what is
+// left of it in E = S - D counts.
 type Source struct {
 	Name      string  `json:"name"`
 	Of        string  `json:"of"`
@@ -278,19 +333,42 @@ type Source struct {
 	Length    float64 `json:"length,omitempty"`     // in the unit of the stations
 	Degrees   float64 `json:"degrees,omitempty"`    // of freedom; 0: taken as known
 	Origin    string  `json:"origin"`               // where the number comes from, or the reason it was entered
+
+	Unknown  bool     `json:"unknown,omitempty"`   // its size is not known: a value, and no zero
+	Upper    *float64 `json:"upper,omitempty"`     // half-width above the data where it differs; Value is then the one below
+	PerCount float64  `json:"per_count,omitempty"` // one count, in the unit of the data
+	Form     string   `json:"form,omitempty"`      // a distribution of package uncertainty, or Interval; empty: as the coverage says
+	Type     string   `json:"type,omitempty"`      // TypeA or TypeB
+	Shared   bool     `json:"shared,omitempty"`    // acts on the simulation too (of an input: on the data too)
+
+	Input   string  `json:"input,omitempty"` // the input it is an uncertainty of
+	Unit    string  `json:"unit,omitempty"`  // of the input, for the reader
+	Nominal float64 `json:"nominal,omitempty"`
+	// Change of the simulation, and of the data, for one unit of the input; of
+	// shared sources of the data Sensitivity is the change of S for one of D.
+	Sensitivity     *float64 `json:"sensitivity,omitempty"`
+	DataSensitivity *float64 `json:"data_sensitivity,omitempty"`
 }
+
+// Types of evaluation of a source: from a series of readings, or by other means.
+const (
+	TypeA = "A"
+	TypeB = "B"
+)
 
 // Choices are the decisions whose effect is shown at once.
 type Choices struct {
-	K             float64            `json:"k"`              // coverage factor of the statement
-	KNum          float64            `json:"k_num"`          // U_num to u_num
-	Bounded       bool               `json:"bounded"`        // bounded rule of the grid study
-	Rule          string             `json:"rule,omitempty"` // of the grid study of one value, a name of refinement.Rules; empty: the three finest grids
-	Formal        float64            `json:"formal"`         // formal order of the scheme
-	Dimension     int                `json:"dimension"`      // 2 or 3
-	Interpolation interpolate.Method `json:"interpolation"`  // of the simulation to the stations
-	UInterp       bool               `json:"u_interp"`       // count the interpolation uncertainty
-	NumShared     bool               `json:"num_shared"`     // u_num fully shared between stations
+	K             float64            `json:"k"`                   // coverage factor of the statement
+	KNum          float64            `json:"k_num"`               // U_num to u_num
+	Bounded       bool               `json:"bounded"`             // bounded rule of the grid study
+	Rule          string             `json:"rule,omitempty"`      // of the grid study of one value, a name of refinement.Rules; empty: the three finest grids
+	Formal        float64            `json:"formal"`              // formal order of the scheme
+	Dimension     int                `json:"dimension"`           // 2 or 3
+	Interpolation interpolate.Method `json:"interpolation"`       // of the simulation to the stations
+	UInterp       bool               `json:"u_interp"`            // count the interpolation uncertainty
+	NumShared     bool               `json:"num_shared"`          // u_num fully shared between stations
+	KStudent      bool               `json:"k_student,omitempty"` // K follows from the effective degrees of freedom at 95 %
+	Sampled       bool               `json:"sampled,omitempty"`   // the interval of the model error by sampling too
 }
 
 // DefaultChoices are the choices of a new question.

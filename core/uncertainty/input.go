@@ -82,3 +82,19 @@ func Bounds(sensitivities [][]float64, halfWidths []float64) []float64 {
 	}
 	return sum
 }
+
+// Between returns the sensitivities at a value from runs below and above it at
+// unequal steps,
+//
+//	(below^2 (plus - base) + above^2 (base - minus))/(below above (below + above)),
+//
+// exact for a parabola, as Central is at equal steps. Both steps are > 0. Source:
+// the parabola through three points.
+func Between(minus, base, plus []float64, below, above float64) []float64 {
+	c := make([]float64, len(base))
+	for i := range c {
+		rise := float64(below*below*(plus[i]-base[i])) + float64(above*above*(base[i]-minus[i]))
+		c[i] = rise / (below * above * (below + above))
+	}
+	return c
+}

@@ -368,6 +368,13 @@ export interface Cell {
   balances: BalanceLine[] | null;
   grids: Grids | null;
   sources: SourceLine[] | null;
+  inputs?: InputLine[];
+  input_form?: string;
+  members?: MemberLine;
+  shared?: SharedLine[];
+  bound?: BoundLine;
+  sampled?: SampledLine;
+  bounding?: Bounding;
   degrees: number | null;
   k_95: number | null;
   requirement: Judgement | null;
@@ -471,6 +478,8 @@ export interface Choices {
   interpolation: Method;
   u_interp: boolean;
   num_shared: boolean;
+  k_student?: boolean;
+  sampled?: boolean;
 }
 
 export interface Station {
@@ -655,6 +664,59 @@ export interface SourceLine {
   pattern: string;
   origin: string;
   open: boolean;
+}
+
+export interface InputLine {
+  name: string;
+  unit: string;
+  nominal: number | null;
+  u: number | null;
+  sensitivity: number | null;
+  data_sensitivity: number | null;
+  method: string;
+  shared: boolean;
+  text: string;
+  origin: string;
+}
+
+export interface MemberLine {
+  n: number;
+  u: number | null;
+  mean: number | null;
+  rank: number;
+}
+
+export interface SharedLine {
+  source: string;
+  u: number | null;
+  left: number | null;
+}
+
+export interface BoundLine {
+  half: number | null;
+  at: number | null;
+}
+
+export interface SampledLine {
+  at: number | null;
+  value: number | null;
+  u: number | null;
+  lo: number | null;
+  hi: number | null;
+  level: number | null;
+  draws: number;
+  settled: boolean;
+  minus: number | null;
+  plus: number | null;
+  shift: number | null;
+}
+
+export interface Bounding {
+  what: string;
+  word: string;
+  u_d: number | null;
+  at: number | null;
+  after: string;
 }
 
 export interface Judgement {
