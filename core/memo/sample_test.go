@@ -35,7 +35,8 @@ func taps(model string, e []float64, joint study.Joint, requirement *study.Judge
 			{Name: "RMSE / range of D", Value: .0213, Scale: "range of D 1.53", Criteria: []study.CriterionLine{{Name: "house limit", Low: 0, High: .05, Met: true, Scope: "upper branch", Source: "common practice, no source"}, {Name: "narrow", Low: 0, High: .02, Scope: "upper branch", Source: "common practice, no source"}}},
 			{Name: "hit rate", Value: .875, Scale: "25 %", Word: "of the stations"},
 		},
-		Regions:     []study.RegionLine{{Name: "nose", From: .02, To: .3, N: 9, Bias: .0123, RMSE: .0177, HitRate: .777, Beyond: 1}},
+		Regions:     []study.RegionLine{{Name: "nose", From: .02, To: .3, N: 9, Bias: .0123, RMSE: .0177, HitRate: .777, Beyond: 1}, {Name: "suction", Sign: study.SignNegative, From: quantity.None, To: quantity.None, N: 7, Bias: -.0045, RMSE: .0166, HitRate: .714, Beyond: 2}},
+		Sampled:     []study.SampledLine{{Name: "RMSE", Value: .031, U: .0062, Floor: .0203, FloorHi: .0377}, {Name: "largest |E|", Value: .0409, U: .0101, Floor: .0291, FloorHi: .0401, Above: true}},
 		Provisional: true, StationsAll: 26, Outside: []study.Number{0.981, 0.995},
 		Excluded:    []study.Excluded{{X: .55, D: -.12, Line: 30, Why: "tap leaked, see the log of the test", Late: true}, {X: .56, D: -.1, Line: 31, Why: "tap leaked"}},
 		Open:        []study.Open{{Course: 0, Missing: "monitor", Text: "No monitor of the run on grid G4: that it has settled is not shown"}},
@@ -81,6 +82,15 @@ func taps(model string, e []float64, joint study.Joint, requirement *study.Judge
 		}
 	}
 	c.Summary = &m
+	if model == "B" { // asked for percentages
+		for i := range c.Stations {
+			p := number10(100 * e[i] / math.Abs(float64(c.Stations[i].D)))
+			if i%7 == 6 {
+				p = quantity.None
+			}
+			c.Stations[i].Percent = &p
+		}
+	}
 	c.Joint.Scale, c.Joint.UScale, c.Joint.ScalePart, c.Joint.ShapePart, c.Joint.ShapeN, c.Joint.AtLeast = .0123, .0091, 1.8265, 22.9633, 22, .0514
 	c.Joint.Turns = []study.Turning{{Source: "reference pressure", Rho: .6842, At0: 50.98, At1: 27.05}}
 	c.Joint.Without = []study.Leaving{{Region: "nose", Statistic: 14.2, N: 15, Reference: 24.9958}}

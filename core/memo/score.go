@@ -13,6 +13,9 @@ func (b *builder) scores(i int, c study.Cell) []Node {
 	if len(c.Scores) > 0 {
 		nodes = append(nodes, b.scoreTable(i, c))
 	}
+	if len(c.Sampled) > 0 {
+		nodes = append(nodes, b.sampled(i, c))
+	}
 	if len(c.Regions) > 0 {
 		nodes = append(nodes, b.regions(i, c))
 	}
@@ -52,14 +55,38 @@ func (b *builder) scoreTable(i int, c study.Cell) Node {
 		headRow("Measure", "#Value", "Scale", "Criterion", "Scope and source"), rows...)
 }
 
+// sampled prints the uncertainty of the measures and their floor.
+func (b *builder) sampled(i int, c study.Cell) Node {
+	rows := make([]Node, len(c.Sampled))
+	for j, m := range c.Sampled {
+		at := func(name string) string { return fmt.Sprintf("cells.%d.sampled.%d.%s", i, j, name) }
+		lies := "not above it"
+		if m.Above {
+			lies = "above it"
+		}
+		rows[j] = row(cell(typeset(m.Name)...), figureCell(digits(m.Value, 3, at("value"))), figureCell(digits(m.U, 2, at("u"))),
+			figureCell(digits(m.Floor, 3, at("floor"))), figureCell(digits(m.FloorHi, 3, at("floor_hi"))), cell(text(lies)))
+	}
+	return b.table("plain", say("Uncertainty of the measures ({}), by sampling with the covariance of *u*_{val}. The floor is what the stated errors alone make of each measure.", text(unitOf(c.Unit))),
+		headRow("Measure", "#Value", "#*u*", "#Floor", "#95 % of the floor", "Value"), rows...)
+}
+
 func (b *builder) regions(i int, c study.Cell) Node {
 	rows := make([]Node, len(c.Regions))
 	for j, r := range c.Regions {
 		at := func(name string) string { return fmt.Sprintf("cells.%d.regions.%d.%s", i, j, name) }
-		rows[j] = row(cell(text(r.Name)), figureCell(interval(trimmed(r.From, 6, at("from")), trimmed(r.To, 6, at("to")))...), figureCell(count(r.N, at("n"))),
+		name := r.Name
+		if r.Sign != "" {
+			name += ", D " + r.Sign
+		}
+		where := interval(trimmed(r.From, 6, at("from")), trimmed(r.To, 6, at("to")))
+		if !r.From.Known() {
+			where = []Node{text("")}
+		}
+		rows[j] = row(cell(text(name)), figureCell(where...), figureCell(count(r.N, at("n"))),
 			figureCell(signed(r.Bias, 3, at("bias"))), figureCell(digits(r.RMSE, 3, at("rmse"))), figureCell(digits(r.HitRate, 3, at("hit_rate"))), figureCell(count(r.Beyond, at("beyond"))))
 	}
-	return b.table("plain", say("Parts of the stations ({}).", text(unitOf(c.Unit))),
+	return b.table("plain", say("Parts of the stations ({}); weighted by *n* they make the whole where they do not overlap.", text(unitOf(c.Unit))),
 		headRow("Region", "#Range", "#*n*", "#Mean *E*", "#RMS *E*", "#Hit rate", "#|*E*| > *k* *u*_{val}"), rows...)
 }
 

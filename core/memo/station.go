@@ -31,6 +31,7 @@ const (
 	ofSigned
 	ofUncertainty
 	ofRatio
+	ofPercent
 	ofLine
 )
 
@@ -47,7 +48,16 @@ var stationColumns = []column{
 	{"|*E*|/*u*_{val}", "ratio", ofRatio, func(s study.Station) quantity.Number { return s.Ratio }},
 	{"from", "lo", ofSigned, func(s study.Station) quantity.Number { return s.Lo }},
 	{"to", "hi", ofSigned, func(s study.Station) quantity.Number { return s.Hi }},
+	{"*E*, %", "percent", ofPercent, percentOf},
 	{"Line", "line", ofLine, nil},
+}
+
+// percentOf is E in percent of |D|, where it was asked for.
+func percentOf(s study.Station) quantity.Number {
+	if s.Percent == nil {
+		return quantity.None
+	}
+	return *s.Percent
 }
 
 // stations prints the values at the stations: one row for each.
@@ -65,6 +75,9 @@ func (b *builder) stations(i int, c study.Cell) []Node {
 		if k.kind == ofLine || anyKnown(c.Stations, k.value) {
 			columns = append(columns, k)
 			continue
+		}
+		if k.key == "percent" {
+			continue // not asked for, or withheld everywhere
 		}
 		if len(without) > 0 {
 			without = append(without, text(", "))
@@ -156,6 +169,8 @@ func stationColumn(i int, c study.Cell, k column, rows []int) []Node {
 			cells[r] = written(s.X, atPlaces(float64(s.X), decimals), field)
 		case ofLine:
 			cells[r] = count(s.Line, field)
+		case ofPercent:
+			cells[r] = signed(k.value(s), 3, field)
 		case ofRatio:
 			cells[r] = number(s.Ratio, quantity.Like(float64(s.Ratio), 0.1, 2), field)
 		case ofUncertainty:

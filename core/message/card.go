@@ -6,6 +6,7 @@ import (
 	"slices"
 	"strconv"
 
+	"weirmark/core/metric"
 	"weirmark/core/notice"
 	"weirmark/core/profile"
 	"weirmark/core/quantity"
@@ -401,18 +402,74 @@ func questionEntries(q *study.Question) []Entry {
 		entry("reference_id", "name of the reference", q.ReferenceID, study.Entered, []Option{}, "e.g. campaign and run"),
 		entry("condition", "condition", q.Condition, study.Entered, []Option{}, "e.g. α = 4.2°"),
 		entry("symbol", "symbol", q.Symbol, study.Entered, []Option{}, "e.g. Cd"),
-		entry("scores.dispersion", "scores of the dispersion field", scoring(q, func(a *study.Scoring) string { return map[bool]string{true: "yes", false: "no"}[a.Dispersion] }, "no"), study.Entered, []Option{{"no", "not asked for"}, {"yes", "asked for"}}, "FB, NMSE, FAC2, MG, VG: values that are not negative"),
-		entry("scores.fraction", "hit rate within, as a fraction of D", scoring(q, func(a *study.Scoring) string { return quantity.Typed(a.Fraction) }, ""), study.Entered, []Option{}, "e.g. 0.25"),
-		entry("scores.allowance", "or within, in the unit of the data", scoring(q, func(a *study.Scoring) string { return quantity.Typed(a.Allowance) }, ""), study.Entered, []Option{}, "from the uncertainty of the data"),
 		entry("downward", "drawn", map[bool]string{true: "yes", false: "no"}[q.Downward], study.Entered, []Option{{"no", "positive upward"}, {"yes", "negative upward"}}, ""),
 	}
 }
 
-func scoring(q *study.Question, of func(*study.Scoring) string, none string) string {
-	if q.Scores == nil {
-		return none
+// scoreEntries are the measures that a question asks for.
+func scoreEntries(q *study.Question) EntryList {
+	a := study.Scoring{}
+	if q.Scores != nil {
+		a = *q.Scores
 	}
-	return of(q.Scores)
+	entry := func(field, label, value string, options []Option, hint string) Entry {
+		return Entry{Target: study.Target{Kind: "question", ID: questionID(q), Field: "scores." + field}, Label: label, Value: value, By: study.Entered, Options: options, Hint: hint}
+	}
+	free, asked := []Option{}, []Option{{"no", "not asked for"}, {"yes", "asked for"}}
+	yes := func(b bool) string { return map[bool]string{true: "yes", false: "no"}[b] }
+	typed := func(v float64) string {
+		if q.Scores == nil {
+			return ""
+		}
+		return quantity.Typed(v)
+	}
+	list := []Entry{
+		entry("scale", "measures as parts of", a.Scale, []Option{{"", "the range of D, RMSE alone"}, {study.ScaleRange, "the range of D"}, {study.ScaleMean, "the mean of |D|"}, {study.ScaleSpeed, "the reference speed of the case"}, {study.ScalePressure, "the dynamic pressure of the case"}, {study.ScaleEntered, "an entered scale"}}, ""),
+		entry("percent", "E in percent of |D|", yes(a.Percent), asked, "at each station where |D| is large enough"),
+		entry("percent_above", "where |D| exceeds this percentage of its largest value", typed(a.PercentAbove), free, "0: 2"),
+		entry("weights", "stations are weighted", a.Weights, free, "spacing, or a column of the reference; empty: all alike"),
+		entry("dispersion", "scores of the dispersion field", yes(a.Dispersion), asked, "FB, NMSE, FAC2, NAD, MG, VG: values that are not negative"),
+		entry("threshold", "below this a ratio says nothing, in the unit of the data", typed(a.Threshold), free, "pairs below it count as met in FAC2"),
+		entry("fraction", "hit rate within, as a fraction of D", typed(a.Fraction), free, "e.g. 0.25"),
+		entry("allowance", "or within, in the unit of the data", typed(a.Allowance), free, "from the uncertainty of the data"),
+		entry("allowance_k", "or within this many u_D", typed(a.AllowanceK), free, "0: the value above"),
+		entry("correlation", "correlation, with slope and offset", yes(a.Correlation), asked, ""),
+		entry("distribution", "limits of agreement, area between distributions", yes(a.Distribution), asked, ""),
+	}
+	if a.Scale == study.ScaleEntered {
+		list = append(list, entry("scale_value", "scale, in the unit of the data", quantity.Typed(a.ScaleValue), free, ""))
+	}
+	return EntryList{Course: 3, Title: "Measures", Hint: "each is printed with its scale", Items: []EntryItem{{Entries: list}}}
+}
+
+// criterionEntries are the criteria that scores are held against; changing one
+// of those that the program carries makes the list the question's own.
+func criterionEntries(q *study.Question, list EntryList) EntryList {
+	if q.Scores == nil || !(q.Scores.Dispersion || q.Scores.Correlation || q.Scores.Fraction > 0 || q.Scores.Allowance > 0 || q.Scores.AllowanceK > 0 || q.Scores.Criteria != nil) {
+		return list
+	}
+	scores := []Option{}
+	for _, k := range metric.ScoreKeys {
+		scores = append(scores, Option{k, k})
+	}
+	for i, c := range study.CriteriaOf(q) {
+		at := func(field string) study.Target {
+			return study.Target{Kind: study.ItemCriterion, ID: questionID(q), Field: strconv.Itoa(i) + "." + field}
+		}
+		entry := func(field, label, value string, options []Option, hint string) Entry {
+			return Entry{Target: at(field), Label: label, Value: value, By: study.Entered, Options: options, Hint: hint}
+		}
+		free := []Option{}
+		item := EntryItem{Remove: &study.Target{Kind: study.ItemCriterion, ID: questionID(q), Field: strconv.Itoa(i)}, Entries: []Entry{
+			entry("name", "criterion", c.Name, free, ""), entry("score", "of", c.Score, scores, ""),
+			entry("low", "from", quantity.Typed(c.Low), free, ""), entry("high", "to", quantity.Typed(c.High), free, ""),
+			entry("scope", "scope", c.Scope, free, "paired or unpaired, maxima or all points"), entry("source", "source", c.Source, free, "a document, or “from memory”")}}
+		if c.Score == "q" {
+			item.Entries = append(item.Entries, entry("fraction", "for a fraction of D", quantity.Typed(c.Fraction), free, "0: any"))
+		}
+		list.Items = append(list.Items, item)
+	}
+	return list
 }
 
 // lists are the conditions of both sides, the regions, the point of
@@ -448,7 +505,8 @@ func lists(s *study.Study, q *study.Question) []EntryList {
 	regions := list(3, study.ItemRegion, id, "Regions", "parts of the stations that are told apart")
 	for i, r := range q.Regions {
 		k := study.ItemRegion
-		regions.Items = append(regions.Items, item(k, id, i, entry(k, id, "name", "region", r.Name, []Option{}, ""), entry(k, id, "from", "from", quantity.Typed(r.From), []Option{}, ""), entry(k, id, "to", "to", quantity.Typed(r.To), []Option{}, "")))
+		regions.Items = append(regions.Items, item(k, id, i, entry(k, id, "name", "region", r.Name, []Option{}, ""), entry(k, id, "from", "from", quantity.Typed(r.From), []Option{}, ""), entry(k, id, "to", "to", quantity.Typed(r.To), []Option{}, ""),
+			entry(k, id, "sign", "where D is", r.Sign, []Option{{"", "of any sign"}, {study.SignPositive, "positive"}, {study.SignNegative, "negative"}}, "with a sign, equal bounds leave the bounds out")))
 	}
 	application := list(4, study.ItemApplication, "", "Point of application", "the conditions the result is meant for")
 	for i, c := range s.Application {
@@ -459,8 +517,10 @@ func lists(s *study.Study, q *study.Question) []EntryList {
 		entry("case", q.Case, "density", "density ρ in kg/m³", s.CardValue(q.Case, "density"), []Option{}, "relates a pressure to one divided by density"),
 		entry("case", q.Case, "pressure", "dynamic pressure q in Pa", s.CardValue(q.Case, "pressure"), []Option{}, "makes a pressure a coefficient"),
 		entry("case", q.Case, "length", "reference length L in m", s.CardValue(q.Case, "length"), []Option{}, "e.g. the chord"),
+		entry("case", q.Case, "speed", "reference speed U in m/s", s.CardValue(q.Case, "speed"), []Option{}, "a scale of velocities"),
 		entry("case", q.Case, "angle", "angle of attack α in degrees", s.CardValue(q.Case, "angle"), []Option{}, "")}}}}
-	return []EntryList{conditions, card, regions, application}
+	criteria := criterionEntries(q, list(3, study.ItemCriterion, id, "Criteria of the scores", "limits bound to their scope; a result beyond one is no statement on the model by itself"))
+	return []EntryList{conditions, card, scoreEntries(q), criteria, regions, application}
 }
 
 // readingEntries are the answers about how a file is read: those that were

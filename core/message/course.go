@@ -312,12 +312,19 @@ func agreeTables(c *study.Cell) []Table {
 		name += " [" + c.XUnit + "]"
 	}
 	t := Table{Title: "Stations", Head: []string{name, "S", "D", "E", "u_D", "u_num", "u_input", "u_val", "|E|/u_val", "whitened", "line"}, Rows: [][]string{}}
+	if len(c.Stations) > 0 && c.Stations[0].Percent != nil {
+		t.Head = append(t.Head, "E in % of |D|")
+	}
 	for i, s := range c.Stations {
 		if i == maxTableRows {
 			t.Title += ", the first " + strconv.Itoa(maxTableRows) + " (all are in the exported table)"
 			break
 		}
-		t.Rows = append(t.Rows, []string{written(s.X), text(s.S, 5), written(s.D), quantity.Signed(float64(s.E), 3), text(s.UD, 3), text(s.UNum, 3), text(s.UInput, 3), text(s.UVal, 3), text(s.Ratio, 3), quantity.Signed(float64(s.Whitened), 3), strconv.Itoa(s.Line)})
+		row := []string{written(s.X), text(s.S, 5), written(s.D), quantity.Signed(float64(s.E), 3), text(s.UD, 3), text(s.UNum, 3), text(s.UInput, 3), text(s.UVal, 3), text(s.Ratio, 3), quantity.Signed(float64(s.Whitened), 3), strconv.Itoa(s.Line)}
+		if s.Percent != nil {
+			row = append(row, quantity.Signed(float64(*s.Percent), 3))
+		}
+		t.Rows = append(t.Rows, row)
 	}
 	tables := []Table{t}
 	if j := c.Joint; j != nil && !c.Scalar {
@@ -398,10 +405,17 @@ func scoreTables(c *study.Cell) []Table {
 		}
 		tables = append(tables, t)
 	}
+	if len(c.Sampled) > 0 {
+		t := Table{Title: "Measures with their uncertainty, by sampling with the covariance of u_val", Head: []string{"measure", "value", "u", "the stated errors alone make", "95 % of them stay below", "the value lies"}, Rows: [][]string{}}
+		for _, m := range c.Sampled {
+			t.Rows = append(t.Rows, []string{m.Name, text(m.Value, 3), text(m.U, 2), text(m.Floor, 3), text(m.FloorHi, 3), map[bool]string{true: "above", false: "not above"}[m.Above]})
+		}
+		tables = append(tables, t)
+	}
 	if len(c.Regions) > 0 {
-		t := Table{Title: "Regions", Head: []string{"region", "from", "to", "n", "mean E", "RMSE", "hit rate", "beyond k u_val"}, Rows: [][]string{}}
+		t := Table{Title: "Regions; weighted by n they make the whole where they do not overlap", Head: []string{"region", "from", "to", "D", "n", "mean E", "RMSE", "hit rate", "beyond k u_val"}, Rows: [][]string{}}
 		for _, r := range c.Regions {
-			t.Rows = append(t.Rows, []string{r.Name, text(r.From, 4), text(r.To, 4), strconv.Itoa(r.N), quantity.Signed(float64(r.Bias), 3), text(r.RMSE, 3), text(r.HitRate, 2), strconv.Itoa(r.Beyond)})
+			t.Rows = append(t.Rows, []string{r.Name, text(r.From, 4), text(r.To, 4), r.Sign, strconv.Itoa(r.N), quantity.Signed(float64(r.Bias), 3), text(r.RMSE, 3), text(r.HitRate, 2), strconv.Itoa(r.Beyond)})
 		}
 		tables = append(tables, t)
 	}

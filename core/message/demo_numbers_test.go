@@ -97,8 +97,8 @@ func TestTracerScores(t *testing.T) {
 	check(t, []printed{
 		{"FAC2", score("FAC2"), .79412, 5}, {"FB", score("FB"), .099597, 6}, {"NMSE", score("NMSE"), 1.01486, 5}, {"hit rate", score("hit rate"), .70588, 5},
 	})
-	if len(c.Regions) != 1 || c.Regions[0].N != 11 {
-		t.Fatalf("regions %+v, want the third row with 11 ports", c.Regions)
+	if len(c.Regions) != 2 || c.Regions[0].N != 11 || !c.Regions[1].Rest || c.Regions[1].N != 23 {
+		t.Fatalf("regions %+v, want the third row with 11 ports and the 23 others", c.Regions)
 	}
 	check(t, []printed{{"hit rate of the third row", c.Regions[0].HitRate, .45455, 5}})
 }

@@ -5,6 +5,7 @@ import (
 	"math"
 
 	"weirmark/core/quantity"
+	"weirmark/core/uncertainty"
 )
 
 // ErrSigned refuses scores whose definitions need values that do not change
@@ -73,7 +74,8 @@ func Dispersion(s, d []float64, threshold float64) (Scores, error) {
 	r.Systematic = 4 * float64(r.FB*r.FB) / (4 - float64(r.FB*r.FB))
 	r.FAC2 = float64(met) / n
 	r.NAD = absolute / (meanD + meanS)
-	r.R, r.Slope = line(s, d, meanS, meanD)
+	l := Fit(s, d)
+	r.R, r.Slope = l.R, l.Slope
 	return r, nil
 }
 
@@ -81,21 +83,6 @@ func Dispersion(s, d []float64, threshold float64) (Scores, error) {
 func within2(s, d float64) bool {
 	ratio := quantity.Round(s/d, 10)
 	return ratio >= 0.5 && ratio <= 2
-}
-
-// line returns the correlation of s and d and the slope of s on d.
-func line(s, d []float64, meanS, meanD float64) (r, slope float64) {
-	var ss, dd, sd float64
-	for i := range d {
-		a, b := s[i]-meanS, d[i]-meanD
-		ss += float64(a * a)
-		dd += float64(b * b)
-		sd += float64(a * b)
-	}
-	if ss == 0 || dd == 0 {
-		return math.NaN(), math.NaN()
-	}
-	return sd / math.Sqrt(float64(ss*dd)), sd / dd
 }
 
 // Geometric returns the geometric mean bias MG = exp(mean ln D - mean ln S)
@@ -123,13 +110,19 @@ func Geometric(s, d []float64) (mg, vg float64, err error) {
 // |S - D| <= allowance, the allowance in the unit of the data: it comes from
 // their uncertainty. Signs do not matter.
 func HitRate(s, d []float64, fraction, allowance float64) (float64, error) {
+	return HitRateWithin(s, d, fraction, uncertainty.Constant(len(d), allowance))
+}
+
+// HitRateWithin is HitRate with an allowance at every station; NaN allows
+// nothing.
+func HitRateWithin(s, d []float64, fraction float64, allowance []float64) (float64, error) {
 	if len(d) == 0 {
 		return 0, ErrEmpty
 	}
 	hits := 0
 	for i := range d {
 		e := quantity.Round(math.Abs(s[i]-d[i]), 10)
-		if e <= quantity.Round(fraction*math.Abs(d[i]), 10) || e <= allowance {
+		if e <= quantity.Round(fraction*math.Abs(d[i]), 10) || e <= quantity.Round(allowance[i], 10) {
 			hits++
 		}
 	}

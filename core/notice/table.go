@@ -116,6 +116,10 @@ var table = map[string]row{
 	"percent-withheld": {Note, "Percent errors are withheld at %d stations: |D| is below %s %% of its largest value there."},
 	"scores-signed":    {Stop, "%s need values that are not negative; %s changes sign. They were not computed. Use the hit rate or a normalised RMSE."},
 	"scores-positive":  {Note, "%s need positive values; some of %s are zero. They were not computed."},
+	"scale-missing":    {Note, "%s is not given, or no scale of %s: measures were not normalised by it. Enter it on the case, or choose another scale."},
+	"weights-refused":  {Note, "The weights (%s) are negative, missing or all zero: no weighted measure was made. Correct them."},
+	"correlation-none": {Note, "%s: S or D does not vary over the stations, so there is no correlation. It was left out."},
+	"allowance-none":   {Note, "The hit rate of %s takes its allowance from u_D, which is not known: it was not computed. Give the uncertainty of the data."},
 	"models-stations":  {Stop, "Models %s and %s were not set against each other for %s: they are compared at different stations (%s and %s). Compare both at the same ones, or not at all."},
 
 	// Findings that look like mistakes. Nothing is changed because of them.

@@ -267,10 +267,13 @@ func (w *work) withoutRegions(j *Joint, e []float64, budget uncertainty.Budget) 
 	var regions [][]int
 	var names []string
 	for _, r := range w.q.Regions {
-		lo, hi := w.xUnit.ToSI(r.From), w.xUnit.ToSI(r.To)
+		in := map[int]bool{}
+		for _, i := range w.regionRows(r) {
+			in[i] = true
+		}
 		var rows []int
 		for n, i := range w.joined {
-			if w.x[i] >= lo && w.x[i] <= hi {
+			if in[i] {
 				rows = append(rows, n)
 			}
 		}

@@ -16,6 +16,7 @@ const DeriveLift = "lift of a loop"
 const (
 	DynamicPressure = "q"
 	RefLength       = "L"
+	RefSpeed        = "U"
 	Angle           = "α"
 )
 

@@ -7,6 +7,7 @@ import (
 	"encoding/json"
 	"maps"
 	"reflect"
+	"slices"
 	"sort"
 	"strings"
 
@@ -175,6 +176,7 @@ func (s *Study) Clone() *Study {
 		q.Regions = append([]Region{}, q.Regions...)
 		if q.Scores != nil {
 			scores := *q.Scores
+			scores.Criteria = slices.Clone(scores.Criteria)
 			q.Scores = &scores
 		}
 		q.Answers = maps.Clone(q.Answers)

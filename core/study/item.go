@@ -1,9 +1,11 @@
 package study
 
 import (
+	"slices"
 	"strconv"
 	"strings"
 
+	"weirmark/core/metric"
 	"weirmark/core/quantity"
 )
 
@@ -11,6 +13,7 @@ import (
 const (
 	ItemCondition   = "condition"   // of a question
 	ItemRegion      = "region"      // of a question
+	ItemCriterion   = "criterion"   // of the scores of a question
 	ItemApplication = "application" // of the study
 )
 
@@ -22,6 +25,9 @@ func (s *Study) AddItem(t Target, at string) error {
 		q.Conditions = append(q.Conditions, Matching{})
 	case t.Kind == ItemRegion && q != nil:
 		q.Regions = append(q.Regions, Region{Name: "region " + strconv.Itoa(len(q.Regions)+1)})
+	case t.Kind == ItemCriterion && q != nil:
+		list := q.criteria()
+		*list = append(*list, metric.Criterion{Name: "criterion " + strconv.Itoa(len(*list)+1), Score: "FB"})
 	case t.Kind == ItemApplication:
 		s.Application = append(s.Application, Condition{})
 	default:
@@ -43,6 +49,9 @@ func (s *Study) RemoveItem(t Target, at, why string) error {
 		q.Conditions = append(q.Conditions[:i:i], q.Conditions[i+1:]...)
 	case t.Kind == ItemRegion && q != nil && i < len(q.Regions):
 		q.Regions = append(q.Regions[:i:i], q.Regions[i+1:]...)
+	case t.Kind == ItemCriterion && q != nil && i < len(CriteriaOf(q)):
+		list := q.criteria()
+		*list = append((*list)[:i:i], (*list)[i+1:]...)
 	case t.Kind == ItemApplication && i < len(s.Application):
 		s.Application = append(s.Application[:i:i], s.Application[i+1:]...)
 	default:
@@ -76,7 +85,14 @@ func (s *Study) enterItem(t Target, value string) (string, error) {
 			return number(&r.From, value, -1e30, 1e30)
 		case "to":
 			return number(&r.To, value, -1e30, 1e30)
+		case "sign":
+			switch value {
+			case "", SignPositive, SignNegative:
+				return exchange(&r.Sign, value)
+			}
 		}
+	case t.Kind == ItemCriterion && q != nil && i < len(CriteriaOf(q)):
+		return enterCriterion(&(*q.criteria())[i], field, value)
 	case t.Kind == ItemApplication && i < len(s.Application):
 		c := &s.Application[i]
 		switch field {
@@ -127,6 +143,7 @@ var cardFields = map[string]ReferenceQuantity{
 	"density":  {Symbol: Density, Unit: "kg/m^3"},
 	"pressure": {Symbol: DynamicPressure, Unit: "Pa"},
 	"length":   {Symbol: RefLength, Unit: "m"},
+	"speed":    {Symbol: RefSpeed, Unit: "m/s"},
 	"angle":    {Symbol: Angle, Unit: "deg"},
 }
 
@@ -181,28 +198,91 @@ func (s *Study) card(name string) *Card {
 	return &s.Cases[len(s.Cases)-1]
 }
 
+// CriteriaOf returns the criteria of the scores of a question: its own, or
+// those that the program carries.
+func CriteriaOf(q *Question) []metric.Criterion {
+	if q.Scores == nil || q.Scores.Criteria == nil {
+		return metric.Criteria
+	}
+	return q.Scores.Criteria
+}
+
+// criteria returns the question's own list to change, copied from the one
+// the program carries where there was none.
+func (q *Question) criteria() *[]metric.Criterion {
+	if q.Scores == nil {
+		q.Scores = &Scoring{}
+	}
+	if q.Scores.Criteria == nil {
+		q.Scores.Criteria = append([]metric.Criterion{}, metric.Criteria...)
+	}
+	return &q.Scores.Criteria
+}
+
+func enterCriterion(c *metric.Criterion, field, value string) (string, error) {
+	switch field {
+	case "name":
+		return exchange(&c.Name, value)
+	case "scope":
+		return exchange(&c.Scope, value)
+	case "source":
+		return exchange(&c.Source, value)
+	case "score":
+		if slices.Contains(metric.ScoreKeys, value) {
+			return exchange(&c.Score, value)
+		}
+	case "low":
+		return number(&c.Low, value, -1e30, 1e30)
+	case "high":
+		return number(&c.High, value, -1e30, 1e30)
+	case "fraction":
+		return number(&c.Fraction, value, 0, 10)
+	}
+	return "", refuse(field, value)
+}
+
 // enterScoring changes what measures are asked for.
 func (q *Question) enterScoring(path, value string) (string, error) {
 	ask := Scoring{}
 	if q.Scores != nil {
 		ask = *q.Scores
 	}
-	var before string
-	var err error
-	switch path {
-	case "dispersion":
-		before, err = yesNo(&ask.Dispersion, value)
-	case "threshold":
-		before, err = number(&ask.Threshold, value, 0, 1e30)
-	case "fraction":
-		before, err = number(&ask.Fraction, value, 0, 10)
-	case "allowance":
-		before, err = number(&ask.Allowance, value, 0, 1e30)
-	default:
-		err = refuse("scores."+path, value)
-	}
+	before, err := ask.enter(path, value)
 	if err == nil {
 		q.Scores = &ask
 	}
 	return before, err
+}
+
+func (a *Scoring) enter(path, value string) (string, error) {
+	switch path {
+	case "dispersion":
+		return yesNo(&a.Dispersion, value)
+	case "correlation":
+		return yesNo(&a.Correlation, value)
+	case "distribution":
+		return yesNo(&a.Distribution, value)
+	case "percent":
+		return yesNo(&a.Percent, value)
+	case "percent_above":
+		return number(&a.PercentAbove, value, 0, 100)
+	case "threshold":
+		return number(&a.Threshold, value, 0, 1e30)
+	case "fraction":
+		return number(&a.Fraction, value, 0, 10)
+	case "allowance":
+		return number(&a.Allowance, value, 0, 1e30)
+	case "allowance_k":
+		return number(&a.AllowanceK, value, 0, 10)
+	case "weights":
+		return exchange(&a.Weights, value)
+	case "scale_value":
+		return number(&a.ScaleValue, value, 0, 1e30)
+	case "scale":
+		switch value {
+		case "", ScaleRange, ScaleMean, ScaleSpeed, ScalePressure, ScaleEntered:
+			return exchange(&a.Scale, value)
+		}
+	}
+	return "", refuse("scores."+path, value)
 }

@@ -185,7 +185,7 @@ func (s *Study) Name(t Target) string {
 		}
 	case "case":
 		return fieldName(t.Field) + " of case " + t.ID
-	case ItemCondition, ItemRegion:
+	case ItemCondition, ItemRegion, ItemCriterion:
 		if q := s.questionOf(t.ID); q != nil {
 			_, field, _ := sourceField(t.Field)
 			return field + " of a " + t.Kind + ", " + q.label()
@@ -211,6 +211,8 @@ var fieldNames = map[string]string{
 	"choices.interpolation": "interpolation", "choices.u_interp": "interpolation uncertainty", "choices.num_shared": "u_num shared", "choices.k_student": "k by degrees of freedom", "choices.sampled": "interval by sampling",
 	"requirement.value": "requirement", "requirement.percent": "basis of the requirement", "requirement.who": "who set the requirement", "requirement.date": "date of the requirement",
 	"scores.dispersion": "scores of the dispersion field", "scores.threshold": "threshold of the scores", "scores.fraction": "fraction of the hit rate", "scores.allowance": "allowance of the hit rate",
+	"scores.allowance_k": "allowance of the hit rate in u_D", "scores.scale": "scale of the measures", "scores.scale_value": "entered scale of the measures", "scores.percent": "E in percent of |D|",
+	"scores.percent_above": "least |D| of a percentage", "scores.weights": "weights of the stations", "scores.correlation": "correlation and slope", "scores.distribution": "limits of agreement and area",
 	"pattern": "pattern of the names",
 	"input":   "input of the run", "input_at": "value of the input", "upper.column": "column of the upper bar", "upper.unit": "unit of the upper bar", "bars_as": "what the bars hold",
 	"levels.facility": "column of the facility", "levels.day": "column of the day", "levels.rig": "column of the set-up", "levels.run": "column of the run",
@@ -297,7 +299,7 @@ func (s *Study) enter(t Target, value string) (string, error) {
 		if t.Field == "pattern" {
 			return s.enterPattern(value)
 		}
-	case ItemCondition, ItemRegion, ItemApplication:
+	case ItemCondition, ItemRegion, ItemCriterion, ItemApplication:
 		return s.enterItem(t, value)
 	case "case":
 		if r, known := cardFields[t.Field]; known {

@@ -106,6 +106,7 @@ type Cell struct {
 	Summary     *Summary      `json:"summary"`
 	Joint       *Joint        `json:"joint"`
 	Scores      []ScoreLine   `json:"scores"`
+	Sampled     []SampledLine `json:"sampled,omitempty"` // of curves, with the other alternatives
 	Regions     []RegionLine  `json:"regions"`
 	Crossings   Crossings     `json:"crossings"`
 	Monitors    []MonitorLine `json:"monitors"`
@@ -177,7 +178,8 @@ type Station struct {
 	// Whitened is what E is worth once its covariance is taken out, in standard
 	// uncertainties; the squares sum to the joint statistic. Null at a station
 	// that the statistic does not count.
-	Whitened Number `json:"whitened"`
+	Whitened Number  `json:"whitened"`
+	Percent  *Number `json:"percent,omitempty"` // E in percent of |D|, where it is asked for; null value where |D| is too small
 }
 
 // ScoreLine is one difference measure with its scale and the criteria of its
@@ -188,6 +190,17 @@ type ScoreLine struct {
 	Scale    string          `json:"scale"`
 	Word     string          `json:"word"` // e.g. over-prediction
 	Criteria []CriterionLine `json:"criteria"`
+}
+
+// SampledLine is the uncertainty of a measure of E, in the cell's unit, by
+// sampling with the covariance of u_val.
+type SampledLine struct {
+	Name    string `json:"name"`
+	Value   Number `json:"value"`
+	U       Number `json:"u"`        // standard
+	Floor   Number `json:"floor"`    // mean of the measure of the stated errors alone
+	FloorHi Number `json:"floor_hi"` // and their 95 % point
+	Above   bool   `json:"above"`    // the value lies above that point
 }
 
 // CriterionLine is a limit of a field on a score.
@@ -205,6 +218,8 @@ type RegionLine struct {
 	Name    string `json:"name"`
 	From    Number `json:"from"`
 	To      Number `json:"to"`
+	Sign    string `json:"sign,omitempty"` // of D, where it parts the stations
+	Rest    bool   `json:"rest,omitempty"` // the stations of no other region; the parts, weighted by n, make the whole
 	N       int    `json:"n"`
 	Bias    Number `json:"bias"`
 	RMSE    Number `json:"rmse"`

@@ -1,19 +1,22 @@
 package study
 
 import (
+	"cmp"
 	"errors"
 	"math"
+	"sort"
 	"strconv"
 
 	"weirmark/core/metric"
 	"weirmark/core/notice"
 	"weirmark/core/profile"
 	"weirmark/core/quantity"
+	"weirmark/core/uncertainty"
 )
 
-// nearZero is the part of the largest |D| below which a percent error is
-// withheld.
-const nearZero = 0.02
+// nearZero is the part of the largest |D|, in percent, that |D| must exceed
+// for a percent error, where no other is entered.
+const nearZero = 2
 
 // scores fills the difference measures of a curve, each with its scale, and
 // those of a field where they are asked for.
@@ -21,20 +24,21 @@ func (w *work) scores() {
 	if w.cell.Scalar || len(w.s) < 2 {
 		return
 	}
-	lo, hi := profile.Limits(w.d)
-	largest := max(math.Abs(lo), math.Abs(hi))
+	ask := w.q.Scores
+	if ask == nil {
+		ask = &Scoring{}
+	}
 	e := w.errors()
-	m := metric.Summarise(e)
-	if hi > lo {
-		w.score(ScoreLine{Name: "RMSE / range of D", Value: Number(m.RMSE / (hi - lo)), Scale: quantity.Text(float64(w.step(hi-lo)), 4) + w.cell.UnitSuffix()})
+	w.scaled(ask, metric.Summarise(e))
+	w.percent(ask)
+	w.weighted(ask, e)
+	w.correlation(ask)
+	w.fieldScores(ask)
+	w.distribution(ask, e)
+	w.regions(ask, e)
+	if w.e.options.Alternatives && !w.inner {
+		w.sampled()
 	}
-	if largest > 0 {
-		if _, withheld := metric.Percent(w.s, w.d, nearZero*largest); withheld > 0 {
-			w.tell(notice.New("percent-withheld", withheld, quantity.Text(100*nearZero, 1)))
-		}
-	}
-	w.fieldScores()
-	w.regions(e)
 }
 
 func (w *work) score(line ScoreLine) {
@@ -53,16 +57,178 @@ func (w *work) errors() []float64 {
 	return e
 }
 
-// fieldScores fills the scores of the dispersion and wind fields.
-func (w *work) fieldScores() {
-	ask := w.q.Scores
-	if ask == nil {
+// scaled gives the usual measures as parts of a scale that is named with them.
+func (w *work) scaled(ask *Scoring, m metric.Summary) {
+	scale, name, ok := w.scale(ask)
+	if !ok {
 		return
 	}
-	if ask.Fraction > 0 || ask.Allowance > 0 {
-		allowance := w.yUnit.StepToSI(ask.Allowance)
-		if q, err := metric.HitRate(w.s, w.d, ask.Fraction, allowance); err == nil {
-			w.scored("q", "hit rate", q, "within "+quantity.Typed(100*ask.Fraction)+" % of D or "+quantity.Typed(ask.Allowance)+w.cell.UnitSuffix(), "")
+	printed := quantity.Text(float64(w.step(scale)), 4) + w.cell.UnitSuffix()
+	line := func(measure string, v float64) {
+		w.score(ScoreLine{Name: measure + " / " + name, Value: Number(v / scale), Scale: printed})
+	}
+	if ask.Scale != "" {
+		line("mean E", w.sign()*m.Bias)
+		line("mean |E|", m.MAE)
+	}
+	line("RMSE", m.RMSE)
+	if ask.Scale != "" {
+		line("largest |E|", m.MaxAbs)
+	}
+}
+
+// scale returns the scale of the measures, in SI, and its name; what is no
+// scale of the quantity is told.
+func (w *work) scale(ask *Scoring) (float64, string, bool) {
+	lo, hi := profile.Limits(w.d)
+	of := func(symbol, name string, dimension quantity.Dimension) (float64, string, bool) {
+		v, known := w.e.cardValue(w.q.Case, symbol, dimension)
+		if !known || !(v > 0) || w.yUnit.Dimension != dimension {
+			w.tell(notice.New("scale-missing", name, w.q.label()))
+			return 0, "", false
+		}
+		return v, name, true
+	}
+	switch ask.Scale {
+	case ScaleMean:
+		mean := 0.0
+		for _, d := range w.d {
+			mean += math.Abs(d) / float64(len(w.d))
+		}
+		return mean, "mean |D|", mean > 0
+	case ScaleSpeed:
+		return of(RefSpeed, "reference speed U", quantity.Dimension{1, 0, -1})
+	case ScalePressure:
+		return of(DynamicPressure, "dynamic pressure q", quantity.Dimension{-1, 1, -2})
+	case ScaleEntered:
+		if !(ask.ScaleValue > 0) {
+			w.tell(notice.New("scale-missing", "the entered scale", w.q.label()))
+		}
+		return w.yUnit.StepToSI(ask.ScaleValue), "entered scale", ask.ScaleValue > 0
+	}
+	return hi - lo, "range of D", hi > lo
+}
+
+// percent gives E in percent of |D| where |D| is no small part of its largest
+// value, and counts the stations where it is withheld.
+func (w *work) percent(ask *Scoring) {
+	lo, hi := profile.Limits(w.d)
+	largest := max(math.Abs(lo), math.Abs(hi))
+	if !(largest > 0) {
+		return
+	}
+	above := ask.PercentAbove
+	if above == 0 {
+		above = nearZero
+	}
+	percent, withheld := metric.Percent(w.s, w.d, above/100*largest)
+	if withheld > 0 {
+		w.tell(notice.New("percent-withheld", withheld, quantity.Text(above, 2)))
+	}
+	if !ask.Percent {
+		return
+	}
+	kept := make([]float64, 0, len(percent))
+	for i, p := range percent {
+		v := Number(w.sign() * p)
+		w.cell.Stations[i].Percent = &v
+		if !math.IsNaN(p) {
+			kept = append(kept, p)
+		}
+	}
+	if len(kept) > 0 {
+		m := metric.Summarise(kept)
+		scale := "%; " + strconv.Itoa(len(kept)) + " of " + quantity.Counted(len(percent), "station") + ", |D| above " + quantity.Text(above, 2) + " % of its largest value"
+		w.score(ScoreLine{Name: "mean |E| / |D|", Value: Number(m.MAE), Scale: scale})
+		w.score(ScoreLine{Name: "largest |E| / |D|", Value: Number(m.MaxAbs), Scale: scale})
+	}
+}
+
+// weighted gives the measures with weights of the stations.
+func (w *work) weighted(ask *Scoring, e []float64) {
+	if ask.Weights == "" {
+		return
+	}
+	weights, words := w.spacing(), "each station by the length it stands for"
+	if ask.Weights != WeightSpacing {
+		words = "weights in column " + ask.Weights
+		column, err := w.reference.table.Column(ask.Weights)
+		if err != nil {
+			w.tell(asNotice(err))
+			return
+		}
+		weights = pick(column.Values, w.rows)
+	}
+	bias, mae, rmse, ok := metric.Weighted(e, weights)
+	if !ok {
+		w.tell(notice.New("weights-refused", words))
+		return
+	}
+	w.score(ScoreLine{Name: "weighted mean E", Value: w.step(w.sign() * bias), Scale: words})
+	w.score(ScoreLine{Name: "weighted mean |E|", Value: w.step(mae), Scale: words})
+	w.score(ScoreLine{Name: "weighted RMSE", Value: w.step(rmse), Scale: words})
+}
+
+// spacing returns half the distance between the neighbours of each station,
+// at the ends half of that to the one neighbour.
+func (w *work) spacing() []float64 {
+	order := all(len(w.x))
+	sort.SliceStable(order, func(i, j int) bool { return w.x[order[i]] < w.x[order[j]] })
+	weights := make([]float64, len(w.x))
+	for k := 1; k < len(order); k++ {
+		half := (w.x[order[k]] - w.x[order[k-1]]) / 2
+		weights[order[k]] += half
+		weights[order[k-1]] += half
+	}
+	return weights
+}
+
+// correlation gives R and R², which are blind to bias and scale, beside the
+// slope and the intercept, which are not.
+func (w *work) correlation(ask *Scoring) {
+	if !ask.Correlation {
+		return
+	}
+	l := metric.Fit(w.s, w.d)
+	if math.IsNaN(l.R) {
+		w.tell(notice.New("correlation-none", w.q.label()))
+		return
+	}
+	m := metric.Summarise(w.errors())
+	beside := "of S on D, beside slope " + quantity.Text(l.Slope, 3) + " and mean E " + quantity.Signed(w.sign()*float64(w.step(m.Bias)), 3) + w.cell.UnitSuffix()
+	w.scored("R", "correlation R", l.R, beside+"; blind to both", "")
+	w.score(ScoreLine{Name: "R²", Value: Number(l.R * l.R), Scale: beside + "; blind to both"})
+	w.scored("slope", "slope of S on D", l.Slope, "1 without an error of scale", "")
+	w.score(ScoreLine{Name: "intercept of S on D", Value: w.step(l.Intercept), Scale: "0 without an offset"})
+}
+
+// distribution gives measures of E as a distribution: the limits within which
+// 95 % of single differences lie, and the area between the distribution
+// functions of S and D.
+func (w *work) distribution(ask *Scoring, e []float64) {
+	if !ask.Distribution {
+		return
+	}
+	if a, ok := metric.Limits(e); ok {
+		lo, hi := a.Low, a.High
+		if w.sign() < 0 {
+			lo, hi = -hi, -lo
+		}
+		words := "mean E ± 1.96 standard deviations, normal differences; ± " + quantity.Text(float64(w.step(a.LimitU)), 2) + " (standard)"
+		w.score(ScoreLine{Name: "lower limit of agreement", Value: w.step(lo), Scale: words})
+		w.score(ScoreLine{Name: "upper limit of agreement", Value: w.step(hi), Scale: words})
+	}
+	w.score(ScoreLine{Name: "area between the distributions of S and D", Value: w.step(metric.Area(w.s, w.d)), Scale: "all stations as one sample; where they lie plays no part"})
+}
+
+// fieldScores fills the scores of the dispersion and wind fields.
+func (w *work) fieldScores(ask *Scoring) {
+	if ask.AllowanceK > 0 && w.uD == nil {
+		w.tell(notice.New("allowance-none", w.q.label()))
+	}
+	if allowance, words, asked := w.allowance(ask); asked {
+		if q, err := metric.HitRateWithin(w.s, w.d, ask.Fraction, allowance); err == nil {
+			w.scored("q", "hit rate", q, "within "+quantity.Typed(100*ask.Fraction)+" % of D or "+words, "")
 		}
 	}
 	if !ask.Dispersion {
@@ -80,12 +246,25 @@ func (w *work) fieldScores() {
 	w.scored("FB", "fractional bias FB", r.FB, "means of D and S", word)
 	w.scored("NMSE", "normalised mean square error NMSE", r.NMSE, "product of the means; "+quantity.Percent(r.Systematic/r.NMSE)+" % of it from the mean bias", "")
 	w.scored("FAC2", "within a factor of two, FAC2", r.FAC2, quantity.Counted(r.Below, "pair")+" below the threshold counted as met", "")
+	w.scored("NAD", "normalised absolute difference NAD", r.NAD, "sum of the means of D and S", "")
 	if mg, vg, err := metric.Geometric(w.s, w.d); err != nil {
 		w.refuseScores("MG and VG", err)
 	} else {
 		w.scored("MG", "geometric mean bias MG", mg, "logarithms of D and S", "")
 		w.scored("VG", "geometric variance VG", vg, "logarithms of D and S", "")
 	}
+}
+
+// allowance returns what a hit rate allows at each station, in SI, and says it
+// in words.
+func (w *work) allowance(ask *Scoring) ([]float64, string, bool) {
+	switch {
+	case ask.AllowanceK > 0 && w.uD != nil:
+		return uncertainty.Scaled(w.uD, 1/ask.AllowanceK), quantity.Typed(ask.AllowanceK) + " u_D", true
+	case ask.AllowanceK > 0:
+		return nil, "", false
+	}
+	return uncertainty.Constant(len(w.d), w.yUnit.StepToSI(ask.Allowance)), quantity.Typed(ask.Allowance) + w.cell.UnitSuffix(), ask.Fraction > 0 || ask.Allowance > 0
 }
 
 func (w *work) refuseScores(names string, err error) {
@@ -99,42 +278,108 @@ func (w *work) refuseScores(names string, err error) {
 // scored adds a score with the criteria of its field.
 func (w *work) scored(key, name string, value float64, scale, word string) {
 	line := ScoreLine{Name: name, Value: Number(value), Scale: scale, Word: word, Criteria: []CriterionLine{}}
-	for _, c := range metric.Criteria {
-		if c.Score == key {
-			line.Criteria = append(line.Criteria, CriterionLine{Name: c.Name, Low: Number(c.Low), High: Number(c.High), Met: c.Met(quantity.Round(value, 10)), Scope: c.Scope, Source: c.Source})
+	fraction := 0.0
+	if w.q.Scores != nil {
+		fraction = w.q.Scores.Fraction
+	}
+	for _, c := range CriteriaOf(w.q) {
+		if c.For(key, fraction) {
+			line.Criteria = append(line.Criteria, CriterionLine{Name: c.Name, Low: Number(c.Low), High: Number(c.High), Met: c.Met(quantity.Round(value, 10)), Scope: cmp.Or(c.Scope, "no scope entered"), Source: cmp.Or(c.Source, "no source entered")})
 		}
 	}
 	w.score(line)
 }
 
+// sampled gives the uncertainty of the measures at the tested stations, and
+// the floor that the stated errors make by themselves.
+func (w *work) sampled() {
+	if w.uVal == nil || len(w.tested) < 2 {
+		return
+	}
+	e := pick(w.errors(), w.tested)
+	s, ok := metric.Sample(e, w.covariance(w.parts, w.tested), samplingSeed)
+	if !ok {
+		return
+	}
+	m := metric.Summarise(e)
+	for _, l := range []struct {
+		name  string
+		value float64
+		of    metric.Spread
+	}{{"mean E", w.sign() * m.Bias, s.Bias}, {"mean |E|", m.MAE, s.MAE}, {"RMSE", m.RMSE, s.RMSE}, {"largest |E|", m.MaxAbs, s.MaxAbs}} {
+		w.cell.Sampled = append(w.cell.Sampled, SampledLine{Name: l.name, Value: w.step(l.value), U: w.step(l.of.U), Floor: w.step(l.of.Floor), FloorHi: w.step(l.of.FloorHi), Above: exceeds(math.Abs(l.value), l.of.FloorHi)})
+	}
+}
+
 // regions breaks the measures down, so that a sub-area does not hide in the
-// whole.
-func (w *work) regions(e []float64) {
+// whole. Where the regions do not overlap, the stations of none of them follow,
+// so that the parts make the whole.
+func (w *work) regions(ask *Scoring, e []float64) {
+	in := make([]int, len(e))
 	for _, r := range w.q.Regions {
-		lo, hi := w.xUnit.ToSI(r.From), w.xUnit.ToSI(r.To)
-		var rows []int
-		for i, x := range w.x {
-			if x >= lo && x <= hi {
-				rows = append(rows, i)
-			}
+		rows := w.regionRows(r)
+		for _, i := range rows {
+			in[i]++
 		}
-		line := RegionLine{Name: r.Name, From: Number(r.From), To: Number(r.To), N: len(rows), Bias: None, RMSE: None, HitRate: None, Beyond: 0}
-		if len(rows) > 0 {
-			m := metric.Summarise(pick(e, rows))
-			line.Bias, line.RMSE = w.step(m.Bias), w.step(m.RMSE)
-			if ask := w.q.Scores; ask != nil && (ask.Fraction > 0 || ask.Allowance > 0) {
-				if q, err := metric.HitRate(pick(w.s, rows), pick(w.d, rows), ask.Fraction, w.yUnit.StepToSI(ask.Allowance)); err == nil {
-					line.HitRate = Number(q)
-				}
-			}
-			for _, i := range rows {
-				if w.uVal != nil && w.uVal[i] > 0 && exceeds(math.Abs(e[i]), float64(w.choices.K*w.uVal[i])) {
-					line.Beyond++
-				}
-			}
+		line := w.regionLine(ask, e, rows)
+		line.Name, line.From, line.To, line.Sign = r.Name, Number(r.From), Number(r.To), r.Sign
+		if !r.bounded() {
+			line.From, line.To = None, None
 		}
 		w.cell.Regions = append(w.cell.Regions, line)
 	}
+	var rest []int
+	for i, n := range in {
+		if n > 1 {
+			return
+		}
+		if n == 0 {
+			rest = append(rest, i)
+		}
+	}
+	if len(w.q.Regions) > 0 && len(rest) > 0 {
+		line := w.regionLine(ask, e, rest)
+		line.Name, line.From, line.To, line.Rest = "all other stations", None, None, true
+		w.cell.Regions = append(w.cell.Regions, line)
+	}
+}
+
+// bounded reports whether the bounds of a region count.
+func (r Region) bounded() bool { return r.Sign == "" || r.From != r.To }
+
+// regionRows returns the stations of a region.
+func (w *work) regionRows(r Region) []int {
+	lo, hi := w.xUnit.ToSI(r.From), w.xUnit.ToSI(r.To)
+	var rows []int
+	for i, x := range w.x {
+		inside := !r.bounded() || x >= lo && x <= hi
+		signed := r.Sign == "" || r.Sign == SignPositive && w.d[i] > 0 || r.Sign == SignNegative && w.d[i] < 0
+		if inside && signed {
+			rows = append(rows, i)
+		}
+	}
+	return rows
+}
+
+// regionLine measures E at some stations.
+func (w *work) regionLine(ask *Scoring, e []float64, rows []int) RegionLine {
+	line := RegionLine{N: len(rows), Bias: None, RMSE: None, HitRate: None}
+	if len(rows) == 0 {
+		return line
+	}
+	m := metric.Summarise(pick(e, rows))
+	line.Bias, line.RMSE = w.step(w.sign()*m.Bias), w.step(m.RMSE)
+	if allowance, _, asked := w.allowance(ask); asked {
+		if q, err := metric.HitRateWithin(pick(w.s, rows), pick(w.d, rows), ask.Fraction, pick(allowance, rows)); err == nil {
+			line.HitRate = Number(q)
+		}
+	}
+	for _, i := range rows {
+		if w.uVal != nil && w.uVal[i] > 0 && exceeds(math.Abs(e[i]), float64(w.choices.K*w.uVal[i])) {
+			line.Beyond++
+		}
+	}
+	return line
 }
 
 // difference sets two models against each other, with the uncertainty of the
@@ -210,3 +455,6 @@ func (e *evaluation) differences(r *Report) {
 		}
 	}
 }
+
+// sign is the factor that turns S − D into E as the study prints it.
+func (w *work) sign() float64 { return 1 }

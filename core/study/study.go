@@ -7,6 +7,7 @@ import (
 	"encoding/json"
 
 	"weirmark/core/interpolate"
+	"weirmark/core/metric"
 	"weirmark/core/tablefile"
 )
 
@@ -212,18 +213,52 @@ const Counted = "counted"
 
 // Scoring asks for the measures of a field beside the usual ones.
 type Scoring struct {
-	Dispersion bool    `json:"dispersion"` // FB, NMSE, FAC2, MG, VG: only for values that are not negative
+	Dispersion bool    `json:"dispersion"` // FB, NMSE, FAC2, NAD, MG, VG: only for values that are not negative
 	Threshold  float64 `json:"threshold"`  // below it a ratio says nothing; in the unit of the data
 	Fraction   float64 `json:"fraction"`   // of the hit rate
 	Allowance  float64 `json:"allowance"`  // of the hit rate, in the unit of the data
+	// AllowanceK takes the allowance of the hit rate from the data: AllowanceK
+	// u_D of each station, in place of Allowance.
+	AllowanceK   float64 `json:"allowance_k,omitempty"`
+	Scale        string  `json:"scale,omitempty"`         // of the normalised measures: ScaleRange and so on; empty: the range, for the RMSE alone
+	ScaleValue   float64 `json:"scale_value,omitempty"`   // of ScaleEntered, in the unit of the data
+	Percent      bool    `json:"percent,omitempty"`       // E in percent of |D| at each station
+	PercentAbove float64 `json:"percent_above,omitempty"` // the part of the largest |D|, in percent, that |D| must exceed for it; 0: 2
+	Weights      string  `json:"weights,omitempty"`       // WeightSpacing, a column of the reference, or empty: all alike
+	Correlation  bool    `json:"correlation,omitempty"`   // R, R², slope and intercept
+	Distribution bool    `json:"distribution,omitempty"`  // limits of agreement, and the area between the distributions
+	// Criteria are those that the scores are held against; nil: those of
+	// package metric.
+	Criteria []metric.Criterion `json:"criteria,omitempty"`
 }
 
-// Region is a part of the stations that is told apart.
+// Scales of normalised measures.
+const (
+	ScaleRange    = "range"    // of D
+	ScaleMean     = "mean"     // of |D|
+	ScaleSpeed    = "speed"    // reference speed of the case
+	ScalePressure = "pressure" // dynamic pressure of the case
+	ScaleEntered  = "entered"
+)
+
+// WeightSpacing weights each station by the length it stands for.
+const WeightSpacing = "spacing"
+
+// Region is a part of the stations that is told apart: those from From to To,
+// those where D has the Sign, or both. With a sign, From = To leaves out the
+// bounds.
 type Region struct {
 	Name string  `json:"name"`
 	From float64 `json:"from"` // in the unit of the stations
 	To   float64 `json:"to"`
+	Sign string  `json:"sign,omitempty"` // SignPositive, SignNegative, or empty
 }
+
+// Signs of D in a region.
+const (
+	SignPositive = "positive"
+	SignNegative = "negative"
+)
 
 // Card holds the reference quantities of a case.
 type Card struct {
