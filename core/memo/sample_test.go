@@ -36,7 +36,7 @@ func taps(model string, e []float64, joint study.Joint, requirement *study.Judge
 			{Name: "hit rate", Value: .875, Scale: "25 %", Word: "of the stations"},
 		},
 		Regions:     []study.RegionLine{{Name: "nose", From: .02, To: .3, N: 9, Bias: .0123, RMSE: .0177, HitRate: .777, Beyond: 1}, {Name: "suction", Sign: study.SignNegative, From: quantity.None, To: quantity.None, N: 7, Bias: -.0045, RMSE: .0166, HitRate: .714, Beyond: 2}},
-		Sampled:     []study.SampledLine{{Name: "RMSE", Value: .031, U: .0062, Floor: .0203, FloorHi: .0377}, {Name: "largest |E|", Value: .0409, U: .0101, Floor: .0291, FloorHi: .0401, Above: true}},
+		Measured:    []study.MeasureLine{{Name: "RMSE", Value: .031, U: .0062, Floor: .0203, FloorHi: .0377}, {Name: "largest |E|", Value: .0409, U: .0101, Floor: .0291, FloorHi: .0401, Above: true}},
 		Provisional: true, StationsAll: 26, Outside: []study.Number{0.981, 0.995},
 		Excluded:    []study.Excluded{{X: .55, D: -.12, Line: 30, Why: "tap leaked, see the log of the test", Late: true}, {X: .56, D: -.1, Line: 31, Why: "tap leaked"}},
 		Open:        []study.Open{{Course: 0, Missing: "monitor", Text: "No monitor of the run on grid G4: that it has settled is not shown"}},

@@ -13,8 +13,8 @@ func (b *builder) scores(i int, c study.Cell) []Node {
 	if len(c.Scores) > 0 {
 		nodes = append(nodes, b.scoreTable(i, c))
 	}
-	if len(c.Sampled) > 0 {
-		nodes = append(nodes, b.sampled(i, c))
+	if len(c.Measured) > 0 {
+		nodes = append(nodes, b.measured(i, c))
 	}
 	if len(c.Regions) > 0 {
 		nodes = append(nodes, b.regions(i, c))
@@ -55,11 +55,11 @@ func (b *builder) scoreTable(i int, c study.Cell) Node {
 		headRow("Measure", "#Value", "Scale", "Criterion", "Scope and source"), rows...)
 }
 
-// sampled prints the uncertainty of the measures and their floor.
-func (b *builder) sampled(i int, c study.Cell) Node {
-	rows := make([]Node, len(c.Sampled))
-	for j, m := range c.Sampled {
-		at := func(name string) string { return fmt.Sprintf("cells.%d.sampled.%d.%s", i, j, name) }
+// measured prints the uncertainty of the measures and their floor.
+func (b *builder) measured(i int, c study.Cell) Node {
+	rows := make([]Node, len(c.Measured))
+	for j, m := range c.Measured {
+		at := func(name string) string { return fmt.Sprintf("cells.%d.measured.%d.%s", i, j, name) }
 		lies := "not above it"
 		if m.Above {
 			lies = "above it"

@@ -405,9 +405,9 @@ func scoreTables(c *study.Cell) []Table {
 		}
 		tables = append(tables, t)
 	}
-	if len(c.Sampled) > 0 {
+	if len(c.Measured) > 0 {
 		t := Table{Title: "Measures with their uncertainty, by sampling with the covariance of u_val", Head: []string{"measure", "value", "u", "the stated errors alone make", "95 % of them stay below", "the value lies"}, Rows: [][]string{}}
-		for _, m := range c.Sampled {
+		for _, m := range c.Measured {
 			t.Rows = append(t.Rows, []string{m.Name, text(m.Value, 3), text(m.U, 2), text(m.Floor, 3), text(m.FloorHi, 3), map[bool]string{true: "above", false: "not above"}[m.Above]})
 		}
 		tables = append(tables, t)

@@ -106,7 +106,7 @@ type Cell struct {
 	Summary     *Summary      `json:"summary"`
 	Joint       *Joint        `json:"joint"`
 	Scores      []ScoreLine   `json:"scores"`
-	Sampled     []SampledLine `json:"sampled,omitempty"` // of curves, with the other alternatives
+	Measured    []MeasureLine `json:"measured,omitempty"` // of curves, with the other alternatives
 	Regions     []RegionLine  `json:"regions"`
 	Crossings   Crossings     `json:"crossings"`
 	Monitors    []MonitorLine `json:"monitors"`
@@ -192,9 +192,9 @@ type ScoreLine struct {
 	Criteria []CriterionLine `json:"criteria"`
 }
 
-// SampledLine is the uncertainty of a measure of E, in the cell's unit, by
+// MeasureLine is the uncertainty of a measure of E, in the cell's unit, by
 // sampling with the covariance of u_val.
-type SampledLine struct {
+type MeasureLine struct {
 	Name    string `json:"name"`
 	Value   Number `json:"value"`
 	U       Number `json:"u"`        // standard

@@ -37,7 +37,7 @@ func (w *work) scores() {
 	w.distribution(ask, e)
 	w.regions(ask, e)
 	if w.e.options.Alternatives && !w.inner {
-		w.sampled()
+		w.measured()
 	}
 }
 
@@ -290,9 +290,9 @@ func (w *work) scored(key, name string, value float64, scale, word string) {
 	w.score(line)
 }
 
-// sampled gives the uncertainty of the measures at the tested stations, and
+// measured gives the uncertainty of the measures at the tested stations, and
 // the floor that the stated errors make by themselves.
-func (w *work) sampled() {
+func (w *work) measured() {
 	if w.uVal == nil || len(w.tested) < 2 {
 		return
 	}
@@ -307,7 +307,7 @@ func (w *work) sampled() {
 		value float64
 		of    metric.Spread
 	}{{"mean E", w.sign() * m.Bias, s.Bias}, {"mean |E|", m.MAE, s.MAE}, {"RMSE", m.RMSE, s.RMSE}, {"largest |E|", m.MaxAbs, s.MaxAbs}} {
-		w.cell.Sampled = append(w.cell.Sampled, SampledLine{Name: l.name, Value: w.step(l.value), U: w.step(l.of.U), Floor: w.step(l.of.Floor), FloorHi: w.step(l.of.FloorHi), Above: exceeds(math.Abs(l.value), l.of.FloorHi)})
+		w.cell.Measured = append(w.cell.Measured, MeasureLine{Name: l.name, Value: w.step(l.value), U: w.step(l.of.U), Floor: w.step(l.of.Floor), FloorHi: w.step(l.of.FloorHi), Above: exceeds(math.Abs(l.value), l.of.FloorHi)})
 	}
 }
 

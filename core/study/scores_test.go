@@ -277,10 +277,10 @@ func TestAllowanceFromTheData(t *testing.T) {
 func TestSampledMeasures(t *testing.T) {
 	r := study.Evaluate(message.Demo(), study.Options{Alternatives: true})
 	for _, c := range r.Cells {
-		if c.Scalar != (len(c.Sampled) == 0) {
-			t.Fatalf("%s: %d sampled measures", c.Quantity, len(c.Sampled))
+		if c.Scalar != (len(c.Measured) == 0) {
+			t.Fatalf("%s: %d sampled measures", c.Quantity, len(c.Measured))
 		}
-		for _, m := range c.Sampled {
+		for _, m := range c.Measured {
 			// With a common source of 0.020 and independent ones of 0.0072 the mean of
 			// 24 stations spreads by 0.0201, as the offset does (6.1).
 			if m.Name == "mean E" && math.Abs(float64(m.U)-.0201) > .001 || !(m.FloorHi > m.Floor) || !(m.Floor > 0) {
