@@ -362,6 +362,7 @@ export interface Cell {
   summary: Summary | null;
   joint: Joint | null;
   scores: ScoreLine[] | null;
+  sampled?: SampledLine[];
   regions: RegionLine[] | null;
   crossings: Crossings;
   monitors: MonitorLine[] | null;
@@ -498,6 +499,7 @@ export interface Station {
   line: number;
   reading: string;
   whitened: number | null;
+  percent?: number;
 }
 
 export interface Excluded {
@@ -582,10 +584,21 @@ export interface ScoreLine {
   criteria: CriterionLine[] | null;
 }
 
+export interface SampledLine {
+  name: string;
+  value: number | null;
+  u: number | null;
+  floor: number | null;
+  floor_hi: number | null;
+  above: boolean;
+}
+
 export interface RegionLine {
   name: string;
   from: number | null;
   to: number | null;
+  sign?: string;
+  rest?: boolean;
   n: number;
   bias: number | null;
   rmse: number | null;
