@@ -362,7 +362,7 @@ export interface Cell {
   summary: Summary | null;
   joint: Joint | null;
   scores: ScoreLine[] | null;
-  sampled?: SampledLine[];
+  measured?: MeasureLine[];
   regions: RegionLine[] | null;
   crossings: Crossings;
   monitors: MonitorLine[] | null;
@@ -584,7 +584,7 @@ export interface ScoreLine {
   criteria: CriterionLine[] | null;
 }
 
-export interface SampledLine {
+export interface MeasureLine {
   name: string;
   value: number | null;
   u: number | null;
