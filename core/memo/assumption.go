@@ -67,6 +67,9 @@ func choices(i int, c study.Cell) []Node {
 	h := c.Choices
 	words := say("*k* = {}; *k*_{num} = {}; grid study by the {}, formal order {}, {} dimensions",
 		asWritten(h.K, at("k")), asWritten(h.KNum, at("k_num")), text(h.RuleName()), asWritten(h.Formal, at("formal")), count(h.Dimension, at("dimension")))
+	if h.NumLinear {
+		words = append(words, text("; the parts of u_num are summed, as if they depend on each other"))
+	}
 	if c.Scalar {
 		return words
 	}

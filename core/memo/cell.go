@@ -330,6 +330,14 @@ func (b *builder) sources(i int, c study.Cell) []Node {
 	}
 	caption := say("Uncertainty sources, {}. *u* is standard, for curves its root mean square over the stations; the share is of the mean *u*_{val}^{2}.", text(unitOf(c.Unit)))
 	nodes := []Node{heading("Uncertainty sources"), b.table("plain", caption, headRow("Source", "Of", "As entered", "#*u*", "#Share", "Pattern", "Origin"), rows...)}
+	if sums := c.NumSums; sums != nil {
+		used := "the root"
+		if c.Choices.NumLinear {
+			used = "the sum"
+		}
+		nodes = append(nodes, paragraph(say("*u*_{num} is {} by the root of the squares of its parts, {} by their sum, as where they depend on each other; {} is used.",
+			digits(sums.Root, 3, fmt.Sprintf("cells.%d.num_sums.root", i)), digits(sums.Linear, 3, fmt.Sprintf("cells.%d.num_sums.linear", i)), text(used))...))
+	}
 	return append(nodes, figures...)
 }
 

@@ -9,7 +9,7 @@ func (b *builder) methods() Node {
 	s := b.open(1, "methods", "Methods")
 	s.Nodes = append(s.Nodes,
 		note(say("Edition of the methods: {}. Published methods are named from professional knowledge; no clause is quoted and no conformity to a standard is claimed.", given(b.in.Edition))...))
-	for _, part := range []func() []Node{signs, budgetMethod, jointMethod, gridMethod, stationPolicy, adequacyMethod, printing} {
+	for _, part := range []func() []Node{signs, budgetMethod, jointMethod, settlingMethod, gridMethod, stationPolicy, adequacyMethod, printing} {
 		s.Nodes = append(s.Nodes, part()...)
 	}
 	return s
@@ -42,6 +42,17 @@ func jointMethod() []Node {
 		formula("offset *a* = ( 1^{T}*V*^{−1}*E* ) / ( 1^{T}*V*^{−1}1 ),   *u*(*a*) = ( 1^{T}*V*^{−1}1 )^{−1/2}"),
 		formula("*χ*^{2} = ( *a*/*u*(*a*) )^{2} + ( *E* − *a* )^{T} *V*^{−1} ( *E* − *a* )"),
 		paragraph(say("The statistic is held against the 95 % point of the *χ*^{2} distribution for normal errors. It says whether the stated uncertainties account for the difference, not why there is one. Generalised least squares and the use of *χ*^{2} are textbook methods.")...),
+	}
+}
+
+func settlingMethod() []Node {
+	return []Node{
+		heading("Settling of a run"),
+		paragraph(say("A monitor is classified before it is given an uncertainty. A change is small where it is at most a tenth of *U*_{grid}, or a thousandth of the value where that is not known (no source). Iterates that cycle or keep changing take half their range as a bound, *u* = bound/√3; those that drift, or of which geometric extrapolation leaves more than a small change to come, have no uncertainty until one is entered with its reason. *U*_{iter} is counted in *u*_{num}, and its ratio to *U*_{grid} should be 0.1 or less. Integrated forces must stop changing with the iterations, and what enters must leave (both common practice, no source). The depth of a residual is no uncertainty of a quantity.")...),
+		paragraph(say("The mean of an unsteady run is taken behind its start-up, found or declared, over whole cycles where there is one. With the correlation time τ of *n* rows, of standard deviation *s*_{n},")...),
+		formula("*u*^{2} = *s*_{n}^{2} / ( *N*_{eff} − 1 ),   *N*_{eff} = *n*/τ,   τ = 1 + 2 Σ *r*_{k}"),
+		paragraph(say("the sum taken over pairs of lags as long as they stay positive and fall. Batch means and the correlation of successive rows give two further values, to compare. Sources: White, Simulation 69, 323 (1997) (start-up); Geyer, Statistical Science 7, 473 (1992) (sum), from memory.")...),
+		paragraph(say("An imbalance is a part of the flux that matters: the named one, or what enters. It is small where the same part of the quantity is at most a tenth of *U*_{grid}, or of |*E*| where no grid uncertainty is known. An entered effect is a bound, *u* = bound/√3. Two runs that differ in precision or platform only give the floor of rounding, a source of its own. Where parts of *u*_{num} depend on each other their sum takes the place of the root of the sum of their squares; both are printed where they differ by more than a fifth.")...),
 	}
 }
 

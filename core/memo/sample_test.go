@@ -118,11 +118,20 @@ func drag() study.Cell {
 		Courses: [5]study.State{study.Settled, study.Settled, study.Settled, study.Settled, study.Doubts},
 		Choices: study.DefaultChoices(), StationsAll: 1, Provisional: true, Degrees: 7.3, K95: 2.34,
 		Monitors: []study.MonitorLine{
-			{Grid: "G3", File: "c1-g3-monitor.dat", Axis: study.AxisIterations, Class: "settled", Rule: "mean over the last third", Mean: .03021, U: 2e-7, From: 401, To: 600, Drift: -1.2e-6, Per: 100, Period: quantity.None, HalfRange: quantity.None},
-			{Grid: "G4", File: "c1-g4-monitor.dat", Axis: study.AxisIterations, Class: "cycling", Rule: "mean over whole cycles", Mean: .0299512, U: .0000712, From: 111, To: 600, Drift: quantity.None, Per: quantity.None, Period: 70, Cycles: 7, HalfRange: .000123},
+			{Grid: "G3", File: "c1-g3-monitor.dat", Axis: study.AxisIterations, Class: "settled", Rule: "mean over the last third", Mean: .03021, U: 2e-7, From: 401, To: 600, Drift: -1.2e-6, Change: -3.6e-8, Per: 100, Limit: 4.1e-5, Remaining: -1.5e-8, Period: quantity.None, HalfRange: quantity.None, OfGrid: .00097},
+			{Grid: "G4", File: "c1-g4-monitor.dat", Axis: study.AxisIterations, Class: "cycling", Rule: "mean over whole cycles", Mean: .0299512, U: .0000712, From: 111, To: 600, Drift: quantity.None, Change: quantity.None, Per: quantity.None, Limit: 4.1e-5, Remaining: quantity.None, Period: 70, Cycles: 7, HalfRange: .000123, OfGrid: .35,
+				Entered: "from a longer run on the same grid", Quantity: "lift coefficient", Unit: "1"},
+			{Grid: "G2", File: "c1-g2-monitor.dat", Axis: study.AxisTime, Class: "unsteady", Rule: "mean behind the start-up", Mean: .0306, U: .00012, From: 1.5, To: 12, Drift: .001, Change: .00003, Per: 10.5, Limit: 4.1e-5, Remaining: quantity.None, Period: .81, Cycles: 12, HalfRange: .0011, OfGrid: quantity.None,
+				Sampling: &study.Sampling{StartUp: 150, Rows: 1051, SD: .00061, Tau: .39, Independent: 26.9, Batches: 5, UBatches: .000131, UMarkov: .000118, Share: .318}},
 		},
-		Balances: []study.BalanceLine{{Grid: "G4", File: "c1-mass.dat", In: 1.204, Out: 1.2038, Net: .0002, Fraction: .000166113, Closed: true}, {File: "c1-heat.dat", In: 10, Out: 10.4, Net: -.4, Fraction: -.04}},
-		Open:     []study.Open{{Course: 4, Missing: "second requirement", Text: "The grid factor 1.15 is assumed. State why it may be used", Target: study.Target{Kind: "question", ID: "C1", Field: "k_num"}}},
+		Balances: []study.BalanceLine{
+			{Grid: "G4", File: "c1-mass.dat", Kind: "mass", In: 1.204, Out: 1.2038, Net: .0002, Scale: 1.204, ScaleOf: "inflow", Fraction: .000166113, Limit: .00137, LimitOf: "a tenth of U_grid", OfGrid: .0121, OfE: .0142, Closed: true, Effect: quantity.None},
+			{File: "c1-heat.dat", Kind: "energy", In: 10, Out: 10.4, Net: -.4, Scale: 8, ScaleOf: "heat exchanged", Fraction: -.05, Limit: .001, LimitOf: "a thousandth, by habit", OfGrid: quantity.None, OfE: quantity.None, Effect: .00007, EffectWhy: "two runs with and without the source"},
+		},
+		Residuals: []study.ResidualLine{{Grid: "G4", File: "c1-g4-residuals.dat", Name: "continuity", Decades: 2.13, PerFirst: .71, PerLast: .021, Per: 200, From: 401, To: 601, Stalled: true}},
+		RoundOff:  &study.RoundOffLine{Grid: "G4", File: "c1-g4-single.dat", RMS: 3.1e-7, Max: 3.3e-7, N: 17},
+		NumSums:   &study.NumSums{Root: .000364, Linear: .000479, Apart: true},
+		Open:      []study.Open{{Course: 4, Missing: "second requirement", Text: "The grid factor 1.15 is assumed. State why it may be used", Target: study.Target{Kind: "question", ID: "C1", Field: "k_num"}}},
 		Stations: []study.Station{{
 			X: quantity.Written(quantity.None), S: .02995, D: .0296, E: .00035, UD: .0004, UNum: .000357391304, UInterp: quantity.None, UInput: .00025, UVal: .000591741, Ratio: .5914751, Lo: -.000833482, Hi: .001533482, Line: 7, Whitened: quantity.None, Reading: study.WithinNoise,
 		}},
@@ -157,7 +166,7 @@ func oscillating() study.Cell {
 	c.Grids = &study.Grids{Points: gridPoints(35.68, 36.34, 35.96, 36.172), Dimension: 3, Class: "oscillatory", Ratio: -.5578947, Order: none, Formal: 2, Extrapolated: none, Ea: none, Eext: none, GCI: none, U: none, UNum: .1075, KNum: 1.15, Rule: "half-range of the three finest as a bound", R21: 1.336, R32: 1.338, OrderLow: none, OrderHigh: none, NextCells: none, NextCost: none}
 	c.Sources = c.Sources[2:]
 	c.Sources[0].Share = none
-	c.Degrees, c.K95, c.Monitors, c.Balances = quantity.None, quantity.None, nil, nil
+	c.Degrees, c.K95, c.Monitors, c.Balances, c.Residuals, c.RoundOff, c.NumSums = quantity.None, quantity.None, nil, nil, nil, nil, nil
 	c.Notices = []notice.Notice{notice.New("u-missing"), notice.New("grid-oscillatory", "−0.56", "0.19")}
 	return c
 }

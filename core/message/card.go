@@ -11,6 +11,7 @@ import (
 	"weirmark/core/profile"
 	"weirmark/core/quantity"
 	"weirmark/core/refinement"
+	"weirmark/core/settling"
 	"weirmark/core/study"
 	"weirmark/core/tablefile"
 )
@@ -100,13 +101,17 @@ func columnWords(c tablefile.Column) string {
 
 // needed reports whether an empty entry keeps a slip from being used.
 func needed(p *study.Slip, field string) bool {
+	role := p.Role.Value
+	wholeRun := role == study.Balance || role == study.Residual
 	switch field {
-	case "role", "case", "quantity", "y.column":
-		return p.Role.Value != study.Unused
-	case "y.unit":
-		return p.Role.Value != study.Unused && p.Role.Value != study.Balance
+	case "role", "case", "y.column":
+		return role != study.Unused
+	case "quantity", "y.unit":
+		return role != study.Unused && !wholeRun
 	case "x.unit":
-		return p.X.Column.Given() && p.Role.Value != study.Balance && p.Role.Value != study.Monitor
+		return p.X.Column.Given() && !wholeRun && role != study.Monitor
+	case "scale":
+		return role == study.Balance && !p.X.Column.Given()
 	case "u_factor", "u_basis":
 		return p.U.Column.Given()
 	case "size.column":
@@ -126,14 +131,14 @@ func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
 		return Entry{Target: study.Target{Kind: "slip", ID: p.ID, Field: field}, Label: label, Value: f.Value, By: f.By, Options: options, Hint: hint}
 	}
 	list := []Entry{
-		entry("role", "looks like", p.Role, []Option{{study.Simulation, "a simulation"}, {study.GridValues, "values over grids"}, {study.Reference, "reference data"}, {study.Monitor, "a monitor of one run"}, {study.Balance, "a balance of one run"}, {study.Unused, "not used"}}, ""),
+		entry("role", "looks like", p.Role, []Option{{study.Simulation, "a simulation"}, {study.GridValues, "values over grids"}, {study.Reference, "reference data"}, {study.Monitor, "a monitor of one run"}, {study.Balance, "a balance of one run"}, {study.Residual, "a residual of one run"}, {study.Precision, "the run again, in other precision"}, {study.Unused, "not used"}}, ""),
 	}
 	if p.Role.Value == study.Unused {
 		return list
 	}
 	list = append(list,
 		entry("case", "case", p.Case, free, "e.g. C1"),
-		entry("quantity", "quantity", p.Quantity, free, "e.g. drag coefficient"))
+		entry("quantity", "quantity", p.Quantity, free, quantityHint(p)))
 	if p.Role.Value != study.Reference {
 		list = append(list, entry("model", "model", p.Model, free, "e.g. A"))
 	}
@@ -141,9 +146,9 @@ func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
 	case study.GridValues:
 		list = append(list, entry("size.column", "cells in", p.Size.Column, columns, ""), entry("grid", "grid names in", p.Grid, columns, ""))
 	default:
-		label := map[string]string{study.Monitor: "iterations or time in", study.Balance: "what enters in"}[p.Role.Value]
+		label := map[string]string{study.Monitor: "iterations or time in", study.Residual: "iterations in", study.Balance: "what enters in"}[p.Role.Value]
 		list = append(list, entry("x.column", cmp.Or(label, "stations in"), p.X.Column, columns, "none for a single value"))
-		if p.X.Column.Given() {
+		if p.X.Column.Given() && p.Role.Value != study.Residual {
 			list = append(list, entry("x.unit", "unit of stations", p.X.Unit, free, "m, mm, … or 1 for a pure number"))
 		}
 	}
@@ -153,7 +158,18 @@ func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
 	list = append(list,
 		entry("y.column", map[bool]string{true: "what leaves in", false: "values in"}[p.Role.Value == study.Balance], p.Y.Column, columns, ""),
 		entry("y.unit", "unit of values", p.Y.Unit, free, "Pa, m/s, … or 1 for a pure number"))
-	if p.Role.Value == study.Monitor || p.Role.Value == study.Balance {
+	switch p.Role.Value {
+	case study.Residual:
+		list = list[:len(list)-1] // decades have no unit
+	case study.Balance:
+		list = append(list, entry("balance_of", "of", p.BalanceOf, []Option{{"", "mass"}, {string(settling.Energy), "energy"}, {string(settling.Species), "a species"}, {string(settling.Force), "forces: enters drives, leaves holds back"}}, ""),
+			entry("scale", "the flux that matters", p.Scale, free, "in the unit of the file; empty: what enters"))
+		if p.Scale.Given() {
+			list = append(list, entry("scale_name", "which is", p.ScaleName, free, "e.g. the heat exchanged"))
+		}
+	}
+	switch p.Role.Value {
+	case study.Monitor, study.Balance, study.Residual, study.Precision:
 		list = append(list, entry("grid", "grid", p.Grid, free, "e.g. G4"))
 	}
 	if p.X.Column.Given() && (p.Role.Value == study.Simulation || p.Role.Value == study.Reference) {
@@ -184,6 +200,13 @@ func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
 		}
 	}
 	return list
+}
+
+func quantityHint(p *study.Slip) string {
+	if p.Role.Value == study.Balance || p.Role.Value == study.Residual {
+		return "empty: all of the case"
+	}
+	return "e.g. drag coefficient"
 }
 
 // coverages are the answers to what a stated uncertainty means.
@@ -375,6 +398,7 @@ func choices(q *study.Question) []Entry {
 		entry("dimension", "grids are", strconv.Itoa(c.Dimension), []Option{{"2", "two-dimensional"}, {"3", "three-dimensional"}}, ""),
 		entry("interpolation", "simulation at the stations", string(c.Interpolation), []Option{{"linear", "linear"}, {"monotone", "monotone cubic"}}, ""),
 		entry("u_interp", "interpolation uncertainty", yes(c.UInterp), []Option{{"yes", "counted"}, {"no", "not counted"}}, ""),
+		entry("num_linear", "parts of u_num", yes(c.NumLinear), []Option{{"no", "independent: root of the squares"}, {"yes", "dependent: sum"}}, "grid and iteration errors may depend on each other"),
 		entry("num_shared", "u_num between stations", yes(c.NumShared), []Option{{"no", "independent"}, {"yes", "the same error at all"}}, ""),
 	}
 }
@@ -472,9 +496,9 @@ func criterionEntries(q *study.Question, list EntryList) EntryList {
 	return list
 }
 
-// lists are the conditions of both sides, the regions, the point of
+// lists are the runs, the conditions of both sides, the regions, the point of
 // application and the card of the case.
-func lists(s *study.Study, q *study.Question) []EntryList {
+func lists(s *study.Study, q *study.Question, c *study.Cell) []EntryList {
 	id := questionID(q)
 	entry := func(kind, id, field, label, value string, options []Option, hint string) Entry {
 		return Entry{Target: study.Target{Kind: kind, ID: id, Field: field}, Label: label, Value: value, By: study.Entered, Options: options, Hint: hint}
@@ -520,7 +544,7 @@ func lists(s *study.Study, q *study.Question) []EntryList {
 		entry("case", q.Case, "speed", "reference speed U in m/s", s.CardValue(q.Case, "speed"), []Option{}, "a scale of velocities"),
 		entry("case", q.Case, "angle", "angle of attack α in degrees", s.CardValue(q.Case, "angle"), []Option{}, "")}}}}
 	criteria := criterionEntries(q, list(3, study.ItemCriterion, id, "Criteria of the scores", "limits bound to their scope; a result beyond one is no statement on the model by itself"))
-	return []EntryList{conditions, card, scoreEntries(q), criteria, regions, application}
+	return []EntryList{runList(s, q, c), conditions, card, scoreEntries(q), criteria, regions, application}
 }
 
 // readingEntries are the answers about how a file is read: those that were

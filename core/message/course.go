@@ -16,7 +16,7 @@ import (
 // comparison and what follows from it are left out.
 func courses(c *study.Cell, figures []CellFigure, veiled bool) []Course {
 	list := []Course{
-		{Question: "Has each run settled?", Answer: settledAnswer(c), Tables: settledTables(c)},
+		{Question: "Has each run settled?", Answer: settledAnswer(c), Numbers: settledNumbers(c), Tables: settledTables(c)},
 		{Question: "Is the grid fine enough for this quantity?", Answer: gridAnswer(c), Numbers: gridNumbers(c), Tables: gridTables(c)},
 		{Question: "Is it the same thing?", Answer: sameAnswer(c)},
 		{Question: "Do they agree?", Answer: agreeAnswer(c), Numbers: agreeNumbers(c), Tables: agreeTables(c)},
@@ -57,7 +57,7 @@ func courses(c *study.Cell, figures []CellFigure, veiled bool) []Course {
 // courseOfFigure tells the course of a figure by the end of its name.
 func courseOfFigure(f chart.Figure) int {
 	switch _, kind, _ := strings.Cut(f.ID, "-"); kind {
-	case "monitors":
+	case "monitors", "balances":
 		return 0
 	case "grids":
 		return 1
@@ -90,7 +90,7 @@ func courseOf(n notice.Notice) int {
 	switch stage {
 	case "monitor", "balance", "sampling", "iteration", "residual":
 		return 0
-	case "grid", "dimension":
+	case "grid", "dimension", "precision", "num":
 		return 1
 	case "covariance", "joint", "crossing":
 		return 3
@@ -103,39 +103,24 @@ func courseOf(n notice.Notice) int {
 	return 2
 }
 
-func settledAnswer(c *study.Cell) string {
-	if text := c.SettledText(); text != "" {
-		return capitalised(text) + "."
-	}
-	if c.Summary == nil && c.Grids == nil {
-		return "No simulation is read yet."
-	}
-	return "Not shown: no monitor is given for " + c.Quantity + "."
-}
-
 func capitalised(text string) string { return strings.ToUpper(text[:1]) + text[1:] }
 
-// settledTables lists the monitors and balances.
-func settledTables(c *study.Cell) []Table {
-	var tables []Table
-	if len(c.Monitors) > 0 {
-		t := Table{Title: "Monitors", Head: []string{"grid", "file", "class", "mean", "u", "window", "rule"}, Rows: [][]string{}}
-		for _, m := range c.Monitors {
-			t.Rows = append(t.Rows, []string{cmp.Or(m.Grid, "–"), m.File, m.Class, text(m.Mean, 5), text(m.U, 2), text(m.From, 4) + " to " + text(m.To, 4), m.Rule})
-		}
-		tables = append(tables, t)
+func gridAnswer(c *study.Cell) string { return familyAnswer(c) + roundOffWords(c) }
+
+// roundOffWords says what rounding alone changes.
+func roundOffWords(c *study.Cell) string {
+	r := c.RoundOff
+	if r == nil {
+		return ""
 	}
-	if len(c.Balances) > 0 {
-		t := Table{Title: "Balances", Head: []string{"grid", "file", "in", "out", "in less out", "of what enters"}, Rows: [][]string{}}
-		for _, b := range c.Balances {
-			t.Rows = append(t.Rows, []string{cmp.Or(b.Grid, "–"), b.File, text(b.In, 5), text(b.Out, 5), text(b.Net, 2), quantity.SignedPercent(float64(b.Fraction)) + " %"})
-		}
-		tables = append(tables, t)
+	words := " Precision or platform alone changes it by " + text(r.RMS, 2) + c.UnitSuffix()
+	if r.Doubt {
+		words += ", too much to tell the two finest grids apart"
 	}
-	return tables
+	return words + "."
 }
 
-func gridAnswer(c *study.Cell) string {
+func familyAnswer(c *study.Cell) string {
 	g := c.Grids
 	if g == nil {
 		for _, s := range c.Sources {
@@ -204,7 +189,27 @@ func gridNumbers(c *study.Cell) []Headline {
 	return list
 }
 
-func gridTables(c *study.Cell) []Table {
+func gridTables(c *study.Cell) []Table { return append(familyTables(c), sumTables(c)...) }
+
+// sumTables shows u_num by both sums of its parts, and the round-off floor.
+func sumTables(c *study.Cell) []Table {
+	var tables []Table
+	if s := c.NumSums; s != nil && (s.Apart || c.Choices.NumLinear) {
+		used := [2]string{"yes", ""}
+		if c.Choices.NumLinear {
+			used = [2]string{"", "yes"}
+		}
+		tables = append(tables, Table{Title: "Parts of u_num together", Head: []string{"", "u_num", "used"}, Rows: [][]string{
+			{"root of the squares: independent", text(s.Root, 3) + c.UnitSuffix(), used[0]}, {"sum: dependent", text(s.Linear, 3) + c.UnitSuffix(), used[1]}}})
+	}
+	if r := c.RoundOff; r != nil {
+		tables = append(tables, Table{Title: "Round-off floor", Head: []string{"grid", "second run", "values", "root mean square", "most"}, Rows: [][]string{
+			{cmp.Or(r.Grid, "–"), r.File, strconv.Itoa(r.N), text(r.RMS, 2) + c.UnitSuffix(), text(r.Max, 2) + c.UnitSuffix()}}})
+	}
+	return tables
+}
+
+func familyTables(c *study.Cell) []Table {
 	g := c.Grids
 	if g == nil {
 		return nil

@@ -38,11 +38,19 @@ func TestBalance(t *testing.T) {
 		// U_grid is 2 % of the quantity: a tenth of it is 0.2 %.
 		{"small beside the grid uncertainty", Flux{Kind: Mass, In: []float64{1}, Out: []float64{0.998}}, Options{Scale: 0.03, UGrid: 0.0006}, 0.002, 1, 0.002, true, []string{}},
 		{"not small beside it", Flux{Kind: Mass, In: []float64{1}, Out: []float64{0.9979}}, Options{Scale: 0.03, UGrid: 0.0006}, 0.0021, 1, 0.002, false, []string{"balance-open"}},
+		// No grid uncertainty, but E of 5 % of the quantity: a tenth of it is 0.5 %.
+		{"small beside E", Flux{Kind: Mass, In: []float64{1}, Out: []float64{0.995}}, Options{Scale: 0.03, E: -0.0015}, 0.005, 1, 0.005, true, []string{}},
+		{"not small beside E", Flux{Kind: Mass, In: []float64{1}, Out: []float64{1.0051}}, Options{Scale: 0.03, E: -0.0015}, -0.0051, 1, 0.005, false, []string{"balance-open"}},
 		{"blank", Flux{Kind: Mass, In: []float64{1, nan}, Out: []float64{1}}, Options{}, nan, nan, 0.001, false, []string{"balance-missing"}},
 		{"infinite", Flux{Kind: Mass, In: []float64{1}, Out: []float64{math.Inf(1)}}, Options{}, nan, nan, 0.001, false, []string{"balance-missing"}},
 		{"nothing", Flux{Kind: Mass}, Options{}, 0, nan, 0.001, false, []string{"balance-scale"}},
 	} {
 		b := Balance(row.flux, row.opt)
+		// Without anything of the quantity the limit is a habit, which is told.
+		if habit := row.opt == (Options{}) && !math.IsNaN(row.scale); habit != notice.Has(b.Notices, "balance-habit") || habit != strings.Contains(b.LimitOf, "habit") && !math.IsNaN(row.scale) {
+			t.Errorf("%s: limit is %s, %v", row.what, b.LimitOf, codes(b.Notices))
+		}
+		b.Notices = slices.DeleteFunc(b.Notices, func(n notice.Notice) bool { return n.Code == "balance-habit" })
 		same := func(got, want float64) bool {
 			return math.IsNaN(got) && math.IsNaN(want) || near(got, want, 1e-12)
 		}
@@ -57,6 +65,14 @@ func TestDemoBalance(t *testing.T) {
 	b := Balance(Flux{Kind: Mass, In: []float64{0.8}, Out: []float64{0.7896}}, Options{Scale: 5.67, UGrid: 0.057, E: -0.2})
 	want := "Mass imbalance 1.3 % of inflow (more enters than leaves; the same fraction of the quantity is 1.3 of its U_grid; the same fraction of the quantity is 0.37 of |E|). Its effect on the quantity is unknown: continue the run, or enter an effect with a reason."
 	if len(b.Notices) != 1 || b.Notices[0].Text != want || b.Notices[0].Severity != notice.Stop || !near(b.OfGrid, 0.013*5.67/0.057, 1e-9) || !near(b.OfE, 0.013*5.67/0.2, 1e-9) {
+		t.Errorf("%+v", b)
+	}
+}
+
+// TestBalanceNamesItsScale: the flux that a person named stands in the message.
+func TestBalanceNamesItsScale(t *testing.T) {
+	b := Balance(Flux{Kind: Energy, In: []float64{500}, Out: []float64{499}, Scale: 20, ScaleOf: "the heat exchanged"}, Options{})
+	if b.ScaleOf != "the heat exchanged" || !strings.Contains(b.Notices[len(b.Notices)-1].Text, "Energy imbalance 5.0 % of the heat exchanged (more enters than leaves)") {
 		t.Errorf("%+v", b)
 	}
 }

@@ -1,6 +1,10 @@
 package settling
 
-import "math"
+import (
+	"math"
+
+	"weirmark/core/quantity"
+)
 
 // Limits of the search for a cycle. No source.
 const (
@@ -68,6 +72,24 @@ func cycleFrom(y []float64, startUp int) (from int, period float64, ok bool) {
 		}
 	}
 	return startUp, 0, false
+}
+
+// cycle returns the first row of the part that repeats itself and its period in
+// rows: the declared one where it is two rows or more and three whole cycles of
+// it lie behind from, else what is found. A declared start is kept.
+func (r *record) cycle(from int, opt Options) (first int, period float64, ok bool) {
+	if opt.Period > 0 {
+		period = opt.Period / r.step
+		if period >= 2 && float64(len(r.y)-from) >= (leastCycles-wholeSlack)*period {
+			return from, period, true
+		}
+		r.tell("sampling-period", quantity.Text(opt.Period, 4), opt.axis(), opt.name(), leastCycles)
+	}
+	if opt.Declared {
+		period, ok = findPeriod(r.y[from:])
+		return from, period, ok
+	}
+	return cycleFrom(r.y, from)
 }
 
 // fitted returns the period near the given one, within two fifths of what the

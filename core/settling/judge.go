@@ -73,14 +73,15 @@ func Judge(s Series, opt Options) Monitor {
 		return m
 	}
 	m.Last = r.y[len(r.y)-1]
-	from, ok := StartUp(r.y)
-	if !ok {
-		from = len(r.y) / 2
-		if opt.Time {
-			m.tell("sampling-startup", opt.name())
-		}
+	from, ok := r.begin(opt)
+	switch {
+	case len(r.y)-from < leastRows:
+		m.Class, m.Rule = Short, "not judged: too few rows behind the declared start"
+		m.tell("monitor-short", opt.name(), len(r.y)-from, leastRows)
+		return m
+	case !ok && opt.Time:
+		m.tell("sampling-startup", opt.name())
 	}
-	from = min(from, len(r.y)-leastRows)
 	j := judgement{Monitor: &m, record: r, opt: opt, from: from}
 	j.scale()
 	switch {
@@ -184,9 +185,17 @@ func (j *judgement) drifting(slope float64) {
 	j.tell("monitor-drift", j.opt.name(), direction, j.fraction(slope/j.record.step*j.Per), quantity.Text(j.Per, 3), j.opt.axis(), come)
 }
 
+// cycle looks for a cycle behind the start-up and takes over what is told.
+func (j *judgement) cycle() (from int, period float64, ok bool) {
+	j.record.notices = nil
+	from, period, ok = j.record.cycle(j.from, j.opt)
+	j.Notices = append(j.Notices, j.record.notices...)
+	return from, period, ok
+}
+
 // iterates judges the rows of an iteration.
 func (j *judgement) iterates() {
-	from, period, ok := cycleFrom(j.record.y, j.from)
+	from, period, ok := j.cycle()
 	y := j.record.y[from:]
 	if ok {
 		c := cycleOf(y, period)
@@ -289,7 +298,7 @@ func (j *judgement) approached(size int, fromMean float64) {
 
 // samples judges the rows of an unsteady run.
 func (j *judgement) samples() {
-	from, period, cyclic := cycleFrom(j.record.y, j.from)
+	from, period, cyclic := j.cycle()
 	y := j.record.y[from:]
 	if cyclic {
 		j.Period = period * j.record.step

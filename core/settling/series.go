@@ -25,6 +25,10 @@ type Options struct {
 	UGrid float64 // grid uncertainty U (about 95 %) in the unit of the values; 0 unknown
 	UNum  float64 // u_num in the unit of the values; 0 unknown
 	E     float64 // comparison error in the unit of the values; 0 unknown
+
+	Declared bool    // the start-up ends at Start, in place of the rule for it
+	Start    float64 // At
+	Period   float64 // declared period in At; 0 looks for one
 }
 
 func (o Options) name() string {

@@ -47,21 +47,22 @@ const (
 // short one: no count of samples can tell. Cost n log n.
 func Statistics(s Series, opt Options) Stat {
 	r := newRecord(s, opt)
-	if r.broken || len(r.y) < leastRows {
+	from, ok := 0, true
+	if !r.broken && len(r.y) >= leastRows {
+		from, ok = r.begin(opt)
+	}
+	if rows := len(r.y) - from; r.broken || rows < leastRows {
 		if !r.broken {
-			r.tell("monitor-short", opt.name(), len(r.y), leastRows)
+			r.tell("monitor-short", opt.name(), rows, leastRows)
 		}
 		st := noStat("fewer than 20 rows, or none at the end")
 		st.Notices = r.notices
 		return st
 	}
-	from, ok := StartUp(r.y)
 	if !ok {
-		from = len(r.y) / 2
 		r.tell("sampling-startup", opt.name())
 	}
-	from = min(from, len(r.y)-leastRows)
-	from, period, _ := cycleFrom(r.y, from)
+	from, period, _ := r.cycle(from, opt)
 	st := average(r, from, period, opt)
 	st.Notices = append(r.notices, st.Notices...)
 	return st
@@ -79,7 +80,7 @@ func noStat(why string) Stat {
 // in rows, 0 for none.
 func average(r record, from int, period float64, opt Options) Stat {
 	st := noStat("")
-	st.StartUp, st.Rule = from, "mean behind the start-up; u from the correlation time"
+	st.StartUp, st.Rule = from, "mean behind "+opt.startWords()+"; u from the correlation time"
 	y := r.y[from:]
 	samples, width := y, 1.
 	if period > 0 {
@@ -88,7 +89,10 @@ func average(r record, from int, period float64, opt Options) Stat {
 		st.Period, st.Cycles = period*r.step, c.count
 		width = min(unit(period), float64(len(y)))
 		samples = unitMeans(y, width)
-		st.Rule = "mean over whole cycles; u from the correlation time of their means"
+		st.Rule = "mean over whole cycles behind " + opt.startWords() + "; u from the correlation time of their means"
+		if opt.Period > 0 {
+			st.Rule = "mean over whole cycles of the declared period; u from the correlation time of their means"
+		}
 	}
 	st.Rows = len(y)
 	st.Window = [2]float64{r.at(len(r.y) - len(y)), r.at(len(r.y) - 1)}
@@ -130,16 +134,25 @@ func standardOfMean(y []float64) (u, tau, independent float64) {
 }
 
 func (st *Stat) judgeSampling(opt Options) {
-	count := quantity.Round(st.Independent, 10)
-	switch {
-	case math.IsNaN(st.U):
+	if math.IsNaN(st.U) {
 		st.Rule = "no uncertainty of the mean: too few independent samples"
-		st.Notices = append(st.Notices, notice.New("sampling-none", quantity.Text(count, 2), opt.name()))
-	case count < fewIndependent || opt.UNum > 0 && st.U > opt.UNum/2:
-		share := "u_num is not known"
-		if opt.UNum > 0 {
-			share = quantity.Text(100*st.U/opt.UNum, 2) + " % of u_num"
-		}
-		st.Notices = append(st.Notices, notice.New("sampling-short", quantity.Text(count, 2), opt.name(), quantity.Text(st.U, 2), share))
+		st.Notices = append(st.Notices, notice.New("sampling-none", quantity.Text(quantity.Round(st.Independent, 10), 2), opt.name()))
+		return
 	}
+	if n, short := st.Short(opt.name(), quantity.Text(st.U, 2), opt.UNum); short {
+		st.Notices = append(st.Notices, n)
+	}
+}
+
+// Short returns the notice of an average over few independent samples, or of
+// one whose uncertainty is more than half of u_num, which holds it (0 or NaN:
+// not known). Shown is U as the notice prints it.
+func (st Stat) Short(name, shown string, uNum float64) (n notice.Notice, short bool) {
+	count := quantity.Round(st.Independent, 10)
+	share := "u_num is not known"
+	if uNum > 0 {
+		share = quantity.Text(100*st.U/uNum, 2) + " % of u_num"
+	}
+	short = count < fewIndependent || quantity.Round(st.U, 10) > quantity.Round(uNum/2, 10) && uNum > 0
+	return notice.New("sampling-short", quantity.Text(count, 2), name, shown, share), short
 }

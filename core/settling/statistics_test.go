@@ -109,6 +109,54 @@ func TestStatisticsLew(t *testing.T) {
 	}
 }
 
+// TestDeclaredStart: what a person declares takes the place of the rule. The
+// rows before row 400 lie at 5, the others at 1.
+func TestDeclaredStart(t *testing.T) {
+	const step = 0.5
+	at := made(1000, func(i float64) float64 { return 10 + step*i })
+	y := plus(append(flat(400, 5), flat(600, 1)...), 0.01, markov(generator(3), 0.3, 1000))
+	for _, row := range []struct {
+		start float64
+		first int
+	}{{10 + 400*step, 400}, {10 + 499.2*step, 500}, {10 + 500*step, 500}, {-5, 0}} {
+		opt := Options{Time: true, Declared: true, Start: row.start, Scale: 1e6} // nothing is a drift
+		st, m := Statistics(Series{at, y}, opt), Judge(Series{at, y}, opt)
+		if st.StartUp != row.first || st.Rows != 1000-row.first || row.first > 0 && !strings.Contains(st.Rule, "the declared start") || !near(st.Mean, mean(y[row.first:]), 1e-12) {
+			t.Errorf("start %v: %+v", row.start, st)
+		}
+		if m.Stat == nil || m.Stat.StartUp != row.first || m.Mean != st.Mean {
+			t.Errorf("start %v: %+v", row.start, m)
+		}
+	}
+	late := Options{Time: true, Declared: true, Start: 10 + 985*step}
+	st, m := Statistics(Series{at, y}, late), Judge(Series{at, y}, late)
+	if !math.IsNaN(st.Mean) || !slices.Contains(codes(st.Notices), "monitor-short") || m.Class != Short || !slices.Contains(codes(m.Notices), "monitor-short") {
+		t.Errorf("15 rows: %+v, %+v", st, m)
+	}
+}
+
+// TestDeclaredPeriod: whole cycles of a declared period, where the noise hides
+// it from the search; a period that the record does not hold three times, or
+// that is no two rows long, is not used, and that is told.
+func TestDeclaredPeriod(t *testing.T) {
+	const n, period = 1000, 73.4
+	y := plus(made(n, func(i float64) float64 { return 1 + 0.05*math.Sin(2*math.Pi*i/period) }), 0.3, markov(generator(9), 0, n))
+	if found := Statistics(Series{Value: y}, Options{Time: true}); found.Cycles != 0 {
+		t.Fatalf("the search finds the hidden cycle: %+v", found)
+	}
+	st := Statistics(Series{Value: y}, Options{Time: true, Period: period, Declared: true})
+	rows := st.Window[1] - st.Window[0] + 1
+	if st.Period != period || st.Cycles != 13 || math.Abs(rows-13*period) > 0.6 || !strings.Contains(st.Rule, "declared period") || len(st.Notices) > 0 && st.Notices[0].Code == "sampling-period" {
+		t.Errorf("%v rows: %+v", rows, st)
+	}
+	for _, bad := range []float64{340, 1.9} {
+		opt := Options{Time: true, Period: bad, Declared: true}
+		if st, m := Statistics(Series{Value: y}, opt), Judge(Series{Value: y}, opt); !slices.Contains(codes(st.Notices), "sampling-period") || st.Cycles != 0 || !slices.Contains(codes(m.Notices), "sampling-period") {
+			t.Errorf("period %v: %+v, %v", bad, st, codes(m.Notices))
+		}
+	}
+}
+
 func TestStatisticsNotices(t *testing.T) {
 	short := markov(generator(5), 0.97, 700)
 	for _, row := range []struct {

@@ -126,7 +126,7 @@ func (w *work) shares() {
 	for _, p := range w.parts {
 		line := p.line
 		sum := squares(p.source.U, rows)
-		line.U, line.Share = w.step(math.Sqrt(sum/float64(len(rows)))), None
+		line.U, line.Share = w.step(math.Sqrt(squares(p.stated(), rows)/float64(len(rows)))), None
 		if whole > 0 {
 			line.Share = Number(sum / whole)
 		}

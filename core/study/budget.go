@@ -16,9 +16,10 @@ import (
 type part struct {
 	line    SourceLine
 	source  uncertainty.Source
-	degrees float64 // of freedom; +Inf where u is taken as known
-	interp  bool    // of the interpolation to the stations
-	aside   bool    // does not by itself make a numerical uncertainty
+	degrees float64   // of freedom; +Inf where u is taken as known
+	interp  bool      // of the interpolation to the stations
+	aside   bool      // does not by itself make a numerical uncertainty
+	plain   []float64 // standard uncertainty as stated, where sums of u_num raised it
 
 	own     []float64            // of a source of the data that acts on both sides: its uncertainty there; source is what is left in E
 	members []uncertainty.Source // of sampled runs: the sources whose sum source.U is
@@ -474,6 +475,7 @@ func (w *work) gridsMissing() string {
 // cannot do without.
 func (w *work) total() {
 	n := len(w.x)
+	w.sumNumerical()
 	side := func(of string, interp bool) []float64 {
 		var sources []uncertainty.Source
 		for _, p := range w.parts {

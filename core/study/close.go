@@ -141,7 +141,7 @@ func (w *work) referenceDoubts() {
 // courses sets the state of the five courses of evidence.
 func (w *work) courses() {
 	given := [5]bool{
-		len(w.cell.Monitors)+len(w.cell.Balances) > 0,
+		len(w.cell.Monitors)+len(w.cell.Balances)+len(w.cell.Residuals) > 0,
 		w.cell.Grids != nil || w.has(OfNumerical),
 		w.reference != nil && w.finest() != nil,
 		w.cell.Summary != nil,
@@ -161,7 +161,7 @@ func (w *work) courses() {
 	}
 	for _, n := range w.cell.Notices {
 		if n.Severity == notice.Stop {
-			if course, known := stopsCourse[n.Code]; known && w.q.Answers[n.Code] == "" {
+			if course, known := stopsCourse[n.Code]; known && (w.q.Answers[n.Code] == "" || byEntry[n.Code] != "") {
 				w.cell.Courses[course] = Blocked
 			}
 		}

@@ -174,6 +174,11 @@ func (s *Study) Clone() *Study {
 		q.Excluded = append([]Exclusion{}, q.Excluded...)
 		q.Conditions = append([]Matching{}, q.Conditions...)
 		q.Regions = append([]Region{}, q.Regions...)
+		q.Runs = append([]RunEntry(nil), q.Runs...)
+		if q.StandIn != nil {
+			other := *q.StandIn
+			q.StandIn = &other
+		}
 		if q.Scores != nil {
 			scores := *q.Scores
 			scores.Criteria = slices.Clone(scores.Criteria)

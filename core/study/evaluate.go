@@ -149,7 +149,7 @@ func (s *Study) uses(id string) []string {
 
 // belongs reports whether a slip is of a question and plays one of the roles.
 func (q *Question) belongs(p *Slip, roles ...string) bool {
-	if p.Case.Value != q.Case || p.Quantity.Value != q.Quantity {
+	if p.Case.Value != q.Case || p.Quantity.Value != q.Quantity && !(p.anyQuantity() && !p.Quantity.Given()) {
 		return false
 	}
 	for _, role := range roles {
@@ -159,6 +159,15 @@ func (q *Question) belongs(p *Slip, roles ...string) bool {
 	}
 	return false
 }
+
+// ofRun reports whether a slip shows how a run went, not what came of it.
+func (p *Slip) ofRun() bool {
+	return p.Role.Value == Monitor || p.Role.Value == Residual || p.Role.Value == Balance
+}
+
+// anyQuantity reports whether a slip without a quantity counts for every
+// quantity of its case: residuals and balances are of the run as a whole.
+func (p *Slip) anyQuantity() bool { return p.Role.Value == Residual || p.Role.Value == Balance }
 
 // models lists the models that a question has simulations of, in the order
 // of their slips; one nameless model where there is none.
@@ -200,7 +209,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		Case: q.Case, Condition: q.Condition, Quantity: q.Quantity, Symbol: q.Symbol, Model: model,
 		Reference: q.ReferenceID, Kind: q.Kind.Value, Use: q.Use.Value, Downward: q.Downward, Choices: choices,
 		Unit: "1", XUnit: "1", Degrees: None, K95: None,
-		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Scores: []ScoreLine{}, Regions: []RegionLine{}, Monitors: []MonitorLine{}, Balances: []BalanceLine{}, Conditions: []Compared{}, Sources: []SourceLine{}, Fragile: []Fragility{},
+		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Scores: []ScoreLine{}, Regions: []RegionLine{}, Monitors: []MonitorLine{}, Balances: []BalanceLine{}, Residuals: []ResidualLine{}, Conditions: []Compared{}, Sources: []SourceLine{}, Fragile: []Fragility{},
 		Notices: []notice.Notice{}, FilesUsed: []string{},
 		Crossings: Crossings{Simulation: []Crossing{}, Reference: []Crossing{}},
 		Curve:     Curve{X: []Written{}, Y: []Written{}, UNum: []Number{}},
@@ -212,9 +221,11 @@ func (e *evaluation) workWith(w *work) Cell {
 		w.matchConditions()
 		w.doubtCurves()
 		w.family()
+		w.roundOff()
 		w.settle()
 		w.budget()
 		w.inputForm()
+		w.shareOfSampling()
 		w.agree()
 		w.sample()
 		w.doubtComparison()
@@ -254,6 +265,8 @@ type work struct {
 	refined  refinement.Result
 	gridU    []float64 // standard uncertainty from the grid study; nil where there is none
 	blocked  bool      // the grid study says that there is none
+	floor    []float64 // standard uncertainty by rounding at the stations; nil where no second run shows it
+	averages []average // of unsteady runs that count in u_num
 	parts    []part
 	uD, uNum []float64
 	uInput   []float64
@@ -495,9 +508,9 @@ func (p *Slip) fields() []slipField {
 	all := []slipField{
 		{path: "role", name: "role", field: p.Role, needed: true, course: 2},
 		{path: "case", name: "case", field: p.Case, needed: true, course: 2},
-		{path: "quantity", name: "quantity", field: p.Quantity, needed: true, course: 2},
+		{path: "quantity", name: "quantity", field: p.Quantity, needed: !p.anyQuantity(), course: 2},
 		{path: "y.column", name: "column of values", field: p.Y.Column, needed: true, course: 2},
-		{path: "y.unit", name: "unit of " + cmp.Or(p.Y.Column.Value, "the values"), field: p.Y.Unit, needed: p.Role.Value != Balance, course: 2, unitOf: cmp.Or(p.Y.Column.Value, "the values")},
+		{path: "y.unit", name: "unit of " + cmp.Or(p.Y.Column.Value, "the values"), field: p.Y.Unit, needed: p.Role.Value != Balance && p.Role.Value != Residual, course: 2, unitOf: cmp.Or(p.Y.Column.Value, "the values")},
 	}
 	if p.Role.Value != Reference {
 		all = append(all, slipField{path: "model", name: "model", field: p.Model, course: 2})
@@ -505,7 +518,7 @@ func (p *Slip) fields() []slipField {
 	if p.X.Column.Given() {
 		all = append(all,
 			slipField{path: "x.column", name: "column of stations", field: p.X.Column, needed: true, course: 2},
-			slipField{path: "x.unit", name: "unit of " + p.X.Column.Value, field: p.X.Unit, needed: p.Role.Value != Balance && p.Role.Value != Monitor, course: 2, unitOf: p.X.Column.Value})
+			slipField{path: "x.unit", name: "unit of " + p.X.Column.Value, field: p.X.Unit, needed: !p.ofRun(), course: 2, unitOf: p.X.Column.Value})
 	}
 	if p.U.Column.Given() {
 		all = append(all,
@@ -525,7 +538,11 @@ func (p *Slip) fields() []slipField {
 	if p.Role.Value == Monitor {
 		all = append(all, slipField{path: "axis", name: "kind of monitor", field: p.Axis, needed: true, course: 0})
 	}
-	if p.Role.Value == Simulation || p.Role.Value == Monitor || p.Role.Value == Balance {
+	if p.Role.Value == Balance {
+		all = append(all, slipField{path: "balance_of", name: "kind of balance", field: p.BalanceOf, course: 0},
+			slipField{path: "scale", name: "flux that matters", field: p.Scale, needed: !p.X.Column.Given(), course: 0})
+	}
+	if p.Role.Value == Simulation || p.Role.Value == Precision || p.ofRun() {
 		all = append(all,
 			slipField{path: "grid", name: "grid", field: p.Grid, course: 1},
 			slipField{path: "cells", name: "number of cells", field: p.Cells, course: 1})

@@ -13,7 +13,7 @@ type alternative struct {
 }
 
 // alternatives lists the other choices open to a cell.
-func alternatives(c Choices, grids *Grids) []alternative {
+func alternatives(c Choices, grids *Grids, sums *NumSums) []alternative {
 	all := []alternative{}
 	kNum := 2.0
 	if c.KNum == 2 {
@@ -30,6 +30,13 @@ func alternatives(c Choices, grids *Grids) []alternative {
 		all = append(all, alternative{"u_num independent between stations", func(c *Choices) { c.NumShared = false }})
 	} else {
 		all = append(all, alternative{"u_num shared by all stations", func(c *Choices) { c.NumShared = true }})
+	}
+	if sums != nil && sums.Apart {
+		change := "parts of u_num summed, as if they depend on each other"
+		if c.NumLinear {
+			change = "parts of u_num independent of each other"
+		}
+		all = append(all, alternative{change, func(c *Choices) { c.NumLinear = !c.NumLinear }})
 	}
 	other := interpolate.Monotone
 	if c.Interpolation == interpolate.Monotone {
@@ -72,7 +79,7 @@ func rules(c Choices, g *Grids) []alternative {
 // change an outcome word.
 func (e *evaluation) fragile(q *Question, model string, have Cell) []Fragility {
 	list := []Fragility{}
-	for _, a := range alternatives(q.Choices, have.Grids) {
+	for _, a := range alternatives(q.Choices, have.Grids, have.NumSums) {
 		choices := q.Choices
 		a.apply(&choices)
 		other := e.workWith(&work{e: e, q: q, model: model, choices: choices, inner: true})

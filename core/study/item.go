@@ -15,6 +15,7 @@ const (
 	ItemRegion      = "region"      // of a question
 	ItemCriterion   = "criterion"   // of the scores of a question
 	ItemApplication = "application" // of the study
+	ItemRun         = "run"         // of a question; there is one for each of its runs, named by field, model and grid
 )
 
 // AddItem appends an empty item of a kind.

@@ -35,7 +35,7 @@ func (e *evaluation) key(q *Question, model string) string {
 	in := ingredients{Question: q, Model: model, Cases: e.study.Cases, Application: e.study.Application, Alternative: e.options.Alternatives}
 	for i := range e.study.Slips {
 		p := &e.study.Slips[i]
-		if p.Case.Value != q.Case || p.Quantity.Value != q.Quantity {
+		if !q.concerns(p) {
 			continue
 		}
 		in.Slips = append(in.Slips, p)
@@ -58,6 +58,15 @@ func (e *evaluation) key(q *Question, model string) string {
 		return "" // a number that is not finite: such a cell is evaluated anew
 	}
 	return string(text)
+}
+
+// concerns reports whether a slip is one of those that a cell of the question
+// may be made of.
+func (q *Question) concerns(p *Slip) bool {
+	if p.Case.Value != q.Case {
+		return false
+	}
+	return p.Quantity.Value == q.Quantity || !p.Quantity.Given() || q.StandIn != nil && p.Quantity.Value == q.StandIn.Quantity
 }
 
 // remembered evaluates a cell, or takes it from memory.

@@ -190,6 +190,15 @@ func (s *Study) Name(t Target) string {
 			_, field, _ := sourceField(t.Field)
 			return field + " of a " + t.Kind + ", " + q.label()
 		}
+	case ItemRun:
+		if q := s.questionOf(t.ID); q != nil {
+			field, run, _ := strings.Cut(t.Field, "|")
+			name := fieldName(field)
+			if run = strings.Trim(strings.ReplaceAll(run, "|", " "), " "); run != "" {
+				name += " of " + run
+			}
+			return name + ", " + q.label()
+		}
 	case ItemApplication:
 		_, field, _ := sourceField(t.Field)
 		return field + " of the application point"
@@ -209,6 +218,9 @@ var fieldNames = map[string]string{
 	"u.column": "column of uncertainty", "u.unit": "unit of uncertainty", "u_factor": "coverage", "u_basis": "basis of the uncertainty", "size.column": "column of cell counts", "cells": "number of cells",
 	"choices.k": "k", "choices.k_num": "k_num", "choices.bounded": "bounded rule", "choices.rule": "rule of the grid study", "choices.formal": "formal order", "choices.dimension": "dimension",
 	"choices.interpolation": "interpolation", "choices.u_interp": "interpolation uncertainty", "choices.num_shared": "u_num shared", "choices.k_student": "k by degrees of freedom", "choices.sampled": "interval by sampling",
+	"choices.num_linear": "sum of the parts of u_num",
+	"balance_of":         "kind of balance", "scale": "flux that matters", "scale_name": "name of the flux that matters",
+	"start": "start of averaging", "period": "period", "u_iter": "U_iter", "u_iter_why": "reason of U_iter", "effect": "effect of an open balance", "effect_why": "reason of the effect", "stand_in": "quantity whose monitors are taken", "stand_in_why": "reason why monitors of another quantity are taken",
 	"requirement.value": "requirement", "requirement.percent": "basis of the requirement", "requirement.who": "who set the requirement", "requirement.date": "date of the requirement",
 	"scores.dispersion": "scores of the dispersion field", "scores.threshold": "threshold of the scores", "scores.fraction": "fraction of the hit rate", "scores.allowance": "allowance of the hit rate",
 	"scores.allowance_k": "allowance of the hit rate in u_D", "scores.scale": "scale of the measures", "scores.scale_value": "entered scale of the measures", "scores.percent": "E in percent of |D|",
@@ -270,6 +282,7 @@ func (p *Slip) entry(path string) *Field {
 		"levels.facility": &p.Levels.Facility, "levels.day": &p.Levels.Day, "levels.rig": &p.Levels.Rig, "levels.run": &p.Levels.Run,
 		"digitised": &p.Digitised.Is, "digitised.x_scale": &p.Digitised.XScale, "digitised.x_zero": &p.Digitised.XZero, "digitised.y_scale": &p.Digitised.YScale,
 		"digitised.y_zero": &p.Digitised.YZero, "digitised.line": &p.Digitised.Line, "digitised.pixel": &p.Digitised.Pixel,
+		"balance_of": &p.BalanceOf, "scale": &p.Scale, "scale_name": &p.ScaleName,
 	}[path]
 }
 
@@ -301,6 +314,10 @@ func (s *Study) enter(t Target, value string) (string, error) {
 		}
 	case ItemCondition, ItemRegion, ItemCriterion, ItemApplication:
 		return s.enterItem(t, value)
+	case ItemRun:
+		if q := s.questionOf(t.ID); q != nil {
+			return q.enterRun(t.Field, value)
+		}
 	case "case":
 		if r, known := cardFields[t.Field]; known {
 			return s.enterCard(t.ID, r, value)
@@ -412,6 +429,8 @@ func (q *Question) enter(path, value string) (string, error) {
 		return yesNo(&c.UInterp, value)
 	case "choices.num_shared":
 		return yesNo(&c.NumShared, value)
+	case "choices.num_linear":
+		return yesNo(&c.NumLinear, value)
 	case "choices.interpolation":
 		if value != string(interpolate.Linear) && value != string(interpolate.Monotone) {
 			return "", refuse("interpolation", value)

@@ -38,8 +38,28 @@ func (s *Study) Add(name string, data []byte, read tablefile.File, at string) []
 			q.Kind = Field{Value: kind, By: Stated}
 		}
 		added = append(added, &s.Slips[len(s.Slips)-1])
+		if p.Role.Value == Residual {
+			s.addResiduals(p, t)
+		}
 	}
 	return added
+}
+
+// mostResiduals is the number of columns of one table that are proposed.
+const mostResiduals = 8
+
+// addResiduals proposes the further columns of a table of residuals.
+func (s *Study) addResiduals(first Slip, t tablefile.Table) {
+	n := 1
+	for _, c := range t.Columns {
+		if c.Name == first.X.Column.Value || c.Name == first.Y.Column.Value || !anyKnown(c.Values) || n == mostResiduals {
+			continue
+		}
+		n++
+		p := first
+		p.ID, p.Y.Column = s.freeID("s", func(id string) bool { return s.slip(id) != nil }), guess(c.Name)
+		s.Slips = append(s.Slips, p)
+	}
 }
 
 // statedKind is the kind of reference that a file states of itself in a line
@@ -108,6 +128,7 @@ var (
 	measured    = regexp.MustCompile(`(?i)(?:^|[^a-z])(exp|test|meas|measured|measurement|data|tunnel|taps|rig)(?:[^a-z]|$)`)
 	uncertain   = regexp.MustCompile(`(?i)^(u|u[_ ].*|u\(.*|unc.*|err.*|.*error.*|.*uncert.*|sigma.*|std.*|\+/?-.*|±.*)$`)
 	history     = regexp.MustCompile(`(?i)^(iter.*|it|its|step.*|time.*|t)$`)
+	residuals   = regexp.MustCompile(`(?i)(?:^|[^a-z])(resid.*|res|continuity)(?:[^a-z]|$)`)
 	timing      = regexp.MustCompile(`(?i)^t(ime.*)?$`)
 	counting    = regexp.MustCompile(`(?i)^(n|cells|n_?cells|cell ?count|grid ?size|points|nodes|elements)$`)
 	spacingName = regexp.MustCompile(`(?i)^(h|\(?1/n\)?.*|sqrt.*|n\^.*|spacing)$`)
@@ -173,6 +194,9 @@ func propose(file string, t tablefile.Table) Slip {
 	if p.Role.Value != Reference {
 		p.Model = guess(modelOf(file, p))
 	}
+	if p.Role.Value == Residual {
+		p.Quantity, p.Y.Unit, p.X.Unit = Field{}, Field{}, Field{} // of the run as a whole, whatever their unit
+	}
 	return p
 }
 
@@ -195,6 +219,9 @@ func modelOf(file string, p Slip) string {
 func role(file string, t tablefile.Table, size, u int) string {
 	switch {
 	case len(t.Columns) > 0 && history.MatchString(t.Columns[0].Name) && t.Rows() >= 50:
+		if residuals.MatchString(strings.ReplaceAll(file, "_", " ")) || len(t.Columns) > 1 && residuals.MatchString(t.Columns[1].Name) {
+			return Residual
+		}
 		return Monitor
 	case size >= 0 && t.Rows() <= 12:
 		return GridValues

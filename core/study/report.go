@@ -125,6 +125,10 @@ type Cell struct {
 	Requirement *Judgement    `json:"requirement"`
 	Fragile     []Fragility   `json:"fragile"` // alternatives that change an outcome word
 
+	Residuals []ResidualLine `json:"residuals"`
+	RoundOff  *RoundOffLine  `json:"round_off"` // null where no second run of another precision is given
+	NumSums   *NumSums       `json:"num_sums"`  // null where u_num has no two parts
+
 	Curve     Curve           `json:"curve"` // the simulation as read, for the figure
 	Notices   []notice.Notice `json:"notices"`
 	FilesUsed []string        `json:"files_used"` // IDs
@@ -378,36 +382,106 @@ type Crossing struct {
 }
 
 // MonitorLine is the judgement of one monitor, with the points to draw.
-// Values are in the cell's unit, places in that of the monitor.
+// Values are in the cell's unit, of a stand-in in its own; places are in that
+// of the monitor.
 type MonitorLine struct {
-	Grid      string   `json:"grid"`
-	File      string   `json:"file"`
-	Axis      string   `json:"axis"` // iterations or time
-	XName     string   `json:"x_name"`
-	Class     string   `json:"class"`
-	Rule      string   `json:"rule"`
-	Mean      Number   `json:"mean"`
-	U         Number   `json:"u"`    // standard
-	From      Number   `json:"from"` // window of the mean
-	To        Number   `json:"to"`
-	Drift     Number   `json:"drift"` // fraction per Per
-	Per       Number   `json:"per"`
-	Period    Number   `json:"period"`
-	Cycles    int      `json:"cycles"`
-	HalfRange Number   `json:"half_range"`
-	X         []Number `json:"x"`
-	Y         []Number `json:"y"`
+	Grid      string    `json:"grid"`
+	File      string    `json:"file"`
+	Quantity  string    `json:"quantity"` // of a monitor of another quantity that stands for this one, with its unit; else empty
+	Unit      string    `json:"unit"`
+	Axis      string    `json:"axis"` // iterations or time
+	XName     string    `json:"x_name"`
+	Class     string    `json:"class"`
+	Rule      string    `json:"rule"`
+	Mean      Number    `json:"mean"`
+	U         Number    `json:"u"`       // standard
+	Entered   string    `json:"entered"` // the reason, where U was entered and not computed
+	From      Number    `json:"from"`    // window of the mean
+	To        Number    `json:"to"`
+	Drift     Number    `json:"drift"`  // fraction per Per
+	Change    Number    `json:"change"` // the same in the unit of the values
+	Per       Number    `json:"per"`
+	Limit     Number    `json:"limit"`     // change that counts as small
+	Remaining Number    `json:"remaining"` // to be added to the last value, by geometric extrapolation
+	Period    Number    `json:"period"`
+	Cycles    int       `json:"cycles"`
+	HalfRange Number    `json:"half_range"`
+	OfGrid    Number    `json:"of_grid"`  // U_iter over U of the grids: aim at a tenth or less
+	Sampling  *Sampling `json:"sampling"` // of an unsteady run, else null
+	X         []Number  `json:"x"`
+	Y         []Number  `json:"y"`
 }
 
-// BalanceLine is one balance of a run, in the unit of its file.
+// Sampling is how a mean of an unsteady run came by its uncertainty. Standard
+// uncertainties are in the unit of the values, times in that of the monitor.
+type Sampling struct {
+	StartUp     int    `json:"start_up"` // rows left out in front
+	Rows        int    `json:"rows"`     // averaged
+	SD          Number `json:"sd"`       // of one row
+	Tau         Number `json:"tau"`      // correlation time
+	Independent Number `json:"independent"`
+	Batches     int    `json:"batches"`
+	UBatches    Number `json:"u_batches"` // of the mean, by the scatter of batch means
+	UMarkov     Number `json:"u_markov"`  // of the mean, from the correlation of successive rows alone
+	Share       Number `json:"share"`     // of u_num that U is; null for runs that are not in u_num
+}
+
+// BalanceLine is one balance of a run, in the unit of its file. Fraction,
+// Limit and what follow it are parts of Scale.
 type BalanceLine struct {
-	Grid     string `json:"grid"`
-	File     string `json:"file"`
-	In       Number `json:"in"`
-	Out      Number `json:"out"`
-	Net      Number `json:"net"`
-	Fraction Number `json:"fraction"` // of what enters, with its sign
-	Closed   bool   `json:"closed"`
+	Grid      string `json:"grid"`
+	File      string `json:"file"`
+	Kind      string `json:"kind"`
+	In        Number `json:"in"`
+	Out       Number `json:"out"`
+	Net       Number `json:"net"`
+	Scale     Number `json:"scale"`
+	ScaleOf   string `json:"scale_of"` // what Scale is
+	Fraction  Number `json:"fraction"` // Net over Scale, with its sign
+	Limit     Number `json:"limit"`    // that counts as small
+	LimitOf   string `json:"limit_of"`
+	OfGrid    Number `json:"of_grid"` // over U of the grids, if the quantity changed by the same fraction
+	OfE       Number `json:"of_e"`    // the same over |E|
+	Closed    bool   `json:"closed"`
+	Effect    Number `json:"effect"` // entered bound of the effect on the quantity, in the cell's unit
+	EffectWhy string `json:"effect_why"`
+}
+
+// ResidualLine is the course of one residual, with the points to draw: Y is
+// the logarithm to base ten.
+type ResidualLine struct {
+	Grid     string   `json:"grid"`
+	File     string   `json:"file"`
+	Name     string   `json:"name"`
+	Decades  Number   `json:"decades"`   // fallen
+	PerFirst Number   `json:"per_first"` // decades per Per over all rows
+	PerLast  Number   `json:"per_last"`  // over the last third
+	Per      Number   `json:"per"`
+	From     Number   `json:"from"` // of the last third
+	To       Number   `json:"to"`
+	Stalled  bool     `json:"stalled"`
+	X        []Number `json:"x"`
+	Y        []Number `json:"y"`
+}
+
+// RoundOffLine is what two runs differ by that differ in precision or platform
+// only, in the cell's unit.
+type RoundOffLine struct {
+	Grid  string `json:"grid"`
+	File  string `json:"file"`
+	RMS   Number `json:"rms"`
+	Max   Number `json:"max"`
+	N     int    `json:"n"`     // values compared
+	Doubt bool   `json:"doubt"` // the two finest grids differ by no more than twice Max
+}
+
+// NumSums is u_num by both sums of its parts (root mean square over the
+// stations): root of the sum of squares where they are independent, sum where
+// they are not. What interpolation adds is in neither.
+type NumSums struct {
+	Root   Number `json:"root"`
+	Linear Number `json:"linear"`
+	Apart  bool   `json:"apart"` // by more than a fifth
 }
 
 // Grids is the grid study behind u_num: of a scalar, or along a curve.

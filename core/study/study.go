@@ -92,7 +92,9 @@ const (
 	Members    = "members"     // simulations with sampled inputs: a column each from the column of values on, or a row each of a scalar
 	Replicates = "replicates"  // repeated readings at the stations of a reference
 	Monitor    = "monitor"     // a quantity of one run over iterations or time
-	Balance    = "balance"     // what enters a run (column of stations) and what leaves it (column of values)
+	Balance    = "balance"     // what enters a run (column of stations) and what leaves it (column of values); without the former, what is left over
+	Residual   = "residual"    // of the equations of one run over iterations
+	Precision  = "precision"   // the quantity from a second run that differs in precision or platform only
 	Unused     = "unused"
 )
 
@@ -125,6 +127,9 @@ type Slip struct {
 	Size     ColumnUse `json:"size"`     // cell counts, for grid values
 	Axis     Field     `json:"axis"`     // of a monitor: iterations or samples in time
 
+	BalanceOf Field      `json:"balance_of,omitzero"`  // kind of a balance, of package settling; mass where it is not given
+	Scale     Field      `json:"scale,omitzero"`       // of a balance: the flux that matters, in the unit of the file; what enters where it is not given
+	ScaleName Field      `json:"scale_name,omitzero"`  // what Scale is
 	Input     Field      `json:"input,omitzero"`       // of an input run: the name of the input
 	InputAt   Field      `json:"input_at,omitzero"`    // and its value in this run
 	Upper     ColumnUse  `json:"upper,omitzero"`       // column of the upper half-width, or upper limit; U is then the lower
@@ -203,6 +208,8 @@ type Question struct {
 	Regions     []Region     `json:"regions,omitempty"`
 	NoInput     string       `json:"no_input,omitempty"`   // why the inputs are taken to have no uncertainty; empty: not decided
 	Resolution  string       `json:"resolution,omitempty"` // Counted: the resolution seen in the data is a source
+	Runs        []RunEntry   `json:"runs,omitempty"`
+	StandIn     *StandIn     `json:"stand_in,omitempty"`
 	// Answers holds, by the code of a finding, what a person answered to it.
 	// An answered finding is no open point any more; the memo prints both.
 	Answers map[string]string `json:"answers,omitempty"`
@@ -210,6 +217,26 @@ type Question struct {
 
 // Counted is the choice to make a source of what was found.
 const Counted = "counted"
+
+// RunEntry is what a person enters about the settling of one run. Numbers that
+// are absent were not entered; a U_iter and an effect need their reason.
+type RunEntry struct {
+	Model     string   `json:"model"`
+	Grid      string   `json:"grid"`
+	Start     *float64 `json:"start,omitempty"`  // where averaging begins, in the unit of the monitor's axis
+	Period    *float64 `json:"period,omitempty"` // of a cycle, in the same unit
+	UIter     *float64 `json:"u_iter,omitempty"` // expanded, k = 2, in the unit of the data
+	UIterWhy  string   `json:"u_iter_why,omitempty"`
+	Effect    *float64 `json:"effect,omitempty"` // greatest effect of an open balance on the quantity, in the unit of the data
+	EffectWhy string   `json:"effect_why,omitempty"`
+}
+
+// StandIn names another quantity of the case whose monitors stand for those of
+// this one, such as a force for the pressure that makes it. It needs a reason.
+type StandIn struct {
+	Quantity string `json:"quantity"`
+	Why      string `json:"why"`
+}
 
 // Scoring asks for the measures of a field beside the usual ones.
 type Scoring struct {
@@ -393,17 +420,18 @@ const (
 
 // Choices are the decisions whose effect is shown at once.
 type Choices struct {
-	K             float64            `json:"k"`                   // coverage factor of the statement
-	KNum          float64            `json:"k_num"`               // U_num to u_num
-	Bounded       bool               `json:"bounded"`             // bounded rule of the grid study
-	Rule          string             `json:"rule,omitempty"`      // of the grid study of one value, a name of refinement.Rules; empty: the three finest grids
-	Formal        float64            `json:"formal"`              // formal order of the scheme
-	Dimension     int                `json:"dimension"`           // 2 or 3
-	Interpolation interpolate.Method `json:"interpolation"`       // of the simulation to the stations
-	UInterp       bool               `json:"u_interp"`            // count the interpolation uncertainty
-	NumShared     bool               `json:"num_shared"`          // u_num fully shared between stations
-	KStudent      bool               `json:"k_student,omitempty"` // K follows from the effective degrees of freedom at 95 %
-	Sampled       bool               `json:"sampled,omitempty"`   // the interval of the model error by sampling too
+	K             float64            `json:"k"`                    // coverage factor of the statement
+	KNum          float64            `json:"k_num"`                // U_num to u_num
+	Bounded       bool               `json:"bounded"`              // bounded rule of the grid study
+	Rule          string             `json:"rule,omitempty"`       // of the grid study of one value, a name of refinement.Rules; empty: the three finest grids
+	Formal        float64            `json:"formal"`               // formal order of the scheme
+	Dimension     int                `json:"dimension"`            // 2 or 3
+	Interpolation interpolate.Method `json:"interpolation"`        // of the simulation to the stations
+	UInterp       bool               `json:"u_interp"`             // count the interpolation uncertainty
+	NumShared     bool               `json:"num_shared"`           // u_num fully shared between stations
+	KStudent      bool               `json:"k_student,omitempty"`  // K follows from the effective degrees of freedom at 95 %
+	Sampled       bool               `json:"sampled,omitempty"`    // the interval of the model error by sampling too
+	NumLinear     bool               `json:"num_linear,omitempty"` // parts of u_num depend on each other: they are summed, not their squares
 }
 
 // DefaultChoices are the choices of a new question.

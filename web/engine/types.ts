@@ -380,6 +380,9 @@ export interface Cell {
   k_95: number | null;
   requirement: Judgement | null;
   fragile: Fragility[] | null;
+  residuals: ResidualLine[] | null;
+  round_off: RoundOffLine | null;
+  num_sums: NumSums | null;
   curve: Curve;
   notices: Notice[] | null;
   files_used: string[] | null;
@@ -481,6 +484,7 @@ export interface Choices {
   num_shared: boolean;
   k_student?: boolean;
   sampled?: boolean;
+  num_linear?: boolean;
 }
 
 export interface Station {
@@ -614,19 +618,27 @@ export interface Crossings {
 export interface MonitorLine {
   grid: string;
   file: string;
+  quantity: string;
+  unit: string;
   axis: string;
   x_name: string;
   class: string;
   rule: string;
   mean: number | null;
   u: number | null;
+  entered: string;
   from: number | null;
   to: number | null;
   drift: number | null;
+  change: number | null;
   per: number | null;
+  limit: number | null;
+  remaining: number | null;
   period: number | null;
   cycles: number;
   half_range: number | null;
+  of_grid: number | null;
+  sampling: Sampling | null;
   x: (number | null)[] | null;
   y: (number | null)[] | null;
 }
@@ -634,11 +646,20 @@ export interface MonitorLine {
 export interface BalanceLine {
   grid: string;
   file: string;
+  kind: string;
   in: number | null;
   out: number | null;
   net: number | null;
+  scale: number | null;
+  scale_of: string;
   fraction: number | null;
+  limit: number | null;
+  limit_of: string;
+  of_grid: number | null;
+  of_e: number | null;
   closed: boolean;
+  effect: number | null;
+  effect_why: string;
 }
 
 export interface Grids {
@@ -754,6 +775,36 @@ export interface Fragility {
   detail: string;
 }
 
+export interface ResidualLine {
+  grid: string;
+  file: string;
+  name: string;
+  decades: number | null;
+  per_first: number | null;
+  per_last: number | null;
+  per: number | null;
+  from: number | null;
+  to: number | null;
+  stalled: boolean;
+  x: (number | null)[] | null;
+  y: (number | null)[] | null;
+}
+
+export interface RoundOffLine {
+  grid: string;
+  file: string;
+  rms: number | null;
+  max: number | null;
+  n: number;
+  doubt: boolean;
+}
+
+export interface NumSums {
+  root: number | null;
+  linear: number | null;
+  apart: boolean;
+}
+
 export interface Curve {
   x: (number | null)[] | null;
   y: (number | null)[] | null;
@@ -811,6 +862,18 @@ export interface Crossing {
   x: number | null;
   u: number | null;
   rising: boolean;
+}
+
+export interface Sampling {
+  start_up: number;
+  rows: number;
+  sd: number | null;
+  tau: number | null;
+  independent: number | null;
+  batches: number;
+  u_batches: number | null;
+  u_markov: number | null;
+  share: number | null;
 }
 
 export interface GridPoint {
