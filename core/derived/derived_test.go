@@ -5,6 +5,8 @@ import (
 	"math"
 	"slices"
 	"testing"
+
+	"weirmark/core/flow"
 )
 
 func near(t *testing.T, name string, got, want, tolerance float64) {
@@ -148,39 +150,61 @@ func TestPowerLawLayer(t *testing.T) {
 	for i := range 26 {
 		uniform = append(uniform, float64(i)/25)
 	}
-	l, err := Thicknesses(logs, law(logs), EdgeGiven, 1)
+	l, err := Thicknesses(logs, law(logs), nil, EdgeGiven, 1)
 	if err != nil {
 		t.Fatal(err)
 	}
 	near(t, "δ*", l.Displacement, 1./8, .01/8)
 	near(t, "θ", l.Momentum, 7./72, .01*7/72)
 	near(t, "δ99", l.Delta99, math.Pow(.99, 7), .01) // straight between rows at 0.75 and 1
-	c, err := Thicknesses(uniform, law(uniform), EdgeGiven, 1)
+	c, err := Thicknesses(uniform, law(uniform), nil, EdgeGiven, 1)
 	if err != nil {
 		t.Fatal(err)
 	}
 	near(t, "δ99 of uniform rows", c.Delta99, math.Pow(.99, 7), 2e-4)
 	near(t, "δ* of uniform rows", c.Displacement/(1./8)-1, .078, .0005)
 	near(t, "θ of uniform rows", c.Momentum/(7./72)-1, -.051, .0005)
-	if off := math.Abs(c.Displacement - 1./8); math.Abs(c.QuadratureDisplacement) < off/2 {
-		t.Errorf("the quadrature estimate %v hides an error of %v", c.QuadratureDisplacement, off)
+	for _, row := range []struct {
+		kind string
+		want float64
+	}{{"displacement thickness δ*", 1. / 8}, {"momentum thickness θ", 7. / 72}, {"shape factor H", 9. / 7}} {
+		for name, y := range map[string][]float64{"uniform": uniform, "logarithmic": logs} {
+			got := take(t, row.kind, Curve{X: y, Y: law(y)}, map[string]string{KeyEdge: string(EdgeGiven)}, map[string]float64{"velocity": 1})
+			if off := math.Abs(got.Value - row.want); off > got.U() || got.U() > row.want/2 {
+				t.Errorf("%s of %s rows: off by %v, u %v", row.kind, name, off, got.U())
+			}
+		}
 	}
+}
+
+// take takes a scalar by its name.
+func take(t *testing.T, name string, c Curve, words map[string]string, numbers map[string]float64) Scalar {
+	t.Helper()
+	k, ok := Named(name)
+	if !ok {
+		t.Fatalf("no kind %q", name)
+	}
+	s, err := k.Take(c, Settings{words, numbers})
+	if err != nil {
+		t.Fatalf("%s: %v", name, err)
+	}
+	return s
 }
 
 func TestLayerRefusals(t *testing.T) {
 	y := []float64{.1, .2, .3, .4, .5, .6, .7}
 	rising := []float64{1, 2, 3, 4, 5, 6, 7}
-	l, err := Thicknesses(y, rising, EdgeMax, 0)
+	l, err := Thicknesses(y, rising, nil, EdgeMax, 0)
 	if err != nil || l.Reached || !math.IsNaN(l.Delta99) {
 		t.Errorf("a profile still rising at its last row: %+v, %v", l, err)
 	}
-	if _, err := Thicknesses([]float64{.3, .2, .1, .4, .5, .6}, rising[:6], EdgeMax, 0); !errors.Is(err, ErrProfile) {
+	if _, err := Thicknesses([]float64{.3, .2, .1, .4, .5, .6}, rising[:6], nil, EdgeMax, 0); !errors.Is(err, ErrProfile) {
 		t.Errorf("rows out of order: %v", err)
 	}
-	if _, err := Thicknesses(y[:3], rising[:3], EdgeMax, 0); !errors.Is(err, ErrRows) {
+	if _, err := Thicknesses(y[:3], rising[:3], nil, EdgeMax, 0); !errors.Is(err, ErrRows) {
 		t.Errorf("three rows: %v", err)
 	}
-	if _, err := Thicknesses(y, make([]float64, 7), EdgeMax, 0); !errors.Is(err, ErrProfile) {
+	if _, err := Thicknesses(y, make([]float64, 7), nil, EdgeMax, 0); !errors.Is(err, ErrProfile) {
 		t.Errorf("no velocity: %v", err)
 	}
 }
@@ -194,17 +218,42 @@ func TestLogFit(t *testing.T) {
 		plus := 20 * math.Pow(500./20, float64(i)/39)
 		y, u = append(y, plus*nu/tau), append(u, tau*(math.Log(plus)/.41+5))
 	}
-	f, ok := LogFit(y, u, nu, .41, 5, 30, 300)
-	if !ok {
-		t.Fatal("no fit")
+	f, err := wallLaw(flow.LogLaw).Fit(y, u, nu, .41, 5, 30, 300)
+	if err != nil {
+		t.Fatal(err)
 	}
 	near(t, "u_tau", f.UTau, tau, .005*tau)
-	if f.Rows < 20 || f.Residual > 1e-9 || math.Abs(f.KappaB) < .001*tau {
+	if f.Rows < 20 || f.Residual > 1e-9 {
 		t.Errorf("%+v", f)
 	}
-	if _, ok := LogFit(y[:3], u[:3], nu, .41, 5, 30, 300); ok {
-		t.Error("three rows were fitted")
+	if _, err := wallLaw(flow.LogLaw).Fit(y[:3], u[:3], nu, .41, 5, 30, 300); !errors.Is(err, ErrFit) {
+		t.Errorf("three rows were fitted: %v", err)
 	}
+	numbers := map[string]float64{"viscosity": nu, "kappa": .41, "kappa range": .02, "B": 5, "B range": .5, "low": 30, "high": 300}
+	s := take(t, "friction velocity from the log law", Curve{X: y, Y: u}, nil, numbers)
+	near(t, "u_tau by its kind", s.Value, tau, 1e-9)
+	if len(s.Effects) != 3 || s.U() < .005*tau || s.U() > .05*tau {
+		t.Errorf("the constants leave %v open: %+v", s.U(), s.Effects)
+	}
+	// The other pair of constants moves the result visibly.
+	numbers["kappa"], numbers["B"] = .384, 4.17
+	if o := take(t, "friction velocity from the log law", Curve{X: y, Y: u}, nil, numbers); math.Abs(o.Value-tau) < .001*tau {
+		t.Errorf("κ = 0.384, B = 4.17 gives %v, as κ = 0.41, B = 5", o.Value)
+	}
+}
+
+// A profile made of Spalding's law, from the viscous layer outwards, gives its
+// friction velocity by the composite fit.
+func TestCompositeFit(t *testing.T) {
+	nu, tau := 1.5e-5, .9
+	var y, u []float64
+	for i := range 40 {
+		plus := 2 * math.Pow(250, float64(i)/39)
+		y, u = append(y, plus*nu/tau), append(u, tau*flow.SpaldingU(.41, 5, plus))
+	}
+	numbers := map[string]float64{"viscosity": nu, "kappa": .41, "kappa range": .02, "B": 5, "B range": .5, "low": 0, "high": 300}
+	s := take(t, "friction velocity from a composite profile", Curve{X: y, Y: u}, nil, numbers)
+	near(t, "u_tau", s.Value, tau, 1e-6*tau)
 }
 
 // A linear profile near the wall: u = tau² y/nu.

@@ -9,15 +9,12 @@ type Friction struct {
 	Low      float64 // y+ of the first and last of them
 	High     float64
 	Residual float64 // root mean square of u+ - law
-	// KappaB is the change of UTau when kappa = 0.384, B = 4.17 take the place
-	// of the given constants: how much the law itself leaves open.
-	KappaB float64
 }
 
 // WallGradient returns sqrt(nu du/dy) from the rows that lie within y+ <= 5 of
 // the wall, by the mean of u/y. Rows is 0 where none does.
 func WallGradient(y, u []float64, nu float64) Friction {
-	f := Friction{UTau: math.NaN(), KappaB: math.NaN()}
+	f := Friction{UTau: math.NaN()}
 	// y+ depends on the result: take rows from the wall outwards as long as
 	// they still lie within five units of their own estimate.
 	sum := 0.0
@@ -44,23 +41,13 @@ func WallGradient(y, u []float64, nu float64) Friction {
 	return f
 }
 
-// LogFit returns the friction velocity for which u+ = ln(y+)/kappa + B fits
-// the rows with low <= y+ <= high best (Clauser's method), by iteration over
-// the rows in range.
-func LogFit(y, u []float64, nu, kappa, b, low, high float64) (Friction, bool) {
-	f, ok := logFit(y, u, nu, kappa, b, low, high)
-	if !ok {
-		return f, false
-	}
-	other, ok := logFit(y, u, nu, 0.384, 4.17, low, high)
-	f.KappaB = math.NaN()
-	if ok {
-		f.KappaB = other.UTau - f.UTau
-	}
-	return f, true
-}
+// wallLaw is u+ over y+ with its constants.
+type wallLaw func(kappa, b, plus float64) float64
 
-func logFit(y, u []float64, nu, kappa, b, low, high float64) (Friction, bool) {
+// Fit returns the friction velocity for which a law of the wall fits the rows
+// with low <= y+ <= high best (Clauser's method where it is the log law), by
+// iteration over the rows in range. It needs four rows.
+func (law wallLaw) Fit(y, u []float64, nu, kappa, b, low, high float64) (Friction, error) {
 	// Start from the outermost row taken as log layer.
 	tau := 0.0
 	for i := range y {
@@ -69,37 +56,38 @@ func logFit(y, u []float64, nu, kappa, b, low, high float64) (Friction, bool) {
 		}
 	}
 	if !(tau > 0) {
-		return Friction{}, false
+		return Friction{}, ErrProfile
 	}
 	var f Friction
 	for range 100 {
-		next, g := fitOnce(y, u, nu, kappa, b, low, high, tau)
-		if g.Rows < 4 {
-			return Friction{}, false
+		next, g := law.step(y, u, nu, kappa, b, low, high, tau)
+		if g.Rows < 4 || !(next > 0) {
+			return Friction{}, ErrFit
 		}
 		f = g
 		f.UTau = next
 		if math.Abs(next-tau) <= 1e-12*tau {
-			return f, true
+			break
 		}
 		tau = next
 	}
-	return f, f.Rows >= 4
+	return f, nil
 }
 
-// fitOnce makes one step of Newton's method for the least squares in u over
-// the rows that lie in range at tau.
-func fitOnce(y, u []float64, nu, kappa, b, low, high, tau float64) (float64, Friction) {
+// step makes one step of Newton's method for the least squares in u over the
+// rows that lie in range at tau.
+func (law wallLaw) step(y, u []float64, nu, kappa, b, low, high, tau float64) (float64, Friction) {
 	f := Friction{Low: math.Inf(1)}
 	num, den, rest := 0.0, 0.0, 0.0
 	for i := range y {
 		plus := float64(y[i]*tau) / nu
-		if math.IsNaN(u[i]) || !(plus >= low && plus <= high) {
+		if math.IsNaN(u[i]) || !(plus > 0) || !(plus >= low && plus <= high) {
 			continue
 		}
-		law := math.Log(plus)/kappa + b
-		slope := law + 1/kappa // d(tau law)/d tau
-		r := u[i] - float64(tau*law)
+		at := law(kappa, b, plus)
+		const h = 1e-5                                                            // of y+, relative
+		slope := at + (law(kappa, b, plus*(1+h))-law(kappa, b, plus*(1-h)))/(2*h) // d(tau law)/d tau
+		r := u[i] - float64(tau*at)
 		num += float64(r * slope)
 		den += float64(slope * slope)
 		rest += float64(r/tau) * (r / tau)
@@ -111,6 +99,38 @@ func fitOnce(y, u []float64, nu, kappa, b, low, high, tau float64) (float64, Fri
 	}
 	f.Residual = math.Sqrt(rest / float64(f.Rows))
 	return tau + num/den, f
+}
+
+// takeFit fits a law; its effects are those of the ranges of its constants.
+func takeFit(law wallLaw) func(Curve, Settings) (Scalar, error) {
+	return func(c Curve, p Settings) (Scalar, error) {
+		n := p.Numbers
+		fit := func(kappa, b float64) (Friction, error) {
+			return law.Fit(c.X, c.Y, n["viscosity"], kappa, b, n["low"], n["high"])
+		}
+		f, err := fit(n["kappa"], n["B"])
+		if err != nil {
+			return Scalar{}, err
+		}
+		s := none(f.UTau)
+		for _, other := range []struct {
+			name     string
+			kappa, b float64
+		}{{"κ at the end of its range", n["kappa"] + n["kappa range"], n["B"]}, {"B at the end of its range", n["kappa"], n["B"] + n["B range"]}} {
+			if g, err := fit(other.kappa, other.b); err == nil {
+				s.Effects = append(s.Effects, Effect{Name: other.name, Change: g.UTau - f.UTau, Factor: limits})
+			}
+		}
+		return s, nil
+	}
+}
+
+func takeWall(c Curve, p Settings) (Scalar, error) {
+	f := WallGradient(c.X, c.Y, p.Numbers["viscosity"])
+	if f.Rows == 0 {
+		return Scalar{}, ErrWall
+	}
+	return none(f.UTau), nil
 }
 
 // CrossingU returns the standard uncertainty of the place of a crossing from

@@ -11,18 +11,23 @@ var ErrOpen = errors.New("the loop does not close: its ends are further apart th
 // ErrRows says that a curve has too few rows for the question.
 var ErrRows = errors.New("too few rows")
 
-// Section holds the coefficients of the pressure on a closed section, per
-// chord: normal and axial to the chord line, and lift and pressure drag at the
-// angle of attack. Moment is about the leading edge (x = 0), positive nose up.
-// The drag is the pressure part only.
-type Section struct {
+// Coefficients are those of the pressure on a section, per chord: normal and
+// axial to the chord line, and lift and pressure drag at the angle of attack.
+// Moment is about the leading edge (x = 0), positive nose up. The drag is the
+// pressure part only.
+type Coefficients struct {
 	Normal, Axial float64
 	Lift, Drag    float64
 	Moment        float64
-	Gap           float64 // distance between the two ends, in chords
-	// Closure is the change of Lift when the gap is closed by a straight
-	// segment with the mean pressure of the ends.
-	Closure float64
+}
+
+// Section holds the coefficients of a closed section.
+type Section struct {
+	Coefficients
+	Gap float64 // distance between the two ends, in chords
+	// Closing is the part of the straight segment, with the mean pressure of the
+	// ends, that closes the gap.
+	Closing Coefficients
 }
 
 // Loop integrates the pressure coefficient cp over a closed section with
@@ -53,33 +58,29 @@ func Loop(x, y, cp []float64, alpha float64) (Section, error) {
 		s.add(x, y, cp, i-1, i)
 		area += float64(x[i-1]*y[i]) - float64(x[i]*y[i-1])
 	}
-	before := s.lift(alpha)
+	s.Closing.add(x, y, cp, n-1, 0)
 	s.add(x, y, cp, n-1, 0)
 	area += float64(x[n-1]*y[0]) - float64(x[0]*y[n-1])
-	if area > 0 { // counterclockwise: turn the signs
-		s.Normal, s.Axial, s.Moment, before = -s.Normal, -s.Axial, -s.Moment, -before
+	for _, c := range []*Coefficients{&s.Coefficients, &s.Closing} {
+		if area > 0 { // counterclockwise: turn the signs
+			c.Normal, c.Axial, c.Moment = -c.Normal, -c.Axial, -c.Moment
+		}
+		sin, cos := math.Sincos(alpha)
+		c.Lift = float64(c.Normal*cos) - float64(c.Axial*sin)
+		c.Drag = float64(c.Normal*sin) + float64(c.Axial*cos)
 	}
-	sin, cos := math.Sincos(alpha)
-	s.Lift = float64(s.Normal*cos) - float64(s.Axial*sin)
-	s.Drag = float64(s.Normal*sin) + float64(s.Axial*cos)
-	s.Closure = s.Lift - before
 	return s, nil
 }
 
 // add adds the segment from row i to row j of a clockwise contour: over the
 // upper side x grows and pressure pushes down.
-func (s *Section) add(x, y, cp []float64, i, j int) {
+func (s *Coefficients) add(x, y, cp []float64, i, j int) {
 	p := (cp[i] + cp[j]) / 2
 	dx, dy := x[j]-x[i], y[j]-y[i]
 	s.Normal -= float64(p * dx)
 	s.Axial += float64(p * dy)
 	mx, my := (x[i]+x[j])/2, (y[i]+y[j])/2
 	s.Moment += float64(p*float64(mx*dx)) + float64(p*float64(my*dy))
-}
-
-func (s *Section) lift(alpha float64) float64 {
-	sin, cos := math.Sincos(alpha)
-	return float64(s.Normal*cos) - float64(s.Axial*sin)
 }
 
 // typicalStep is the mean distance of neighbouring rows.
@@ -98,4 +99,39 @@ func ArcLength(x, y []float64) []float64 {
 		s[i] = s[i-1] + math.Hypot(x[i]-x[i-1], y[i]-y[i-1])
 	}
 	return s
+}
+
+// Onto returns the values of a closed contour (x, y) at other points, each
+// taken at the nearest place of the contour, straight between its rows, and
+// the greatest distance of a point from it over the length of the contour in x.
+// Rows with a gap part the contour; nil where it has no two rows.
+func Onto(x, y, values, px, py []float64) (at []float64, apart float64) {
+	lo, hi := math.Inf(1), math.Inf(-1)
+	for _, v := range x {
+		if !math.IsNaN(v) {
+			lo, hi = min(lo, v), max(hi, v)
+		}
+	}
+	for n := range px {
+		best, found := math.Inf(1), math.NaN()
+		for i := 1; i < len(x); i++ {
+			if !usable(x, values, i-1) || !usable(x, values, i) || math.IsNaN(y[i-1]) || math.IsNaN(y[i]) {
+				continue
+			}
+			dx, dy := x[i]-x[i-1], y[i]-y[i-1]
+			t := 0.0
+			if length := float64(dx*dx) + float64(dy*dy); length > 0 {
+				t = min(1, max(0, (float64((px[n]-x[i-1])*dx)+float64((py[n]-y[i-1])*dy))/length))
+			}
+			d := math.Hypot(px[n]-x[i-1]-float64(t*dx), py[n]-y[i-1]-float64(t*dy))
+			if d < best {
+				best, found = d, values[i-1]+float64(t*(values[i]-values[i-1]))
+			}
+		}
+		if math.IsNaN(found) || !(hi > lo) {
+			return nil, 0
+		}
+		at, apart = append(at, found), max(apart, best/(hi-lo))
+	}
+	return at, apart
 }

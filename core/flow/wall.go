@@ -2,8 +2,8 @@ package flow
 
 import "math"
 
-// logLaw is u+ = ln(y+)/kappa + B.
-func logLaw(kappa, b, y float64) float64 { return math.Log(y)/kappa + b }
+// LogLaw is u+ = ln(y+)/kappa + B.
+func LogLaw(kappa, b, y float64) float64 { return math.Log(y)/kappa + b }
 
 // spaldingY is y+ = u+ + e^(-kappa B) (e^k - 1 - k - k^2/2 - k^3/6), k = kappa u+.
 func spaldingY(kappa, b, u float64) float64 {
@@ -12,9 +12,9 @@ func spaldingY(kappa, b, u float64) float64 {
 	return u + float64(math.Exp(-kappa*b)*rest)
 }
 
-// spaldingU returns the u+ whose y+ is given. y+ is never below u+ and rises
+// SpaldingU returns the u+ whose y+ is given. y+ is never below u+ and rises
 // with it, so that the answer lies between 0 and y+.
-func spaldingU(kappa, b, y float64) float64 {
+func SpaldingU(kappa, b, y float64) float64 {
 	if y == 0 {
 		return 0
 	}
@@ -61,11 +61,11 @@ func wallLaws() []Law {
 		{ID: "wall-log", Name: "Law of the wall, logarithm", Kind: Correlation, Formula: "u+ = ln(y+)/kappa + B", Station: logStation,
 			Value: result("u+", "velocity over friction velocity", "1"), Parameters: constants,
 			Source: tmr, Reach: Seen, Uncertainty: noneStated, Caveat: caveat,
-			at: func(p []float64, y float64) float64 { return logLaw(p[0], p[1], y) }, stated: below(30)},
+			at: func(p []float64, y float64) float64 { return LogLaw(p[0], p[1], y) }, stated: below(30)},
 		{ID: "wall-spalding", Name: "Law of the wall, Spalding, u+ over y+", Kind: Correlation,
 			Formula: "y+ = u+ + e^(-kappa B) (e^k - 1 - k - k^2/2 - k^3/6), k = kappa u+, solved for u+", Station: spaldingStation, Value: uplus, Parameters: constants,
 			Source: "D. B. Spalding, J. Appl. Mech. 28 (1961) 455 (from memory); table of " + tmr, Reach: Seen, Uncertainty: noneStated, Caveat: caveat,
-			at: func(p []float64, y float64) float64 { return spaldingU(p[0], p[1], y) }, stated: below(0)},
+			at: func(p []float64, y float64) float64 { return SpaldingU(p[0], p[1], y) }, stated: below(0)},
 		{ID: "wall-spalding-inverse", Name: "Law of the wall, Spalding, y+ over u+", Kind: Correlation,
 			Formula: "y+ = u+ + e^(-kappa B) (e^k - 1 - k - k^2/2 - k^3/6), k = kappa u+", Station: uplus, Value: yplus, Parameters: constants,
 			Source: "D. B. Spalding, J. Appl. Mech. 28 (1961) 455 (from memory); table of " + tmr, Reach: Seen, Uncertainty: noneStated, Caveat: caveat,
@@ -73,7 +73,7 @@ func wallLaws() []Law {
 			stated: func(p []float64) Range {
 				r := below(0)(p)
 				if !math.IsInf(r.Hi, 1) {
-					r.Hi = spaldingU(p[0], p[1], r.Hi)
+					r.Hi = SpaldingU(p[0], p[1], r.Hi)
 				}
 				return r
 			}},

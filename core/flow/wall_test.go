@@ -66,12 +66,12 @@ func TestSpaldingBothWays(t *testing.T) {
 	rapid.Check(t, func(t *rapid.T) {
 		kappa, b := rapid.Float64Range(0.38, 0.42).Draw(t, "kappa"), rapid.Float64Range(4, 5.5).Draw(t, "B")
 		y := math.Pow(10, rapid.Float64Range(-300, 300).Draw(t, "log10 y+"))
-		u := spaldingU(kappa, b, y)
+		u := SpaldingU(kappa, b, y)
 		// Far out a unit of the last place of u+ is kappa u+ of them in y+.
 		if back := spaldingY(kappa, b, u); math.Abs(back-y) > 1e-15*y*(10+10*kappa*u) {
 			t.Fatalf("%v -> %v -> %v", y, u, back)
 		}
-		if u > y || y > 1e5 && math.Abs(u-logLaw(kappa, b, y)) > 1e-2 {
+		if u > y || y > 1e5 && math.Abs(u-LogLaw(kappa, b, y)) > 1e-2 {
 			t.Fatalf("u+ %v at y+ %v", u, y)
 		}
 	})

@@ -36,7 +36,7 @@ func (s *Session) slipCards() []SlipCard {
 			continue
 		}
 		card.Read = readWords(t)
-		card.Entries = slipEntries(p, t)
+		card.Entries = slipEntries(s.study, p, t)
 		for i := range card.Entries {
 			e := &card.Entries[i]
 			e.Open = e.By == study.Guessed || e.Value == "" && needed(p, e.Target.Field)
@@ -121,7 +121,7 @@ func needed(p *study.Slip, field string) bool {
 }
 
 // slipEntries are the entries of a slip in the order in which one reads them.
-func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
+func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 	columns := []Option{{"", "–"}}
 	for _, c := range t.Columns {
 		columns = append(columns, Option{c.Name, c.Name})
@@ -181,8 +181,8 @@ func slipEntries(p *study.Slip, t tablefile.Table) []Entry {
 		if loop || p.Branch.Given() {
 			list = append(list, entry("branch", "branch", p.Branch, []Option{{"", "the whole"}, {profile.Upper, "upper"}, {profile.Lower, "lower"}, {profile.First, "first in the file"}, {profile.Second, "second in the file"}}, "upper and lower need the second coordinate"))
 		}
-		if p.Derive.Value == study.DeriveLift || p.Branch.Given() {
-			list = append(list, entry("contour.column", "second coordinate in", p.Contour.Column, columns, ""), entry("contour.unit", "its unit", p.Contour.Unit, free, "m, mm, … or 1 for a pure number"))
+		if second := secondColumn(s, p); second != "" {
+			list = append(list, entry("contour.column", second+" in", p.Contour.Column, columns, ""), entry("contour.unit", "its unit", p.Contour.Unit, free, "m, mm, … or 1 for a pure number"))
 		}
 	}
 	if p.Role.Value == study.Simulation {
@@ -354,6 +354,9 @@ func sourceEntries(q *study.Question, i int, s study.Source) []Entry {
 		entry("random", "random", random, study.Entered, []Option{{"no", "systematic"}, {"yes", "random"}}, ""),
 		entry("pattern", "between stations", s.Pattern, study.Entered, []Option{{study.Independent, "independent"}, {study.Common, "the same at all"}, {study.Grouped, "the same within groups"}, {study.Length, "correlated over a length"}}, ""),
 		entry("origin", "where it comes from", s.Origin, study.Entered, []Option{}, ""),
+	}
+	if q.Derive != nil {
+		list = append(list, entry("of_scalar", "value of", map[bool]string{true: "yes", false: "no"}[s.OfScalar], study.Entered, []Option{{"no", "the curve, carried to the scalar"}, {"yes", "the scalar itself"}}, "where one side is a value, inputs and numerics are of the scalar"))
 	}
 	if s.Basis == study.OfFullScale {
 		list = append(list, entry("full_scale", "full scale, in the unit of the data", quantity.Typed(s.FullScale), study.Entered, []Option{}, ""))
@@ -544,7 +547,7 @@ func lists(s *study.Study, q *study.Question, c *study.Cell) []EntryList {
 		entry("case", q.Case, "speed", "reference speed U in m/s", s.CardValue(q.Case, "speed"), []Option{}, "a scale of velocities"),
 		entry("case", q.Case, "angle", "angle of attack α in degrees", s.CardValue(q.Case, "angle"), []Option{}, "")}}}}
 	criteria := criterionEntries(q, list(3, study.ItemCriterion, id, "Criteria of the scores", "limits bound to their scope; a result beyond one is no statement on the model by itself"))
-	return []EntryList{runList(s, q, c), conditions, card, scoreEntries(q), criteria, regions, application}
+	return []EntryList{runList(s, q, c), conditions, card, derivation(q), scoreEntries(q), criteria, regions, application}
 }
 
 // readingEntries are the answers about how a file is read: those that were

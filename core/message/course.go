@@ -259,6 +259,8 @@ func agreeAnswer(c *study.Cell) string {
 		return "Nothing is compared yet."
 	case s.Tested == 0:
 		return "Differences only: u_val is not available."
+	case c.Scalar && c.Derived != nil:
+		return "The " + c.Derived.Kind + " was taken from the curves; E is " + text(c.Stations[0].Ratio, 2) + " u_val: " + c.Stations[0].Reading + "."
 	case c.Scalar:
 		return "E is " + text(c.Stations[0].Ratio, 2) + " u_val: " + c.Stations[0].Reading + "."
 	}
@@ -336,6 +338,7 @@ func agreeTables(c *study.Cell) []Table {
 		tables = append(tables, jointTable(j))
 	}
 	tables = append(tables, scoreTables(c)...)
+	tables = append(tables, derivedTables(c)...)
 	if x := c.Crossings; len(x.Simulation)+len(x.Reference) > 0 {
 		tables = append(tables, Table{Title: "Changes of sign", Head: []string{"side", name, "u", "direction"}, Rows: append(crossingRows("simulation", x.Simulation), crossingRows("reference", x.Reference)...)})
 	}

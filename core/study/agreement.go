@@ -48,6 +48,9 @@ func (w *work) stationLines(e, ratio []float64) {
 			UD: at(w.uD, i), UNum: at(w.uNum, i), UInput: at(w.uInput, i), UVal: at(w.uVal, i), UInterp: None,
 			Ratio: None, Lo: None, Hi: None, Line: w.reference.table.RowLine(w.rows[i]),
 		}
+		if w.cell.Derived != nil {
+			s.Line = 0 // of no single row
+		}
 		// A value that no conversion touched is printed as it was written.
 		if !w.cell.Scalar && w.rows != nil {
 			s.X, s.D = w.written(w.rows[i], s.X, s.D)

@@ -54,7 +54,7 @@ func (w *work) budget() {
 	w.replicates()
 	for i := range w.q.Sources {
 		s := &w.q.Sources[i]
-		if s.Model == "" || s.Model == w.model {
+		if (s.Model == "" || s.Model == w.model) && !w.ofCurve(s) {
 			w.source(i, s)
 		}
 	}
@@ -224,7 +224,7 @@ func (w *work) patterned(s *Source, u []float64, target Target) (uncertainty.Sou
 		}
 		return uncertainty.Source{U: u, Common: true}, true
 	case Grouped:
-		if w.reference == nil || w.cell.Scalar {
+		if w.reference == nil || w.reference.scalar() {
 			return uncertainty.Source{U: u}, true
 		}
 		column, err := w.reference.table.Column(s.Group)

@@ -62,7 +62,7 @@ func (e *evaluation) deriveLoop(c *curve) (*curve, []notice.Notice) {
 	if err != nil {
 		return nil, append(l.notices, notice.New("loop-refused", file, err.Error()).In(file))
 	}
-	l.tell(notice.New("loop-lift", file, quantity.Text(section.Lift, 4), quantity.Text(math.Abs(section.Closure), 2)))
+	l.tell(notice.New("loop-lift", file, quantity.Text(section.Lift, 4), quantity.Text(math.Abs(section.Closing.Lift), 2)))
 	scalar := *c
 	scalar.x, scalar.u = nil, nil
 	scalar.y = []float64{section.Lift}

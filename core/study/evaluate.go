@@ -216,8 +216,7 @@ func (e *evaluation) workWith(w *work) Cell {
 	}
 	w.findReference()
 	w.findSimulation()
-	if w.settleUnits() {
-		w.commonStations()
+	if w.commonGround() {
 		w.matchConditions()
 		w.doubtCurves()
 		w.family()
@@ -239,6 +238,18 @@ func (e *evaluation) workWith(w *work) Cell {
 	return w.cell
 }
 
+// commonGround brings both sides to what is compared: stations, or a scalar.
+func (w *work) commonGround() bool {
+	if w.q.Derive != nil {
+		return w.derive()
+	}
+	if !w.settleUnits() {
+		return false
+	}
+	w.commonStations()
+	return true
+}
+
 // work is the state of one cell while it is evaluated. Slices over the
 // stations are in SI.
 type work struct {
@@ -248,7 +259,10 @@ type work struct {
 	choices Choices
 	// withExcluded compares the excluded stations too, as an alternative.
 	withExcluded bool
-	inner        bool // an alternative itself: what only the statement shows is left out
+	derivedData  bool                           // sources of the data are of a curve from which the scalar was taken
+	asScalar     func(c *curve) (*curve, error) // takes the scalar of a further run
+	derivedBoth  bool                           // and all others of the curve of the simulation
+	inner        bool                           // an alternative itself: what only the statement shows is left out
 	cell         Cell
 
 	reference *curve
@@ -327,7 +341,7 @@ func (w *work) findReference() {
 	w.reference = w.use(found[0])
 	for _, p := range found[1:] {
 		c := w.use(p)
-		if c != nil && c.scalar() && w.reference != nil && w.reference.scalar() {
+		if c != nil && w.reference != nil && (w.q.Derive != nil || c.scalar() && w.reference.scalar()) {
 			w.others = append(w.others, c) // held against the first
 			continue
 		}

@@ -85,6 +85,12 @@ func (e *evaluation) fragile(q *Question, model string, have Cell) []Fragility {
 		other := e.workWith(&work{e: e, q: q, model: model, choices: choices, inner: true})
 		list = append(list, changes(a.change, have, other)...)
 	}
+	for _, d := range otherDerivations(q.Derive) {
+		asked := *q
+		asked.Derive = &d
+		other := e.workWith(&work{e: e, q: &asked, model: model, choices: q.Choices, inner: true})
+		list = append(list, changes(d.label, have, other)...)
+	}
 	if j := have.Joint; j != nil {
 		for _, r := range j.Without {
 			if r.Exceeds != j.Exceeds {

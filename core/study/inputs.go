@@ -23,6 +23,14 @@ func (w *work) findInputRuns() {
 			continue
 		}
 		c := w.use(p)
+		if c != nil && w.asScalar != nil && !c.scalar() {
+			scalar, err := w.asScalar(c)
+			if err != nil {
+				w.tell(notice.New("derive-run", w.e.study.fileName(p), w.q.Derive.Kind, err.Error()))
+				continue
+			}
+			c = scalar
+		}
 		at, err := strconv.ParseFloat(p.InputAt.Value, 64)
 		switch {
 		case c == nil || !w.inCellUnit(c):

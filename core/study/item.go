@@ -16,6 +16,7 @@ const (
 	ItemCriterion   = "criterion"   // of the scores of a question
 	ItemApplication = "application" // of the study
 	ItemRun         = "run"         // of a question; there is one for each of its runs, named by field, model and grid
+	ItemDerived     = "derived"     // a further question: a scalar of the same curves
 )
 
 // AddItem appends an empty item of a kind.
@@ -31,6 +32,8 @@ func (s *Study) AddItem(t Target, at string) error {
 		*list = append(*list, metric.Criterion{Name: "criterion " + strconv.Itoa(len(*list)+1), Score: "FB"})
 	case t.Kind == ItemApplication:
 		s.Application = append(s.Application, Condition{})
+	case t.Kind == ItemDerived && q != nil:
+		s.askScalar(q)
 	default:
 		return refuse("a new "+t.Kind, t.ID)
 	}

@@ -222,6 +222,7 @@ var fieldNames = map[string]string{
 	"balance_of":         "kind of balance", "scale": "flux that matters", "scale_name": "name of the flux that matters",
 	"start": "start of averaging", "period": "period", "u_iter": "U_iter", "u_iter_why": "reason of U_iter", "effect": "effect of an open balance", "effect_why": "reason of the effect", "stand_in": "quantity whose monitors are taken", "stand_in_why": "reason why monitors of another quantity are taken",
 	"requirement.value": "requirement", "requirement.percent": "basis of the requirement", "requirement.who": "who set the requirement", "requirement.date": "date of the requirement",
+	"derive.kind":       "scalar taken from the curves",
 	"scores.dispersion": "scores of the dispersion field", "scores.threshold": "threshold of the scores", "scores.fraction": "fraction of the hit rate", "scores.allowance": "allowance of the hit rate",
 	"scores.allowance_k": "allowance of the hit rate in u_D", "scores.scale": "scale of the measures", "scores.scale_value": "entered scale of the measures", "scores.percent": "E in percent of |D|",
 	"scores.percent_above": "least |D| of a percentage", "scores.weights": "weights of the stations", "scores.correlation": "correlation and slope", "scores.distribution": "limits of agreement and area",
@@ -400,6 +401,9 @@ func (q *Question) enter(path, value string) (string, error) {
 	}
 	if strings.HasPrefix(path, "scores.") {
 		return q.enterScoring(strings.TrimPrefix(path, "scores."), value)
+	}
+	if key, of := strings.CutPrefix(path, "derive."); of {
+		return q.enterDerive(key, value)
 	}
 	c := &q.Choices
 	switch path {

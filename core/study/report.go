@@ -109,6 +109,7 @@ type Cell struct {
 	Measured    []MeasureLine `json:"measured,omitempty"` // of curves, with the other alternatives
 	Regions     []RegionLine  `json:"regions"`
 	Crossings   Crossings     `json:"crossings"`
+	Derived     *Derived      `json:"derived,omitempty"` // where the cell is a scalar taken from curves
 	Monitors    []MonitorLine `json:"monitors"`
 	Balances    []BalanceLine `json:"balances"`
 	Grids       *Grids        `json:"grids"`
@@ -379,6 +380,66 @@ type Crossing struct {
 	X      Number `json:"x"`
 	U      Number `json:"u"`
 	Rising bool   `json:"rising"`
+}
+
+// Derived says how the scalar of a cell was taken from its curves. Values are
+// in the cell's unit.
+type Derived struct {
+	Kind        string           `json:"kind"`
+	Formula     string           `json:"formula"`
+	Settings    []DerivedSetting `json:"settings"`
+	Sides       []DerivedSide    `json:"sides"`
+	Effect      Number           `json:"effect"` // of the simulation at all its rows less at the stations of the data
+	Others      []DerivedOther   `json:"others"`
+	Propagation string           `json:"propagation"` // how u of the curves became u of the scalar; empty where nothing was carried
+}
+
+// DerivedSetting is a choice or a number of the taking, in words.
+type DerivedSetting struct {
+	Name  string `json:"name"`
+	Value string `json:"value"`
+}
+
+// DerivedSide is the scalar of one curve. U is the standard uncertainty of what
+// the method leaves open of this side alone.
+type DerivedSide struct {
+	Side      string          `json:"side"`
+	File      string          `json:"file"`
+	Rows      int             `json:"rows"`
+	Value     Number          `json:"value"`
+	U         Number          `json:"u"`
+	At        Number          `json:"at"` // the place it stands for, in AtUnit
+	AtUnit    string          `json:"at_unit"`
+	Edge      Number          `json:"edge"` // velocity at the edge, in EdgeUnit
+	EdgeUnit  string          `json:"edge_unit"`
+	Overshoot Number          `json:"overshoot"` // fraction of the edge
+	Gap       Number          `json:"gap"`       // of a contour, in lengths
+	Bound     bool            `json:"bound"`     // only a bound
+	Effects   []DerivedEffect `json:"effects"`
+	Places    []DerivedPlace  `json:"places"`
+}
+
+// DerivedEffect is what another choice of the method does to the scalar.
+type DerivedEffect struct {
+	Name   string `json:"name"`
+	Change Number `json:"change"`
+	U      Number `json:"u"` // standard uncertainty that it stands for
+}
+
+// DerivedPlace is a candidate of a crossing, in the unit of the stations.
+type DerivedPlace struct {
+	X      Number `json:"x"`
+	U      Number `json:"u"` // of the values there over the slope
+	Rising bool   `json:"rising"`
+	Chosen bool   `json:"chosen"`
+}
+
+// DerivedOther is the scalar under another choice.
+type DerivedOther struct {
+	Change     string `json:"change"`
+	Simulation Number `json:"simulation"`
+	Reference  Number `json:"reference"`
+	E          Number `json:"e"`
 }
 
 // MonitorLine is the judgement of one monitor, with the points to draw.

@@ -45,6 +45,8 @@ func (q *Question) enterSource(path, value string) (string, error) {
 		return oneOf(&s.Of, value, OfData, OfInput, OfNumerical)
 	case "random":
 		return yesNo(&s.Random, value)
+	case "of_scalar":
+		return yesNo(&s.OfScalar, value)
 	case "shared":
 		return yesNo(&s.Shared, value)
 	}

@@ -210,6 +210,9 @@ type Question struct {
 	Resolution  string       `json:"resolution,omitempty"` // Counted: the resolution seen in the data is a source
 	Runs        []RunEntry   `json:"runs,omitempty"`
 	StandIn     *StandIn     `json:"stand_in,omitempty"`
+	// Derive asks for a scalar taken from the curves of the slips; nil compares
+	// the values as they are.
+	Derive *Derivation `json:"derive,omitempty"`
 	// Answers holds, by the code of a finding, what a person answered to it.
 	// An answered finding is no open point any more; the memo prints both.
 	Answers map[string]string `json:"answers,omitempty"`
@@ -410,6 +413,9 @@ type Source struct {
 	// shared sources of the data Sensitivity is the change of S for one of D.
 	Sensitivity     *float64 `json:"sensitivity,omitempty"`
 	DataSensitivity *float64 `json:"data_sensitivity,omitempty"`
+	// OfScalar says that the value is of the scalar that the question takes from
+	// its curves, and not of the values of the curve.
+	OfScalar bool `json:"of_scalar,omitempty"`
 }
 
 // Types of evaluation of a source: from a series of readings, or by other means.

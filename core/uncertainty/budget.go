@@ -127,3 +127,48 @@ func pick[T any](values []T, rows []int) []T {
 	}
 	return out
 }
+
+// Through returns the standard uncertainty of the sum of c_i times the value
+// at station i: sqrt(cᵀVc). Stations with a slope of zero do not count, known
+// or not.
+func (b Budget) Through(c []float64) float64 {
+	total := 0.0
+	for i, v := range b.Variance {
+		if c[i] != 0 {
+			total += float64(float64(c[i]*c[i]) * v)
+		}
+	}
+	sum := func(u []float64, over func(i int) bool) float64 {
+		s := 0.0
+		for i, v := range u {
+			if c[i] != 0 && over(i) {
+				s += float64(c[i] * v)
+			}
+		}
+		return s
+	}
+	for _, u := range b.Common {
+		s := sum(u, func(int) bool { return true })
+		total += float64(s * s)
+	}
+	for _, g := range b.Groups {
+		done := map[int]bool{}
+		for _, label := range g.Label {
+			if !done[label] {
+				done[label] = true
+				s := sum(g.U, func(i int) bool { return g.Label[i] == label })
+				total += float64(s * s)
+			}
+		}
+	}
+	for _, m := range b.Markov {
+		for i := range m.U {
+			for j := range m.U {
+				if c[i] != 0 && c[j] != 0 {
+					total += float64(float64(c[i]*c[j])*float64(m.U[i]*m.U[j])) * math.Exp(-math.Abs(m.X[i]-m.X[j])/m.Length)
+				}
+			}
+		}
+	}
+	return math.Sqrt(max(0, total))
+}

@@ -365,6 +365,7 @@ export interface Cell {
   measured?: MeasureLine[];
   regions: RegionLine[] | null;
   crossings: Crossings;
+  derived?: Derived;
   monitors: MonitorLine[] | null;
   balances: BalanceLine[] | null;
   grids: Grids | null;
@@ -613,6 +614,16 @@ export interface RegionLine {
 export interface Crossings {
   sim: Crossing[] | null;
   ref: Crossing[] | null;
+}
+
+export interface Derived {
+  kind: string;
+  formula: string;
+  settings: DerivedSetting[] | null;
+  sides: DerivedSide[] | null;
+  effect: number | null;
+  others: DerivedOther[] | null;
+  propagation: string;
 }
 
 export interface MonitorLine {
@@ -864,6 +875,35 @@ export interface Crossing {
   rising: boolean;
 }
 
+export interface DerivedSetting {
+  name: string;
+  value: string;
+}
+
+export interface DerivedSide {
+  side: string;
+  file: string;
+  rows: number;
+  value: number | null;
+  u: number | null;
+  at: number | null;
+  at_unit: string;
+  edge: number | null;
+  edge_unit: string;
+  overshoot: number | null;
+  gap: number | null;
+  bound: boolean;
+  effects: DerivedEffect[] | null;
+  places: DerivedPlace[] | null;
+}
+
+export interface DerivedOther {
+  change: string;
+  simulation: number | null;
+  reference: number | null;
+  e: number | null;
+}
+
 export interface Sampling {
   start_up: number;
   rows: number;
@@ -894,4 +934,17 @@ export interface LocalGrid {
 export interface CorrelationPoint {
   rho: number | null;
   statistic: number | null;
+}
+
+export interface DerivedEffect {
+  name: string;
+  change: number | null;
+  u: number | null;
+}
+
+export interface DerivedPlace {
+  x: number | null;
+  u: number | null;
+  rising: boolean;
+  chosen: boolean;
 }
