@@ -30,13 +30,20 @@ type Table struct {
 const width = 760
 
 // Figures returns the figures of a cell in the order of reading: the monitors
-// of its runs, the comparison, the parts of the joint statistic and what a
+// and balances of its runs, the comparison, the parts of the joint statistic and what a
 // correlation does to it, the grid study behind u_num, and the sources of u_val. Their IDs begin with id. A cell with none of them has none. It fails on
 // a theme that does not exist.
 func Figures(c study.Cell, id string, t Theme) ([]Figure, error) {
 	figures := []Figure{}
 	if len(c.Monitors) > 0 {
 		f, err := Settling(c, id, t)
+		if err != nil {
+			return nil, err
+		}
+		figures = append(figures, f)
+	}
+	if hasBalances(c) {
+		f, err := Balances(c, id, t)
 		if err != nil {
 			return nil, err
 		}

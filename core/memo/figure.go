@@ -25,7 +25,7 @@ func (b *builder) figuresOf(c study.Cell, kind string) []Node {
 // sources or, "", the comparison.
 func kindOf(f Figure) string {
 	switch _, kind, _ := strings.Cut(f.ID, "-"); kind {
-	case "monitors", "grids", "budget":
+	case "monitors", "balances", "grids", "budget":
 		return kind
 	}
 	return ""
