@@ -68,6 +68,9 @@ func (p *picture) family(c study.Cell, id string) (Figure, error) {
 		y.around(float64(finest.Value), float64(g.U))
 	}
 	y.take(float64(g.Extrapolated))
+	if g.Fit != nil {
+		y.take(float64(g.Fit.Base))
+	}
 	d, u, measured := margin(c)
 	if measured {
 		y.around(d, float64(k*u))
@@ -122,15 +125,16 @@ const (
 	usedName    = "grids used"
 	unusedName  = "other grids"
 	orderName   = "line of the observed order"
+	fitName     = "line behind U"
 	extraName   = "extrapolated to h = 0"
 	gridBarName = "± U_{grid}, 95 %"
 )
 
-// lined reports whether the line of the observed order can be drawn: it goes
-// through the three finest grids, and a fit over more does not.
+// lined reports whether a line can be drawn: the one behind U where that is
+// another than that of the observed order through the three finest grids.
 func lined(g *study.Grids, finest study.GridPoint) bool {
 	used, _ := usedPoints(g)
-	return len(used) <= 3 && g.Extrapolated.Known() && g.Order.Known() && g.Order > 0 && finest.H > 0
+	return g.Fit != nil || len(used) <= 3 && g.Extrapolated.Known() && g.Order.Known() && g.Order > 0 && finest.H > 0
 }
 
 func (p *picture) familyKeys(c study.Cell, measured bool) []entry {
@@ -144,7 +148,7 @@ func (p *picture) familyKeys(c study.Cell, measured bool) []entry {
 		keys = append(keys, entry{Name: unusedName, Icon: triangle.key(), ItemStyle: p.hollow(p.models[0])})
 	}
 	if finest, known := finestOf(g); known && lined(g, finest) {
-		keys = append(keys, entry{Name: orderName, Icon: lineKey(orderDash), ItemStyle: filled(p.models[0])})
+		keys = append(keys, entry{Name: lineName(g), Icon: lineKey(orderDash), ItemStyle: filled(p.models[0])})
 	}
 	if g.Extrapolated.Known() {
 		keys = append(keys, entry{Name: extraName, Icon: plus.key(), ItemStyle: filled(p.models[0])})
@@ -207,7 +211,7 @@ func (p *picture) familyMarks(n int, g *study.Grids, finest study.GridPoint, kno
 	}
 	if known && lined(g, finest) {
 		p.draw(n, 2, series{
-			Type: "line", Name: orderName, Symbol: "none", Silent: true, Clip: true, ItemStyle: filled(p.models[0]),
+			Type: "line", Name: lineName(g), Symbol: "none", Silent: true, Clip: true, ItemStyle: filled(p.models[0]),
 			LineStyle: &lineStyle{LineStyle: opts.LineStyle{Color: p.models[0], Width: 1.4}, Type: orderDash},
 			Data:      orderLine(g, finest, xs.Max),
 		})
@@ -245,15 +249,36 @@ func aside(g *study.Grids) int {
 	return 9
 }
 
-// orderLine returns points of f0 + (f1 - f0) (h/h1)^p from 0 to the edge, to
-// six digits: powers differ between hosts in their last bits.
+// lineName names the line of a family.
+func lineName(g *study.Grids) string {
+	if g.Fit != nil {
+		return fitName
+	}
+	return orderName
+}
+
+// lineAt returns the value of that line at a spacing.
+func lineAt(g *study.Grids, finest study.GridPoint, h float64) float64 {
+	if g.Fit == nil {
+		rise := float64(finest.Value-g.Extrapolated) * math.Pow(h/float64(finest.H), float64(g.Order))
+		return float64(g.Extrapolated) + rise
+	}
+	v := float64(g.Fit.Base)
+	for _, t := range g.Fit.Terms {
+		v += float64(float64(t.Coefficient) * math.Pow(h/float64(finest.H), float64(t.Power)))
+	}
+	return v
+}
+
+// orderLine returns points of the line, f0 + (f1 - f0) (h/h1)^p or the fit
+// behind U, from 0 to the edge, to six digits: powers differ between hosts in
+// their last bits.
 func orderLine(g *study.Grids, finest study.GridPoint, edge float64) [][]any {
 	const pieces = 60
 	rows := make([][]any, pieces+1)
 	for i := range rows {
 		h := float64(i) * edge / pieces
-		rise := float64(finest.Value-g.Extrapolated) * math.Pow(h/float64(finest.H), float64(g.Order))
-		rows[i] = []any{quantity.Number(quantity.Round(h, 6)), quantity.Number(quantity.Round(float64(g.Extrapolated)+rise, 6))}
+		rows[i] = []any{quantity.Number(quantity.Round(h, 6)), quantity.Number(quantity.Round(lineAt(g, finest, h), 6))}
 	}
 	return rows
 }

@@ -59,21 +59,26 @@ func (b *builder) grids(i int, c study.Cell) []Node {
 	}
 	switch {
 	case g.Along:
-		add("*u*_{num} = *U*/*k*_{num}", append(say("root mean square over the stations "), append(withUnit(digits(g.UNum, 3, at("u_num")), c.Unit), say(", *k*_{num} = {}", digits(g.KNum, 3, at("k_num")))...)...)...)
+		add("*u*_{num} = *U*/*k*_{num}", append(say("root mean square over the stations "), append(withUnit(digits(g.UNum, 3, at("u_num")), c.Unit), say(", *k*_{num} = {}{}", digits(g.KNum, 3, at("k_num")), text(kNumWords(g.KNum)))...)...)...)
 	case known(g.U) && known(g.UNum):
-		add("*u*_{num} = *U*/*k*_{num}", append(withUnit(digits(g.UNum, 3, at("u_num")), c.Unit), say(" with *k*_{num} = {}", digits(g.KNum, 3, at("k_num")))...)...)
+		add("*u*_{num} = *U*/*k*_{num}", append(withUnit(digits(g.UNum, 3, at("u_num")), c.Unit), say(" with *k*_{num} = {}{}", digits(g.KNum, 3, at("k_num")), text(kNumWords(g.KNum)))...)...)
 	case known(g.UNum):
 		add("*u*_{num}", withUnit(digits(g.UNum, 3, at("u_num")), c.Unit)...)
 	default:
 		add("*u*_{num}", text("not available"))
 	}
 	if known(g.NextCells, g.NextCost) {
-		add("To resolve the requirement, with *E* unchanged", say("about {} cells; {} times the cost of the finest run, by cells^{4/3} (a run in time)", cellCount(g.NextCells, at("next_cells")), digits(g.NextCost, 3, at("next_cost")))...)
+		add("To resolve the requirement, with *E* unchanged", append(say("about {} cells; {} times the cost of the finest run, by ", cellCount(g.NextCells, at("next_cells")), digits(g.NextCost, 3, at("next_cost"))), costWords(g, at("cost_exponent"))...)...)
 	}
 	nodes = append(nodes, pairs(rows...))
+	if lines := familyLines(i, c); len(lines) > 0 {
+		nodes = append(nodes, sheet(lines...))
+	}
 	if g.Rule != "" {
 		nodes = append(nodes, note(text("Rule: "+sentenceEnd(g.Rule))))
 	}
+	nodes = append(nodes, b.gridSettings(c)...)
+	nodes = append(nodes, b.gridRules(i, c)...)
 	if len(g.Local) > 0 {
 		nodes = append(nodes, b.localGrids(i, c)...)
 	}
@@ -82,14 +87,18 @@ func (b *builder) grids(i int, c study.Cell) []Node {
 
 func (b *builder) gridPoints(i int, c study.Cell) Node {
 	g := c.Grids
-	hasValue := false
+	hasValue, hasHeight := false, false
 	for _, p := range g.Points {
-		hasValue = hasValue || p.Value.Known()
+		hasValue, hasHeight = hasValue || p.Value.Known(), hasHeight || p.YPlus > 0
 	}
-	head := headRow("Grid", "#Cells", "#*h*/*h*_{finest}", "Use")
+	titles := []string{"Grid", "#Cells", "#*h*/*h*_{finest}"}
 	if hasValue {
-		head = headRow("Grid", "#Cells", "#*h*/*h*_{finest}", "#Value", "Use")
+		titles = append(titles, "#Value")
 	}
+	if hasHeight {
+		titles = append(titles, "#*y*^{+}")
+	}
+	head := headRow(append(titles, "Use")...)
 	rows := make([]Node, len(g.Points))
 	for j, p := range g.Points {
 		at := func(name string) string { return fmt.Sprintf("cells.%d.grids.points.%d.%s", i, j, name) }
@@ -104,6 +113,13 @@ func (b *builder) gridPoints(i int, c study.Cell) Node {
 				value = beside(p.Value, g.U/10, at("value"))
 			}
 			rows[j].Nodes = append(rows[j].Nodes, figureCell(value))
+		}
+		if hasHeight {
+			height := text("–")
+			if p.YPlus > 0 {
+				height = digits(p.YPlus, 3, at("y_plus"))
+			}
+			rows[j].Nodes = append(rows[j].Nodes, figureCell(height))
 		}
 		rows[j].Nodes = append(rows[j].Nodes, cell(text(use)))
 	}

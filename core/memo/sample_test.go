@@ -106,7 +106,7 @@ func gridPoints(values ...study.Number) []study.GridPoint {
 	cells := []float64{410000, 980000, 2350000, 5600000}
 	var all []study.GridPoint
 	for i, v := range values {
-		all = append(all, study.GridPoint{Name: fmt.Sprintf("G%d", i+1), Cells: number10(cells[i]), H: number10(math.Cbrt(5600000 / cells[i])), Value: v, Used: i > 0})
+		all = append(all, study.GridPoint{YPlus: []study.Number{38, 27, 12, .9}[i], Name: fmt.Sprintf("G%d", i+1), Cells: number10(cells[i]), H: number10(math.Cbrt(5600000 / cells[i])), Value: v, Used: i > 0})
 	}
 	return all
 }
@@ -138,7 +138,12 @@ func drag() study.Cell {
 		Grids: &study.Grids{
 			Points: gridPoints(.03155, .03068, .03021, .02995), Dimension: 3, Class: "monotone", Ratio: .5531914894, Order: 2.0149, Formal: 2, Extrapolated: .02962,
 			Ea: .0086811352, Eext: .0111411209, GCI: .013723, U: .000411, UNum: .000357391304, KNum: 1.15, Rule: "three finest grids, bounded rule", R21: 1.336, R32: 1.338,
-			OrderLow: quantity.None, OrderHigh: quantity.None, NextCells: 6880000, NextCost: 1.316,
+			OrderLow: quantity.None, OrderHigh: quantity.None, NextCells: 6880000, NextCost: 1.316, CostExponent: 1.3333333333,
+			Card: &study.FamilyCard{Ratios: []study.GridRatio{{Fine: "G4", Coarse: "G3", R: 1.3357}, {Fine: "G4", Coarse: "G2", R: 1.7877}}, Similar: study.SimilarYes, Wall: "wall functions", Scheme: "second order", Regime: study.RegimeSteady,
+				Settings: []study.SettingLine{{Key: "limiter", Values: []string{"none", "none", "", "minmod"}, Differs: true}, {Key: "scheme", Values: []string{"a", "a", "a", ""}}, {Key: "seed", Values: []string{"1", "2", "3", "4"}}}},
+			Rules:  []study.RuleLine{{Rule: "three finest grids, bounded", U: .000411, UNum: .000357391}, {Rule: "a bound of some kind", U: quantity.None, UNum: .0003}},
+			Fit:    &study.FitLine{Base: .02962, Terms: []study.FitTerm{{Coefficient: .00033, Power: 2}, {Coefficient: -.00001, Power: 1}}},
+			Stated: &study.StatedNext{U: .0002, Cells: 13500000, Cost: 3.23},
 		},
 		Sources: []study.SourceLine{
 			{Name: "balance", Of: study.OfData, Text: "0.00040, absolute, standard", U: .0004, Share: .4569, Pattern: study.Common, Origin: "five runs over three days and the calibration"},
@@ -163,7 +168,7 @@ func oscillating() study.Cell {
 	s.S, s.D, s.E, s.UD, s.UVal, s.Ratio, s.Lo, s.Hi, s.Reading = 36.172, 35.31, .862, quantity.None, quantity.None, quantity.None, quantity.None, quantity.None, ""
 	s.UNum, s.UInput = .1075, quantity.None
 	none := quantity.None
-	c.Grids = &study.Grids{Points: gridPoints(35.68, 36.34, 35.96, 36.172), Dimension: 3, Class: "oscillatory", Ratio: -.5578947, Order: none, Formal: 2, Extrapolated: none, Ea: none, Eext: none, GCI: none, U: none, UNum: .1075, KNum: 1.15, Rule: "half-range of the three finest as a bound", R21: 1.336, R32: 1.338, OrderLow: none, OrderHigh: none, NextCells: none, NextCost: none}
+	c.Grids = &study.Grids{Stated: &study.StatedNext{U: .05, Cells: none, Cost: none}, Points: gridPoints(35.68, 36.34, 35.96, 36.172), Dimension: 3, Class: "oscillatory", Ratio: -.5578947, Order: none, Formal: 2, Extrapolated: none, Ea: none, Eext: none, GCI: none, U: none, UNum: .1075, KNum: 1.15, Rule: "half-range of the three finest as a bound", R21: 1.336, R32: 1.338, OrderLow: none, OrderHigh: none, NextCells: none, NextCost: none}
 	c.Sources = c.Sources[2:]
 	c.Sources[0].Share = none
 	c.Degrees, c.K95, c.Monitors, c.Balances, c.Residuals, c.RoundOff, c.NumSums = quantity.None, quantity.None, nil, nil, nil, nil, nil

@@ -187,6 +187,9 @@ func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 	}
 	if p.Role.Value == study.Simulation {
 		list = append(list, entry("grid", "grid", p.Grid, free, "e.g. G4"), entry("cells", "cells", p.Cells, free, "number of cells"))
+		if p.Grid.Given() || p.Cells.Given() {
+			list = append(list, entry("y_plus", "y+ of the first cells", p.YPlus, free, ""), entry("settings", "settings of the run", p.Settings, free, "key: value; key: value, beside those the file states"))
+		}
 	}
 	if p.Role.Value == study.Reference {
 		list = append(list, entry("u.column", "uncertainty in", p.U.Column, columns, ""))
@@ -394,9 +397,9 @@ func choices(q *study.Question) []Entry {
 	}
 	return []Entry{
 		entry("k", "k of the statement", quantity.Typed(c.K), []Option{}, "2 covers about 95 % of a normal distribution"),
-		entry("k_num", "k_num, from U of the grids to u_num", quantity.Typed(c.KNum), []Option{}, "1.15: U about the fine grid; 2: normal"),
+		entry("k_num", "k_num, from U of the grids to u_num", quantity.Typed(c.KNum), []Option{}, "1.15: error of the fine grid a shifted Gaussian; 2: normal"),
 		entry("bounded", "order of the three finest", yes(c.Bounded), []Option{{"yes", "bounded rule"}, {"no", "plain rule"}}, ""),
-		entry("rule", "grids of one value", rule, rules, "along a curve: the three finest"),
+		entry("rule", "grids of one value", rule, rules, "along a curve they act with the common order"),
 		entry("formal", "formal order", quantity.Typed(c.Formal), []Option{}, ""),
 		entry("dimension", "grids are", strconv.Itoa(c.Dimension), []Option{{"2", "two-dimensional"}, {"3", "three-dimensional"}}, ""),
 		entry("interpolation", "simulation at the stations", string(c.Interpolation), []Option{{"linear", "linear"}, {"monotone", "monotone cubic"}}, ""),

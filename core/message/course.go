@@ -168,7 +168,7 @@ func ruleWords(c *study.Cell) string {
 
 func gridNumbers(c *study.Cell) []Headline {
 	g := c.Grids
-	if g == nil || g.Along {
+	if g == nil {
 		return nil
 	}
 	var list []Headline
@@ -176,6 +176,13 @@ func gridNumbers(c *study.Cell) []Headline {
 		if n.Known() {
 			list = append(list, Headline{text(n, digits), name})
 		}
+	}
+	if g.Along {
+		add(g.Order, 3, "common order")
+		if g.UNum.Known() {
+			list = append(list, Headline{text(g.UNum, 3) + c.UnitSuffix(), "u_num, root mean square"})
+		}
+		return list
 	}
 	add(g.Order, 3, "observed order")
 	if g.U.Known() {
@@ -214,15 +221,29 @@ func familyTables(c *study.Cell) []Table {
 	if g == nil {
 		return nil
 	}
+	heights := false
+	for _, p := range g.Points {
+		heights = heights || p.YPlus > 0
+	}
 	t := Table{Title: "Grids, coarse to fine", Head: []string{"grid", "cells", "h / h(finest)", cmp.Or(c.Symbol, "value"), "used"}, Rows: [][]string{}}
+	if heights {
+		t.Head = append(t.Head, "y+")
+	}
 	for _, p := range g.Points {
 		used := ""
 		if p.Used {
 			used = "yes"
 		}
 		t.Rows = append(t.Rows, []string{cmp.Or(p.Name, "–"), strconv.FormatFloat(float64(p.Cells), 'f', 0, 64), text(p.H, 4), quantity.Text(float64(p.Value), 6), used})
+		if last := len(t.Rows) - 1; heights {
+			height := "–"
+			if p.YPlus > 0 {
+				height = text(p.YPlus, 3)
+			}
+			t.Rows[last] = append(t.Rows[last], height)
+		}
 	}
-	return []Table{t}
+	return append([]Table{t}, gridTablesBeside(c)...)
 }
 
 func sameAnswer(c *study.Cell) string {

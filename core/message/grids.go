@@ -14,7 +14,7 @@ import (
 )
 
 // GridsRequest asks for the grid study of values over cell counts. Empty
-// texts take the defaults: the first column, all other columns.
+// texts take the defaults: the first column of numbers, all other columns.
 type GridsRequest struct {
 	Size   string `json:"size,omitempty"`
 	Value  string `json:"value,omitempty"`
@@ -86,6 +86,12 @@ func grids(_ *Session, q *Request, attached [][]byte, r *Reply) ([][]byte, error
 // gridCases makes the grid studies of one table.
 func gridCases(file string, t tablefile.Table, ask GridsRequest) ([]GridsCase, error) {
 	size := t.Columns[0]
+	for _, c := range t.Columns {
+		if len(finite(c.Values)) > 0 { // names of grids are no sizes
+			size = c
+			break
+		}
+	}
 	if ask.Size != "" {
 		c, err := t.Column(ask.Size)
 		if err != nil {

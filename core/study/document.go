@@ -184,6 +184,10 @@ func (s *Study) Clone() *Study {
 			scores.Criteria = slices.Clone(scores.Criteria)
 			q.Scores = &scores
 		}
+		if q.Family != nil {
+			family := *q.Family
+			q.Family = &family
+		}
 		q.Answers = maps.Clone(q.Answers)
 		if q.Requirement != nil {
 			r := *q.Requirement

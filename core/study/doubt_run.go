@@ -46,22 +46,30 @@ const (
 	resolvedWall = 5.0
 )
 
-// doubtWallTreatment asks about a table over grids whose y+ crosses from wall
-// functions to a resolved wall: such grids are not one family.
+// doubtWallTreatment asks about grids whose y+ crosses from wall functions to a
+// resolved wall: such grids are not one family.
 func (w *work) doubtWallTreatment() {
-	if w.grids == nil {
-		return
-	}
-	for _, c := range w.grids.table.Columns {
-		if !wallUnits(c.Name) {
-			continue
-		}
-		lo, hi, texts := math.Inf(1), math.Inf(-1), []string{}
-		for _, v := range c.Values {
-			if !math.IsNaN(v) {
-				lo, hi = min(lo, v), max(hi, v)
-				texts = append(texts, quantity.Text(v, 2))
+	lists := [][]float64{}
+	if w.grids != nil {
+		for _, c := range w.grids.table.Columns {
+			if wallUnits(c.Name) {
+				lists = append(lists, c.Values)
 			}
+		}
+	} else {
+		entered := []float64{}
+		for i := len(w.runs) - 1; i >= 0; i-- { // coarse to fine
+			if v, err := strconv.ParseFloat(w.runs[i].curve.slip.YPlus.Value, 64); err == nil {
+				entered = append(entered, v)
+			}
+		}
+		lists = append(lists, entered)
+	}
+	for _, values := range lists {
+		lo, hi, texts := math.Inf(1), math.Inf(-1), []string{}
+		for _, v := range known(values) {
+			lo, hi = min(lo, v), max(hi, v)
+			texts = append(texts, quantity.Text(v, 2))
 		}
 		if lo < resolvedWall && hi > wallFunction {
 			w.ask(1, "one wall treatment over the grids", "grid-wall", strings.Join(texts, ", "))

@@ -2,6 +2,7 @@ package study
 
 import (
 	"math"
+	"slices"
 	"strconv"
 
 	"weirmark/core/notice"
@@ -27,12 +28,11 @@ func (w *work) family() {
 		notices = w.curveFamily()
 	}
 	for _, n := range notices {
-		w.tell(n)
-		if n.Severity == notice.Stop {
+		if w.finding(1, "a grid uncertainty", n) {
 			w.blocked = true
-			w.stop(1, "a grid uncertainty", w.q.target("numerical"), n)
 		}
 	}
+	w.familyCard()
 }
 
 // scalarFamily studies one value over the grids.
@@ -55,6 +55,11 @@ func (w *work) scalarFamily() []notice.Notice {
 	u := r.StandardUncertainty(w.choices.KNum)
 	g.UNum = w.step(u)
 	w.cell.Grids, w.refined = g, r
+	w.coarseTriple(r, counts, values)
+	w.statedNext(r, u)
+	if !w.inner {
+		g.Rules, g.Fit = w.otherRules(counts, values), w.fitLine(r.Fit)
+	}
 	w.cell.Grid = g.Points[len(g.Points)-1].Name
 	if !math.IsNaN(u) && len(w.s) > 0 {
 		w.gridU = []float64{u}
@@ -123,6 +128,7 @@ func (w *work) curveFamily() []notice.Notice {
 		g.UNum = w.step(math.Sqrt(sum / n))
 	}
 	w.cell.Grids = g
+	w.statedNext(refinement.Result{Class: refinement.Monotone, Order: l.Common, Counts: [3]float64{slices.Max(counts)}}, w.yUnit.StepToSI(float64(g.UNum)))
 	return l.Notices
 }
 

@@ -92,7 +92,8 @@ func (w *work) nextGrid(needed float64) {
 	if !ok {
 		return
 	}
-	next := refinement.NextGrid(w.refined, w.choices.dimension(), w.choices.rule(), w.gridU[0], u, refinement.CostExponent)
+	next := refinement.NextGrid(w.refined, w.choices.dimension(), w.choices.rule(), w.gridU[0], u, w.q.costExponent())
 	// An order is good for no more than three digits of a cell count.
+	w.cell.Grids.CostExponent = Number(w.q.costExponent())
 	w.cell.Grids.NextCells, w.cell.Grids.NextCost = Number(quantity.Round(next.Cells, 3)), Number(next.Cost)
 }

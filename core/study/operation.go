@@ -221,6 +221,8 @@ var fieldNames = map[string]string{
 	"choices.num_linear": "sum of the parts of u_num",
 	"balance_of":         "kind of balance", "scale": "flux that matters", "scale_name": "name of the flux that matters",
 	"start": "start of averaging", "period": "period", "u_iter": "U_iter", "u_iter_why": "reason of U_iter", "effect": "effect of an open balance", "effect_why": "reason of the effect", "stand_in": "quantity whose monitors are taken", "stand_in_why": "reason why monitors of another quantity are taken",
+	"y_plus": "y+ of the first cells", "settings": "settings",
+	"family.similar": "similarity of the grids", "family.wall": "wall treatment", "family.scheme": "scheme", "family.regime": "kind of the runs", "family.cost_exponent": "exponent of the cost", "family.target": "u_num to reach",
 	"requirement.value": "requirement", "requirement.percent": "basis of the requirement", "requirement.who": "who set the requirement", "requirement.date": "date of the requirement",
 	"derive.kind":       "scalar taken from the curves",
 	"scores.dispersion": "scores of the dispersion field", "scores.threshold": "threshold of the scores", "scores.fraction": "fraction of the hit rate", "scores.allowance": "allowance of the hit rate",
@@ -276,7 +278,7 @@ func (s *Study) field(t Target) *Field {
 
 func (p *Slip) entry(path string) *Field {
 	return map[string]*Field{
-		"role": &p.Role, "case": &p.Case, "quantity": &p.Quantity, "model": &p.Model, "grid": &p.Grid, "cells": &p.Cells,
+		"role": &p.Role, "case": &p.Case, "quantity": &p.Quantity, "model": &p.Model, "grid": &p.Grid, "cells": &p.Cells, "y_plus": &p.YPlus, "settings": &p.Settings,
 		"x.column": &p.X.Column, "x.unit": &p.X.Unit, "y.column": &p.Y.Column, "y.unit": &p.Y.Unit,
 		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit, "axis": &p.Axis, "branch": &p.Branch, "derive": &p.Derive, "contour.column": &p.Contour.Column, "contour.unit": &p.Contour.Unit, "u_basis": &p.UBasis,
 		"input": &p.Input, "input_at": &p.InputAt, "upper.column": &p.Upper.Column, "upper.unit": &p.Upper.Unit, "bars_as": &p.BarsAs, "flow_rate": &p.FlowRate, "flow_rate_u": &p.FlowRateU,
@@ -398,6 +400,9 @@ func (s *Study) asked(q *Question) bool {
 func (q *Question) enter(path, value string) (string, error) {
 	if strings.HasPrefix(path, "requirement.") {
 		return q.enterRequirement(strings.TrimPrefix(path, "requirement."), value)
+	}
+	if strings.HasPrefix(path, "family.") {
+		return q.enterFamily(strings.TrimPrefix(path, "family."), value)
 	}
 	if strings.HasPrefix(path, "scores.") {
 		return q.enterScoring(strings.TrimPrefix(path, "scores."), value)

@@ -573,6 +573,12 @@ type Grids struct {
 	OrderLow    Number      `json:"order_low"`
 	OrderHigh   Number      `json:"order_high"`
 	Local       []LocalGrid `json:"local"`
+
+	Card         *FamilyCard `json:"card,omitempty"`
+	Rules        []RuleLine  `json:"rules,omitempty"` // of one value, by every rule
+	Fit          *FitLine    `json:"fit,omitempty"`   // behind U, where it is not that of the observed order
+	Stated       *StatedNext `json:"stated,omitempty"`
+	CostExponent Number      `json:"cost_exponent,omitempty"` // behind NextCost and Stated
 }
 
 // GridPoint is one grid.
@@ -581,7 +587,8 @@ type GridPoint struct {
 	Cells Number `json:"cells"`
 	H     Number `json:"h"` // relative to the finest
 	Value Number `json:"value"`
-	Used  bool   `json:"used"` // in the estimate
+	Used  bool   `json:"used"`             // in the estimate
+	YPlus Number `json:"y_plus,omitempty"` // of the first cells; left out where it is not known
 }
 
 // LocalGrid is the grid study at one station.

@@ -115,17 +115,19 @@ type Slip struct {
 	Quantity Field     `json:"quantity"`
 	Model    Field     `json:"model"`
 	Grid     Field     `json:"grid"`
-	Cells    Field     `json:"cells"`    // number of cells of Grid
-	X        ColumnUse `json:"x"`        // abscissa; not given for scalars
-	Y        ColumnUse `json:"y"`        // the quantity
-	U        ColumnUse `json:"u"`        // uncertainty of the quantity, independent between stations
-	UFactor  Field     `json:"u_factor"` // coverage of U: "1", "2", "95 %", "limits"
-	UBasis   Field     `json:"u_basis"`  // of U in percent: "reading", or the full scale in the unit of Y
-	Branch   Field     `json:"branch"`   // of a curve that goes out and back: a name of package profile, or empty
-	Derive   Field     `json:"derive"`   // DeriveLift, or empty: the values as they are
-	Contour  ColumnUse `json:"contour"`  // second coordinate of a section, for branches and DeriveLift
-	Size     ColumnUse `json:"size"`     // cell counts, for grid values
-	Axis     Field     `json:"axis"`     // of a monitor: iterations or samples in time
+	YPlus    Field     `json:"y_plus,omitzero"`   // of the first cells of Grid
+	Settings Field     `json:"settings,omitzero"` // of the run: "key: value; key: value"
+	Cells    Field     `json:"cells"`             // number of cells of Grid
+	X        ColumnUse `json:"x"`                 // abscissa; not given for scalars
+	Y        ColumnUse `json:"y"`                 // the quantity
+	U        ColumnUse `json:"u"`                 // uncertainty of the quantity, independent between stations
+	UFactor  Field     `json:"u_factor"`          // coverage of U: "1", "2", "95 %", "limits"
+	UBasis   Field     `json:"u_basis"`           // of U in percent: "reading", or the full scale in the unit of Y
+	Branch   Field     `json:"branch"`            // of a curve that goes out and back: a name of package profile, or empty
+	Derive   Field     `json:"derive"`            // DeriveLift, or empty: the values as they are
+	Contour  ColumnUse `json:"contour"`           // second coordinate of a section, for branches and DeriveLift
+	Size     ColumnUse `json:"size"`              // cell counts, for grid values
+	Axis     Field     `json:"axis"`              // of a monitor: iterations or samples in time
 
 	BalanceOf Field      `json:"balance_of,omitzero"`  // kind of a balance, of package settling; mass where it is not given
 	Scale     Field      `json:"scale,omitzero"`       // of a balance: the flux that matters, in the unit of the file; what enters where it is not given
@@ -193,7 +195,8 @@ type Question struct {
 	Case        string       `json:"case"`
 	Quantity    string       `json:"quantity"`
 	Symbol      string       `json:"symbol"`
-	Condition   string       `json:"condition"` // e.g. "α = 4.2°"
+	Family      *Family      `json:"family,omitempty"` // of grids
+	Condition   string       `json:"condition"`        // e.g. "α = 4.2°"
 	Requirement *Requirement `json:"requirement"`
 	Sources     []Source     `json:"sources"`
 	Kind        Field        `json:"kind"`

@@ -698,6 +698,11 @@ export interface Grids {
   order_low: number | null;
   order_high: number | null;
   local: LocalGrid[] | null;
+  card?: FamilyCard;
+  rules?: RuleLine[];
+  fit?: FitLine;
+  stated?: StatedNext;
+  cost_exponent?: number;
 }
 
 export interface SourceLine {
@@ -922,6 +927,7 @@ export interface GridPoint {
   h: number | null;
   value: number | null;
   used: boolean;
+  y_plus?: number;
 }
 
 export interface LocalGrid {
@@ -929,6 +935,33 @@ export interface LocalGrid {
   class: string;
   order: number | null;
   u: number | null;
+}
+
+export interface FamilyCard {
+  ratios: GridRatio[] | null;
+  similar: string;
+  wall: string;
+  scheme: string;
+  regime: string;
+  settings: SettingLine[] | null;
+}
+
+export interface RuleLine {
+  rule: string;
+  u: number | null;
+  u_num: number | null;
+}
+
+export interface FitLine {
+  base: number | null;
+  terms: FitTerm[] | null;
+}
+
+export interface StatedNext {
+  u: number | null;
+  cells: number | null;
+  cost: number | null;
+  met: boolean;
 }
 
 export interface CorrelationPoint {
@@ -947,4 +980,21 @@ export interface DerivedPlace {
   u: number | null;
   rising: boolean;
   chosen: boolean;
+}
+
+export interface GridRatio {
+  fine: string;
+  coarse: string;
+  r: number | null;
+}
+
+export interface SettingLine {
+  key: string;
+  values: string[] | null;
+  differs: boolean;
+}
+
+export interface FitTerm {
+  coefficient: number | null;
+  power: number | null;
 }
