@@ -114,6 +114,14 @@ func gridPoints(values ...study.Number) []study.GridPoint {
 func drag() study.Cell {
 	return study.Cell{
 		Case: "C1", Condition: "α = 4.2°", Quantity: "drag coefficient", Symbol: "Cd", Model: "B", Grid: "G4",
+		Derived: &study.Derived{Kind: "drag coefficient of a wake", Formula: "Cd = (2/L) ∫u/U (1 − u/U) dy", Settings: []study.DerivedSetting{{Name: "reference length L", Value: "0.2 m"}}, Effect: -.000021, Propagation: "first order",
+			Sides: []study.DerivedSide{
+				{Side: "reference", File: "c1-wake.csv", Rows: 31, Value: .0296, U: .000212, At: .0123, AtUnit: "m", Edge: 21.34, EdgeUnit: "m/s", Overshoot: .0123, Gap: quantity.None, Bound: true,
+					Effects: []study.DerivedEffect{{Name: "every second row left out", Change: -.00017, U: .0002125}},
+					Places:  []study.DerivedPlace{{X: .4567, U: .0032, Rising: true, Chosen: true}, {X: .7654, U: quantity.None}}},
+				{Side: "simulation at the stations", File: "c1-g4.dat", Rows: 31, Value: .02995, U: .000198, At: quantity.None, Edge: quantity.None, Overshoot: quantity.None, Gap: .00011},
+			},
+			Others: []study.DerivedOther{{Change: "edge at the plateau", Simulation: .0312, Reference: .0309, E: .0003}, {Change: "edge at the last row", Simulation: .0298, Reference: quantity.None, E: quantity.None}}},
 		Reference: "OR-26 balance", Kind: study.KindTest, Use: study.UseValidation, Unit: "1", Scalar: true,
 		Courses: [5]study.State{study.Settled, study.Settled, study.Settled, study.Settled, study.Doubts},
 		Choices: study.DefaultChoices(), StationsAll: 1, Provisional: true, Degrees: 7.3, K95: 2.34,
