@@ -347,7 +347,7 @@ func (b *builder) requirement(i int, c study.Cell) []Node {
 	q := c.Requirement
 	if q == nil {
 		b.lacks("No requirement is recorded: adequacy is not judged.")
-		return b.fragility(c)
+		return b.fragility(i, c)
 	}
 	at := func(name string) string { return fmt.Sprintf("cells.%d.requirement.%s", i, name) }
 	words := append(b.requirementWords(i, c), text("."+late(c)))
@@ -358,10 +358,14 @@ func (b *builder) requirement(i int, c study.Cell) []Node {
 	}
 	var needed []Node
 	if q.UValNeeded.Known() {
-		needed = append(needed, say("With *E* unchanged it would be shown at *u*_{val} ≤ ")...)
+		toward := "With *E* unchanged it would be shown at *u*_{val} ≤ "
+		if q.Toward == study.NotMet {
+			toward = "With *E* unchanged it would be refuted at *u*_{val} < "
+		}
+		needed = append(needed, say(toward)...)
 		needed = append(needed, withUnit(digits(q.UValNeeded, 3, at("u_val_needed")), c.Unit)...)
 		if q.UNumNeeded.Known() {
-			needed = append(needed, say(", which *u*_{num} ≤ ")...)
+			needed = append(needed, say(", which *u*_{num} = ")...)
 			needed = append(needed, withUnit(digits(q.UNumNeeded, 3, at("u_num_needed")), c.Unit)...)
 			if q.UNumReduction.Known() {
 				needed = append(needed, say(" (reduced by {})", percent(q.UNumReduction, at("u_num_reduction")))...)
@@ -373,19 +377,54 @@ func (b *builder) requirement(i int, c study.Cell) []Node {
 	if len(needed) > 0 {
 		words = append(append(words, text(" "), strong("To resolve: ")), needed...)
 	}
-	return append([]Node{heading("Requirement"), paragraph(words...)}, b.fragility(c)...)
+	nodes := []Node{heading("Requirement"), paragraph(words...)}
+	if len(q.Ways) > 0 {
+		nodes = append(nodes, b.ways(i, c))
+	}
+	return append(nodes, b.fragility(i, c)...)
 }
 
 // fragility prints the alternatives that change the outcome word.
-func (b *builder) fragility(c study.Cell) []Node {
+func (b *builder) fragility(i int, c study.Cell) []Node {
+	tried := strings.Join(c.Tried, ", ")
 	if len(c.Fragile) == 0 {
-		return b.lacks("None of the alternatives that were tried changes an outcome word.")
+		words := "None of the alternatives that were tried changes an outcome word"
+		if tried != "" {
+			words += " (" + tried + ")"
+		}
+		return b.lacks(words + ".")
 	}
 	rows := make([]Node, len(c.Fragile))
 	for j, f := range c.Fragile {
-		rows[j] = row(cell(typeset(f.Change)...), cell(text(f.What)), cell(text(f.From)), cell(strong(f.Outcome)), cell(text(f.Detail)))
+		at := cell()
+		if f.At != nil {
+			at = figureCell(trimmed(*f.At, 3, fmt.Sprintf("cells.%d.fragile.%d.at", i, j)))
+		}
+		rows[j] = row(cell(typeset(f.Change)...), cell(text(f.What)), cell(text(f.From)), cell(strong(f.Outcome)), cell(text(f.Detail)), at)
 	}
-	return []Node{b.table("plain", say("Choices that change an outcome word."), headRow("If", "Word of", "Now", "Then", "Detail"), rows...)}
+	nodes := []Node{b.table("plain", say("Choices that change an outcome word."), headRow("If", "Word of", "Now", "Then", "Detail", "#From"), rows...)}
+	if tried != "" {
+		nodes = append(nodes, note(typeset("Tried: "+tried+".")...))
+	}
+	return nodes
+}
+
+// ways prints what alone would resolve a requirement.
+func (b *builder) ways(i int, c study.Cell) Node {
+	rows := make([]Node, len(c.Requirement.Ways))
+	for j, w := range c.Requirement.Ways {
+		at := func(name string) string { return fmt.Sprintf("cells.%d.requirement.ways.%d.%s", i, j, name) }
+		var cost []Node
+		if w.Cells != nil {
+			cost = say("about {} cells, {} times the cost of the finest run", cellCount(*w.Cells, at("cells")), digits(*w.Cost, 2, at("cost")))
+		}
+		if w.Readings > 0 {
+			cost = say("{} readings in all", count(w.Readings, at("readings")))
+		}
+		rows[j] = row(cell(text(w.Source)), cell(text(w.Of)), figureCell(digits(w.Now, 3, at("now"))), figureCell(digits(w.Needed, 3, at("needed"))), figureCell(percent(w.Reduction, at("reduction"))), cell(cost...))
+	}
+	return b.table("plain", say("Each of these alone would bring *u*_{val} to what is needed, *E* unchanged ({}, standard).", text(unitOf(c.Unit))),
+		headRow("Source", "Of", "#Now", "#Needed", "#Less by", "Cost"), rows...)
 }
 
 // openPoints lists open points and notices of a cell.

@@ -18,6 +18,11 @@ var (
 	errorsB = []float64{.0046, .0150, .0230, .0243, .0219, .0153, -.0045, -.0092, -.0216, -.0218, -.0114, -.0056, .0083, .0154, .0235, .0233, .0131, .0006, -.0058, -.0152, -.0275, -.0239, -.0092, .0047}
 )
 
+func pointer(v float64) *quantity.Number {
+	n := quantity.Number(v)
+	return &n
+}
+
 func number10(v float64) quantity.Number { return quantity.Number(v) }
 
 func taps(model string, e []float64, joint study.Joint, requirement *study.Judgement) study.Cell {
@@ -158,9 +163,12 @@ func drag() study.Cell {
 			{Name: "angle, speed, turbulence", Of: study.OfInput, Text: "0.00025, absolute, standard", U: .00025, Share: .1785, Pattern: study.Common, Origin: "run pairs"},
 			{Name: "grid", Of: study.OfNumerical, Text: "U = 0.000411, 95 %, divided by 1.15", U: .000357391304, Share: .3646, Pattern: study.Independent, Origin: "computed"},
 		},
-		Requirement: &study.Judgement{Limit: .00148, Percent: 5, Who: "decision owner", Date: "2026-03-02", Outcome: study.NotResolved, At: quantity.None, UValNeeded: .000565, UNumNeeded: .000310926, UNumReduction: .13},
-		Fragile:     []study.Fragility{{Change: "k_num = 2", What: "requirement", From: study.NotResolved, Outcome: study.Shown, Detail: "upper limit 4.7 % instead of 5.2 %"}},
-		FilesUsed:   []string{"f1", "f3"},
+		Requirement: &study.Judgement{Limit: .00148, Percent: 5, Who: "decision owner", Date: "2026-03-02", Outcome: study.NotResolved, At: quantity.None, UValNeeded: .000565, UNumNeeded: .000310926, UNumReduction: .13, Ways: []study.Way{
+			{Source: "grid", Of: study.OfNumerical, Now: .000357391304, Needed: .000310926, Reduction: .13, Cells: pointer(6880000), Cost: pointer(1.316)},
+			{Source: "scatter of repeated readings", Of: study.OfData, Now: .000073, Needed: .00002, Reduction: .726, Readings: 67}}},
+		Fragile:   []study.Fragility{{Change: "k_num = 2", What: "requirement", From: study.NotResolved, Outcome: study.Shown, Detail: "upper limit 4.7 % instead of 5.2 %", At: pointer(1.32)}},
+		Tried:     []string{"k_num = 2", "plain rule of the grid study"},
+		FilesUsed: []string{"f1", "f3"},
 	}
 }
 

@@ -400,6 +400,7 @@ func choices(q *study.Question) []Entry {
 		entry("k_num", "k_num, from U of the grids to u_num", quantity.Typed(c.KNum), []Option{}, "1.15: error of the fine grid a shifted Gaussian; 2: normal"),
 		entry("bounded", "order of the three finest", yes(c.Bounded), []Option{{"yes", "bounded rule"}, {"no", "plain rule"}}, ""),
 		entry("rule", "grids of one value", rule, rules, "along a curve they act with the common order"),
+		entry("safety", "safety factor of three grids", quantity.Typed(cmp.Or(c.Safety, refinement.UsualSafety)), []Option{}, "1.25 with an observed order, 3 where none is credible"),
 		entry("formal", "formal order", quantity.Typed(c.Formal), []Option{}, ""),
 		entry("dimension", "grids are", strconv.Itoa(c.Dimension), []Option{{"2", "two-dimensional"}, {"3", "three-dimensional"}}, ""),
 		entry("interpolation", "simulation at the stations", string(c.Interpolation), []Option{{"linear", "linear"}, {"monotone", "monotone cubic"}}, ""),

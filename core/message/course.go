@@ -526,12 +526,40 @@ func sayNumbers(c *study.Cell) []Headline {
 }
 
 func sayTables(c *study.Cell) []Table {
-	if len(c.Fragile) == 0 {
-		return nil
+	var tables []Table
+	if r := c.Requirement; r != nil && len(r.Ways) > 0 {
+		tables = append(tables, waysTable(c, r))
 	}
-	t := Table{Title: "Choices that change a word", Head: []string{"choice", "of", "from", "to", ""}, Rows: [][]string{}}
-	for _, f := range c.Fragile {
-		t.Rows = append(t.Rows, []string{f.Change, f.What, f.From, f.Outcome, f.Detail})
+	if len(c.Fragile) > 0 {
+		t := Table{Title: "Choices that change a word, of " + strconv.Itoa(len(c.Tried)) + " that were tried", Head: []string{"choice", "of", "from", "to", "", "turns at"}, Rows: [][]string{}}
+		for _, f := range c.Fragile {
+			at := ""
+			if f.At != nil {
+				at = text(*f.At, 3)
+			}
+			t.Rows = append(t.Rows, []string{f.Change, f.What, f.From, f.Outcome, f.Detail, at})
+		}
+		tables = append(tables, t)
 	}
-	return []Table{t}
+	return tables
+}
+
+// waysTable lists what alone would resolve a requirement.
+func waysTable(c *study.Cell, r *study.Judgement) Table {
+	outcome := "show it"
+	if r.Toward == study.NotMet {
+		outcome = "refute it"
+	}
+	t := Table{Title: "Each alone would " + outcome + ", E unchanged (standard" + c.UnitSuffix() + ")", Head: []string{"source", "of", "now", "needed", "less by", "cost"}, Rows: [][]string{}}
+	for _, w := range r.Ways {
+		cost := ""
+		switch {
+		case w.Cells != nil:
+			cost = "about " + cellWords(float64(*w.Cells)) + " cells, " + text(*w.Cost, 2) + " times the finest run"
+		case w.Readings > 0:
+			cost = quantity.Counted(w.Readings, "reading") + " in all"
+		}
+		t.Rows = append(t.Rows, []string{w.Source, w.Of, text(w.Now, 3), text(w.Needed, 3), quantity.Percent(float64(w.Reduction)) + " %", cost})
+	}
+	return t
 }

@@ -56,15 +56,18 @@ func TestWorkedNumbers(t *testing.T) {
 			t.Errorf("%s: %q, want %q", row.name, row.got, row.want)
 		}
 	}
-	// Least squares over four grids resolves neither length; the order held at 2,
-	// below those observed, changes no word. The grid that resolves Cd B was
+	// Least squares over four grids resolves neither length, nor do the safety
+	// factors by order or of 3; the order held at 2, below those observed, changes no word. By the
+	// table of 6.1 the word of B turns where 1.25 becomes 1.25 · 1.15 ·
+	// √(((.342 − .015)/2)² − .11² − .06²)/.057 = 2.65. The grid that resolves Cd B was
 	// computed apart from this program by a few lines of Python: 6882793 cells at
 	// 1.3165446 times the cost.
 	for _, c := range []*study.Cell{a, b} {
-		if len(c.Fragile) != 1 || c.Fragile[0].Change != "least squares over all grids" || c.Fragile[0].Outcome != study.NotResolved || c.Grids.Order <= c.Grids.Formal {
+		if len(c.Fragile) != 3 || c.Fragile[0].Change != "least squares over all grids" || c.Fragile[0].Outcome != study.NotResolved || c.Fragile[1].Change != "factor of safety of the grid study by its order" || c.Fragile[2].Change != "safety factor of the grid study = 3" || c.Fragile[2].At == nil || c.Grids.Order <= c.Grids.Formal {
 			t.Errorf("x_r %s: order %v, alternatives %+v", c.Model, c.Grids.Order, c.Fragile)
 		}
 	}
+	check(t, []printed{{"x_r B: safety factor at which the word turns", *b.Fragile[2].At, 2.65, 1}})
 	check(t, []printed{{"Cd B: cells that resolve it", dragB.Grids.NextCells / 1e6, 6.88, 2}, {"Cd B: their cost", dragB.Grids.NextCost, 1.32, 2}})
 	if answer := sayAnswer(dragB); !strings.Contains(answer, "about 6.88 million cells would resolve it, at 1.3 times the cost") {
 		t.Error(answer)

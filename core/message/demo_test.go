@@ -86,7 +86,14 @@ func TestDemoDrag(t *testing.T) {
 	check(t, []printed{{"share num", study.Number(shares[study.OfNumerical]), .36, 2}, {"share input", study.Number(shares[study.OfInput]), .18, 2}, {"share D", study.Number(shares[study.OfData]), .46, 2}})
 	flips := false
 	for _, f := range b.Fragile {
-		flips = flips || f.Change == "k_num = 2" && f.Outcome == study.Shown && f.Detail == "−2.3 % to +4.7 %"
+		if f.Change == "k_num = 2" && f.Outcome == study.Shown && f.Detail == "−2.3 % to +4.7 %" {
+			flips = true
+			// U of the grids over the u_num that resolves it: .000411/.000311.
+			at := float64(b.Grids.U) / float64(b.Requirement.UNumNeeded)
+			if f.At == nil || math.Abs(float64(*f.At)-at) > .005 || math.Abs(at-.000411/.000311) > .005 {
+				t.Errorf("Cd of B turns at k_num = %v, want %v", f.At, at)
+			}
+		}
 	}
 	if !flips {
 		t.Errorf("Cd of B does not become shown with k_num = 2: %+v", b.Fragile)
@@ -116,6 +123,38 @@ func TestDemoPressure(t *testing.T) {
 	}
 	if a.Joint.Exceeds || !b.Joint.Exceeds || !b.Joint.RemainderExceeds || a.Joint.OffsetResolved {
 		t.Errorf("joint words: A %+v, B %+v", a.Joint, b.Joint)
+	}
+}
+
+// Each way to resolve a requirement, entered as the uncertainty it asks for,
+// gives the outcome it promises: D3 of the design closes its loop.
+func TestWaysResolve(t *testing.T) {
+	b := cellOf(t, demoReport(t), "Cd", "B")
+	ways := b.Requirement.Ways
+	if len(ways) < 2 || ways[0].Reduction > ways[len(ways)-1].Reduction {
+		t.Fatalf("ways %+v", ways)
+	}
+	for i, way := range ways {
+		s := Demo()
+		q := &s.Questions[0]
+		switch way.Of {
+		case study.OfNumerical:
+			q.Choices.KNum *= float64(way.Now) / float64(way.Needed)
+		default:
+			found := false
+			for j := range q.Sources {
+				if q.Sources[j].Name == way.Source {
+					q.Sources[j].Value *= float64(way.Needed) / float64(way.Now)
+					found = true
+				}
+			}
+			if !found {
+				t.Fatalf("%s is no source", way.Source)
+			}
+		}
+		if got := cellOf(t, study.Evaluate(s, study.Options{}), "Cd", "B").Requirement.Outcome; got != study.Shown {
+			t.Errorf("way %d, %s to %v: %s", i, way.Source, way.Needed, got)
+		}
 	}
 }
 

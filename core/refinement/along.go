@@ -283,7 +283,7 @@ func (l *Local) expanded(p LocalPoint, opt Options) float64 {
 	case RuleFactor:
 		return factorOfSafety(l.Common, opt.formal()) * d
 	}
-	u, _ := indexed(t, e, l.Common, opt.Bounded)
+	u, _ := indexed(t, e, l.Common, opt)
 	return u
 }
 
@@ -406,7 +406,7 @@ func (l *Local) say(opt Options, grids int) {
 		l.Rule = "common order at monotone stations, U by the factor of safety, formal order " + orderWords(opt.formal()) + ", coefficients from memory"
 		l.tell("grid-memory-rule", "factor-of-safety")
 	default:
-		l.Rule = "common order at monotone stations, U = 1.25 times the estimated error"
+		l.Rule = "common order at monotone stations, U = " + opt.safetyWords() + " times the estimated error"
 		if opt.Bounded {
 			l.Rule += " (bounded rule)"
 		}

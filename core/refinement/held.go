@@ -10,6 +10,6 @@ func (r *Result) held(t triple, e21 float64, opt Options) {
 	if p < r.Order {
 		r.Fit = r.through(e21, p)
 	}
-	r.U, _ = indexed(t, math.Abs(e21), p, opt.Bounded)
-	r.Rule = "U = 1.25 |f2 - f1|/(r^p - 1) of the three finest grids with p at most the formal order " + orderWords(opt.formal())
+	r.U, _ = indexed(t, math.Abs(e21), p, opt)
+	r.Rule = "U = " + opt.safetyWords() + " |f2 - f1|/(r^p - 1) of the three finest grids with p at most the formal order " + orderWords(opt.formal())
 }

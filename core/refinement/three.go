@@ -15,7 +15,18 @@ type Options struct {
 	Bounded bool               // limit the index where the order is below 0.95 or above 3.05
 	Formal  float64            // formal order of the scheme; 0 stands for 2
 	Method  interpolate.Method // along a curve: how a grid's curve is brought to the stations
+	Safety  float64            // factor on the estimated error of three grids with an observed order; 0 stands for 1.25
 }
+
+func (o Options) safety() float64 {
+	if o.Safety > 0 {
+		return o.Safety
+	}
+	return safety
+}
+
+// safetyWords prints the factor of the rule.
+func (o Options) safetyWords() string { return quantity.Typed(o.safety()) }
 
 func (o Options) formal() float64 {
 	if o.Formal > 0 {
@@ -28,12 +39,15 @@ func (o Options) formal() float64 {
 // (2008) 078001 (safety); NASA Turbulence Modeling Resource, "Summary of
 // Uncertainty Procedure", 2018 (limits of the bounded rule).
 const (
-	safety     = 1.25
+	safety     = UsualSafety
 	wideSafety = 3 // where no order is credible
 	lowOrder   = 0.95
 	highOrder  = 3.05
 	cappedTo   = 3
 )
+
+// UsualSafety is the factor of the three finest grids where no other is chosen.
+const UsualSafety = 1.25
 
 // leastRatio is the refinement ratio below which differences are close to the
 // noise of the runs. Source: Celik et al., a value "based on experience".
@@ -249,8 +263,8 @@ func (r *Result) offFormal(opt Options) {
 // plain takes U by the rule of the three finest grids, bounded if asked.
 func (r *Result) plain(t triple, e21 float64, opt Options) {
 	limit := none
-	r.U, limit = indexed(t, math.Abs(e21), r.Order, opt.Bounded)
-	r.Rule = "U = 1.25 |f2 - f1|/(r^p - 1) of the three finest grids, " + limit.words(opt.Bounded)
+	r.U, limit = indexed(t, math.Abs(e21), r.Order, opt)
+	r.Rule = "U = " + opt.safetyWords() + " |f2 - f1|/(r^p - 1) of the three finest grids, " + limit.words(opt)
 	switch limit {
 	case low:
 		r.tell("grid-bounded-low", quantity.Text(r.Order, 3))
@@ -277,31 +291,32 @@ const (
 	high
 )
 
-func (b bound) words(bounded bool) string {
+func (b bound) words(opt Options) string {
 	switch {
 	case b == low:
-		return "at most 1.25 times their range (bounded rule, p below 0.95)"
+		return "at most " + opt.safetyWords() + " times their range (bounded rule, p below 0.95)"
 	case b == high:
-		return "with p = 3 and at least 1.25 times their range (bounded rule, p above 3.05)"
-	case bounded:
+		return "with p = 3 and at least " + opt.safetyWords() + " times their range (bounded rule, p above 3.05)"
+	case opt.Bounded:
 		return "p as observed (bounded rule, no limit reached)"
 	}
 	return "p as observed"
 }
 
-// indexed returns U = 1.25 e/(r21^p - 1) for the difference e >= 0 of the two
-// finest grids, by the bounded rule if asked, and the limit that decided.
-func indexed(t triple, e, p float64, bounded bool) (float64, bound) {
-	plain := safety * e / powerLessOne(t.r21, p)
-	if !bounded {
+// indexed returns U = 1.25 e/(r21^p - 1), or with another factor, for the
+// difference e >= 0 of the two finest grids, by the bounded rule if asked, and
+// the limit that decided.
+func indexed(t triple, e, p float64, opt Options) (float64, bound) {
+	plain := opt.safety() * e / powerLessOne(t.r21, p)
+	if !opt.Bounded {
 		return plain, none
 	}
-	limit := safety * t.dataRange()
+	limit := opt.safety() * t.dataRange()
 	switch rounded := quantity.Round(p, 10); {
 	case rounded < lowOrder && limit < plain:
 		return limit, low
 	case rounded > highOrder:
-		return max(safety*e/powerLessOne(t.r21, cappedTo), limit), high
+		return max(opt.safety()*e/powerLessOne(t.r21, cappedTo), limit), high
 	}
 	return plain, none
 }

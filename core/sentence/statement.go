@@ -523,6 +523,10 @@ func (w *writer) changes() {
 		if f.Detail != "" {
 			w.say(", " + f.Detail)
 		}
+		if f.At != nil {
+			w.say("; it turns at ")
+			w.number(of("fragile."+strconv.Itoa(i)+".at", *f.At, quantity.Text(float64(*f.At), 3)), "fragility")
+		}
 		w.say(")")
 	}
 	w.say(". ")

@@ -14,12 +14,14 @@ import (
 
 // part is the standard uncertainty of one source at the stations, in SI.
 type part struct {
-	line    SourceLine
-	source  uncertainty.Source
-	degrees float64   // of freedom; +Inf where u is taken as known
-	interp  bool      // of the interpolation to the stations
-	aside   bool      // does not by itself make a numerical uncertainty
-	plain   []float64 // standard uncertainty as stated, where sums of u_num raised it
+	line     SourceLine
+	source   uncertainty.Source
+	degrees  float64   // of freedom; +Inf where u is taken as known
+	interp   bool      // of the interpolation to the stations
+	aside    bool      // does not by itself make a numerical uncertainty
+	plain    []float64 // standard uncertainty as stated, where sums of u_num raised it
+	grid     bool      // from the grid study
+	readings int       // behind a mean whose scatter it is; 0: none
 
 	own     []float64            // of a source of the data that acts on both sides: its uncertainty there; source is what is left in E
 	members []uncertainty.Source // of sampled runs: the sources whose sum source.U is
@@ -124,7 +126,8 @@ func (w *work) replicates() {
 	}
 	_, s, u := uncertainty.Replicates(readings)
 	text := "standard deviation " + quantity.Text(float64(w.step(s)), 3) + " of " + quantity.Counted(len(readings), "reading") + ", divided by √" + strconv.Itoa(len(readings))
-	w.add(OfData, "scatter of repeated readings", text, "computed from "+w.e.study.fileName(c.slip), []float64{u}, false, false).degrees = float64(len(readings) - 1)
+	p := w.add(OfData, "scatter of repeated readings", text, "computed from "+w.e.study.fileName(c.slip), []float64{u}, false, false)
+	p.degrees, p.readings = float64(len(readings)-1), len(readings)
 	w.fewReadings(len(readings))
 }
 
@@ -415,7 +418,7 @@ func (w *work) gridPart() {
 	if math.IsNaN(float64(w.cell.Grids.U)) && !w.cell.Grids.Along {
 		text = "bound of the grid study divided by √3"
 	}
-	w.add(OfNumerical, "grid", text, "computed from the grid study", w.gridU, w.choices.NumShared, false)
+	w.add(OfNumerical, "grid", text, "computed from the grid study", w.gridU, w.choices.NumShared, false).grid = true
 }
 
 // interpolationPart takes the interpolation of the simulation as a numerical

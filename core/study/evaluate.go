@@ -192,7 +192,7 @@ func (s *Study) models(q *Question) []string {
 func (e *evaluation) cell(q *Question, model string) Cell {
 	c := e.work(q, model, q.Choices)
 	if e.options.Alternatives && c.Summary != nil {
-		c.Fragile = e.fragile(q, model, c)
+		e.fragile(q, model, &c)
 	}
 	return c
 }
@@ -259,6 +259,7 @@ type work struct {
 	choices Choices
 	// withExcluded compares the excluded stations too, as an alternative.
 	withExcluded bool
+	without      *Region                        // a part of the stations left out, as an alternative
 	derivedData  bool                           // sources of the data are of a curve from which the scalar was taken
 	asScalar     func(c *curve) (*curve, error) // takes the scalar of a further run
 	derivedBoth  bool                           // and all others of the curve of the simulation

@@ -1,65 +1,149 @@
 package study
 
 import (
+	"cmp"
+	"slices"
+
 	"weirmark/core/interpolate"
 	"weirmark/core/quantity"
 	"weirmark/core/refinement"
 )
 
-// alternative is a choice that another careful person might have made.
+// alternative is a choice that another careful person might have made: a
+// change of the question, or of what its evaluation leaves out.
 type alternative struct {
 	change string
-	apply  func(*Choices)
+	apply  func(*Question, *work)
+	number *dial // of a choice that is a number
+}
+
+// dial is a number between what is chosen and the alternative.
+type dial struct {
+	from, to float64
+	set      func(*Question, float64)
+}
+
+// turned is the alternative of a number.
+func turned(name string, from, to float64, set func(*Question, float64)) alternative {
+	return alternative{name + " = " + quantity.Typed(to), func(q *Question, _ *work) { set(q, to) }, &dial{from, to, set}}
 }
 
 // alternatives lists the other choices open to a cell.
-func alternatives(c Choices, grids *Grids, sums *NumSums) []alternative {
+func alternatives(q *Question, have *Cell) []alternative {
+	c, grids := q.Choices, have.Grids
 	all := []alternative{}
+	choice := func(change string, apply func(*Choices)) {
+		all = append(all, alternative{change: change, apply: func(q *Question, _ *work) { apply(&q.Choices) }})
+	}
+	either := func(yes bool, ifYes, ifNo string, flip func(*Choices)) {
+		if yes {
+			choice(ifYes, flip)
+			return
+		}
+		choice(ifNo, flip)
+	}
 	kNum := 2.0
 	if c.KNum == 2 {
 		kNum = 1.15
 	}
-	all = append(all, alternative{"k_num = " + quantity.Typed(kNum), func(c *Choices) { c.KNum = kNum }})
-	if c.Bounded {
-		all = append(all, alternative{"plain rule of the grid study", func(c *Choices) { c.Bounded = false }})
-	} else {
-		all = append(all, alternative{"bounded rule of the grid study", func(c *Choices) { c.Bounded = true }})
+	all = append(all, turned("k_num", c.KNum, kNum, func(q *Question, v float64) { q.Choices.KNum = v }))
+	either(c.Bounded, "plain rule of the grid study", "bounded rule of the grid study", func(c *Choices) { c.Bounded = !c.Bounded })
+	for _, r := range rules(c, grids) {
+		choice(r.change, r.apply)
 	}
-	all = append(all, rules(c, grids)...)
-	if c.NumShared {
-		all = append(all, alternative{"u_num independent between stations", func(c *Choices) { c.NumShared = false }})
-	} else {
-		all = append(all, alternative{"u_num shared by all stations", func(c *Choices) { c.NumShared = true }})
-	}
-	if sums != nil && sums.Apart {
-		change := "parts of u_num summed, as if they depend on each other"
-		if c.NumLinear {
-			change = "parts of u_num independent of each other"
+	if grids != nil {
+		now, then := cmp.Or(c.Safety, refinement.UsualSafety), 3.0
+		if now == then {
+			then = refinement.UsualSafety
 		}
-		all = append(all, alternative{change, func(c *Choices) { c.NumLinear = !c.NumLinear }})
+		all = append(all, turned("safety factor of the grid study", now, then, func(q *Question, v float64) { q.Choices.Safety = v }))
 	}
-	other := interpolate.Monotone
-	if c.Interpolation == interpolate.Monotone {
-		other = interpolate.Linear
+	if have.NumSums != nil && have.NumSums.Apart {
+		either(c.NumLinear, "parts of u_num independent of each other", "parts of u_num summed, as if they depend on each other", func(c *Choices) { c.NumLinear = !c.NumLinear })
 	}
-	all = append(all, alternative{string(other) + " interpolation", func(c *Choices) { c.Interpolation = other }})
-	if c.UInterp {
-		all = append(all, alternative{"no interpolation uncertainty", func(c *Choices) { c.UInterp = false }})
-	} else {
-		all = append(all, alternative{"interpolation uncertainty counted", func(c *Choices) { c.UInterp = true }})
+	for _, d := range otherDerivations(q.Derive) {
+		all = append(all, alternative{change: d.label, apply: func(q *Question, _ *work) { q.Derive = &d }})
+	}
+	if !have.Scalar {
+		either(c.NumShared, "u_num independent between stations", "u_num shared by all stations", func(c *Choices) { c.NumShared = !c.NumShared })
+		other := interpolate.Monotone
+		if c.Interpolation == interpolate.Monotone {
+			other = interpolate.Linear
+		}
+		choice(string(other)+" interpolation", func(c *Choices) { c.Interpolation = other })
+		either(c.UInterp, "no interpolation uncertainty", "interpolation uncertainty counted", func(c *Choices) { c.UInterp = !c.UInterp })
+		all = append(all, correlations(q)...)
+		for i := range q.Regions {
+			r := q.Regions[i]
+			all = append(all, alternative{change: "without " + r.Name, apply: func(_ *Question, w *work) { w.without = &r }})
+		}
+	}
+	if have.K95.Known() {
+		either(c.KStudent, "k as entered", "k by the degrees of freedom", func(c *Choices) { c.KStudent = !c.KStudent })
+	}
+	all = append(all, corrections(q)...)
+	if len(have.Excluded) > 0 {
+		all = append(all, alternative{change: "the excluded stations counted", apply: func(_ *Question, w *work) { w.withExcluded = true }})
 	}
 	return all
 }
 
-// rules lists the other rules that fit a grid study of one value.
-func rules(c Choices, g *Grids) []alternative {
+// correlations are the two ends of what may be assumed of the systematic
+// sources between stations.
+func correlations(q *Question) []alternative {
 	all := []alternative{}
+	add := func(change, pattern string) {
+		for _, s := range q.Sources {
+			if s.Of != OfNumerical && !s.Random && s.Pattern != pattern {
+				all = append(all, alternative{change: change, apply: func(q *Question, _ *work) {
+					for i := range q.Sources {
+						if s := &q.Sources[i]; s.Of != OfNumerical && !s.Random {
+							s.Pattern = pattern
+						}
+					}
+				}})
+				return
+			}
+		}
+	}
+	add("systematic sources independent between stations", Independent)
+	add("systematic sources shared by all stations", Common)
+	return all
+}
+
+// corrections turn the correction of each condition on or off.
+func corrections(q *Question) []alternative {
+	all := []alternative{}
+	for i, m := range q.Conditions {
+		if m.Sensitivity == nil || m.Simulation == m.Data {
+			continue
+		}
+		change, handling := m.Name+" corrected", Corrected
+		if m.Handling == Corrected {
+			change, handling = m.Name+" not corrected", Tolerated
+		}
+		all = append(all, alternative{change: change, apply: func(q *Question, _ *work) {
+			q.Conditions[i].Handling, q.Conditions[i].Why = handling, "an alternative"
+		}})
+	}
+	return all
+}
+
+// chosen is another rule of the grid study.
+type chosen struct {
+	change string
+	apply  func(*Choices)
+}
+
+// rules lists the other rules that fit a grid study of one value.
+func rules(c Choices, g *Grids) []chosen {
+	all := []chosen{}
 	if g == nil || g.Along {
 		return all
 	}
 	add := func(change, rule string) {
 		if c.Rule != rule {
-			all = append(all, alternative{change, func(c *Choices) { c.Rule = rule }})
+			all = append(all, chosen{change, func(c *Choices) { c.Rule = rule }})
 		}
 	}
 	add("three finest grids", "")
@@ -69,49 +153,77 @@ func rules(c Choices, g *Grids) []alternative {
 	if g.Order > g.Formal {
 		add("order held at the formal one", refinement.RuleFormal)
 	}
+	if g.Class == string(refinement.Monotone) {
+		add("factor of safety of the grid study by its order", refinement.RuleFactor)
+	}
 	if g.Class == string(refinement.Oscillatory) {
 		add("3 times the range of the oscillating grids as U", refinement.RuleRange)
 	}
 	return all
 }
 
-// fragile evaluates the cell under every alternative and lists those that
-// change an outcome word.
-func (e *evaluation) fragile(q *Question, model string, have Cell) []Fragility {
-	list := []Fragility{}
-	for _, a := range alternatives(q.Choices, have.Grids, have.NumSums) {
-		choices := q.Choices
-		a.apply(&choices)
-		other := e.workWith(&work{e: e, q: q, model: model, choices: choices, inner: true})
-		list = append(list, changes(a.change, have, other)...)
-	}
-	for _, d := range otherDerivations(q.Derive) {
-		asked := *q
-		asked.Derive = &d
-		other := e.workWith(&work{e: e, q: &asked, model: model, choices: q.Choices, inner: true})
-		list = append(list, changes(d.label, have, other)...)
-	}
-	if j := have.Joint; j != nil {
-		for _, r := range j.Without {
-			if r.Exceeds != j.Exceeds {
-				word := Cell{Joint: &Joint{Exceeds: r.Exceeds}}
-				list = append(list, Fragility{Change: "without " + r.Region, What: "joint statistic", From: have.jointWord(), Outcome: word.jointWord(), Detail: "statistic " + quantity.Text(float64(r.Statistic), 3)})
+// under evaluates the cell of a question and model as an alternative has it.
+func (e *evaluation) under(q *Question, model string, apply func(*Question, *work)) Cell {
+	other := *q
+	other.Sources = slices.Clone(q.Sources)
+	other.Conditions = slices.Clone(q.Conditions)
+	w := &work{e: e, q: &other, model: model, inner: true}
+	apply(&other, w)
+	w.choices = other.Choices
+	return e.workWith(w)
+}
+
+// fragile evaluates the cell under every alternative, names those that were
+// tried, and lists those that change an outcome word.
+func (e *evaluation) fragile(q *Question, model string, have *Cell) {
+	for _, a := range alternatives(q, have) {
+		have.Tried = append(have.Tried, a.change)
+		other := e.under(q, model, a.apply)
+		for _, f := range changes(a.change, *have, other) {
+			if a.number != nil && len(have.Stations) <= mostFlipped {
+				f.At = e.flip(q, model, have, f, *a.number)
 			}
-		}
-		if j.Turning > 0 {
-			word := Cell{Joint: &Joint{Exceeds: !j.Exceeds}}
-			list = append(list, Fragility{Change: "one station left out, any of " + quantity.Counted(j.Turning, "station"), What: "joint statistic", From: have.jointWord(), Outcome: word.jointWord(), Detail: "largest change without " + j.Station.Region})
-		}
-		for _, t := range j.Turns {
-			word := Cell{Joint: &Joint{Exceeds: !j.Exceeds}}
-			list = append(list, Fragility{Change: "correlation of " + t.Source + " below " + quantity.Text(float64(t.Rho), 3), What: "joint statistic", From: have.jointWord(), Outcome: word.jointWord(), Detail: "statistic " + quantity.Text(float64(t.At0), 3) + " when independent"})
+			have.Fragile = append(have.Fragile, f)
 		}
 	}
-	if len(have.Excluded) > 0 {
-		other := e.workWith(&work{e: e, q: q, model: model, choices: q.Choices, withExcluded: true, inner: true})
-		list = append(list, changes("the excluded stations counted", have, other)...)
+	j := have.Joint
+	if j == nil {
+		return
 	}
-	return list
+	word := Cell{Joint: &Joint{Exceeds: !j.Exceeds}}
+	if j.Turning > 0 {
+		have.Fragile = append(have.Fragile, Fragility{Change: "one station left out, any of " + quantity.Counted(j.Turning, "station"), What: "joint statistic", From: have.jointWord(), Outcome: word.jointWord(), Detail: "largest change without " + j.Station.Region})
+	}
+	for _, t := range j.Turns {
+		have.Fragile = append(have.Fragile, Fragility{Change: "correlation of " + t.Source + " below " + quantity.Text(float64(t.Rho), 3), What: "joint statistic", From: have.jointWord(), Outcome: word.jointWord(), Detail: "statistic " + quantity.Text(float64(t.At0), 3) + " when independent"})
+	}
+}
+
+// mostFlipped is the number of stations above which the place of a flip is not
+// searched.
+const mostFlipped = 200
+
+// flip returns the number nearest to the chosen one, to three digits, from
+// which on the word of a fragility is another.
+func (e *evaluation) flip(q *Question, model string, have *Cell, f Fragility, d dial) *Number {
+	same, other := d.from, d.to
+	for range 40 {
+		if quantity.Round(same, 4) == quantity.Round(other, 4) {
+			break
+		}
+		middle := same + (other-same)/2
+		turned := false
+		for _, g := range changes("", *have, e.under(q, model, func(q *Question, _ *work) { d.set(q, middle) })) {
+			turned = turned || g.What == f.What
+		}
+		if turned {
+			other = middle
+		} else {
+			same = middle
+		}
+	}
+	at := Number(quantity.Round(other, 3))
+	return &at
 }
 
 // changes lists the outcome words that differ between two evaluations.

@@ -3,6 +3,7 @@ package study
 import (
 	"math"
 	"slices"
+	"sort"
 
 	"weirmark/core/adequacy"
 	"weirmark/core/quantity"
@@ -73,6 +74,7 @@ func (w *work) resolve(j *Judgement, e float64, i int, limit float64) {
 	}
 	j.UValNeeded = w.step(needed)
 	w.nextGrid(needed)
+	w.ways(j, i, needed)
 	if w.uNum == nil {
 		return
 	}
@@ -96,4 +98,27 @@ func (w *work) nextGrid(needed float64) {
 	// An order is good for no more than three digits of a cell count.
 	w.cell.Grids.CostExponent = Number(w.q.costExponent())
 	w.cell.Grids.NextCells, w.cell.Grids.NextCost = Number(quantity.Round(next.Cells, 3)), Number(next.Cost)
+}
+
+// ways lists the sources of which each alone, made smaller, would bring u_val
+// at station i to what is needed.
+func (w *work) ways(j *Judgement, i int, needed float64) {
+	for n := range w.parts {
+		p := &w.parts[n]
+		now := math.Abs(p.source.U[i])
+		u, ok := adequacy.PartNeeded(w.uVal[i], now, needed)
+		if !ok || !(u < now) {
+			continue
+		}
+		way := Way{Source: p.line.Name, Of: p.line.Of, Now: w.step(now), Needed: w.step(u), Reduction: Number(1 - u/now)}
+		if p.readings > 1 { // of a mean of n the uncertainty falls with the root of n
+			way.Readings = int(math.Ceil(quantity.Round(float64(p.readings)*float64(now/u)*float64(now/u), 10)))
+		}
+		if g := w.cell.Grids; p.grid && g != nil && g.NextCells.Known() {
+			cells, cost := g.NextCells, g.NextCost
+			way.Cells, way.Cost = &cells, &cost
+		}
+		j.Ways = append(j.Ways, way)
+	}
+	sort.SliceStable(j.Ways, func(a, b int) bool { return j.Ways[a].Reduction < j.Ways[b].Reduction })
 }

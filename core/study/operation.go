@@ -216,7 +216,7 @@ func (s *Study) Name(t Target) string {
 var fieldNames = map[string]string{
 	"y.column": "column of values", "y.unit": "unit of values", "x.column": "column of stations", "x.unit": "unit of stations",
 	"u.column": "column of uncertainty", "u.unit": "unit of uncertainty", "u_factor": "coverage", "u_basis": "basis of the uncertainty", "size.column": "column of cell counts", "cells": "number of cells",
-	"choices.k": "k", "choices.k_num": "k_num", "choices.bounded": "bounded rule", "choices.rule": "rule of the grid study", "choices.formal": "formal order", "choices.dimension": "dimension",
+	"choices.k": "k", "choices.k_num": "k_num", "choices.bounded": "bounded rule", "choices.rule": "rule of the grid study", "choices.safety": "safety factor of the grid study", "choices.formal": "formal order", "choices.dimension": "dimension",
 	"choices.interpolation": "interpolation", "choices.u_interp": "interpolation uncertainty", "choices.num_shared": "u_num shared", "choices.k_student": "k by degrees of freedom", "choices.sampled": "interval by sampling",
 	"choices.num_linear": "sum of the parts of u_num",
 	"balance_of":         "kind of balance", "scale": "flux that matters", "scale_name": "name of the flux that matters",
@@ -418,6 +418,8 @@ func (q *Question) enter(path, value string) (string, error) {
 		return number(&c.KNum, value, 0.1, 10)
 	case "choices.formal":
 		return number(&c.Formal, value, 0.5, 10)
+	case "choices.safety":
+		return number(&c.Safety, value, 1, 10)
 	case "choices.dimension":
 		d := float64(c.Dimension)
 		before, err := number(&d, value, 2, 3)

@@ -124,7 +124,8 @@ type Cell struct {
 	Degrees     Number        `json:"degrees"`              // effective degrees of freedom of a scalar; null where all are taken as known
 	K95         Number        `json:"k_95"`                 // factor that 95 % needs with them
 	Requirement *Judgement    `json:"requirement"`
-	Fragile     []Fragility   `json:"fragile"` // alternatives that change an outcome word
+	Tried       []string      `json:"tried,omitempty"` // alternatives that were evaluated
+	Fragile     []Fragility   `json:"fragile"`         // alternatives that change an outcome word
 
 	Residuals []ResidualLine `json:"residuals"`
 	RoundOff  *RoundOffLine  `json:"round_off"` // null where no second run of another precision is given
@@ -696,6 +697,20 @@ type Judgement struct {
 	Toward        string `json:"toward"` // the outcome that UValNeeded would give, E unchanged
 	UNumNeeded    Number `json:"u_num_needed"`
 	UNumReduction Number `json:"u_num_reduction"` // fraction
+	Ways          []Way  `json:"ways,omitempty"`  // each alone would bring u_val to UValNeeded, the least reduction first
+}
+
+// Way is one source whose reduction alone would resolve a requirement, E
+// unchanged, at the deciding station.
+type Way struct {
+	Source    string  `json:"source"`
+	Of        string  `json:"of"`
+	Now       Number  `json:"now"` // standard
+	Needed    Number  `json:"needed"`
+	Reduction Number  `json:"reduction"`          // fraction
+	Cells     *Number `json:"cells,omitempty"`    // of a finest grid that would do, by the observed order
+	Cost      *Number `json:"cost,omitempty"`     // of its run, relative to the finest
+	Readings  int     `json:"readings,omitempty"` // of the test that would do, in all
 }
 
 // Fragility is an alternative that changes an outcome word.
@@ -705,6 +720,9 @@ type Fragility struct {
 	From    string `json:"from"`
 	Outcome string `json:"outcome"`
 	Detail  string `json:"detail"`
+	// At is where the word turns on the way from the chosen number to that of
+	// the alternative; null where the alternative is no number.
+	At *Number `json:"at,omitempty"`
 }
 
 // Curve is a line to draw.

@@ -8,7 +8,7 @@ import (
 
 // rule returns the options of the grid study.
 func (c Choices) rule() refinement.Options {
-	return refinement.Options{Rule: c.Rule, Bounded: c.Bounded, Formal: c.Formal, Method: c.Interpolation}
+	return refinement.Options{Rule: c.Rule, Bounded: c.Bounded, Formal: c.Formal, Method: c.Interpolation, Safety: c.Safety}
 }
 
 // RuleName returns the rule of the grid study in words.

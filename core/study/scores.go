@@ -347,14 +347,17 @@ func (w *work) regions(ask *Scoring, e []float64) {
 // bounded reports whether the bounds of a region count.
 func (r Region) bounded() bool { return r.Sign == "" || r.From != r.To }
 
+// holds reports whether a station, in SI, belongs to a region.
+func (w *work) holds(r Region, x, d float64) bool {
+	inside := !r.bounded() || x >= w.xUnit.ToSI(r.From) && x <= w.xUnit.ToSI(r.To)
+	return inside && (r.Sign == "" || r.Sign == SignPositive && d > 0 || r.Sign == SignNegative && d < 0)
+}
+
 // regionRows returns the stations of a region.
 func (w *work) regionRows(r Region) []int {
-	lo, hi := w.xUnit.ToSI(r.From), w.xUnit.ToSI(r.To)
 	var rows []int
 	for i, x := range w.x {
-		inside := !r.bounded() || x >= lo && x <= hi
-		signed := r.Sign == "" || r.Sign == SignPositive && w.d[i] > 0 || r.Sign == SignNegative && w.d[i] < 0
-		if inside && signed {
+		if w.holds(r, x, w.d[i]) {
 			rows = append(rows, i)
 		}
 	}

@@ -120,6 +120,7 @@ func (w *work) commonStations() {
 		switch {
 		case math.IsNaN(x) || math.IsNaN(ry[i]):
 			missing++
+		case w.without != nil && w.holds(*w.without, x, ry[i]):
 		case !w.excluded(i, x, ry[i]):
 			at, rows = append(at, x), append(rows, i)
 		}

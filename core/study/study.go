@@ -437,6 +437,7 @@ type Choices struct {
 	Dimension     int                `json:"dimension"`            // 2 or 3
 	Interpolation interpolate.Method `json:"interpolation"`        // of the simulation to the stations
 	UInterp       bool               `json:"u_interp"`             // count the interpolation uncertainty
+	Safety        float64            `json:"safety,omitempty"`     // factor on the estimated error of three grids; 0: 1.25
 	NumShared     bool               `json:"num_shared"`           // u_num fully shared between stations
 	KStudent      bool               `json:"k_student,omitempty"`  // K follows from the effective degrees of freedom at 95 %
 	Sampled       bool               `json:"sampled,omitempty"`    // the interval of the model error by sampling too

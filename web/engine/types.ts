@@ -380,6 +380,7 @@ export interface Cell {
   degrees: number | null;
   k_95: number | null;
   requirement: Judgement | null;
+  tried?: string[];
   fragile: Fragility[] | null;
   residuals: ResidualLine[] | null;
   round_off: RoundOffLine | null;
@@ -482,6 +483,7 @@ export interface Choices {
   dimension: number;
   interpolation: Method;
   u_interp: boolean;
+  safety?: number;
   num_shared: boolean;
   k_student?: boolean;
   sampled?: boolean;
@@ -781,6 +783,7 @@ export interface Judgement {
   toward: string;
   u_num_needed: number | null;
   u_num_reduction: number | null;
+  ways?: Way[];
 }
 
 export interface Fragility {
@@ -789,6 +792,7 @@ export interface Fragility {
   from: string;
   outcome: string;
   detail: string;
+  at?: number;
 }
 
 export interface ResidualLine {
@@ -962,6 +966,17 @@ export interface StatedNext {
   cells: number | null;
   cost: number | null;
   met: boolean;
+}
+
+export interface Way {
+  source: string;
+  of: string;
+  now: number | null;
+  needed: number | null;
+  reduction: number | null;
+  cells?: number;
+  cost?: number;
+  readings?: number;
 }
 
 export interface CorrelationPoint {
