@@ -71,7 +71,7 @@ func TestResidualsBeneath(t *testing.T) {
 		t.Fatal(err)
 	}
 	d := decode(t, f)
-	if len(d.Grid) != 4 || f.Height != plain.Height+2*(nameRow+beneathHeight)+keyRow || !strings.Contains(f.Caption, "Beneath, the residuals of the run") {
+	if len(d.Grid) != 4 || f.Height != plain.Height+beneathGap+beneathHeight+keyRow || !strings.Contains(f.Caption, "Beneath, the residuals of the run") {
 		t.Fatalf("%d panels, height %d of %d: %s", len(d.Grid), f.Height, plain.Height, f.Caption)
 	}
 	rows := d.rows(t, 3, depthName, "")

@@ -19,6 +19,7 @@ import (
 const (
 	monitorHeight = 124
 	beneathHeight = 62 // of the residuals beneath
+	beneathGap    = 36 // with their name
 	monitorGap    = 34 // between panels side by side
 )
 
@@ -58,28 +59,26 @@ func Settling(c study.Cell, id string, t Theme) (Figure, error) {
 		panels[i] = newMonitorPanel(m, residualsOf(c, m), len(shown) > 1)
 		digits = max(digits, panels[i].y.digits(), panels[i].logs.digits())
 	}
-	high := monitorHeight
-	if slices.ContainsFunc(panels, func(m monitorPanel) bool { return len(m.residuals) > 0 }) {
-		high += nameRow + beneathHeight
-	}
 	left := 20 + digitWidth*digits
 	top := topEdge + keyRow*p.keys(left, topEdge, p.monitorKeys(c, panels)) + nameRow
 	each := width - left - rightEdge
 	if len(shown) > 1 {
 		each = (width - 2*left - rightEdge - monitorGap) / 2
 	}
+	columns := min(len(shown), 2)
+	bottom := top
 	for i := range panels {
-		x := left + (i%2)*(each+left+monitorGap)
-		p.monitor(c, &panels[i], x, width-x-each, top+(i/2)*(high+footRow+nameRow))
-	}
-	rows := 1
-	if len(shown) > 1 {
-		rows = (len(shown) + 1) / 2
+		if i > 0 && i%columns == 0 {
+			top = bottom + nameRow
+		}
+		x := left + (i%columns)*(each+left+monitorGap)
+		p.monitor(c, &panels[i], x, width-x-each, top)
+		bottom = max(bottom, top+panels[i].height()+footRow)
 	}
 	return Figure{
 		ID: id + "-monitors", Title: "Monitors of " + subject(c) + ", " + simulation(c),
 		Caption: monitorCaption(c, shown, panels), Alt: monitorAlt(c, monitors),
-		Height: top + rows*(high+footRow) + (rows-1)*nameRow, Table: monitorTable(c, monitors),
+		Height: bottom, Table: monitorTable(c, monitors),
 	}.finish(p.option)
 }
 
@@ -110,6 +109,14 @@ type monitorPanel struct {
 	early     int
 	residuals [][][]any // logarithms
 	logs      scale
+}
+
+// height of the panel with what stands beneath it, in px.
+func (m *monitorPanel) height() int {
+	if len(m.residuals) == 0 {
+		return monitorHeight
+	}
+	return monitorHeight + beneathGap + beneathHeight
 }
 
 // residualsOf returns the residuals of a monitor's run; of a monitor in time,
@@ -241,7 +248,7 @@ func (p *picture) monitor(c study.Cell, m *monitorPanel, left, right, top int) {
 		LineStyle: &lineStyle{LineStyle: opts.LineStyle{Color: p.models[0], Width: 1.2}},
 	})
 	if beneath {
-		p.residuals(m, left, right, top+monitorHeight+nameRow)
+		p.residuals(m, left, right, top+monitorHeight+beneathGap)
 	}
 }
 

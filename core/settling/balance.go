@@ -138,19 +138,22 @@ func (b *Balanced) against(opt Options) string {
 	if !(opt.Scale > 0) {
 		return ""
 	}
-	words := ""
+	words := []string{}
 	part := math.Abs(b.Fraction) * opt.Scale
 	if opt.UGrid > 0 {
 		b.Limit, b.LimitOf = smallShare*opt.UGrid/opt.Scale, "a tenth of U_grid"
 		b.OfGrid = part / opt.UGrid
-		words += "; the same fraction of the quantity is " + quantity.Text(b.OfGrid, 2) + " of its U_grid"
+		words = append(words, quantity.Text(b.OfGrid, 2)+" of its U_grid")
 	}
 	if e := math.Abs(opt.E); e > 0 && usable(e) {
 		if !(opt.UGrid > 0) {
 			b.Limit, b.LimitOf = smallShare*e/opt.Scale, "a tenth of |E|"
 		}
 		b.OfE = part / e
-		words += "; the same fraction of the quantity is " + quantity.Text(b.OfE, 2) + " of |E|"
+		words = append(words, quantity.Text(b.OfE, 2)+" of |E|")
 	}
-	return words
+	if len(words) == 0 {
+		return ""
+	}
+	return "; the same fraction of the quantity is " + strings.Join(words, " and ")
 }

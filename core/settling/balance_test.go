@@ -63,7 +63,7 @@ func TestBalance(t *testing.T) {
 // TestDemoBalance: mass imbalance of 1.3 % (6-demo F14).
 func TestDemoBalance(t *testing.T) {
 	b := Balance(Flux{Kind: Mass, In: []float64{0.8}, Out: []float64{0.7896}}, Options{Scale: 5.67, UGrid: 0.057, E: -0.2})
-	want := "Mass imbalance 1.3 % of inflow (more enters than leaves; the same fraction of the quantity is 1.3 of its U_grid; the same fraction of the quantity is 0.37 of |E|). Its effect on the quantity is unknown: continue the run, or enter an effect with a reason."
+	want := "Mass imbalance 1.3 % of inflow (more enters than leaves; the same fraction of the quantity is 1.3 of its U_grid and 0.37 of |E|). Its effect on the quantity is unknown: continue the run, or enter an effect with a reason."
 	if len(b.Notices) != 1 || b.Notices[0].Text != want || b.Notices[0].Severity != notice.Stop || !near(b.OfGrid, 0.013*5.67/0.057, 1e-9) || !near(b.OfE, 0.013*5.67/0.2, 1e-9) {
 		t.Errorf("%+v", b)
 	}
