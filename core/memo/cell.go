@@ -27,7 +27,7 @@ func (b *builder) cell(i int, c study.Cell) Node {
 	b.lacking = nil
 	for _, part := range [][]Node{
 		b.compared(i, c), b.conditions(i, c), b.measures(i, c), b.scores(i, c), b.joint(i, c), b.crossings(i, c), b.derived(i, c),
-		b.figuresOf(c, ""), b.stations(i, c), b.excluded(i, c), b.settling(i, c), b.grids(i, c), b.sources(i, c), b.requirement(i, c), b.openPoints(c),
+		b.figuresOf(c, ""), b.stations(i, c), b.excluded(i, c), b.settling(i, c), b.grids(i, c), b.sources(i, c), b.evidence(i, c), b.requirement(i, c), b.openPoints(c),
 	} {
 		s.Nodes = append(s.Nodes, part...)
 	}
@@ -97,8 +97,8 @@ func (b *builder) compared(i int, c study.Cell) []Node {
 		line(say("Files"), text(files)),
 		line(say("Evidence"), text(strings.Join(evidence, "; "))),
 	)}
-	if words := claim(c); words != "" {
-		nodes = append(nodes, note(text(words)))
+	if words := strings.TrimSpace(claim(c) + " " + inputWords[c.InputForm]); words != "" {
+		nodes = append(nodes, note(typeset(words)...))
 	}
 	return nodes
 }

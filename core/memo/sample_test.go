@@ -43,11 +43,20 @@ func taps(model string, e []float64, joint study.Joint, requirement *study.Judge
 		Regions:     []study.RegionLine{{Name: "nose", From: .02, To: .3, N: 9, Bias: .0123, RMSE: .0177, HitRate: .777, Beyond: 1}, {Name: "suction", Sign: study.SignNegative, From: quantity.None, To: quantity.None, N: 7, Bias: -.0045, RMSE: .0166, HitRate: .714, Beyond: 2}},
 		Measured:    []study.MeasureLine{{Name: "RMSE", Value: .031, U: .0062, Floor: .0203, FloorHi: .0377}, {Name: "largest |E|", Value: .0409, U: .0101, Floor: .0291, FloorHi: .0401, Above: true}},
 		Provisional: true, StationsAll: 26, Outside: []study.Number{0.981, 0.995},
-		Excluded:    []study.Excluded{{X: .55, D: -.12, Line: 30, Why: "tap leaked, see the log of the test", Late: true}, {X: .56, D: -.1, Line: 31, Why: "tap leaked"}},
-		Open:        []study.Open{{Course: 0, Missing: "monitor", Text: "No monitor of the run on grid G4: that it has settled is not shown"}},
-		Courses:     [5]study.State{study.Empty, study.Settled, study.Settled, study.Doubts, study.Doubts},
-		Choices:     study.DefaultChoices(),
-		Joint:       &joint,
+		Excluded:  []study.Excluded{{X: .55, D: -.12, Line: 30, Why: "tap leaked, see the log of the test", Late: true}, {X: .56, D: -.1, Line: 31, Why: "tap leaked"}},
+		Open:      []study.Open{{Course: 0, Missing: "monitor", Text: "No monitor of the run on grid G4: that it has settled is not shown"}},
+		Courses:   [5]study.State{study.Empty, study.Settled, study.Settled, study.Doubts, study.Doubts},
+		Choices:   study.DefaultChoices(),
+		Joint:     &joint,
+		InputForm: study.InputsCounted,
+		Members:   &study.MemberLine{N: 12, U: .0031, Mean: -.00123, Rank: 11},
+		Shared:    []study.SharedLine{{Source: "dynamic pressure", U: .0075, Left: .00021}},
+		Bound:     &study.BoundLine{Half: .0042, At: .43},
+		Replicates: &study.ReplicateLine{Readings: 72, Stations: 24, Of: "mean", Counts: "day", U: .0061, Degrees: 2, S: .0044, Plain: .0025,
+			Levels: []study.LevelLine{{Name: "day", Groups: 3, Degrees: 2, Deviation: .0101}, {Name: "repeated reading", Groups: 15, Degrees: 12, Deviation: .0034}}},
+		Resolution:  &study.ResolutionLine{Step: .0125, U: .0036084392},
+		Consistency: []study.ConsistencyLine{{Name: "integral over the stations against the stated flow rate", Value: 12.41, Expected: 12.9, U: .11, Ratio: 4.4545}, {Name: "overlap of repeats", Value: .01, Expected: 0, U: .009, Ratio: 1.111, Holds: true}},
+		Quality:     []study.QualityLine{{Item: "inlet profiles", State: study.QualityKnown, Note: "station 2 of the traverse"}, {Item: "wall temperature", State: study.QualityUnknown}, {Item: "wall roughness"}},
 		Requirement: requirement,
 		Sources: []study.SourceLine{
 			{Name: "tap reading", Of: study.OfData, Text: "0.006, absolute, standard", U: .006, Share: .0796460177, Pattern: study.Independent, Origin: "repeat readings"},
@@ -129,7 +138,9 @@ func drag() study.Cell {
 			Others: []study.DerivedOther{{Change: "edge at the plateau", Simulation: .0312, Reference: .0309, E: .0003}, {Change: "edge at the last row", Simulation: .0298, Reference: quantity.None, E: quantity.None}}},
 		Reference: "OR-26 balance", Kind: study.KindTest, Use: study.UseValidation, Unit: "1", Scalar: true,
 		Courses: [5]study.State{study.Settled, study.Settled, study.Settled, study.Settled, study.Doubts},
-		Choices: study.DefaultChoices(), StationsAll: 1, Provisional: true, Degrees: 7.3, K95: 2.34,
+		Choices: study.DefaultChoices(), StationsAll: 1, Provisional: true, Degrees: 7.3, K95: 2.34, InputForm: study.InputsNominal,
+		Inputs:  []study.InputLine{{Name: "U", Unit: "m/s", Nominal: 31, U: .155, Sensitivity: .00161, DataSensitivity: .0004, Method: "central, two runs", Shared: true, Text: "0.5 % of U = 31 m/s, 95 %", Origin: "traverse"}},
+		Sampled: &study.SampledLine{At: quantity.None, Value: .00031, U: .0006, Lo: -.00087, Hi: .00149, Level: .95, Draws: 230000, Minus: .0003, Plus: .00045, Shift: .00012},
 		Monitors: []study.MonitorLine{
 			{Grid: "G3", File: "c1-g3-monitor.dat", Axis: study.AxisIterations, Class: "settled", Rule: "mean over the last third", Mean: .03021, U: 2e-7, From: 401, To: 600, Drift: -1.2e-6, Change: -3.6e-8, Per: 100, Limit: 4.1e-5, Remaining: -1.5e-8, Period: quantity.None, HalfRange: quantity.None, OfGrid: .00097},
 			{Grid: "G4", File: "c1-g4-monitor.dat", Axis: study.AxisIterations, Class: "cycling", Rule: "mean over whole cycles", Mean: .0299512, U: .0000712, From: 111, To: 600, Drift: quantity.None, Change: quantity.None, Per: quantity.None, Limit: 4.1e-5, Remaining: quantity.None, Period: 70, Cycles: 7, HalfRange: .000123, OfGrid: .35,
@@ -185,7 +196,8 @@ func oscillating() study.Cell {
 	s.UNum, s.UInput = .1075, quantity.None
 	none := quantity.None
 	c.Grids = &study.Grids{Stated: &study.StatedNext{U: .05, Cells: none, Cost: none}, Points: gridPoints(35.68, 36.34, 35.96, 36.172), Dimension: 3, Class: "oscillatory", Ratio: -.5578947, Order: none, Formal: 2, Extrapolated: none, Ea: none, Eext: none, GCI: none, U: none, UNum: .1075, KNum: 1.15, Rule: "half-range of the three finest as a bound", R21: 1.336, R32: 1.338, OrderLow: none, OrderHigh: none, NextCells: none, NextCost: none}
-	c.Sources = c.Sources[2:]
+	c.Sources, c.Sampled, c.InputForm = c.Sources[2:], nil, ""
+	c.Bounding = &study.Bounding{What: "sign", Word: study.SignResolved, UD: .4173, At: quantity.None, After: study.NotResolved}
 	c.Sources[0].Share = none
 	c.Degrees, c.K95, c.Monitors, c.Balances, c.Residuals, c.RoundOff, c.NumSums = quantity.None, quantity.None, nil, nil, nil, nil, nil
 	c.Notices = []notice.Notice{notice.New("u-missing"), notice.New("grid-oscillatory", "−0.56", "0.19")}

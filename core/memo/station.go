@@ -292,9 +292,8 @@ func (b *builder) scalar(i int, c study.Cell) []Node {
 		figureCell(digits(s.Ratio, 2, at("ratio"))), figureCell(from...), cell(text(reading)))
 	caption := say("Values ({}), *k* = {}. Uncertainties are standard. “{}” is a value that is not known; it is not zero.",
 		text(unitOf(c.Unit)), asWritten(c.Choices.K, fmt.Sprintf("cells.%d.choices.k", i)), text(absent))
-	if known(c.Degrees, c.K95) && float64(c.K95) > c.Choices.K {
-		caption = append(caption, say(" With {} effective degrees of freedom, 95 % needs *k* = {}.",
-			digits(c.Degrees, 2, fmt.Sprintf("cells.%d.degrees", i)), digits(c.K95, 3, fmt.Sprintf("cells.%d.k_95", i)))...)
+	if known(c.Degrees, c.K95) {
+		caption = append(append(caption, text(" ")), needs(i, c)...)
 	}
 	return []Node{b.table("plain", caption, headRow("#*S*", "#*D*", "#*E* = *S* − *D*", "#*u*_{D}", "#*u*_{num}", "#*u*_{input}", "#*u*_{val}", "#|*E*|/*u*_{val}", "#Model error within", "Reading"), values)}
 }

@@ -29,7 +29,7 @@ func (s *Session) slipCards() []SlipCard {
 		}
 		read := s.readOnce(*f)
 		t, err := read.Table(p.Table)
-		card := SlipCard{ID: p.ID, File: p.File, Name: f.Name, Notices: []string{}, Entries: []Entry{}, Sketch: Sketch{Own: [][2]study.Number{}, Others: [][][2]study.Number{}}}
+		card := SlipCard{ID: p.ID, File: p.File, Name: f.Name, Notices: []string{}, Entries: []Entry{}, Sketch: Sketch{Own: [][2]study.Number{}, Others: [][][2]study.Number{}, Zero: study.None}}
 		if err != nil {
 			card.Read = asNotice(err).Text
 			cards, slips, tables = append(cards, card), append(slips, p), append(tables, t)
@@ -114,6 +114,12 @@ func needed(p *study.Slip, field string) bool {
 		return role == study.Balance && !p.X.Column.Given()
 	case "u_factor", "u_basis":
 		return p.U.Column.Given()
+	case "bars_as":
+		return p.Upper.Column.Given()
+	case "digitised.x_scale", "digitised.x_zero", "digitised.y_scale", "digitised.y_zero", "digitised.line", "digitised.pixel":
+		return p.Digitised.Is.Value == "yes"
+	case "input", "input_at":
+		return p.Role.Value == study.InputRun
 	case "size.column":
 		return p.Role.Value == study.GridValues
 	}
@@ -131,7 +137,7 @@ func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 		return Entry{Target: study.Target{Kind: "slip", ID: p.ID, Field: field}, Label: label, Value: f.Value, By: f.By, Options: options, Hint: hint}
 	}
 	list := []Entry{
-		entry("role", "looks like", p.Role, []Option{{study.Simulation, "a simulation"}, {study.GridValues, "values over grids"}, {study.Reference, "reference data"}, {study.Monitor, "a monitor of one run"}, {study.Balance, "a balance of one run"}, {study.Residual, "a residual of one run"}, {study.Precision, "the run again, in other precision"}, {study.Unused, "not used"}}, ""),
+		entry("role", "looks like", p.Role, []Option{{study.Simulation, "a simulation"}, {study.GridValues, "values over grids"}, {study.InputRun, "a run with one input changed"}, {study.Members, "runs with sampled inputs"}, {study.Reference, "reference data"}, {study.Replicates, "repeated readings at the stations"}, {study.Monitor, "a monitor of one run"}, {study.Balance, "a balance of one run"}, {study.Residual, "a residual of one run"}, {study.Precision, "the run again, in other precision"}, {study.Unused, "not used"}}, ""),
 	}
 	if p.Role.Value == study.Unused {
 		return list
@@ -139,7 +145,7 @@ func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 	list = append(list,
 		entry("case", "case", p.Case, free, "e.g. C1"),
 		entry("quantity", "quantity", p.Quantity, free, quantityHint(p)))
-	if p.Role.Value != study.Reference {
+	if p.Role.Value != study.Reference && p.Role.Value != study.Replicates {
 		list = append(list, entry("model", "model", p.Model, free, "e.g. A"))
 	}
 	switch p.Role.Value {
@@ -185,18 +191,34 @@ func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 			list = append(list, entry("contour.column", second+" in", p.Contour.Column, columns, ""), entry("contour.unit", "its unit", p.Contour.Unit, free, "m, mm, … or 1 for a pure number"))
 		}
 	}
+	if p.Role.Value == study.InputRun {
+		list = append(list, entry("input", "changed input", p.Input, free, "as in the source line, e.g. U"), entry("input_at", "its value here", p.InputAt, free, ""), entry("grid", "grid", p.Grid, free, "e.g. G4"))
+	}
 	if p.Role.Value == study.Simulation {
 		list = append(list, entry("grid", "grid", p.Grid, free, "e.g. G4"), entry("cells", "cells", p.Cells, free, "number of cells"))
 		if p.Grid.Given() || p.Cells.Given() {
 			list = append(list, entry("y_plus", "y+ of the first cells", p.YPlus, free, ""), entry("settings", "settings of the run", p.Settings, free, "key: value; key: value, beside those the file states"))
 		}
 	}
+	if p.Role.Value == study.Replicates || p.Role.Value == study.Reference && !p.X.Column.Given() && t.Rows() > 1 {
+		for _, l := range []struct{ field, label string }{{"facility", "facility in"}, {"day", "day in"}, {"rig", "set-up in"}, {"run", "run in"}} {
+			list = append(list, entry("levels."+l.field, l.label, p.Level(l.field), columns, "tells repeats apart"))
+		}
+	}
+	if p.Role.Value == study.Reference && p.X.Column.Given() {
+		list = append(list, figureEntries(p, entry)...)
+	}
 	if p.Role.Value == study.Reference {
 		list = append(list, entry("u.column", "uncertainty in", p.U.Column, columns, ""))
 		if p.U.Column.Given() {
 			list = append(list,
 				entry("u.unit", "its unit", p.U.Unit, free, "as the values, or % of reading"),
-				entry("u_factor", "its coverage", p.UFactor, coverages(), "what the bars mean"))
+				entry("u_factor", "its coverage", p.UFactor, coverages(), "what the bars mean"),
+				entry("upper.column", "upper side in", p.Upper.Column, columns, "none: the same on both sides"))
+			if p.Upper.Column.Given() {
+				list = append(list, entry("upper.unit", "its unit", p.Upper.Unit, free, "as the values, or %"),
+					entry("bars_as", "both are", p.BarsAs, []Option{{"", "–"}, {study.BarsWidths, "half-widths"}, {study.BarsLimits, "limits"}}, ""))
+			}
 			if p.U.Unit.Value == "%" && p.Y.Unit.Value != "%" {
 				list = append(list, entry("u_basis", "percent of", p.UBasis, free, "reading, or the number of the full scale"))
 			}
@@ -210,6 +232,27 @@ func quantityHint(p *study.Slip) string {
 		return "empty: all of the case"
 	}
 	return "e.g. drag coefficient"
+}
+
+// figureEntries are the record of a curve that was read off a figure, and the
+// flow rate that its integral should be.
+func figureEntries(p *study.Slip, entry func(field, label string, f study.Field, options []Option, hint string) Entry) []Entry {
+	d := &p.Digitised
+	list := []Entry{entry("digitised", "from", d.Is, []Option{{"", "a file of readings"}, {"yes", "a figure, digitised"}}, "")}
+	if d.Is.Value == "yes" {
+		list = append(list,
+			entry("digitised.x_scale", "u of the x scale in %", d.XScale, []Option{}, "standard, from the calibration of the axis"),
+			entry("digitised.x_zero", "u of its zero", d.XZero, []Option{}, "in the unit of the stations"),
+			entry("digitised.y_scale", "u of the y scale in %", d.YScale, []Option{}, "standard"),
+			entry("digitised.y_zero", "u of its zero", d.YZero, []Option{}, "in the unit of the values"),
+			entry("digitised.line", "line thickness", d.Line, []Option{}, "in the unit of the values"),
+			entry("digitised.pixel", "pixel", d.Pixel, []Option{}, "in the unit of the values"))
+	}
+	list = append(list, entry("flow_rate", "its integral should be", p.FlowRate, []Option{}, "a stated flow rate, in the units of values times stations"))
+	if p.FlowRate.Given() {
+		list = append(list, entry("flow_rate_u", "with u", p.FlowRateU, []Option{}, "standard; empty: taken as exact"))
+	}
+	return list
 }
 
 // coverages are the answers to what a stated uncertainty means.
@@ -244,7 +287,10 @@ func (s *Session) sketch(p *study.Slip, t tablefile.Table) Sketch {
 			box = [4]float64{min(box[0], at[0]), max(box[1], at[0]), min(box[2], at[1]), max(box[3], at[1])}
 		}
 	}
-	sketch := Sketch{Own: scaled(own, box), Others: [][][2]study.Number{}}
+	sketch := Sketch{Own: scaled(own, box), Others: [][][2]study.Number{}, Zero: study.None}
+	if height := box[3] - box[2]; height > 0 && !math.IsInf(height, 0) {
+		sketch.Zero = study.Number(-box[2] / height)
+	}
 	for _, list := range others {
 		sketch.Others = append(sketch.Others, scaled(list, box))
 	}
@@ -292,90 +338,6 @@ func scaled(list [][2]float64, box [4]float64) [][2]study.Number {
 	return out
 }
 
-// sourceCards are the lines of the budget: first those that a person entered,
-// each with its entries, then those that were computed.
-func sourceCards(q *study.Question, c *study.Cell) []SourceCard {
-	cards := []SourceCard{}
-	used := map[string]study.SourceLine{}
-	for _, l := range c.Sources {
-		used[l.Of+l.Name] = l
-	}
-	for i, s := range q.Sources {
-		card := SourceCard{Target: study.Target{Kind: "source", ID: questionID(q), Field: strconv.Itoa(i)}, Of: s.Of, Pattern: s.Pattern, Text: s.Name, Entries: sourceEntries(q, i, s)}
-		if l, ok := used[s.Of+s.Name]; ok {
-			card.Text, card.Share, card.Pattern = l.Name+" · "+l.Text+" · "+patternWords(l.Pattern)+" · "+l.Origin, shareWords(l.Share), l.Pattern
-			delete(used, s.Of+s.Name)
-		}
-		cards = append(cards, card)
-	}
-	for _, l := range c.Sources {
-		if _, left := used[l.Of+l.Name]; left {
-			cards = append(cards, SourceCard{Of: l.Of, Pattern: l.Pattern, Share: shareWords(l.Share), Entries: []Entry{},
-				Text: l.Name + " · " + l.Text + " · " + patternWords(l.Pattern) + " · " + l.Origin})
-		}
-	}
-	return cards
-}
-
-func shareWords(n study.Number) string {
-	if !n.Known() {
-		return ""
-	}
-	if n < 0.001 {
-		return "below 0.1 % of u_val²"
-	}
-	return quantity.Text(float64(n)*100, 2) + " % of u_val²"
-}
-
-func patternWords(pattern string) string {
-	switch pattern {
-	case study.Common:
-		return "the same error at all stations"
-	case study.Grouped:
-		return "the same error within groups of stations"
-	case study.Length:
-		return "correlated over a length"
-	}
-	return "independent between stations"
-}
-
-func sourceEntries(q *study.Question, i int, s study.Source) []Entry {
-	entry := func(field, label, value string, by study.Certainty, options []Option, hint string) Entry {
-		open := by == study.Guessed || field == "coverage" && value == ""
-		return Entry{Target: study.Target{Kind: "source", ID: questionID(q), Field: strconv.Itoa(i) + "." + field}, Label: label, Value: value, By: by, Options: options, Hint: hint, Open: open}
-	}
-	random := "no"
-	if s.Random {
-		random = "yes"
-	}
-	list := []Entry{
-		entry("name", "source", s.Name, study.Entered, []Option{}, ""),
-		entry("of", "of", s.Of, study.Entered, []Option{{study.OfData, "the data"}, {study.OfInput, "the inputs"}, {study.OfNumerical, "the numerics"}}, ""),
-		entry("value", "value", quantity.Typed(s.Value), study.Entered, []Option{}, ""),
-		entry("basis", "basis", s.Basis, study.Entered, []Option{{study.Absolute, "in the unit of the data"}, {study.OfReading, "% of reading"}, {study.OfFullScale, "% of full scale"}}, ""),
-		entry("coverage", "coverage", s.Coverage.Value, s.Coverage.By, coverages(), ""),
-		entry("random", "random", random, study.Entered, []Option{{"no", "systematic"}, {"yes", "random"}}, ""),
-		entry("pattern", "between stations", s.Pattern, study.Entered, []Option{{study.Independent, "independent"}, {study.Common, "the same at all"}, {study.Grouped, "the same within groups"}, {study.Length, "correlated over a length"}}, ""),
-		entry("origin", "where it comes from", s.Origin, study.Entered, []Option{}, ""),
-	}
-	if q.Derive != nil {
-		list = append(list, entry("of_scalar", "value of", map[bool]string{true: "yes", false: "no"}[s.OfScalar], study.Entered, []Option{{"no", "the curve, carried to the scalar"}, {"yes", "the scalar itself"}}, "where one side is a value, inputs and numerics are of the scalar"))
-	}
-	if s.Basis == study.OfFullScale {
-		list = append(list, entry("full_scale", "full scale, in the unit of the data", quantity.Typed(s.FullScale), study.Entered, []Option{}, ""))
-	}
-	switch s.Pattern {
-	case study.Grouped:
-		list = append(list, entry("group", "column with group numbers", s.Group, study.Entered, []Option{}, ""))
-	case study.Length:
-		list = append(list, entry("length", "correlation length, in the unit of the stations", quantity.Typed(s.Length), study.Entered, []Option{}, ""))
-	}
-	if s.Random {
-		list = append(list, entry("degrees", "degrees of freedom", quantity.Typed(s.Degrees), study.Entered, []Option{}, "0: taken as known"))
-	}
-	return list
-}
-
 // choices are the decisions whose effect shows at once.
 func choices(q *study.Question) []Entry {
 	c := q.Choices
@@ -403,6 +365,8 @@ func choices(q *study.Question) []Entry {
 		entry("safety", "safety factor of three grids", quantity.Typed(cmp.Or(c.Safety, refinement.UsualSafety)), []Option{}, "1.25 with an observed order, 3 where none is credible"),
 		entry("formal", "formal order", quantity.Typed(c.Formal), []Option{}, ""),
 		entry("dimension", "grids are", strconv.Itoa(c.Dimension), []Option{{"2", "two-dimensional"}, {"3", "three-dimensional"}}, ""),
+		entry("k_student", "k follows", yes(c.KStudent), []Option{{"no", "as entered"}, {"yes", "from the effective degrees of freedom, 95 %"}}, ""),
+		entry("sampled", "interval by sampling", yes(c.Sampled), []Option{{"no", "where bars have two sides"}, {"yes", "always"}}, ""),
 		entry("interpolation", "simulation at the stations", string(c.Interpolation), []Option{{"linear", "linear"}, {"monotone", "monotone cubic"}}, ""),
 		entry("u_interp", "interpolation uncertainty", yes(c.UInterp), []Option{{"yes", "counted"}, {"no", "not counted"}}, ""),
 		entry("num_linear", "parts of u_num", yes(c.NumLinear), []Option{{"no", "independent: root of the squares"}, {"yes", "dependent: sum"}}, "grid and iteration errors may depend on each other"),
@@ -431,6 +395,8 @@ func questionEntries(q *study.Question) []Entry {
 		entry("kind", "the reference is", q.Kind.Value, q.Kind.By, []Option{{"", "–"}, {study.KindTest, "a test"}, {study.KindLaw, "a law"}, {study.KindCorrelation, "a correlation"}, {study.KindSimulation, "another simulation"}}, ""),
 		entry("use", "the data were used for", q.Use.Value, q.Use.By, []Option{{"", "–"}, {study.UseValidation, "comparison only"}, {study.UseTuning, "setting the model"}}, ""),
 		entry("reference_id", "name of the reference", q.ReferenceID, study.Entered, []Option{}, "e.g. campaign and run"),
+		entry("resolution", "the step seen in the data", q.Resolution, study.Entered, []Option{{"", "not a source"}, {study.Counted, "counted as a source"}}, ""),
+		entry("no_input", "the inputs have no uncertainty because", q.NoInput, study.Entered, []Option{}, "empty: not decided"),
 		entry("condition", "condition", q.Condition, study.Entered, []Option{}, "e.g. α = 4.2°"),
 		entry("symbol", "symbol", q.Symbol, study.Entered, []Option{}, "e.g. Cd"),
 		entry("downward", "drawn", map[bool]string{true: "yes", false: "no"}[q.Downward], study.Entered, []Option{{"no", "positive upward"}, {"yes", "negative upward"}}, ""),
@@ -521,15 +487,11 @@ func lists(s *study.Study, q *study.Question, c *study.Cell) []EntryList {
 	}
 	conditions := list(2, study.ItemCondition, id, "Conditions of both sides", "what was set in the simulation and what the test had")
 	for i, m := range q.Conditions {
-		sensitivity := ""
-		if m.Sensitivity != nil {
-			sensitivity = quantity.Typed(*m.Sensitivity)
-		}
 		k := study.ItemCondition
 		conditions.Items = append(conditions.Items, item(k, id, i,
 			entry(k, id, "name", "condition", m.Name, []Option{}, "e.g. α"), entry(k, id, "unit", "unit", m.Unit, []Option{}, "e.g. °"),
 			entry(k, id, "simulation", "simulation", quantity.Typed(m.Simulation), []Option{}, ""), entry(k, id, "data", "data", quantity.Typed(m.Data), []Option{}, ""),
-			entry(k, id, "sensitivity", "change of the quantity for one unit", sensitivity, []Option{}, "empty: not known"),
+			entry(k, id, "sensitivity", "change of the quantity for one unit", study.OptionalText(m.Sensitivity), []Option{}, "empty: not known"),
 			entry(k, id, "handling", "a difference is", m.Handling, []Option{{"", "open"}, {study.Corrected, "corrected"}, {study.AsInput, "counted as an input uncertainty"}, {study.Tolerated, "accepted, with a reason"}}, ""),
 			entry(k, id, "why", "reason", m.Why, []Option{}, "")))
 	}
@@ -551,7 +513,7 @@ func lists(s *study.Study, q *study.Question, c *study.Cell) []EntryList {
 		entry("case", q.Case, "speed", "reference speed U in m/s", s.CardValue(q.Case, "speed"), []Option{}, "a scale of velocities"),
 		entry("case", q.Case, "angle", "angle of attack α in degrees", s.CardValue(q.Case, "angle"), []Option{}, "")}}}}
 	criteria := criterionEntries(q, list(3, study.ItemCriterion, id, "Criteria of the scores", "limits bound to their scope; a result beyond one is no statement on the model by itself"))
-	return []EntryList{runList(s, q, c), conditions, card, derivation(q), scoreEntries(q), criteria, regions, application}
+	return []EntryList{runList(s, q, c), conditions, card, derivation(q), scoreEntries(q), criteria, regions, application, qualityList(s, q.Case)}
 }
 
 // readingEntries are the answers about how a file is read: those that were

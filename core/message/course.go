@@ -22,6 +22,8 @@ func courses(c *study.Cell, figures []CellFigure, veiled bool) []Course {
 		{Question: "Do they agree?", Answer: agreeAnswer(c), Numbers: agreeNumbers(c), Tables: agreeTables(c)},
 		{Question: "What can be said?", Answer: sayAnswer(c), Numbers: sayNumbers(c), Tables: sayTables(c)},
 	}
+	list[2].Tables = append(list[2].Tables, evidenceTables(c)...)
+	list[3].Tables = append(list[3].Tables, furtherTables(c)...)
 	for _, f := range figures {
 		at := courseOfFigure(f.Figure)
 		list[at].Figures = append(list[at].Figures, f)

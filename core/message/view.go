@@ -157,6 +157,7 @@ type SlipCard struct {
 type Sketch struct {
 	Own    [][2]study.Number   `json:"own"`
 	Others [][][2]study.Number `json:"others"`
+	Zero   study.Number        `json:"zero"` // where a value of zero lies, perhaps outside; null without points
 }
 
 // SourceCard is one line of the uncertainty budget with its entries.
@@ -167,6 +168,7 @@ type SourceCard struct {
 	Of      string       `json:"of"`
 	Pattern string       `json:"pattern"`
 	Entries []Entry      `json:"entries"`
+	Leads   []string     `json:"leads"` // the words before each entry: together they read as a sentence
 }
 
 // ExcludedCard is a station that a person took out of the comparison.

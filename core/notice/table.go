@@ -199,6 +199,13 @@ var table = map[string]row{
 	"sides-data":        {Ask, "%s has two sides, which only a source of the data can have. The lower one was used. Enter one half-width."},
 	"sampled-none":      {Note, "No interval was made by sampling: %s."},
 	"sampled-cap":       {Note, "Sampling ended at %d draws before the second digit had settled: its last digit may still change."},
+	"readings-level":    {Note, "%d readings by level: %s counts, with %s degrees of freedom. u of the %s is %s; readings without levels would give %s."},
+	"repeats-missing":   {Ask, "%d stations have no repeated readings in %s: they have no uncertainty from it and leave the test. Supply them, or leave the table unused."},
+	"repeats-apart":     {Ask, "Repeated readings (level %s) differ by %s times the uncertainty that is stated beside their scatter. A source is missing. Nothing was added; name it."},
+	"flow-rate-none":    {Note, "The data of %s were not integrated: %s"},
+	"flow-rate-differs": {Ask, "The integral of the data over their stations is %s, the stated flow rate %s: %s times the uncertainty of the difference. The profile and the flow rate do not belong together as stated. Which one holds?"},
+	"resolution-coarse": {Ask, "All values of %s are multiples of %s: the last digit is a step. A standard uncertainty below %s is not possible; %d stations state less. Count the resolution as a source, or say why not."},
+	"digitised-record":  {Ask, "%s is read off a figure, but the %s is not recorded. Blank is not zero: nothing was added for the digitising. Enter scale and zero of both axes, line and pixel."},
 	"degrees-used":      {Note, "The factor k = %s follows from %s effective degrees of freedom at 95 %%, as was chosen."},
 
 	// Grid studies.

@@ -54,6 +54,8 @@ func (w *work) budget() {
 	w.findInputRuns()
 	w.dataColumn()
 	w.replicates()
+	w.repeated()
+	w.digitised()
 	for i := range w.q.Sources {
 		s := &w.q.Sources[i]
 		if (s.Model == "" || s.Model == w.model) && !w.ofCurve(s) {
@@ -61,6 +63,8 @@ func (w *work) budget() {
 		}
 	}
 	w.members()
+	w.overlaps()
+	w.resolved()
 	w.gridPart()
 	w.interpolationPart()
 	w.missingParts()
@@ -122,6 +126,9 @@ func (w *work) replicates() {
 				w.twoSided(p, c.u, c.uPlus)
 			}
 		}
+		return
+	}
+	if w.leveled(c, inUnit(c.y, c.yUnit, w.yUnit)) {
 		return
 	}
 	_, s, u := uncertainty.Replicates(readings)
@@ -492,6 +499,7 @@ func (w *work) total() {
 		return uncertainty.Combine(n, sources).Total()
 	}
 	w.uD, w.uNum, w.uInput = side(OfData, false), side(OfNumerical, false), side(OfInput, false)
+	w.flowRate()
 	w.bounding()
 	if w.uD == nil || !w.has(OfNumerical) && !w.e.options.Partial || len(w.unknown) > 0 {
 		return

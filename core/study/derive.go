@@ -93,6 +93,8 @@ func (w *work) otherReferences() {
 			continue
 		}
 		difference := all[0] - w.d[0]
+		w.consistent(ConsistencyLine{Name: "against " + w.e.study.fileName(c.slip), Value: w.yNumber(w.d[0]), Expected: w.yNumber(all[0]), U: w.step(w.uD[0]), Ratio: Number(math.Abs(difference) / w.uD[0]),
+			Holds: !exceeds(math.Abs(difference), float64(w.choices.K*w.uD[0]))})
 		if exceeds(math.Abs(difference), float64(w.choices.K*w.uD[0])) {
 			w.ask(2, "which of the references holds", "references-differ", w.cell.Reference, quantity.Text(w.yUnit.FromSI(w.d[0]), 4), w.e.study.fileName(c.slip), quantity.Text(w.yUnit.FromSI(all[0]), 4),
 				quantity.Percent(math.Abs(difference/w.d[0])), quantity.Typed(w.choices.K))

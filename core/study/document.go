@@ -163,6 +163,7 @@ func (s *Study) Clone() *Study {
 	c.Slips = append([]Slip{}, s.Slips...)
 	c.Log = append([]Entry{}, s.Log...)
 	c.Application = append([]Condition{}, s.Application...)
+	c.Quality = append([]Quality(nil), s.Quality...)
 	c.Cases = append([]Card{}, s.Cases...)
 	for i := range c.Cases {
 		c.Cases[i].References = append([]ReferenceQuantity{}, c.Cases[i].References...)

@@ -234,6 +234,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		w.draw()
 	}
 	w.application()
+	w.quality()
 	w.close()
 	return w.cell
 }
@@ -293,6 +294,7 @@ type work struct {
 	aparts  []SourceLine // sources known as intervals only
 	bound   []float64    // what these can do to E at the stations; nil where there are none
 	changed []inputRun
+	spreads []spread // of repeated readings
 }
 
 // run is one simulation with the number of cells of its grid.

@@ -26,13 +26,14 @@ type ingredients struct {
 	Answers     []map[string]string
 	Cases       []Card
 	Application []Condition
+	Quality     []Quality
 	Conditions  [][]Matching // of all questions, where a point of application is stated
 	Alternative bool
 }
 
 // key returns a text that is equal for equal ingredients.
 func (e *evaluation) key(q *Question, model string) string {
-	in := ingredients{Question: q, Model: model, Cases: e.study.Cases, Application: e.study.Application, Alternative: e.options.Alternatives}
+	in := ingredients{Question: q, Model: model, Cases: e.study.Cases, Application: e.study.Application, Quality: e.study.Quality, Alternative: e.options.Alternatives}
 	for i := range e.study.Slips {
 		p := &e.study.Slips[i]
 		if !q.concerns(p) {

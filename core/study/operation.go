@@ -183,6 +183,10 @@ func (s *Study) Name(t Target) string {
 		if f := s.File(t.ID); f != nil {
 			return "reading of " + f.Name + ", " + t.Field
 		}
+	case "quality":
+		if i, field, ok := sourceField(t.Field); ok && i < len(QualityItems) {
+			return field + " of " + QualityItems[i] + ", case " + t.ID
+		}
 	case "case":
 		return fieldName(t.Field) + " of case " + t.ID
 	case ItemCondition, ItemRegion, ItemCriterion:
@@ -315,6 +319,8 @@ func (s *Study) enter(t Target, value string) (string, error) {
 		if t.Field == "pattern" {
 			return s.enterPattern(value)
 		}
+	case "quality":
+		return s.enterQuality(t.ID, t.Field, value)
 	case ItemCondition, ItemRegion, ItemCriterion, ItemApplication:
 		return s.enterItem(t, value)
 	case ItemRun:

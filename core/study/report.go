@@ -114,18 +114,23 @@ type Cell struct {
 	Balances    []BalanceLine `json:"balances"`
 	Grids       *Grids        `json:"grids"`
 	Sources     []SourceLine  `json:"sources"`
-	Inputs      []InputLine   `json:"inputs,omitempty"`
-	InputForm   string        `json:"input_form,omitempty"` // InputsCounted or InputsNominal, where compared
-	Members     *MemberLine   `json:"members,omitempty"`    // runs with sampled inputs
-	Shared      []SharedLine  `json:"shared,omitempty"`     // sources that act on both sides
-	Bound       *BoundLine    `json:"bound,omitempty"`      // what sources known as intervals do
-	Sampled     *SampledLine  `json:"sampled,omitempty"`    // the interval of the model error by sampling
-	Bounding    *Bounding     `json:"bounding,omitempty"`   // what u_D would change, where it is unknown
-	Degrees     Number        `json:"degrees"`              // effective degrees of freedom of a scalar; null where all are taken as known
-	K95         Number        `json:"k_95"`                 // factor that 95 % needs with them
+	Degrees     Number        `json:"degrees"` // effective degrees of freedom of a scalar; null where all are taken as known
+	K95         Number        `json:"k_95"`    // factor that 95 % needs with them
 	Requirement *Judgement    `json:"requirement"`
 	Tried       []string      `json:"tried,omitempty"` // alternatives that were evaluated
 	Fragile     []Fragility   `json:"fragile"`         // alternatives that change an outcome word
+
+	Inputs      []InputLine       `json:"inputs,omitempty"`
+	InputForm   string            `json:"input_form,omitempty"` // InputsCounted or InputsNominal, where compared
+	Members     *MemberLine       `json:"members,omitempty"`    // runs with sampled inputs
+	Shared      []SharedLine      `json:"shared,omitempty"`     // sources that act on both sides
+	Bound       *BoundLine        `json:"bound,omitempty"`      // what sources known as intervals do
+	Sampled     *SampledLine      `json:"sampled,omitempty"`    // the interval of the model error by sampling
+	Replicates  *ReplicateLine    `json:"replicates,omitempty"`
+	Consistency []ConsistencyLine `json:"consistency,omitempty"`
+	Resolution  *ResolutionLine   `json:"resolution,omitempty"` // of the data, where it is counted or too coarse
+	Quality     []QualityLine     `json:"quality,omitempty"`    // card of the case; empty where nothing was entered
+	Bounding    *Bounding         `json:"bounding,omitempty"`   // what u_D would change, where it is unknown
 
 	Residuals []ResidualLine `json:"residuals"`
 	RoundOff  *RoundOffLine  `json:"round_off"` // null where no second run of another precision is given
@@ -673,6 +678,54 @@ type SampledLine struct {
 	Minus   Number `json:"minus"`
 	Plus    Number `json:"plus"`
 	Shift   Number `json:"shift"` // of the mean of the data against their value
+}
+
+// ReplicateLine is what repeated readings show, level by level. Uncertainties
+// of a curve are root mean squares over its stations, degrees and groups the
+// least.
+type ReplicateLine struct {
+	Readings int         `json:"readings"`
+	Stations int         `json:"stations"`
+	Of       string      `json:"of"`     // what the data are: mean, or single reading
+	Counts   string      `json:"counts"` // the outermost level that varies
+	U        Number      `json:"u"`      // as counted
+	Degrees  Number      `json:"degrees"`
+	S        Number      `json:"s"`     // deviation of all readings
+	Plain    Number      `json:"plain"` // S over the root of their number: what readings without levels would give
+	Levels   []LevelLine `json:"levels"`
+}
+
+// LevelLine is one level of replication, from the outermost to the readings.
+type LevelLine struct {
+	Name      string `json:"name"`
+	Groups    int    `json:"groups"`
+	Degrees   Number `json:"degrees"`
+	Deviation Number `json:"deviation"` // root of the component of variance; null without degrees of freedom
+}
+
+// ConsistencyLine is a test of the data against themselves: two numbers, the
+// standard uncertainty of their difference, and its multiple.
+type ConsistencyLine struct {
+	Name     string `json:"name"`
+	Value    Number `json:"value"`
+	Expected Number `json:"expected"`
+	U        Number `json:"u"`
+	Ratio    Number `json:"ratio"`
+	Holds    bool   `json:"holds"`
+}
+
+// ResolutionLine is a step of which all values of the data are multiples.
+type ResolutionLine struct {
+	Step    Number `json:"step"`
+	U       Number `json:"u"` // step over the root of 12
+	Counted bool   `json:"counted"`
+}
+
+// QualityLine is one item of the data-quality card of a case.
+type QualityLine struct {
+	Item  string `json:"item"`
+	State string `json:"state"`
+	Note  string `json:"note"`
 }
 
 // Bounding says how far a word rests on the unknown u_D.

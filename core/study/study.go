@@ -57,6 +57,7 @@ type Study struct {
 	// the questions; empty when it is not stated.
 	Application []Condition `json:"application,omitempty"`
 	Log         []Entry     `json:"log"`
+	Quality     []Quality   `json:"quality,omitempty"` // data-quality cards of the cases
 	// Pattern says how names of files are read; see Naming.
 	Pattern string `json:"pattern,omitempty"`
 
@@ -138,7 +139,7 @@ type Slip struct {
 	BarsAs    Field      `json:"bars_as,omitzero"`     // BarsWidths or BarsLimits
 	Levels    Levels     `json:"levels,omitzero"`      // of repeated readings
 	Digitised Digitising `json:"digitised,omitzero"`   // of a curve read off a figure
-	FlowRate  Field      `json:"flow_rate,omitzero"`   // what the integral of the reference over its stations should be, in SI
+	FlowRate  Field      `json:"flow_rate,omitzero"`   // what the integral of the reference over its stations should be, in the units of its columns
 	FlowRateU Field      `json:"flow_rate_u,omitzero"` // standard uncertainty of it
 }
 

@@ -105,6 +105,31 @@ func (b Budget) Covariance(i, j int) float64 {
 	return sum
 }
 
+// Weighted returns the variance of the sum of weight times value over the
+// stations, wᵀ V w.
+func (b Budget) Weighted(weight []float64) float64 {
+	sum := 0.0
+	for i, v := range b.Variance {
+		sum += float64(float64(weight[i]*weight[i]) * v)
+	}
+	for _, c := range b.Common {
+		one := 0.0
+		for i, u := range c {
+			one += float64(weight[i] * u)
+		}
+		sum += float64(one * one)
+	}
+	rest := Budget{Variance: make([]float64, len(b.Variance)), Groups: b.Groups, Markov: b.Markov}
+	if len(b.Groups)+len(b.Markov) > 0 {
+		for i := range weight {
+			for j := range weight {
+				sum += float64(float64(weight[i]*weight[j]) * rest.Covariance(i, j))
+			}
+		}
+	}
+	return sum
+}
+
 // At returns the budget of some of the stations, in the order of rows.
 func (b Budget) At(rows []int) Budget {
 	part := Budget{Variance: pick(b.Variance, rows)}

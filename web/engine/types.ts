@@ -274,6 +274,7 @@ export interface SourceCard {
   of: string;
   pattern: string;
   entries: Entry[] | null;
+  leads: string[] | null;
 }
 
 export interface Entry {
@@ -370,18 +371,22 @@ export interface Cell {
   balances: BalanceLine[] | null;
   grids: Grids | null;
   sources: SourceLine[] | null;
+  degrees: number | null;
+  k_95: number | null;
+  requirement: Judgement | null;
+  tried?: string[];
+  fragile: Fragility[] | null;
   inputs?: InputLine[];
   input_form?: string;
   members?: MemberLine;
   shared?: SharedLine[];
   bound?: BoundLine;
   sampled?: SampledLine;
+  replicates?: ReplicateLine;
+  consistency?: ConsistencyLine[];
+  resolution?: ResolutionLine;
+  quality?: QualityLine[];
   bounding?: Bounding;
-  degrees: number | null;
-  k_95: number | null;
-  requirement: Judgement | null;
-  tried?: string[];
-  fragile: Fragility[] | null;
   residuals: ResidualLine[] | null;
   round_off: RoundOffLine | null;
   num_sums: NumSums | null;
@@ -460,6 +465,7 @@ export interface Table {
 export interface Sketch {
   own: ((number | null)[])[] | null;
   others: (((number | null)[])[] | null)[] | null;
+  zero: number | null;
 }
 
 export type Certainty = string;
@@ -718,6 +724,30 @@ export interface SourceLine {
   open: boolean;
 }
 
+export interface Judgement {
+  limit: number | null;
+  percent: number | null;
+  who: string;
+  date: string;
+  late: boolean;
+  outcome: string;
+  at: number | null;
+  u_val_needed: number | null;
+  toward: string;
+  u_num_needed: number | null;
+  u_num_reduction: number | null;
+  ways?: Way[];
+}
+
+export interface Fragility {
+  change: string;
+  what: string;
+  from: string;
+  outcome: string;
+  detail: string;
+  at?: number;
+}
+
 export interface InputLine {
   name: string;
   unit: string;
@@ -763,36 +793,45 @@ export interface SampledLine {
   shift: number | null;
 }
 
+export interface ReplicateLine {
+  readings: number;
+  stations: number;
+  of: string;
+  counts: string;
+  u: number | null;
+  degrees: number | null;
+  s: number | null;
+  plain: number | null;
+  levels: LevelLine[] | null;
+}
+
+export interface ConsistencyLine {
+  name: string;
+  value: number | null;
+  expected: number | null;
+  u: number | null;
+  ratio: number | null;
+  holds: boolean;
+}
+
+export interface ResolutionLine {
+  step: number | null;
+  u: number | null;
+  counted: boolean;
+}
+
+export interface QualityLine {
+  item: string;
+  state: string;
+  note: string;
+}
+
 export interface Bounding {
   what: string;
   word: string;
   u_d: number | null;
   at: number | null;
   after: string;
-}
-
-export interface Judgement {
-  limit: number | null;
-  percent: number | null;
-  who: string;
-  date: string;
-  late: boolean;
-  outcome: string;
-  at: number | null;
-  u_val_needed: number | null;
-  toward: string;
-  u_num_needed: number | null;
-  u_num_reduction: number | null;
-  ways?: Way[];
-}
-
-export interface Fragility {
-  change: string;
-  what: string;
-  from: string;
-  outcome: string;
-  detail: string;
-  at?: number;
 }
 
 export interface ResidualLine {
@@ -977,6 +1016,13 @@ export interface Way {
   cells?: number;
   cost?: number;
   readings?: number;
+}
+
+export interface LevelLine {
+  name: string;
+  groups: number;
+  degrees: number | null;
+  deviation: number | null;
 }
 
 export interface CorrelationPoint {

@@ -2,7 +2,7 @@
 // twelve curves that such an error could have made of the data, which show what
 // its pattern means.
 
-import type { Entry, SlipCard, SourceCard, View } from "../engine/types";
+import type { SlipCard, SourceCard, View } from "../engine/types";
 import { Chip } from "./chip";
 import { useDesk } from "./context";
 import { list } from "./desk";
@@ -52,24 +52,25 @@ function dataOf(view: View): SlipCard | undefined {
 }
 
 function SourceLine({ source, data, downward }: { source: SourceCard; data: SlipCard | undefined; downward: boolean }) {
-  const entries = new Map(list(source.entries).map((entry) => [entry.target.field.replace(/^\d+\./, ""), entry]));
-  const chip = (field: string) => {
-    const entry: Entry | undefined = entries.get(field);
-    return entry && <Chip entry={entry} bare />;
-  };
+  const entries = list(source.entries);
   return (
     <div class="source">
-      {entries.size === 0 ? (
+      {entries.length === 0 ? (
         <p>
           <Words text={source.text} />
         </p>
       ) : (
         <p>
-          {chip("name")}, of {chip("of")}: {chip("value")} {chip("basis")}, {chip("coverage")}, {chip("random")}, {chip("pattern")} between stations; from{" "}
-          {chip("origin")}. <Removal what="this source" request={{ kind: "remove source", target: source.target }} />
+          {entries.map((entry, i) => (
+            <span key={entry.target.field}>
+              {source.leads?.[i]}
+              <Chip entry={entry} bare />
+            </span>
+          ))}
+          . <Removal what="this source" request={{ kind: "remove source", target: source.target }} />
         </p>
       )}
-      {data !== undefined && source.of === "data" && <Ghost data={list(data.sketch.own)} common={source.pattern === "common"} downward={downward} />}
+      {data !== undefined && source.of === "data" && <Ghost data={list(data.sketch.own)} zero={data.sketch.zero} pattern={source.pattern} downward={downward} />}
       {source.share !== "" && (
         <p class="share">
           <Words text={source.share} />
