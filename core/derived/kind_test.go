@@ -4,6 +4,8 @@ import (
 	"errors"
 	"math"
 	"testing"
+
+	"weirmark/core/uncertainty"
 )
 
 // table returns a curve of n rows from lo to hi.
@@ -239,5 +241,44 @@ func TestSensitivities(t *testing.T) {
 	u[0] = 2
 	if _, ok := crossing.Sensitivities(table(11, -.1, .9, func(x float64) float64 { return x }), Settings{map[string]string{KeyDirection: RisingOnly, KeyWhich: First}, map[string]float64{}}, u, 1e-3); ok {
 		t.Error("a crossing that vanishes within u has slopes")
+	}
+}
+
+// First order against sampling, for scalars that are not linear in the values:
+// 10,000 draws of a Blasius profile whose rows have an independent u of 0.002
+// give the same standard deviation within 5 % (of which sampling is 0.7 %).
+func TestFirstOrderAgainstSampling(t *testing.T) {
+	c := blasius(.5, 10)
+	u := make([]float64, len(c.X))
+	for i := range u {
+		u[i] = .002
+	}
+	// An edge above all rows keeps the range of the integral the same in every
+	// draw; for δ99 it lies at 1.
+	for name, edge := range map[string]float64{"displacement thickness δ*": 1.01, "momentum thickness θ": 1.01, "shape factor H": 1.01, "boundary layer thickness δ99": 1} {
+		k, _ := Named(name)
+		p := Settings{map[string]string{KeyEdge: string(EdgeGiven)}, map[string]float64{"velocity": edge}}
+		slopes, ok := k.Sensitivities(c, p, u, 1e-4)
+		if !ok {
+			t.Fatal(name)
+		}
+		first := uncertainty.Combine(len(u), []uncertainty.Source{{U: u}}).Through(slopes)
+		g := uncertainty.NewGenerator(7)
+		sum, squares, n := 0.0, 0.0, 0.0
+		drawn := Curve{X: c.X, Y: make([]float64, len(c.Y))}
+		for range 10_000 {
+			for i, v := range c.Y {
+				drawn.Y[i] = v + .002*g.Normal()
+			}
+			v, err := k.value(drawn, p)
+			if err != nil {
+				continue
+			}
+			sum, squares, n = sum+v, squares+v*v, n+1
+		}
+		sampled := math.Sqrt((squares - sum*sum/n) / (n - 1))
+		if n < 9_900 || math.Abs(first/sampled-1) > .05 {
+			t.Errorf("%s: first order %v, %v draws %v", name, first, n, sampled)
+		}
 	}
 }

@@ -155,6 +155,9 @@ func (w *writer) subject() {
 	c := w.cell
 	w.say("For ")
 	w.item(c.Quantity, "acceptance of the quantity")
+	if c.Derived != nil {
+		w.say(" (" + c.Derived.Kind + ", taken from the curves)")
+	}
 	w.say(" at ")
 	w.item(c.Case, "acceptance of the case")
 	if c.Condition != "" {

@@ -104,6 +104,7 @@ func (w *work) deriveBoth(kind *derived.Kind) bool {
 		got, err := t.take(at)
 		return scalarCurve(t, c, got.Value), err
 	}
+	w.deriveOthers(kind)
 	w.becomeScalar(t, fromD.Value, fromS.Value, w.derivedRuns(t, fromS))
 	w.parts = parts
 	return true

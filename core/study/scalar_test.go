@@ -417,3 +417,47 @@ func TestAirfoilTaps(t *testing.T) {
 		t.Errorf("E %v, u of the taps %v, of all rows %v", c.Stations[0].E, sides[0].U, sides[2].U)
 	}
 }
+
+// A measured lift beside the lift of the taps, a further reference: where they
+// differ by more than k u_D the data do not agree with each other.
+func TestFurtherReferenceOfAScalar(t *testing.T) {
+	at := func(i int) float64 { return float64(i) / 20 }
+	profile := func(a float64) string {
+		return rows(21, at, func(x float64) float64 { return a * (1 - (x-.5)*(x-.5)) })
+	}
+	s := scalarPair("greatest value", nil, profile(1), profile(1.01), "m", "1")
+	text := []byte(profile(1.2))
+	s.Files = append(s.Files, study.File{ID: "o", Name: "other.csv", SHA256: study.Hash(text), Data: text})
+	p := s.Slips[1]
+	p.ID, p.File = "o", "o"
+	s.Slips = append(s.Slips, p)
+	c := only(t, s)
+	if !notice.Has(c.Notices, "references-differ") || len(c.Stations) != 1 {
+		t.Errorf("%+v", c.Notices)
+	}
+	within(t, "D", study.Number(c.Stations[0].D), 1.01, 1e-6)
+}
+
+// Runs with a changed input: the sensitivity is that of the scalar, taken from
+// each run at the stations of the data.
+func TestInputRunsOfAScalar(t *testing.T) {
+	at := func(i int) float64 { return float64(i) / 20 }
+	profile := func(a float64) string {
+		return rows(21, at, func(x float64) float64 { return a * (1 - (x-.5)*(x-.5)) })
+	}
+	s := scalarPair("greatest value", nil, profile(1), profile(1.01), "m", "1")
+	for id, a := range map[string]float64{"8": .92, "12": 1.08} {
+		text := []byte(profile(a))
+		s.Files = append(s.Files, study.File{ID: id, Name: id + ".csv", SHA256: study.Hash(text), Data: text})
+		p := s.Slips[0]
+		p.ID, p.File, p.Role, p.Input, p.InputAt = id, id, entered(study.InputRun), entered("speed"), entered(id)
+		s.Slips = append(s.Slips, p)
+	}
+	s.Questions[0].Sources = append(s.Questions[0].Sources, study.Source{Name: "speed", Of: study.OfInput, Input: "speed", Unit: "m/s", Nominal: 10, Value: .5, Basis: study.Absolute, Coverage: entered("1")})
+	c := only(t, s)
+	if len(c.Inputs) != 1 {
+		t.Fatalf("%+v\n%+v", c.Inputs, c.Notices)
+	}
+	within(t, "sensitivity", c.Inputs[0].Sensitivity, .04, 1e-6)
+	within(t, "u_input", c.Stations[0].UInput, .02, 1e-6)
+}
