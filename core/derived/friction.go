@@ -130,7 +130,14 @@ func takeWall(c Curve, p Settings) (Scalar, error) {
 	if f.Rows == 0 {
 		return Scalar{}, ErrWall
 	}
-	return none(f.UTau), nil
+	s := none(f.UTau)
+	for i, y := range c.X {
+		if y > 0 {
+			s.Effects = []Effect{{Name: "the row nearest to the wall alone", Change: math.Sqrt(p.Numbers["viscosity"]*c.Y[i]/y) - f.UTau, Factor: limits}}
+			break
+		}
+	}
+	return s, nil
 }
 
 // CrossingU returns the standard uncertainty of the place of a crossing from

@@ -108,6 +108,8 @@ type Kind struct {
 	// The value has the unit of x to the power X times that of y to the power Y
 	// times that of Card, where the kind takes a quantity of the case.
 	X, Y       int
+	Difference bool   // the value is a difference: of temperatures in °C it is in K
+	Pure       bool   // the values must be pure numbers
 	Velocity   bool   // the value is a velocity in m/s whatever the columns are
 	Second     string // what a second column holds; empty: none is used
 	Loop       bool   // a closed contour in order, with its second coordinate

@@ -217,6 +217,24 @@ func TestOnto(t *testing.T) {
 	}
 }
 
+// The moment of an ellipse about its centre in potential flow is that of the
+// couple π (a² - b²) sin 2α per chord squared, nose up, with any circulation
+// (theorem of Blasius; exact). About the leading edge the lift adds half a
+// chord of nose down.
+func TestMomentOfAnEllipse(t *testing.T) {
+	alpha := .07
+	name := "section pitching moment coefficient"
+	couple := math.Pi * (.25 - .0225) * math.Sin(2*alpha)
+	for _, circulation := range []bool{true, false} {
+		x, y, cp := ellipse(3200, .3, alpha, circulation)
+		c := Curve{X: x, Y: cp, Second: y}
+		near(t, "about the centre", take(t, name, c, nil, map[string]float64{NumberAngle: alpha, "about": .5}).Value, couple, 1e-4)
+		normal := take(t, Lift, c, nil, map[string]float64{NumberAngle: 0}).Value
+		near(t, "about the nose", take(t, name, c, nil, map[string]float64{NumberAngle: alpha}).Value, couple-normal/2, 1e-4)
+		near(t, PressureDrag, take(t, PressureDrag, c, nil, map[string]float64{NumberAngle: alpha}).Value, 0, 1e-4)
+	}
+}
+
 // First-order slopes against the formula: δ* with a fixed edge is a sum with
 // the weights of the trapezium rule over -U.
 func TestSensitivities(t *testing.T) {

@@ -202,7 +202,10 @@ func takeLayer(of func(Layer) float64) func(Curve, Settings) (Scalar, error) {
 			return Scalar{}, err
 		}
 		s := none(of(l))
-		if math.IsNaN(s.Value) {
+		switch {
+		case math.IsNaN(s.Value) && l.Reached:
+			return Scalar{}, ErrProfile // no velocity below the edge
+		case math.IsNaN(s.Value):
 			return Scalar{}, ErrEdge
 		}
 		s.Edge, s.Overshoot, s.Bound = l.Edge, l.Overshoot, !l.Reached

@@ -113,7 +113,7 @@ var kinds = []Kind{
 
 	{Name: "drag coefficient of a wake", Formula: "Cd = (2/L) ∫u/U (1 − u/U) dy, U from the ends or as given; pressure recovered, no fluctuations", Range: Between, Sampled: true,
 		Parameters: []Parameter{{Key: "length", Label: "reference length L", Unit: "x", Needed: true}, {Key: "velocity", Label: "undisturbed velocity, else mean of the ends", Unit: "y"}}, take: takeWakeDrag},
-	{Name: "greatest deficit of a wake", Formula: "U − u_min, U the mean of the two ends", Y: 1, take: takeDeficit},
+	{Name: "greatest deficit of a wake", Formula: "U − u_min, U the mean of the two ends", Y: 1, Difference: true, take: takeDeficit},
 	{Name: "full width at half height", Formula: "distance between the places where the departure from the mean of the ends is half its extreme", X: 1, Sampled: true, take: takeWidth},
 	{Name: "slope of a straight line", Formula: "dy/dx by least squares, e.g. spread of a jet from half-widths over x", X: -1, Y: 1, Sampled: true, take: takeSlope},
 
@@ -121,10 +121,10 @@ var kinds = []Kind{
 	{Name: "flow-weighted mean", Formula: "∫φ w dx / ∫w dx, w the mass flux (round: weight |x| w): bulk temperature, mass-averaged total pressure", Y: 1, Range: Between, Sampled: true, Second: "mass flux, or velocity at constant density", Parameters: []Parameter{shapes}, take: takeFlowMean},
 	{Name: "integral along the line", Formula: "∫φ dx, trapezium", X: 1, Y: 1, Range: Between, Sampled: true, take: takeIntegral},
 	{Name: "coefficient of variation", Formula: "CoV = √(mean of (c − c̄)²)/c̄, means along the line (round: weight |x|)", Range: Between, Sampled: true, Parameters: []Parameter{shapes}, take: takeVariation(false)},
-	{Name: "mixing index", Formula: "1 − √(mean of (c − c̄)² / (c̄ (1 − c̄))), c a fraction from 0 to 1", Range: Between, Sampled: true, Parameters: []Parameter{shapes}, take: takeVariation(true)},
+	{Name: "mixing index", Formula: "1 − √(mean of (c − c̄)² / (c̄ (1 − c̄))), c a fraction from 0 to 1", Pure: true, Range: Between, Sampled: true, Parameters: []Parameter{shapes}, take: takeVariation(true)},
 	{Name: "recirculation ratio", Formula: "∫max(−u, 0) dx / ∫max(u, 0) dx (round: weight |x|)", Range: Between, Sampled: true, Signed: true, Parameters: []Parameter{shapes}, take: takeBackflow},
 
-	{Name: "fall between the ends", Formula: "first value less last value, e.g. pressure loss", Y: 1, Range: Between, take: takeFall},
+	{Name: "fall between the ends", Formula: "first value less last value, e.g. pressure loss", Y: 1, Difference: true, Range: Between, take: takeFall},
 	{Name: "loss coefficient", Formula: "ζ = (first value − last value)/q", Range: Between, Parameters: []Parameter{{Key: "scale", Label: "dynamic pressure q", Unit: "y", Needed: true}}, take: takeLoss},
 	{Name: "mean residence time", Formula: "t̄ = ∫t E dt / ∫E dt", X: 1, Range: Between, Sampled: true, take: takeResidence(false)},
 	{Name: "variance of the residence time", Formula: "σ² = ∫(t − t̄)² E dt / ∫E dt", X: 2, Range: Between, Sampled: true, take: takeResidence(true)},

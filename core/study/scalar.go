@@ -288,10 +288,14 @@ func (t *taking) derivedUnit() bool {
 			return false
 		}
 		t.unit = t.y
+	case k.Pure && !t.y.Same(quantity.One):
+		return false
 	case k.X == 0 && k.Y == 0:
 		t.unit = unit{quantity.One, "1"}
 	case k.X == 1 && k.Y == 0:
 		t.unit = t.x
+	case k.X == 0 && k.Difference && t.y.Offset != 0:
+		t.unit = unit{quantity.Unit{Symbol: "K", Dimension: t.y.Dimension, Factor: 1}, "K"}
 	case k.X == 0:
 		t.unit = t.y
 	default:
@@ -347,7 +351,7 @@ func (w *work) loopScales(t *taking, settings *[]DerivedSetting) bool {
 	}
 	t.length, t.pressure = length, pressure
 	alpha, known := w.e.cardValue(w.q.Case, Angle, quantity.Dimension{0, 0, 0, 0, 1})
-	if !known {
+	if !known && !notice.Has(w.cell.Notices, "loop-angle") {
 		w.tell(notice.New("loop-angle", w.q.label()))
 	}
 	t.settings.Numbers[derived.NumberAngle] = alpha
@@ -421,9 +425,9 @@ func (w *work) several(t *taking, c *curve, from derived.Curve, got derived.Scal
 	}
 	noise := "not known"
 	if u := w.columnU(c); u > 0 {
-		noise = quantity.Text(t.y.StepFromSI(u), 2)
+		noise = quantity.Text(t.y.StepFromSI(u), 2) + suffix(t.y.symbol)
 	}
-	w.need(2, true, "which of the crossings is meant", w.q.target("derive.which"), "derive-several", len(places), w.e.study.fileName(c.slip), strings.Join(places, ", "), noise, t.y.symbol)
+	w.need(2, true, "which of the crossings is meant", w.q.target("derive.which"), "derive-several", len(places), w.e.study.fileName(c.slip), strings.Join(places, ", "), noise)
 }
 
 // columnU is the root mean square of the uncertainty column of a curve.
@@ -531,6 +535,9 @@ func (w *work) runAtStations(t *taking, c *curve, reference derived.Curve) (deri
 func (w *work) wholeOf(t *taking, c *curve, at []float64) (derived.Curve, bool) {
 	second, ok := w.second(t, c)
 	whole := derived.Curve{X: inUnit(c.x, c.xUnit, t.x), Y: inUnit(c.y, c.yUnit, t.y), Second: second}
+	if gaps := len(whole.Y) - len(known(whole.Y)); gaps > 0 && !c.slip.Branch.Given() {
+		w.tell(notice.New("derive-gap", gaps, w.e.study.fileName(c.slip), t.kind.Name))
+	}
 	if !ok || at == nil || t.kind.Range == derived.Whole {
 		return whole, ok
 	}

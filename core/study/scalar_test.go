@@ -461,3 +461,49 @@ func TestInputRunsOfAScalar(t *testing.T) {
 	within(t, "sensitivity", c.Inputs[0].Sensitivity, .04, 1e-6)
 	within(t, "u_input", c.Stations[0].UInput, .02, 1e-6)
 }
+
+// A fall of temperatures in °C is in K, a mixing index of a temperature is
+// refused, and an integral has the product of the units.
+func TestUnitsOfScalars(t *testing.T) {
+	at := func(i int) float64 { return float64(i) / 20 }
+	line := rows(21, at, func(x float64) float64 { return 30 - 10*x })
+	for _, row := range []struct {
+		kind, x, y, unit string
+		want             float64
+	}{
+		{"fall between the ends", "m", "°C", "K", 10},
+		{"mean along the line", "m", "°C", "°C", 25},
+		{"integral along the line", "mm", "m/s", "(m/s) (mm)", 25},
+		{"slope of a straight line", "m", "Pa", "(Pa)/(m)", -10},
+		{"variance of the residence time", "s", "1", "(s)^2", .3 - .49*4/9},
+		{"coefficient of variation", "mm", "m/s", "1", .4 / math.Sqrt(12)},
+		{"mixing index", "m", "°C", "", 0},
+		{"friction velocity from the log law", "1", "1", "", 0},
+		{"integral along the line", "m", "°C", "", 0},
+	} {
+		c := only(t, scalarPair(row.kind, map[string]string{"viscosity": "1e-5"}, line, line, row.x, row.y))
+		if row.unit == "" {
+			if !notice.Has(c.Notices, "derive-unit") || c.Summary != nil {
+				t.Errorf("%s of %s was not refused: %+v", row.kind, row.y, c.Notices)
+			}
+			continue
+		}
+		if c.Unit != row.unit || row.want != 0 && len(c.Stations) != 1 {
+			t.Errorf("%s: unit %q, want %q; %+v", row.kind, c.Unit, row.unit, c.Notices)
+			continue
+		}
+		if row.want != 0 {
+			within(t, row.kind, study.Number(c.Stations[0].D), row.want, 1e-3)
+		}
+	}
+}
+
+// A gap is crossed and told; too few rows are refused.
+func TestGapsOfScalars(t *testing.T) {
+	at := func(i int) float64 { return float64(i) / 20 }
+	line := rows(21, at, func(x float64) float64 { return 3 - x })
+	s := scalarPair("mean along the line", nil, strings.Replace(line, "0.5,2.5", "0.5,", 1), line, "m", "1")
+	if c := only(t, s); !notice.Has(c.Notices, "derive-gap") {
+		t.Errorf("%+v", c.Notices)
+	}
+}
