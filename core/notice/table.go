@@ -280,6 +280,7 @@ var table = map[string]row{
 	"sampling-none":           {Stop, "About %s independent samples of %s: too few for an uncertainty of the mean. None was computed. Average longer."},
 	"sampling-startup":        {Note, "%s shows a start-up over more than half of the record. The second half was used. Average longer."},
 	"sampling-period":         {Note, "The declared period %s %s of %s leaves fewer than %d whole cycles, or fewer than two rows each. It was not used. Average longer, or correct it."},
+	"residual-zero":           {Note, "%d rows of %s are zero or less and have no decades. They were left out. More digits would show them."},
 	"residual-stalled":        {Note, "%s fell by %s decades and then stalled (%s decades per %s %s). A residual gives no uncertainty of a quantity. Look at its monitor."},
 	"balance-open":            {Stop, "%s imbalance %s %% of %s (%s). Its effect on the quantity is unknown: continue the run, or enter an effect with a reason."},
 	"balance-missing":         {Ask, "%s balance: %d fluxes hold no number. It was not judged. Blank is not zero: give them."},

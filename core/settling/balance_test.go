@@ -150,9 +150,10 @@ func TestDepth(t *testing.T) {
 		{"stalled", stalled, true, 2, 0, []string{"residual-stalled"}},
 		{"stalled deep", deep, true, 6, 0, []string{}},
 		{"rising", made(600, func(i float64) float64 { return math.Pow(10, i/100) }), true, -(599-14.5)/100 + 0.29, -2, []string{"residual-stalled"}},
-		{"some zeros", append([]float64{0, -1}, falling...), false, (599 - 14.5) / 100, 2, []string{"monitor-rows"}},
+		{"some zeros", append([]float64{0, -1}, falling...), false, (599 - 14.5) / 100, 2, []string{"residual-zero"}},
 		{"few rows", falling[:10], false, math.NaN(), math.NaN(), []string{"monitor-short"}},
-		{"ends at zero", append(slices.Clone(falling), 0), false, math.NaN(), math.NaN(), []string{"monitor-broken"}},
+		{"ends at zero", append(slices.Clone(falling), 0), false, (599 - 14.5) / 100, 2, []string{"residual-zero"}},
+		{"ends without a number", append(slices.Clone(falling), math.NaN()), false, math.NaN(), math.NaN(), []string{"monitor-broken"}},
 	} {
 		d := Depth(Series{Value: row.y}, Options{Name: "Continuity"})
 		same := func(got, want, tolerance float64) bool {

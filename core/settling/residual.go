@@ -32,16 +32,13 @@ const (
 // less than three decades. Residuals are positive; rows that are not are left
 // out. A depth says nothing of the error of a quantity: that needs a monitor.
 func Depth(s Series, opt Options) Residual {
-	logs := Series{At: s.At, Value: make([]float64, len(s.Value))}
-	for i, v := range s.Value {
-		logs.Value[i] = math.NaN()
-		if v > 0 {
-			logs.Value[i] = math.Log10(v)
-		}
-	}
+	logs, none := logarithms(s)
 	r := newRecord(logs, opt)
 	nan := math.NaN()
 	d := Residual{Decades: nan, PerFirst: nan, PerLast: nan, Per: nan, Window: [2]float64{nan, nan}, Notices: r.notices}
+	if none > 0 {
+		d.Notices = append(d.Notices, notice.New("residual-zero", none, opt.name()))
+	}
 	n := len(r.y)
 	if r.broken || n < leastRows {
 		if !r.broken {
@@ -68,4 +65,22 @@ func Depth(s Series, opt Options) Residual {
 		d.Notices = append(d.Notices, notice.New("residual-stalled", opt.name(), quantity.Text(d.Decades, 2), quantity.Text(d.PerLast, 2), quantity.Text(d.Per, 3), opt.axis()))
 	}
 	return d
+}
+
+// logarithms returns the logarithms of the positive rows at their places, and
+// how many rows are zero or less. Rows without a number stay as they are: at the
+// end they are the mark of a run that broke down, which zeros are not.
+func logarithms(s Series) (logs Series, none int) {
+	for i, v := range s.Value {
+		if v <= 0 {
+			none++
+			continue
+		}
+		at := float64(i + 1)
+		if s.At != nil {
+			at = s.At[i]
+		}
+		logs.At, logs.Value = append(logs.At, at), append(logs.Value, math.Log10(v))
+	}
+	return logs, none
 }

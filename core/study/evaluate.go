@@ -135,7 +135,7 @@ func (s *Study) uses(id string) []string {
 		if p.File != id || p.Role.Value == Unused || !p.Role.Given() {
 			continue
 		}
-		text := p.Role.Value + ": " + p.Quantity.Value
+		text := p.Role.Value + ": " + cmp.Or(p.Quantity.Value, "all quantities")
 		if p.Model.Given() && p.Role.Value != Reference {
 			text += ", model " + p.Model.Value
 		}

@@ -376,6 +376,31 @@ func TestResiduals(t *testing.T) {
 	}
 }
 
+// A residual that is written as zero at the end, or in between, is no run that
+// broke down: these rows are left out, and that is told.
+func TestResidualOfZero(t *testing.T) {
+	var b strings.Builder
+	b.WriteString("iteration,continuity\n")
+	for i := range 200 {
+		v := math.Pow(10, -float64(i)/40)
+		if i > 180 || i == 50 {
+			v = 0
+		}
+		fmt.Fprintf(&b, "%d,%.6e\n", i+1, v)
+	}
+	s := monitored(map[string]string{"G4": history(settled(.02995))})
+	addTable(s, "zero.csv", b.String(), study.Slip{Role: entered(study.Residual), Model: entered("B"), Grid: entered("G4"),
+		X: study.ColumnUse{Column: entered("iteration")}, Y: study.ColumnUse{Column: entered("continuity")}})
+	r := study.Evaluate(s, study.Options{})
+	c := r.Cells[1]
+	if len(c.Residuals) != 1 || math.Abs(float64(c.Residuals[0].Decades)-180./40) > .15 || !notice.Has(c.Notices, "residual-zero") || notice.Has(c.Notices, "monitor-broken") || c.Withheld {
+		t.Errorf("%+v, %+v", c.Residuals, c.Open)
+	}
+	if uses := r.Files[len(r.Files)-1].Uses; len(uses) != 1 || uses[0] != "residual: all quantities, model B, grid G4" {
+		t.Errorf("uses %q", uses)
+	}
+}
+
 func TestResidualsAreProposed(t *testing.T) {
 	var b strings.Builder
 	b.WriteString("iteration,continuity,momentum\n")
