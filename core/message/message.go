@@ -75,6 +75,10 @@ func Types() []any { return []any{Request{}, Reply{}} }
 // Session holds the study a page works on. The zero value holds none; requests
 // that need no study work on it as well.
 type Session struct {
+	// Progress, where a host sets it, is called now and then while a large file
+	// is read, with the bytes done of all.
+	Progress func(done, total int)
+
 	study    *study.Study
 	past     []step // to go back to
 	future   []step // to go forward to
@@ -174,7 +178,7 @@ func (s *Session) readOnce(f study.File) tablefile.File {
 	if have, ok := s.read[f.Key()]; ok && have.Size == len(f.Data) {
 		return have
 	}
-	read := study.Read(f)
+	read := study.ReadTelling(f, s.Progress)
 	s.keep(f, read)
 	return read
 }

@@ -4,6 +4,7 @@ import (
 	"strconv"
 
 	"weirmark/core/notice"
+	"weirmark/core/quantity"
 	"weirmark/core/study"
 )
 
@@ -169,7 +170,7 @@ func drop(s *Session, q *Request, attached [][]byte, r *Reply) ([][]byte, error)
 				return err
 			}
 			f := study.File{Name: name, Data: data}
-			read := study.Read(f)
+			read := study.ReadTelling(f, s.Progress)
 			f.SHA256 = read.SHA256
 			s.keep(f, read)
 			n.Add(name, data, read, q.At)
@@ -225,9 +226,18 @@ func save(s *Session, _ *Request, _ [][]byte, r *Reply) ([][]byte, error) {
 	return [][]byte{data}, nil
 }
 
+// mostCopied is the number of bytes of files above which no copy is made: the
+// document writes them as text, which would take several times their memory.
+const mostCopied = 64 << 20
+
 // copyStudy returns the study document for the host's own use, such as a new
 // start; the study does not count as saved by it.
 func copyStudy(s *Session, q *Request, attached [][]byte, r *Reply) ([][]byte, error) {
+	if s.study != nil {
+		if size := s.study.Size(); size > mostCopied {
+			return nil, notice.New("study-uncopied", quantity.Text(float64(size)/1e6, 3))
+		}
+	}
 	saved := s.saved
 	files, err := save(s, q, attached, r)
 	s.saved = saved

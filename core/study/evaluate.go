@@ -30,11 +30,21 @@ type Options struct {
 }
 
 // Read reads the bytes of a file.
-func Read(f File) tablefile.File {
+func Read(f File) tablefile.File { return ReadTelling(f, nil) }
+
+// ReadTelling is Read that tells, now and then, how many bytes are done of all.
+func ReadTelling(f File, tell func(done, total int)) tablefile.File {
+	options := tablefile.Options{}
 	if f.Reading != nil {
-		return tablefile.Read(f.Name, f.Data, *f.Reading)
+		options = *f.Reading
 	}
-	return tablefile.Read(f.Name, f.Data, tablefile.Options{})
+	if tell != nil {
+		options.Progress = func(done, total int) bool {
+			tell(done, total)
+			return true
+		}
+	}
+	return tablefile.Read(f.Name, f.Data, options)
 }
 
 // evaluation is one run of Evaluate.

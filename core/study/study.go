@@ -469,6 +469,15 @@ func (s *Study) Question(caseName, quantity string) *Question {
 	return nil
 }
 
+// Size returns the number of bytes of all files.
+func (s *Study) Size() int {
+	size := 0
+	for _, f := range s.Files {
+		size += len(f.Data)
+	}
+	return size
+}
+
 // File returns the file of an ID, or nil.
 func (s *Study) File(id string) *File {
 	for i := range s.Files {

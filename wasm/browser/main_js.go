@@ -7,6 +7,6 @@ import (
 )
 
 func main() {
-	session := &message.Session{}
+	session := &message.Session{Progress: bridge.Progress}
 	bridge.Serve(session.Handle)
 }

@@ -2,6 +2,7 @@
 // and the others waiting in order; cancel; and a new start with the last study
 // where the core has ended.
 
+import type { Attached } from "./exchange";
 import { openHost, type Host } from "./host";
 import { compiledCore, workerSource } from "./source";
 import type * as message from "./types";
@@ -54,7 +55,7 @@ export interface Options {
 interface Waiting {
   number: number;
   request: Request;
-  files: Uint8Array<ArrayBuffer>[];
+  files: Attached[];
   resolve(reply: Reply<never>): void;
   reject(cause: Error): void;
 }
@@ -79,6 +80,9 @@ export class Engine {
     void this.#open();
   }
 
+  /** Hears how many bytes of a large file are read of all. */
+  progress: (done: number, total: number) => void = () => {};
+
   /** What the engine does now. */
   get change(): Change {
     return this.#change;
@@ -97,10 +101,10 @@ export class Engine {
   }
 
   /**
-   * Asks the core. The files are given away: their bytes move to the worker.
+   * Asks the core. Bytes are given away: they move to the worker.
    * Rejects with Interrupted where no reply will come.
    */
-  ask<R extends object = message.Reply>(request: Request, files: Uint8Array<ArrayBuffer>[] = []): Promise<Reply<R>> {
+  ask<R extends object = message.Reply>(request: Request, files: Attached[] = []): Promise<Reply<R>> {
     if (this.#change.state === "stopped") {
       return Promise.reject(new Interrupted(this.#change.message));
     }
@@ -142,6 +146,7 @@ export class Engine {
       }
       const host = await openHost(module, workerSource(), {
         reply: (number, reply, files) => start === this.#start && this.#reply(number, reply, files),
+        progress: (done, total) => start === this.#start && this.progress(done, total),
         ended: (detail) => start === this.#start && this.#ended(detail),
       });
       if (start !== this.#start) {

@@ -2,17 +2,19 @@
 // browser refuses a worker. Both take one request at a time.
 
 import { startCore } from "./core";
-import { buffers, type FromWorker, type ToWorker } from "./exchange";
+import { buffers, type Attached, type FromWorker, type ToWorker } from "./exchange";
 
 export interface Host {
   /** Hands over one request; its bytes may be gone afterwards. */
-  send(number: number, request: Uint8Array<ArrayBuffer>, attached: Uint8Array<ArrayBuffer>[]): void;
+  send(number: number, request: Uint8Array<ArrayBuffer>, attached: Attached[]): void;
   /** Stops the core wherever it is and gives its memory back, or says that it cannot. */
   stop(): boolean;
 }
 
 export interface Listener {
   reply(number: number, reply: Uint8Array<ArrayBuffer>, files: Uint8Array<ArrayBuffer>[]): void;
+  /** So many bytes of a file are read of all. */
+  progress(done: number, total: number): void;
   /** The core has ended by itself; the host is of no more use. */
   ended(detail: string): void;
 }
@@ -95,6 +97,9 @@ function inWorker(module: WebAssembly.Module, source: string, listener: Listener
         case "reply":
           listener.reply(data.number, data.reply, data.files);
           return;
+        case "progress":
+          listener.progress(data.done, data.total);
+          return;
         case "ended":
           if (started) {
             listener.ended(data.detail);
@@ -111,9 +116,10 @@ async function inPage(module: WebAssembly.Module, listener: Listener): Promise<H
   return {
     send(number, request, attached) {
       // Later, so that the page can show that it is at work.
-      setTimeout(() => {
+      setTimeout(async () => {
         try {
-          const { reply, files } = handle(request, attached);
+          const bytes = await Promise.all(attached.map(async (one) => (one instanceof Blob ? new Uint8Array(await one.arrayBuffer()) : one)));
+          const { reply, files } = handle(request, bytes);
           listener.reply(number, reply, files);
         } catch (cause) {
           listener.ended(cause instanceof Error ? cause.message : String(cause));

@@ -80,6 +80,8 @@ export interface About {
 export interface ReadReply {
   file: string;
   sha256: string;
+  stated?: Stated[];
+  cards?: string[];
   tables: ReadTable[] | null;
   notices: Finding[] | null;
 }
@@ -144,6 +146,13 @@ export interface View {
 }
 
 export type Severity = string;
+
+export interface Stated {
+  key: string;
+  value: string;
+  table?: string;
+  line: number;
+}
 
 export interface ReadTable {
   name: string;

@@ -9,7 +9,13 @@ interface WorkerScope {
   postMessage(message: FromWorker, transfer?: Transferable[]): void;
 }
 
-const scope = globalThis as unknown as WorkerScope;
+/** Reads a file at once; it exists in workers only, and the page's types lack it. */
+declare class FileReaderSync {
+  readAsArrayBuffer(file: Blob): ArrayBuffer;
+}
+
+const scope = globalThis as unknown as WorkerScope & { weirmarkProgress(done: number, total: number): void };
+scope.weirmarkProgress = (done, total) => scope.postMessage({ is: "progress", done, total });
 let handle: Handle | undefined;
 
 function ended(cause: unknown): void {
@@ -28,7 +34,8 @@ scope.onmessage = ({ data }) => {
     if (handle === undefined) {
       throw new Error("a request came before the core had started");
     }
-    const { reply, files } = handle(data.request, data.attached);
+    const attached = data.attached.map((one) => (one instanceof Blob ? new Uint8Array(new FileReaderSync().readAsArrayBuffer(one)) : one));
+    const { reply, files } = handle(data.request, attached);
     scope.postMessage({ is: "reply", number: data.number, reply, files }, buffers([reply, ...files]));
   } catch (cause) {
     ended(cause);

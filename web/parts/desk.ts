@@ -3,6 +3,7 @@
 // core's; every change here is a request.
 
 import { Engine, Interrupted } from "../engine/engine";
+import type { Attached } from "../engine/exchange";
 import type { Open, Reply, Request, Target, View } from "../engine/types";
 
 type Files = Uint8Array<ArrayBuffer>[];
@@ -44,6 +45,9 @@ function now(): string {
 /** How long the core may be at work before the page offers to stop it. */
 const patience = 4000;
 
+/** The size of a file, in bytes, whose reading is told from the start. */
+const sizeable = 5e7;
+
 /** How long the study has to rest before a copy of it is kept for a new start. */
 const rest = 800;
 
@@ -55,6 +59,8 @@ export class Desk {
   byHand = "";
   /** The core has been at work for long; the person may stop it. */
   slow = false;
+  /** Bytes read of a large file, of all. */
+  progress: { done: number; total: number } | undefined;
   layout: Layout = {
     theme: "auto",
     mono: false,
@@ -78,6 +84,15 @@ export class Desk {
   constructor(changed: () => void) {
     this.#changed = changed;
     matchMedia("(prefers-color-scheme: dark)").addEventListener("change", () => void this.show({}));
+    this.engine.progress = (done, total) => {
+      this.progress = { done, total };
+      if (total > sizeable) {
+        this.slow = true; // it will be: no need to wait and see
+      }
+      if (this.slow) {
+        this.#changed();
+      }
+    };
     this.engine.watch(({ state, message }) => {
       if (state === "restarted" || state === "stopped") {
         this.tell(message);
@@ -124,7 +139,7 @@ export class Desk {
   }
 
   /** Asks the core; the page is busy until the answer is on it. */
-  async ask(asked: Asked, files: Files = []): Promise<{ reply: Reply; files: Files } | undefined> {
+  async ask(asked: Asked, files: Attached[] = []): Promise<{ reply: Reply; files: Files } | undefined> {
     if (this.#asking++ === 0) {
       this.#patience = setTimeout(() => this.#long(true), patience);
     }
@@ -164,6 +179,9 @@ export class Desk {
   }
 
   #long(slow: boolean): void {
+    if (!slow) {
+      this.progress = undefined;
+    }
     if (this.slow !== slow) {
       this.slow = slow;
       this.#changed();
@@ -171,7 +189,7 @@ export class Desk {
   }
 
   /** Asks for a change of the study and keeps a copy of what it comes to. */
-  async change(asked: Asked, files: Files = []): Promise<boolean> {
+  async change(asked: Asked, files: Attached[] = []): Promise<boolean> {
     const answer = await this.ask(asked, files);
     const done = answer?.reply.view !== undefined;
     if (done) {
@@ -191,7 +209,7 @@ export class Desk {
   }
 
   /** Opens a study document. */
-  async open(name: string, study: Uint8Array<ArrayBuffer>): Promise<void> {
+  async open(name: string, study: Attached): Promise<void> {
     this.#begin(await this.change({ kind: "open", names: [name] }, [study]), false);
   }
 
@@ -205,7 +223,7 @@ export class Desk {
   }
 
   /** Takes files into the study; into a new one where the demo is as it came. */
-  async drop(names: string[], files: Files): Promise<void> {
+  async drop(names: string[], files: Attached[]): Promise<void> {
     const aside = this.untouched;
     if (aside) {
       await this.ask({ kind: "new" });
@@ -265,7 +283,13 @@ export class Desk {
     clearTimeout(this.#resting);
     this.#resting = setTimeout(() => {
       this.engine.ask({ kind: "copy" }).then(
-        ({ files }) => files[0] && this.engine.remember(files[0]),
+        ({ reply, files }) => {
+          if (files[0] !== undefined) {
+            this.engine.remember(files[0]);
+          } else if (reply.error !== undefined) {
+            this.tell(reply.error.text);
+          }
+        },
         () => {},
       );
     }, rest);

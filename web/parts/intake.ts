@@ -1,12 +1,16 @@
 // How files come onto the page: dropped anywhere, chosen, a folder, pasted, or
 // typed. They all end in one request.
 
+import type { Attached } from "../engine/exchange";
 import type { Desk } from "./desk";
 
 interface Found {
   name: string;
-  bytes: Uint8Array<ArrayBuffer>;
+  bytes: Attached;
 }
+
+/** Files above this size go to the core as they are, so that the page never holds their bytes. */
+const large = 1 << 22;
 
 /** A study document says so in its first field. */
 const study = /^\s*\{\s*"format":\s*"weirmark study"/;
@@ -17,13 +21,14 @@ export async function take(desk: Desk, files: File[]): Promise<void> {
   const failed: string[] = [];
   for (const file of files) {
     try {
-      found.push({ name: file.name, bytes: new Uint8Array(await file.arrayBuffer()) });
+      await file.slice(0, 1).arrayBuffer(); // fails for what is no file
+      found.push({ name: file.name, bytes: file.size > large ? file : new Uint8Array(await file.arrayBuffer()) });
     } catch {
       failed.push(file.name);
     }
   }
   const [first] = found;
-  if (found.length === 1 && study.test(new TextDecoder().decode(first!.bytes.subarray(0, 200)))) {
+  if (found.length === 1 && study.test(await new Blob([first!.bytes]).slice(0, 200).text())) {
     if (mayLeave(desk)) {
       await desk.open(first!.name, first!.bytes);
     }

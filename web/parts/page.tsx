@@ -64,7 +64,7 @@ export function Page({ desk }: { desk: Desk }) {
         </div>
         {desk.slow && (
           <p class="message" role="status">
-            The engine is still at work. <button onClick={() => desk.stop()}>Stop it</button> and go on with the study as it was before.
+            The engine is still at work{desk.progress === undefined ? "" : `: ${Math.round(desk.progress.done / 1e6)} of ${Math.round(desk.progress.total / 1e6)} MB are read`}. <button onClick={() => desk.stop()}>Stop it</button> and go on with the study as it was before.
           </p>
         )}
         <Spoken text={view.spoken} />

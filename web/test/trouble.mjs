@@ -1,5 +1,10 @@
 // The page with bad files, lost workers, a missing clipboard and unsaved work.
 
+import { execFileSync } from "node:child_process";
+import { open, mkdtemp, rm, stat } from "node:fs/promises";
+import { tmpdir } from "node:os";
+import path from "node:path";
+
 import { holds, same } from "./harness.mjs";
 import { pause } from "./person.mjs";
 
@@ -16,6 +21,37 @@ const keepWorkers = () => {
     }
   };
 };
+
+/** Writes a table of 6,200,000 rows, a little more than 200 MB. */
+async function writeLarge(name) {
+  const file = await open(name, "w");
+  await file.write("x [m],Cp,u\n");
+  for (let row = 0; row < 6_200_000; ) {
+    let text = "";
+    for (const end = row + 20_000; row < end; row++) {
+      text += `${(row * 1e-5).toFixed(6)},${Math.sin(row * 1e-5).toFixed(8)},0.0100000000\n`;
+    }
+    await file.write(text);
+  }
+  await file.close();
+}
+
+/** Bytes of memory of all programs that this one has started, theirs too. */
+function resident() {
+  const rows = execFileSync("ps", ["-eo", "pid,ppid,rss", "--no-headers"]).toString().trim().split("\n").map((row) => row.trim().split(/\s+/).map(Number));
+  const below = new Set([process.pid]);
+  for (let grown = true; grown; ) {
+    grown = false;
+    for (const [pid, parent] of rows) {
+      if (below.has(parent) && !below.has(pid)) {
+        below.add(pid);
+        grown = true;
+      }
+    }
+  }
+  below.delete(process.pid);
+  return rows.filter(([pid]) => below.has(pid)).reduce((sum, [, , kilobytes]) => sum + kilobytes * 1024, 0);
+}
 
 /** What goes wrong, and ways in that are not a plain choice of files. */
 export async function onTrouble(on, file, served) {
@@ -70,6 +106,10 @@ export async function onTrouble(on, file, served) {
     await person.press("Escape");
     await withControl("v");
     await person.until(() => document.querySelector(".slip h3")?.textContent === "pasted-1.txt");
+    // What was pasted is, byte by byte, what a file of the same text holds.
+    await person.drop([["same.csv", "x,Cp\n0,1\n1,2\n2,3\n"]]);
+    await person.page.waitForFunction(() => document.body.innerText.includes("pasted-1.txt and same.csv are byte-identical"), { timeout: 10_000 });
+    await person.click("Undo");
     await person.click("type a table");
     await person.page.type("dialog textarea", "x,Cp\n0,1\n1,2\n");
     await person.click("Add it to the study", "dialog");
@@ -146,6 +186,47 @@ export async function onTrouble(on, file, served) {
         };
       }
     },
+  });
+
+  await on("three files, one in millimetres under a header of metres: told at once, names read by a pattern", file, async (person) => {
+    const wing = (scale, shift) => "x [m],Cp\n" + [0, 0.03, 0.06, 0.12, 0.18, 0.24].map((x, i) => `${x * scale},${(Math.cos(i) + shift).toFixed(3)}\n`).join("");
+    await person.drop([["W7_lin_coarse.csv", wing(1, 0.02)], ["W7_lin_fine.csv", wing(1, 0.01)], ["W7_test.csv", wing(1000, 0)]]);
+    holds((await person.text(".clash")).includes("(millimetres against metres?)"), await person.text(".tray"));
+    await person.goTo("names are read as");
+    await person.fill("case_model_grid");
+    await person.page.waitForFunction(() => document.querySelector(".names")?.innerText.includes("1 of 3 names do not fit the pattern: W7_test.csv"), { timeout: 10_000 });
+    const open = () => person.page.$$eval(".tray [data-open]", (all) => all.filter((one) => one.getAttribute("aria-label").startsWith("grid")).length);
+    same(await open(), 2, "grids to accept");
+    await person.click("the grid", ".names");
+    same(await open(), 0, "grids to accept");
+  });
+
+  await on("a file of 200 MB: told how far, stopped, read, within four times its size", file, async (person) => {
+    const folder = await mkdtemp(path.join(tmpdir(), "weirmark-large-"));
+    try {
+      const name = path.join(folder, "long-line.csv");
+      await writeLarge(name);
+      const size = (await stat(name)).size;
+      holds(size > 200e6, `size: ${size}`);
+      const field = await person.page.$("#files");
+      await field.uploadFile(name);
+      await person.page.waitForFunction(() => /still at work: \d+ of 20\d MB are read/.test(document.body.innerText), { timeout: 60_000 });
+      await person.click("Stop it");
+      await person.until(() => document.querySelector(".message")?.innerText.includes("started again") || document.querySelector(".message")?.innerText.includes("Cancelled"));
+      same(await person.page.$$eval(".slip h3", (all) => all.filter((one) => one.textContent === "long-line.csv").length), 0, "slips of the stopped file");
+
+      const before = resident();
+      let most = before;
+      const watch = setInterval(() => (most = Math.max(most, resident())), 200);
+      await field.uploadFile(name);
+      await person.page.waitForFunction(() => document.documentElement.dataset.state === "ready" && [...document.querySelectorAll(".slip h3")].some((one) => one.textContent === "long-line.csv"), { timeout: 120_000 });
+      await person.page.waitForFunction(() => document.querySelector(".message")?.innerText.includes("No copy is kept"), { timeout: 60_000 });
+      clearInterval(watch);
+      holds(most - before < 4 * size, `the browser grew from ${Math.round(before / 1e6)} to ${Math.round(most / 1e6)} MB`);
+      return `the browser's programs grew by ${((most - before) / size).toFixed(1)} times the file`;
+    } finally {
+      await rm(folder, { recursive: true, force: true });
+    }
   });
 
   await on("40 MB are read without holding up the page", file, async (person) => {

@@ -17,7 +17,7 @@ import (
 // internal is the status of a fault of our own.
 const internal = 4
 
-const usage = `weirmark read FILE [--json]
+const usage = `weirmark read FILE [--card] [--json]
 weirmark grids FILE [--size COL] [--value COL] [--dim 1|2|3] [--formal NUMBER] [--limits on|off] [--rule RULE] [--json]
                  RULE: three, two, formal-order, least-squares, correction-factor, factor-of-safety, data-range
 weirmark compare --sim FILE[@TABLE] --ref FILE[@TABLE] --x COL --y COL [--ref-x COL] [--ref-y COL]
@@ -48,7 +48,7 @@ func run(args []string, out, errs io.Writer) (status int) {
 		flags map[string]bool // by name: whether it takes a value
 		do    func(*invocation) (int, error)
 	}{
-		"read":    {map[string]bool{"json": false}, read},
+		"read":    {map[string]bool{"json": false, "card": false}, read},
 		"grids":   {map[string]bool{"json": false, "size": true, "value": true, "dim": true, "limits": true, "rule": true, "formal": true}, grids},
 		"compare": {map[string]bool{"json": false, "sim": true, "ref": true, "x": true, "y": true, "ref-x": true, "ref-y": true, "u": true, "u-k": true, "u-common": true, "u-num": true, "u-input": true, "u-interp": true, "interp": true, "k": true}, compare},
 		"shelf":   {map[string]bool{"set": true, "at": true, "curve": true}, runShelf},

@@ -107,6 +107,32 @@ func TestReadShape(t *testing.T) {
 	}
 }
 
+// TestReadCard asks for the reading card: what the file states, and what each
+// table looks like, with its guesses marked.
+func TestReadCard(t *testing.T) {
+	file := map[string]string{"C2-B-G3.csv": "# U_ref: 12.5 m/s\nx [mm],p\n1,2.50\n2,n.a.\n3,4\n"}
+	status, out, errs := call(t, file, "read", "C2-B-G3.csv", "--card", "--json")
+	if status != 0 {
+		t.Fatalf("status %d, %s", status, errs)
+	}
+	v := decode(t, out).(map[string]any)
+	if got := keys(t, v); got != "cards file notices sha256 stated tables" {
+		t.Fatalf("keys %s", got)
+	}
+	if m := v["stated"].([]any)[0].(map[string]any); m["key"] != "U_ref" || m["value"] != "12.5 m/s" || m["line"] != 1.0 {
+		t.Errorf("stated %v", m)
+	}
+	card := v["cards"].([]any)[0].(string)
+	for _, part := range []string{"3 rows, 2 columns, order kept.", "p: 2.500 to 4.000, 1 missing.", "looks like a simulation (guessed)", "case C2 (guessed)", "model B (guessed)", "grid G3 (guessed)", "unit of stations mm,", "unit of values not given"} {
+		if !strings.Contains(card, part) {
+			t.Errorf("the card lacks %q: %s", part, card)
+		}
+	}
+	if _, text, _ := call(t, file, "read", "C2-B-G3.csv"); !strings.Contains(text, card) || !strings.Contains(text, "stated in line 1: U_ref: 12.5 m/s") {
+		t.Errorf("the text lacks the card:\n%s", text)
+	}
+}
+
 func TestReadRefusals(t *testing.T) {
 	for _, row := range []struct {
 		name, text string

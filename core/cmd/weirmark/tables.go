@@ -19,7 +19,11 @@ func read(v *invocation) (int, error) {
 	if err != nil {
 		return message.Refused, err
 	}
-	r, _, err := ask(&message.Session{}, message.Request{Kind: "read", Names: []string{name}}, data)
+	q := message.Request{Kind: "read", Names: []string{name}}
+	if _, card := v.flags["card"]; card || !v.json() {
+		q.Value = "card"
+	}
+	r, _, err := ask(&message.Session{}, q, data)
 	if err != nil {
 		return r.Status, err
 	}
@@ -27,8 +31,11 @@ func read(v *invocation) (int, error) {
 		return r.Status, v.printJSON(r.Read)
 	}
 	fmt.Fprintf(v.out, "%s  SHA-256 %s\n", r.Read.File, r.Read.SHA256)
+	for _, m := range r.Read.Stated {
+		fmt.Fprintf(v.out, "stated in line %d: %s: %s\n", m.Line, m.Key, m.Value)
+	}
 	for i, t := range r.Read.Tables {
-		fmt.Fprintf(v.out, "\ntable %d %s: %d rows\n", i+1, t.Name, t.Rows)
+		fmt.Fprintf(v.out, "\ntable %d %s: %d rows\n%s\n", i+1, t.Name, t.Rows, r.Read.Cards[i])
 		w := tabwriter.NewWriter(v.out, 0, 0, 2, ' ', 0)
 		fmt.Fprintln(w, "column\tunit\tfirst\tlast")
 		for _, c := range t.Columns {
