@@ -33,7 +33,7 @@ func Document(in Input) Node {
 	root.Nodes = append(root.Nodes, b.identity()...)
 	for _, part := range []func() Node{
 		b.statementSection, b.summarySection, b.comparisons, b.methods, b.assumptionSection,
-		b.notProvided, b.findings, b.figureData, b.files, b.log, b.limits, b.signatures,
+		b.notProvided, b.code, b.findings, b.figureData, b.files, b.log, b.limits, b.signatures,
 	} {
 		if section := part(); section.Kind != "" {
 			root.Nodes = append(root.Nodes, section)

@@ -40,7 +40,7 @@ func checked() Input {
 
 func TestSections(t *testing.T) {
 	titles := []string{"1\u2002Statements", "2\u2002Summary of all cells", "3\u2002Comparisons", "4\u2002Methods", "5\u2002Assumptions, guesses and choices", "6\u2002Evidence this memo does not hold",
-		"7\u2002Findings in the files and the study"}
+		"7\u2002Code verification evidence", "8\u2002Findings in the files and the study"}
 	rest := []string{"Files", "Log", "Limits of use", "Roles"}
 	for name, row := range map[string]struct {
 		in   Input

@@ -10,9 +10,10 @@ import (
 func (b *builder) grids(i int, c study.Cell) []Node {
 	g := c.Grids
 	figures := b.figuresOf(c, "grids")
+	more := append(borrowed(i, c), b.steps(i, c)...)
 	if g == nil {
 		b.lacks("No grid study is available for this cell.")
-		return figures
+		return append(more, figures...)
 	}
 	at := func(name string) string { return fmt.Sprintf("cells.%d.grids.%s", i, name) }
 	nodes := []Node{heading("Grid study")}
@@ -82,7 +83,7 @@ func (b *builder) grids(i int, c study.Cell) []Node {
 	if len(g.Local) > 0 {
 		nodes = append(nodes, b.localGrids(i, c)...)
 	}
-	return append(nodes, figures...)
+	return append(append(nodes, more...), figures...)
 }
 
 func (b *builder) gridPoints(i int, c study.Cell) Node {

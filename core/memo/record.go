@@ -15,7 +15,6 @@ func (b *builder) notProvided() Node {
 		item(text("Description of the facility, geometry as built, instruments and corrections: not provided.")),
 		item(text("Equations, closures, constants and wall treatment of the models: not provided.")),
 		item(text("Program, schemes, precision, time step and stopping rule of the simulations: not provided.")),
-		item(text("Code verification: not provided.")),
 	}
 	for _, missing := range []struct {
 		lacks func(study.Cell) bool

@@ -174,6 +174,8 @@ func drag() study.Cell {
 			{Name: "angle, speed, turbulence", Of: study.OfInput, Text: "0.00025, absolute, standard", U: .00025, Share: .1785, Pattern: study.Common, Origin: "run pairs"},
 			{Name: "grid", Of: study.OfNumerical, Text: "U = 0.000411, 95 %, divided by 1.15", U: .000357391304, Share: .3646, Pattern: study.Independent, Origin: "computed"},
 		},
+		Steps: &study.StepStudy{File: "c1-steps.csv", StepUnit: "s", Class: "monotone", Order: 1.87, Formal: 2, Space: quantity.None, Extrapolated: .02991, SpaceError: quantity.None, TimeError: quantity.None, Scatter: quantity.None, U: .0000512, UNum: .0000445, Rule: "three finest steps",
+			Points: []study.StepPoint{{Step: .002, Cells: quantity.None, Value: .02993}, {Step: .001, Cells: 5600000, Value: .02995}}},
 		Requirement: &study.Judgement{Limit: .00148, Percent: 5, Who: "decision owner", Date: "2026-03-02", Outcome: study.NotResolved, At: quantity.None, UValNeeded: .000565, UNumNeeded: .000310926, UNumReduction: .13, Ways: []study.Way{
 			{Source: "grid", Of: study.OfNumerical, Now: .000357391304, Needed: .000310926, Reduction: .13, Cells: pointer(6880000), Cost: pointer(1.316)},
 			{Source: "scatter of repeated readings", Of: study.OfData, Now: .000073, Needed: .00002, Reduction: .726, Readings: 67}}},
@@ -196,6 +198,8 @@ func oscillating() study.Cell {
 	s.UNum, s.UInput = .1075, quantity.None
 	none := quantity.None
 	c.Grids = &study.Grids{Stated: &study.StatedNext{U: .05, Cells: none, Cost: none}, Points: gridPoints(35.68, 36.34, 35.96, 36.172), Dimension: 3, Class: "oscillatory", Ratio: -.5578947, Order: none, Formal: 2, Extrapolated: none, Ea: none, Eext: none, GCI: none, U: none, UNum: .1075, KNum: 1.15, Rule: "half-range of the three finest as a bound", R21: 1.336, R32: 1.338, OrderLow: none, OrderHigh: none, NextCells: none, NextCost: none}
+	c.Steps = &study.StepStudy{Joint: true, File: "l-steps.csv", Formal: 2, Space: 1.5, Order: none, Extrapolated: 36.1, SpaceError: .0421, TimeError: -.0133, Scatter: .0021, U: .0714, UNum: .0621, Points: []study.StepPoint{}}
+	c.Borrowed = &study.Borrowed{From: "drag at C2", Relative: .0123, Penalty: 2, U: .045, Why: "the same grids at another angle"}
 	c.Sources, c.Sampled, c.InputForm = c.Sources[2:], nil, ""
 	c.Bounding = &study.Bounding{What: "sign", Word: study.SignResolved, UD: .4173, At: quantity.None, After: study.NotResolved}
 	c.Sources[0].Share = none
@@ -208,6 +212,11 @@ func sample() Input {
 	numShared := study.Joint{Statistic: 27.0451, N: 24, P: .3029, Reference: 36.415, Pattern: "reference pressure common, the rest independent", Independent: 50.98, NumShared: 38.0, Offset: .0301, UOffset: .0201, OffsetPart: 2.2553, Remainder: 24.7898, RemainderN: 23, RemainderReference: 35.1725}
 	shape := study.Joint{Statistic: 125.0344, N: 24, P: 1.2e-15, Reference: 36.415, Exceeds: true, Pattern: "reference pressure common, the rest independent", Independent: 14.53, NumShared: 180.6, Offset: .0016, UOffset: .0201, OffsetPart: .0063, Remainder: 125.0281, RemainderN: 23, RemainderReference: 35.1725, RemainderExceeds: true}
 	report := study.Report{
+		Code: &study.CodeEvidence{Statement: "order 2 on three manufactured flows", Link: "report 7, page 12"},
+		CodeChecks: []study.CodeCheck{
+			{Case: "V1", Quantity: "u", Model: "A", File: "v1.csv", Norm: "root mean square", Unit: "m/s", Points: []study.CodePoint{{Grid: "G1", H: .125, Error: .0129}, {Grid: "G2", H: .0625, Error: .00321}, {H: .03125, Error: .000803}}, Order: 2.0031, Orders: []study.Number{2.0067, 1.9991}},
+			{Case: "V1", Quantity: "v", File: "v1.csv", Norm: "e", Points: []study.CodePoint{{H: .125, Error: .01}}, Order: quantity.None, Notices: []notice.Notice{notice.New("grid-verify-none")}},
+		},
 		Title: "Quillet strut fairing: comparison with campaign OR-26", Purpose: "Choose the fairing setting for a duct retrofit. The decision needs the drag coefficient within ±5 % and the shape of the pressure distribution.", Edition: "2026-1",
 		Files: []study.FileLine{
 			{ID: "f1", Name: "c1-taps.csv", SHA256: strings.Repeat("0123456789abcdef", 4), Bytes: 2104, Matches: true, Uses: []string{"reference of Cp, case C1"}},

@@ -122,6 +122,8 @@ func needed(p *study.Slip, field string) bool {
 		return p.Role.Value == study.InputRun
 	case "size.column":
 		return p.Role.Value == study.GridValues
+	case "step.column":
+		return p.Role.Value == study.StepValues
 	}
 	return false
 }
@@ -137,7 +139,7 @@ func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 		return Entry{Target: study.Target{Kind: "slip", ID: p.ID, Field: field}, Label: label, Value: f.Value, By: f.By, Options: options, Hint: hint}
 	}
 	list := []Entry{
-		entry("role", "looks like", p.Role, []Option{{study.Simulation, "a simulation"}, {study.GridValues, "values over grids"}, {study.InputRun, "a run with one input changed"}, {study.Members, "runs with sampled inputs"}, {study.Reference, "reference data"}, {study.Replicates, "repeated readings at the stations"}, {study.Monitor, "a monitor of one run"}, {study.Balance, "a balance of one run"}, {study.Residual, "a residual of one run"}, {study.Precision, "the run again, in other precision"}, {study.Unused, "not used"}}, ""),
+		entry("role", "looks like", p.Role, []Option{{study.Simulation, "a simulation"}, {study.GridValues, "values over grids"}, {study.StepValues, "values over time steps"}, {study.ExactErrors, "errors against a known solution"}, {study.ExactSolution, "a known solution"}, {study.InputRun, "a run with one input changed"}, {study.Members, "runs with sampled inputs"}, {study.Reference, "reference data"}, {study.Replicates, "repeated readings at the stations"}, {study.Monitor, "a monitor of one run"}, {study.Balance, "a balance of one run"}, {study.Residual, "a residual of one run"}, {study.Precision, "the run again, in other precision"}, {study.Unused, "not used"}}, ""),
 	}
 	if p.Role.Value == study.Unused {
 		return list
@@ -149,6 +151,10 @@ func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 		list = append(list, entry("model", "model", p.Model, free, "e.g. A"))
 	}
 	switch p.Role.Value {
+	case study.StepValues:
+		list = append(list, entry("step.column", "time steps in", p.Step.Column, columns, ""), entry("step.unit", "their unit", p.Step.Unit, free, "e.g. s"), entry("size.column", "cells in", p.Size.Column, columns, "empty: one grid"))
+	case study.ExactErrors:
+		list = append(list, entry("x.column", "spacing in", p.X.Column, columns, "empty: cells are given"), entry("size.column", "cells in", p.Size.Column, columns, ""), entry("dimensions", "the grids have", p.Dimensions, []Option{{"", "–"}, {"1", "one dimension"}, {"2", "two dimensions"}, {"3", "three dimensions"}}, ""))
 	case study.GridValues:
 		list = append(list, entry("size.column", "cells in", p.Size.Column, columns, ""), entry("grid", "grid names in", p.Grid, columns, ""))
 	default:
@@ -305,6 +311,9 @@ func points(p *study.Slip, t tablefile.Table) [][2]float64 {
 		return nil
 	}
 	station := p.X.Column.Value
+	if p.Role.Value == study.StepValues {
+		station = p.Step.Column.Value
+	}
 	if p.Role.Value == study.GridValues {
 		station = p.Size.Column.Value
 	}

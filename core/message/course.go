@@ -123,6 +123,9 @@ func roundOffWords(c *study.Cell) string {
 }
 
 func familyAnswer(c *study.Cell) string {
+	if c.Grids == nil && c.Borrowed != nil {
+		return borrowedAnswer(c)
+	}
 	g := c.Grids
 	if g == nil {
 		for _, s := range c.Sources {
@@ -198,7 +201,9 @@ func gridNumbers(c *study.Cell) []Headline {
 	return list
 }
 
-func gridTables(c *study.Cell) []Table { return append(familyTables(c), sumTables(c)...) }
+func gridTables(c *study.Cell) []Table {
+	return append(append(familyTables(c), stepTables(c)...), sumTables(c)...)
+}
 
 // sumTables shows u_num by both sums of its parts, and the round-off floor.
 func sumTables(c *study.Cell) []Table {

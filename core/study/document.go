@@ -168,6 +168,10 @@ func (s *Study) Clone() *Study {
 	for i := range c.Cases {
 		c.Cases[i].References = append([]ReferenceQuantity{}, c.Cases[i].References...)
 	}
+	if s.Code != nil {
+		code := *s.Code
+		c.Code = &code
+	}
 	c.Questions = append([]Question{}, s.Questions...)
 	for i := range c.Questions {
 		q := &c.Questions[i]

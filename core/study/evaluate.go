@@ -86,7 +86,7 @@ func Evaluate(s *Study, options Options) Report {
 	}
 	for i := range s.Questions {
 		q := &s.Questions[i]
-		if !s.asked(q) {
+		if !s.asked(q) || s.exactOnly(q) {
 			continue // its tables are gone or belong to another question now
 		}
 		for _, model := range s.models(q) {
@@ -94,6 +94,7 @@ func Evaluate(s *Study, options Options) Report {
 		}
 	}
 	e.differences(&r)
+	e.codeChecks(&r)
 	return r
 }
 
@@ -277,6 +278,7 @@ type work struct {
 	inner        bool                           // an alternative itself: what only the statement shows is left out
 	cell         Cell
 
+	lending   bool // evaluated for what another cell borrows of it
 	reference *curve
 	others    []*curve // further references of a scalar
 	runs      []run    // finest first
@@ -580,6 +582,9 @@ func (p *Slip) fields() []slipField {
 	}
 	if p.Role.Value == InputRun {
 		all = append(all, slipField{path: "input", name: "input of the run", field: p.Input, needed: true, course: 2}, slipField{path: "input_at", name: "value of the input", field: p.InputAt, needed: true, course: 2})
+	}
+	if p.Role.Value == StepValues {
+		all = append(all, slipField{path: "step.column", name: "column of time steps", field: p.Step.Column, needed: true, course: 1})
 	}
 	if p.Role.Value == GridValues {
 		all = append(all, slipField{path: "size.column", name: "column of cell counts", field: p.Size.Column, needed: true, course: 1})

@@ -33,6 +33,10 @@ func (w *work) family() {
 		}
 	}
 	w.familyCard()
+	if !w.lending {
+		w.timeSteps()
+		w.borrow()
+	}
 }
 
 // scalarFamily studies one value over the grids.

@@ -32,6 +32,12 @@ type Family struct {
 	Regime       string   `json:"regime,omitempty"`
 	CostExponent *float64 `json:"cost_exponent,omitempty"` // cost of a run ~ cells to this power; null: refinement.CostExponent
 	Target       *float64 `json:"target,omitempty"`        // a standard u_num to reach, in the unit of the data; null: none
+
+	// Steps is Apart, or empty: grid and time step are fitted together where a
+	// table of time steps holds several grids.
+	Steps      string     `json:"steps,omitempty"`
+	FormalTime *float64   `json:"formal_time,omitempty"` // order of the scheme in time; null: 2
+	Borrow     *Borrowing `json:"borrow,omitempty"`      // a grid uncertainty of another question
 }
 
 // FamilyCard says of a family of grids what they have in common.
@@ -394,7 +400,16 @@ func (q *Question) enterFamily(path, value string) (string, error) {
 	}
 	var before string
 	var err error
+	if key, of := strings.CutPrefix(path, "borrow."); of {
+		before, err = f.enterBorrow(key, value)
+		path = "borrow"
+	}
 	switch path {
+	case "borrow":
+	case "steps":
+		before, err = oneOf(&f.Steps, value, "", Apart)
+	case "formal_time":
+		before, err = optional(&f.FormalTime, value, 0.1)
 	case "similar":
 		before, err = oneOf(&f.Similar, value, "", SimilarYes, SimilarNo)
 	case "regime":

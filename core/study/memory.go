@@ -28,6 +28,7 @@ type ingredients struct {
 	Application []Condition
 	Quality     []Quality
 	Conditions  [][]Matching // of all questions, where a point of application is stated
+	Questions   []Question   // all, where a grid uncertainty is borrowed
 	Alternative bool
 }
 
@@ -36,7 +37,7 @@ func (e *evaluation) key(q *Question, model string) string {
 	in := ingredients{Question: q, Model: model, Cases: e.study.Cases, Application: e.study.Application, Quality: e.study.Quality, Alternative: e.options.Alternatives}
 	for i := range e.study.Slips {
 		p := &e.study.Slips[i]
-		if !q.concerns(p) {
+		if !q.concerns(p) && !q.borrows() {
 			continue
 		}
 		in.Slips = append(in.Slips, p)
@@ -54,12 +55,18 @@ func (e *evaluation) key(q *Question, model string) string {
 			in.Conditions = append(in.Conditions, e.study.Questions[i].Conditions)
 		}
 	}
+	if q.borrows() {
+		in.Questions = e.study.Questions
+	}
 	text, err := json.Marshal(in)
 	if err != nil {
 		return "" // a number that is not finite: such a cell is evaluated anew
 	}
 	return string(text)
 }
+
+// borrows reports whether a cell of the question rests on another question.
+func (q *Question) borrows() bool { return q.Family != nil && q.Family.Borrow != nil }
 
 // concerns reports whether a slip is one of those that a cell of the question
 // may be made of.

@@ -225,7 +225,9 @@ var fieldNames = map[string]string{
 	"choices.num_linear": "sum of the parts of u_num",
 	"balance_of":         "kind of balance", "scale": "flux that matters", "scale_name": "name of the flux that matters",
 	"start": "start of averaging", "period": "period", "u_iter": "U_iter", "u_iter_why": "reason of U_iter", "effect": "effect of an open balance", "effect_why": "reason of the effect", "stand_in": "quantity whose monitors are taken", "stand_in_why": "reason why monitors of another quantity are taken",
-	"y_plus": "y+ of the first cells", "settings": "settings",
+	"y_plus": "y+ of the first cells", "settings": "settings", "step.column": "column of time steps", "step.unit": "unit of time steps", "dimensions": "dimensions of the grids",
+	"family.steps": "grid and time step", "family.formal_time": "formal order in time", "code.statement": "statement on the verification of the code", "code.link": "where the evidence on the code is",
+	"family.borrow.case": "case that lends its grid uncertainty", "family.borrow.quantity": "quantity that lends its grid uncertainty", "family.borrow.penalty": "penalty of the borrowed grid uncertainty", "family.borrow.why": "reason of the borrowed grid uncertainty",
 	"family.similar": "similarity of the grids", "family.wall": "wall treatment", "family.scheme": "scheme", "family.regime": "kind of the runs", "family.cost_exponent": "exponent of the cost", "family.target": "u_num to reach",
 	"requirement.value": "requirement", "requirement.percent": "basis of the requirement", "requirement.who": "who set the requirement", "requirement.date": "date of the requirement",
 	"derive.kind":       "scalar taken from the curves",
@@ -282,7 +284,7 @@ func (s *Study) field(t Target) *Field {
 
 func (p *Slip) entry(path string) *Field {
 	return map[string]*Field{
-		"role": &p.Role, "case": &p.Case, "quantity": &p.Quantity, "model": &p.Model, "grid": &p.Grid, "cells": &p.Cells, "y_plus": &p.YPlus, "settings": &p.Settings,
+		"role": &p.Role, "case": &p.Case, "quantity": &p.Quantity, "model": &p.Model, "grid": &p.Grid, "cells": &p.Cells, "y_plus": &p.YPlus, "settings": &p.Settings, "step.column": &p.Step.Column, "step.unit": &p.Step.Unit, "dimensions": &p.Dimensions,
 		"x.column": &p.X.Column, "x.unit": &p.X.Unit, "y.column": &p.Y.Column, "y.unit": &p.Y.Unit,
 		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit, "axis": &p.Axis, "branch": &p.Branch, "derive": &p.Derive, "contour.column": &p.Contour.Column, "contour.unit": &p.Contour.Unit, "u_basis": &p.UBasis,
 		"input": &p.Input, "input_at": &p.InputAt, "upper.column": &p.Upper.Column, "upper.unit": &p.Upper.Unit, "bars_as": &p.BarsAs, "flow_rate": &p.FlowRate, "flow_rate_u": &p.FlowRateU,
@@ -350,6 +352,12 @@ func (s *Study) enter(t Target, value string) (string, error) {
 
 // text returns the plain text at a target, or nil.
 func (s *Study) text(t Target) *string {
+	if field, of := strings.CutPrefix(t.Field, "code."); of && t.Kind == "study" {
+		if s.Code == nil {
+			s.Code = &CodeEvidence{}
+		}
+		return map[string]*string{"statement": &s.Code.Statement, "link": &s.Code.Link}[field]
+	}
 	if t.Kind == "study" {
 		return map[string]*string{
 			"title": &s.Title, "purpose": &s.Purpose,
@@ -377,7 +385,7 @@ func (s *Study) text(t Target) *string {
 
 // askOf makes the question a slip belongs to, where there is none.
 func (s *Study) askOf(p *Slip) {
-	if !p.Case.Given() || !p.Quantity.Given() || p.Role.Value == Unused || s.Question(p.Case.Value, p.Quantity.Value) != nil {
+	if !p.Case.Given() || !p.Quantity.Given() || p.Role.Value == Unused || p.Role.Value == ExactErrors || s.Question(p.Case.Value, p.Quantity.Value) != nil {
 		return
 	}
 	s.Questions = append(s.Questions, Question{Case: p.Case.Value, Quantity: p.Quantity.Value, Sources: []Source{}, Choices: DefaultChoices()})

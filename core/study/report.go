@@ -15,6 +15,8 @@ type Number = quantity.Number
 // may use. All numbers of a cell are in the cell's unit.
 type Report struct {
 	Title       string          `json:"title"`
+	Code        *CodeEvidence   `json:"code,omitempty"`        // as a person states it
+	CodeChecks  []CodeCheck     `json:"code_checks,omitempty"` // against exact solutions
 	Purpose     string          `json:"purpose"`
 	Edition     string          `json:"edition"` // edition of the methods
 	Files       []FileLine      `json:"files"`
@@ -76,20 +78,22 @@ const (
 
 // Cell is one case, quantity and model.
 type Cell struct {
-	Case      string `json:"case"`
-	Condition string `json:"condition"`
-	Quantity  string `json:"quantity"`
-	Symbol    string `json:"symbol"`
-	Model     string `json:"model"`
-	Grid      string `json:"grid"`
-	Reference string `json:"reference"` // what the data are called
-	Kind      string `json:"kind"`      // kind of reference
-	Use       string `json:"use"`
-	Unit      string `json:"unit"` // unit of the quantity, "1" for pure numbers
-	XName     string `json:"x_name"`
-	XUnit     string `json:"x_unit"`
-	Scalar    bool   `json:"scalar"`
-	Downward  bool   `json:"downward"`
+	Case      string     `json:"case"`
+	Condition string     `json:"condition"`
+	Quantity  string     `json:"quantity"`
+	Symbol    string     `json:"symbol"`
+	Model     string     `json:"model"`
+	Grid      string     `json:"grid"`
+	Steps     *StepStudy `json:"steps,omitempty"`    // of the time step
+	Borrowed  *Borrowed  `json:"borrowed,omitempty"` // from another question
+	Reference string     `json:"reference"`          // what the data are called
+	Kind      string     `json:"kind"`               // kind of reference
+	Use       string     `json:"use"`
+	Unit      string     `json:"unit"` // unit of the quantity, "1" for pure numbers
+	XName     string     `json:"x_name"`
+	XUnit     string     `json:"x_unit"`
+	Scalar    bool       `json:"scalar"`
+	Downward  bool       `json:"downward"`
 
 	Withheld    bool     `json:"withheld"`    // no statement is made
 	Provisional bool     `json:"provisional"` // stated, resting on open points

@@ -42,17 +42,18 @@ func (f Field) Open() bool { return f.Given() && f.By == Guessed }
 
 // Study is the whole document.
 type Study struct {
-	Format    string     `json:"format"`
-	Version   int        `json:"version"`
-	Title     string     `json:"title"`
-	Purpose   string     `json:"purpose"`
-	Prepared  Signature  `json:"prepared"`
-	Checked   Signature  `json:"checked"`
-	Approved  Signature  `json:"approved"`
-	Files     []File     `json:"files"`
-	Slips     []Slip     `json:"slips"`
-	Questions []Question `json:"questions"`
-	Cases     []Card     `json:"cases,omitempty"`
+	Format    string        `json:"format"`
+	Version   int           `json:"version"`
+	Title     string        `json:"title"`
+	Code      *CodeEvidence `json:"code,omitempty"` // on the verification of the code
+	Purpose   string        `json:"purpose"`
+	Prepared  Signature     `json:"prepared"`
+	Checked   Signature     `json:"checked"`
+	Approved  Signature     `json:"approved"`
+	Files     []File        `json:"files"`
+	Slips     []Slip        `json:"slips"`
+	Questions []Question    `json:"questions"`
+	Cases     []Card        `json:"cases,omitempty"`
 	// Application is the point the result is meant for, in the conditions of
 	// the questions; empty when it is not stated.
 	Application []Condition `json:"application,omitempty"`
@@ -108,27 +109,29 @@ const (
 // Slip says how one table of a file is used. The same table may stand behind
 // several slips (two models in two columns).
 type Slip struct {
-	ID       string    `json:"id"`
-	File     string    `json:"file"`  // File.ID
-	Table    string    `json:"table"` // name or number as tablefile.File.Table takes it
-	Role     Field     `json:"role"`
-	Case     Field     `json:"case"`
-	Quantity Field     `json:"quantity"`
-	Model    Field     `json:"model"`
-	Grid     Field     `json:"grid"`
-	YPlus    Field     `json:"y_plus,omitzero"`   // of the first cells of Grid
-	Settings Field     `json:"settings,omitzero"` // of the run: "key: value; key: value"
-	Cells    Field     `json:"cells"`             // number of cells of Grid
-	X        ColumnUse `json:"x"`                 // abscissa; not given for scalars
-	Y        ColumnUse `json:"y"`                 // the quantity
-	U        ColumnUse `json:"u"`                 // uncertainty of the quantity, independent between stations
-	UFactor  Field     `json:"u_factor"`          // coverage of U: "1", "2", "95 %", "limits"
-	UBasis   Field     `json:"u_basis"`           // of U in percent: "reading", or the full scale in the unit of Y
-	Branch   Field     `json:"branch"`            // of a curve that goes out and back: a name of package profile, or empty
-	Derive   Field     `json:"derive"`            // DeriveLift, or empty: the values as they are
-	Contour  ColumnUse `json:"contour"`           // second coordinate of a section, for branches and DeriveLift
-	Size     ColumnUse `json:"size"`              // cell counts, for grid values
-	Axis     Field     `json:"axis"`              // of a monitor: iterations or samples in time
+	ID         string    `json:"id"`
+	File       string    `json:"file"`  // File.ID
+	Table      string    `json:"table"` // name or number as tablefile.File.Table takes it
+	Role       Field     `json:"role"`
+	Case       Field     `json:"case"`
+	Quantity   Field     `json:"quantity"`
+	Model      Field     `json:"model"`
+	Grid       Field     `json:"grid"`
+	YPlus      Field     `json:"y_plus,omitzero"`     // of the first cells of Grid
+	Step       ColumnUse `json:"step,omitzero"`       // time steps, for step values
+	Dimensions Field     `json:"dimensions,omitzero"` // of the grids, of a table of errors over cell counts
+	Settings   Field     `json:"settings,omitzero"`   // of the run: "key: value; key: value"
+	Cells      Field     `json:"cells"`               // number of cells of Grid
+	X          ColumnUse `json:"x"`                   // abscissa; not given for scalars
+	Y          ColumnUse `json:"y"`                   // the quantity
+	U          ColumnUse `json:"u"`                   // uncertainty of the quantity, independent between stations
+	UFactor    Field     `json:"u_factor"`            // coverage of U: "1", "2", "95 %", "limits"
+	UBasis     Field     `json:"u_basis"`             // of U in percent: "reading", or the full scale in the unit of Y
+	Branch     Field     `json:"branch"`              // of a curve that goes out and back: a name of package profile, or empty
+	Derive     Field     `json:"derive"`              // DeriveLift, or empty: the values as they are
+	Contour    ColumnUse `json:"contour"`             // second coordinate of a section, for branches and DeriveLift
+	Size       ColumnUse `json:"size"`                // cell counts, for grid values
+	Axis       Field     `json:"axis"`                // of a monitor: iterations or samples in time
 
 	BalanceOf Field      `json:"balance_of,omitzero"`  // kind of a balance, of package settling; mass where it is not given
 	Scale     Field      `json:"scale,omitzero"`       // of a balance: the flux that matters, in the unit of the file; what enters where it is not given

@@ -202,6 +202,8 @@ export interface CompareCrossings {
 
 export interface Report {
   title: string;
+  code?: CodeEvidence;
+  code_checks?: CodeCheck[];
   purpose: string;
   edition: string;
   files: FileLine[] | null;
@@ -334,6 +336,24 @@ export interface ReadColumn {
   values: (number | null)[] | null;
 }
 
+export interface CodeEvidence {
+  statement?: string;
+  link?: string;
+}
+
+export interface CodeCheck {
+  case: string;
+  quantity: string;
+  model: string;
+  file: string;
+  norm: string;
+  unit: string;
+  points: CodePoint[] | null;
+  order: number | null;
+  orders: (number | null)[] | null;
+  notices: Notice[] | null;
+}
+
 export interface FileLine {
   id: string;
   name: string;
@@ -350,6 +370,8 @@ export interface Cell {
   symbol: string;
   model: string;
   grid: string;
+  steps?: StepStudy;
+  borrowed?: Borrowed;
   reference: string;
   kind: string;
   use: string;
@@ -487,6 +509,38 @@ export interface Option {
 export interface EntryItem {
   remove: Target | null;
   entries: Entry[] | null;
+}
+
+export interface CodePoint {
+  grid: string;
+  h: number | null;
+  error: number | null;
+}
+
+export interface StepStudy {
+  file: string;
+  points: StepPoint[] | null;
+  step_unit: string;
+  joint: boolean;
+  class: string;
+  order: number | null;
+  formal: number | null;
+  space: number | null;
+  extrapolated: number | null;
+  space_error: number | null;
+  time_error: number | null;
+  scatter: number | null;
+  u: number | null;
+  u_num: number | null;
+  rule: string;
+}
+
+export interface Borrowed {
+  from: string;
+  relative: number | null;
+  penalty: number | null;
+  u: number | null;
+  why: string;
 }
 
 export interface Choices {
@@ -889,6 +943,12 @@ export interface BoardCell {
   courses: State[];
   letter: string;
   spoken: string;
+}
+
+export interface StepPoint {
+  step: number | null;
+  cells: number | null;
+  value: number | null;
 }
 
 export type Method = string;
