@@ -12,7 +12,7 @@ import (
 func (b *builder) notProvided() Node {
 	s := b.open(1, "not-provided", "Evidence this memo does not hold")
 	lines := []Node{
-		item(text("Description of the facility, geometry as built, instruments and corrections: not provided.")),
+		item(text("Description of the facility, geometry as built and instruments: not provided.")),
 		item(text("Equations, closures, constants and wall treatment of the models: not provided.")),
 		item(text("Program, schemes, precision, time step and stopping rule of the simulations: not provided.")),
 	}
@@ -20,6 +20,7 @@ func (b *builder) notProvided() Node {
 		lacks func(study.Cell) bool
 		what  string
 	}{
+		{func(c study.Cell) bool { return c.Corrected.State == "" }, "Whether the data are corrected for walls and supports"},
 		{func(c study.Cell) bool { return len(c.Conditions) == 0 }, "Conditions of simulation and reference side by side"},
 		{func(c study.Cell) bool { return len(c.Monitors) == 0 }, "Monitors of the runs"},
 		{func(c study.Cell) bool { return len(c.Balances) == 0 }, "Balances of the runs"},

@@ -36,6 +36,9 @@ func (s *Session) slipCards() []SlipCard {
 			continue
 		}
 		card.Read = readWords(t)
+		if p.Role.Given() && p.Role.Value != study.Unused {
+			card.Read += " Used: " + s.study.Mapping(p, t) + "."
+		}
 		card.Entries = slipEntries(s.study, p, t)
 		for i := range card.Entries {
 			e := &card.Entries[i]
@@ -104,12 +107,14 @@ func needed(p *study.Slip, field string) bool {
 	role := p.Role.Value
 	wholeRun := role == study.Balance || role == study.Residual
 	switch field {
-	case "role", "case", "y.column":
+	case "role", "case":
 		return role != study.Unused
+	case "y.column":
+		return role != study.Unused && !p.Y.Formula.Given()
 	case "quantity", "y.unit":
 		return role != study.Unused && !wholeRun
 	case "x.unit":
-		return p.X.Column.Given() && !wholeRun && role != study.Monitor
+		return p.X.Given() && !wholeRun && role != study.Monitor
 	case "scale":
 		return role == study.Balance && !p.X.Column.Given()
 	case "u_factor", "u_basis":
@@ -160,7 +165,10 @@ func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 	default:
 		label := map[string]string{study.Monitor: "iterations or time in", study.Residual: "iterations in", study.Balance: "what enters in"}[p.Role.Value]
 		list = append(list, entry("x.column", cmp.Or(label, "stations in"), p.X.Column, columns, "none for a single value"))
-		if p.X.Column.Given() && p.Role.Value != study.Residual {
+		if p.Role.Value == study.Simulation || p.Role.Value == study.Reference {
+			list = append(list, entry("x.formula", "or stations by a formula", p.X.Formula, free, "e.g. x - x_0; it takes the place of the column"))
+		}
+		if p.X.Given() && p.Role.Value != study.Residual {
 			list = append(list, entry("x.unit", "unit of stations", p.X.Unit, free, "m, mm, … or 1 for a pure number"))
 		}
 	}
@@ -180,11 +188,17 @@ func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 			list = append(list, entry("scale_name", "which is", p.ScaleName, free, "e.g. the heat exchanged"))
 		}
 	}
+	if p.Role.Value != study.Balance && p.Role.Value != study.Residual {
+		list = append(list, entry("y.formula", "or values by a formula", p.Y.Formula, free, "e.g. (p - p_ref)/q or sqrt(\"u u in m^2/s^2\"): columns and symbols of the case, in the place of the column"))
+	}
+	if unit, err := quantity.Parse(p.Y.Unit.Value); err == nil && unit.Dimension == pascal.Dimension {
+		list = append(list, entry("datum", "the pressure is", p.Datum, []Option{{"", "–"}, {study.DatumAbsolute, "absolute"}, {study.DatumGauge, "gauge"}, {study.DatumDifference, "a difference to p_ref"}}, ""))
+	}
 	switch p.Role.Value {
 	case study.Monitor, study.Balance, study.Residual, study.Precision:
 		list = append(list, entry("grid", "grid", p.Grid, free, "e.g. G4"))
 	}
-	if p.X.Column.Given() && (p.Role.Value == study.Simulation || p.Role.Value == study.Reference) {
+	if p.X.Given() && (p.Role.Value == study.Simulation || p.Role.Value == study.Reference) {
 		list = append(list, entry("derive", "taken", p.Derive, []Option{{"", "as a curve"}, {study.DeriveLift, "as the lift of a closed section"}}, ""))
 		loop := false
 		if x, err := t.Column(p.X.Column.Value); err == nil {
@@ -408,6 +422,14 @@ func questionEntries(q *study.Question) []Entry {
 		entry("no_input", "the inputs have no uncertainty because", q.NoInput, study.Entered, []Option{}, "empty: not decided"),
 		entry("condition", "condition", q.Condition, study.Entered, []Option{}, "e.g. α = 4.2°"),
 		entry("symbol", "symbol", q.Symbol, study.Entered, []Option{}, "e.g. Cd"),
+		entry("corrected.state", "for walls and supports the data are", q.Corrected.State, study.Entered, []Option{{"", "not known"}, {study.Corrected, "corrected"}, {study.Uncorrected, "uncorrected"}}, ""),
+		entry("corrected.how", "how, and by how much", q.Corrected.How, study.Entered, []Option{}, "its uncertainty is a source of its own"),
+		entry("form.name", "the values are compared as", q.Form.Name, study.Entered, formOptions(false), ""),
+		entry("form.simulation", "simulated values", q.Form.Simulation, study.Entered, sideOptions(), ""),
+		entry("form.data", "measured values", q.Form.Data, study.Entered, sideOptions(), ""),
+		entry("x_form.name", "the stations are compared as", q.XForm.Name, study.Entered, formOptions(true), ""),
+		entry("x_form.simulation", "stations of the simulation", q.XForm.Simulation, study.Entered, sideOptions(), ""),
+		entry("x_form.data", "stations of the data", q.XForm.Data, study.Entered, sideOptions(), ""),
 		entry("downward", "drawn", map[bool]string{true: "yes", false: "no"}[q.Downward], study.Entered, []Option{{"no", "positive upward"}, {"yes", "negative upward"}}, ""),
 	}
 }
@@ -515,14 +537,8 @@ func lists(s *study.Study, q *study.Question, c *study.Cell) []EntryList {
 		k := study.ItemApplication
 		application.Items = append(application.Items, item(k, "", i, entry(k, "", "name", "condition", c.Name, []Option{}, "e.g. α"), entry(k, "", "value", "value", quantity.Typed(c.Value), []Option{}, ""), entry(k, "", "unit", "unit", c.Unit, []Option{}, "")))
 	}
-	card := EntryList{Course: 2, Title: "Case " + q.Case, Hint: "reference quantities", Items: []EntryItem{{Entries: []Entry{
-		entry("case", q.Case, "density", "density ρ in kg/m³", s.CardValue(q.Case, "density"), []Option{}, "relates a pressure to one divided by density"),
-		entry("case", q.Case, "pressure", "dynamic pressure q in Pa", s.CardValue(q.Case, "pressure"), []Option{}, "makes a pressure a coefficient"),
-		entry("case", q.Case, "length", "reference length L in m", s.CardValue(q.Case, "length"), []Option{}, "e.g. the chord"),
-		entry("case", q.Case, "speed", "reference speed U in m/s", s.CardValue(q.Case, "speed"), []Option{}, "a scale of velocities"),
-		entry("case", q.Case, "angle", "angle of attack α in degrees", s.CardValue(q.Case, "angle"), []Option{}, "")}}}}
 	criteria := criterionEntries(q, list(3, study.ItemCriterion, id, "Criteria of the scores", "limits bound to their scope; a result beyond one is no statement on the model by itself"))
-	return []EntryList{runList(s, q, c), conditions, card, derivation(q), scoreEntries(q), criteria, regions, application, qualityList(s, q.Case)}
+	return []EntryList{runList(s, q, c), conditions, cardList(s, q), axesList(s, q), derivation(q), scoreEntries(q), criteria, regions, application, qualityList(s, q.Case)}
 }
 
 // readingEntries are the answers about how a file is read: those that were

@@ -18,7 +18,7 @@ func courses(c *study.Cell, figures []CellFigure, veiled bool) []Course {
 	list := []Course{
 		{Question: "Has each run settled?", Answer: settledAnswer(c), Numbers: settledNumbers(c), Tables: settledTables(c)},
 		{Question: "Is the grid fine enough for this quantity?", Answer: gridAnswer(c), Numbers: gridNumbers(c), Tables: gridTables(c)},
-		{Question: "Is it the same thing?", Answer: sameAnswer(c)},
+		{Question: "Is it the same thing?", Answer: sameAnswer(c), Tables: sameTables(c)},
 		{Question: "Do they agree?", Answer: agreeAnswer(c), Numbers: agreeNumbers(c), Tables: agreeTables(c)},
 		{Question: "What can be said?", Answer: sayAnswer(c), Numbers: sayNumbers(c), Tables: sayTables(c)},
 	}

@@ -73,10 +73,10 @@ func (w *work) stationLines(e, ratio []float64) {
 // where the cell is in the units of the file.
 func (w *work) written(row int, x, d Written) (Written, Written) {
 	p := w.reference.slip
-	if column, err := w.reference.table.Column(p.X.Column.Value); err == nil && p.X.Unit.Value == w.xUnit.symbol {
+	if column, err := w.reference.table.Column(p.X.Column.Value); err == nil && !w.reference.xTurned && p.X.Unit.Value == w.xUnit.symbol {
 		x = Written(column.Values[row])
 	}
-	if column, err := w.reference.table.Column(p.Y.Column.Value); err == nil && p.Y.Unit.Value == w.yUnit.symbol {
+	if column, err := w.reference.table.Column(p.Y.Column.Value); err == nil && !w.reference.yTurned && p.Y.Unit.Value == w.yUnit.symbol {
 		d = Written(column.Values[row])
 	}
 	return x, d

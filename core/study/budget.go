@@ -65,10 +65,12 @@ func (w *work) budget() {
 	w.members()
 	w.overlaps()
 	w.resolved()
+	w.cardSources()
 	w.gridPart()
 	w.interpolationPart()
 	w.missingParts()
 	w.total()
+	w.reduction()
 }
 
 // add appends a source that is independent between stations, or common.
@@ -330,7 +332,7 @@ func (w *work) sourceColumn(s *Source) ([]float64, error) {
 				return steps(column.Values, w.yUnit, []int{0}), nil
 			}
 			x := inUnit(run.x, run.xUnit, w.xUnit)
-			got := station.Resample(w.e.study.fileName(run.slip), run.slip.X.Column.Value, x, column.Values, w.x, station.Options{Method: w.choices.Interpolation, Show: w.place})
+			got := station.Resample(w.e.study.fileName(run.slip), run.xUnit.name, x, column.Values, w.x, station.Options{Method: w.choices.Interpolation, Show: w.place})
 			u := uncertainty.Constant(len(w.x), math.NaN())
 			for j, i := range got.Kept {
 				u[i] = w.yUnit.StepToSI(got.S[j])
@@ -342,13 +344,26 @@ func (w *work) sourceColumn(s *Source) ([]float64, error) {
 	if err != nil {
 		return nil, err
 	}
-	u := steps(column.Values, w.yUnit, w.rows)
+	u := steps(column.Values, w.rawUnit(), w.rows)
+	if slope := w.reference.slope; slope != nil {
+		for j, i := range w.rows {
+			u[j] = float64(u[j] * math.Abs(slope[i]))
+		}
+	}
 	for j, v := range u {
 		if v < 0 {
 			return nil, notice.New("u-negative", quantity.Text(v, 6), place(w.reference, w.rows[j])).In(w.e.study.fileName(w.reference.slip)).At(w.reference.table.RowLine(w.rows[j]))
 		}
 	}
 	return u, nil
+}
+
+// rawUnit is the unit of the reference as its table holds it, before a form.
+func (w *work) rawUnit() unit {
+	if w.reference.slope == nil {
+		return w.yUnit
+	}
+	return axisUnit(w.reference.rawUnit)
 }
 
 func steps(values []float64, u unit, rows []int) []float64 {

@@ -10,33 +10,46 @@ import (
 	"weirmark/core/quantity"
 )
 
-// density returns the density of the case, in SI.
-func (w *work) density() (float64, bool) {
-	rho, known := w.e.cardValue(w.q.Case, Density, quantity.Dimension{-3, 1})
+// density returns the density of the case for a side, in SI.
+func (w *work) density(side string) (float64, bool) {
+	rho, known := w.e.cardValue(w.q.Case, Density, side)
 	return rho, known && rho > 0
 }
 
 // byDensity brings a pressure divided by density to a pressure, where the
 // other side is one and the case states its density.
 func (w *work) byDensity(sides ...*curve) {
-	rho, known := w.density()
-	if !known {
-		return
-	}
 	for i, c := range sides {
 		other := sides[1-i]
-		if !c.yUnit.known || !other.yUnit.known || !c.yUnit.unit.KinematicOf(other.yUnit.unit) {
+		rho, known := w.density(c.slip.side())
+		if !known || !c.yUnit.known || !other.yUnit.known || !c.yUnit.unit.KinematicOf(other.yUnit.unit) {
 			continue
 		}
 		for _, r := range w.curves(c) {
 			r.y, r.u, r.uPlus = times(r.y, rho), times(r.u, rho), times(r.uPlus, rho)
-			r.yUnit = axis{unit: quantity.Unit{Symbol: "Pa", Dimension: other.yUnit.unit.Dimension, Factor: 1}, known: true}
+			r.parts, r.yTurned = w.withDensity(r, rho), true
+			r.yUnit = axis{unit: quantity.Unit{Symbol: "Pa", Dimension: other.yUnit.unit.Dimension, Factor: 1}, known: true, name: r.yUnit.name, symbol: "Pa"}
 		}
 		if c == w.reference || w.reference == nil {
 			w.yUnit = unit{c.yUnit.unit, "Pa"}
 		}
-		w.tell(notice.New("density-used", c.slip.Y.Column.Value+" of "+w.e.study.fileName(c.slip), quantity.Text(rho, 6)+" kg/m³", w.q.Case))
+		w.tell(notice.New("density-used", c.yUnit.name+" of "+w.e.study.fileName(c.slip), quantity.Text(rho, 6)+" kg/m³", w.q.Case))
 	}
+}
+
+// withDensity returns the parts of a curve that was multiplied by the density,
+// with the density's own.
+func (w *work) withDensity(c *curve, rho float64) []cardPart {
+	slope := make([]float64, len(c.y))
+	for i := range slope {
+		slope[i] = rho
+	}
+	parts := scaledParts(c.parts, slope)
+	in, err := w.e.input(w.q.Case, Density, c.slip.side())
+	if err != nil || in.u == 0 {
+		return parts
+	}
+	return addParts(parts, []cardPart{{in, times(c.y, in.u/rho)}})
 }
 
 // curves returns the curve, and with the finest run all runs of its family.

@@ -3,6 +3,7 @@ package study
 import (
 	"math"
 	"strconv"
+	"strings"
 
 	"weirmark/core/notice"
 	"weirmark/core/profile"
@@ -23,12 +24,22 @@ type curve struct {
 	uOpen bool      // u is there but its coverage is not known
 	xUnit axis
 	yUnit axis
+
+	// What a formula or a form did; see takeForms.
+	xTurned, yTurned bool
+	parts            []cardPart  // of the case card in y
+	inputs           []cardInput // of the case card that were used
+	slope            []float64   // of y by the value before the form; nil where there was none
+	rawUnit          axis        // of the value before the form
+	reduced          *reducing
 }
 
 // axis is the unit of a column; known is false where none was given.
 type axis struct {
-	unit  quantity.Unit
-	known bool
+	unit   quantity.Unit
+	known  bool
+	name   string // of the column, the formula or the form
+	symbol string // of the unit, as it is printed
 }
 
 func (c *curve) scalar() bool { return c.x == nil }
@@ -55,12 +66,19 @@ func (e *evaluation) load(slip *Slip) (*curve, []notice.Notice) {
 	if err != nil {
 		return nil, []notice.Notice{asNotice(err)}
 	}
-	l := loader{table: table, file: file.Name}
+	l := loader{e: e, slip: slip, table: table, file: file.Name}
 	c := &curve{slip: slip, table: table}
-	if slip.X.Column.Given() {
+	if slip.X.Given() {
 		c.x, c.xUnit = l.column(slip.X)
+		c.take(l.last, nil)
 	}
+	l.last = nil
 	c.y, c.yUnit = l.column(slip.Y)
+	if l.last != nil {
+		c.take(l.last, l.last.parts)
+		c.reduced = l.last
+	}
+	c.xTurned, c.yTurned = slip.X.Formula.Given(), slip.Y.Formula.Given()
 	if slip.U.Column.Given() {
 		l.uncertainty(c)
 	}
@@ -72,6 +90,13 @@ func (e *evaluation) load(slip *Slip) (*curve, []notice.Notice) {
 	}
 	if notice.Any(l.notices, notice.Stop) {
 		return nil, l.notices
+	}
+	if slip.Derive.Value == "" {
+		l.turnAxis(c)
+		l.takeForms(c)
+		if notice.Any(l.notices, notice.Stop) {
+			return nil, l.notices
+		}
 	}
 	if slip.Derive.Value == DeriveLift {
 		scalar, more := e.deriveLoop(c)
@@ -132,7 +157,17 @@ func blank(n int) []float64 {
 	return out
 }
 
+// take keeps what a formula took from the case card, and what that does to y.
+func (c *curve) take(r *reducing, parts []cardPart) {
+	if r != nil {
+		c.inputs, c.parts = append(c.inputs, r.binding.inputs...), addParts(c.parts, parts)
+	}
+}
+
 type loader struct {
+	e       *evaluation
+	slip    *Slip
+	last    *reducing // of the column that was made by a formula last
 	table   tablefile.Table
 	file    string
 	notices []notice.Notice
@@ -143,6 +178,9 @@ func (l *loader) tell(n notice.Notice) { l.notices = append(l.notices, n.In(l.fi
 // column returns a column in SI. A unit that is not given, or not known,
 // leaves the values as written.
 func (l *loader) column(use ColumnUse) ([]float64, axis) {
+	if use.Formula.Given() {
+		return l.formula(use)
+	}
 	column, err := l.table.Column(use.Column.Value)
 	if err != nil {
 		l.tell(asNotice(err))
@@ -154,14 +192,23 @@ func (l *loader) column(use ColumnUse) ([]float64, axis) {
 	}
 	symbol := use.Unit.Value
 	if symbol == "" {
-		return column.Values, axis{unit: quantity.One}
+		return column.Values, axis{unit: quantity.One, name: column.Name}
 	}
 	unit, err := quantity.Parse(symbol)
 	if err != nil {
-		l.tell(notice.New("unit-unknown", symbol, column.Name))
-		return column.Values, axis{unit: quantity.One}
+		l.tell(unknownUnit(symbol, column.Name))
+		return column.Values, axis{unit: quantity.One, name: column.Name, symbol: symbol}
 	}
-	return inSI(column.Values, unit), axis{unit, true}
+	return inSI(column.Values, unit), axis{unit, true, column.Name, symbol}
+}
+
+// unknownUnit says why a unit is not used. A level has no unit until it is said
+// of what and against which reference.
+func unknownUnit(symbol, column string) notice.Notice {
+	if strings.HasPrefix(strings.ToLower(symbol), "db") {
+		return notice.New("unit-level", symbol, column)
+	}
+	return notice.New("unit-unknown", symbol, column)
 }
 
 // inSI converts values; those of units that are SI already are not copied.
@@ -204,11 +251,11 @@ func (l *loader) bars(c *curve, use ColumnUse, k, side float64) []float64 {
 		unit, err := quantity.Parse(symbol)
 		switch {
 		case err != nil:
-			l.tell(notice.New("unit-unknown", symbol, column.Name))
+			l.tell(unknownUnit(symbol, column.Name))
 		case symbol == "%":
 			percent = true
 		case !unit.Same(c.yUnit.unit):
-			l.tell(notice.New("unit-dimension", slip.Y.Column.Value, slip.Y.Unit.Value, column.Name, symbol))
+			l.tell(notice.New("unit-dimension", slip.Y.Name(), slip.Y.Unit.Value, column.Name, symbol))
 			return nil
 		default:
 			step = unit
@@ -270,7 +317,7 @@ func place(c *curve, i int) string {
 	if c.scalar() {
 		return "row " + strconv.Itoa(i+1)
 	}
-	return c.slip.X.Column.Value + " = " + strconv.FormatFloat(c.xUnit.unit.FromSI(c.x[i]), 'g', 6, 64)
+	return c.xUnit.name + " = " + strconv.FormatFloat(c.xUnit.unit.FromSI(c.x[i]), 'g', 6, 64)
 }
 
 func anyKnown(values []float64) bool {

@@ -12,30 +12,6 @@ import (
 // pressure along its contour.
 const DeriveLift = "lift of a loop"
 
-// Symbols of a case card beside the density.
-const (
-	DynamicPressure = "q"
-	RefLength       = "L"
-	RefSpeed        = "U"
-	Angle           = "α"
-)
-
-// cardValue returns a reference quantity of the case, in SI.
-func (e *evaluation) cardValue(caseName, symbol string, dimension quantity.Dimension) (float64, bool) {
-	for _, c := range e.study.Cases {
-		if c.Name != caseName {
-			continue
-		}
-		for _, r := range c.References {
-			unit, err := quantity.Parse(r.Unit)
-			if r.Symbol == symbol && err == nil && unit.Dimension == dimension {
-				return unit.ToSI(r.Value), true
-			}
-		}
-	}
-	return 0, false
-}
-
 // deriveLoop turns a curve of pressures along a contour into one lift
 // coefficient. Coordinates and pressures that are no pure numbers need the
 // length and the dynamic pressure of the case; an unknown angle is zero, which
@@ -43,18 +19,18 @@ func (e *evaluation) cardValue(caseName, symbol string, dimension quantity.Dimen
 func (e *evaluation) deriveLoop(c *curve) (*curve, []notice.Notice) {
 	p := c.slip
 	file := e.study.fileName(p)
-	l := loader{table: c.table, file: file}
+	l := loader{e: e, slip: p, table: c.table, file: file}
 	second, unit := l.column(p.Contour)
 	if second == nil || c.x == nil {
 		return nil, append(l.notices, notice.New("loop-contour", file).In(file))
 	}
-	length, ok := e.scaleOf(c.xUnit, p.Case.Value, RefLength, quantity.Dimension{1})
-	height, okHeight := e.scaleOf(unit, p.Case.Value, RefLength, quantity.Dimension{1})
-	pressure, okPressure := e.scaleOf(c.yUnit, p.Case.Value, DynamicPressure, quantity.Dimension{-1, 1, -2})
+	length, ok := e.scaleOf(c.xUnit, p.Case.Value, p.side(), RefLength)
+	height, okHeight := e.scaleOf(unit, p.Case.Value, p.side(), RefLength)
+	pressure, okPressure := e.scaleOf(c.yUnit, p.Case.Value, p.side(), DynamicPressure)
 	if !ok || !okHeight || !okPressure {
 		return nil, append(l.notices, notice.New("loop-references", file, p.Case.Value).In(file))
 	}
-	alpha, known := e.cardValue(p.Case.Value, Angle, quantity.Dimension{0, 0, 0, 0, 1})
+	alpha, known := e.cardValue(p.Case.Value, Angle, p.side())
 	if !known {
 		l.tell(notice.New("loop-angle", file))
 	}
@@ -66,18 +42,20 @@ func (e *evaluation) deriveLoop(c *curve) (*curve, []notice.Notice) {
 	scalar := *c
 	scalar.x, scalar.u = nil, nil
 	scalar.y = []float64{section.Lift}
-	scalar.yUnit = axis{unit: quantity.One, known: true}
+	scalar.yUnit = pureAxis(p.Y.Name())
 	return &scalar, l.notices
 }
 
 // scaleOf returns what makes a column a pure number: one where it is one, else
 // the reference quantity of the case.
-func (e *evaluation) scaleOf(a axis, caseName, symbol string, dimension quantity.Dimension) (float64, bool) {
+func (e *evaluation) scaleOf(a axis, caseName, side, symbol string) (float64, bool) {
 	if a.unit.Same(quantity.One) {
 		return 1, true
 	}
-	v, known := e.cardValue(caseName, symbol, dimension)
-	return v, known && v > 0 && a.unit.Dimension == dimension
+	v, known := e.cardValue(caseName, symbol, side)
+	wanted, _ := cardSymbol(symbol)
+	unit, err := quantity.Parse(wanted.Unit)
+	return v, known && v > 0 && err == nil && a.unit.Same(unit)
 }
 
 // otherReferences holds the first reference of a scalar against the others:

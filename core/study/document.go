@@ -167,6 +167,7 @@ func (s *Study) Clone() *Study {
 	c.Cases = append([]Card{}, s.Cases...)
 	for i := range c.Cases {
 		c.Cases[i].References = append([]ReferenceQuantity{}, c.Cases[i].References...)
+		c.Cases[i].Axes = append([]Axes(nil), c.Cases[i].Axes...)
 	}
 	if s.Code != nil {
 		code := *s.Code

@@ -111,7 +111,7 @@ func (w *work) doubtRanges() {
 		return
 	}
 	print := func(v float64) string { return quantity.Text(w.xUnit.FromSI(v), 4) }
-	w.ask(2, "the unit of "+r.slip.X.Column.Value, "range-scaled", r.slip.X.Column.Value, print(rLo), print(rHi), print(sLo), print(sHi), quantity.Text(factor, 4), scaleWords(factor))
+	w.ask(2, "the unit of "+r.xUnit.name, "range-scaled", r.xUnit.name, print(rLo), print(rHi), print(sLo), print(sHi), quantity.Text(factor, 4), scaleWords(factor))
 }
 
 // scales are the pairs of units whose numbers differ by a factor.
@@ -144,7 +144,7 @@ func (w *work) doubtMagnitude() {
 		return
 	}
 	if least, found := plausibility.Magnitude(s.y); found {
-		w.ask(2, "the sign of "+s.slip.Y.Column.Value, "curve-magnitude", s.slip.Y.Column.Value+" of "+w.e.study.fileName(s.slip), quantity.Text(w.yUnit.FromSI(least), 2))
+		w.ask(2, "the sign of "+s.yUnit.name, "curve-magnitude", s.yUnit.name+" of "+w.e.study.fileName(s.slip), quantity.Text(w.yUnit.FromSI(least), 2))
 	}
 }
 
@@ -195,7 +195,7 @@ func (w *work) doubtCorrelation(e []float64) {
 // knownCauses are the ratios that the reference quantities of the case would
 // explain.
 func (w *work) knownCauses() []plausibility.Cause {
-	if rho, known := w.density(); known {
+	if rho, known := w.density(""); known {
 		return []plausibility.Cause{{Ratio: rho, Words: "a pressure divided by density (1/ρ = " + quantity.Text(1/rho, 3) + ") against a pressure"}}
 	}
 	return nil

@@ -25,16 +25,16 @@ func wallUnits(name string) bool {
 // doubtWallUnits stops a comparison of wall units with a length: whose
 // friction velocity made them is not known. It reports whether it did.
 func (w *work) doubtWallUnits(s, d *curve) bool {
-	if s.scalar() || d.scalar() || wallUnits(s.slip.X.Column.Value) == wallUnits(d.slip.X.Column.Value) {
+	if s.scalar() || d.scalar() || wallUnits(s.xUnit.name) == wallUnits(d.xUnit.name) {
 		return false
 	}
 	plus, other := s, d
-	if wallUnits(d.slip.X.Column.Value) {
+	if wallUnits(d.xUnit.name) {
 		plus, other = d, s
 	}
-	n := notice.New("wall-units", plus.slip.X.Column.Value, w.e.study.fileName(plus.slip), other.slip.X.Column.Value, w.e.study.fileName(other.slip))
+	n := notice.New("wall-units", plus.xUnit.name, w.e.study.fileName(plus.slip), other.xUnit.name, w.e.study.fileName(other.slip))
 	w.tell(n)
-	w.stop(2, "a length for "+plus.slip.X.Column.Value, slipTarget(plus.slip, "x.column"), n)
+	w.stop(2, "a length for "+plus.xUnit.name, slipTarget(plus.slip, "x.column"), n)
 	return true
 }
 
@@ -103,7 +103,7 @@ func (w *work) doubtSwapped() {
 				continue
 			}
 			if r, _ := likeness(c, other.Values, runs); r > alike {
-				w.ask(2, "the column of "+w.q.Quantity+" in "+w.e.study.fileName(c.slip), "columns-swapped", other.Name, w.e.study.fileName(c.slip), c.slip.Y.Column.Value, strconv.Itoa(n), quantity.Text(r, 3), quantity.Text(own, 2))
+				w.ask(2, "the column of "+w.q.Quantity+" in "+w.e.study.fileName(c.slip), "columns-swapped", other.Name, w.e.study.fileName(c.slip), c.yUnit.name, strconv.Itoa(n), quantity.Text(r, 3), quantity.Text(own, 2))
 				return
 			}
 		}
@@ -115,7 +115,7 @@ func (e *evaluation) curvesOf(q *Question) []*curve {
 	var runs []*curve
 	for i := range e.study.Slips {
 		p := &e.study.Slips[i]
-		if !q.belongs(p, Simulation) || !p.X.Column.Given() {
+		if !q.belongs(p, Simulation) || !p.X.Given() {
 			continue
 		}
 		if c, _ := e.load(p); c != nil && c.x != nil {

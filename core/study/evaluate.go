@@ -219,7 +219,7 @@ func (e *evaluation) workWith(w *work) Cell {
 	w.cell = Cell{
 		Case: q.Case, Condition: q.Condition, Quantity: q.Quantity, Symbol: q.Symbol, Model: model,
 		Reference: q.ReferenceID, Kind: q.Kind.Value, Use: q.Use.Value, Downward: q.Downward, Choices: choices,
-		Unit: "1", XUnit: "1", Degrees: None, K95: None,
+		Corrected: q.Corrected, Unit: "1", XUnit: "1", Degrees: None, K95: None,
 		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Scores: []ScoreLine{}, Regions: []RegionLine{}, Monitors: []MonitorLine{}, Balances: []BalanceLine{}, Residuals: []ResidualLine{}, Conditions: []Compared{}, Sources: []SourceLine{}, Fragile: []Fragility{},
 		Notices: []notice.Notice{}, FilesUsed: []string{},
 		Crossings: Crossings{Simulation: []Crossing{}, Reference: []Crossing{}},
@@ -227,6 +227,8 @@ func (e *evaluation) workWith(w *work) Cell {
 	}
 	w.findReference()
 	w.findSimulation()
+	w.takeCard()
+	w.mapping()
 	if w.commonGround() {
 		w.matchConditions()
 		w.doubtCurves()
@@ -405,7 +407,7 @@ func (w *work) identicalRuns() {
 		}
 		grids[p.Grid.Value] = p
 		f := w.e.study.File(p.File)
-		key := f.SHA256 + " " + p.Table + " " + p.Y.Column.Value
+		key := f.SHA256 + " " + p.Table + " " + p.Y.Name()
 		if other, twice := first[key]; twice && other.File != p.File {
 			w.need(1, true, "the right file of grid "+cmp.Or(p.Grid.Value, f.Name), slipTarget(p, "grid"), "grid-identical", w.e.study.fileName(other), f.Name)
 			continue
@@ -538,16 +540,18 @@ func (p *Slip) fields() []slipField {
 		{path: "role", name: "role", field: p.Role, needed: true, course: 2},
 		{path: "case", name: "case", field: p.Case, needed: true, course: 2},
 		{path: "quantity", name: "quantity", field: p.Quantity, needed: !p.anyQuantity(), course: 2},
-		{path: "y.column", name: "column of values", field: p.Y.Column, needed: true, course: 2},
-		{path: "y.unit", name: "unit of " + cmp.Or(p.Y.Column.Value, "the values"), field: p.Y.Unit, needed: p.Role.Value != Balance && p.Role.Value != Residual, course: 2, unitOf: cmp.Or(p.Y.Column.Value, "the values")},
+		{path: "y.column", name: "column of values", field: p.Y.Column, needed: !p.Y.Formula.Given(), course: 2},
+		{path: "y.formula", name: "formula of values", field: p.Y.Formula, course: 2},
+		{path: "y.unit", name: "unit of " + cmp.Or(p.Y.Name(), "the values"), field: p.Y.Unit, needed: p.Role.Value != Balance && p.Role.Value != Residual, course: 2, unitOf: cmp.Or(p.Y.Name(), "the values")},
 	}
 	if p.Role.Value != Reference {
 		all = append(all, slipField{path: "model", name: "model", field: p.Model, course: 2})
 	}
-	if p.X.Column.Given() {
+	if p.X.Given() {
 		all = append(all,
-			slipField{path: "x.column", name: "column of stations", field: p.X.Column, needed: true, course: 2},
-			slipField{path: "x.unit", name: "unit of " + p.X.Column.Value, field: p.X.Unit, needed: !p.ofRun(), course: 2, unitOf: p.X.Column.Value})
+			slipField{path: "x.column", name: "column of stations", field: p.X.Column, needed: !p.X.Formula.Given(), course: 2},
+			slipField{path: "x.formula", name: "formula of stations", field: p.X.Formula, course: 2},
+			slipField{path: "x.unit", name: "unit of " + p.X.Name(), field: p.X.Unit, needed: !p.ofRun(), course: 2, unitOf: p.X.Name()})
 	}
 	if p.U.Column.Given() {
 		all = append(all,

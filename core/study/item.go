@@ -3,10 +3,8 @@ package study
 import (
 	"slices"
 	"strconv"
-	"strings"
 
 	"weirmark/core/metric"
-	"weirmark/core/quantity"
 )
 
 // Kinds of list items that a person can add to a question or to the study.
@@ -34,6 +32,12 @@ func (s *Study) AddItem(t Target, at string) error {
 		s.Application = append(s.Application, Condition{})
 	case t.Kind == ItemDerived && q != nil:
 		s.askScalar(q)
+	case t.Kind == ItemReference && s.hasCase(t.ID):
+		c := s.cardMade(t.ID)
+		c.References = append(c.References, ReferenceQuantity{Origin: "entered"})
+	case t.Kind == ItemAxes && s.hasCase(t.ID):
+		c := s.cardMade(t.ID)
+		c.Axes = append(c.Axes, Axes{})
 	default:
 		return refuse("a new "+t.Kind, t.ID)
 	}
@@ -58,6 +62,12 @@ func (s *Study) RemoveItem(t Target, at, why string) error {
 		*list = append((*list)[:i:i], (*list)[i+1:]...)
 	case t.Kind == ItemApplication && i < len(s.Application):
 		s.Application = append(s.Application[:i:i], s.Application[i+1:]...)
+	case t.Kind == ItemReference && i < len(s.Card(t.ID).References):
+		c := s.cardMade(t.ID)
+		c.References = append(c.References[:i:i], c.References[i+1:]...)
+	case t.Kind == ItemAxes && i < len(s.Card(t.ID).Axes):
+		c := s.cardMade(t.ID)
+		c.Axes = append(c.Axes[:i:i], c.Axes[i+1:]...)
 	default:
 		return refuse("removal of a "+t.Kind, t.Field)
 	}
@@ -108,7 +118,25 @@ func (s *Study) enterItem(t Target, value string) (string, error) {
 			return number(&c.Value, value, -1e30, 1e30)
 		}
 	}
+	if c := s.card(t.ID); ok && c != nil {
+		switch {
+		case t.Kind == ItemReference && i < len(c.References):
+			return c.References[i].enter(field, value)
+		case t.Kind == ItemAxes && i < len(c.Axes):
+			return c.Axes[i].enter(field, value)
+		}
+	}
 	return "", refuse(s.Name(t), value)
+}
+
+// hasCase reports whether a question is of a case.
+func (s *Study) hasCase(name string) bool {
+	for i := range s.Questions {
+		if s.Questions[i].Case == name {
+			return true
+		}
+	}
+	return false
 }
 
 func exchange(text *string, value string) (string, error) {
@@ -140,66 +168,6 @@ func (m *Matching) enter(field, value string) (string, error) {
 		}
 	}
 	return "", refuse(field, value)
-}
-
-// cardFields are the reference quantities of a case that are entered by name.
-var cardFields = map[string]ReferenceQuantity{
-	"density":  {Symbol: Density, Unit: "kg/m^3"},
-	"pressure": {Symbol: DynamicPressure, Unit: "Pa"},
-	"length":   {Symbol: RefLength, Unit: "m"},
-	"speed":    {Symbol: RefSpeed, Unit: "m/s"},
-	"angle":    {Symbol: Angle, Unit: "deg"},
-}
-
-// CardValue returns what was entered for a field of a case card, as text.
-func (s *Study) CardValue(caseName, field string) string {
-	for _, c := range s.Cases {
-		for _, r := range c.References {
-			if c.Name == caseName && r.Symbol == cardFields[field].Symbol {
-				return quantity.Typed(r.Value)
-			}
-		}
-	}
-	return ""
-}
-
-// enterCard sets a reference quantity of a case in the unit of its field; the
-// empty value takes it back.
-func (s *Study) enterCard(caseName string, r ReferenceQuantity, value string) (string, error) {
-	card := s.card(caseName)
-	before := ""
-	kept := []ReferenceQuantity{}
-	for _, have := range card.References {
-		if have.Symbol == r.Symbol {
-			before = quantity.Typed(have.Value)
-			continue
-		}
-		kept = append(kept, have)
-	}
-	if strings.TrimSpace(value) != "" {
-		lowest := 1e-12
-		if r.Symbol == Angle {
-			lowest = -360
-		}
-		if _, err := number(&r.Value, value, lowest, 1e12); err != nil {
-			return before, err
-		}
-		r.Origin = "entered"
-		kept = append(kept, r)
-	}
-	card.References = kept
-	return before, nil
-}
-
-// card returns the card of a case, made where there is none.
-func (s *Study) card(name string) *Card {
-	for i := range s.Cases {
-		if s.Cases[i].Name == name {
-			return &s.Cases[i]
-		}
-	}
-	s.Cases = append(s.Cases, Card{Name: name, References: []ReferenceQuantity{}})
-	return &s.Cases[len(s.Cases)-1]
 }
 
 // CriteriaOf returns the criteria of the scores of a question: its own, or

@@ -31,7 +31,9 @@ func TestItems(t *testing.T) {
 	set(study.ItemApplication, "", "0.name", "α")
 	set(study.ItemApplication, "", "0.unit", "°")
 	set(study.ItemApplication, "", "0.value", "11")
-	set("case", "C1", "density", "1.196")
+	do(s.AddItem(study.Target{Kind: study.ItemReference, ID: "C1"}, "09:00"))
+	set(study.ItemReference, "C1", "0.symbol", "rho")
+	set(study.ItemReference, "C1", "0.value", "1.196")
 	set("question", q, "scores.fraction", "0.25")
 	c := study.Evaluate(s, study.Options{}).Cells[1]
 	if math.Abs(float64(c.Stations[0].S)-.03015) > 1e-12 || c.Application == nil || !c.Application.Outside || s.Cases[0].References[0].Value != 1.196 {
@@ -39,11 +41,11 @@ func TestItems(t *testing.T) {
 	}
 	do(s.RemoveItem(study.Target{Kind: study.ItemCondition, ID: q, Field: "0"}, "09:01", "not needed"))
 	do(s.RemoveItem(study.Target{Kind: study.ItemApplication, Field: "0"}, "09:01", ""))
-	set("case", "C1", "density", "")
+	do(s.RemoveItem(study.Target{Kind: study.ItemReference, ID: "C1", Field: "0"}, "09:01", ""))
 	if len(s.Questions[0].Conditions)+len(s.Application)+len(s.Cases[0].References) != 0 {
 		t.Errorf("%+v", s)
 	}
-	for _, bad := range []study.Target{{Kind: study.ItemCondition, ID: q, Field: "7.name"}, {Kind: study.ItemRegion, ID: "nowhere", Field: "0.from"}, {Kind: "case", ID: "C1", Field: "colour"}} {
+	for _, bad := range []study.Target{{Kind: study.ItemCondition, ID: q, Field: "7.name"}, {Kind: study.ItemRegion, ID: "nowhere", Field: "0.from"}, {Kind: study.ItemReference, ID: "C1", Field: "0.colour"}} {
 		if err := s.Set(bad, "1", "", ""); err == nil {
 			t.Errorf("%+v was taken", bad)
 		}

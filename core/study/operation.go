@@ -187,8 +187,9 @@ func (s *Study) Name(t Target) string {
 		if i, field, ok := sourceField(t.Field); ok && i < len(QualityItems) {
 			return field + " of " + QualityItems[i] + ", case " + t.ID
 		}
-	case "case":
-		return fieldName(t.Field) + " of case " + t.ID
+	case ItemReference, ItemAxes:
+		_, field, _ := sourceField(t.Field)
+		return field + " of " + s.itemName(t) + " of case " + t.ID
 	case ItemCondition, ItemRegion, ItemCriterion:
 		if q := s.questionOf(t.ID); q != nil {
 			_, field, _ := sourceField(t.Field)
@@ -238,6 +239,9 @@ var fieldNames = map[string]string{
 	"input":   "input of the run", "input_at": "value of the input", "upper.column": "column of the upper bar", "upper.unit": "unit of the upper bar", "bars_as": "what the bars hold",
 	"levels.facility": "column of the facility", "levels.day": "column of the day", "levels.rig": "column of the set-up", "levels.run": "column of the run",
 	"digitised": "record of the digitising", "no_input": "why the inputs have no uncertainty", "resolution": "resolution of the data", "flow_rate": "stated flow rate", "flow_rate_u": "uncertainty of the stated flow rate",
+	"y.formula": "formula of values", "x.formula": "formula of stations", "datum": "datum of the pressure",
+	"form.name": "form of the values", "form.simulation": "form of the simulation", "form.data": "form of the data", "x_form.name": "form of the stations", "x_form.simulation": "stations of the simulation", "x_form.data": "stations of the data",
+	"corrected.state": "corrections of the data", "corrected.how": "how the data were corrected",
 	"reference_id": "name of the reference", "prepared.name": "prepared by", "prepared.date": "prepared on", "checked.name": "checked by", "checked.date": "checked on",
 	"approved.name": "approved by", "approved.date": "approved on",
 }
@@ -286,6 +290,7 @@ func (p *Slip) entry(path string) *Field {
 	return map[string]*Field{
 		"role": &p.Role, "case": &p.Case, "quantity": &p.Quantity, "model": &p.Model, "grid": &p.Grid, "cells": &p.Cells, "y_plus": &p.YPlus, "settings": &p.Settings, "step.column": &p.Step.Column, "step.unit": &p.Step.Unit, "dimensions": &p.Dimensions,
 		"x.column": &p.X.Column, "x.unit": &p.X.Unit, "y.column": &p.Y.Column, "y.unit": &p.Y.Unit,
+		"x.formula": &p.X.Formula, "y.formula": &p.Y.Formula, "datum": &p.Datum,
 		"u.column": &p.U.Column, "u.unit": &p.U.Unit, "u_factor": &p.UFactor, "size.column": &p.Size.Column, "size.unit": &p.Size.Unit, "axis": &p.Axis, "branch": &p.Branch, "derive": &p.Derive, "contour.column": &p.Contour.Column, "contour.unit": &p.Contour.Unit, "u_basis": &p.UBasis,
 		"input": &p.Input, "input_at": &p.InputAt, "upper.column": &p.Upper.Column, "upper.unit": &p.Upper.Unit, "bars_as": &p.BarsAs, "flow_rate": &p.FlowRate, "flow_rate_u": &p.FlowRateU,
 		"levels.facility": &p.Levels.Facility, "levels.day": &p.Levels.Day, "levels.rig": &p.Levels.Rig, "levels.run": &p.Levels.Run,
@@ -323,15 +328,11 @@ func (s *Study) enter(t Target, value string) (string, error) {
 		}
 	case "quality":
 		return s.enterQuality(t.ID, t.Field, value)
-	case ItemCondition, ItemRegion, ItemCriterion, ItemApplication:
+	case ItemCondition, ItemRegion, ItemCriterion, ItemApplication, ItemReference, ItemAxes:
 		return s.enterItem(t, value)
 	case ItemRun:
 		if q := s.questionOf(t.ID); q != nil {
 			return q.enterRun(t.Field, value)
-		}
-	case "case":
-		if r, known := cardFields[t.Field]; known {
-			return s.enterCard(t.ID, r, value)
 		}
 	}
 	if text := s.text(t); text != nil {
@@ -424,8 +425,18 @@ func (q *Question) enter(path, value string) (string, error) {
 	if key, of := strings.CutPrefix(path, "derive."); of {
 		return q.enterDerive(key, value)
 	}
+	if field, found := strings.CutPrefix(path, "form."); found {
+		return q.Form.enter(field, value, false)
+	}
+	if field, found := strings.CutPrefix(path, "x_form."); found {
+		return q.XForm.enter(field, value, true)
+	}
 	c := &q.Choices
 	switch path {
+	case "corrected.state":
+		return oneWord(&q.Corrected.State, value, "", Corrected, Uncorrected)
+	case "corrected.how":
+		return exchange(&q.Corrected.How, value)
 	case "choices.k":
 		return number(&c.K, value, 0.1, 10)
 	case "choices.k_num":

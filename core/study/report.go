@@ -140,6 +140,12 @@ type Cell struct {
 	RoundOff  *RoundOffLine  `json:"round_off"` // null where no second run of another precision is given
 	NumSums   *NumSums       `json:"num_sums"`  // null where u_num has no two parts
 
+	Mapping    []string        `json:"mapping,omitempty"`    // how each file's columns were used, as sentences
+	References []ReferenceLine `json:"references,omitempty"` // of the case card
+	Axes       []Axes          `json:"axes,omitempty"`
+	Corrected  Correction      `json:"corrected,omitzero"`
+	Reduction  *Reduction      `json:"reduction,omitempty"`
+
 	Curve     Curve           `json:"curve"` // the simulation as read, for the figure
 	Notices   []notice.Notice `json:"notices"`
 	FilesUsed []string        `json:"files_used"` // IDs

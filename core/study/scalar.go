@@ -119,7 +119,7 @@ func (w *work) deriveEach(kind *derived.Kind) bool {
 			return c, true
 		}
 		mixed = true
-		t, ok := w.taking(kind, axisUnit(c.xUnit, c.slip.X), axisUnit(c.yUnit, c.slip.Y))
+		t, ok := w.taking(kind, axisUnit(c.xUnit), axisUnit(c.yUnit))
 		if !ok {
 			return nil, false
 		}
@@ -161,7 +161,7 @@ func (w *work) deriveEach(kind *derived.Kind) bool {
 	}
 	parts := w.parts
 	w.asScalar = func(c *curve) (*curve, error) {
-		t, ok := w.taking(kind, axisUnit(c.xUnit, c.slip.X), axisUnit(c.yUnit, c.slip.Y))
+		t, ok := w.taking(kind, axisUnit(c.xUnit), axisUnit(c.yUnit))
 		if !ok {
 			return nil, derived.ErrSecond
 		}
@@ -201,7 +201,7 @@ func (w *work) deriveOthers(kind *derived.Kind) {
 		if c.scalar() {
 			continue
 		}
-		if t, ok := w.taking(kind, axisUnit(c.xUnit, c.slip.X), axisUnit(c.yUnit, c.slip.Y)); ok {
+		if t, ok := w.taking(kind, axisUnit(c.xUnit), axisUnit(c.yUnit)); ok {
 			if from, ok := w.wholeOf(t, c, nil); ok {
 				if got, ok := w.take(t, c, from, "further reference"); ok {
 					w.sides(t, c, from, "further reference", got, "")
@@ -343,14 +343,14 @@ func over(a, b string) string {
 // case.
 func (w *work) loopScales(t *taking, settings *[]DerivedSetting) bool {
 	t.unit = unit{quantity.One, "1"}
-	length, okX := w.e.scaleOf(axis{unit: t.x.Unit}, w.q.Case, RefLength, quantity.Dimension{1})
-	pressure, okY := w.e.scaleOf(axis{unit: t.y.Unit}, w.q.Case, DynamicPressure, quantity.Dimension{-1, 1, -2})
+	length, okX := w.e.scaleOf(axis{unit: t.x.Unit}, w.q.Case, OfData, RefLength)
+	pressure, okY := w.e.scaleOf(axis{unit: t.y.Unit}, w.q.Case, OfData, DynamicPressure)
 	if !okX || !okY {
 		w.refuseDerived(notice.New("loop-references", w.q.label(), w.q.Case), w.q.target("derive.kind"))
 		return false
 	}
 	t.length, t.pressure = length, pressure
-	alpha, known := w.e.cardValue(w.q.Case, Angle, quantity.Dimension{0, 0, 0, 0, 1})
+	alpha, known := w.e.cardValue(w.q.Case, Angle, OfData)
 	if !known && !notice.Has(w.cell.Notices, "loop-angle") {
 		w.tell(notice.New("loop-angle", w.q.label()))
 	}
@@ -413,7 +413,7 @@ func (w *work) magnitude(t *taking, c *curve, from derived.Curve) bool {
 	if t.settings.Numbers[derived.KeyLevel] != 0 || least < 0 || !corner && least > 0.02*largest {
 		return false
 	}
-	w.need(2, true, "the sign of "+c.slip.Y.Column.Value, slipTarget(c.slip, "y.column"), "derive-magnitude", c.slip.Y.Column.Value+" of "+w.e.study.fileName(c.slip), quantity.Text(t.y.FromSI(least), 2), t.kind.Name)
+	w.need(2, true, "the sign of "+c.yUnit.name, slipTarget(c.slip, "y.column"), "derive-magnitude", c.yUnit.name+" of "+w.e.study.fileName(c.slip), quantity.Text(t.y.FromSI(least), 2), t.kind.Name)
 	return true
 }
 
@@ -649,7 +649,10 @@ func (w *work) propagated(t *taking, reference, simulation derived.Curve) []part
 		}
 	}
 	if w.derivedBoth && !t.kind.Loop {
+		w.cardSources()
 		w.interpolationPart()
+	} else {
+		w.cardLost(t.kind.Name)
 	}
 	parts := w.parts
 	w.parts = nil
@@ -830,7 +833,7 @@ func (w *work) derivedRuns(t *taking, finest derived.Scalar) []run {
 func scalarCurve(t *taking, c *curve, value float64) *curve {
 	slip := *c.slip
 	slip.X, slip.Y.Unit = ColumnUse{}, Field{Value: t.unit.symbol, By: slip.Y.Unit.By}
-	return &curve{slip: &slip, table: c.table, y: []float64{value}, yUnit: axis{unit: t.unit.Unit, known: true}}
+	return &curve{slip: &slip, table: c.table, y: []float64{value}, yUnit: axis{unit: t.unit.Unit, known: true, name: c.yUnit.name, symbol: t.unit.symbol}}
 }
 
 // becomeScalar lets the cell go on as one of two values.

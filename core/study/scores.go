@@ -81,9 +81,11 @@ func (w *work) scaled(ask *Scoring, m metric.Summary) {
 // scale of the quantity is told.
 func (w *work) scale(ask *Scoring) (float64, string, bool) {
 	lo, hi := profile.Limits(w.d)
-	of := func(symbol, name string, dimension quantity.Dimension) (float64, string, bool) {
-		v, known := w.e.cardValue(w.q.Case, symbol, dimension)
-		if !known || !(v > 0) || w.yUnit.Dimension != dimension {
+	of := func(symbol, name string) (float64, string, bool) {
+		v, known := w.e.cardValue(w.q.Case, symbol, OfData)
+		wanted, _ := cardSymbol(symbol)
+		unit, err := quantity.Parse(wanted.Unit)
+		if !known || !(v > 0) || err != nil || !w.yUnit.Same(unit) {
 			w.tell(notice.New("scale-missing", name, w.q.label()))
 			return 0, "", false
 		}
@@ -97,9 +99,9 @@ func (w *work) scale(ask *Scoring) (float64, string, bool) {
 		}
 		return mean, "mean |D|", mean > 0
 	case ScaleSpeed:
-		return of(RefSpeed, "reference speed U", quantity.Dimension{1, 0, -1})
+		return of(RefSpeed, "reference speed U")
 	case ScalePressure:
-		return of(DynamicPressure, "dynamic pressure q", quantity.Dimension{-1, 1, -2})
+		return of(DynamicPressure, "dynamic pressure q")
 	case ScaleEntered:
 		if !(ask.ScaleValue > 0) {
 			w.tell(notice.New("scale-missing", "the entered scale", w.q.label()))

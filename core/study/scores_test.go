@@ -113,9 +113,7 @@ func TestScalesOfMeasures(t *testing.T) {
 	} {
 		s := four()
 		s.Questions[0].Scores = &study.Scoring{Scale: row.scale, ScaleValue: 50}
-		if err := s.Set(study.Target{Kind: "case", ID: "C", Field: "speed"}, "31", "", ""); err != nil {
-			t.Fatal(err)
-		}
+		s.Cases = []study.Card{{Name: "C", References: []study.ReferenceQuantity{{Symbol: study.RefSpeed, Value: 31, Unit: "m/s"}}}}
 		c := only(t, s)
 		for measure, want := range map[string]float64{"mean E": .75, "mean |E|": 1.75, "RMSE": math.Sqrt(4.25), "largest |E|": 3} {
 			l := scoreOf(t, c, measure+" / "+row.name)

@@ -231,7 +231,7 @@ func (w *work) takeStandIn(shown map[string]bool) {
 			continue
 		}
 		shown[p.Grid.Value] = true
-		u := axisUnit(c.yUnit, p.Y)
+		u := axisUnit(c.yUnit)
 		var opt settling.Options
 		m, line := w.judged(c, other.Quantity, u, &opt)
 		line.Quantity, line.Unit = other.Quantity, u.symbol
@@ -353,6 +353,9 @@ type judgedSeries struct {
 // judge judges a monitor once for equal ingredients.
 func (e *evaluation) judge(c *curve, values []float64, shown string, opt settling.Options) settling.Monitor {
 	p := c.slip
+	if c.yTurned || c.xTurned { // the case card is in it
+		return settling.Judge(settling.Series{At: c.x, Value: values}, opt)
+	}
 	key := judgedSeries{e.files[p.File].SHA256 + e.study.File(p.File).readingText(), p.Table, p.X.Column.Value, p.Y.Column.Value, c.xUnit.unit, c.yUnit.unit, shown, opt}
 	if m, known := e.judged[key]; known {
 		return m
@@ -392,7 +395,7 @@ const monitorPoints = 400
 // monitorLine is a judgement in the unit that it was made in.
 func monitorLine(c *curve, file string, values []float64, m settling.Monitor, entered string, uGrid float64) MonitorLine {
 	line := MonitorLine{
-		Grid: c.slip.Grid.Value, File: file, Axis: cmp.Or(c.slip.Axis.Value, AxisIterations), XName: c.slip.X.Column.Value,
+		Grid: c.slip.Grid.Value, File: file, Axis: cmp.Or(c.slip.Axis.Value, AxisIterations), XName: c.xUnit.name,
 		Class: string(m.Class), Rule: m.Rule, Mean: Number(m.Mean), U: Number(m.U), Entered: entered, From: Number(m.Window[0]), To: Number(m.Window[1]),
 		Drift: Number(m.Drift), Change: Number(m.Drift * m.Scale), Per: Number(m.Per), Limit: Number(m.Limit), Remaining: Number(m.Remaining),
 		Period: Number(m.Period), Cycles: m.Cycles, HalfRange: Number(m.HalfRange), OfGrid: None, Sampling: sampling(m.Stat),

@@ -88,7 +88,7 @@ func (w *work) flux(c *curve) (settling.Flux, bool) {
 		}
 		f.Scale = scale
 	}
-	u := axisUnit(c.yUnit, p.Y)
+	u := axisUnit(c.yUnit)
 	y := inUnit(c.y, c.yUnit, u)
 	row := -1
 	for i := range y {

@@ -39,10 +39,9 @@ func (w *work) settleUnits() bool {
 	if lead == nil {
 		return false
 	}
-	w.yUnit = axisUnit(lead.yUnit, lead.slip.Y)
-	w.xUnit = axisUnit(lead.xUnit, lead.slip.X)
+	w.yUnit, w.xUnit = axisUnit(lead.yUnit), axisUnit(lead.xUnit)
 	w.cell.Unit, w.cell.XUnit = w.yUnit.symbol, w.xUnit.symbol
-	w.cell.XName, w.cell.Scalar = lead.slip.X.Column.Value, lead.scalar()
+	w.cell.XName, w.cell.Scalar = lead.xUnit.name, lead.scalar()
 	if s == nil || d == nil {
 		return s != nil // a grid study can be shown without data
 	}
@@ -56,9 +55,9 @@ func (w *work) settleUnits() bool {
 		return false
 	}
 	w.byDensity(s, d)
-	ok := w.sameUnits(s.yUnit, d.yUnit, s.slip.Y, d.slip.Y, &w.yUnit, "y.unit")
+	ok := w.sameUnits(s.yUnit, d.yUnit, &w.yUnit, "y.unit")
 	if !s.scalar() {
-		ok = w.sameUnits(s.xUnit, d.xUnit, s.slip.X, d.slip.X, &w.xUnit, "x.unit") && ok
+		ok = w.sameUnits(s.xUnit, d.xUnit, &w.xUnit, "x.unit") && ok
 	}
 	w.cell.Unit, w.cell.XUnit = w.yUnit.symbol, w.xUnit.symbol
 	return ok
@@ -71,24 +70,24 @@ func shape(c *curve) string {
 	return "a curve"
 }
 
-func axisUnit(a axis, use ColumnUse) unit {
+func axisUnit(a axis) unit {
 	if !a.known {
-		return unit{quantity.One, use.Unit.Value}
+		return unit{quantity.One, a.symbol}
 	}
-	return unit{a.unit, use.Unit.Value}
+	return unit{a.unit, a.symbol}
 }
 
 // sameUnits settles one axis. Where one side states no unit the other's is
 // taken for both, which the open point of the missing unit says.
-func (w *work) sameUnits(s, d axis, sUse, dUse ColumnUse, u *unit, field string) bool {
-	both, refusal := sameAxis(d, s, dUse.Column.Value, sUse.Column.Value)
+func (w *work) sameUnits(s, d axis, u *unit, field string) bool {
+	both, refusal := sameAxis(d, s, d.name, s.name)
 	if refusal != nil {
 		w.tell(*refusal)
 		w.stop(2, "a common unit of "+w.q.Quantity, slipTarget(w.finest().slip, field), *refusal)
 		return false
 	}
 	if !d.known && s.known {
-		*u = unit{both, sUse.Unit.Value}
+		*u = unit{both, s.symbol}
 	}
 	return true
 }
@@ -184,7 +183,7 @@ func (w *work) tellExcluded() {
 // resample answers stations, in SI, from one simulation.
 func (w *work) resample(c *curve, at []float64, method interpolate.Method) station.Resampled {
 	x, y := inUnit(c.x, c.xUnit, w.xUnit), inUnit(c.y, c.yUnit, w.yUnit)
-	return station.Resample(w.e.study.fileName(c.slip), c.slip.X.Column.Value, x, y, at, station.Options{Method: method, Show: w.place})
+	return station.Resample(w.e.study.fileName(c.slip), c.xUnit.name, x, y, at, station.Options{Method: method, Show: w.place})
 }
 
 // place prints a place on the axis of stations, in the unit of the cell.
@@ -215,12 +214,7 @@ func (w *work) commonScalar() {
 func (w *work) scalarOf(c *curve) (float64, bool) {
 	values := inUnit(c.y, c.yUnit, w.yUnit)
 	if c == w.grids && len(w.runs) == 0 {
-		best := -1
-		for i, n := range w.sizes {
-			if !math.IsNaN(n) && !math.IsNaN(values[i]) && (best < 0 || n > w.sizes[best]) {
-				best = i
-			}
-		}
+		best := w.scalarRow(c)
 		if best < 0 {
 			return 0, false
 		}
@@ -234,6 +228,23 @@ func (w *work) scalarOf(c *curve) (float64, bool) {
 		return 0, false
 	}
 	return all[0], true
+}
+
+// scalarRow is the row of the one value of a simulation: of the finest grid
+// where it is a table over grids, else the first that is a number; -1 where
+// there is none.
+func (w *work) scalarRow(c *curve) int {
+	best := -1
+	for i, v := range c.y {
+		switch {
+		case math.IsNaN(v):
+		case c != w.grids || len(w.runs) > 0:
+			return i
+		case !math.IsNaN(w.sizes[i]) && (best < 0 || w.sizes[i] > w.sizes[best]):
+			best = i
+		}
+	}
+	return best
 }
 
 // known returns the values that are numbers.

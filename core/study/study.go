@@ -4,6 +4,7 @@
 package study
 
 import (
+	"cmp"
 	"encoding/json"
 
 	"weirmark/core/interpolate"
@@ -143,6 +144,7 @@ type Slip struct {
 	Levels    Levels     `json:"levels,omitzero"`      // of repeated readings
 	Digitised Digitising `json:"digitised,omitzero"`   // of a curve read off a figure
 	FlowRate  Field      `json:"flow_rate,omitzero"`   // what the integral of the reference over its stations should be, in the units of its columns
+	Datum     Field      `json:"datum,omitzero"`       // of a pressure: one of Datums, or empty
 	FlowRateU Field      `json:"flow_rate_u,omitzero"` // standard uncertainty of it
 }
 
@@ -178,7 +180,16 @@ type Digitising struct {
 type ColumnUse struct {
 	Column Field `json:"column"`
 	Unit   Field `json:"unit"`
+	// Formula, where it is given, makes the values from columns of the table and
+	// the case card (see quantity.Formula); Unit is then that of the result.
+	Formula Field `json:"formula,omitzero"`
 }
+
+// Given reports whether there is a column or a formula.
+func (u ColumnUse) Given() bool { return u.Column.Given() || u.Formula.Given() }
+
+// Name is the column, or the formula in its place.
+func (u ColumnUse) Name() string { return cmp.Or(u.Formula.Value, u.Column.Value) }
 
 // Kinds of reference; the kind drives the wording of the claim.
 const (
@@ -211,6 +222,9 @@ type Question struct {
 	Revealed    bool         `json:"revealed"` // the comparison was looked at
 	Excluded    []Exclusion  `json:"excluded,omitempty"`
 	Conditions  []Matching   `json:"conditions,omitempty"`
+	Form        Form         `json:"form,omitzero"`   // of the values
+	XForm       Form         `json:"x_form,omitzero"` // of the stations
+	Corrected   Correction   `json:"corrected,omitzero"`
 	Scores      *Scoring     `json:"scores,omitempty"`
 	Regions     []Region     `json:"regions,omitempty"`
 	NoInput     string       `json:"no_input,omitempty"`   // why the inputs are taken to have no uncertainty; empty: not decided
@@ -247,6 +261,23 @@ type StandIn struct {
 	Quantity string `json:"quantity"`
 	Why      string `json:"why"`
 }
+
+// Correction says what was done to the data for the walls and the supports of
+// the facility.
+type Correction struct {
+	State string `json:"state,omitempty"` // Corrected, Uncorrected, or "" where it is not known
+	How   string `json:"how,omitempty"`
+}
+
+// Uncorrected says that the data are as they were measured.
+const Uncorrected = "uncorrected"
+
+// Datums of a pressure.
+const (
+	DatumAbsolute   = "absolute"
+	DatumGauge      = "gauge"
+	DatumDifference = "difference"
+)
 
 // Scoring asks for the measures of a field beside the usual ones.
 type Scoring struct {
@@ -301,18 +332,22 @@ const (
 type Card struct {
 	Name       string              `json:"name"`
 	References []ReferenceQuantity `json:"references"`
+	Axes       []Axes              `json:"axes,omitempty"`
 }
 
-// Density is the symbol of the density on a case card: it relates a pressure
-// to a pressure divided by density.
-const Density = "ρ"
-
-// ReferenceQuantity is one quantity of a case card.
+// ReferenceQuantity is one quantity of a case card: of both sides, or of the
+// one that Side names.
 type ReferenceQuantity struct {
-	Symbol string  `json:"symbol"`
-	Value  float64 `json:"value"`
-	Unit   string  `json:"unit"`
-	Origin string  `json:"origin"`
+	Symbol string   `json:"symbol"`
+	Value  float64  `json:"value"`
+	Unit   string   `json:"unit"`
+	Origin string   `json:"origin"`
+	U      *float64 `json:"u,omitempty"`    // standard uncertainty, in Unit; nil where it is not known
+	Side   string   `json:"side,omitempty"` // "", Simulation or OfData
+	Kind   string   `json:"kind,omitempty"` // of an area: one of AreaKinds
+	// Shared says whether one error acts on both sides. Where it is empty, the
+	// error of one entry for both is shared, those of two entries are not.
+	Shared string `json:"shared,omitempty"`
 }
 
 // Condition is the value of one condition, such as an angle.

@@ -421,6 +421,11 @@ export interface Cell {
   residuals: ResidualLine[] | null;
   round_off: RoundOffLine | null;
   num_sums: NumSums | null;
+  mapping?: string[];
+  references?: ReferenceLine[];
+  axes?: Axes[];
+  corrected?: Correction;
+  reduction?: Reduction;
   curve: Curve;
   notices: Notice[] | null;
   files_used: string[] | null;
@@ -927,6 +932,47 @@ export interface NumSums {
   apart: boolean;
 }
 
+export interface ReferenceLine {
+  symbol: string;
+  words: string;
+  side: string;
+  kind: string;
+  value: number | null;
+  u: number | null;
+  unit: string;
+  origin: string;
+  formula: string;
+}
+
+export interface Axes {
+  side?: string;
+  origin: string;
+  up: string;
+  flow: string;
+}
+
+export interface Correction {
+  state?: string;
+  how?: string;
+}
+
+export interface Reduction {
+  text: string;
+  x: number | null;
+  line: number;
+  value: number | null;
+  u: number | null;
+  low: number | null;
+  high: number | null;
+  sampled: number | null;
+  sampled_u: number | null;
+  sampled_low: number | null;
+  sampled_high: number | null;
+  draws: number;
+  agrees: boolean;
+  inputs: ReducedInput[] | null;
+}
+
 export interface Curve {
   x: (number | null)[] | null;
   y: (number | null)[] | null;
@@ -1092,6 +1138,12 @@ export interface LevelLine {
   groups: number;
   degrees: number | null;
   deviation: number | null;
+}
+
+export interface ReducedInput {
+  name: string;
+  part: number | null;
+  common: boolean;
 }
 
 export interface CorrelationPoint {
