@@ -276,6 +276,31 @@ func TestNoLineOfAFit(t *testing.T) {
 	}
 }
 
+// The line behind U is drawn as the report states it: from its base at h = 0
+// through the finest value, whatever the number of grids.
+func TestLineOfAFit(t *testing.T) {
+	c := drag("B", 0.00035)
+	c.Grids.Points[0].Used = true
+	c.Grids.Fit = &study.FitLine{Base: 0.0295, Terms: []study.FitTerm{{Coefficient: 0.0003, Power: 1}, {Coefficient: 0.00015, Power: 2}}}
+	f, err := Refinement(c, "x", Light)
+	if err != nil {
+		t.Fatal(err)
+	}
+	line := decode(t, f).rows(t, 0, fitName, "")
+	for _, point := range line {
+		h := *point[0]
+		if want := 0.0295 + 0.0003*h + 0.00015*h*h; math.Abs(*point[1]-want) > 1e-7 {
+			t.Errorf("at h = %v: %v, want %v", h, *point[1], want)
+		}
+	}
+	if *line[0][0] != 0 || len(line) < 20 {
+		t.Errorf("%d points from h = %v", len(line), *line[0][0])
+	}
+	if strings.Contains(string(f.Option), orderName) {
+		t.Error("the line of the observed order is drawn beside it")
+	}
+}
+
 func TestWhatIsNotKnownIsAGap(t *testing.T) {
 	f, err := Overlay(friction(), "x", Light)
 	if err != nil {
