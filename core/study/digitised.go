@@ -3,11 +3,13 @@ package study
 import (
 	"math"
 	"strconv"
+	"strings"
 
+	"weirmark/core/tablefile"
 	"weirmark/core/uncertainty"
 )
 
-// digitising lists the record of a digitised curve as its lines are named.
+// record lists the record of a digitised curve as its lines are named.
 func (d *Digitising) record() []slipField {
 	return []slipField{
 		{path: "digitised.x_scale", name: "scale of the x axis", field: d.XScale},
@@ -17,6 +19,21 @@ func (d *Digitising) record() []slipField {
 		{path: "digitised.line", name: "thickness of the line", field: d.Line},
 		{path: "digitised.pixel", name: "size of a pixel", field: d.Pixel},
 	}
+}
+
+// statedDigitising is the record that a file states of itself in lines such as
+// "# digitised: yes" and "# y scale: 0.5".
+func statedDigitising(read tablefile.File, table string) Digitising {
+	stated := map[string]Field{}
+	for _, m := range read.Meta {
+		if m.Table == "" || m.Table == table {
+			stated[strings.ToLower(m.Key)] = Field{Value: m.Value, By: Stated}
+		}
+	}
+	if is := stated["digitised"]; !strings.EqualFold(is.Value, "yes") {
+		return Digitising{}
+	}
+	return Digitising{Is: Field{Value: "yes", By: Stated}, XScale: stated["x scale"], XZero: stated["x zero"], YScale: stated["y scale"], YZero: stated["y zero"], Line: stated["line"], Pixel: stated["pixel"]}
 }
 
 // digitised adds what reading a curve off a figure brings: the calibrations of

@@ -32,6 +32,7 @@ func (s *Study) Add(name string, data []byte, read tablefile.File, at string) []
 		}
 		p.ID = s.freeID("s", func(id string) bool { return s.slip(id) != nil })
 		p.File, p.Table = id, ref
+		p.Digitised = statedDigitising(read, t.Name)
 		s.Slips = append(s.Slips, p)
 		s.askOf(&p)
 		if q := s.Question(p.Case.Value, p.Quantity.Value); q != nil && kind != "" && !q.Kind.Given() {

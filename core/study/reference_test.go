@@ -246,3 +246,16 @@ func TestQualityOfTheData(t *testing.T) {
 		t.Errorf("card %+v", c.Quality)
 	}
 }
+
+// What a file states of its digitising is taken as stated; a file that states
+// nothing has no record.
+func TestStatedDigitising(t *testing.T) {
+	text := "# digitised: yes\n# y scale: 0.5\n# pixel: 0.002\nx/c,Cp\n0.1,-0.5\n0.2,-0.4\n0.3,-0.3\n"
+	for _, row := range []struct{ text, is, scale string }{{text, "yes", "0.5"}, {text[len("# digitised: yes\n"):], "", ""}} {
+		s := study.New()
+		p := s.Add("curve.csv", []byte(row.text), study.Read(study.File{Name: "curve.csv", Data: []byte(row.text)}), "")[0]
+		if d := p.Digitised; d.Is.Value != row.is || d.YScale.Value != row.scale || d.XScale.Given() || row.is != "" && d.Is.By != study.Stated {
+			t.Errorf("record %+v", d)
+		}
+	}
+}

@@ -101,10 +101,10 @@ func TestSharedSourceCancels(t *testing.T) {
 }
 
 // Sensitivities from runs of S = 2 + x + 3 U: 3 exactly, whatever the runs; of
-// S = U² at U = 2 from unequal steps 4, from one side 4 + step.
+// S = x + U² at U = 2 from unequal steps 4, from one side 4 + step.
 func TestInputsFromRuns(t *testing.T) {
 	linear := func(u float64) func(x float64) float64 { return func(x float64) float64 { return 2 + x + 3*(u-2) } }
-	square := func(u float64) func(x float64) float64 { return func(float64) float64 { return u * u } }
+	square := func(u float64) func(x float64) float64 { return func(x float64) float64 { return x + u*u } }
 	for _, row := range []struct {
 		name   string
 		of     func(u float64) func(x float64) float64
@@ -302,4 +302,25 @@ func TestEveryFieldOfASourceIsEntered(t *testing.T) {
 	if err != nil || !strings.Contains(string(data), `"per_count": 0.0001`) {
 		t.Errorf("not saved: %v", err)
 	}
+}
+
+// A heat flow q = ρ Q cp (Ti − To) of five inputs: u 4524.6132364 where all are
+// independent, 2853.4788393 where both thermometers share one error of 0.3 K.
+// Source: published-examples.md of the references, "shared input"; u by the
+// slopes q/ρ, q/Q, q/cp and ± ρ Q cp.
+func TestHeatFlowOfFiveInputs(t *testing.T) {
+	const slope = 990 * 2e-3 * 4180
+	p := oneValue("248292", "y\n248000\n")
+	input := func(name string, sensitivity, u float64) study.Source {
+		return study.Source{Name: name, Of: study.OfInput, Input: name, Value: u, Basis: study.Absolute, Coverage: entered("1"), Sensitivity: &sensitivity}
+	}
+	q := &p.Questions[0]
+	q.Sources = append(q.Sources, input("rho", 248292.0/990, 3), input("Q", 248292/2e-3, 2e-5), input("cp", 248292.0/4180, 20), input("Ti", slope, .3), input("To", -slope, .3))
+	near(t, "u of independent thermometers", only(t, p).Stations[0].UInput, 4524.6132364, 1e-6)
+	q.Sources = q.Sources[:5]
+	both := input("T", slope, .3)
+	other := slope
+	both.Shared, both.DataSensitivity = true, &other
+	q.Sources = append(q.Sources, both)
+	near(t, "u of one error of both", only(t, p).Stations[0].UInput, 2853.4788393, 1e-6)
 }
