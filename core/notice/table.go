@@ -104,6 +104,10 @@ var table = map[string]row{
 	"interpolation-unknown": {Stop, "No interpolation is called %q: linear or monotone. Nothing was resampled."},
 
 	// The case card, formulas and forms.
+	"cp-high":           {Ask, "Cp of %s reaches %s, above %s: in low-speed flow it is 1 at a stagnation point. Nothing was changed. Check the reference pressure and the dynamic pressure."},
+	"absolute-negative": {Ask, "%s reaches %s, and is stated as absolute: below zero nothing is. Nothing was changed. Check the datum and the unit."},
+	"speed-high":        {Ask, "Speeds of %s reach %s times the reference speed. Nothing was changed. Check the unit and the reference speed."},
+	"friction-two":      {Note, "The simulation uses its own u_τ (%s m/s), the data theirs (%s m/s), %s %% apart. They move u⁺ and y⁺ in opposite senses. Consider physical units too."},
 	"unit-level":        {Stop, "The unit %q of column %q is a level. Of what, and against which reference, is not stated, so that nothing was read of it. Supply the quantity itself."},
 	"card-missing":      {Stop, "%s is not on the card of case %s. Nothing was assumed. Enter it there."},
 	"card-unit":         {Stop, "%s is a %s, in a unit such as %s; %q is none. It was not used. Correct the unit."},

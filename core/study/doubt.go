@@ -18,6 +18,7 @@ func (w *work) doubtCurves() {
 			continue
 		}
 		w.doubtConstant(c)
+		w.doubtCard(c)
 		if c.scalar() {
 			continue
 		}
@@ -25,6 +26,7 @@ func (w *work) doubtCurves() {
 			w.ask(2, "the order of "+w.e.study.fileName(c.slip), "curve-shuffled", w.e.study.fileName(c.slip), turns)
 		}
 	}
+	w.doubtFriction()
 	w.doubtSwapped()
 	w.doubtWallTreatment()
 	w.doubtRepeated()
@@ -195,8 +197,9 @@ func (w *work) doubtCorrelation(e []float64) {
 // knownCauses are the ratios that the reference quantities of the case would
 // explain.
 func (w *work) knownCauses() []plausibility.Cause {
+	list := w.areaCauses()
 	if rho, known := w.density(""); known {
-		return []plausibility.Cause{{Ratio: rho, Words: "a pressure divided by density (1/ρ = " + quantity.Text(1/rho, 3) + ") against a pressure"}}
+		list = append(list, plausibility.Cause{Ratio: rho, Words: "a pressure divided by density (1/ρ = " + quantity.Text(1/rho, 3) + ") against a pressure"})
 	}
-	return nil
+	return list
 }
