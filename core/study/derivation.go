@@ -91,3 +91,75 @@ func (q *Question) enterDerive(key, value string) (string, error) {
 	}
 	return "", refuse("the scalar", key)
 }
+
+// otherChoices lists the values under the other choices of the kind.
+func (w *work) otherChoices(t *taking, reference, simulation *derived.Curve) {
+	for _, o := range t.kind.Others {
+		other := *t
+		other.settings = derived.Settings{Words: map[string]string{}, Numbers: map[string]float64{}}
+		same := true
+		for k, v := range t.settings.Words {
+			other.settings.Words[k] = v
+		}
+		for k, v := range t.settings.Numbers {
+			other.settings.Numbers[k] = v
+		}
+		for _, p := range t.kind.Parameters {
+			text, given := o.Set[p.Key]
+			if !given {
+				continue
+			}
+			if p.Unit == "" {
+				same = same && t.settings.Words[p.Key] == text
+				other.settings.Words[p.Key] = text
+				continue
+			}
+			v := 0.0
+			if _, err := number(&v, text, -1e30, 1e30); err == nil {
+				v, _ = t.toSI(p.Unit, v)
+				same = same && t.settings.Numbers[p.Key] == v
+				other.settings.Numbers[p.Key] = v
+			}
+		}
+		if same {
+			continue
+		}
+		s, errS := other.take(*simulation)
+		d, errD := other.take(*reference)
+		line := DerivedOther{Change: o.Label, Simulation: None, Reference: None, E: None}
+		if errS == nil {
+			line.Simulation = t.value(s.Value)
+		}
+		if errD == nil {
+			line.Reference = t.value(d.Value)
+		}
+		if errS == nil && errD == nil {
+			line.E = t.step(s.Value - d.Value)
+		}
+		w.cell.Derived.Others = append(w.cell.Derived.Others, line)
+	}
+}
+
+// otherDerivations lists the choices of a derived scalar that another careful
+// person might have made.
+func otherDerivations(d *Derivation) []Derivation {
+	if d == nil {
+		return nil
+	}
+	kind, known := derived.Named(d.Kind)
+	if !known {
+		return nil
+	}
+	var list []Derivation
+	for _, o := range kind.Others {
+		other := Derivation{Kind: d.Kind, Parameters: map[string]string{}, label: o.Label}
+		for k, v := range d.Parameters {
+			other.Parameters[k] = v
+		}
+		for k, v := range o.Set {
+			other.Parameters[k] = v
+		}
+		list = append(list, other)
+	}
+	return list
+}
