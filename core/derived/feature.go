@@ -5,12 +5,12 @@ import "math"
 // takeCrossing returns the place where the curve meets the level, with every
 // candidate. Its effect is that of the straight line: h² |y”|/(8 |slope|),
 // with y” from the slopes beside it.
-func takeCrossing(c Curve, p Settings) (Scalar, error) {
+func takeCrossing(c *Curve, p *Settings, s *Scalar) error {
 	y := make([]float64, len(c.Y))
 	for i, v := range c.Y {
 		y[i] = v - p.Numbers[KeyLevel]
 	}
-	s := none(math.NaN())
+	s.Value = math.NaN()
 	for _, at := range Crossings(c.X, y) {
 		switch p.Words[KeyDirection] {
 		case RisingOnly:
@@ -25,7 +25,7 @@ func takeCrossing(c Curve, p Settings) (Scalar, error) {
 		s.Places = append(s.Places, at)
 	}
 	if len(s.Places) == 0 {
-		return s, ErrNone
+		return ErrNone
 	}
 	s.Chosen = 0
 	switch p.Words[KeyWhich] {
@@ -44,7 +44,7 @@ func takeCrossing(c Curve, p Settings) (Scalar, error) {
 	s.Value = s.Places[s.Chosen].X
 	s.At = s.Value
 	s.Effects = []Effect{{Name: "straight between rows", Change: bow(c.X, y, s.Value), Factor: limits}}
-	return s, nil
+	return nil
 }
 
 // bow estimates how far a curved line through the rows meets zero from where
@@ -73,13 +73,13 @@ func bow(x, y []float64, at float64) float64 {
 
 // takeExtremum returns the value or the place of an extremum. What the rows
 // leave open is the step from the row to the parabola, for the place too.
-func takeExtremum(most, place bool) func(Curve, Settings) (Scalar, error) {
-	return func(c Curve, _ Settings) (Scalar, error) {
+func takeExtremum(most, place bool) taker {
+	return func(c *Curve, _ *Settings, s *Scalar) error {
 		e, ok := Extrema(c.X, c.Y, most)
 		if !ok {
-			return Scalar{}, ErrRows
+			return ErrRows
 		}
-		s := none(e.Y)
+		s.Value = e.Y
 		s.At, s.Bound = e.X, e.AtEnd
 		change := e.Sampling
 		if place {
@@ -88,30 +88,29 @@ func takeExtremum(most, place bool) func(Curve, Settings) (Scalar, error) {
 		if !e.AtEnd {
 			s.Effects = []Effect{{Name: "row in place of the parabola", Change: -change, Factor: limits}}
 		}
-		return s, nil
+		return nil
 	}
 }
 
 // takeLoop integrates a closed section; what is left open beside the spacing
 // of the rows is the closing of the contour.
-func takeLoop(of func(s Coefficients, about float64) float64) func(Curve, Settings) (Scalar, error) {
-	return func(c Curve, p Settings) (Scalar, error) {
-		s, err := Loop(c.X, c.Second, c.Y, p.Numbers[NumberAngle])
+func takeLoop(of func(s Coefficients, about float64) float64) taker {
+	return func(c *Curve, p *Settings, s *Scalar) error {
+		section, err := Loop(c.X, c.Second, c.Y, p.Numbers[NumberAngle])
 		if err != nil {
-			return Scalar{}, err
+			return err
 		}
-		out := none(of(s.Coefficients, p.Numbers["about"]))
-		out.Gap = s.Gap
-		out.Effects = []Effect{{Name: "contour left open at its ends", Change: -of(s.Closing, p.Numbers["about"]), Factor: limits}}
-		return out, nil
+		s.Value, s.Gap = of(section.Coefficients, p.Numbers["about"]), section.Gap
+		s.Effects = []Effect{{Name: "contour left open at its ends", Change: -of(section.Closing, p.Numbers["about"]), Factor: limits}}
+		return nil
 	}
 }
 
 // takeWidth returns the distance between the half heights around the extreme.
-func takeWidth(c Curve, _ Settings) (Scalar, error) {
+func takeWidth(c *Curve, _ *Settings, s *Scalar) error {
 	n := len(c.X)
 	if n < 5 {
-		return Scalar{}, ErrRows
+		return ErrRows
 	}
 	base := (c.Y[0] + c.Y[n-1]) / 2
 	y := make([]float64, n)
@@ -121,7 +120,7 @@ func takeWidth(c Curve, _ Settings) (Scalar, error) {
 	up, okUp := Extrema(c.X, y, true)
 	down, okDown := Extrema(c.X, y, false)
 	if !okUp || !okDown {
-		return Scalar{}, ErrRows
+		return ErrRows
 	}
 	top := up
 	if -down.Y > up.Y {
@@ -132,7 +131,7 @@ func takeWidth(c Curve, _ Settings) (Scalar, error) {
 		top.Y = -top.Y
 	}
 	if top.AtEnd || !(top.Y > 0) {
-		return Scalar{}, ErrNone
+		return ErrNone
 	}
 	left, right := math.NaN(), math.NaN()
 	for i := top.Row; i > 0; i-- {
@@ -147,9 +146,9 @@ func takeWidth(c Curve, _ Settings) (Scalar, error) {
 			break
 		}
 	}
-	s := none(right - left)
+	s.Value = right - left
 	s.At = top.X
-	return s, nil
+	return nil
 }
 
 // between returns where the line from row i-1 to row i meets a level.
@@ -161,14 +160,14 @@ func between(x, y []float64, i int, level float64) float64 {
 }
 
 // takeDeficit returns the mean of the two ends less the least value.
-func takeDeficit(c Curve, _ Settings) (Scalar, error) {
+func takeDeficit(c *Curve, _ *Settings, s *Scalar) error {
 	e, ok := Extrema(c.X, c.Y, false)
 	if !ok || len(c.X) < 5 {
-		return Scalar{}, ErrRows
+		return ErrRows
 	}
 	n := len(c.X)
-	s := none((c.Y[0]+c.Y[n-1])/2 - e.Y)
+	s.Value = (c.Y[0]+c.Y[n-1])/2 - e.Y
 	s.At, s.Bound = e.X, e.AtEnd
 	s.Effects = []Effect{{Name: "row in place of the parabola", Change: e.Sampling, Factor: limits}}
-	return s, nil
+	return nil
 }

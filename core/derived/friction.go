@@ -102,17 +102,17 @@ func (law wallLaw) step(y, u []float64, nu, kappa, b, low, high, tau float64) (f
 }
 
 // takeFit fits a law; its effects are those of the ranges of its constants.
-func takeFit(law wallLaw) func(Curve, Settings) (Scalar, error) {
-	return func(c Curve, p Settings) (Scalar, error) {
+func takeFit(law wallLaw) taker {
+	return func(c *Curve, p *Settings, s *Scalar) error {
 		n := p.Numbers
 		fit := func(kappa, b float64) (Friction, error) {
 			return law.Fit(c.X, c.Y, n["viscosity"], kappa, b, n["low"], n["high"])
 		}
 		f, err := fit(n["kappa"], n["B"])
 		if err != nil {
-			return Scalar{}, err
+			return err
 		}
-		s := none(f.UTau)
+		s.Value = f.UTau
 		for _, other := range []struct {
 			name     string
 			kappa, b float64
@@ -121,23 +121,23 @@ func takeFit(law wallLaw) func(Curve, Settings) (Scalar, error) {
 				s.Effects = append(s.Effects, Effect{Name: other.name, Change: g.UTau - f.UTau, Factor: limits})
 			}
 		}
-		return s, nil
+		return nil
 	}
 }
 
-func takeWall(c Curve, p Settings) (Scalar, error) {
+func takeWall(c *Curve, p *Settings, s *Scalar) error {
 	f := WallGradient(c.X, c.Y, p.Numbers["viscosity"])
 	if f.Rows == 0 {
-		return Scalar{}, ErrWall
+		return ErrWall
 	}
-	s := none(f.UTau)
+	s.Value = f.UTau
 	for i, y := range c.X {
 		if y > 0 {
 			s.Effects = []Effect{{Name: "the row nearest to the wall alone", Change: math.Sqrt(p.Numbers["viscosity"]*c.Y[i]/y) - f.UTau, Factor: limits}}
 			break
 		}
 	}
-	return s, nil
+	return nil
 }
 
 // CrossingU returns the standard uncertainty of the place of a crossing from

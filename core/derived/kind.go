@@ -118,8 +118,11 @@ type Kind struct {
 	Range      Range
 	Parameters []Parameter
 	Others     []Other
-	take       func(c Curve, p Settings) (Scalar, error)
+	take       taker
 }
+
+// taker sets the value of a scalar, and what else is known of it.
+type taker func(c *Curve, p *Settings, s *Scalar) error
 
 // Settings are the parameters of a kind, numbers in SI units.
 type Settings struct {
@@ -172,20 +175,13 @@ func (k *Kind) Take(c Curve, p Settings) (Scalar, error) {
 // plain takes the scalar of rows in order.
 func (k *Kind) plain(c Curve, p Settings) (Scalar, error) {
 	s := Scalar{At: math.NaN(), Edge: math.NaN(), Overshoot: math.NaN(), Gap: math.NaN(), Rows: len(c.X), Chosen: -1}
-	got, err := k.take(c, p)
-	if err != nil {
+	if err := k.take(&c, &p, &s); err != nil {
 		return s, err
 	}
-	got.Rows = len(c.X)
-	if math.IsNaN(got.Value) || math.IsInf(got.Value, 0) {
+	if math.IsNaN(s.Value) || math.IsInf(s.Value, 0) {
 		return s, ErrZero
 	}
-	return got, nil
-}
-
-// none is a value without place, edge and gap.
-func none(value float64) Scalar {
-	return Scalar{Value: value, At: math.NaN(), Edge: math.NaN(), Overshoot: math.NaN(), Gap: math.NaN(), Chosen: -1}
+	return s, nil
 }
 
 // prepared returns the rows without gaps and in order.

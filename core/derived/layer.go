@@ -195,20 +195,20 @@ func momentum(l Layer) float64     { return l.Momentum }
 func shape(l Layer) float64        { return l.Shape }
 
 // takeLayer takes one thickness of a boundary layer.
-func takeLayer(of func(Layer) float64) func(Curve, Settings) (Scalar, error) {
-	return func(c Curve, p Settings) (Scalar, error) {
+func takeLayer(of func(Layer) float64) taker {
+	return func(c *Curve, p *Settings, s *Scalar) error {
 		l, err := Thicknesses(c.X, c.Y, c.Second, Edge(p.Words[KeyEdge]), p.Numbers["velocity"])
 		if err != nil {
-			return Scalar{}, err
+			return err
 		}
-		s := none(of(l))
+		s.Value = of(l)
 		switch {
 		case math.IsNaN(s.Value) && l.Reached:
-			return Scalar{}, ErrProfile // no velocity below the edge
+			return ErrProfile // no velocity below the edge
 		case math.IsNaN(s.Value):
-			return Scalar{}, ErrEdge
+			return ErrEdge
 		}
 		s.Edge, s.Overshoot, s.Bound = l.Edge, l.Overshoot, !l.Reached
-		return s, nil
+		return nil
 	}
 }

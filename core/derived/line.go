@@ -3,7 +3,7 @@ package derived
 import "math"
 
 // weight is one, or the distance from the axis in a round section.
-func weight(p Settings, x float64) float64 {
+func weight(p *Settings, x float64) float64 {
 	if p.Words["section"] == Round {
 		return math.Abs(x)
 	}
@@ -19,55 +19,56 @@ func sum(x []float64, f func(i int) float64) float64 {
 	return total
 }
 
-// ratio returns a value over another.
-func ratio(over, under float64) (Scalar, error) {
+// ratio sets the value to one over another.
+func (s *Scalar) ratio(over, under float64) error {
 	if under == 0 {
-		return Scalar{}, ErrZero
+		return ErrZero
 	}
-	return none(over / under), nil
+	s.Value = over / under
+	return nil
 }
 
-func takeMean(c Curve, p Settings) (Scalar, error) {
-	return ratio(sum(c.X, func(i int) float64 { return c.Y[i] * weight(p, c.X[i]) }), sum(c.X, func(i int) float64 { return weight(p, c.X[i]) }))
+func takeMean(c *Curve, p *Settings, s *Scalar) error {
+	return s.ratio(sum(c.X, func(i int) float64 { return c.Y[i] * weight(p, c.X[i]) }), sum(c.X, func(i int) float64 { return weight(p, c.X[i]) }))
 }
 
-func takeFlowMean(c Curve, p Settings) (Scalar, error) {
+func takeFlowMean(c *Curve, p *Settings, s *Scalar) error {
 	if c.Second == nil {
-		return Scalar{}, ErrSecond
+		return ErrSecond
 	}
 	flux := func(i int) float64 { return c.Second[i] * weight(p, c.X[i]) }
-	return ratio(sum(c.X, func(i int) float64 { return c.Y[i] * flux(i) }), sum(c.X, flux))
+	return s.ratio(sum(c.X, func(i int) float64 { return c.Y[i] * flux(i) }), sum(c.X, flux))
 }
 
-func takeIntegral(c Curve, _ Settings) (Scalar, error) {
-	return none(sum(c.X, func(i int) float64 { return c.Y[i] })), nil
+func takeIntegral(c *Curve, _ *Settings, s *Scalar) error {
+	s.Value = sum(c.X, func(i int) float64 { return c.Y[i] })
+	return nil
 }
 
 // takeVariation returns the coefficient of variation, or the mixing index of
 // a fraction: one less the standard deviation over that of the unmixed state.
-func takeVariation(index bool) func(Curve, Settings) (Scalar, error) {
-	return func(c Curve, p Settings) (Scalar, error) {
-		mean, err := takeMean(c, p)
-		if err != nil {
-			return mean, err
+func takeVariation(index bool) taker {
+	return func(c *Curve, p *Settings, s *Scalar) error {
+		if err := takeMean(c, p, s); err != nil {
+			return err
 		}
-		m := mean.Value
-		spread, err := ratio(sum(c.X, func(i int) float64 { return float64((c.Y[i]-m)*(c.Y[i]-m)) * weight(p, c.X[i]) }), sum(c.X, func(i int) float64 { return weight(p, c.X[i]) }))
-		if err != nil {
-			return spread, err
+		m := s.Value
+		if err := s.ratio(sum(c.X, func(i int) float64 { return float64((c.Y[i]-m)*(c.Y[i]-m)) * weight(p, c.X[i]) }), sum(c.X, func(i int) float64 { return weight(p, c.X[i]) })); err != nil {
+			return err
 		}
 		if !index {
-			return ratio(math.Sqrt(spread.Value), m)
+			return s.ratio(math.Sqrt(s.Value), m)
 		}
 		if !(m > 0 && m < 1) {
-			return Scalar{}, ErrZero
+			return ErrZero
 		}
-		return none(1 - math.Sqrt(spread.Value/float64(m*(1-m)))), nil
+		s.Value = 1 - math.Sqrt(s.Value/float64(m*(1-m)))
+		return nil
 	}
 }
 
 // takeBackflow takes the parts of straight lines on either side of zero.
-func takeBackflow(c Curve, p Settings) (Scalar, error) {
+func takeBackflow(c *Curve, p *Settings, s *Scalar) error {
 	forth, back := 0.0, 0.0
 	for i := 1; i < len(c.X); i++ {
 		for _, part := range parts(c.X[i-1], c.X[i], c.Y[i-1], c.Y[i]) {
@@ -75,7 +76,7 @@ func takeBackflow(c Curve, p Settings) (Scalar, error) {
 			forth, back = forth+max(f, 0), back+max(-f, 0)
 		}
 	}
-	return ratio(back, forth)
+	return s.ratio(back, forth)
 }
 
 type piece struct{ x0, x1, y0, y1 float64 }
@@ -89,29 +90,30 @@ func parts(x0, x1, y0, y1 float64) []piece {
 	return []piece{{x0, at, y0, 0}, {at, x1, 0, y1}}
 }
 
-func takeFall(c Curve, _ Settings) (Scalar, error) {
-	return none(c.Y[0] - c.Y[len(c.Y)-1]), nil
+func takeFall(c *Curve, _ *Settings, s *Scalar) error {
+	s.Value = c.Y[0] - c.Y[len(c.Y)-1]
+	return nil
 }
 
-func takeLoss(c Curve, p Settings) (Scalar, error) {
-	return ratio(c.Y[0]-c.Y[len(c.Y)-1], p.Numbers["scale"])
+func takeLoss(c *Curve, p *Settings, s *Scalar) error {
+	return s.ratio(c.Y[0]-c.Y[len(c.Y)-1], p.Numbers["scale"])
 }
 
 // takeResidence returns the first moment of an age distribution, or its second
 // about the first.
-func takeResidence(second bool) func(Curve, Settings) (Scalar, error) {
-	return func(c Curve, _ Settings) (Scalar, error) {
+func takeResidence(second bool) taker {
+	return func(c *Curve, _ *Settings, s *Scalar) error {
 		all := sum(c.X, func(i int) float64 { return c.Y[i] })
-		mean, err := ratio(sum(c.X, func(i int) float64 { return c.X[i] * c.Y[i] }), all)
+		err := s.ratio(sum(c.X, func(i int) float64 { return c.X[i] * c.Y[i] }), all)
 		if err != nil || !second {
-			return mean, err
+			return err
 		}
-		m := mean.Value
-		return ratio(sum(c.X, func(i int) float64 { return float64((c.X[i]-m)*(c.X[i]-m)) * c.Y[i] }), all)
+		m := s.Value
+		return s.ratio(sum(c.X, func(i int) float64 { return float64((c.X[i]-m)*(c.X[i]-m)) * c.Y[i] }), all)
 	}
 }
 
-func takeBeyond(c Curve, p Settings) (Scalar, error) {
+func takeBeyond(c *Curve, p *Settings, s *Scalar) error {
 	length := 0.0
 	for i := 1; i < len(c.X); i++ {
 		for _, part := range parts(c.X[i-1], c.X[i], c.Y[i-1]-p.Numbers[KeyLevel], c.Y[i]-p.Numbers[KeyLevel]) {
@@ -120,11 +122,11 @@ func takeBeyond(c Curve, p Settings) (Scalar, error) {
 			}
 		}
 	}
-	return ratio(length, c.X[len(c.X)-1]-c.X[0])
+	return s.ratio(length, c.X[len(c.X)-1]-c.X[0])
 }
 
 // takeSlope is the slope of the least squares line with equal weights.
-func takeSlope(c Curve, _ Settings) (Scalar, error) {
+func takeSlope(c *Curve, _ *Settings, s *Scalar) error {
 	n := float64(len(c.X))
 	mx, my := 0.0, 0.0
 	for i := range c.X {
@@ -135,23 +137,23 @@ func takeSlope(c Curve, _ Settings) (Scalar, error) {
 		xy += float64((c.X[i] - mx) * (c.Y[i] - my))
 		xx += float64((c.X[i] - mx) * (c.X[i] - mx))
 	}
-	return ratio(xy, xx)
+	return s.ratio(xy, xx)
 }
 
 // takeWakeDrag integrates the momentum deficit. Beyond the rows nothing is
 // added: the ends must lie outside the wake.
-func takeWakeDrag(c Curve, p Settings) (Scalar, error) {
+func takeWakeDrag(c *Curve, p *Settings, s *Scalar) error {
 	edge := p.Numbers["velocity"]
 	if !(edge > 0) {
 		edge = (c.Y[0] + c.Y[len(c.Y)-1]) / 2
 	}
 	if !(edge > 0) || !(p.Numbers["length"] > 0) {
-		return Scalar{}, ErrZero
+		return ErrZero
 	}
-	s := none(2 / p.Numbers["length"] * sum(c.X, func(i int) float64 {
+	s.Value = 2 / p.Numbers["length"] * sum(c.X, func(i int) float64 {
 		u := c.Y[i] / edge
 		return float64(u * (1 - u))
-	}))
+	})
 	s.Edge = edge
-	return s, nil
+	return nil
 }
