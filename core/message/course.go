@@ -129,7 +129,7 @@ func familyAnswer(c *study.Cell) string {
 	g := c.Grids
 	if g == nil {
 		for _, s := range c.Sources {
-			if s.Of == study.OfNumerical && s.Origin != "computed" {
+			if s.Of == study.OfNumerical && !strings.HasPrefix(s.Origin, "computed") {
 				return "No grid family; u_num was entered (" + s.Origin + ")."
 			}
 		}

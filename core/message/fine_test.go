@@ -142,3 +142,12 @@ func TestBorrowedOnThePage(t *testing.T) {
 		t.Errorf("%d tables of grids that there are not", n)
 	}
 }
+
+// TestEnteredIsNotComputed: without grids the answer names what was entered,
+// not what was computed of the iteration.
+func TestEnteredIsNotComputed(t *testing.T) {
+	c := cellAt(t, study.Evaluate(DemoWorked(), study.Options{}), "C2", demoDragName, "A")
+	if answer := gridAnswer(c); !strings.HasPrefix(answer, "No grid family; u_num was entered (three times the range") {
+		t.Errorf("%q", answer)
+	}
+}

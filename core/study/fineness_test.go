@@ -254,6 +254,9 @@ func TestCodeVerification(t *testing.T) {
 			t.Fatal(err)
 		}
 	}
+	if err := study.New().Set(study.Target{Kind: "study", Field: "code.colour"}, "x", "", ""); err == nil {
+		t.Error("a field that there is not was taken")
+	}
 	copied := s.Clone()
 	if err := copied.Set(study.Target{Kind: "study", Field: "code.link"}, "elsewhere", "", ""); err != nil || s.Code.Link != "report 7, page 12" {
 		t.Errorf("%v, %+v", err, s.Code)

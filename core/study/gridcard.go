@@ -328,8 +328,13 @@ func (w *work) otherRules(counts, values []float64) []RuleLine {
 		r := refinement.Study(counts, values, w.choices.dimension(), opt)
 		if u := r.StandardUncertainty(w.choices.KNum); !math.IsNaN(u) {
 			name := RuleName(rule)
-			if rule == refinement.RuleThree {
+			switch rule {
+			case refinement.RuleThree:
 				name += ", " + map[bool]string{true: "bounded", false: "plain"}[opt.Bounded]
+			case refinement.RuleLeastSquares:
+				name += " (implemented from its description)"
+			case refinement.RuleCorrection, refinement.RuleFactor:
+				name += " (coefficients from memory)"
 			}
 			list = append(list, RuleLine{Rule: name, U: w.step(r.U), UNum: w.step(u)})
 		}

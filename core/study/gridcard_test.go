@@ -186,6 +186,11 @@ func TestRulesOfAValue(t *testing.T) {
 	if u := float64(c.Grids.Rules[0].U); math.Abs(u-1.25e-4) > 1e-12 || c.Grids.Rules[0].Rule != "three finest grids, bounded" {
 		t.Errorf("%+v", c.Grids.Rules[0])
 	}
+	for i, mark := range map[int]string{3: "implemented from its description", 4: "coefficients from memory", 5: "coefficients from memory"} {
+		if !strings.Contains(c.Grids.Rules[i].Rule, mark) {
+			t.Errorf("%q is not marked: %s", c.Grids.Rules[i].Rule, mark)
+		}
+	}
 	s.Questions[0].Choices.Rule = refinement.RuleLeastSquares
 	f := cellOf(s).Grids.Fit
 	if f == nil || math.Abs(float64(f.Base)-0.03) > 1e-9 || len(f.Terms) != 1 || math.Abs(float64(f.Terms[0].Power)-2) > 1e-6 || math.Abs(float64(f.Terms[0].Coefficient)-1e-4) > 1e-9 {

@@ -353,7 +353,7 @@ func (s *Study) enter(t Target, value string) (string, error) {
 
 // text returns the plain text at a target, or nil.
 func (s *Study) text(t Target) *string {
-	if field, of := strings.CutPrefix(t.Field, "code."); of && t.Kind == "study" {
+	if field, of := strings.CutPrefix(t.Field, "code."); of && t.Kind == "study" && (field == "statement" || field == "link") {
 		if s.Code == nil {
 			s.Code = &CodeEvidence{}
 		}
