@@ -26,8 +26,8 @@ func (b *builder) cell(i int, c study.Cell) Node {
 	s := b.openWith(2, cellID(i), names(c)...)
 	b.lacking = nil
 	for _, part := range [][]Node{
-		b.compared(i, c), b.reference(i, c), b.conditions(i, c), b.measures(i, c), b.scores(i, c), b.joint(i, c), b.crossings(i, c), b.derived(i, c),
-		b.figuresOf(c, ""), b.stations(i, c), b.excluded(i, c), b.settling(i, c), b.grids(i, c), b.sources(i, c), b.reduction(i, c), b.evidence(i, c), b.requirement(i, c), b.openPoints(c),
+		b.compared(i, c), b.reference(i, c), b.conditions(i, c), b.place(i, c), b.measures(i, c), b.scores(i, c), b.joint(i, c), b.crossings(i, c), b.derived(i, c),
+		b.figuresOf(c, ""), b.stations(i, c), b.excluded(i, c), b.settling(i, c), b.grids(i, c), b.sources(i, c), b.reduction(i, c), b.evidence(i, c), b.requirement(i, c), b.expected(c), b.openPoints(c),
 	} {
 		s.Nodes = append(s.Nodes, part...)
 	}
@@ -53,6 +53,7 @@ var kinds = map[string]string{
 var uses = map[string]string{
 	study.UseValidation: "kept apart from the setting of the model",
 	study.UseTuning:     "used to set the model",
+	study.UseBoth:       "used in part to set the model",
 }
 
 var courses = [5]string{"Run settled", "Grid fine enough", "Same thing compared", "Agreement", "What can be said"}
@@ -113,6 +114,15 @@ func claim(c study.Cell) string {
 		words = "The reference is a correlation: the scatter of the data behind it belongs to its uncertainty."
 	case study.KindSimulation:
 		words = "The reference is another simulation: this says nothing of the error against measurement."
+	}
+	if c.Use == study.UseBoth {
+		words = strings.TrimSpace(words + " A part of these data was used to set the model: agreement there is fit quality.")
+	}
+	switch c.Known {
+	case study.Blind:
+		words = strings.TrimSpace(words + " The simulation was made without the data being known, as stated.")
+	case study.Aware:
+		words = strings.TrimSpace(words + " The data were known when the simulation was made.")
 	}
 	if c.Use == study.UseTuning {
 		words = strings.TrimSpace(words + " These data were used to set the model: agreement here is fit quality.")

@@ -3,6 +3,7 @@ package memo
 import (
 	"fmt"
 
+	"weirmark/core/adequacy"
 	"weirmark/core/study"
 )
 
@@ -56,4 +57,50 @@ func (b *builder) application() []Node {
 		}
 	}
 	return nil
+}
+
+// place prints where the point of application lies among the comparisons.
+func (b *builder) place(i int, c study.Cell) []Node {
+	if c.Application == nil || c.Application.Place == nil {
+		return nil
+	}
+	p := c.Application.Place
+	at := func(name string) string { return fmt.Sprintf("cells.%d.application.place.%s", i, name) }
+	head := []string{"Case"}
+	for j, name := range p.Names {
+		if u := p.Units[j]; u != "" && u != "1" {
+			name += " [" + u + "]"
+		}
+		head = append(head, "#"+name)
+	}
+	line := func(name Node, values []study.Number, path string) Node {
+		cells := []Node{cell(name)}
+		for j, v := range values {
+			cells = append(cells, figureCell(trimmed(v, 8, fmt.Sprintf("%s.%d", path, j))))
+		}
+		return row(cells...)
+	}
+	rows := []Node{line(strong("application point"), p.At, at("at"))}
+	for n, q := range p.Points {
+		rows = append(rows, line(text(q.Case), q.At, at(fmt.Sprintf("points.%d.at", n))))
+	}
+	words := say("The application point lies {} the compared conditions", strong(map[string]string{adequacy.Inside: "inside", adequacy.Edge: "at the edge of", adequacy.Outside: "outside"}[p.State]))
+	words = append(words, say(", {} of their span from the hull of the comparisons; the nearest is {}, {} away.", trimmed(p.Beyond, 2, at("beyond")), text(p.Nearest), trimmed(p.Distance, 2, at("distance")))...)
+	return []Node{b.table("plain", say("The point of application among the comparisons of this quantity."), headRow(head...), rows...), paragraph(words...)}
+}
+
+// expected prints what the recorded use lets a reader expect.
+func (b *builder) expected(c study.Cell) []Node {
+	if len(c.Evidence) == 0 {
+		return nil
+	}
+	rows := make([]Node, len(c.Evidence))
+	for j, e := range c.Evidence {
+		given := strong("missing")
+		if e.Given {
+			given = text("given")
+		}
+		rows[j] = row(cell(text(e.What)), cell(text(e.From)), cell(given))
+	}
+	return []Node{b.table("plain", say("Evidence that the recorded influence and consequence let a reader expect (common practice, no source). No score is made of it."), headRow("Evidence", "Expected from", ""), rows...)}
 }

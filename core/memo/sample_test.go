@@ -35,7 +35,9 @@ func taps(model string, e []float64, joint study.Joint, requirement *study.Judge
 			{Name: "Re", Simulation: 1.1e6, Data: 1.2e6, Effect: quantity.None},
 			{Name: "Tu", Unit: "%", Simulation: .4, Data: .4, Effect: quantity.None},
 		},
-		Application: &study.Application{Text: "α = 11°", Outside: true, Range: "α 4.2° to 9°"},
+		Application: &study.Application{Text: "α = 11°", Outside: true, Range: "α 4.2° to 9°", Place: &study.AppliedPlace{State: "outside", Names: []string{"α"}, Units: []string{"°"}, At: []study.Number{11}, Beyond: .4166667, Nearest: "C2", Distance: .4166667,
+			Points: []study.ComparedPoint{{Case: "C1", At: []study.Number{4.2}}, {Case: "C2", At: []study.Number{9}}}}},
+		Evidence: []study.EvidenceLine{{What: "an input uncertainty", From: "medium", Given: true}, {What: "a recorded independent check", From: "high"}},
 		Scores: []study.ScoreLine{
 			{Name: "RMSE / range of D", Value: .0213, Scale: "range of D 1.53", Criteria: []study.CriterionLine{{Name: "house limit", Low: 0, High: .05, Met: true, Scope: "upper branch", Source: "common practice, no source"}, {Name: "narrow", Low: 0, High: .02, Scope: "upper branch", Source: "common practice, no source"}}},
 			{Name: "hit rate", Value: .875, Scale: "25 %", Word: "of the stations"},

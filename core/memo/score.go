@@ -107,6 +107,9 @@ func (b *builder) differences() []Node {
 			resolved = "uncertainty not known"
 		}
 		mean := append(withUnit(signedBeside(d.Mean, d.U, at("mean")), d.Unit), text(" ± "))
+		if d.Shared {
+			resolved += ", at the shared stations only"
+		}
 		rows[j] = row(cell(text(d.Case)), cell(text(d.Quantity)), cell(text(d.A+" − "+d.B)), figureCell(count(d.N, at("n"))),
 			figureCell(append(mean, digits(d.U, 2, at("u")))...), cell(text(resolved)), figureCell(interval(digits(d.RMSA, 3, at("rms_a")), digits(d.RMSB, 3, at("rms_b")))...))
 	}

@@ -5,6 +5,7 @@ import (
 	"strconv"
 	"strings"
 
+	"weirmark/core/adequacy"
 	"weirmark/core/chart"
 	"weirmark/core/notice"
 	"weirmark/core/quantity"
@@ -534,6 +535,16 @@ func sayNumbers(c *study.Cell) []Headline {
 
 func sayTables(c *study.Cell) []Table {
 	var tables []Table
+	if a := c.Application; a != nil && a.Place != nil {
+		tables = append(tables, placeTable(a.Place))
+	}
+	if len(c.Evidence) > 0 {
+		t := Table{Title: "Evidence expected for the recorded use (common practice, no source)", Head: []string{"evidence", "expected from", ""}, Rows: [][]string{}}
+		for _, e := range c.Evidence {
+			t.Rows = append(t.Rows, []string{e.What, e.From, map[bool]string{true: "given", false: "missing"}[e.Given]})
+		}
+		tables = append(tables, t)
+	}
 	if r := c.Requirement; r != nil && len(r.Ways) > 0 {
 		tables = append(tables, waysTable(c, r))
 	}
@@ -549,6 +560,30 @@ func sayTables(c *study.Cell) []Table {
 		tables = append(tables, t)
 	}
 	return tables
+}
+
+// placeTable sets the point of application among the comparisons.
+func placeTable(p *study.AppliedPlace) Table {
+	t := Table{Title: "The application point lies " + map[string]string{adequacy.Inside: "inside", adequacy.Edge: "at the edge of", adequacy.Outside: "outside"}[p.State] + " the compared conditions", Head: append([]string{""}, p.Names...), Rows: [][]string{}}
+	line := func(name string, at []study.Number) {
+		row := []string{name}
+		for j, v := range at {
+			unit := ""
+			if u := p.Units[j]; u != "" && u != "1" {
+				unit = " " + u
+			}
+			row = append(row, quantity.Typed(float64(v))+unit)
+		}
+		t.Rows = append(t.Rows, row)
+	}
+	line("application point", p.At)
+	for _, q := range p.Points {
+		line(q.Case, q.At)
+	}
+	for _, l := range []Headline{{text(p.Beyond, 2), "from their hull, in parts of their span"}, {text(p.Distance, 2), "from the nearest, " + p.Nearest}} {
+		t.Rows = append(t.Rows, append([]string{l.Name, l.Value}, make([]string, len(p.Names)-1)...))
+	}
+	return t
 }
 
 // waysTable lists what alone would resolve a requirement.

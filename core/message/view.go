@@ -416,9 +416,16 @@ func people(s *study.Study) []Entry {
 	entry := func(field, label, value, hint string) Entry {
 		return Entry{Target: study.Target{Kind: "study", Field: field}, Label: label, Value: value, By: study.Entered, Options: []Option{}, Hint: hint}
 	}
+	weight := func(field, label, value string) Entry {
+		e := entry(field, label, value, "lists the evidence that a reader may expect; no score is made of it")
+		e.Options = []Option{{"", "–"}, {study.Low, "low"}, {study.Medium, "medium"}, {study.High, "high"}}
+		return e
+	}
 	return []Entry{
 		entry("title", "Title", s.Title, ""),
 		entry("purpose", "Purpose and intended use", s.Purpose, "for which decision, and whose"),
+		weight("context.influence", "Influence of the simulation on the decision", s.Context.Influence),
+		weight("context.consequence", "Consequence of a wrong decision", s.Context.Consequence),
 		entry("prepared.name", "Prepared by", s.Prepared.Name, "a recorded statement, not an authenticated signature"),
 		entry("prepared.date", "on", s.Prepared.Date, "date"),
 		entry("checked.name", "Checked by", s.Checked.Name, ""),

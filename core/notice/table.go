@@ -147,7 +147,7 @@ var table = map[string]row{
 	"weights-refused":  {Note, "The weights (%s) are negative, missing or all zero: no weighted measure was made. Correct them."},
 	"correlation-none": {Note, "%s: S or D does not vary over the stations, so there is no correlation. It was left out."},
 	"allowance-none":   {Note, "The hit rate of %s takes its allowance from u_D, which is not known: it was not computed. Give the uncertainty of the data."},
-	"models-stations":  {Stop, "Models %s and %s were not set against each other for %s: they are compared at different stations (%s and %s). Compare both at the same ones, or not at all."},
+	"models-stations":  {Stop, "Models %s and %s share %d of %d stations of %s. They were not set against each other. Compare them at the shared ones by choice, or not at all."},
 
 	// Findings that look like mistakes. Nothing is changed because of them.
 	"finding-answered":  {Note, "%s was answered: %s"},
@@ -360,6 +360,7 @@ var table = map[string]row{
 	"monitor-missing":      {Note, "No monitor of %s: that each run has settled is not shown."},
 	"reference-simulation": {Note, "The reference is another simulation: code-to-code comparison, no validation wording is used."},
 	"reference-tuning":     {Note, "These data were used to set the model: agreement here is fit quality, not validation."},
+	"reference-both":       {Note, "A part of these data was used to set the model: agreement there is fit quality. Part them into regions to tell the rest apart."},
 	"file-unknown":         {Stop, "No file %q in this study (slip %s). Supply the file."},
 	"study-error":          {Stop, "The study could not be evaluated: %s."},
 	"field-bad":            {Ask, "The %s of %s, %q, cannot be read. Correct it."},

@@ -4,6 +4,7 @@ import (
 	"strconv"
 	"strings"
 
+	"weirmark/core/adequacy"
 	"weirmark/core/quantity"
 	"weirmark/core/study"
 )
@@ -311,7 +312,7 @@ func (w *writer) scalar() {
 	case study.Between:
 		w.say("|E| lies between u_val and " + k + " u_val; its sign is not resolved; the model error lies within ")
 	default:
-		w.say("|E| = " + strings.TrimLeft(e.text, "+−") + w.unit() + " does not exceed u_val. The model error is not distinguishable from the combined numerical, input and experimental uncertainty. This does not show that it is small; it lies within ")
+		w.say("|E| = " + strings.TrimLeft(e.text, "+−") + w.unit() + " does not exceed u_val. The model error is not distinguishable from the combined " + combined(s) + " uncertainty. This does not show that it is small; it lies within ")
 	}
 	w.number(w.scaled("lo", s.Lo, true), "agreement")
 	if c.InPercent() {
@@ -320,6 +321,14 @@ func (w *writer) scalar() {
 	w.say(" to ")
 	w.number(w.scaled("hi", s.Hi, true), "agreement")
 	w.say(w.unit() + " (k = " + k + "). ")
+}
+
+// combined names the parts that u_val has: one that is not known is not said.
+func combined(s study.Station) string {
+	if s.UInput.Known() {
+		return "numerical, input and experimental"
+	}
+	return "numerical and experimental"
 }
 
 func (w *writer) result(field string) study.Target {
@@ -495,11 +504,25 @@ func (w *writer) resolve(r *study.Judgement) {
 
 // kind says what the kind and the use of the reference do to the claim.
 func (w *writer) kind() {
-	switch {
-	case w.cell.Use == study.UseTuning:
+	switch w.cell.Use {
+	case study.UseTuning:
 		w.say("These data were used to set the model; agreement here is fit quality. ")
-	case w.cell.Kind == study.KindSimulation:
+	case study.UseBoth:
+		w.say("A part of these data was used to set the model; agreement there is fit quality. ")
+	}
+	switch w.cell.Kind {
+	case study.KindSimulation:
 		w.say("Code-to-code comparison: it says nothing of the error against measurement. ")
+	case study.KindLaw:
+		w.say("The reference is a law: this says how the simulation follows it in its range, and nothing of a measurement. ")
+	case study.KindCorrelation:
+		w.say("The reference is a correlation: the scatter of the data behind it belongs to its uncertainty. ")
+	}
+	switch w.cell.Known {
+	case study.Blind:
+		w.say("The simulation was made without the data being known, as stated. ")
+	case study.Aware:
+		w.say("The data were known when the simulation was made. ")
 	}
 }
 
@@ -507,6 +530,8 @@ func (w *writer) kind() {
 func (w *writer) application() {
 	if a := w.cell.Application; a != nil && a.Outside {
 		w.say("The application point (" + a.Text + ") lies outside the compared conditions (" + a.Range + "). No statement is made there. ")
+	} else if a != nil && a.Place != nil && a.Place.State == adequacy.Edge {
+		w.say("The application point (" + a.Text + ") lies at the edge of the compared conditions. ")
 	}
 }
 

@@ -117,6 +117,7 @@ func (w *work) close() {
 	}
 	w.cell.Provisional = !w.cell.Withheld && len(w.cell.Open) > 0
 	w.courses()
+	w.evidence()
 }
 
 // referenceDoubts asks what kind of reference the data are, and says what
@@ -133,8 +134,12 @@ func (w *work) referenceDoubts() {
 	switch {
 	case !w.q.Use.Given():
 		w.need(2, false, "what the data were used for", w.q.target("use"), "field-missing", "Whether the data were used to set the model", w.q.label())
+	case w.q.Use.Open():
+		w.need(2, true, "acceptance of what the data were used for", w.q.target("use"), "guess-open", "The use of the data", w.q.label(), w.q.Use.Value)
 	case w.q.Use.Value == UseTuning:
 		w.tell(notice.New("reference-tuning"))
+	case w.q.Use.Value == UseBoth:
+		w.tell(notice.New("reference-both"))
 	}
 }
 

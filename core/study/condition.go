@@ -6,6 +6,7 @@ import (
 	"strconv"
 	"strings"
 
+	"weirmark/core/adequacy"
 	"weirmark/core/notice"
 	"weirmark/core/quantity"
 )
@@ -167,11 +168,64 @@ func (w *work) application() {
 		ranges = append(ranges, p.Name+" "+span)
 		a.Outside = a.Outside || p.Value < lo || p.Value > hi
 	}
+	w.e.placed(w.q.Quantity, points, a)
 	a.Text, a.Range = strings.Join(texts, ", "), strings.Join(ranges, ", ")
 	w.cell.Application = a
 	if a.Outside {
 		w.tell(notice.New("application-outside", a.Text, a.Range))
 	}
+}
+
+// placed puts the point among the questions of a quantity that state all of
+// its conditions: in two and more of them it can lie inside every range and
+// outside what was compared.
+func (e *evaluation) placed(quantity string, at []Condition, a *Application) {
+	p := &AppliedPlace{Points: []ComparedPoint{}}
+	var points [][]float64
+	to := make([]float64, len(at))
+	for j, c := range at {
+		to[j] = c.Value
+		p.Names, p.Units, p.At = append(p.Names, c.Name), append(p.Units, c.Unit), append(p.At, Number(c.Value))
+	}
+	for i := range e.study.Questions {
+		q := &e.study.Questions[i]
+		if q.Quantity != quantity {
+			continue
+		}
+		if values, ok := q.stated(at); ok {
+			points = append(points, values)
+			line := ComparedPoint{Case: q.Case}
+			for _, v := range values {
+				line.At = append(line.At, Number(v))
+			}
+			p.Points = append(p.Points, line)
+		}
+	}
+	if len(points) == 0 {
+		return
+	}
+	found := adequacy.Locate(points, to)
+	p.State, p.Beyond, p.Distance, p.Nearest = found.State, Number(found.Beyond), Number(found.Distance), p.Points[found.Nearest].Case
+	a.Place = p
+	a.Outside = a.Outside || found.State == adequacy.Outside
+}
+
+// stated returns the conditions of the data of a question that a point names,
+// not ok where one is missing.
+func (q *Question) stated(at []Condition) ([]float64, bool) {
+	values := make([]float64, len(at))
+	for j, c := range at {
+		found := false
+		for _, m := range q.Conditions {
+			if m.Name == c.Name && m.Unit == c.Unit {
+				values[j], found = m.Data, true
+			}
+		}
+		if !found {
+			return nil, false
+		}
+	}
+	return values, true
 }
 
 // conditionRange returns the range of a condition over all questions of one

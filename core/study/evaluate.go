@@ -218,7 +218,7 @@ func (e *evaluation) workWith(w *work) Cell {
 	q, model, choices := w.q, w.model, w.choices
 	w.cell = Cell{
 		Case: q.Case, Condition: q.Condition, Quantity: q.Quantity, Symbol: q.Symbol, Model: model,
-		Reference: q.ReferenceID, Kind: q.Kind.Value, Use: q.Use.Value, Downward: q.Downward, Choices: choices,
+		Reference: q.ReferenceID, Kind: q.Kind.Value, Use: q.Use.Value, Known: q.Known.Value, Downward: q.Downward, Choices: choices,
 		Corrected: q.Corrected, Unit: "1", XUnit: "1", Degrees: None, K95: None,
 		Open: []Open{}, Stations: []Station{}, Outside: []Number{}, Excluded: []Excluded{}, Scores: []ScoreLine{}, Regions: []RegionLine{}, Monitors: []MonitorLine{}, Balances: []BalanceLine{}, Residuals: []ResidualLine{}, Conditions: []Compared{}, Sources: []SourceLine{}, Fragile: []Fragility{},
 		Notices: []notice.Notice{}, FilesUsed: []string{},
@@ -556,14 +556,19 @@ func (p *Slip) fields() []slipField {
 	if p.U.Column.Given() {
 		all = append(all,
 			slipField{path: "u.column", name: "column of uncertainty", field: p.U.Column, needed: true, course: 2},
+			slipField{path: "u.unit", name: "unit of " + p.U.Column.Value, field: p.U.Unit, course: 2},
 			slipField{path: "u_factor", name: "coverage of " + p.U.Column.Value, field: p.UFactor, needed: true, course: 2})
 		if p.Upper.Column.Given() {
 			all = append(all, slipField{path: "upper.column", name: "column of the upper bar", field: p.Upper.Column, needed: true, course: 2},
+				slipField{path: "upper.unit", name: "unit of the upper bar", field: p.Upper.Unit, course: 2},
 				slipField{path: "bars_as", name: "meaning of the bars", field: p.BarsAs, needed: true, course: 2})
 		}
 		if p.percentU() {
 			all = append(all, slipField{path: "u_basis", name: "basis of " + p.U.Column.Value, field: p.UBasis, needed: true, course: 2})
 		}
+	}
+	if p.Derive.Given() {
+		all = append(all, slipField{path: "derive", name: "derivation", field: p.Derive, course: 2})
 	}
 	if p.Branch.Given() {
 		all = append(all, slipField{path: "branch", name: "branch", field: p.Branch, course: 2})
@@ -591,7 +596,8 @@ func (p *Slip) fields() []slipField {
 		all = append(all, slipField{path: "step.column", name: "column of time steps", field: p.Step.Column, needed: true, course: 1})
 	}
 	if p.Role.Value == GridValues {
-		all = append(all, slipField{path: "size.column", name: "column of cell counts", field: p.Size.Column, needed: true, course: 1})
+		all = append(all, slipField{path: "size.column", name: "column of cell counts", field: p.Size.Column, needed: true, course: 1},
+			slipField{path: "grid", name: "column of grid names", field: p.Grid, course: 1})
 	}
 	return all
 }

@@ -27,6 +27,9 @@ type ingredients struct {
 	Cases       []Card
 	Application []Condition
 	Quality     []Quality
+	Context     Context
+	Checked     Signature
+	Names       []string     // of all questions, where a point of application is stated
 	Conditions  [][]Matching // of all questions, where a point of application is stated
 	Questions   []Question   // all, where a grid uncertainty is borrowed
 	Alternative bool
@@ -34,7 +37,7 @@ type ingredients struct {
 
 // key returns a text that is equal for equal ingredients.
 func (e *evaluation) key(q *Question, model string) string {
-	in := ingredients{Question: q, Model: model, Cases: e.study.Cases, Application: e.study.Application, Quality: e.study.Quality, Alternative: e.options.Alternatives}
+	in := ingredients{Question: q, Model: model, Cases: e.study.Cases, Application: e.study.Application, Quality: e.study.Quality, Context: e.study.Context, Checked: e.study.Checked, Alternative: e.options.Alternatives}
 	for i := range e.study.Slips {
 		p := &e.study.Slips[i]
 		if !q.concerns(p) && !q.borrows() {
@@ -53,6 +56,7 @@ func (e *evaluation) key(q *Question, model string) string {
 	if len(e.study.Application) > 0 {
 		for i := range e.study.Questions {
 			in.Conditions = append(in.Conditions, e.study.Questions[i].Conditions)
+			in.Names = append(in.Names, e.study.Questions[i].id())
 		}
 	}
 	if q.borrows() {

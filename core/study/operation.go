@@ -221,7 +221,7 @@ func (s *Study) Name(t Target) string {
 var fieldNames = map[string]string{
 	"y.column": "column of values", "y.unit": "unit of values", "x.column": "column of stations", "x.unit": "unit of stations",
 	"u.column": "column of uncertainty", "u.unit": "unit of uncertainty", "u_factor": "coverage", "u_basis": "basis of the uncertainty", "size.column": "column of cell counts", "cells": "number of cells",
-	"choices.k": "k", "choices.k_num": "k_num", "choices.bounded": "bounded rule", "choices.rule": "rule of the grid study", "choices.safety": "safety factor of the grid study", "choices.formal": "formal order", "choices.dimension": "dimension",
+	"choices.k": "k", "choices.k_num": "k_num", "choices.bounded": "bounded rule", "choices.rule": "rule of the grid study", "choices.safety": "safety factor of the grid study", "choices.common_set": "models at different stations", "known": "whether the data were known", "context.influence": "influence of the simulation on the decision", "context.consequence": "consequence of a wrong decision", "choices.formal": "formal order", "choices.dimension": "dimension",
 	"choices.interpolation": "interpolation", "choices.u_interp": "interpolation uncertainty", "choices.num_shared": "u_num shared", "choices.k_student": "k by degrees of freedom", "choices.sampled": "interval by sampling",
 	"choices.num_linear": "sum of the parts of u_num",
 	"balance_of":         "kind of balance", "scale": "flux that matters", "scale_name": "name of the flux that matters",
@@ -274,6 +274,8 @@ func (s *Study) field(t Target) *Field {
 				return &q.Kind
 			case "use":
 				return &q.Use
+			case "known":
+				return &q.Known
 			}
 		}
 	case "source":
@@ -323,8 +325,13 @@ func (s *Study) enter(t Target, value string) (string, error) {
 	case "file":
 		return s.enterReading(t, value)
 	case "study":
-		if t.Field == "pattern" {
+		switch t.Field {
+		case "pattern":
 			return s.enterPattern(value)
+		case "context.influence":
+			return enterWeight(&s.Context.Influence, value)
+		case "context.consequence":
+			return enterWeight(&s.Context.Consequence, value)
 		}
 	case "quality":
 		return s.enterQuality(t.ID, t.Field, value)
@@ -461,6 +468,8 @@ func (q *Question) enter(path, value string) (string, error) {
 		return yesNo(&c.KStudent, value)
 	case "choices.sampled":
 		return yesNo(&c.Sampled, value)
+	case "choices.common_set":
+		return yesNo(&c.CommonSet, value)
 	case "choices.u_interp":
 		return yesNo(&c.UInterp, value)
 	case "choices.num_shared":

@@ -124,6 +124,9 @@ type Cell struct {
 	Tried       []string      `json:"tried,omitempty"` // alternatives that were evaluated
 	Fragile     []Fragility   `json:"fragile"`         // alternatives that change an outcome word
 
+	Known    string         `json:"known,omitempty"`    // whether the data were known when the simulation was made
+	Evidence []EvidenceLine `json:"evidence,omitempty"` // expected for the recorded use
+
 	Inputs      []InputLine       `json:"inputs,omitempty"`
 	InputForm   string            `json:"input_form,omitempty"` // InputsCounted or InputsNominal, where compared
 	Members     *MemberLine       `json:"members,omitempty"`    // runs with sampled inputs
@@ -263,6 +266,7 @@ type Difference struct {
 	Resolved bool   `json:"resolved"`
 	RMSA     Number `json:"rms_a"` // root mean square of E
 	RMSB     Number `json:"rms_b"`
+	Shared   bool   `json:"shared,omitempty"` // at the shared stations only, by choice
 }
 
 // Compared is one condition on both sides and the effect of its difference.
@@ -282,6 +286,36 @@ type Application struct {
 	Text    string `json:"text"` // e.g. α = 11°
 	Outside bool   `json:"outside"`
 	Range   string `json:"range"` // e.g. α 4.2° to 9°
+	// Place is where the point lies among the comparisons that state all of its
+	// conditions; nil where none does.
+	Place *AppliedPlace `json:"place,omitempty"`
+}
+
+// AppliedPlace is the point of application in the space of its conditions.
+// Distances are in parts of the span that the comparisons cover.
+type AppliedPlace struct {
+	State    string          `json:"state"` // inside, edge or outside: a word of package adequacy
+	Names    []string        `json:"names"`
+	Units    []string        `json:"units"`
+	At       []Number        `json:"at"`
+	Beyond   Number          `json:"beyond"`  // from the hull of the comparisons
+	Nearest  string          `json:"nearest"` // case
+	Distance Number          `json:"distance"`
+	Points   []ComparedPoint `json:"points"`
+}
+
+// ComparedPoint is one comparison in the space of conditions.
+type ComparedPoint struct {
+	Case string   `json:"case"`
+	At   []Number `json:"at"`
+}
+
+// EvidenceLine is a piece of evidence that the recorded use of the result
+// lets a reader expect, and whether it is there. No score is made of it.
+type EvidenceLine struct {
+	What  string `json:"what"`
+	From  string `json:"from"` // the weight of the decision from which it is expected
+	Given bool   `json:"given"`
 }
 
 // Excluded is a station that a person took out of the comparison.

@@ -387,60 +387,58 @@ func (w *work) regionLine(ask *Scoring, e []float64, rows []int) RegionLine {
 	return line
 }
 
-// difference sets two models against each other, with the uncertainty of the
-// difference: the data are common to both and cancel.
-func (e *evaluation) difference(a, b *Cell) (Difference, bool) {
-	if !sameStations(a, b) {
-		return Difference{}, false
-	}
-	d := Difference{Case: a.Case, Quantity: a.Quantity, A: a.Model, B: b.Model, Unit: a.Unit, N: len(a.Stations), U: None}
+// difference sets two models against each other at the given pairs of
+// stations, with the uncertainty of the difference: the data are common to both
+// and cancel.
+func (e *evaluation) difference(a, b *Cell, pairs [][2]int) Difference {
+	d := Difference{Case: a.Case, Quantity: a.Quantity, A: a.Model, B: b.Model, Unit: a.Unit, N: len(pairs), U: None}
 	sum, square, known := 0.0, 0.0, true
-	n := float64(len(a.Stations))
-	for i := range a.Stations {
-		x, y := a.Stations[i], b.Stations[i]
+	n := float64(len(pairs))
+	for _, p := range pairs {
+		x, y := a.Stations[p[0]], b.Stations[p[1]]
 		sum += float64(x.S-y.S) / n
 		known = known && x.UInput.Known() && y.UInput.Known()
 		for _, u := range []Number{x.UNum, y.UNum} {
 			known = known && u.Known()
 			square += float64(u*u) / float64(n*n)
 		}
-		// Input sources are fully shared between stations; how they move the
-		// two models against each other is not known: counted in full for both.
 		d.RMSA += x.E * x.E / Number(n)
 		d.RMSB += y.E * y.E / Number(n)
 	}
 	d.RMSA, d.RMSB = Number(math.Sqrt(float64(d.RMSA))), Number(math.Sqrt(float64(d.RMSB)))
 	d.Mean = Number(sum)
 	if !known {
-		return d, true
+		return d
 	}
-	input := 0.0
-	for _, c := range []*Cell{a, b} {
-		u := 0.0
-		for i := range c.Stations {
-			if v := c.Stations[i].UInput; v.Known() {
-				u += float64(v) / n
-			}
-		}
-		input += float64(u * u)
+	// Input sources are fully shared between stations; how they move the two
+	// models against each other is not known: counted in full for both.
+	inputA, inputB := 0.0, 0.0
+	for _, p := range pairs {
+		inputA += float64(a.Stations[p[0]].UInput) / n
+		inputB += float64(b.Stations[p[1]].UInput) / n
 	}
-	d.U = Number(math.Sqrt(square + input))
+	d.U = Number(math.Sqrt(square + float64(inputA*inputA) + float64(inputB*inputB)))
 	d.Resolved = exceeds(math.Abs(sum), float64(a.Choices.K)*float64(d.U))
-	return d, true
+	return d
 }
 
-// sameStations reports whether two cells compare the same rows in the same
-// unit: anything else would be no fair comparison of models.
-func sameStations(a, b *Cell) bool {
-	if a.Unit != b.Unit || a.XUnit != b.XUnit || len(a.Stations) != len(b.Stations) || len(a.Stations) == 0 {
-		return false
+// sharedStations pairs the stations of two cells that compare the same row of
+// the reference in the same unit, and reports whether these are all of both:
+// anything else would be no fair comparison of models.
+func sharedStations(a, b *Cell) (pairs [][2]int, all bool) {
+	if a.Unit != b.Unit || a.XUnit != b.XUnit {
+		return nil, false
 	}
-	for i := range a.Stations {
-		if a.Stations[i].Line != b.Stations[i].Line {
-			return false
+	at := map[int]int{}
+	for j, s := range b.Stations {
+		at[s.Line] = j
+	}
+	for i, s := range a.Stations {
+		if j, shared := at[s.Line]; shared {
+			pairs = append(pairs, [2]int{i, j})
 		}
 	}
-	return true
+	return pairs, len(pairs) > 0 && len(pairs) == len(a.Stations) && len(pairs) == len(b.Stations)
 }
 
 // differences lists the models of every question against each other.
@@ -451,11 +449,13 @@ func (e *evaluation) differences(r *Report) {
 			if a.Case != b.Case || a.Quantity != b.Quantity || a.Summary == nil || b.Summary == nil {
 				continue
 			}
-			d, fair := e.difference(a, b)
-			if !fair {
-				r.Notices = append(r.Notices, notice.New("models-stations", a.Model, b.Model, a.Quantity, strconv.Itoa(len(a.Stations)), strconv.Itoa(len(b.Stations))))
+			pairs, fair := sharedStations(a, b)
+			if !fair && !(a.Choices.CommonSet && len(pairs) > 0) {
+				r.Notices = append(r.Notices, notice.New("models-stations", a.Model, b.Model, len(pairs), max(len(a.Stations), len(b.Stations)), a.Quantity))
 				continue
 			}
+			d := e.difference(a, b, pairs)
+			d.Shared = !fair
 			r.Differences = append(r.Differences, d)
 		}
 	}

@@ -58,6 +58,7 @@ type Study struct {
 	// Application is the point the result is meant for, in the conditions of
 	// the questions; empty when it is not stated.
 	Application []Condition `json:"application,omitempty"`
+	Context     Context     `json:"context,omitzero"`
 	Log         []Entry     `json:"log"`
 	Quality     []Quality   `json:"quality,omitempty"` // data-quality cards of the cases
 	// Pattern says how names of files are read; see Naming.
@@ -65,6 +66,20 @@ type Study struct {
 
 	unknown map[string]json.RawMessage // fields of the document this edition does not know, kept as they came
 }
+
+// Context is what hangs on the result, beside its purpose: Low, Medium or High,
+// or empty where it is not stated.
+type Context struct {
+	Influence   string `json:"influence,omitempty"`   // of the simulation on the decision, beside other evidence
+	Consequence string `json:"consequence,omitempty"` // of a wrong decision
+}
+
+// Weights of a context.
+const (
+	Low    = "low"
+	Medium = "medium"
+	High   = "high"
+)
 
 // Signature is a recorded statement of a role, not an authenticated one.
 type Signature struct {
@@ -203,6 +218,13 @@ const (
 const (
 	UseValidation = "validation"
 	UseTuning     = "tuning"
+	UseBoth       = "both" // a part of them set the model
+)
+
+// Whether the data were known when the simulation was made.
+const (
+	Blind = "blind"
+	Aware = "open"
 )
 
 // Question is one quantity of one case: what is asked, and with which choices.
@@ -216,7 +238,8 @@ type Question struct {
 	Sources     []Source     `json:"sources"`
 	Kind        Field        `json:"kind"`
 	Use         Field        `json:"use"`
-	ReferenceID string       `json:"reference_id"` // what the data are called
+	Known       Field        `json:"known,omitzero"` // Blind or Aware
+	ReferenceID string       `json:"reference_id"`   // what the data are called
 	Choices     Choices      `json:"choices"`
 	Downward    bool         `json:"downward"` // draw with negative values upward, as is usual for Cp
 	Revealed    bool         `json:"revealed"` // the comparison was looked at
@@ -480,6 +503,7 @@ type Choices struct {
 	NumShared     bool               `json:"num_shared"`           // u_num fully shared between stations
 	KStudent      bool               `json:"k_student,omitempty"`  // K follows from the effective degrees of freedom at 95 %
 	Sampled       bool               `json:"sampled,omitempty"`    // the interval of the model error by sampling too
+	CommonSet     bool               `json:"common_set,omitempty"` // models compared at different stations are set against each other at the shared ones
 	NumLinear     bool               `json:"num_linear,omitempty"` // parts of u_num depend on each other: they are summed, not their squares
 }
 

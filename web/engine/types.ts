@@ -407,6 +407,8 @@ export interface Cell {
   requirement: Judgement | null;
   tried?: string[];
   fragile: Fragility[] | null;
+  known?: string;
+  evidence?: EvidenceLine[];
   inputs?: InputLine[];
   input_form?: string;
   members?: MemberLine;
@@ -443,6 +445,7 @@ export interface Difference {
   resolved: boolean;
   rms_a: number | null;
   rms_b: number | null;
+  shared?: boolean;
 }
 
 export interface Signature {
@@ -561,6 +564,7 @@ export interface Choices {
   num_shared: boolean;
   k_student?: boolean;
   sampled?: boolean;
+  common_set?: boolean;
   num_linear?: boolean;
 }
 
@@ -605,6 +609,7 @@ export interface Application {
   text: string;
   outside: boolean;
   range: string;
+  place?: AppliedPlace;
 }
 
 export interface Summary {
@@ -816,6 +821,12 @@ export interface Fragility {
   at?: number;
 }
 
+export interface EvidenceLine {
+  what: string;
+  from: string;
+  given: boolean;
+}
+
 export interface InputLine {
   name: string;
   unit: string;
@@ -999,6 +1010,17 @@ export interface StepPoint {
 
 export type Method = string;
 
+export interface AppliedPlace {
+  state: string;
+  names: string[] | null;
+  units: string[] | null;
+  at: (number | null)[] | null;
+  beyond: number | null;
+  nearest: string;
+  distance: number | null;
+  points: ComparedPoint[] | null;
+}
+
 export interface Turning {
   source: string;
   rho: number | null;
@@ -1144,6 +1166,11 @@ export interface ReducedInput {
   name: string;
   part: number | null;
   common: boolean;
+}
+
+export interface ComparedPoint {
+  case: string;
+  at: (number | null)[] | null;
 }
 
 export interface CorrelationPoint {
