@@ -2,12 +2,11 @@ package main
 
 import (
 	"bytes"
-	"compress/gzip"
 	"crypto/sha256"
 	"encoding/base64"
-	"io"
 	"net/http"
 	"net/http/httptest"
+	"os/exec"
 	"path"
 	"regexp"
 	"strings"
@@ -87,11 +86,9 @@ func TestSingle(t *testing.T) {
 	if err != nil {
 		t.Fatal(err)
 	}
-	reader, err := gzip.NewReader(bytes.NewReader(packed))
-	if err != nil {
-		t.Fatal(err)
-	}
-	core, err := io.ReadAll(reader)
+	unpack := exec.Command("zstd", "-d", "-q", "-c", "-")
+	unpack.Stdin = bytes.NewReader(packed)
+	core, err := unpack.Output()
 	if err != nil || !bytes.Equal(core, p.core) {
 		t.Errorf("the core in the page is not the one that was built (%v)", err)
 	}

@@ -2,6 +2,8 @@
 // page itself, or for the core, where the page is served in parts, at an address
 // that its block names.
 
+import { decompress } from "fzstd";
+
 function block(id: string): HTMLElement {
   const element = document.getElementById(id);
   if (element === null) {
@@ -19,24 +21,17 @@ export function workerSource(): string {
 export async function compiledCore(): Promise<WebAssembly.Module> {
   const element = block("core");
   const address = element.dataset["address"];
-  const response = address === undefined ? unpack(element.textContent ?? "") : await fetch(address);
-  // The text has been decoded and is only a weight from here on.
-  element.textContent = "";
+  if (address === undefined) {
+    const packed = fromBase64(element.textContent ?? "");
+    // The text has been decoded and is only a weight from here on.
+    element.textContent = "";
+    return WebAssembly.compile(decompress(packed) as Uint8Array<ArrayBuffer>);
+  }
+  const response = await fetch(address);
   if (!response.ok) {
     throw new Error(`the core could not be had: ${response.status} ${response.statusText}`);
   }
-  if (response.headers.get("Content-Type") === "application/wasm") {
-    return WebAssembly.compileStreaming(response);
-  }
-  return WebAssembly.compile(await response.arrayBuffer());
-}
-
-/** Decodes base64 of gzip; no fetch, which the single page's policy forbids. */
-function unpack(text: string): Response {
-  const packed = new Blob([fromBase64(text)]);
-  return new Response(packed.stream().pipeThrough(new DecompressionStream("gzip")), {
-    headers: { "Content-Type": "application/wasm" },
-  });
+  return response.headers.get("Content-Type") === "application/wasm" ? WebAssembly.compileStreaming(response) : WebAssembly.compile(await response.arrayBuffer());
 }
 
 type Decoder = { fromBase64?: (text: string) => Uint8Array<ArrayBuffer> };
