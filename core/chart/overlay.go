@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"math"
 	"slices"
+	"strconv"
 	"strings"
 
 	"github.com/go-echarts/go-echarts/v2/opts"
@@ -176,6 +177,9 @@ func (v *curves) scales() {
 	for _, d := range v.data {
 		x.take(float64(d.x))
 	}
+	for _, a := range v.supports() {
+		x.take(float64(a[0].(quantity.Number)))
+	}
 	for _, c := range v.cells {
 		for _, o := range c.Outside {
 			x.take(float64(o))
@@ -196,6 +200,9 @@ func (v *curves) scales() {
 	v.x = newScale(x, 9)
 
 	y, e := newBounds(), newBounds()
+	for _, a := range v.supports() {
+		y.take(float64(a[1].(quantity.Number)))
+	}
 	for _, d := range v.data {
 		y.around(float64(d.d), float64(v.k*float64(d.u)))
 	}
@@ -272,6 +279,7 @@ const (
 	hollowName  = "not compared"
 	outsideName = "outside, not compared"
 	removedName = "excluded"
+	supportName = "support point, declared"
 )
 
 // barred reports whether any u_D is known.
@@ -315,6 +323,22 @@ func (v *curves) removed() []study.Excluded {
 	return all
 }
 
+// supports are the points that were added to the simulations, once each.
+func (v *curves) supports() [][]any {
+	rows := [][]any{}
+	for _, c := range v.cells {
+		if c.Treatment == nil {
+			continue
+		}
+		for _, a := range c.Treatment.Anchors {
+			if !slices.ContainsFunc(rows, func(r []any) bool { return r[0] == a.X && r[1] == a.Value }) {
+				rows = append(rows, []any{a.X, a.Value})
+			}
+		}
+	}
+	return rows
+}
+
 func (v *curves) upperKeys() []entry {
 	keys := []entry{}
 	for i, c := range v.cells {
@@ -335,6 +359,9 @@ func (v *curves) upperKeys() []entry {
 	}
 	if len(v.removed()) > 0 {
 		keys = append(keys, entry{Name: removedName, Icon: square.key(), ItemStyle: v.hollow(v.ink)})
+	}
+	if len(v.supports()) > 0 {
+		keys = append(keys, entry{Name: supportName, Icon: diamond.key(), ItemStyle: v.hollow(v.ink)})
 	}
 	if len(v.outside()) > 0 {
 		keys = append(keys, entry{Name: outsideName, Icon: triangle.key(), ItemStyle: v.hollow(v.ink)})
@@ -396,6 +423,9 @@ func (v *curves) upper(n int) {
 			rows[i] = []any{x.X, x.D}
 		}
 		v.draw(n, 5, series{Type: "scatter", Name: removedName, Symbol: square.symbol(), SymbolSize: 9, ItemStyle: v.hollow(v.ink), Data: rows})
+	}
+	if supports := v.supports(); len(supports) > 0 {
+		v.draw(n, 5, series{Type: "scatter", Name: supportName, Symbol: diamond.symbol(), SymbolSize: 10, ItemStyle: v.hollow(v.ink), Data: supports})
 	}
 	if outside := v.outside(); len(outside) > 0 {
 		edge := v.main.Min
@@ -588,6 +618,9 @@ func (v *curves) caption(cells []study.Cell) string {
 		sentences = append(sentences, "The band along S is ± "+times(v.k, "u_num")+".")
 	default:
 		sentences = append(sentences, "S has no band: u_num along it is not known.")
+	}
+	if n := len(v.supports()); n > 0 {
+		sentences = append(sentences, "Diamonds are support points that were declared for S: "+strconv.Itoa(n)+".")
 	}
 	if v.striped() {
 		sentences = append(sentences, v.stripCaption())

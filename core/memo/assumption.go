@@ -73,8 +73,21 @@ func choices(i int, c study.Cell) []Node {
 	if c.Scalar {
 		return words
 	}
-	return append(words, say("; interpolation {}, its uncertainty {}; numerical uncertainty {} between stations",
+	words = append(words, say("; interpolation {}, its uncertainty {}; numerical uncertainty {} between stations",
 		text(string(h.Interpolation)), pick(h.UInterp, "counted", "left out"), pick(h.NumShared, "fully shared", "independent"))...)
+	if h.Gap > 0 {
+		words = append(words, say("; a spacing of the simulation above *m* = {} times the median is a gap", asWritten(h.Gap, at("gap")))...)
+	}
+	if h.Period > 0 {
+		words = append(words, say("; the stations repeat after {}{}", asWritten(h.Period, at("period")), text(suffix(c.XUnit)))...)
+	}
+	if h.Probe > 0 {
+		words = append(words, say("; the simulation is averaged over {}{} at each station, as the probe does", asWritten(h.Probe, at("probe")), text(suffix(c.XUnit)))...)
+	}
+	if h.Smooth > 0 {
+		words = append(words, say("; changes of sign are those of a curve smoothed over {} rows", count(h.Smooth, at("smooth")))...)
+	}
+	return words
 }
 
 func (b *builder) assumptionSection() Node {

@@ -225,6 +225,14 @@ func withUnit(value Node, unit string) []Node {
 	return []Node{value, text("\u202f" + unit)}
 }
 
+// suffix is a unit behind a number, nothing for pure numbers.
+func suffix(unit string) string {
+	if unit == "" || unit == "1" {
+		return ""
+	}
+	return "\u202f" + unit
+}
+
 // interval returns "lo to hi".
 func interval(lo, hi Node) []Node { return say("{} to {}", lo, hi) }
 

@@ -79,7 +79,7 @@ func gridMethod() []Node {
 func stationPolicy() []Node {
 	return []Node{
 		heading("Stations and interpolation"),
-		paragraph(say("The stations are those of the reference, whose values stay as they are. The simulation is interpolated to them, with straight lines or with a cubic that keeps monotone data monotone, as chosen. Nothing is extrapolated: a station outside the simulated range is listed and not compared. Gaps are not bridged. A blank is not read as zero. The interpolation uncertainty is a line of the budget:")...),
+		paragraph(say("The stations are those of the reference, whose values stay as they are. The simulation is interpolated to them, with straight lines or with a cubic that keeps monotone data monotone, as chosen. Nothing is extrapolated: a station outside the simulated range is listed and not compared. Gaps are not bridged. A blank is not read as zero. A spacing of the simulation more than *m* times the median spacing, of the eight around it and of the whole line, is a gap as well. A support point is added beyond the line only where physics declares one. A simulation is averaged over the width of a probe where one is stated. Where weights of the stations are chosen they have the sum one and act in the means of *E*, |*E*| and *E*^{2}, never in the joint statistic. The integral of *E* runs by the trapezoid between stations that have values on both sides, never across a gap or a station that is not compared. The interpolation uncertainty is a line of the budget:")...),
 		formula("linear: bound = 1.05 · ½ ( *x* − *x*_{i} )( *x*_{i+1} − *x* ) · max |*f*″| from divided differences;   monotone: bound = |linear − monotone|;   *u*_{int} = bound/√3"),
 	}
 }

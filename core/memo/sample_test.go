@@ -124,6 +124,22 @@ func taps(model string, e []float64, joint study.Joint, requirement *study.Judge
 	c.Joint.Eigenvalues = []study.Number{0, .0451, 21.3}
 	c.Joint.Station = &study.Leaving{Region: "0.61", Statistic: 21.54, N: 23, Reference: 35.17}
 	c.Joint.Correlations = []study.CorrelationLine{{Source: "reference pressure", N: 24, Top: 36.415, Low: 10.856, Points: []study.CorrelationPoint{{Rho: 0, Statistic: 50.98}, {Rho: .5, Statistic: 9.42}, {Rho: 1, Statistic: 27.05}}, Flips: []study.Number{.0215}}}
+	if model == "B" {
+		c.Choices.Gap, c.Choices.Period, c.Choices.Probe, c.Choices.Smooth = 12, 360, .004, 5
+		for i := range c.Stations {
+			w := study.Number(.03 + .001*float64(i))
+			c.Stations[i].Weight = &w
+		}
+		c.Treatment = &study.Treatment{
+			Orders:   []study.OrderLine{{File: "c1-pressure-both-models.dat", Column: "x/c", Hash: "84222325cbf29ce4", Sorted: true}, {File: "c1-taps.csv", Column: "x/c", Hash: "af63dc4c8601ec8c"}},
+			Sampling: study.AtCellCentres,
+			Anchors:  []study.AnchorLine{{Kind: study.AtWall, X: -.01, Value: .0123, Why: "stagnation"}},
+			Plan:     &study.PlanLine{At: "2026-03-03 10:00", Changes: []string{"1 station excluded"}},
+			Noise:    &study.NoiseLine{S: .00712, Rows: 22, Stated: .006},
+			Fit:      &study.DisplacementLine{N: 20, RMS: .0171, Shift: .0031, ShiftRMS: .0162, Scale: 1.021, ScaleRMS: .0165, BothShift: .0029, BothScale: 1.018, BothRMS: .0158, AtEdge: true},
+			Integral: &study.IntegralLine{E: .00411, S: -.4212, D: -.42531, U: .0151, Length: .93, Whole: .975, Pieces: 2}, Weights: "the length each station stands for",
+		}
+	}
 	c.Crossings = study.Crossings{Simulation: []study.Crossing{{X: .7123456789, Rising: true}}, Reference: []study.Crossing{{X: .6987654321, Rising: true}, {X: .95, Rising: false}}}
 	return c
 }
@@ -138,6 +154,8 @@ func gridPoints(values ...study.Number) []study.GridPoint {
 }
 
 func drag() study.Cell {
+	choices := study.DefaultChoices()
+	choices.Gap = 0
 	return study.Cell{
 		Case: "C1", Condition: "α = 4.2°", Quantity: "drag coefficient", Symbol: "Cd", Model: "B", Grid: "G4",
 		Derived: &study.Derived{Kind: "drag coefficient of a wake", Formula: "Cd = (2/L) ∫u/U (1 − u/U) dy", Settings: []study.DerivedSetting{{Name: "reference length L", Value: "0.2 m"}}, Effect: -.000021, Propagation: "first order",
@@ -150,7 +168,7 @@ func drag() study.Cell {
 			Others: []study.DerivedOther{{Change: "edge at the plateau", Simulation: .0312, Reference: .0309, E: .0003}, {Change: "edge at the last row", Simulation: .0298, Reference: quantity.None, E: quantity.None}}},
 		Reference: "OR-26 balance", Kind: study.KindTest, Use: study.UseValidation, Unit: "1", Scalar: true,
 		Courses: [5]study.State{study.Settled, study.Settled, study.Settled, study.Settled, study.Doubts},
-		Choices: study.DefaultChoices(), StationsAll: 1, Provisional: true, Degrees: 7.3, K95: 2.34, InputForm: study.InputsNominal,
+		Choices: choices, StationsAll: 1, Provisional: true, Degrees: 7.3, K95: 2.34, InputForm: study.InputsNominal,
 		Inputs:  []study.InputLine{{Name: "U", Unit: "m/s", Nominal: 31, U: .155, Sensitivity: .00161, DataSensitivity: .0004, Method: "central, two runs", Shared: true, Text: "0.5 % of U = 31 m/s, 95 %", Origin: "traverse"}},
 		Sampled: &study.SampledLine{At: quantity.None, Value: .00031, U: .0006, Lo: -.00087, Hi: .00149, Level: .95, Draws: 230000, Minus: .0003, Plus: .00045, Shift: .00012},
 		Monitors: []study.MonitorLine{

@@ -33,6 +33,7 @@ const (
 	ofRatio
 	ofPercent
 	ofLine
+	ofWeight
 )
 
 var stationColumns = []column{
@@ -49,6 +50,7 @@ var stationColumns = []column{
 	{"from", "lo", ofSigned, func(s study.Station) quantity.Number { return s.Lo }},
 	{"to", "hi", ofSigned, func(s study.Station) quantity.Number { return s.Hi }},
 	{"*E*, %", "percent", ofPercent, percentOf},
+	{"*w*", "weight", ofWeight, weight},
 	{"Line", "line", ofLine, nil},
 }
 
@@ -58,6 +60,14 @@ func percentOf(s study.Station) quantity.Number {
 		return quantity.None
 	}
 	return *s.Percent
+}
+
+// weight is the weight of a station; where all are equal there is none.
+func weight(s study.Station) quantity.Number {
+	if s.Weight == nil {
+		return quantity.None
+	}
+	return *s.Weight
 }
 
 // stations prints the values at the stations: one row for each.
@@ -76,7 +86,7 @@ func (b *builder) stations(i int, c study.Cell) []Node {
 			columns = append(columns, k)
 			continue
 		}
-		if k.key == "percent" {
+		if k.kind == ofPercent || k.kind == ofWeight {
 			continue // not asked for, or withheld everywhere
 		}
 		if len(without) > 0 {
@@ -167,6 +177,8 @@ func stationColumn(i int, c study.Cell, k column, rows []int) []Node {
 		switch k.kind {
 		case ofX:
 			cells[r] = written(s.X, atPlaces(float64(s.X), decimals), field)
+		case ofWeight:
+			cells[r] = digits(k.value(s), 3, field)
 		case ofLine:
 			cells[r] = count(s.Line, field)
 		case ofPercent:
@@ -247,7 +259,7 @@ func halves(columns []column) [][]int {
 			comparison, uncertainty = append(comparison, j), append(uncertainty, j)
 			continue
 		}
-		if k.kind == ofUncertainty || k.kind == ofLine {
+		if k.kind == ofUncertainty || k.kind == ofWeight || k.kind == ofLine {
 			uncertainty = append(uncertainty, j)
 			continue
 		}

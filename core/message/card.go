@@ -8,6 +8,7 @@ import (
 
 	"weirmark/core/metric"
 	"weirmark/core/notice"
+	"weirmark/core/plausibility"
 	"weirmark/core/profile"
 	"weirmark/core/quantity"
 	"weirmark/core/refinement"
@@ -35,7 +36,7 @@ func (s *Session) slipCards() []SlipCard {
 			cards, slips, tables = append(cards, card), append(slips, p), append(tables, t)
 			continue
 		}
-		card.Read = readWords(t)
+		card.Read = readWords(t, p.X.Column.Value)
 		if p.Role.Given() && p.Role.Value != study.Unused {
 			card.Read += " Used: " + s.study.Mapping(p, t) + "."
 		}
@@ -59,13 +60,17 @@ func (s *Session) slipCards() []SlipCard {
 	return cards
 }
 
-// readWords says what a table holds.
-func readWords(t tablefile.Table) string {
+// readWords says what a table holds, and the order of its stations.
+func readWords(t tablefile.Table, stations string) string {
 	text := ""
 	if t.Name != "" {
 		text = "Table “" + t.Name + "”: "
 	}
-	text += quantity.Counted(t.Rows(), "row") + ", " + quantity.Counted(len(t.Columns), "column") + ", order kept."
+	text += quantity.Counted(t.Rows(), "row") + ", " + quantity.Counted(len(t.Columns), "column") + ", order kept"
+	if x, err := t.Column(stations); stations != "" && err == nil {
+		text += " (hash of " + x.Name + " in file order: " + study.OrderHash(x.Values) + ")"
+	}
+	text += "."
 	for i, c := range t.Columns {
 		if i == 6 {
 			return text + " And " + quantity.Counted(len(t.Columns)-6, "further column") + "."
@@ -214,6 +219,7 @@ func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 	if p.Role.Value == study.InputRun {
 		list = append(list, entry("input", "changed input", p.Input, free, "as in the source line, e.g. U"), entry("input_at", "its value here", p.InputAt, free, ""), entry("grid", "grid", p.Grid, free, "e.g. G4"))
 	}
+	list = append(list, curveEntries(p, t, entry)...)
 	if p.Role.Value == study.Simulation {
 		list = append(list, entry("grid", "grid", p.Grid, free, "e.g. G4"), entry("cells", "cells", p.Cells, free, "number of cells"))
 		if p.Grid.Given() || p.Cells.Given() {
@@ -271,6 +277,26 @@ func figureEntries(p *study.Slip, entry func(field, label string, f study.Field,
 	list = append(list, entry("flow_rate", "its integral should be", p.FlowRate, []Option{}, "a stated flow rate, in the units of values times stations"))
 	if p.FlowRate.Given() {
 		list = append(list, entry("flow_rate_u", "with u", p.FlowRateU, []Option{}, "standard; empty: taken as exact"))
+	}
+	return list
+}
+
+// curveEntries are the entries of a curve that apply to few: they show where
+// the table calls for them, or where they are filled.
+func curveEntries(p *study.Slip, t tablefile.Table, entry func(field, label string, f study.Field, options []Option, hint string) Entry) []Entry {
+	if !p.X.Column.Given() || p.Role.Value != study.Simulation && p.Role.Value != study.Reference {
+		return nil
+	}
+	list := []Entry{}
+	x, errX := t.Column(p.X.Column.Value)
+	if p.Abscissa.Given() || p.Contour.Column.Given() || errX == nil && profile.Loop(x.Values) && len(t.Columns) > 2 {
+		list = append(list, entry("abscissa", "abscissa", p.Abscissa, []Option{{"", "the stations"}, {study.AlongArc, "arc length s"}, {study.AlongArcPart, "s over its whole"}}, "needs the second coordinate"))
+	}
+	if y, err := t.Column(p.Y.Column.Value); err == nil && errX == nil && (p.Repeats.Given() || len(plausibility.Repeats(x.Values, y.Values)) > 0) {
+		list = append(list, entry("repeats", "different values at one station", p.Repeats, []Option{{"", "–"}, {study.Averaged, "averaged"}, {study.KeptBoth, "both kept, as a jump"}, {study.FirstKept, "the first kept, others left out"}}, "stays open until it is answered"))
+	}
+	if p.Role.Value == study.Simulation {
+		list = append(list, entry("sampling", "values held at", p.Sampling, []Option{{"", "–"}, {study.AtNodes, "nodes"}, {study.AtCellCentres, "cell centres"}, {study.AtFaces, "faces"}}, "recorded, changes nothing"))
 	}
 	return list
 }
@@ -362,7 +388,7 @@ func scaled(list [][2]float64, box [4]float64) [][2]study.Number {
 }
 
 // choices are the decisions whose effect shows at once.
-func choices(q *study.Question) []Entry {
+func choices(q *study.Question, scalar bool) []Entry {
 	c := q.Choices
 	entry := func(field, label, value string, options []Option, hint string) Entry {
 		return Entry{Target: study.Target{Kind: "question", ID: questionID(q), Field: "choices." + field}, Label: label, Value: value, By: study.Entered, Options: options, Hint: hint}
@@ -380,7 +406,7 @@ func choices(q *study.Question) []Entry {
 	for _, r := range refinement.Rules {
 		rules = append(rules, Option{r, study.RuleName(r)})
 	}
-	return []Entry{
+	list := []Entry{
 		entry("k", "k of the statement", quantity.Typed(c.K), []Option{}, "2 covers about 95 % of a normal distribution"),
 		entry("k_num", "k_num, from U of the grids to u_num", quantity.Typed(c.KNum), []Option{}, "1.15: error of the fine grid a shifted Gaussian; 2: normal"),
 		entry("bounded", "order of the three finest", yes(c.Bounded), []Option{{"yes", "bounded rule"}, {"no", "plain rule"}}, ""),
@@ -391,11 +417,31 @@ func choices(q *study.Question) []Entry {
 		entry("dimension", "grids are", strconv.Itoa(c.Dimension), []Option{{"2", "two-dimensional"}, {"3", "three-dimensional"}}, ""),
 		entry("k_student", "k follows", yes(c.KStudent), []Option{{"no", "as entered"}, {"yes", "from the effective degrees of freedom, 95 %"}}, ""),
 		entry("sampled", "interval by sampling", yes(c.Sampled), []Option{{"no", "where bars have two sides"}, {"yes", "always"}}, ""),
-		entry("interpolation", "simulation at the stations", string(c.Interpolation), []Option{{"linear", "linear"}, {"monotone", "monotone cubic"}}, ""),
+		entry("interpolation", "simulation at the stations", string(c.Interpolation), []Option{{"linear", "linear"}, {"monotone", "monotone cubic"}}, "no spline: it overshoots at a jump"),
 		entry("u_interp", "interpolation uncertainty", yes(c.UInterp), []Option{{"yes", "counted"}, {"no", "not counted"}}, ""),
 		entry("num_linear", "parts of u_num", yes(c.NumLinear), []Option{{"no", "independent: root of the squares"}, {"yes", "dependent: sum"}}, "grid and iteration errors may depend on each other"),
 		entry("num_shared", "u_num between stations", yes(c.NumShared), []Option{{"no", "independent"}, {"yes", "the same error at all"}}, ""),
 	}
+	if scalar {
+		return list
+	}
+	list = append(list,
+		entry("gap", "a gap is longer than, times the median spacing", quantity.Typed(c.Gap), []Option{}, "10: a stretched grid grows by less than 2 a row"),
+		entry("probe", "probe averages over, in the unit of the stations", orNone(c.Probe), []Option{}, "none: values at points"),
+		entry("period", "stations repeat after", orNone(c.Period), []Option{}, "none: not periodic; e.g. 360"))
+	smooth := ""
+	if c.Smooth > 0 {
+		smooth = strconv.Itoa(c.Smooth)
+	}
+	return append(list, entry("smooth", "changes of sign smoothed over, rows", smooth, []Option{}, "none: as read; curves are drawn and compared as read"))
+}
+
+// orNone is a number, or nothing for zero.
+func orNone(v float64) string {
+	if v == 0 {
+		return ""
+	}
+	return quantity.Typed(v)
 }
 
 // questionEntries are the requirement and what is known of the reference.
@@ -432,8 +478,17 @@ func questionEntries(q *study.Question) []Entry {
 		entry("x_form.name", "the stations are compared as", q.XForm.Name, study.Entered, formOptions(true), ""),
 		entry("x_form.simulation", "stations of the simulation", q.XForm.Simulation, study.Entered, sideOptions(), ""),
 		entry("x_form.data", "stations of the data", q.XForm.Data, study.Entered, sideOptions(), ""),
+		entry("plan", "the stations are", locked(q), study.Entered, []Option{{"", "open"}, {study.Locked, "locked"}}, "locked before results are seen: none was chosen by its result"),
 		entry("downward", "drawn", map[bool]string{true: "yes", false: "no"}[q.Downward], study.Entered, []Option{{"no", "positive upward"}, {"yes", "negative upward"}}, ""),
 	}
+}
+
+// locked says whether the stations of a question are locked.
+func locked(q *study.Question) string {
+	if q.Plan == nil {
+		return ""
+	}
+	return study.Locked
 }
 
 // scoreEntries are the measures that a question asks for.
@@ -534,13 +589,25 @@ func lists(s *study.Study, q *study.Question, c *study.Cell) []EntryList {
 		regions.Items = append(regions.Items, item(k, id, i, entry(k, id, "name", "region", r.Name, []Option{}, ""), entry(k, id, "from", "from", quantity.Typed(r.From), []Option{}, ""), entry(k, id, "to", "to", quantity.Typed(r.To), []Option{}, ""),
 			entry(k, id, "sign", "where D is", r.Sign, []Option{{"", "of any sign"}, {study.SignPositive, "positive"}, {study.SignNegative, "negative"}}, "with a sign, equal bounds leave the bounds out")))
 	}
+	anchors := list(2, study.ItemAnchor, id, "Support points", "values that physics gives the simulation beyond its rows, as u = 0 at a wall")
+	for i, a := range q.Anchors {
+		k := study.ItemAnchor
+		anchors.Items = append(anchors.Items, item(k, id, i,
+			entry(k, id, "kind", "is", a.Kind, []Option{{study.AtWall, "a known value"}, {study.AtSymmetry, "a plane of symmetry"}}, ""),
+			entry(k, id, "x", "at", quantity.Typed(a.X), []Option{}, "in the unit of the stations"), entry(k, id, "value", "value", quantity.Typed(a.Value), []Option{}, "of a known value"),
+			entry(k, id, "why", "physics", a.Why, []Option{}, "e.g. no slip at the wall"), entry(k, id, "model", "model", a.Model, []Option{}, "empty: all")))
+	}
 	application := list(4, study.ItemApplication, "", "Point of application", "the conditions the result is meant for")
 	for i, c := range s.Application {
 		k := study.ItemApplication
 		application.Items = append(application.Items, item(k, "", i, entry(k, "", "name", "condition", c.Name, []Option{}, "e.g. α"), entry(k, "", "value", "value", quantity.Typed(c.Value), []Option{}, ""), entry(k, "", "unit", "unit", c.Unit, []Option{}, "")))
 	}
 	criteria := criterionEntries(q, list(3, study.ItemCriterion, id, "Criteria of the scores", "limits bound to their scope; a result beyond one is no statement on the model by itself"))
-	return []EntryList{runList(s, q, c), conditions, cardList(s, q), axesList(s, q), derivation(q), scoreEntries(q), criteria, regions, application, qualityList(s, q.Case)}
+	all := []EntryList{runList(s, q, c), conditions, cardList(s, q), axesList(s, q), derivation(q), scoreEntries(q), criteria, regions, application, qualityList(s, q.Case)}
+	if c.Scalar {
+		return all
+	}
+	return append(all, anchors)
 }
 
 // readingEntries are the answers about how a file is read: those that were

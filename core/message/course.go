@@ -19,7 +19,7 @@ func courses(c *study.Cell, figures []CellFigure, veiled bool) []Course {
 	list := []Course{
 		{Question: "Has each run settled?", Answer: settledAnswer(c), Numbers: settledNumbers(c), Tables: settledTables(c)},
 		{Question: "Is the grid fine enough for this quantity?", Answer: gridAnswer(c), Numbers: gridNumbers(c), Tables: gridTables(c)},
-		{Question: "Is it the same thing?", Answer: sameAnswer(c), Tables: sameTables(c)},
+		{Question: "Is it the same thing?", Answer: sameAnswer(c), Tables: append(sameTables(c), treatmentTables(c)...)},
 		{Question: "Do they agree?", Answer: agreeAnswer(c), Numbers: agreeNumbers(c), Tables: agreeTables(c)},
 		{Question: "What can be said?", Answer: sayAnswer(c), Numbers: sayNumbers(c), Tables: sayTables(c)},
 	}
@@ -351,6 +351,9 @@ func agreeTables(c *study.Cell) []Table {
 	if len(c.Stations) > 0 && c.Stations[0].Percent != nil {
 		t.Head = append(t.Head, "E in % of |D|")
 	}
+	if len(c.Stations) > 0 && c.Stations[0].Weight != nil {
+		t.Head = append(t.Head, "weight")
+	}
 	for i, s := range c.Stations {
 		if i == maxTableRows {
 			t.Title += ", the first " + strconv.Itoa(maxTableRows) + " (all are in the exported table)"
@@ -360,6 +363,9 @@ func agreeTables(c *study.Cell) []Table {
 		if s.Percent != nil {
 			row = append(row, quantity.Signed(float64(*s.Percent), 3))
 		}
+		if s.Weight != nil {
+			row = append(row, text(*s.Weight, 3))
+		}
 		t.Rows = append(t.Rows, row)
 	}
 	tables := []Table{t}
@@ -368,6 +374,7 @@ func agreeTables(c *study.Cell) []Table {
 	}
 	tables = append(tables, scoreTables(c)...)
 	tables = append(tables, derivedTables(c)...)
+	tables = append(tables, curveTables(c)...)
 	if x := c.Crossings; len(x.Simulation)+len(x.Reference) > 0 {
 		tables = append(tables, Table{Title: "Changes of sign", Head: []string{"side", name, "u", "direction"}, Rows: append(crossingRows("simulation", x.Simulation), crossingRows("reference", x.Reference)...)})
 	}

@@ -106,7 +106,7 @@ func readCards(name string, data []byte, f tablefile.File) []string {
 	var cards []string
 	for i, p := range n.Add(name, data, f, "") {
 		t := f.Tables[i]
-		text := readWords(t) + " It"
+		text := readWords(t, "") + " It"
 		for j, e := range slipEntries(n, p, t) {
 			if e.Value == "" && !needed(p, e.Target.Field) {
 				continue

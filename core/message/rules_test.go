@@ -19,7 +19,7 @@ func ruled(t *testing.T, caseName, quantity, model, rule string, change func(*st
 	if change != nil {
 		change(s)
 	}
-	for _, e := range choices(q) {
+	for _, e := range choices(q, true) {
 		if e.Target.Field != "choices.rule" {
 			continue
 		}

@@ -56,7 +56,7 @@ func secondColumn(s *study.Study, p *study.Slip) string {
 			return kind.Second
 		}
 	}
-	if p.Derive.Value == study.DeriveLift || p.Branch.Given() {
+	if p.Derive.Value == study.DeriveLift || p.Branch.Given() || p.Abscissa.Given() {
 		return "second coordinate"
 	}
 	return ""

@@ -111,7 +111,12 @@ func accept(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
 }
 
 func reveal(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {
-	return s.change(q, r, func(n *study.Study) error { return n.Reveal(q.target().ID, q.At) })
+	return s.change(q, r, func(n *study.Study) error {
+		if q.Value == study.Locked { // with all stations, on one keystroke
+			return n.RevealPlanned(q.target().ID, q.At)
+		}
+		return n.Reveal(q.target().ID, q.At)
+	})
 }
 
 func addSource(s *Session, q *Request, _ [][]byte, r *Reply) ([][]byte, error) {

@@ -120,7 +120,7 @@ func sourceEntries(q *study.Question, i int, s study.Source) ([]Entry, []string)
 
 // basis is what the value is a number of.
 func (l *sourceLine) basis(s study.Source) {
-	options := []Option{{study.Absolute, "in the unit of the data"}, {study.OfReading, "% of reading"}, {study.OfFullScale, "% of full scale"}, {study.OfCounts, "counts"}}
+	options := []Option{{study.Absolute, "in the unit of the data"}, {study.OfReading, "% of reading"}, {study.OfFullScale, "% of full scale"}, {study.OfCounts, "counts"}, {study.OfPosition, "of the place, times the slope of D"}}
 	if s.Input != "" {
 		options = []Option{{study.Absolute, "in the unit of the input"}, {study.OfReading, "% of its value"}}
 	}

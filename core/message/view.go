@@ -237,7 +237,7 @@ func (s *Session) view() (*View, error) {
 	}
 	v.Courses = courses(c, cellFigures(figures, c), v.Veiled)
 	v.Sources = sourceCards(q, c)
-	v.Choices, v.Question, v.Lists = choices(q), questionEntries(q), lists(s.study, q, c)
+	v.Choices, v.Question, v.Lists = choices(q, c.Scalar), questionEntries(q), lists(s.study, q, c)
 	v.Lists = append(v.Lists, familyList(q), codeList(s.study))
 	v.Courses[1].Tables = append(v.Courses[1].Tables, codeTables(&report)...)
 	for _, e := range c.Excluded {

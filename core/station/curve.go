@@ -14,6 +14,7 @@ import (
 type curve struct {
 	x, y   []float64
 	pieces []piece
+	wide   []gap
 }
 
 // piece is a run of rows that may be interpolated, from and to as in a slice
@@ -42,7 +43,7 @@ func finite(v float64) bool { return !math.IsNaN(v) && !math.IsInf(v, 0) }
 // After a stop notice the curve is empty.
 func prepare(name, xname string, x, y []float64) (curve, []notice.Notice) {
 	if plain(x, y) {
-		return curve{x, y, []piece{{to: len(x)}}}, nil
+		return curve{x: x, y: y, pieces: []piece{{to: len(x)}}}, nil
 	}
 	rows := usable(x, y)
 	var notices []notice.Notice

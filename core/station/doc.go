@@ -8,6 +8,7 @@
 // out and back is refused: it has no single value at a station. Every station
 // left out is listed with its reason.
 //
-// The package cannot tell whether two curves are in the same unit, nor a gap
-// in the physics from a wide spacing of the points.
+// The package cannot tell whether two curves are in the same unit, nor, unless
+// it is asked to part them by a number of median spacings, a gap in the
+// physics from a wide spacing of the points.
 package station

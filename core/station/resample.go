@@ -15,6 +15,15 @@ type Options struct {
 	// Show prints a place on the axis of stations in messages; nil prints up to
 	// six digits. A host that keeps values in SI prints them in their own unit.
 	Show func(x float64) string
+	// Gap is the number of median spacings above which a spacing is a gap (see
+	// partWide); 0: none is.
+	Gap float64
+	// Period of a periodic curve, in the unit of x; 0: it has none. Stations
+	// and rows a whole number of periods apart are the same place.
+	Period float64
+	// Width over which the curve is averaged at each station, in the unit of x;
+	// 0: the value at the place itself.
+	Width float64
 }
 
 func (o Options) show(x float64) string {
@@ -31,6 +40,7 @@ type Resampled struct {
 	Kept    []int
 	S       []float64 // value, parallel to Kept
 	UInterp []float64 // standard uncertainty of the interpolation, parallel to Kept
+	Part    []int     // number of the unbroken part of the curve that answered, parallel to Kept
 	Outside []int     // beyond the ends of the curve
 	Gap     []int     // between rows that a row without a number parts
 	Jump    []int     // where the curve has two values
@@ -46,6 +56,18 @@ const (
 	isGap
 	isJump
 )
+
+// answers are what a curve says at ascending stations, all parallel to them.
+type answers struct {
+	s, u    []float64
+	states  []uint8
+	parts   []int
+	clipped int // stations without room for the width they are averaged over
+}
+
+func newAnswers(n int) answers {
+	return answers{s: make([]float64, n), u: make([]float64, n), states: make([]uint8, n), parts: make([]int, n)}
+}
 
 // Resample returns the curve (x, y) at the stations of at, and the standard
 // uncertainty of the interpolation (see uncertainties). name and xname are
@@ -78,13 +100,29 @@ func Resample(name, xname string, x, y, at []float64, opt Options) Resampled {
 		return r
 	}
 
-	sorted, order := ascending(at)
+	if opt.Gap > 0 {
+		c.partWide(opt.Gap)
+	}
+	places := at
+	if opt.Period > 0 {
+		if span := c.x[len(c.x)-1] - c.x[0]; span > opt.Period*(1+seam) {
+			r.refuse(notice.New("curve-period", name, opt.show(c.x[0]), opt.show(c.x[len(c.x)-1]), quantity.Plain(opt.Period, 6)))
+			return r
+		}
+		places = within(at, c.x[0], opt.Period)
+		c = c.repeated(opt.Period)
+	}
+
+	sorted, order := ascending(places)
 	if len(sorted) == 0 {
 		return r
 	}
-	s, u, states := c.answer(sorted, opt.Method)
-	r.collect(s, u, states, order)
-	r.tell(name, c, sorted, opt)
+	a := c.answer(sorted, opt.Method)
+	if opt.Width > 0 {
+		c.average(&a, sorted, opt)
+	}
+	r.collect(a, order)
+	r.tell(name, c, sorted, a.clipped, opt)
 	return r
 }
 
@@ -129,10 +167,14 @@ func ascending(at []float64) (sorted []float64, order []int) {
 
 // answer returns value, interpolation uncertainty and state of every station
 // of the ascending list.
-func (c curve) answer(at []float64, m interpolate.Method) (s, u []float64, states []uint8) {
-	s, u, states = make([]float64, len(at)), make([]float64, len(at)), make([]uint8, len(at))
-	next := 0
+func (c curve) answer(at []float64, m interpolate.Method) answers {
+	a := newAnswers(len(at))
+	s, u, states := a.s, a.u, a.states
+	next, part := 0, 0
 	for k, p := range c.pieces {
+		if !p.jumpBefore {
+			part++
+		}
 		x, y := c.x[p.from:p.to], c.y[p.from:p.to]
 		first, _ := slices.BinarySearch(at[next:], x[0])
 		first += next
@@ -159,11 +201,12 @@ func (c curve) answer(at []float64, m interpolate.Method) (s, u []float64, state
 				panic(err) // the stations were cut to the piece and the method is known
 			}
 			uncertainties(u[next:to], s[next:to], x, y, at[next:to], m)
+			fill(a.parts[next:to], part)
 		}
 		next = beyond
 	}
 	fill(states[next:], isOutside)
-	return s, u, states
+	return a
 }
 
 // passEqual marks the stations from next on that equal x as lying on a jump,
@@ -185,22 +228,22 @@ func upTo(at []float64, x float64) int {
 	return i
 }
 
-func fill(states []uint8, state uint8) {
-	for i := range states {
-		states[i] = state
+func fill[T any](values []T, v T) {
+	for i := range values {
+		values[i] = v
 	}
 }
 
 // collect sorts the answers into r, in the order the stations were given in.
-func (r *Resampled) collect(s, u []float64, states []uint8, order []int) {
+func (r *Resampled) collect(a answers, order []int) {
 	if order != nil {
-		n := slices.Max(order) + 1
-		givenS, givenU, given := make([]float64, n), make([]float64, n), make([]uint8, n)
+		given := newAnswers(slices.Max(order) + 1)
 		for i, k := range order {
-			givenS[k], givenU[k], given[k] = s[i], u[i], states[i]
+			given.s[k], given.u[k], given.states[k], given.parts[k] = a.s[i], a.u[i], a.states[i], a.parts[i]
 		}
-		s, u, states = givenS, givenU, given
+		a = given
 	}
+	s, u, states := a.s, a.u, a.states
 	kept := 0
 	for _, state := range states {
 		if state == isKept {
@@ -211,7 +254,7 @@ func (r *Resampled) collect(s, u []float64, states []uint8, order []int) {
 	for i, state := range states {
 		switch state {
 		case isKept:
-			s[len(r.Kept)], u[len(r.Kept)] = s[i], u[i]
+			s[len(r.Kept)], u[len(r.Kept)], a.parts[len(r.Kept)] = s[i], u[i], a.parts[i]
 			r.Kept = append(r.Kept, i)
 		case isOutside:
 			r.Outside = append(r.Outside, i)
@@ -221,11 +264,11 @@ func (r *Resampled) collect(s, u []float64, states []uint8, order []int) {
 			r.Jump = append(r.Jump, i)
 		}
 	}
-	r.S, r.UInterp = s[:kept], u[:kept]
+	r.S, r.UInterp, r.Part = s[:kept], u[:kept], a.parts[:kept]
 }
 
 // tell adds what the reader must know of the stations left out.
-func (r *Resampled) tell(name string, c curve, at []float64, opt Options) {
+func (r *Resampled) tell(name string, c curve, at []float64, clipped int, opt Options) {
 	lo, hi := opt.show(c.x[0]), opt.show(c.x[len(c.x)-1])
 	switch {
 	case len(c.x) == 1 && len(r.Kept) == 0 && len(r.Jump) == 0:
@@ -236,6 +279,14 @@ func (r *Resampled) tell(name string, c curve, at []float64, opt Options) {
 		return
 	case len(r.Outside) > 0:
 		r.Notices = append(r.Notices, notice.New("station-outside", len(r.Outside), len(at), lo, hi))
+	}
+	if clipped > 0 {
+		r.Notices = append(r.Notices, notice.New("station-width", clipped, quantity.Plain(opt.Width, 6)))
+	}
+	for _, g := range c.wide {
+		if first, _ := slices.BinarySearch(at, math.Nextafter(g.from, g.to)); first < len(at) && at[first] < g.to {
+			r.Notices = append(r.Notices, notice.New("curve-gap", name, opt.show(g.from), opt.show(g.to), quantity.Text(g.ratio, 2), quantity.Plain(opt.Gap, 3)))
+		}
 	}
 	if len(r.Gap) > 0 {
 		r.Notices = append(r.Notices, notice.New("station-gap", len(r.Gap)))

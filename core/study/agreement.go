@@ -26,7 +26,12 @@ func (w *work) agree() {
 	if w.uVal != nil {
 		ratio = comparison.Ratio(e, w.uVal)
 	}
+	weights := w.stationWeights()
 	w.stationLines(e, ratio)
+	for i, v := range weights {
+		weight := Number(v)
+		w.cell.Stations[i].Weight = &weight
+	}
 	w.summarise(e, ratio)
 	w.shares()
 	w.joint(e)
@@ -73,10 +78,10 @@ func (w *work) stationLines(e, ratio []float64) {
 // where the cell is in the units of the file.
 func (w *work) written(row int, x, d Written) (Written, Written) {
 	p := w.reference.slip
-	if column, err := w.reference.table.Column(p.X.Column.Value); err == nil && !w.reference.xTurned && p.X.Unit.Value == w.xUnit.symbol {
+	if column, err := w.reference.table.Column(p.X.Column.Value); err == nil && w.reference.along == "" && !w.reference.xTurned && p.X.Unit.Value == w.xUnit.symbol {
 		x = Written(column.Values[row])
 	}
-	if column, err := w.reference.table.Column(p.Y.Column.Value); err == nil && !w.reference.yTurned && p.Y.Unit.Value == w.yUnit.symbol {
+	if column, err := w.reference.table.Column(p.Y.Column.Value); err == nil && p.Repeats.Value != Averaged && !w.reference.yTurned && p.Y.Unit.Value == w.yUnit.symbol {
 		d = Written(column.Values[row])
 	}
 	return x, d
@@ -349,6 +354,9 @@ func (w *work) crossings() {
 		x, y := inUnit(c.x, c.xUnit, w.xUnit), inUnit(c.y, c.yUnit, w.yUnit)
 		if c == w.reference {
 			y = w.withoutExcluded(c, y)
+		}
+		if n := w.choices.Smooth; n > 0 {
+			y = derived.Smooth(x, y, n)
 		}
 		for _, at := range derived.Crossings(x, y) {
 			place := Crossing{X: Number(w.xUnit.FromSI(at.X)), U: None, Rising: at.Rising}

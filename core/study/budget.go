@@ -6,6 +6,7 @@ import (
 	"slices"
 	"strconv"
 
+	"weirmark/core/derived"
 	"weirmark/core/notice"
 	"weirmark/core/quantity"
 	"weirmark/core/station"
@@ -231,8 +232,11 @@ func (w *work) entered(s *Source, k float64, target Target) (uncertainty.Source,
 func (w *work) patterned(s *Source, u []float64, target Target) (uncertainty.Source, bool) {
 	switch s.Pattern {
 	case Common:
-		if s.Basis == OfReading { // one unknown factor acts on all readings, with their signs
+		switch s.Basis {
+		case OfReading: // one unknown factor acts on all readings, with their signs
 			u = signedLike(u, w.d)
+		case OfPosition: // one unknown shift acts by the slope, with its sign
+			u = signedLike(u, w.slopes())
 		}
 		return uncertainty.Source{U: u, Common: true}, true
 	case Grouped:
@@ -270,6 +274,34 @@ func signedLike(u, values []float64) []float64 {
 	return signed
 }
 
+// slopes returns the slope of the data at the stations, by the rows of the
+// reference that are not excluded; NaN where there are too few.
+func (w *work) slopes() []float64 {
+	out := uncertainty.Constant(len(w.x), math.NaN())
+	if w.cell.Scalar {
+		return out
+	}
+	c := w.reference
+	x, y := ascending(bothKnown(inUnit(c.x, c.xUnit, w.xUnit), w.withoutExcluded(c, inUnit(c.y, c.yUnit, w.yUnit))))
+	all := derived.Slopes(x, y)
+	for i, at := range w.x {
+		if k, found := slices.BinarySearch(x, at); found && all != nil {
+			out[i] = all[k]
+		}
+	}
+	return out
+}
+
+// bothKnown returns the pairs whose numbers are both there.
+func bothKnown(x, y []float64) (px, py []float64) {
+	for i := range x {
+		if !math.IsNaN(x[i]) && !math.IsNaN(y[i]) {
+			px, py = append(px, x[i]), append(py, y[i])
+		}
+	}
+	return px, py
+}
+
 // zeros asks about uncertainties of exactly zero.
 func (w *work) zeros(u []float64, name string, target Target) {
 	n := 0
@@ -305,6 +337,12 @@ func (w *work) sourceValues(s *Source, k float64, target Target) ([]float64, boo
 		return uncertainty.Scaled(u, k), true
 	case s.Basis == OfReading:
 		return uncertainty.Scaled(uncertainty.OfReading(w.d, s.Value/100), k), true
+	case s.Basis == OfPosition:
+		slopes := w.slopes()
+		for i, v := range slopes {
+			slopes[i] = math.Abs(v) * w.xUnit.StepToSI(s.Value)
+		}
+		return uncertainty.Scaled(slopes, k), true
 	case s.Basis == OfFullScale:
 		if !(s.FullScale > 0) {
 			w.need(2, true, "the full scale of "+s.Name, target, "field-missing", "The full scale", s.Name)
@@ -332,7 +370,7 @@ func (w *work) sourceColumn(s *Source) ([]float64, error) {
 				return steps(column.Values, w.yUnit, []int{0}), nil
 			}
 			x := inUnit(run.x, run.xUnit, w.xUnit)
-			got := station.Resample(w.e.study.fileName(run.slip), run.xUnit.name, x, column.Values, w.x, station.Options{Method: w.choices.Interpolation, Show: w.place})
+			got := station.Resample(w.e.study.fileName(run.slip), run.xUnit.name, x, column.Values, w.x, w.policy())
 			u := uncertainty.Constant(len(w.x), math.NaN())
 			for j, i := range got.Kept {
 				u[i] = w.yUnit.StepToSI(got.S[j])
@@ -393,6 +431,8 @@ func (w *work) sourceText(s *Source) string {
 		value += " % of reading"
 	case s.Basis == OfFullScale:
 		value += " % of the full scale " + quantity.Typed(s.FullScale) + w.cell.UnitSuffix()
+	case s.Basis == OfPosition:
+		value += unitAfter(w.cell.XUnit) + " of the place, times the slope |dD/dx|"
 	case w.cell.Unit != "" && w.cell.Unit != "1":
 		value += " " + w.cell.Unit
 	}

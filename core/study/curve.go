@@ -22,6 +22,8 @@ type curve struct {
 	u     []float64 // standard, independent between stations; nil when there is no column
 	uPlus []float64 // of the upper side where the bars are two columns; u is then the lower
 	uOpen bool      // u is there but its coverage is not known
+	along string    // AlongArc or AlongArcPart where x is a length, else empty
+	left  int       // rows left out as repeats of a station
 	xUnit axis
 	yUnit axis
 
@@ -87,6 +89,12 @@ func (e *evaluation) load(slip *Slip) (*curve, []notice.Notice) {
 	}
 	if slip.Branch.Given() && c.x != nil {
 		l.takeBranch(c)
+	}
+	if slip.Abscissa.Given() && c.x != nil && slip.Derive.Value == "" {
+		l.takeLength(c)
+	}
+	if slip.Repeats.Given() && c.x != nil {
+		l.mergeRepeats(c)
 	}
 	if notice.Any(l.notices, notice.Stop) {
 		return nil, l.notices

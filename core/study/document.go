@@ -91,6 +91,9 @@ func (s *Study) fillGaps() {
 		if c.Interpolation == "" {
 			c.Interpolation = d.Interpolation
 		}
+		if c.Gap == 0 {
+			c.Gap = d.Gap
+		}
 	}
 }
 
@@ -185,6 +188,7 @@ func (s *Study) Clone() *Study {
 			other := *q.StandIn
 			q.StandIn = &other
 		}
+		q.Anchors = append([]Anchor{}, q.Anchors...)
 		if q.Scores != nil {
 			scores := *q.Scores
 			scores.Criteria = slices.Clone(scores.Criteria)

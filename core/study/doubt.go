@@ -29,7 +29,10 @@ func (w *work) doubtCurves() {
 	w.doubtFriction()
 	w.doubtSwapped()
 	w.doubtWallTreatment()
-	w.doubtRepeated()
+	w.doubtRepeated(w.reference)
+	if s := w.finest(); s != w.grids {
+		w.doubtRepeated(s)
+	}
 	w.doubtReadings()
 	w.doubtOutliers()
 	w.doubtRanges()
@@ -79,10 +82,11 @@ func rowOf(y []float64, n int) int {
 // doubtOutliers flags single rows of the reference that lie far off.
 func (w *work) doubtOutliers() {
 	c := w.reference
-	if c == nil || c.scalar() || len(known(c.y)) != len(c.y) {
+	if c == nil || c.scalar() {
 		return
 	}
-	for _, o := range plausibility.Outliers(c.y) {
+	for _, o := range plausibility.Outliers(known(c.y)) {
+		o.Row = rowOf(c.y, o.Row)
 		line := c.table.RowLine(o.Row)
 		if w.isExcluded(line) {
 			continue

@@ -9,7 +9,6 @@ import (
 	"weirmark/core/notice"
 	"weirmark/core/plausibility"
 	"weirmark/core/quantity"
-	"weirmark/core/tablefile"
 )
 
 // wallUnits reports whether a column is a wall distance in wall units by its
@@ -157,40 +156,4 @@ func medianOf(values []float64) float64 {
 		return math.NaN()
 	}
 	return sorted[len(sorted)/2]
-}
-
-// doubtRepeated asks about rows of the reference with one place and different
-// values, wherever they stand: repeat readings, a jump, or a mistake.
-func (w *work) doubtRepeated() {
-	r := w.reference
-	if r == nil || r.scalar() {
-		return
-	}
-	for i := 1; i < len(r.x); i++ {
-		if r.x[i] != r.x[i-1] || r.y[i] == r.y[i-1] || math.IsNaN(r.y[i]) || math.IsNaN(r.y[i-1]) {
-			continue
-		}
-		line := r.table.RowLine(i)
-		if w.isExcluded(line) || w.isExcluded(r.table.RowLine(i-1)) || !samePlace(r.table, i) {
-			continue
-		}
-		w.ask(2, "the two values at line "+strconv.Itoa(line), "rows-repeated", place(r, i), quantity.Text(w.yUnit.FromSI(r.y[i-1]), 4), quantity.Text(w.yUnit.FromSI(r.y[i]), 4), r.table.RowLine(i-1), line)
-		return
-	}
-}
-
-// samePlace reports whether a row repeats another column of the row before
-// beside the stations, such as a tap number or a second coordinate; a table of
-// two columns has none and counts.
-func samePlace(t tablefile.Table, row int) bool {
-	if len(t.Columns) <= 2 {
-		return true
-	}
-	same := 0
-	for _, c := range t.Columns {
-		if c.Values[row] == c.Values[row-1] {
-			same++
-		}
-	}
-	return same >= 2
 }

@@ -245,6 +245,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		w.scores()
 		w.judge()
 		w.draw()
+		w.treat()
 	}
 	w.application()
 	w.quality()
@@ -292,6 +293,9 @@ type work struct {
 	rows []int // of the reference, one a station
 	x, s, d,
 	uInterp []float64
+	linePart []int     // number of the unbroken part of the simulation that answered each station
+	skipped  []float64 // stations that are not compared, in SI
+	anchors  []AnchorLine
 	refined  refinement.Result
 	gridU    []float64 // standard uncertainty from the grid study; nil where there is none
 	blocked  bool      // the grid study says that there is none
@@ -569,6 +573,15 @@ func (p *Slip) fields() []slipField {
 	}
 	if p.Derive.Given() {
 		all = append(all, slipField{path: "derive", name: "derivation", field: p.Derive, course: 2})
+	}
+	for _, f := range []slipField{
+		{path: "abscissa", name: "abscissa", field: p.Abscissa, course: 2},
+		{path: "repeats", name: "treatment of repeated stations", field: p.Repeats, course: 2},
+		{path: "sampling", name: "place of the values", field: p.Sampling, course: 2},
+	} {
+		if f.field.Given() {
+			all = append(all, f)
+		}
 	}
 	if p.Branch.Given() {
 		all = append(all, slipField{path: "branch", name: "branch", field: p.Branch, course: 2})

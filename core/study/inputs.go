@@ -181,7 +181,7 @@ func (w *work) atStations(c *curve) []float64 {
 	if c.scalar() {
 		return out
 	}
-	got := w.resample(c, w.x, w.choices.Interpolation)
+	got := w.resample(c, w.x)
 	for j, i := range got.Kept {
 		out[i] = got.S[j]
 	}

@@ -12,6 +12,7 @@ const (
 	ItemCondition   = "condition"   // of a question
 	ItemRegion      = "region"      // of a question
 	ItemCriterion   = "criterion"   // of the scores of a question
+	ItemAnchor      = "anchor"      // of a question
 	ItemApplication = "application" // of the study
 	ItemRun         = "run"         // of a question; there is one for each of its runs, named by field, model and grid
 	ItemDerived     = "derived"     // a further question: a scalar of the same curves
@@ -28,6 +29,8 @@ func (s *Study) AddItem(t Target, at string) error {
 	case t.Kind == ItemCriterion && q != nil:
 		list := q.criteria()
 		*list = append(*list, metric.Criterion{Name: "criterion " + strconv.Itoa(len(*list)+1), Score: "FB"})
+	case t.Kind == ItemAnchor && q != nil:
+		q.Anchors = append(q.Anchors, Anchor{Kind: AtWall})
 	case t.Kind == ItemApplication:
 		s.Application = append(s.Application, Condition{})
 	case t.Kind == ItemDerived && q != nil:
@@ -60,6 +63,8 @@ func (s *Study) RemoveItem(t Target, at, why string) error {
 	case t.Kind == ItemCriterion && q != nil && i < len(CriteriaOf(q)):
 		list := q.criteria()
 		*list = append((*list)[:i:i], (*list)[i+1:]...)
+	case t.Kind == ItemAnchor && q != nil && i < len(q.Anchors):
+		q.Anchors = append(q.Anchors[:i:i], q.Anchors[i+1:]...)
 	case t.Kind == ItemApplication && i < len(s.Application):
 		s.Application = append(s.Application[:i:i], s.Application[i+1:]...)
 	case t.Kind == ItemReference && i < len(s.Card(t.ID).References):
@@ -107,6 +112,8 @@ func (s *Study) enterItem(t Target, value string) (string, error) {
 		}
 	case t.Kind == ItemCriterion && q != nil && i < len(CriteriaOf(q)):
 		return enterCriterion(&(*q.criteria())[i], field, value)
+	case t.Kind == ItemAnchor && q != nil && i < len(q.Anchors):
+		return q.Anchors[i].enter(field, value)
 	case t.Kind == ItemApplication && i < len(s.Application):
 		c := &s.Application[i]
 		switch field {

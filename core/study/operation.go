@@ -16,6 +16,9 @@ func refuse(what, value string) error { return notice.New("operation-refused", w
 // Set enters a value at a target and logs it. The empty value takes the entry
 // back.
 func (s *Study) Set(t Target, value, at, why string) error {
+	if t.Kind == "question" && t.Field == "plan" {
+		return s.setPlan(t.ID, value, at, why)
+	}
 	before, err := s.enter(t, value)
 	if err != nil {
 		return err
@@ -190,7 +193,7 @@ func (s *Study) Name(t Target) string {
 	case ItemReference, ItemAxes:
 		_, field, _ := sourceField(t.Field)
 		return field + " of " + s.itemName(t) + " of case " + t.ID
-	case ItemCondition, ItemRegion, ItemCriterion:
+	case ItemCondition, ItemRegion, ItemCriterion, ItemAnchor:
 		if q := s.questionOf(t.ID); q != nil {
 			_, field, _ := sourceField(t.Field)
 			return field + " of a " + t.Kind + ", " + q.label()
@@ -242,6 +245,8 @@ var fieldNames = map[string]string{
 	"y.formula": "formula of values", "x.formula": "formula of stations", "datum": "datum of the pressure",
 	"form.name": "form of the values", "form.simulation": "form of the simulation", "form.data": "form of the data", "x_form.name": "form of the stations", "x_form.simulation": "stations of the simulation", "x_form.data": "stations of the data",
 	"corrected.state": "corrections of the data", "corrected.how": "how the data were corrected",
+	"choices.gap": "spacing that is a gap", "choices.period": "period of the stations", "choices.probe": "width of the probe", "choices.smooth": "smoothing before changes of sign",
+	"abscissa": "abscissa", "repeats": "different values at one station", "sampling": "place of the values", "plan": "stations",
 	"reference_id": "name of the reference", "prepared.name": "prepared by", "prepared.date": "prepared on", "checked.name": "checked by", "checked.date": "checked on",
 	"approved.name": "approved by", "approved.date": "approved on",
 }
@@ -299,6 +304,7 @@ func (p *Slip) entry(path string) *Field {
 		"digitised": &p.Digitised.Is, "digitised.x_scale": &p.Digitised.XScale, "digitised.x_zero": &p.Digitised.XZero, "digitised.y_scale": &p.Digitised.YScale,
 		"digitised.y_zero": &p.Digitised.YZero, "digitised.line": &p.Digitised.Line, "digitised.pixel": &p.Digitised.Pixel,
 		"balance_of": &p.BalanceOf, "scale": &p.Scale, "scale_name": &p.ScaleName,
+		"abscissa": &p.Abscissa, "repeats": &p.Repeats, "sampling": &p.Sampling,
 	}[path]
 }
 
@@ -335,7 +341,7 @@ func (s *Study) enter(t Target, value string) (string, error) {
 		}
 	case "quality":
 		return s.enterQuality(t.ID, t.Field, value)
-	case ItemCondition, ItemRegion, ItemCriterion, ItemApplication, ItemReference, ItemAxes:
+	case ItemCondition, ItemRegion, ItemCriterion, ItemAnchor, ItemApplication, ItemReference, ItemAxes:
 		return s.enterItem(t, value)
 	case ItemRun:
 		if q := s.questionOf(t.ID); q != nil {
@@ -462,6 +468,14 @@ func (q *Question) enter(path, value string) (string, error) {
 		return before, err
 	case "choices.rule":
 		return c.enterRule(value)
+	case "choices.gap":
+		return number(&c.Gap, value, 2, 1e9)
+	case "choices.period":
+		return orNone(&c.Period, value)
+	case "choices.probe":
+		return orNone(&c.Probe, value)
+	case "choices.smooth":
+		return c.enterSmooth(value)
 	case "choices.bounded":
 		return yesNo(&c.Bounded, value)
 	case "choices.k_student":
@@ -533,6 +547,29 @@ func number(into *float64, value string, lo, hi float64) (string, error) {
 		return before, refuse("a number from "+quantity.Typed(lo)+" to "+quantity.Typed(hi), value)
 	}
 	*into = v
+	return before, nil
+}
+
+// orNone reads a positive number, or nothing as zero.
+func orNone(into *float64, value string) (string, error) {
+	if strings.TrimSpace(value) == "" {
+		value = "0"
+	}
+	return number(into, value, 0, 1e30)
+}
+
+// enterSmooth reads an odd number of rows, or nothing as none.
+func (c *Choices) enterSmooth(value string) (string, error) {
+	rows := float64(c.Smooth)
+	before, err := orNone(&rows, value)
+	if err != nil {
+		return before, err
+	}
+	n := int(rows)
+	if float64(n) != rows || n > 999 || n != 0 && (n < 3 || n%2 == 0) {
+		return before, refuse("a window of 3, 5, 7 or more rows", value)
+	}
+	c.Smooth = n
 	return before, nil
 }
 

@@ -149,7 +149,8 @@ type Cell struct {
 	Corrected  Correction      `json:"corrected,omitzero"`
 	Reduction  *Reduction      `json:"reduction,omitempty"`
 
-	Curve     Curve           `json:"curve"` // the simulation as read, for the figure
+	Treatment *Treatment      `json:"treatment,omitempty"` // what was done with the curves; null for one value
+	Curve     Curve           `json:"curve"`               // the simulation as read, for the figure
 	Notices   []notice.Notice `json:"notices"`
 	FilesUsed []string        `json:"files_used"` // IDs
 }
@@ -197,7 +198,8 @@ type Station struct {
 	Ratio   Number           `json:"ratio"`
 	Lo      Number           `json:"lo"`
 	Hi      Number           `json:"hi"`
-	Line    int              `json:"line"` // line of the reference file
+	Line    int              `json:"line"`             // line of the reference file
+	Weight  *Number          `json:"weight,omitempty"` // of all stations the sum is one; null where they are equal
 	Reading string           `json:"reading"`
 	// Whitened is what E is worth once its covariance is taken out, in standard
 	// uncertainties; the squares sum to the joint statistic. Null at a station

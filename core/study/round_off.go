@@ -74,7 +74,7 @@ func (w *work) bothRuns(c *curve) (a, b []float64) {
 	if c.scalar() || len(w.x) == 0 {
 		return nil, nil
 	}
-	one, two := w.resample(w.finest(), w.x, w.choices.Interpolation), w.resample(c, w.x, w.choices.Interpolation)
+	one, two := w.resample(w.finest(), w.x), w.resample(c, w.x)
 	at := map[int]float64{}
 	for j, i := range two.Kept {
 		at[i] = two.S[j]

@@ -4,7 +4,6 @@ import (
 	"cmp"
 	"errors"
 	"math"
-	"sort"
 	"strconv"
 
 	"weirmark/core/metric"
@@ -151,15 +150,10 @@ func (w *work) weighted(ask *Scoring, e []float64) {
 	if ask.Weights == "" {
 		return
 	}
-	weights, words := w.spacing(), "each station by the length it stands for"
-	if ask.Weights != WeightSpacing {
-		words = "weights in column " + ask.Weights
-		column, err := w.reference.table.Column(ask.Weights)
-		if err != nil {
-			w.tell(asNotice(err))
-			return
-		}
-		weights = pick(column.Values, w.rows)
+	weights, words, err := w.weights(ask)
+	if err != nil {
+		w.tell(asNotice(err))
+		return
 	}
 	bias, mae, rmse, ok := metric.Weighted(e, weights)
 	if !ok {
@@ -169,20 +163,6 @@ func (w *work) weighted(ask *Scoring, e []float64) {
 	w.score(ScoreLine{Name: "weighted mean E", Value: w.step(w.sign() * bias), Scale: words})
 	w.score(ScoreLine{Name: "weighted mean |E|", Value: w.step(mae), Scale: words})
 	w.score(ScoreLine{Name: "weighted RMSE", Value: w.step(rmse), Scale: words})
-}
-
-// spacing returns half the distance between the neighbours of each station,
-// at the ends half of that to the one neighbour.
-func (w *work) spacing() []float64 {
-	order := all(len(w.x))
-	sort.SliceStable(order, func(i, j int) bool { return w.x[order[i]] < w.x[order[j]] })
-	weights := make([]float64, len(w.x))
-	for k := 1; k < len(order); k++ {
-		half := (w.x[order[k]] - w.x[order[k-1]]) / 2
-		weights[order[k]] += half
-		weights[order[k-1]] += half
-	}
-	return weights
 }
 
 // correlation gives R and R², which are blind to bias and scale, beside the

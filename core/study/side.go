@@ -154,7 +154,7 @@ func (w *work) runAtStations(t *taking, c *curve, reference derived.Curve) (deri
 		v, _ := derived.Onto(inUnit(c.x, c.xUnit, w.xUnit), second, inUnit(c.y, c.yUnit, w.yUnit), reference.X, reference.Second)
 		return derived.Curve{X: reference.X, Y: v, Second: reference.Second}, len(v) == len(reference.X)
 	}
-	y := w.resample(c, reference.X, w.choices.Interpolation)
+	y := w.resample(c, reference.X)
 	at := derived.Curve{X: reference.X, Y: y.S}
 	if len(y.Kept) != len(reference.X) {
 		return at, false
@@ -162,7 +162,7 @@ func (w *work) runAtStations(t *taking, c *curve, reference derived.Curve) (deri
 	if second != nil {
 		other := *c
 		other.y = second
-		at.Second = w.resample(&other, reference.X, w.choices.Interpolation).S
+		at.Second = w.resample(&other, reference.X).S
 		ok = len(at.Second) == len(at.X)
 	}
 	return at, ok

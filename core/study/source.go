@@ -28,7 +28,7 @@ func (q *Question) enterSource(path, value string) (string, error) {
 	case "per_count":
 		return number(&s.PerCount, value, 0, 1e30)
 	case "basis":
-		return oneOf(&s.Basis, value, Absolute, OfReading, OfFullScale, OfCounts)
+		return oneOf(&s.Basis, value, Absolute, OfReading, OfFullScale, OfCounts, OfPosition)
 	case "form":
 		return oneOf(&s.Form, value, "", string(uncertainty.Normal), string(uncertainty.Rectangular), string(uncertainty.Triangular), string(uncertainty.ArcSine), string(uncertainty.Student), Interval)
 	case "type":

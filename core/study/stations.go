@@ -3,7 +3,6 @@ package study
 import (
 	"math"
 
-	"weirmark/core/interpolate"
 	"weirmark/core/notice"
 	"weirmark/core/quantity"
 	"weirmark/core/station"
@@ -42,6 +41,9 @@ func (w *work) settleUnits() bool {
 	w.yUnit, w.xUnit = axisUnit(lead.yUnit), axisUnit(lead.xUnit)
 	w.cell.Unit, w.cell.XUnit = w.yUnit.symbol, w.xUnit.symbol
 	w.cell.XName, w.cell.Scalar = lead.xUnit.name, lead.scalar()
+	if w.cell.Scalar {
+		w.cell.Choices.Gap = 0 // no choice of one value
+	}
 	if s == nil || d == nil {
 		return s != nil // a grid study can be shown without data
 	}
@@ -51,7 +53,7 @@ func (w *work) settleUnits() bool {
 		w.stop(2, "a common form of both sides", slipTarget(s.slip, "x.column"), n)
 		return false
 	}
-	if w.doubtWallUnits(s, d) {
+	if w.doubtWallUnits(s, d) || w.mixedAbscissae(s, d) {
 		return false
 	}
 	w.byDensity(s, d)
@@ -119,17 +121,23 @@ func (w *work) commonStations() {
 		switch {
 		case math.IsNaN(x) || math.IsNaN(ry[i]):
 			missing++
+			if !math.IsNaN(x) {
+				w.skipped = append(w.skipped, x)
+			}
 		case w.without != nil && w.holds(*w.without, x, ry[i]):
 		case !w.excluded(i, x, ry[i]):
 			at, rows = append(at, x), append(rows, i)
+		default:
+			w.skipped = append(w.skipped, x)
 		}
 	}
+	missing -= r.left
 	if missing > 0 {
 		w.tell(notice.New("station-missing", missing))
 	}
 	w.cell.StationsAll = len(at) + len(w.cell.Excluded)
 	w.tellExcluded()
-	got := w.resample(w.finest(), at, w.choices.Interpolation)
+	got := w.resampleFinest(at)
 	for _, n := range got.Notices {
 		w.tell(n)
 	}
@@ -141,7 +149,12 @@ func (w *work) commonStations() {
 	for j, i := range got.Kept {
 		w.rows[j], w.x[j], w.d[j] = rows[i], at[i], ry[rows[i]]
 	}
-	w.s, w.uInterp = got.S, got.UInterp
+	w.s, w.uInterp, w.linePart = got.S, got.UInterp, got.Part
+	for _, list := range [][]int{got.Outside, got.Gap, got.Jump} {
+		for _, i := range list {
+			w.skipped = append(w.skipped, at[i])
+		}
+	}
 	if n == 0 {
 		w.need(2, true, "a common station", slipTarget(w.finest().slip, "x.unit"), "station-common", w.q.label())
 	}
@@ -180,10 +193,24 @@ func (w *work) tellExcluded() {
 	}
 }
 
-// resample answers stations, in SI, from one simulation.
-func (w *work) resample(c *curve, at []float64, method interpolate.Method) station.Resampled {
+// resampleFinest answers stations, in SI, from the simulation that is
+// compared, with its declared support points.
+func (w *work) resampleFinest(at []float64) station.Resampled {
+	c := w.finest()
+	x, y := w.anchored(inUnit(c.x, c.xUnit, w.xUnit), inUnit(c.y, c.yUnit, w.yUnit))
+	return station.Resample(w.e.study.fileName(c.slip), c.xUnit.name, x, y, at, w.policy())
+}
+
+// resample answers stations, in SI, from any simulation, as it stands.
+func (w *work) resample(c *curve, at []float64) station.Resampled {
 	x, y := inUnit(c.x, c.xUnit, w.xUnit), inUnit(c.y, c.yUnit, w.yUnit)
-	return station.Resample(w.e.study.fileName(c.slip), c.xUnit.name, x, y, at, station.Options{Method: method, Show: w.place})
+	return station.Resample(w.e.study.fileName(c.slip), c.xUnit.name, x, y, at, w.policy())
+}
+
+// policy is how simulations are brought to the stations, in SI.
+func (w *work) policy() station.Options {
+	h := w.choices
+	return station.Options{Method: h.Interpolation, Show: w.place, Gap: h.Gap, Period: w.xUnit.StepToSI(h.Period), Width: w.xUnit.StepToSI(h.Probe)}
 }
 
 // place prints a place on the axis of stations, in the unit of the cell.

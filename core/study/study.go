@@ -149,6 +149,9 @@ type Slip struct {
 	Size       ColumnUse `json:"size"`                // cell counts, for grid values
 	Axis       Field     `json:"axis"`                // of a monitor: iterations or samples in time
 
+	Abscissa  Field      `json:"abscissa,omitzero"`    // AlongArc, AlongArcPart, or empty: the column of stations
+	Repeats   Field      `json:"repeats,omitzero"`     // what is done with different values at one station: Averaged, KeptBoth, FirstKept, or empty
+	Sampling  Field      `json:"sampling,omitzero"`    // of a simulation: AtNodes, AtCellCentres, AtFaces, or empty
 	BalanceOf Field      `json:"balance_of,omitzero"`  // kind of a balance, of package settling; mass where it is not given
 	Scale     Field      `json:"scale,omitzero"`       // of a balance: the flux that matters, in the unit of the file; what enters where it is not given
 	ScaleName Field      `json:"scale_name,omitzero"`  // what Scale is
@@ -190,6 +193,28 @@ type Digitising struct {
 	Line   Field `json:"line,omitzero"`
 	Pixel  Field `json:"pixel,omitzero"`
 }
+
+// Abscissae of a curve beside its column of stations. Both need the second
+// coordinate; the length begins at the first row, or at the least station of a
+// branch.
+const (
+	AlongArc     = "arc length"
+	AlongArcPart = "arc length over the whole"
+)
+
+// What is done with different values at one station.
+const (
+	Averaged  = "averaged"
+	KeptBoth  = "kept as a jump"
+	FirstKept = "first kept"
+)
+
+// Where a simulation holds its values.
+const (
+	AtNodes       = "nodes"
+	AtCellCentres = "cell centres"
+	AtFaces       = "faces"
+)
 
 // ColumnUse is a column and the unit its numbers are in.
 type ColumnUse struct {
@@ -256,7 +281,9 @@ type Question struct {
 	StandIn     *StandIn     `json:"stand_in,omitempty"`
 	// Derive asks for a scalar taken from the curves of the slips; nil compares
 	// the values as they are.
-	Derive *Derivation `json:"derive,omitempty"`
+	Derive  *Derivation  `json:"derive,omitempty"`
+	Anchors []Anchor     `json:"anchors,omitempty"`
+	Plan    *StationPlan `json:"plan,omitempty"` // null while the stations are not locked
 	// Answers holds, by the code of a finding, what a person answered to it.
 	// An answered finding is no open point any more; the memo prints both.
 	Answers map[string]string `json:"answers,omitempty"`
@@ -351,6 +378,31 @@ const (
 	SignNegative = "negative"
 )
 
+// Kinds of anchors.
+const (
+	AtWall     = "value"    // the value at X is known by definition, as u = 0 at a wall
+	AtSymmetry = "symmetry" // the simulation is the same on both sides of X
+)
+
+// Anchor is a support point that physics gives the simulated line beyond its
+// own rows. Without a reason it is not used.
+type Anchor struct {
+	Kind  string  `json:"kind"`
+	X     float64 `json:"x"`               // in the unit of the stations
+	Value float64 `json:"value"`           // in the unit of the quantity; of AtWall
+	Why   string  `json:"why"`             // the physics, e.g. no slip at the wall
+	Model string  `json:"model,omitempty"` // the model it belongs to, "" for all
+}
+
+// StationPlan is what the stations of a question were when they were locked.
+type StationPlan struct {
+	At       string `json:"at"`       // time, given by the host
+	Late     bool   `json:"late"`     // after the comparison was seen
+	Data     string `json:"data"`     // the rows the stations come from
+	Policy   string `json:"policy"`   // the choices that decide which are compared
+	Excluded []int  `json:"excluded"` // lines of the reference file
+}
+
 // Card holds the reference quantities of a case.
 type Card struct {
 	Name       string              `json:"name"`
@@ -429,7 +481,8 @@ const (
 	Absolute    = "absolute" // in the unit of the data
 	OfReading   = "percent of reading"
 	OfFullScale = "percent of full scale"
-	OfCounts    = "counts" // of PerCount each
+	OfCounts    = "counts"   // of PerCount each
+	OfPosition  = "position" // Value is of the place, in the unit of the stations; it acts by the slope of the data
 	Independent = "independent"
 	Common      = "common" // of a percentage of the reading: a common scale
 	Grouped     = "group"  // shared within groups of stations
@@ -505,11 +558,22 @@ type Choices struct {
 	Sampled       bool               `json:"sampled,omitempty"`    // the interval of the model error by sampling too
 	CommonSet     bool               `json:"common_set,omitempty"` // models compared at different stations are set against each other at the shared ones
 	NumLinear     bool               `json:"num_linear,omitempty"` // parts of u_num depend on each other: they are summed, not their squares
+
+	Gap    float64 `json:"gap,omitempty"`    // number of median spacings above which the simulation has a gap
+	Period float64 `json:"period,omitempty"` // of the stations, in their unit; 0: not periodic
+	Probe  float64 `json:"probe,omitempty"`  // width over which the probe averages, in the unit of the stations
+	Smooth int     `json:"smooth,omitempty"` // rows of the window before changes of sign are looked for; 0: none
 }
+
+// wideSpacing is the number of median spacings that is a gap where a question
+// chooses no other. A stretched grid changes its spacing by less than a factor
+// two from row to row; ten of the median around is a hole (common practice,
+// no source).
+const wideSpacing = 10
 
 // DefaultChoices are the choices of a new question.
 func DefaultChoices() Choices {
-	return Choices{K: 2, KNum: 1.15, Bounded: true, Formal: 2, Dimension: 3, Interpolation: interpolate.Linear, UInterp: true}
+	return Choices{K: 2, KNum: 1.15, Bounded: true, Formal: 2, Dimension: 3, Interpolation: interpolate.Linear, UInterp: true, Gap: wideSpacing}
 }
 
 // Entry is one line of the operation log. At is given by the host.

@@ -29,9 +29,23 @@ func (c *Cell) InPercent() bool {
 }
 
 // UnitSuffix is the unit with a space before it, or nothing for pure numbers.
-func (c *Cell) UnitSuffix() string {
-	if c.Unit == "" || c.Unit == "1" {
+func (c *Cell) UnitSuffix() string { return unitAfter(c.Unit) }
+
+// unitAfter is a unit with a space before it, or nothing for pure numbers.
+func unitAfter(unit string) string {
+	if unit == "" || unit == "1" {
 		return ""
 	}
-	return " " + c.Unit
+	return " " + unit
+}
+
+// ProductUnit is the unit of a product of two quantities, "1" for pure numbers.
+func ProductUnit(a, b string) string {
+	switch {
+	case a == "" || a == "1":
+		return b
+	case b == "" || b == "1":
+		return a
+	}
+	return a + "·" + b
 }

@@ -428,6 +428,7 @@ export interface Cell {
   axes?: Axes[];
   corrected?: Correction;
   reduction?: Reduction;
+  treatment?: Treatment;
   curve: Curve;
   notices: Notice[] | null;
   files_used: string[] | null;
@@ -566,6 +567,10 @@ export interface Choices {
   sampled?: boolean;
   common_set?: boolean;
   num_linear?: boolean;
+  gap?: number;
+  period?: number;
+  probe?: number;
+  smooth?: number;
 }
 
 export interface Station {
@@ -582,6 +587,7 @@ export interface Station {
   lo: number | null;
   hi: number | null;
   line: number;
+  weight?: number;
   reading: string;
   whitened: number | null;
   percent?: number;
@@ -984,6 +990,17 @@ export interface Reduction {
   inputs: ReducedInput[] | null;
 }
 
+export interface Treatment {
+  orders: OrderLine[] | null;
+  sampling: string;
+  anchors: AnchorLine[] | null;
+  plan: PlanLine | null;
+  noise: NoiseLine | null;
+  fit: DisplacementLine | null;
+  integral: IntegralLine | null;
+  weights: string;
+}
+
 export interface Curve {
   x: (number | null)[] | null;
   y: (number | null)[] | null;
@@ -1166,6 +1183,55 @@ export interface ReducedInput {
   name: string;
   part: number | null;
   common: boolean;
+}
+
+export interface OrderLine {
+  file: string;
+  column: string;
+  hash: string;
+  sorted: boolean;
+}
+
+export interface AnchorLine {
+  kind: string;
+  x: number | null;
+  value: number | null;
+  why: string;
+}
+
+export interface PlanLine {
+  at: string;
+  late: boolean;
+  changes: string[] | null;
+}
+
+export interface NoiseLine {
+  s: number | null;
+  rows: number;
+  stated: number | null;
+}
+
+export interface DisplacementLine {
+  n: number;
+  rms: number | null;
+  shift: number | null;
+  shift_rms: number | null;
+  scale: number | null;
+  scale_rms: number | null;
+  both_shift: number | null;
+  both_scale: number | null;
+  both_rms: number | null;
+  at_edge: boolean;
+}
+
+export interface IntegralLine {
+  e: number | null;
+  s: number | null;
+  d: number | null;
+  u: number | null;
+  length: number | null;
+  whole: number | null;
+  pieces: number;
 }
 
 export interface ComparedPoint {

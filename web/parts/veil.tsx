@@ -12,6 +12,8 @@ export function Veil({ view }: { view: View }) {
       <Hatch className="sheet" />
       <p>
         Record the requirement first, so that no one can say it was fitted to the result; or{" "}
+        <button onClick={() => void desk.change({ kind: "reveal", target: view.reveal, value: "locked" })}>use all stations, requirement not set</button>, which locks the
+        stations and shows the comparison; or{" "}
         <button onClick={() => void desk.change({ kind: "reveal", target: view.reveal })}>show the comparison now</button>, and the log will say so.
       </p>
     </div>
