@@ -28,6 +28,9 @@ type part struct {
 	members []uncertainty.Source // of sampled runs: the sources whose sum source.U is
 	sides   []uncertainty.TwoPiece
 	form    uncertainty.Distribution // of a scalar, for sampling; empty: normal
+
+	made   made
+	number int // of the entry it was made from
 }
 
 // sources returns what the part adds to the covariance of E.
@@ -45,6 +48,19 @@ func (p *part) ofSide() uncertainty.Source {
 	}
 	return p.source
 }
+
+// made says what a part was made from, to walk back from it.
+type made int
+
+const (
+	madeOtherwise  made = iota
+	madeOfColumn        // the uncertainty column of the data
+	madeOfReadings      // the scatter of repeated readings
+	madeOfEntry         // a source of the question
+	madeOfGrids
+	madeOfMonitor
+	madeOfCondition
+)
 
 // budget collects the sources of the cell at its stations.
 func (w *work) budget() {
@@ -110,7 +126,9 @@ func (w *work) dataColumn() {
 		w.need(2, true, "the coverage of u_D", slipTarget(c.slip, "u_factor"), "u-coverage", c.slip.U.Column.Value)
 	}
 	p := w.add(OfData, "column "+c.slip.U.Column.Value, "at each station, "+coverageWords(c.slip.UFactor.Value), "stated in "+w.e.study.fileName(c.slip), u, false, c.uOpen)
-	if c.uPlus != nil {
+	if c.uPlus == nil {
+		p.made = madeOfColumn
+	} else {
 		w.twoSided(p, u, pick(c.uPlus, w.rows))
 	}
 }
@@ -125,7 +143,9 @@ func (w *work) replicates() {
 	if len(readings) < 2 {
 		if c.u != nil && len(c.u) == 1 {
 			p := w.add(OfData, "column "+c.slip.U.Column.Value, coverageWords(c.slip.UFactor.Value), "stated in "+w.e.study.fileName(c.slip), c.u, false, c.uOpen)
-			if c.uPlus != nil {
+			if c.uPlus == nil {
+				p.made = madeOfColumn
+			} else {
 				w.twoSided(p, c.u, c.uPlus)
 			}
 		}
@@ -138,6 +158,7 @@ func (w *work) replicates() {
 	text := "standard deviation " + quantity.Text(float64(w.step(s)), 3) + " of " + quantity.Counted(len(readings), "reading") + ", divided by √" + strconv.Itoa(len(readings))
 	p := w.add(OfData, "scatter of repeated readings", text, "computed from "+w.e.study.fileName(c.slip), []float64{u}, false, false)
 	p.degrees, p.readings = float64(len(readings)-1), len(readings)
+	p.made = madeOfReadings
 	w.fewReadings(len(readings))
 }
 
@@ -185,6 +206,9 @@ func (w *work) source(at int, s *Source) {
 	}
 	p := w.addSource(s.Of, s.Name, w.sourceText(s), s.Origin, source, !knownCoverage || s.Coverage.Open())
 	p.form = uncertainty.Distribution(s.Form)
+	if s.Input == "" && s.Upper == nil {
+		p.made, p.number = madeOfEntry, at
+	}
 	if s.Degrees > 0 {
 		p.degrees = s.Degrees
 	}
@@ -480,7 +504,8 @@ func (w *work) gridPart() {
 	if math.IsNaN(float64(w.cell.Grids.U)) && !w.cell.Grids.Along {
 		text = "bound of the grid study divided by √3"
 	}
-	w.add(OfNumerical, "grid", text, "computed from the grid study", w.gridU, w.choices.NumShared, false).grid = true
+	p := w.add(OfNumerical, "grid", text, "computed from the grid study", w.gridU, w.choices.NumShared, false)
+	p.grid, p.made = true, madeOfGrids
 }
 
 // interpolationPart takes the interpolation of the simulation as a numerical

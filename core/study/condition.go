@@ -113,7 +113,8 @@ func (w *work) matchCondition(at int, m *Matching) {
 		for i := range u {
 			u[i] = math.Abs(effect)
 		}
-		w.add(OfInput, "difference of "+m.Name, s+" against "+d+", the whole effect as a standard uncertainty", cmp.Or(m.Why, "entered"), u, true, false)
+		w.add(OfInput, "difference of "+m.Name, s+" against "+d+", the whole effect as a standard uncertainty", cmp.Or(m.Why, "entered"), u, true, false).made = madeOfCondition
+		w.parts[len(w.parts)-1].number = len(w.cell.Conditions) - 1
 	case m.Handling == Tolerated && m.Why != "":
 		w.tell(notice.New("condition-accepted", m.Name, s, d, m.Why))
 	default:

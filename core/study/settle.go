@@ -102,14 +102,16 @@ func (w *work) judgeMonitor(c *curve) {
 	if p.Grid.Value != w.cell.Grid || math.IsNaN(u) || len(w.x) == 0 || blocked {
 		return
 	}
+	var added *part
 	if m.Stat != nil && line.Entered == "" {
 		w.averages = append(w.averages, average{len(w.cell.Monitors) - 1, opt.Name, *m.Stat, u})
-		w.addToRun("averaging in time", quantity.Text(m.Stat.Independent, 2)+" independent samples; "+m.Rule, "computed from "+w.e.study.fileName(p), u)
+		added = w.addToRun("averaging in time", quantity.Text(m.Stat.Independent, 2)+" independent samples; "+m.Rule, "computed from "+w.e.study.fileName(p), u)
 	} else if line.Entered != "" {
-		w.addToRun("iteration", "U_iter entered, divided by 2", line.Entered, u)
+		added = w.addToRun("iteration", "U_iter entered, divided by 2", line.Entered, u)
 	} else {
-		w.addToRun("iteration", string(m.Class)+" monitor, "+m.Rule, "computed from "+w.e.study.fileName(p), u)
+		added = w.addToRun("iteration", string(m.Class)+" monitor, "+m.Rule, "computed from "+w.e.study.fileName(p), u)
 	}
+	added.made, added.number = madeOfMonitor, len(w.cell.Monitors)-1
 	change := math.NaN()
 	if g := w.cell.Grids; g != nil && !g.Along && len(g.Points) > 1 {
 		change = float64(g.Points[len(g.Points)-1].Value - g.Points[len(g.Points)-2].Value)
@@ -122,12 +124,14 @@ func (w *work) judgeMonitor(c *curve) {
 
 // addToRun adds a source of what the finest run itself leaves uncertain, the
 // same u at all stations.
-func (w *work) addToRun(name, text, origin string, u float64) {
+func (w *work) addToRun(name, text, origin string, u float64) *part {
 	all := make([]float64, len(w.x))
 	for i := range all {
 		all[i] = u
 	}
-	w.add(OfNumerical, name, text, origin, all, w.choices.NumShared, false).aside = true
+	p := w.add(OfNumerical, name, text, origin, all, w.choices.NumShared, false)
+	p.aside = true
+	return p
 }
 
 // judged judges a monitor with the entries of its run, in a unit, and returns
