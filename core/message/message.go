@@ -59,6 +59,7 @@ type Reply struct {
 	Compare  *CompareReply  `json:"compare,omitempty"`
 	Results  *Results       `json:"results,omitempty"`
 	View     *View          `json:"view,omitempty"`
+	Walk     *WalkReply     `json:"walk,omitempty"`
 	Files    []string       `json:"files,omitempty"`
 }
 
@@ -88,6 +89,9 @@ type Session struct {
 	read     map[string]tablefile.File // by hash and name
 	memory   study.Memory              // of the last evaluation
 	near     study.Memory              // of the cell last shown
+	walk     *study.Walk               // in the report that the view was last made of
+	walkOf   *study.Study              // whose report that is
+	whole    bool                      // it holds of every cell what only a closer look gives
 	notices  []notice.Notice           // of opening the study
 }
 
@@ -108,7 +112,7 @@ func init() {
 		"demo": demo, "new": blank, "open": open, "drop": drop, "save": save, "copy": copyStudy,
 		"set": set, "accept": accept, "reveal": reveal, "select": choose,
 		"add source": addSource, "remove source": removeSource, "remove file": removeFile, "exclude": exclude, "include": include, "answer": answer, "add item": addItem, "remove item": removeItem, "double": double, "accept like": acceptLike, "accept names": acceptNames,
-		"undo": undo, "redo": redo, "view": view, "results": results, "memo": writeMemo, "stations": writeStations,
+		"undo": undo, "redo": redo, "view": view, "results": results, "walk": walkBack, "memo": writeMemo, "stations": writeStations,
 	}
 }
 

@@ -221,6 +221,7 @@ func (s *Session) view() (*View, error) {
 	c := &report.Cells[at]
 	options.Memory = &s.near
 	*c = study.Closely(s.study, options, c) // of the others no word is shown
+	s.walk, s.walkOf, s.whole = study.NewWalk(s.study, study.Options{Read: s.readOnce}, &report), s.study, false
 	v.Selected = cellID(at)
 	v.Statement = sentence.Of(c)
 	v.Spoken = v.Statement.Text()

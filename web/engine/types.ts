@@ -27,6 +27,7 @@ export interface Reply {
   compare?: CompareReply;
   results?: Results;
   view?: View;
+  walk?: WalkReply;
   files?: string[];
 }
 
@@ -143,6 +144,13 @@ export interface View {
   notices: string[] | null;
   veiled: boolean;
   reveal: Target;
+}
+
+export interface WalkReply {
+  step: Step;
+  shown: string;
+  said: string[] | null;
+  ways: WalkInput[] | null;
 }
 
 export type Severity = string;
@@ -328,6 +336,25 @@ export interface StudyEntry {
   what: string;
   why?: string;
   shown: boolean;
+}
+
+export interface Step {
+  path: string;
+  name: string;
+  value: number | null;
+  unit: string;
+  formula: string;
+  words: string;
+  inputs: StepInput[] | null;
+  again: number | null;
+  agrees: boolean;
+  origin: Origin | null;
+  why: string;
+}
+
+export interface WalkInput {
+  path: string;
+  text: string;
 }
 
 export interface ReadColumn {
@@ -518,6 +545,22 @@ export interface Option {
 export interface EntryItem {
   remove: Target | null;
   entries: Entry[] | null;
+}
+
+export interface StepInput {
+  path: string;
+  name: string;
+  value: number | null;
+  n: number;
+}
+
+export interface Origin {
+  file: string;
+  line: number;
+  column: number;
+  text: string;
+  unit: string;
+  of: string;
 }
 
 export interface CodePoint {

@@ -25,6 +25,7 @@ weirmark compare --sim FILE[@TABLE] --ref FILE[@TABLE] --x COL --y COL [--ref-x 
                  [--u-interp on|off] [--interp linear|monotone] [--k NUMBER] [--json]
 weirmark shelf [NAME] [--set NAME=VALUE,...] [--at NUMBER,...] [--curve NAME]
 weirmark run STUDY --out DIR
+weirmark run STUDY --why PATH [--json]      PATH of a number in report.json, such as cells.0.stations.0.e: its formula, inputs, file and row
 weirmark demo DIR [--state received|worked|review]
 
 Exit: 0 done, 2 evidence incomplete, 3 input refused or wrong usage, 4 internal fault.
@@ -52,7 +53,7 @@ func run(args []string, out, errs io.Writer) (status int) {
 		"grids":   {map[string]bool{"json": false, "size": true, "value": true, "dim": true, "limits": true, "rule": true, "formal": true}, grids},
 		"compare": {map[string]bool{"json": false, "sim": true, "ref": true, "x": true, "y": true, "ref-x": true, "ref-y": true, "u": true, "u-k": true, "u-common": true, "u-num": true, "u-input": true, "u-interp": true, "interp": true, "k": true}, compare},
 		"shelf":   {map[string]bool{"set": true, "at": true, "curve": true}, runShelf},
-		"run":     {map[string]bool{"out": true}, runStudy},
+		"run":     {map[string]bool{"out": true, "why": true, "json": false}, runStudy},
 		"demo":    {map[string]bool{"state": true}, runDemo},
 	}
 	if args[0] == "help" || args[0] == "--help" || args[0] == "-h" {

@@ -380,6 +380,18 @@ func TestDemoAndRun(t *testing.T) {
 	if status != 0 {
 		t.Fatalf("status %d, %s", status, errs)
 	}
+	// A number of the report is walked back to where it is written.
+	status, out, errs = call(t, nil, "run", filepath.Join(first, "study.json"), "--why", "cells.3.read.ref.y.5")
+	if status != 0 || !strings.Contains(out, "Written in C1-taps-upper.csv, line 8, field 2") {
+		t.Errorf("status %d, %s%s", status, out, errs)
+	}
+	status, out, _ = call(t, nil, "run", filepath.Join(first, "study.json"), "--why", "cells.3.stations.5.e", "--json")
+	if step := decode(t, out).(map[string]any)["step"].(map[string]any); status != 0 || step["agrees"] != true || len(step["inputs"].([]any)) != 2 {
+		t.Errorf("status %d, %s", status, out)
+	}
+	if status, _, errs = call(t, nil, "run", filepath.Join(first, "study.json"), "--why", "cells.3.nothing"); status != 3 || !strings.Contains(errs, "no number at") {
+		t.Errorf("a path that leads nowhere: status %d, %s", status, errs)
+	}
 	var names []string
 	err := filepath.Walk(first, func(path string, info os.FileInfo, err error) error {
 		if err != nil || info.IsDir() {

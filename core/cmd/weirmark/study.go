@@ -15,8 +15,9 @@ func runStudy(v *invocation) (int, error) {
 	if err != nil {
 		return message.Refused, err
 	}
-	if v.flags["out"] == "" {
-		return message.Refused, fmt.Errorf("--out is needed: the folder to write into")
+	why := v.flags["why"]
+	if v.flags["out"] == "" && why == "" {
+		return message.Refused, fmt.Errorf("--out is needed, the folder to write into, or --why, the path of a number")
 	}
 	name, data, err := load(path)
 	if err != nil {
@@ -27,7 +28,29 @@ func runStudy(v *invocation) (int, error) {
 	if err != nil {
 		return r.Status, err
 	}
+	if why != "" {
+		return v.walkBack(s, why)
+	}
 	return v.write(s, v.flags["out"])
+}
+
+// walkBack prints one step from a number of the report to where it comes from.
+func (v *invocation) walkBack(s *message.Session, path string) (int, error) {
+	r, _, err := ask(s, message.Request{Kind: "walk", Value: path})
+	if err != nil {
+		return r.Status, err
+	}
+	if v.json() {
+		return r.Status, v.printJSON(r.Walk)
+	}
+	fmt.Fprintf(v.out, "%s\n%s: %s\n", path, r.Walk.Step.Name, r.Walk.Shown)
+	for _, text := range r.Walk.Said {
+		fmt.Fprintf(v.out, "  %s\n", text)
+	}
+	for _, in := range r.Walk.Ways {
+		fmt.Fprintf(v.out, "    %-40s %s\n", in.Path, in.Text)
+	}
+	return r.Status, nil
 }
 
 // runDemo evaluates the bundled demo study into a folder: one case of the
