@@ -51,7 +51,7 @@ func knownRows(side string, y []float64) []string {
 }
 
 // mostNeighbours are the rows on either side that an interpolation looks at.
-const mostNeighbours = 2
+const mostNeighbours = 3
 
 // simulationRows are the rows behind S: of a curve its neighbours, x before y,
 // after the place of the station. Corrections of conditions follow.
@@ -96,7 +96,7 @@ func largestKnown(sizes, y []float64) int {
 	return best
 }
 
-// neighbours returns the rows at most two below and two above a place, in
+// neighbours returns the rows at most three below and three above a place, in
 // ascending order of x; of equal x the first row.
 func neighbours(x, y []float64, at float64) []int {
 	var rows []int

@@ -241,6 +241,11 @@ var walkRules = []walkRule{
 	{path: "num_sums.root", name: "u_num as root sum of squares", why: "Root mean square over the stations of the numerical sources summed by squares."},
 	{path: "num_sums.linear", name: "u_num as plain sum", why: "Root mean square over the stations of the numerical sources summed plainly."},
 
+	{path: "choices.**", name: "choice", why: "Chosen by a person; the log says when."},
+	{path: "grids.**", name: "grid study", why: "From the grids and values above it by the rule, or the entry, that stands beside it; its formula in the methods."},
+	{path: "requirement.**", name: "requirement", why: "From the requirement, E and the parts of u_val, with all else unchanged; what it is for stands beside it."},
+	{path: "fragile.**", name: "choice that changes a word", why: "From the cell evaluated again with the other choice."},
+
 	{path: "open.*.course", name: "course of an open point", why: "It is a place on the page."},
 	{path: "notices.*.line", name: "line of a notice", why: "It is the place itself."},
 	{path: "notices.*.column", name: "column of a notice", why: "It is the place itself."},
