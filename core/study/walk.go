@@ -151,7 +151,7 @@ type walkRule struct {
 	in      func(spot) []string
 	calc    func(args) float64
 	why     string
-	sampled bool // by draws, so that the rounding of an input is not followed
+	direct  bool // from the inputs as they are: of draws, or of a function that is found by steps, the rounding of an input cannot be followed
 }
 
 // from lists inputs by their paths in the cell; @ stands for the object that
@@ -280,13 +280,13 @@ const mostVaried = 400
 // again evaluates a formula from its inputs as they are printed, and reports
 // whether it gives the value within its last printed digit and what the
 // rounding of the inputs explains. From more than mostVaried inputs it is
-// evaluated as they are, and so is what is sampled.
+// evaluated as they are, and so is what is direct.
 func (r *walkRule) again(p spot, v float64, inputs [][]float64) (got float64, agrees bool) {
 	n := 0
 	for _, list := range inputs {
 		n += len(list)
 	}
-	if n > mostVaried || r.sampled { // only compared as they are
+	if n > mostVaried || r.direct { // only compared as they are
 		got = r.calc(args{p, inputs})
 		return got, math.Abs(got-v) <= 1e-8*math.Abs(v)
 	}

@@ -111,7 +111,7 @@ var walkRules = []walkRule{
 	{path: "joint.scale_part", name: "part of the statistic by the scale", formula: "(scale / u(scale))²", in: from("@.scale", "@.u_scale"), calc: squaredRatio},
 	{path: "joint.shape_part", name: "part of the statistic by shape", formula: "remainder − part of the scale", in: from("@.remainder", "@.scale_part"), calc: func(a args) float64 { return a.n(0) - a.n(1) }},
 	{path: "joint.shape_n", name: "degrees of freedom of the shape", formula: "n − 2", in: from("@.n"), calc: func(a args) float64 { return ifKnown(a.cell.Joint.Scale, a.n(0)-2) }},
-	{path: "joint.at_least", name: "probability of at least the found number beyond k u_val", formula: "part of 10 000 draws with V", words: "by sampling from a fixed seed; 1 where none was found", in: from("stations.*.ratio", "choices.k", "sources.*.at.*"), calc: (args).chance, sampled: true},
+	{path: "joint.at_least", name: "probability of at least the found number beyond k u_val", formula: "part of 10 000 draws with V", words: "by sampling from a fixed seed; 1 where none was found", in: from("stations.*.ratio", "choices.k", "sources.*.at.*"), calc: (args).chance, direct: true},
 	{path: "joint.turns.*.rho", name: "correlation at which the conclusion turns", in: ofTurn("flips", ""), calc: first, words: "the last turn of the curve of the source"},
 	{path: "joint.turns.*.at_0", name: "statistic with the source independent", in: ofTurn("points.0", ".statistic"), calc: first, words: "the first point of the curve of the source"},
 	{path: "joint.turns.*.at_1", name: "statistic with the source fully shared", in: ofTurn("points", ".statistic"), calc: first, words: "the last point of the curve of the source"},
@@ -201,7 +201,7 @@ var walkRules = []walkRule{
 		return from("sources."+strconv.Itoa(p.at[0])+".at.*", "stations.*.u_val")(p)
 	}, calc: func(a args) float64 { return squares(a.v[0], a.averaged()) / squares(a.v[1], a.averaged()) }},
 	{path: "degrees", name: "effective degrees of freedom", formula: "u_val⁴ / Σ (u⁴/ν)", words: "the least over the stations", in: from("sources.*.at.*"), calc: (args).leastDegrees},
-	{path: "k_95", name: "factor for 95 % with them", formula: "Student's t, 97.5 %", in: from("degrees"), calc: func(a args) float64 { k, _ := uncertainty.StudentFactor(0.95, a.n(0)); return k }},
+	{path: "k_95", name: "factor for 95 % with them", formula: "Student's t, 97.5 %", in: from("degrees"), calc: func(a args) float64 { k, _ := uncertainty.StudentFactor(0.95, a.n(0)); return k }, direct: true},
 
 	{path: "requirement.limit", name: "limit of the requirement", formula: "as entered, or percent of |D| at the deciding station", in: requirementInputs, calc: func(a args) float64 {
 		if len(a.v) > 1 {
@@ -244,6 +244,9 @@ var walkRules = []walkRule{
 	{path: "choices.**", name: "choice", why: "Chosen by a person; the log says when."},
 	{path: "grids.**", name: "grid study", why: "From the grids and values above it by the rule, or the entry, that stands beside it; its formula in the methods."},
 	{path: "requirement.**", name: "requirement", why: "From the requirement, E and the parts of u_val, with all else unchanged; what it is for stands beside it."},
+	{path: "replicates.**", name: "repeated readings", why: "From the readings that the file lists more than once, by the levels that stand beside it."},
+	{path: "consistency.**", name: "consistency of the data", why: "From the data alone, by the relation that stands beside it."},
+	{path: "resolution.**", name: "resolution of the data", why: "From the smallest step between the values as they are written."},
 	{path: "fragile.**", name: "choice that changes a word", why: "From the cell evaluated again with the other choice."},
 
 	{path: "open.*.course", name: "course of an open point", why: "It is a place on the page."},
