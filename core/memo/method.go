@@ -1,5 +1,12 @@
 package memo
 
+import (
+	"strconv"
+
+	"weirmark/core/quantity"
+	"weirmark/core/uncertainty"
+)
+
 // formula is a display formula with what it is called.
 func formula(template string) Node { return block(Paragraph, "formula", say(template)...) }
 
@@ -9,7 +16,7 @@ func (b *builder) methods() Node {
 	s := b.open(1, "methods", "Methods")
 	s.Nodes = append(s.Nodes,
 		note(say("Edition of the methods: {}. Published methods are named from professional knowledge; no clause is quoted and no conformity to a standard is claimed.", given(b.in.Edition))...))
-	for _, part := range []func() []Node{signs, budgetMethod, jointMethod, settlingMethod, gridMethod, stationPolicy, adequacyMethod, printing} {
+	for _, part := range []func() []Node{signs, budgetMethod, jointMethod, settlingMethod, gridMethod, stationPolicy, adequacyMethod, coverageMethod, printing} {
 		s.Nodes = append(s.Nodes, part()...)
 	}
 	return s
@@ -88,6 +95,24 @@ func adequacyMethod() []Node {
 	return []Node{
 		heading("Requirement"),
 		paragraph(say("The requirement ±*a* belongs to the decision; it is not the result of the comparison. It is *shown* where |*E*| + *k* *u*_{val} ≤ *a*, *not met* where |*E*| − *k* *u*_{val} > *a*, and *not resolved* otherwise. A curve is shown where all its stations are, and not met where one is not.")...),
+	}
+}
+
+// coverageMethod says how often stated 95 % intervals hold the true value.
+func coverageMethod() []Node {
+	few := ""
+	for i, row := range uncertainty.FewReadings {
+		if i > 0 {
+			few += ", "
+		}
+		few += quantity.Percent(row.Covers) + " % for " + strconv.Itoa(row.Readings) + " readings"
+		if row.Common > 0 {
+			few += " with a common error of " + quantity.Typed(row.Common) + " standard deviations"
+		}
+	}
+	return []Node{
+		heading("How often intervals hold"),
+		paragraph(typeset("In 10,000 seeded trials, repeated by the tests of the program, stated 95 % intervals hold the value sought in 93 to 97 % where their assumptions are met and there are five readings or more: means by Student's factor and effective degrees of freedom, E ± k_95 u_val at a station, the offset and scale of E, crossings where the error is shared by the neighbouring rows, the mean of an unsteady series. Of fewer readings they hold it in " + few + ". The grid index is a convention, and no such part is stated of it.")...),
 	}
 }
 

@@ -347,7 +347,7 @@ func agreeTables(c *study.Cell) []Table {
 	if c.XUnit != "" && c.XUnit != "1" {
 		name += " [" + c.XUnit + "]"
 	}
-	t := Table{Title: "Stations", Head: []string{name, "S", "D", "E", "u_D", "u_num", "u_input", "u_val", "|E|/u_val", "whitened", "line"}, Rows: [][]string{}}
+	t := Table{Title: "Stations", Head: []string{name, "S", "D", "E", "u_D", "u_num", "u_input", "u_val", "|E|/u_val", "whitened", "shares of u_val²", "line"}, Rows: [][]string{}}
 	if len(c.Stations) > 0 && c.Stations[0].Percent != nil {
 		t.Head = append(t.Head, "E in % of |D|")
 	}
@@ -359,7 +359,7 @@ func agreeTables(c *study.Cell) []Table {
 			t.Title += ", the first " + strconv.Itoa(maxTableRows) + " (all are in the exported table)"
 			break
 		}
-		row := []string{written(s.X), text(s.S, 5), written(s.D), quantity.Signed(float64(s.E), 3), text(s.UD, 3), text(s.UNum, 3), text(s.UInput, 3), text(s.UVal, 3), text(s.Ratio, 3), quantity.Signed(float64(s.Whitened), 3), strconv.Itoa(s.Line)}
+		row := []string{written(s.X), text(s.S, 5), written(s.D), quantity.Signed(float64(s.E), 3), text(s.UD, 3), text(s.UNum, 3), text(s.UInput, 3), text(s.UVal, 3), text(s.Ratio, 3), quantity.Signed(float64(s.Whitened), 3), stationShares(s), strconv.Itoa(s.Line)}
 		if s.Percent != nil {
 			row = append(row, quantity.Signed(float64(*s.Percent), 3))
 		}
@@ -379,6 +379,24 @@ func agreeTables(c *study.Cell) []Table {
 		tables = append(tables, Table{Title: "Changes of sign", Head: []string{"side", name, "u", "direction"}, Rows: append(crossingRows("simulation", x.Simulation), crossingRows("reference", x.Reference)...)})
 	}
 	return tables
+}
+
+// stationShares says what each side makes of u_val² at a station.
+func stationShares(s study.Station) string {
+	if !s.UVal.Known() || s.UVal == 0 {
+		return "–"
+	}
+	list := []string{}
+	for _, part := range []struct {
+		name string
+		u    study.Number
+	}{{"D", s.UD}, {"num", s.UNum}, {"interp", s.UInterp}, {"input", s.UInput}} {
+		if part.u.Known() {
+			share := float64(part.u) / float64(s.UVal)
+			list = append(list, part.name+" "+quantity.Percent(share*share)+" %")
+		}
+	}
+	return strings.Join(list, ", ")
 }
 
 // jointTable is the statistic as declared, under other patterns, and in parts.

@@ -247,6 +247,8 @@ var walkRules = []walkRule{
 	{path: "replicates.**", name: "repeated readings", why: "From the readings that the file lists more than once, by the levels that stand beside it."},
 	{path: "consistency.**", name: "consistency of the data", why: "From the data alone, by the relation that stands beside it."},
 	{path: "resolution.**", name: "resolution of the data", why: "From the smallest step between the values as they are written."},
+	{path: "steps.**", name: "joint study of grid and time step", why: "From the runs of the study of grid and time step, by the fit that stands beside it."},
+	{path: "borrowed.**", name: "grid uncertainty taken over", why: "From the grid study that it was taken over from, with the reason entered."},
 	{path: "fragile.**", name: "choice that changes a word", why: "From the cell evaluated again with the other choice."},
 
 	{path: "open.*.course", name: "course of an open point", why: "It is a place on the page."},

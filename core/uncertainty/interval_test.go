@@ -99,6 +99,18 @@ func TestIntervalsCover(t *testing.T) {
 	}
 }
 
+// TestFewReadingsCover: of two or three readings the stated interval holds the
+// true value in the part that FewReadings prints, to its last digit.
+func TestFewReadingsCover(t *testing.T) {
+	for _, row := range FewReadings {
+		got := covered(t, 2026, combinedMean(row.Readings, row.Common))
+		t.Logf("mean of %d, u_B/s %v: %.2f %%", row.Readings, row.Common, 100*got)
+		if math.Abs(got-row.Covers) > 0.005 {
+			t.Errorf("mean of %d, u_B/s %v: covers %.4f, printed %.2f", row.Readings, row.Common, got, row.Covers)
+		}
+	}
+}
+
 // TestSampledIntervalsCover: the interval drawn from t(n-1) and a rectangle, as
 // TestIntervalsCover. 1,000 draws stand for the 10,000 of a block, which keeps
 // 10,000 trials to seconds; a shortest interval of so few is about 2 % too

@@ -5,7 +5,7 @@ import { useEffect, useRef, useState } from "preact/hooks";
 
 import type { Phrase, View } from "../engine/types";
 import { useDesk } from "./context";
-import { list } from "./desk";
+import { inCell, list } from "./desk";
 import { Gap } from "./hatch";
 import { jump } from "./jump";
 import { Way } from "./way";
@@ -15,7 +15,7 @@ const said: Record<string, string> = { missing: "missing: ", guessed: "guessed: 
 
 function PhraseOf({ phrase, bare }: { phrase: Phrase; bare?: boolean }) {
   const desk = useDesk();
-  const { mark, target, text } = phrase;
+  const { mark, target, text, path } = phrase;
   if (target === null) {
     return <Words text={text} />;
   }
@@ -31,7 +31,7 @@ function PhraseOf({ phrase, bare }: { phrase: Phrase; bare?: boolean }) {
     return <span class={"phrase " + mark}>{inside}</span>;
   }
   return (
-    <Way class={"phrase " + mark} act={() => jump(desk, target)}>
+    <Way class={"phrase " + mark} act={() => jump(desk, target)} data-path={path === undefined ? undefined : inCell(desk.view!, path)}>
       {mark in said && <span class="spoken">{said[mark]}</span>}
       {inside}
     </Way>

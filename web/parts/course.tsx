@@ -9,7 +9,7 @@ import { DoubtOf } from "./doubt";
 import { Exclusion, ExclusionsOf } from "./exclusion";
 import { Chip } from "./chip";
 import { useDesk } from "./context";
-import { list } from "./desk";
+import { inCell, list } from "./desk";
 import { FigureOf, FoldedFigure } from "./figure";
 import { Hatch } from "./hatch";
 import { courseOfEntry, openCourse } from "./jump";
@@ -81,6 +81,7 @@ function CourseOf({ view, course, place, doubtful }: Shown) {
 
 /** Pictures, numbers and tables of a course. */
 function Evidence({ view, course, place }: { view: View; course: Course; place: number }) {
+  const desk = useDesk();
   const tables = list(course.tables);
   const stations = place === 3 && tables[0] !== undefined && list(tables[0].rows).length > 1 ? tables[0] : undefined;
   const rows = list(stations?.rows).map(list);
@@ -92,6 +93,11 @@ function Evidence({ view, course, place }: { view: View; course: Course; place: 
     if (event.key === "x" && row !== undefined) {
       event.preventDefault();
       setExcluding(true);
+      return;
+    }
+    if (event.key === "w" && at !== undefined && desk.layout.letters) {
+      event.preventDefault();
+      void desk.walk(inCell(view, `stations.${Math.min(at, rows.length - 1)}.e`));
       return;
     }
     const by = event.key === "ArrowRight" ? 1 : event.key === "ArrowLeft" ? -1 : 0;
@@ -111,7 +117,7 @@ function Evidence({ view, course, place }: { view: View; course: Course; place: 
       {stations !== undefined && (
         <p class="ledger" role="status">
           {row === undefined
-            ? "Put the focus on the picture: the arrow keys go from station to station, x excludes one."
+            ? "Put the focus on the picture: the arrow keys go from station to station, x excludes one, w walks back from it."
             : list(stations.head).map((name, i) => (
                 <span key={i}>
                   <Words text={name} /> <b>{row[i]}</b>

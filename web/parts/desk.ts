@@ -4,7 +4,7 @@
 
 import { Engine, Interrupted } from "../engine/engine";
 import type { Attached } from "../engine/exchange";
-import type { Open, Reply, Request, Target, View } from "../engine/types";
+import type { Open, Reply, Request, Target, View, WalkReply } from "../engine/types";
 
 type Files = Uint8Array<ArrayBuffer>[];
 
@@ -12,7 +12,7 @@ type Files = Uint8Array<ArrayBuffer>[];
 export type Asked = Omit<Request, "protocol" | "number" | "at">;
 
 /** What lies over the page. */
-export type Sheet = "" | "keys" | "help" | "typing" | "find" | "copy";
+export type Sheet = "" | "keys" | "help" | "typing" | "find" | "copy" | "walk";
 
 /** How the page is laid out; nothing of it is in the study. */
 export interface Layout {
@@ -30,6 +30,11 @@ export interface Layout {
 /** Slices that are empty in Go may come as null. */
 export function list<T>(items: T[] | null | undefined): T[] {
   return items ?? [];
+}
+
+/** The place in the report of a number of the selected cell. */
+export function inCell(view: View, path: string): string {
+  return `cells.${Number(view.selected.slice(1)) - 1}.${path}`;
 }
 
 /** On a narrow page one course is open at a time. */
@@ -57,6 +62,8 @@ export class Desk {
   message = "";
   /** Text to be copied by hand where the browser gives no clipboard. */
   byHand = "";
+  /** The steps of a walk back from a number, the last one shown. */
+  walked: WalkReply[] = [];
   /** The core has been at work for long; the person may stop it. */
   slow = false;
   /** Bytes read of a large file, of all. */
@@ -136,6 +143,21 @@ export class Desk {
     if (this.view !== undefined) {
       await this.ask({ kind: "view" });
     }
+  }
+
+  /** Walks a number one step back and shows it over the page. */
+  async walk(path: string): Promise<void> {
+    const walk = (await this.ask({ kind: "walk", value: path }))?.reply.walk;
+    if (walk !== undefined) {
+      this.walked = [...this.walked, walk];
+      this.lay({ sheet: "walk" });
+    }
+  }
+
+  /** Goes one step of the walk back up. */
+  walkUp(): void {
+    this.walked = this.walked.slice(0, -1);
+    this.lay({});
   }
 
   /** Asks the core; the page is busy until the answer is on it. */

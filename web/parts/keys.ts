@@ -17,6 +17,7 @@ export const keys: Key[] = [
   { shown: "arrows", does: "on the board from cell to cell, Enter selects; on a picture from station to station, with Shift five at a time" },
   { shown: ". ,", does: "next and previous cell with doubts" },
   { shown: "x", does: "exclude the station that the cursor of a picture is at, with a reason" },
+  { shown: "w", does: "why: from the number that has the focus, or from E at the cursor of a picture, back to formula, file and row; again goes deeper" },
   { shown: "k", does: "to the coverage factor of the statement" },
   { shown: "t", does: "tables instead of pictures" },
   { shown: "m", does: "monochrome" },
@@ -40,6 +41,16 @@ async function goCell(desk: Desk, step: number): Promise<void> {
   if (cell !== undefined) {
     await desk.ask({ kind: "select", cell });
     document.querySelector<HTMLElement>(`[data-cell="${cell}"]`)?.focus();
+  }
+}
+
+/** Walks back from the number that has the focus, else from the first of the sentence. */
+async function walkFromFocus(desk: Desk): Promise<void> {
+  const near = document.activeElement?.closest<HTMLElement>("[data-path]") ?? document.querySelector<HTMLElement>("#sentence [data-path]");
+  if (near !== null) {
+    await desk.walk(near.dataset["path"]!);
+  } else {
+    desk.tell("No number of the sentence can be walked back yet.");
   }
 }
 
@@ -97,6 +108,8 @@ function alone(desk: Desk, key: string): (() => void) | undefined {
       return () => void goCell(desk, 1);
     case ",":
       return () => void goCell(desk, -1);
+    case "w":
+      return () => void walkFromFocus(desk);
     case "k":
       return cells(view).length === 0 ? undefined : () => jump(desk, { ...view.reveal, field: "choices.k" });
     case "t":

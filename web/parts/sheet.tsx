@@ -27,6 +27,8 @@ export function Sheets({ view }: { view: View }) {
       return <Finder view={view} />;
     case "copy":
       return <ByHand />;
+    case "walk":
+      return <Walked />;
   }
   return null;
 }
@@ -118,6 +120,54 @@ function ByHand() {
     <Sheet name="Copy by hand">
       <p>This browser gives no clipboard to the page. The text below is selected: copy it with Ctrl+C.</p>
       <textarea ref={area} autofocus rows={12} readOnly value={desk.byHand} aria-label="Text to copy" />
+    </Sheet>
+  );
+}
+
+/** A number walked back, one step at a time. */
+function Walked() {
+  const desk = useDesk();
+  const first = useRef<HTMLButtonElement>(null);
+  const walk = desk.walked.at(-1)!;
+  const { path, name } = walk.step;
+  useLayoutEffect(() => first.current?.focus(), [path]);
+  useLayoutEffect(() => () => void (desk.walked = []), []);
+  const ways = list(walk.ways);
+  return (
+    <Sheet name="Why this number">
+      <div
+        class="walk"
+        onKeyDown={(event) => {
+          if (event.key === "w" && ways.length > 0) {
+            event.preventDefault();
+            const at = (document.activeElement as HTMLElement | null)?.dataset["path"];
+            void desk.walk(at ?? ways[0]!.path);
+          }
+        }}
+      >
+        <p data-walk={path}>
+          <Words text={name} /> {walk.shown !== "" && <b>{walk.shown}</b>}
+        </p>
+        {list(walk.said).map((text, i) => (
+          <p key={i}>
+            <Words text={text} />
+          </p>
+        ))}
+        <ul class="hits">
+          {ways.map((way, i) => (
+            <li key={way.path}>
+              <button ref={i === 0 ? first : null} data-path={way.path} onClick={() => void desk.walk(way.path)}>
+                <Words text={way.text} />
+              </button>
+            </li>
+          ))}
+        </ul>
+        <p class="quiet">
+          {path}
+          {ways.length > 0 && "; w goes on with what has the focus"}
+        </p>
+        {desk.walked.length > 1 && <button onClick={() => desk.walkUp()}>one step back up</button>}
+      </div>
     </Sheet>
   );
 }

@@ -122,6 +122,17 @@ export async function onDemo(on, file) {
     }
     await person.page.focus(".stepped");
     await person.press("ArrowRight", "ArrowRight");
+    // w walks back from E of the station: to D, and to the row of its file.
+    const shown = (wanted) => person.page.waitForFunction((text) => document.querySelector(".walk")?.textContent?.includes(text), {}, wanted);
+    await person.page.keyboard.press("w");
+    await shown("E = S − D");
+    await person.page.click('.walk [data-path$=".d"]');
+    await shown("data D");
+    await person.page.keyboard.press("w");
+    await shown("Written in");
+    await person.page.keyboard.press("Escape");
+    await person.page.waitForFunction(() => document.querySelector(".walk") === null);
+    await person.page.focus(".picture.stepped");
     const ledger = await person.text(".ledger");
     holds(/line \d+/.test(ledger), `ledger: ${ledger}`);
     holds((await person.page.$$(".cursor")).length > 0, "there is no cursor");
