@@ -218,7 +218,7 @@ func (w *work) standard(c *curve, row int, written float64) float64 {
 // densityOf is what the values of a curve were multiplied by to be pressures.
 func (w *work) densityOf(c *curve) float64 {
 	u, err := quantity.Parse(c.slip.Y.Unit.Value)
-	if rho, known := w.density(); known && err == nil && c.yUnit.known && c.yUnit.unit.Dimension != u.Dimension {
+	if rho, known := w.density(c.slip.side()); known && err == nil && c.yUnit.known && c.yUnit.unit.Dimension != u.Dimension {
 		return rho
 	}
 	return 1

@@ -249,6 +249,8 @@ var walkRules = []walkRule{
 	{path: "resolution.**", name: "resolution of the data", why: "From the smallest step between the values as they are written."},
 	{path: "steps.**", name: "joint study of grid and time step", why: "From the runs of the study of grid and time step, by the fit that stands beside it."},
 	{path: "borrowed.**", name: "grid uncertainty taken over", why: "From the grid study that it was taken over from, with the reason entered."},
+	{path: "references.**", name: "reference quantity of the case", why: "Stated on the card of the case, with its origin."},
+	{path: "reduction.**", name: "reduction of the data", why: "From the columns of the file by the formula that stands beside it."},
 	{path: "fragile.**", name: "choice that changes a word", why: "From the cell evaluated again with the other choice."},
 
 	{path: "open.*.course", name: "course of an open point", why: "It is a place on the page."},
