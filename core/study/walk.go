@@ -232,8 +232,8 @@ func (w *work) walk(path string) (Step, bool) {
 	if rest, ok := strings.CutPrefix(path, "read."); ok {
 		return w.walkRead(rest)
 	}
-	if rest, ok := strings.CutPrefix(path, "entered."); ok {
-		return w.walkEntered(rest)
+	if _, _, ok := w.document(path); ok {
+		return w.walkEntered(path)
 	}
 	v, ok := w.valueAt(path)
 	rule, at := ruleOf(path)
@@ -355,7 +355,7 @@ func (w *work) nameOf(path string) string {
 		}
 		return rest
 	}
-	if rest, ok := strings.CutPrefix(path, "entered."); ok {
+	if _, rest, ok := w.document(path); ok {
 		return strings.ReplaceAll(rest, "_", " ") + ", entered"
 	}
 	rule, at := ruleOf(strings.ReplaceAll(path, "*", "0"))
@@ -432,8 +432,8 @@ func (w *work) valueAt(path string) (float64, bool) {
 	if rest, ok := strings.CutPrefix(path, "read."); ok {
 		return w.readAt(rest)
 	}
-	if rest, ok := strings.CutPrefix(path, "entered."); ok {
-		return numberOf(reach(reflect.ValueOf(*w.q), rest))
+	if document, rest, ok := w.document(path); ok {
+		return numberOf(reach(document, rest))
 	}
 	if at, ok := fits("sources.*.at.*", path); ok {
 		if at[0] < 0 || at[0] >= len(w.parts) || at[1] < 0 || at[1] >= len(w.x) {
@@ -517,9 +517,22 @@ func (t *Walk) ofReport(path string) (Step, error) {
 	return s, nil
 }
 
+// document parts a path of what a person entered: in the question of the cell
+// after "entered.", in the study after "stated.".
+func (w *work) document(path string) (reflect.Value, string, bool) {
+	if rest, ok := strings.CutPrefix(path, "entered."); ok {
+		return reflect.ValueOf(*w.q), rest, true
+	}
+	if rest, ok := strings.CutPrefix(path, "stated."); ok {
+		return reflect.ValueOf(*w.e.study), rest, true
+	}
+	return reflect.Value{}, "", false
+}
+
 // walkEntered ends a walk at what a person entered.
 func (w *work) walkEntered(path string) (Step, bool) {
-	v, ok := numberOf(reach(reflect.ValueOf(*w.q), path))
+	document, rest, _ := w.document(path)
+	v, ok := numberOf(reach(document, rest))
 	if !ok {
 		return Step{}, false
 	}
@@ -527,6 +540,10 @@ func (w *work) walkEntered(path string) (Step, bool) {
 	if err != nil {
 		return Step{}, false
 	}
+	of := "entry " + rest + " of the study"
+	if strings.HasPrefix(path, "entered.") {
+		of = "entry " + rest + " of " + w.q.label()
+	}
 	return Step{Name: "entered", Value: Number(v), Again: Number(v), Agrees: true, Inputs: []StepInput{}, Words: "as entered",
-		Origin: &Origin{Text: string(text), Of: "entry " + path + " of " + w.q.label()}}, true
+		Origin: &Origin{Text: string(text), Of: of}}, true
 }

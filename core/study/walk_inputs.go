@@ -149,6 +149,15 @@ func (a args) neighbourhood() []int {
 	return neighbours(inUnit(c.x, c.xUnit, a.xUnit), c.y, a.x[a.spot.at[0]])
 }
 
+// allSquares sums the squares of all values.
+func allSquares(lists [][]float64) float64 {
+	sum := 0.0
+	for _, list := range lists {
+		sum += squares(list, all(len(list)))
+	}
+	return sum
+}
+
 func sum(lists [][]float64) float64 {
 	s := 0.0
 	for _, list := range lists {
@@ -311,18 +320,9 @@ func jointParts(p spot) []string {
 	return []string{"stations.*.whitened"}
 }
 
-// budget is the covariance of the stations of the joint statistic from the
-// sources as they are given, in the unit of the cell; change alters a source.
+// budget is the covariance of the stations of the joint statistic.
 func (a args) budget(change func(*part)) uncertainty.Budget {
-	parts := slices.Clone(a.parts)
-	n := len(a.x)
-	for j := range parts {
-		parts[j].source.U = a.v[1][j*n : (j+1)*n]
-		if change != nil {
-			change(&parts[j])
-		}
-	}
-	return a.covariance(parts, a.joined)
+	return a.covarianceOf(a.v[1], a.joined, change)
 }
 
 // counted are the differences that the joint statistic counts.

@@ -10,6 +10,8 @@ import (
 	"weirmark/core/adequacy"
 	"weirmark/core/comparison"
 	"weirmark/core/metric"
+	"weirmark/core/plausibility"
+	"weirmark/core/profile"
 	"weirmark/core/quantity"
 	"weirmark/core/uncertainty"
 )
@@ -228,6 +230,34 @@ var walkRules = []walkRule{
 	{path: "requirement.u_num_reduction", name: "reduction of u_num", formula: "1 − u_num,needed / u_num", in: func(p spot) []string { return append(deciding("u_num")(p), "requirement.u_num_needed") }, calc: func(a args) float64 { return 1 - a.n(1)/a.n(0) }},
 
 	{path: "stations.*.percent", name: "E in percent of |D|", formula: "100 E / |D|", words: "with the sign that was chosen", in: from("@.e", "@.d"), calc: func(a args) float64 { return a.sign() * 100 * a.n(0) / math.Abs(a.n(1)) }},
+	{path: "stations.*.weight", name: "weight of the station", formula: "weight / Σ weights", words: "as the file states it, or the length that the station stands for", in: weightInputs, calc: weightAt},
+	{path: "treatment.anchors.*.x", name: "place of the support point", formula: "as entered; beyond a plane of symmetry 2 x_plane − x", in: anchorInputs("x"), calc: anchorAt},
+	{path: "treatment.anchors.*.value", name: "value of the support point", words: "as entered; beyond a plane of symmetry that of the row nearest to it", in: anchorInputs("y"), calc: first},
+	{path: "treatment.noise.s", name: "scatter of the data between stations", formula: "√(Σ δ²/n), or 1.4826 median |δ| where that is less", words: "δ: a reading less the straight line between its neighbours, scaled to one reading", in: xAndD, calc: func(a args) float64 { s, _, _ := plausibility.Noise(ascending(a.v[0], a.v[1])); return s }},
+	{path: "treatment.noise.rows", name: "readings between two others", formula: "count", in: xAndD, calc: func(a args) float64 { _, n, _ := plausibility.Noise(ascending(a.v[0], a.v[1])); return float64(n) }},
+	{path: "treatment.noise.stated", name: "stated uncertainty that is independent between stations", formula: "√(Σ u² / n)", in: randomParts, calc: func(a args) float64 { return math.Sqrt(allSquares(a.v) / float64(len(a.x))) }},
+	{path: "treatment.fit.n", name: "stations inside the curve at every shift", formula: "count", in: fitInputs, calc: func(a args) float64 { return float64(a.displaced().N) }, direct: true},
+	{path: "treatment.fit.rms", name: "root mean square of E there", formula: "√(Σ E² / n)", in: fitInputs, calc: func(a args) float64 { return float64(a.step(a.displaced().RMS)) }, direct: true},
+	{path: "treatment.fit.shift", name: "shift nearest to the data", formula: "Δ with the least Σ (S(x − Δ) − D)²", in: fitInputs, calc: func(a args) float64 { return a.xUnit.StepFromSI(a.displaced().Shift) }, direct: true},
+	{path: "treatment.fit.shift_rms", name: "root mean square with that shift", formula: "√(Σ (S(x − Δ) − D)² / n)", in: fitInputs, calc: func(a args) float64 { return float64(a.step(a.displaced().ShiftRMS)) }, direct: true},
+	{path: "treatment.fit.scale", name: "scale nearest to the data", formula: "Σ S D / Σ S²", in: fitInputs, calc: func(a args) float64 { return a.displaced().Scale }, direct: true},
+	{path: "treatment.fit.scale_rms", name: "root mean square with that scale", formula: "√(Σ (a S − D)² / n)", in: fitInputs, calc: func(a args) float64 { return float64(a.step(a.displaced().ScaleRMS)) }, direct: true},
+	{path: "treatment.fit.both_shift", name: "shift of the nearest with both", formula: "Δ with the least Σ (a S(x − Δ) − D)²", in: fitInputs, calc: func(a args) float64 { return a.xUnit.StepFromSI(a.displaced().BothShift) }, direct: true},
+	{path: "treatment.fit.both_scale", name: "scale of the nearest with both", formula: "Σ S D / Σ S² at that shift", in: fitInputs, calc: func(a args) float64 { return a.displaced().BothScale }, direct: true},
+	{path: "treatment.fit.both_rms", name: "root mean square with both", formula: "√(Σ (a S(x − Δ) − D)² / n)", in: fitInputs, calc: func(a args) float64 { return float64(a.step(a.displaced().BothRMS)) }, direct: true},
+	{path: "treatment.integral.e", name: "integral of E", formula: "∫ E dx by the trapezoid", in: integralOf("e"), calc: (args).integral},
+	{path: "treatment.integral.s", name: "integral of S", formula: "∫ S dx by the trapezoid", in: integralOf("s"), calc: (args).integral},
+	{path: "treatment.integral.d", name: "integral of D", formula: "∫ D dx by the trapezoid", in: integralOf("d"), calc: (args).integral},
+	{path: "treatment.integral.u", name: "standard uncertainty of the integral of E", formula: "√(wᵀVw), w the length a station stands for", in: from("stations.*.x", "sources.*.at.*"), calc: (args).uIntegral},
+	{path: "treatment.integral.length", name: "length of the integral", formula: "Σ of the lengths that the stations stand for", in: from("stations.*.x"), calc: (args).integral},
+	{path: "treatment.integral.whole", name: "length of all stations of the data", formula: "largest − least x", in: from("read.ref.x.*"), calc: func(a args) float64 { lo, hi := profile.Limits(a.v[0]); return hi - lo }},
+	{path: "treatment.integral.pieces", name: "pieces of the integral", formula: "count of runs of two and more stations without a gap", in: from("stations.*.x"), calc: func(a args) float64 {
+		return count(pieceLengths(a.segments()), func(n float64) bool { return n > 1 })
+	}},
+	{path: "application.place.at.*", name: "point of application", words: "as entered", in: func(p spot) []string { return []string{"stated.application." + strconv.Itoa(p.at[0]) + ".value"} }, calc: first},
+	{path: "application.place.points.*.at.*", name: "compared condition", words: "as entered", in: comparedAt, calc: first},
+	{path: "application.place.beyond", name: "distance of the point from what was compared", formula: "least distance to the hull of the comparisons, each condition as a part of its span", in: placeInputs, calc: func(a args) float64 { return a.located().Beyond }, direct: true},
+	{path: "application.place.distance", name: "distance to the nearest comparison", formula: "√Σ ((x − x_nearest)/span)²", in: placeInputs, calc: func(a args) float64 { return a.located().Distance }, direct: true},
 	{path: "measured.**", name: "measure", why: "A measure of S and D at the stations; its scale stands beside it, its formula in the methods."},
 	{path: "derived.**", name: "derived value", why: "From the rows of the curves of both sides by the definition that stands beside it, by the same code."},
 	{path: "inputs.**", name: "input", why: "Entered, or from pairs of runs; where it comes from stands beside it."},
