@@ -32,6 +32,8 @@ var units = map[string]Unit{
 	"Hz": {Dimension: Dimension{0, 0, -1}, Factor: 1}, "kHz": {Dimension: Dimension{0, 0, -1}, Factor: 1e3},
 	"K": {Dimension: temperature, Factor: 1}, "°C": {Dimension: temperature, Factor: 1, Offset: 273.15}, "degC": {Dimension: temperature, Factor: 1, Offset: 273.15}, "C": {Dimension: temperature, Factor: 1, Offset: 273.15},
 	"°F": {Dimension: temperature, Factor: 5. / 9, Offset: 273.15 - 32*5./9}, "degF": {Dimension: temperature, Factor: 5. / 9, Offset: 273.15 - 32*5./9}, "°R": {Dimension: temperature, Factor: 5. / 9},
+	"ΔK": {Dimension: temperature, Factor: 1, Step: true}, "Δ°C": {Dimension: temperature, Factor: 1, Step: true}, "ΔdegC": {Dimension: temperature, Factor: 1, Step: true}, "Δ°F": {Dimension: temperature, Factor: 5. / 9, Step: true}, "ΔdegF": {Dimension: temperature, Factor: 5. / 9, Step: true},
+	"mrad": {Dimension: angle, Factor: 1e-3}, "arcmin": {Dimension: angle, Factor: pi / 10800}, "arcsec": {Dimension: angle, Factor: pi / 648000}, "rev": {Dimension: angle, Factor: 2 * pi}, "rpm": {Dimension: Dimension{0, 0, -1, 0, 1}, Factor: 2 * pi / 60},
 	"rad": {Dimension: angle, Factor: 1}, "deg": {Dimension: angle, Factor: pi / 180}, "°": {Dimension: angle, Factor: pi / 180}, "degree": {Dimension: angle, Factor: pi / 180}, "degrees": {Dimension: angle, Factor: pi / 180},
 	"kn": {Dimension: speed, Factor: 1852. / 3600}, "knot": {Dimension: speed, Factor: 1852. / 3600}, "mph": {Dimension: speed, Factor: 63360 * inch / 3600}, "kph": {Dimension: speed, Factor: 1 / 3.6},
 	"N": {Dimension: force, Factor: 1}, "kN": {Dimension: force, Factor: 1e3}, "lbf": {Dimension: force, Factor: pound * g0},

@@ -14,6 +14,7 @@ type Unit struct {
 	Dimension Dimension
 	Factor    float64
 	Offset    float64
+	Step      bool // of differences only, such as Δ°C
 }
 
 // One is the unit of a pure number.
@@ -39,6 +40,16 @@ func (u Unit) StepFromSI(v float64) float64 { return v / u.Factor }
 
 // Same reports whether both units measure the same dimension.
 func (u Unit) Same(v Unit) bool { return u.Dimension == v.Dimension }
+
+// ByConvention reports whether the zero of the unit is a convention, as that of
+// °C: parts and ratios of its values mean nothing.
+func (u Unit) ByConvention() bool { return u.Offset != 0 }
+
+// StepAgainst reports whether one of the two units is of differences and the
+// other of values from a zero of its own: 5 Δ°C and 20 °C have no difference.
+func (u Unit) StepAgainst(v Unit) bool {
+	return u.Step && v.ByConvention() || v.Step && u.ByConvention()
+}
 
 // KinematicOf reports whether u is a pressure divided by a density and v a
 // pressure, the pair that needs a density.
@@ -81,7 +92,7 @@ const (
 
 var normal = strings.NewReplacer(
 	"²", "^2", "³", "^3", "⁴", "^4", "⁻¹", "^-1", "⁻²", "^-2", "⁻³", "^-3", "⁻⁴", "^-4",
-	"**", "^", "·", "*", "⋅", "*", ".", "*", "μ", "µ", "\t", " ", "\u00a0", " ")
+	"**", "^", "·", "*", "⋅", "*", ".", "*", "μ", "µ", "∆", "Δ", "\t", " ", "\u00a0", " ")
 
 // parser holds what is left of a symbol in normal form.
 type parser struct{ rest string }

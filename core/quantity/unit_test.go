@@ -291,3 +291,59 @@ func FuzzParse(f *testing.F) {
 		}
 	})
 }
+
+// A step of 1 K is one of 1 °C and of 1.8 °F, whichever unit states it, and a
+// unit of differences has no zero of its own.
+func TestStepsOfTemperature(t *testing.T) {
+	for _, row := range []struct {
+		symbol             string
+		step               float64 // that is 1 K
+		convention, isStep bool
+	}{
+		{"K", 1, false, false}, {"°C", 1, true, false}, {"°F", 1.8, true, false}, {"°R", 1.8, false, false},
+		{"ΔK", 1, false, true}, {"Δ°C", 1, false, true}, {"∆°C", 1, false, true}, {"Δ°F", 1.8, false, true}, {"ΔdegF", 1.8, false, true},
+	} {
+		u, err := Parse(row.symbol)
+		if err != nil {
+			t.Errorf("%s: %v", row.symbol, err)
+			continue
+		}
+		if got := u.StepToSI(row.step); math.Abs(got-1) > 1e-15 || math.Abs(u.StepFromSI(1)-row.step) > 1e-15 {
+			t.Errorf("%v %s is a step of %v K", row.step, row.symbol, got)
+		}
+		if u.ByConvention() != row.convention || u.Step != row.isStep {
+			t.Errorf("%s: %+v", row.symbol, u)
+		}
+	}
+	celsius, step, kelvin := must(t, "°C"), must(t, "Δ°F"), must(t, "K")
+	if !celsius.StepAgainst(step) || !step.StepAgainst(celsius) || kelvin.StepAgainst(step) || kelvin.StepAgainst(celsius) {
+		t.Error("a difference is not told from a temperature")
+	}
+	if u := must(t, "W/(m^2 Δ°C)"); u != (Unit{Symbol: "W/(m^2 Δ°C)", Dimension: Dimension{0, 1, -3, -1}, Factor: 1}) {
+		t.Errorf("per step: %+v", u)
+	}
+}
+
+// A turn is 360°, 2π rad and 21600 minutes of arc.
+func TestAngles(t *testing.T) {
+	for _, row := range []struct {
+		symbol string
+		turn   float64
+	}{{"rad", 2 * math.Pi}, {"mrad", 2000 * math.Pi}, {"deg", 360}, {"°", 360}, {"arcmin", 21600}, {"arcsec", 1296000}, {"rev", 1}} {
+		if got := must(t, row.symbol).ToSI(row.turn); math.Abs(got-2*math.Pi) > 1e-12 {
+			t.Errorf("%v %s is %v rad", row.turn, row.symbol, got)
+		}
+	}
+	if rpm, each := must(t, "rpm"), must(t, "rev/min"); math.Abs(rpm.Factor-each.Factor) > 1e-15 || rpm.Dimension != each.Dimension {
+		t.Errorf("rpm is %+v, rev/min %+v", rpm, each)
+	}
+}
+
+func must(t *testing.T, symbol string) Unit {
+	t.Helper()
+	u, err := Parse(symbol)
+	if err != nil {
+		t.Fatal(err)
+	}
+	return u
+}

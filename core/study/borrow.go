@@ -96,6 +96,9 @@ func (w *work) lend(q *Question) (relative float64, scalar bool) {
 	if len(values) == 0 {
 		return math.NaN(), l.cell.Scalar
 	}
+	if l.cell.Scalar && l.yUnit.ByConvention() {
+		return math.NaN(), true // no part of a value whose zero is a convention
+	}
 	return l.yUnit.StepToSI(float64(g.UNum)) / spanOf(values, l.cell.Scalar), l.cell.Scalar
 }
 

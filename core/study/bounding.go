@@ -7,6 +7,9 @@ import "math"
 // they are; a requirement that is not resolved without u_D is never resolved by
 // more of it.
 func (w *work) bounding() {
+	if r := w.q.Requirement; r != nil && r.Percent && w.yUnit.ByConvention() {
+		return // judge says why
+	}
 	if w.uD != nil || !w.has(OfNumerical) || w.isUnknown(OfNumerical) || w.isUnknown(OfInput) || len(w.x) == 0 || w.inner {
 		return
 	}

@@ -359,6 +359,11 @@ func (w *work) sourceValues(s *Source, k float64, target Target) ([]float64, boo
 			return nil, false
 		}
 		return uncertainty.Scaled(u, k), true
+	case s.Basis == OfReading && w.yUnit.ByConvention():
+		n := percentOfConvention(s.Name, w.yUnit.symbol)
+		w.tell(n)
+		w.stop(2, "the size of "+s.Name+" in the unit of the data", target, n)
+		return nil, false
 	case s.Basis == OfReading:
 		return uncertainty.Scaled(uncertainty.OfReading(w.d, s.Value/100), k), true
 	case s.Basis == OfPosition:

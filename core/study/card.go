@@ -204,7 +204,7 @@ func (r *ReferenceQuantity) unit() (quantity.Unit, error) {
 	known, _ := cardSymbol(r.Symbol)
 	unit, err := quantity.Parse(r.Unit)
 	wanted, _ := quantity.Parse(cmp.Or(known.Unit, r.Unit)) // ours, or the one just parsed
-	if err != nil || !unit.Same(wanted) {
+	if err != nil || !unit.Same(wanted) || unit.Step && known.Unit != "" {
 		return unit, notice.New("card-unit", cmp.Or(r.Symbol, "The quantity"), known.Words, cmp.Or(known.Unit, "any known unit"), r.Unit)
 	}
 	return unit, nil

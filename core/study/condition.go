@@ -128,7 +128,7 @@ func (w *work) effectWords(m *Matching, effect float64) string {
 		return "Its effect is not known: enter a sensitivity."
 	}
 	text := "With the sensitivity " + quantity.Text(*m.Sensitivity, 3) + " per " + cmp.Or(m.Unit, "unit") + " the effect is " + quantity.Text(float64(w.step(effect)), 2) + w.cell.UnitSuffix()
-	if w.cell.Scalar && len(w.d) == 1 && w.d[0] != 0 {
+	if w.cell.Scalar && len(w.d) == 1 && w.d[0] != 0 && !w.yUnit.ByConvention() {
 		text += " (" + quantity.Percent(math.Abs(effect/w.d[0])) + " % of the data)"
 	}
 	return text + "."

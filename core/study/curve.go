@@ -273,6 +273,10 @@ func (l *loader) bars(c *curve, use ColumnUse, k, side float64) []float64 {
 		return l.limits(c, column, inSI(column.Values, step), k, side)
 	}
 	fullScale, _ := strconv.ParseFloat(slip.UBasis.Value, 64) // a word is no full scale
+	if percent && !(fullScale > 0) && c.yUnit.unit.ByConvention() {
+		l.tell(percentOfConvention("column "+column.Name, c.yUnit.symbol))
+		return nil
+	}
 	all := make([]float64, len(column.Values))
 	zeros := 0
 	for i, v := range column.Values {
@@ -296,6 +300,11 @@ func (l *loader) bars(c *curve, use ColumnUse, k, side float64) []float64 {
 		l.tell(notice.New("u-zero", zeros))
 	}
 	return all
+}
+
+// percentOfConvention refuses percentages of values whose zero is a convention.
+func percentOfConvention(what, symbol string) notice.Notice {
+	return notice.New("percent-zero", capital(what), symbol, "Δ"+strings.TrimPrefix(symbol, "Δ"))
 }
 
 // limits turns limits, in SI, into half-widths; those on the wrong side of
@@ -348,6 +357,12 @@ func sameAxis(a, b axis, aName, bName string) (quantity.Unit, *notice.Notice) {
 		return b.unit, nil
 	case !b.known:
 		return a.unit, nil
+	case a.unit.StepAgainst(b.unit):
+		if b.unit.Step {
+			a, b, aName, bName = b, a, bName, aName
+		}
+		n := notice.New("temperature-step", aName, a.unit.Symbol, bName, b.unit.Symbol)
+		return quantity.One, &n
 	case a.unit.Same(b.unit):
 		return a.unit, nil
 	}

@@ -58,6 +58,15 @@ func (e *evaluation) scaleOf(a axis, caseName, side, symbol string) (float64, bo
 	return v, known && v > 0 && err == nil && a.unit.Same(unit)
 }
 
+// apartWords says a difference of the data from another value as a part of them
+// where there are parts.
+func (w *work) apartWords(difference float64) string {
+	if w.yUnit.ByConvention() {
+		return quantity.Text(float64(w.step(math.Abs(difference))), 2) + " K"
+	}
+	return quantity.Percent(math.Abs(difference/w.d[0])) + " %"
+}
+
 // otherReferences holds the first reference of a scalar against the others:
 // where they differ by more than k of the first's uncertainty, the data do not
 // agree with each other.
@@ -75,7 +84,7 @@ func (w *work) otherReferences() {
 			Holds: !exceeds(math.Abs(difference), float64(w.choices.K*w.uD[0]))})
 		if exceeds(math.Abs(difference), float64(w.choices.K*w.uD[0])) {
 			w.ask(2, "which of the references holds", "references-differ", w.cell.Reference, quantity.Text(w.yUnit.FromSI(w.d[0]), 4), w.e.study.fileName(c.slip), quantity.Text(w.yUnit.FromSI(all[0]), 4),
-				quantity.Percent(math.Abs(difference/w.d[0])), quantity.Typed(w.choices.K))
+				w.apartWords(difference), quantity.Typed(w.choices.K))
 		}
 	}
 }

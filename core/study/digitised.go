@@ -70,7 +70,7 @@ func (w *work) digitised() {
 	}
 	line("scale of x", written(0, "%")+", by the slope of the data", signed(func(i int) float64 { return slope[i] * w.x[i] * values[0] / 100 }))
 	line("zero of x", written(1, w.xUnit.symbol)+", by the slope of the data", signed(func(i int) float64 { return slope[i] * w.xUnit.StepToSI(values[1]) }))
-	line("scale of y", written(2, "%"), uncertainty.OfScale(w.d, values[2]/100))
+	line("scale of y", written(2, "%"), uncertainty.OfScale(w.fromZero(w.d), values[2]/100))
 	line("zero of y", written(3, w.yUnit.symbol), uncertainty.Source{U: uncertainty.Constant(len(w.x), w.yUnit.StepToSI(values[3])), Common: true})
 	width := func(i int) uncertainty.Source {
 		return uncertainty.Source{U: uncertainty.Constant(len(w.x), uncertainty.OfResolution(w.yUnit.StepToSI(values[i])))}
@@ -94,6 +94,16 @@ func slopes(x, y []float64) []float64 {
 		case below+above > 0:
 			out[i] = (y[hi] - y[lo]) / (below + above)
 		}
+	}
+	return out
+}
+
+// fromZero returns values from the zero of their own unit, in SI steps: the
+// scale of an axis in °C stretches from 0 °C, not from 0 K.
+func (w *work) fromZero(values []float64) []float64 {
+	out := make([]float64, len(values))
+	for i, v := range values {
+		out[i] = v - w.yUnit.Offset
 	}
 	return out
 }

@@ -30,8 +30,9 @@ func (w *work) doubtCard(c *curve) {
 		return
 	}
 	kelvin, speed := quantity.Dimension{0, 0, 0, 1}, quantity.Dimension{1, 0, -1}
-	if c.yUnit.unit.Dimension == kelvin && c.yUnit.unit.Offset != 0 && lo < 0 {
-		w.ask(2, "the temperatures of "+file, "absolute-negative", file, quantity.Text(c.yUnit.unit.FromSI(lo), 3))
+	print := func(v float64) string { return valueUnit(quantity.Round(c.yUnit.unit.FromSI(v), 5), c.yUnit.symbol) }
+	if c.yUnit.unit.Dimension == kelvin && !c.yUnit.unit.Step && !c.yTurned && lo < 0 {
+		w.ask(2, "the temperatures of "+file, "temperature-below", file, print(lo), print(0))
 	}
 	ref, known := w.e.cardValue(w.q.Case, RefSpeed, c.slip.side())
 	if largest := max(math.Abs(lo), math.Abs(hi)); known && c.yUnit.unit.Dimension == speed && largest > highestSpeed*ref {

@@ -46,7 +46,7 @@ var FormKinds = []FormKind{
 	{"u'u'/U²", "variance over the reference speed squared, of a variance or a standard deviation", false, []FormOf{{"m^2/s^2", "value/U_ref^2"}, {"m/s", "(value/U_ref)^2"}}},
 	{"k/U²", "turbulent kinetic energy over the reference speed squared", false, []FormOf{{"m^2/s^2", "value/U_ref^2"}}},
 	{"C/C₀", "concentration over the reference", false, []FormOf{{"1", "value/C_ref"}, {"kg/m^3", "value/C_ref"}}},
-	{"Θ", "temperature over the difference of wall and reference", false, []FormOf{{"K", "(value - T_ref)/(T_w - T_ref)"}}},
+	{"Θ", "temperature over the difference of wall and reference", false, []FormOf{{"K", "(value - T_ref)/(T_w - T_ref)"}, {"ΔK", "value/(T_w - T_ref)"}}},
 	{"H₁₂", "shape factor, of a displacement thickness", false, []FormOf{{"m", "value/θ"}}},
 	{"x/L", "length over the reference length", true, []FormOf{{"m", "value/L"}}},
 	{"x/H", "length over the reference height", true, []FormOf{{"m", "value/H"}}},
@@ -196,7 +196,7 @@ func (l *loader) reform(values []float64, a axis, kind FormKind, mode string) ([
 	}
 	for _, made := range kind.Made {
 		of, err := quantity.Parse(made.Of)
-		if err != nil || !of.Same(a.unit) && !a.unit.KinematicOf(of) {
+		if err != nil || of.Step != a.unit.Step || !of.Same(a.unit) && !a.unit.KinematicOf(of) {
 			continue
 		}
 		text := made.Formula

@@ -60,6 +60,12 @@ func (w *work) inCellUnit(c *curve) bool {
 // inputSource brings the uncertainty of an input to the quantity.
 func (w *work) inputSource(s *Source, k float64, target Target) (uncertainty.Source, bool) {
 	u := s.Value / k
+	if unit, err := quantity.Parse(s.Unit); s.Basis == OfReading && err == nil && unit.ByConvention() {
+		n := percentOfConvention("the uncertainty of "+s.Input, s.Unit)
+		w.tell(n)
+		w.stop(2, "the size of "+s.Name+" in the unit of "+s.Input, target, n)
+		return uncertainty.Source{}, false
+	}
 	if s.Basis == OfReading {
 		u = math.Abs(s.Nominal) * s.Value / 100 / k
 	}

@@ -22,6 +22,12 @@ func (w *work) judge() {
 		j.Percent = Number(r.Value)
 	}
 	w.cell.Requirement = j
+	if r.Percent && w.yUnit.ByConvention() {
+		n := percentOfConvention("the requirement", w.yUnit.symbol)
+		w.tell(n)
+		w.stop(4, "a requirement in the unit of the data", w.q.target("requirement.percent"), n)
+		return
+	}
 	if r.Late {
 		w.need(4, false, "a requirement recorded before results were seen", w.q.target("requirement"), "requirement-late")
 	}

@@ -92,6 +92,9 @@ func (w *work) scale(ask *Scoring) (float64, string, bool) {
 	}
 	switch ask.Scale {
 	case ScaleMean:
+		if w.noParts("mean |D|") {
+			return 0, "", false
+		}
 		mean := 0.0
 		for _, d := range w.d {
 			mean += math.Abs(d) / float64(len(w.d))
@@ -110,12 +113,22 @@ func (w *work) scale(ask *Scoring) (float64, string, bool) {
 	return hi - lo, "range of D", hi > lo
 }
 
+// noParts tells where a measure would take parts of values whose zero is a
+// convention.
+func (w *work) noParts(measure string) bool {
+	if w.yUnit.ByConvention() {
+		w.tell(notice.New("scores-zero", capital(measure), w.yUnit.symbol))
+		return true
+	}
+	return false
+}
+
 // percent gives E in percent of |D| where |D| is no small part of its largest
 // value, and counts the stations where it is withheld.
 func (w *work) percent(ask *Scoring) {
 	lo, hi := profile.Limits(w.d)
 	largest := max(math.Abs(lo), math.Abs(hi))
-	if !(largest > 0) {
+	if !(largest > 0) || w.yUnit.ByConvention() && !ask.Percent || w.noParts("E / |D|") {
 		return
 	}
 	above := ask.PercentAbove
@@ -208,12 +221,12 @@ func (w *work) fieldScores(ask *Scoring) {
 	if ask.AllowanceK > 0 && w.uD == nil {
 		w.tell(notice.New("allowance-none", w.q.label()))
 	}
-	if allowance, words, asked := w.allowance(ask); asked {
+	if allowance, words, asked := w.allowance(ask); asked && (ask.Fraction == 0 || !w.noParts("the hit rate")) {
 		if q, err := metric.HitRateWithin(w.s, w.d, ask.Fraction, allowance); err == nil {
 			w.scored("q", "hit rate", q, "within "+quantity.Typed(100*ask.Fraction)+" % of D or "+words, "")
 		}
 	}
-	if !ask.Dispersion {
+	if !ask.Dispersion || w.noParts("FB, NMSE, FAC2, MG and VG") {
 		return
 	}
 	r, err := metric.Dispersion(w.s, w.d, w.yUnit.ToSI(ask.Threshold))

@@ -25,6 +25,9 @@ func (c *Cell) InPercent() bool {
 	if !c.Scalar || len(c.Stations) != 1 || c.Stations[0].D == 0 {
 		return false
 	}
+	if unit, err := quantity.Parse(c.Unit); err == nil && unit.ByConvention() {
+		return false // a part of a value in °C means nothing
+	}
 	return c.Requirement == nil || c.Requirement.Percent.Known()
 }
 
