@@ -89,6 +89,26 @@ func (b *builder) place(i int, c study.Cell) []Node {
 	return []Node{b.table("plain", say("The point of application among the comparisons of this quantity."), headRow(head...), rows...), paragraph(words...)}
 }
 
+// recorded prints the order in which stations, requirement and comparison
+// entered the log.
+func (b *builder) recorded(i int, c study.Cell) []Node {
+	if len(c.Recorded) == 0 {
+		return nil
+	}
+	words := say("Order of recording: ")
+	for n, r := range c.Recorded {
+		if n > 0 {
+			words = append(words, text("; then "))
+		}
+		words = append(words, text(r.What+" (log entry "), count(r.In, fmt.Sprintf("cells.%d.recorded.%d.in", i, n)))
+		if r.At != "" {
+			words = append(words, text(", "+r.At))
+		}
+		words = append(words, text(")"))
+	}
+	return []Node{paragraph(append(words, text(". Times are given by the host and are not verified."))...)}
+}
+
 // expected prints what the recorded use lets a reader expect.
 func (b *builder) expected(c study.Cell) []Node {
 	if len(c.Evidence) == 0 {

@@ -560,6 +560,13 @@ func sayNumbers(c *study.Cell) []Headline {
 
 func sayTables(c *study.Cell) []Table {
 	var tables []Table
+	if len(c.Recorded) > 0 {
+		t := Table{Title: "Order of recording", Head: []string{"", "log entry", "time"}, Rows: [][]string{}}
+		for _, r := range c.Recorded {
+			t.Rows = append(t.Rows, []string{r.What, strconv.Itoa(r.In), r.At})
+		}
+		tables = append(tables, t)
+	}
 	if a := c.Application; a != nil && a.Place != nil {
 		tables = append(tables, placeTable(a.Place))
 	}

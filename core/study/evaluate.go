@@ -249,6 +249,7 @@ func (e *evaluation) workWith(w *work) Cell {
 	}
 	w.application()
 	w.quality()
+	w.recorded()
 	w.close()
 	return w.cell
 }

@@ -29,6 +29,7 @@ type ingredients struct {
 	Quality     []Quality
 	Context     Context
 	Checked     Signature
+	Recorded    []string     // times of the log entries that the question names
 	Names       []string     // of all questions, where a point of application is stated
 	Conditions  [][]Matching // of all questions, where a point of application is stated
 	Questions   []Question   // all, where a grid uncertainty is borrowed
@@ -51,6 +52,11 @@ func (e *evaluation) key(q *Question, model string) string {
 		in.Files = append(in.Files, file)
 		if f := e.study.File(p.File); f != nil {
 			in.Readings, in.Answers = append(in.Readings, f.Reading), append(in.Answers, f.Answers)
+		}
+	}
+	for _, r := range q.recordedIn() {
+		if r.In >= 1 && r.In <= len(e.study.Log) {
+			in.Recorded = append(in.Recorded, e.study.Log[r.In-1].At)
 		}
 	}
 	if len(e.study.Application) > 0 {

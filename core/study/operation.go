@@ -24,6 +24,9 @@ func (s *Study) Set(t Target, value, at, why string) error {
 		return err
 	}
 	s.log(at, fmt.Sprintf("%s: %s → %s", s.Name(t), shown(before), shown(value)), why, s.revealed(t))
+	if q := s.questionOf(t.ID); t.Kind == "question" && q != nil && q.Requirement != nil && (t.Field == "requirement.value" || t.Field == "requirement.percent") {
+		q.Requirement.In = len(s.Log)
+	}
 	return nil
 }
 
@@ -45,15 +48,16 @@ func (s *Study) Accept(t Target, at string) error {
 	return nil
 }
 
-// Reveal records that the comparison of a question was looked at.
+// Reveal records that the comparison of a question was looked at, and what was
+// not recorded by then.
 func (s *Study) Reveal(id, at string) error {
 	q := s.questionOf(id)
 	if q == nil {
 		return refuse("the showing of a comparison", id)
 	}
 	if !q.Revealed {
-		s.log(at, "Comparison of "+q.label()+" shown", "", false)
-		q.Revealed = true
+		s.log(at, "Comparison of "+q.label()+" shown", q.lacks(), false)
+		q.Revealed, q.RevealedIn = true, len(s.Log)
 	}
 	return nil
 }
@@ -526,7 +530,11 @@ func (q *Question) enterRequirement(path, value string) (string, error) {
 		}
 		return before, err
 	case "percent":
-		return yesNo(&r.Percent, value)
+		before, err := yesNo(&r.Percent, value)
+		if err == nil && before != value {
+			r.Late = q.Revealed
+		}
+		return before, err
 	case "who":
 		before := r.Who
 		r.Who = value

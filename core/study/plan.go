@@ -28,6 +28,7 @@ func (s *Study) setPlan(id, value, at, why string) error {
 		what = "all used but " + quantity.Counted(n, "excluded one")
 	}
 	s.log(at, "Stations of "+q.label()+" locked: "+what, why, q.Revealed)
+	q.Plan.In = len(s.Log)
 	return nil
 }
 

@@ -124,6 +124,8 @@ type Cell struct {
 	Tried       []string      `json:"tried,omitempty"` // alternatives that were evaluated
 	Fragile     []Fragility   `json:"fragile"`         // alternatives that change an outcome word
 
+	Recorded []RecordedLine `json:"recorded,omitempty"` // stations, requirement and showing, in the order of the log
+
 	Known    string         `json:"known,omitempty"`    // whether the data were known when the simulation was made
 	Evidence []EvidenceLine `json:"evidence,omitempty"` // expected for the recorded use
 

@@ -266,8 +266,9 @@ type Question struct {
 	Known       Field        `json:"known,omitzero"` // Blind or Aware
 	ReferenceID string       `json:"reference_id"`   // what the data are called
 	Choices     Choices      `json:"choices"`
-	Downward    bool         `json:"downward"` // draw with negative values upward, as is usual for Cp
-	Revealed    bool         `json:"revealed"` // the comparison was looked at
+	Downward    bool         `json:"downward"`              // draw with negative values upward, as is usual for Cp
+	Revealed    bool         `json:"revealed"`              // the comparison was looked at
+	RevealedIn  int          `json:"revealed_in,omitempty"` // the log entry of that; 0 where the log does not have it
 	Excluded    []Exclusion  `json:"excluded,omitempty"`
 	Conditions  []Matching   `json:"conditions,omitempty"`
 	Form        Form         `json:"form,omitzero"`   // of the values
@@ -396,11 +397,12 @@ type Anchor struct {
 
 // StationPlan is what the stations of a question were when they were locked.
 type StationPlan struct {
-	At       string `json:"at"`       // time, given by the host
-	Late     bool   `json:"late"`     // after the comparison was seen
-	Data     string `json:"data"`     // the rows the stations come from
-	Policy   string `json:"policy"`   // the choices that decide which are compared
-	Excluded []int  `json:"excluded"` // lines of the reference file
+	At       string `json:"at"`           // time, given by the host
+	Late     bool   `json:"late"`         // after the comparison was seen
+	In       int    `json:"in,omitempty"` // the log entry of the locking
+	Data     string `json:"data"`         // the rows the stations come from
+	Policy   string `json:"policy"`       // the choices that decide which are compared
+	Excluded []int  `json:"excluded"`     // lines of the reference file
 }
 
 // Card holds the reference quantities of a case.
@@ -466,7 +468,8 @@ type Requirement struct {
 	Percent bool    `json:"percent"`
 	Who     string  `json:"who"`
 	Date    string  `json:"date"`
-	Late    bool    `json:"late"` // recorded after the comparison was seen
+	Late    bool    `json:"late"`         // recorded after the comparison was seen
+	In      int     `json:"in,omitempty"` // the log entry of the last change of its size
 }
 
 // What a source is an uncertainty of.

@@ -434,6 +434,7 @@ export interface Cell {
   requirement: Judgement | null;
   tried?: string[];
   fragile: Fragility[] | null;
+  recorded?: RecordedLine[];
   known?: string;
   evidence?: EvidenceLine[];
   inputs?: InputLine[];
@@ -868,6 +869,12 @@ export interface Fragility {
   outcome: string;
   detail: string;
   at?: number;
+}
+
+export interface RecordedLine {
+  what: string;
+  in: number;
+  at: string;
 }
 
 export interface EvidenceLine {

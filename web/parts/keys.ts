@@ -4,6 +4,7 @@ import { cells, nextCell, type Desk } from "./desk";
 import { inField } from "./intake";
 import { focusOn, jump, openCourse } from "./jump";
 import { printMemo } from "./memo";
+import { liftVeil } from "./veil";
 
 interface Key {
   shown: string;
@@ -19,6 +20,7 @@ export const keys: Key[] = [
   { shown: "x", does: "exclude the station that the cursor of a picture is at, with a reason" },
   { shown: "w", does: "why: from the number that has the focus, or from E at the cursor of a picture, back to formula, file and row; again goes deeper" },
   { shown: "k", does: "to the coverage factor of the statement" },
+  { shown: "v", does: "lift the veil: use all stations, requirement not set" },
   { shown: "t", does: "tables instead of pictures" },
   { shown: "m", does: "monochrome" },
   { shown: "/", does: "find a number, a station or a file" },
@@ -112,6 +114,8 @@ function alone(desk: Desk, key: string): (() => void) | undefined {
       return () => void walkFromFocus(desk);
     case "k":
       return cells(view).length === 0 ? undefined : () => jump(desk, { ...view.reveal, field: "choices.k" });
+    case "v":
+      return view.veiled ? () => void liftVeil(desk, view) : undefined;
     case "t":
       return () => desk.lay({ tables: !desk.layout.tables });
     case "m":

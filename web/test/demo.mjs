@@ -118,7 +118,9 @@ export async function onDemo(on, file) {
     await person.page.click('[data-at="1,1"]');
     await person.settle();
     if ((await person.text(".veil")) !== "") {
-      await person.click("show the comparison now");
+      await person.press("Escape", "v");
+      holds((await person.text(".veil")) === "", "a key lifts the veil");
+      holds((await log(person)).includes("requirement not set"), "the log does not say what was missing");
     }
     await person.page.focus(".stepped");
     await person.press("ArrowRight", "ArrowRight");
