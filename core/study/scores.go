@@ -67,7 +67,7 @@ func (w *work) scaled(ask *Scoring, m metric.Summary) {
 		w.score(ScoreLine{Name: measure + " / " + name, Value: Number(v / scale), Scale: printed})
 	}
 	if ask.Scale != "" {
-		line("mean E", w.sign()*m.Bias)
+		line("mean E", m.Bias)
 		line("mean |E|", m.MAE)
 	}
 	line("RMSE", m.RMSE)
@@ -144,7 +144,7 @@ func (w *work) percent(ask *Scoring) {
 	}
 	kept := make([]float64, 0, len(percent))
 	for i, p := range percent {
-		v := Number(w.sign() * p)
+		v := Number(p)
 		w.cell.Stations[i].Percent = &v
 		if !math.IsNaN(p) {
 			kept = append(kept, p)
@@ -173,7 +173,7 @@ func (w *work) weighted(ask *Scoring, e []float64) {
 		w.tell(notice.New("weights-refused", words))
 		return
 	}
-	w.score(ScoreLine{Name: "weighted mean E", Value: w.step(w.sign() * bias), Scale: words})
+	w.score(ScoreLine{Name: "weighted mean E", Value: w.step(bias), Scale: words})
 	w.score(ScoreLine{Name: "weighted mean |E|", Value: w.step(mae), Scale: words})
 	w.score(ScoreLine{Name: "weighted RMSE", Value: w.step(rmse), Scale: words})
 }
@@ -190,7 +190,7 @@ func (w *work) correlation(ask *Scoring) {
 		return
 	}
 	m := metric.Summarise(w.errors())
-	beside := "of S on D, beside slope " + quantity.Text(l.Slope, 3) + " and mean E " + quantity.Signed(w.sign()*float64(w.step(m.Bias)), 3) + w.cell.UnitSuffix()
+	beside := "of S on D, beside slope " + quantity.Text(l.Slope, 3) + " and mean E " + quantity.Signed(float64(w.step(m.Bias)), 3) + w.cell.UnitSuffix()
 	w.scored("R", "correlation R", l.R, beside+"; blind to both", "")
 	w.score(ScoreLine{Name: "R²", Value: Number(l.R * l.R), Scale: beside + "; blind to both"})
 	w.scored("slope", "slope of S on D", l.Slope, "1 without an error of scale", "")
@@ -205,13 +205,9 @@ func (w *work) distribution(ask *Scoring, e []float64) {
 		return
 	}
 	if a, ok := metric.Limits(e); ok {
-		lo, hi := a.Low, a.High
-		if w.sign() < 0 {
-			lo, hi = -hi, -lo
-		}
 		words := "mean E ± 1.96 standard deviations, normal differences; ± " + quantity.Text(float64(w.step(a.LimitU)), 2) + " (standard)"
-		w.score(ScoreLine{Name: "lower limit of agreement", Value: w.step(lo), Scale: words})
-		w.score(ScoreLine{Name: "upper limit of agreement", Value: w.step(hi), Scale: words})
+		w.score(ScoreLine{Name: "lower limit of agreement", Value: w.step(a.Low), Scale: words})
+		w.score(ScoreLine{Name: "upper limit of agreement", Value: w.step(a.High), Scale: words})
 	}
 	w.score(ScoreLine{Name: "area between the distributions of S and D", Value: w.step(metric.Area(w.s, w.d)), Scale: "all stations as one sample; where they lie plays no part"})
 }
@@ -301,7 +297,7 @@ func (w *work) measured() {
 		name  string
 		value float64
 		of    metric.Spread
-	}{{"mean E", w.sign() * m.Bias, s.Bias}, {"mean |E|", m.MAE, s.MAE}, {"RMSE", m.RMSE, s.RMSE}, {"largest |E|", m.MaxAbs, s.MaxAbs}} {
+	}{{"mean E", m.Bias, s.Bias}, {"mean |E|", m.MAE, s.MAE}, {"RMSE", m.RMSE, s.RMSE}, {"largest |E|", m.MaxAbs, s.MaxAbs}} {
 		w.cell.Measured = append(w.cell.Measured, MeasureLine{Name: l.name, Value: w.step(l.value), U: w.step(l.of.U), Floor: w.step(l.of.Floor), FloorHi: w.step(l.of.FloorHi), Above: exceeds(math.Abs(l.value), l.of.FloorHi)})
 	}
 }
@@ -366,7 +362,7 @@ func (w *work) regionLine(ask *Scoring, e []float64, rows []int) RegionLine {
 		return line
 	}
 	m := metric.Summarise(pick(e, rows))
-	line.Bias, line.RMSE = w.step(w.sign()*m.Bias), w.step(m.RMSE)
+	line.Bias, line.RMSE = w.step(m.Bias), w.step(m.RMSE)
 	if allowance, _, asked := w.allowance(ask); asked {
 		if q, err := metric.HitRateWithin(pick(w.s, rows), pick(w.d, rows), ask.Fraction, pick(allowance, rows)); err == nil {
 			line.HitRate = Number(q)
@@ -453,6 +449,3 @@ func (e *evaluation) differences(r *Report) {
 		}
 	}
 }
-
-// sign is the factor that turns S − D into E as the study prints it.
-func (w *work) sign() float64 { return 1 }

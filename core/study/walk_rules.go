@@ -148,7 +148,7 @@ var walkRules = []walkRule{
 	{path: "regions.*.from", name: "beginning of the region", words: "as entered", in: regionEntry("from"), calc: first},
 	{path: "regions.*.to", name: "end of the region", words: "as entered", in: regionEntry("to"), calc: first},
 	{path: "regions.*.n", name: "stations of the region", formula: "count", in: from("stations.*.x", "stations.*.d"), calc: func(a args) float64 { return float64(len(a.regionAt(a.spot.at[0]))) }},
-	{path: "regions.*.bias", name: "mean of E in the region", formula: "Σ E / n", in: allE, calc: func(a args) float64 { return a.sign() * metric.Summarise(a.regionOf(a.v[0])).Bias }},
+	{path: "regions.*.bias", name: "mean of E in the region", formula: "Σ E / n", in: allE, calc: func(a args) float64 { return metric.Summarise(a.regionOf(a.v[0])).Bias }},
 	{path: "regions.*.rmse", name: "root mean square of E in the region", formula: "√(Σ E² / n)", in: allE, calc: func(a args) float64 { return metric.Summarise(a.regionOf(a.v[0])).RMSE }},
 	{path: "regions.*.hit_rate", name: "hit rate in the region", formula: "part with |E| within the fraction of D or the allowance", in: allSD, calc: (args).hitRate},
 	{path: "regions.*.beyond", name: "stations of the region beyond k u_val", formula: "count of |E|/u_val > k", in: from("stations.*.ratio", "choices.k"), calc: func(a args) float64 {
@@ -229,7 +229,7 @@ var walkRules = []walkRule{
 	}},
 	{path: "requirement.u_num_reduction", name: "reduction of u_num", formula: "1 − u_num,needed / u_num", in: func(p spot) []string { return append(deciding("u_num")(p), "requirement.u_num_needed") }, calc: func(a args) float64 { return 1 - a.n(1)/a.n(0) }},
 
-	{path: "stations.*.percent", name: "E in percent of |D|", formula: "100 E / |D|", words: "with the sign that was chosen", in: from("@.e", "@.d"), calc: func(a args) float64 { return a.sign() * 100 * a.n(0) / math.Abs(a.n(1)) }},
+	{path: "stations.*.percent", name: "E in percent of |D|", formula: "100 E / |D|", words: "with the sign that was chosen", in: from("@.e", "@.d"), calc: func(a args) float64 { return 100 * a.n(0) / math.Abs(a.n(1)) }},
 	{path: "stations.*.weight", name: "weight of the station", formula: "weight / Σ weights", words: "as the file states it, or the length that the station stands for", in: weightInputs, calc: weightAt},
 	{path: "treatment.anchors.*.x", name: "place of the support point", formula: "as entered; beyond a plane of symmetry 2 x_plane − x", in: anchorInputs("x"), calc: anchorAt},
 	{path: "treatment.anchors.*.value", name: "value of the support point", words: "as entered; beyond a plane of symmetry that of the row nearest to it", in: anchorInputs("y"), calc: first},
@@ -271,6 +271,7 @@ var walkRules = []walkRule{
 	{path: "num_sums.root", name: "u_num as root sum of squares", why: "Root mean square over the stations of the numerical sources summed by squares."},
 	{path: "num_sums.linear", name: "u_num as plain sum", why: "Root mean square over the stations of the numerical sources summed plainly."},
 
+	{path: "recorded.*.in", name: "entry of the log", why: "It is the place itself."},
 	{path: "choices.**", name: "choice", why: "Chosen by a person; the log says when."},
 	{path: "grids.**", name: "grid study", why: "From the grids and values above it by the rule, or the entry, that stands beside it; its formula in the methods."},
 	{path: "requirement.**", name: "requirement", why: "From the requirement, E and the parts of u_val, with all else unchanged; what it is for stands beside it."},
