@@ -73,7 +73,7 @@ var table = map[string]row{
 
 	// Units.
 	"unit-unknown":   {Ask, "Unit %q of column %q is not known. The column is not converted. Choose a unit."},
-	"unit-missing":   {Ask, "No unit is stated for %q of %s. Nothing is assumed. Choose a unit, or 1 for a pure number."},
+	"unit-missing":   {Ask, "No unit is stated for %q of %s. Nothing is assumed.%s Choose a unit, or 1 for a pure number."},
 	"unit-guessed":   {Ask, "The unit %s of %q is a guess. Accept or correct it."},
 	"unit-dimension": {Stop, "%q is in %s and %q is in %s: these are different dimensions and cannot be compared. Correct the units, or give the quantity that relates them."},
 	"density-needed": {Stop, "%q is a pressure divided by density (%s) and %q is a pressure (%s). A density is needed before they can be compared."},
@@ -120,6 +120,11 @@ var table = map[string]row{
 
 	// The case card, formulas and forms.
 	"cp-high":           {Ask, "Cp of %s reaches %s, above %s: in low-speed flow it is 1 at a stagnation point. Nothing was changed. Check the reference pressure and the dynamic pressure."},
+	"cp-stagnation":     {Ask, "The largest Cp around the section of %s is %s, with rows close by on both sides: at a stagnation point of low-speed flow it is 1. Nothing was changed. Check the reference pressure and the dynamic pressure, or say why the section has none."},
+	"energy-negative":   {Ask, "%s of %s reaches %s: it is a mean of squares, and never below zero. Nothing was changed. Check the column, or say what it holds."},
+	"first-cell":        {Ask, "The first cells of %s lie at y+ = %s%s. Nothing was changed. Check the grid at the wall and the wall treatment, or say why they go together."},
+	"datum-differs":     {Ask, "The pressures are stated as %s in the simulation and %s in the data, and one reference pressure does not part them. Nothing was moved. Enter p_ref of each side and the form Cp, or bring one side over by a formula."},
+	"length-scaled":     {Ask, "%s of %s runs from %s to %s, %s times the reference length %s: it would fit with a factor %s%s. Nothing was changed. Check the unit."},
 	"absolute-negative": {Ask, "%s reaches %s, and is stated as absolute: below zero nothing is. Nothing was changed. Check the datum and the unit."},
 	"temperature-below": {Ask, "Temperatures of %s reach %s, below absolute zero (%s). Nothing was changed. Check the unit, or state it as one of differences, such as Δ°C."},
 	"temperature-step":  {Stop, "%q is in %s, a unit of temperature differences, and %q in %s, a temperature. Nothing was compared. Supply the same on both sides, or take the reference temperature off by a formula."},

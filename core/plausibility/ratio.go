@@ -128,6 +128,20 @@ func ScaledRange(aLo, aHi, bLo, bHi float64) (factor float64, ok bool) {
 	return factor, ok
 }
 
+// ScaledLength returns the factor of a thousand or a hundred by which stations
+// would have to be multiplied to lie along a reference length, where they reach
+// so many times as far; not ok where they may lie as they are. Wakes of tens of
+// lengths and wall layers of hundredths are lines too, so that nothing else is
+// asked about (common practice, no source).
+func ScaledLength(reach float64) (factor float64, ok bool) {
+	for _, s := range []struct{ factor, least, most float64 }{{1. / 1000, 0.15, 3}, {1. / 100, 0.5, 1.5}, {1000, 0.5, 1.5}} {
+		if at := s.factor * reach; at >= s.least && at <= s.most {
+			return s.factor, true
+		}
+	}
+	return 0, false
+}
+
 // coincide reports whether the widths of two ranges are within a factor 1.6
 // and most of the shorter lies in the longer.
 func coincide(aLo, aHi, bLo, bHi float64) bool {

@@ -209,3 +209,13 @@ func TestCorrelation(t *testing.T) {
 		t.Errorf("a constant side has r = %v", r)
 	}
 }
+
+// Lines may reach from a hundredth of a length to tens of it; a thousand or a
+// hundred times as far is a unit.
+func TestScaledLength(t *testing.T) {
+	for _, row := range []struct{ reach, factor float64 }{{1, 0}, {.004, 0}, {30, 0}, {1000, .001}, {250, .001}, {100, .01}, {.001, 1000}, {1e6, 0}} {
+		if f, found := ScaledLength(row.reach); f != row.factor || found != (row.factor != 0) {
+			t.Errorf("%v lengths: factor %v, found %v", row.reach, f, found)
+		}
+	}
+}

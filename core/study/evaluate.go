@@ -522,7 +522,7 @@ func (w *work) doubts(p *Slip) {
 		case f.needed && !f.field.Given() && f.path == "u_basis":
 			w.need(f.course, true, "the "+f.name, slipTarget(p, f.path), "u-basis", p.U.Column.Value, file)
 		case f.needed && !f.field.Given() && f.unitOf != "":
-			w.need(f.course, true, "the "+f.name, slipTarget(p, f.path), "unit-missing", f.unitOf, file)
+			w.need(f.course, true, "the "+f.name, slipTarget(p, f.path), "unit-missing", f.unitOf, file, w.unitsThatFit(p, f))
 		case f.needed && !f.field.Given():
 			w.need(f.course, true, "the "+f.name, slipTarget(p, f.path), "field-missing", capital(f.name), file)
 		}
