@@ -619,12 +619,14 @@ func readingEntries(f *study.File, asked map[string]string) []Entry {
 	}
 	calls := map[string][]string{
 		"decimal": {"decimal-comma", "comma-ambiguous", "number-thousands"}, "delimiter": {"comma-ambiguous"},
-		"sentinels": {"value-sentinel"}, "data": {"value-sentinel"}, "hidden": {"hidden-cells"}, "guides": {"fixed-guessed"},
+		"sentinels": {"value-sentinel"}, "data": {"value-sentinel"}, "hidden": {"hidden-cells"}, "uneven": {"column-count"}, "zones": {"zone-count"}, "guides": {"fixed-guessed"},
 	}
-	words := map[string]string{"decimal": "decimals are written with", "delimiter": "columns are separated by", "sentinels": "these mark missing values", "data": "these are data", "hidden": "hidden cells are", "range": "range of cells", "guides": "further columns begin after characters"}
+	words := map[string]string{"decimal": "decimals are written with", "delimiter": "columns are separated by", "sentinels": "these mark missing values", "data": "these are data", "hidden": "hidden cells are", "uneven": "rows of another number of columns are", "zones": "zones of another count than announced are", "range": "range of cells", "guides": "further columns begin after characters"}
 	options := map[string][]Option{
 		"decimal":   {{"", "–"}, {"point", "a point"}, {"comma", "a comma"}},
 		"delimiter": {{"", "–"}, {"comma", "commas"}, {"semicolon", "semicolons"}, {"tab", "tabs"}, {"stroke", "strokes"}, {"blanks", "blanks"}},
+		"uneven":    {{"", "–"}, {tablefile.LeaveOutUneven, "left out"}},
+		"zones":     {{"", "–"}, {tablefile.ZonesAsFound, "used as found"}},
 		"hidden":    {{"", "–"}, {"include", "included"}, {"leave out", "left out"}},
 	}
 	for _, field := range study.ReadingFields {

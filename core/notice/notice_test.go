@@ -17,10 +17,10 @@ import (
 )
 
 func TestNewFillsTheRow(t *testing.T) {
-	got := New("column-count", 12, 3, 4, 1)
+	got := New("column-count", 12, 3, 4, `line 12 "1,2,3"`)
 	want := Notice{
 		Code: "column-count", Severity: Ask,
-		Text: "Row at line 12 has 3 columns where 4 were expected; 1 such rows are held back. Mend the file or confirm that they may be left out.",
+		Text: "Row at line 12 has 3 columns where 4 were expected. Held back: line 12 \"1,2,3\". Mend the file, or say that they are to be left out.",
 	}
 	if got != want {
 		t.Errorf("%+v, want %+v", got, want)

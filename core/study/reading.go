@@ -25,7 +25,7 @@ func (f *File) readingText() string {
 func (f File) Key() string { return f.SHA256 + " " + f.Name + " " + f.readingText() }
 
 // ReadingFields are the answers a person can give about a file.
-var ReadingFields = []string{"decimal", "delimiter", "sentinels", "data", "hidden", "range", "guides"}
+var ReadingFields = []string{"decimal", "delimiter", "sentinels", "data", "hidden", "uneven", "zones", "range", "guides"}
 
 // ReadingValue returns an answer as text, lists with commas.
 func (f *File) ReadingValue(field string) string {
@@ -44,6 +44,10 @@ func (f *File) ReadingValue(field string) string {
 		return strings.Join(o.Data, " ")
 	case "hidden":
 		return o.Hidden
+	case "uneven":
+		return o.Uneven
+	case "zones":
+		return o.Zones
 	case "range":
 		return o.Range
 	case "guides":
@@ -83,6 +87,10 @@ func (s *Study) enterReading(t Target, value string) (string, error) {
 		o.Data = words
 	case "hidden":
 		o.Hidden = value
+	case "uneven":
+		o.Uneven = value
+	case "zones":
+		o.Zones = value
 	case "range":
 		o.Range = value
 	case "guides":

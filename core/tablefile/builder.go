@@ -2,8 +2,10 @@ package tablefile
 
 import (
 	"bytes"
+	"fmt"
 	"math"
 	"slices"
+	"strings"
 
 	"weirmark/core/notice"
 )
@@ -24,7 +26,8 @@ type builder struct {
 	start, startLine int  // where the rows of the table begin
 	blank            bool // a blank line since the last row
 	held             tellOnce
-	heldCells        int // of the first row held back
+	heldCells        int      // of the first row held back
+	heldShown        []string // the first rows held back, with their lines
 	heldLines        int
 	texts            int            // lines of text passed over among the rows
 	rowsBefore       int            // lines counted as rows before those of the table
@@ -131,6 +134,9 @@ func (b *builder) content(rows bool) bool {
 	case !b.fits() && b.mostlyNumbers():
 		if b.held.count == 0 {
 			b.heldCells = b.split.count
+		}
+		if b.held.count < heldShown {
+			b.heldShown = append(b.heldShown, fmt.Sprintf("line %d %q", line, excerpt(r.text(at))))
 		}
 		b.held.tell(line, nil)
 		b.heldLines += lines
@@ -332,7 +338,11 @@ func (b *builder) blankLine() {
 func (b *builder) table(name string, columns []Column) (Table, bool) {
 	r := b.r
 	if b.held.count > 0 {
-		r.add(notice.New("column-count", b.held.line, b.heldCells, len(b.values), b.held.count).At(b.held.line))
+		if r.opt.Uneven == LeaveOutUneven {
+			r.add(notice.New("rows-left-out", len(b.values), b.heldWords()).At(b.held.line))
+		} else {
+			r.add(notice.New("column-count", b.held.line, b.heldCells, len(b.values), b.heldWords()).At(b.held.line))
+		}
 	}
 	if b.rows == 0 {
 		return Table{}, false
@@ -346,6 +356,18 @@ func (b *builder) table(name string, columns []Column) (Table, bool) {
 		b.describe(&t, c, column)
 	}
 	return t, true
+}
+
+// heldShown is the number of rows held back that are shown as written.
+const heldShown = 5
+
+// heldWords shows the rows held back as written, and counts those not shown.
+func (b *builder) heldWords() string {
+	text := strings.Join(b.heldShown, ", ")
+	if more := b.held.count - len(b.heldShown); more > 0 {
+		text += " and " + plural(more, "further row")
+	}
+	return text
 }
 
 // finished returns the values of column c without much spare room.

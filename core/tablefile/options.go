@@ -18,6 +18,8 @@ type Options struct {
 	Sentinels []string `json:"sentinels,omitempty"` // cells that mark missing values, as written: -999, n.m.
 	Data      []string `json:"data,omitempty"`      // numbers that look like such marks and are data
 	Hidden    string   `json:"hidden,omitempty"`    // hidden rows, columns and sheets: "include" or "leave out"; "" includes and asks
+	Uneven    string   `json:"uneven,omitempty"`    // rows of another number of columns: "leave out"; "" holds them back and asks
+	Zones     string   `json:"zones,omitempty"`     // zones of another count than they announce: "as found"; "" uses them and asks
 	Guides    []int    `json:"guides,omitempty"`    // characters of a line before each further column, for fixed widths
 	Range     string   `json:"range,omitempty"`     // cells of a workbook to read: Sheet!B4:F30, a sheet alone, or B4:F30 of every sheet
 
@@ -27,10 +29,13 @@ type Options struct {
 	Progress func(done, total int) bool `json:"-"`
 }
 
-// IncludeHidden and LeaveOutHidden are the answers of Options.Hidden.
+// IncludeHidden and LeaveOutHidden are the answers of Options.Hidden,
+// LeaveOutUneven is that of Options.Uneven and ZonesAsFound that of Options.Zones.
 const (
 	IncludeHidden  = "include"
 	LeaveOutHidden = "leave out"
+	LeaveOutUneven = "leave out"
+	ZonesAsFound   = "as found"
 )
 
 // decimalSign says how a person stated that decimals are written.
@@ -67,6 +72,12 @@ func (o *Options) settle() (answers, error) {
 	}
 	if !slices.Contains([]string{"", IncludeHidden, LeaveOutHidden}, o.Hidden) {
 		return bad("hidden", o.Hidden)
+	}
+	if o.Uneven != "" && o.Uneven != LeaveOutUneven {
+		return bad("uneven", o.Uneven)
+	}
+	if o.Zones != "" && o.Zones != ZonesAsFound {
+		return bad("zones", o.Zones)
 	}
 	for i, guide := range o.Guides {
 		if guide < 1 || i > 0 && guide <= o.Guides[i-1] || len(o.Guides) >= maxColumns {

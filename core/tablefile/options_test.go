@@ -50,6 +50,12 @@ func TestAnswers(t *testing.T) {
 			`"" 2: °C; p | 12 5 | 13 6`, "fixed-stated:0 header-guessed:1"},
 		{"zones, mark stated", "VARIABLES = x y\nZONE T=\"a\" I=2 F=BLOCK\n1 -999\n3 4\n", Options{Sentinels: []string{"-999.0"}},
 			`"a" 3: x; y | 1 3 | NaN 4`, "sentinel-stated:3"},
+		{"uneven rows left out", "x,y\n1,2\n3\n4,5,6\n7,8\n", Options{Uneven: LeaveOutUneven},
+			`"" 2: x; y | 1 2 | 7 8`, "delimiter-guessed:0 header-guessed:1 rows-left-out:3"},
+		{"zone as found", "VARIABLES = x y\nZONE T=\"a\" I=3\n1 2\n3 4\n", Options{Zones: ZonesAsFound},
+			`"a" 3: x; y | 1 2 | 3 4`, "zone-as-found:2"},
+		{"unknown answer on uneven rows", "1\n", Options{Uneven: "fill"}, ``, "option-bad:0"},
+		{"unknown answer on zones", "1\n", Options{Zones: "any"}, ``, "option-bad:0"},
 		{"unknown decimal", "1\n", Options{Decimal: "dot"}, ``, "option-bad:0"},
 		{"unknown delimiter", "1\n", Options{Delimiter: "x"}, ``, "option-bad:0"},
 		{"unknown answer on hidden cells", "1\n", Options{Hidden: "yes"}, ``, "option-bad:0"},
@@ -67,7 +73,7 @@ func TestAnswers(t *testing.T) {
 // TestOptionsKeep checks that answers survive being kept as JSON.
 func TestOptionsKeep(t *testing.T) {
 	want := Options{MaxBytes: 7, Decimal: "comma", Delimiter: "tab", Sentinels: []string{"-999"}, Data: []string{"999"},
-		Hidden: LeaveOutHidden, Guides: []int{8, 16}, Range: "a!B2:C9"}
+		Hidden: LeaveOutHidden, Uneven: LeaveOutUneven, Zones: ZonesAsFound, Guides: []int{8, 16}, Range: "a!B2:C9"}
 	text, err := json.Marshal(want)
 	if err != nil {
 		t.Fatal(err)

@@ -265,7 +265,11 @@ func (z *zones) pointRows(columns int, separator byte) {
 		}
 	}
 	if h.points() > 0 && found != h.points() {
-		r.add(notice.New("zone-count", h.title(z.number), h.points(), found).At(h.line))
+		code := "zone-count"
+		if r.opt.Zones == ZonesAsFound {
+			code = "zone-as-found"
+		}
+		r.add(notice.New(code, h.title(z.number), h.points(), found).At(h.line))
 	}
 	if t, ok := b.table(h.name, z.columns(columns)); ok {
 		z.separatorNotice(separator)
