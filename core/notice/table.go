@@ -18,7 +18,7 @@ var table = map[string]row{
 	"decimal-mixed":     {Stop, "Both a decimal point (%q) and a decimal comma (%q) appear in column %d. The column cannot be read both ways. Write all numbers one way."},
 	"number-fortran":    {Note, "%d numbers in Fortran form (e.g. %q) were read as %s."},
 	"number-signs":      {Note, "%d numbers with a typographic minus sign or a no-break space (e.g. %q) were read as %s."},
-	"value-missing":     {Note, "%d cells hold no number (first: %q in column %q). They are read as missing, not as zero."},
+	"value-missing":     {Note, "No number in %d cells (first: %q in column %q). They are read as missing, not as zero."},
 	"value-sentinel":    {Ask, "%d values equal %s. They are kept as written; if they mark missing data, say so before they are used."},
 	"value-overflow":    {Ask, "%q is outside the range of numbers that can be held. It is read as missing. Check the file."},
 	"header-none":       {Note, "No column names were found: columns are named c1 to c%d."},
@@ -162,7 +162,7 @@ var table = map[string]row{
 	"application-outside":   {Note, "The application point %s lies outside the compared conditions (%s): no statement is made there."},
 	"application-unmatched": {Note, "The application point %s names a condition that no comparison states: whether it lies inside is not known."},
 	"station-excluded":      {Note, "%d of %d stations were taken out by hand; they stay in the table with their reasons."},
-	"station-excluded-late": {Ask, "%d stations were taken out after results were seen: logged; the result with them is among the alternatives."},
+	"station-excluded-late": {Ask, "Taken out after results were seen: %d stations. Logged; the result with them is among the alternatives."},
 
 	// Measures.
 	"percent-withheld": {Note, "Percent errors are withheld at %d stations: |D| is below %s %% of its largest value there."},
@@ -184,6 +184,7 @@ var table = map[string]row{
 	"curve-outlier":     {Ask, "%s at line %d lies %s robust deviations off its neighbours, %s times what they suggest. Not removed. Exclude it with a reason, or say why it stays."},
 	"curve-magnitude":   {Ask, "%s is never negative but reaches %s: a magnitude? Changes of sign cannot be found in it. Export the signed component."},
 	"readings-ratio":    {Ask, "One of %d readings, at line %d, is %s times the others: another reference area or unit? Nothing was changed."},
+	"stations-constant": {Stop, "All stations of %s are %s: nothing can be compared along them. Check the column of stations."},
 	"curve-constant":    {Stop, "All values of %s are %s: a placeholder? Check the export."},
 	"derive-unknown":    {Stop, "%q is no scalar that can be taken from a curve. Nothing was compared. Choose one of the list."},
 	"derive-parameter":  {Ask, "The %s is not given: the %s was not taken. Enter it."},

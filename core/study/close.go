@@ -99,6 +99,7 @@ func (w *work) close() {
 	if w.reference != nil {
 		w.referenceDoubts()
 	}
+	w.identicalFiles()
 	sort.SliceStable(w.cell.Open, func(i, j int) bool {
 		a, b := w.cell.Open[i], w.cell.Open[j]
 		if a.Blocks != b.Blocks {
@@ -185,6 +186,6 @@ func (w *work) courses() {
 var stopsCourse = map[string]int{
 	"monitor-drift": 0, "monitor-broken": 0, "sampling-none": 0, "balance-open": 0,
 	"grid-diverging": 1, "grid-steps-diverging": 1,
-	"unit-dimension": 2, "density-needed": 2, "curve-loop": 2, "station-none": 2, "curve-short": 2, "u-negative": 2, "limits-crossed": 2, "scalar-curve": 2, "derive-refused": 2, "derive-edge": 2,
+	"unit-dimension": 2, "density-needed": 2, "curve-loop": 2, "station-none": 2, "curve-short": 2, "curve-constant": 2, "stations-constant": 2, "u-negative": 2, "limits-crossed": 2, "scalar-curve": 2, "derive-refused": 2, "derive-edge": 2,
 	"covariance-range": 3, "covariance-size": 3,
 }

@@ -41,17 +41,31 @@ func (w *work) doubtCurves() {
 	w.doubtMagnitude()
 }
 
-// doubtConstant asks about a curve of one value.
+// doubtConstant asks about a curve of one value, or of one station.
 func (w *work) doubtConstant(c *curve) {
 	if len(c.y) < 3 || c.scalar() {
 		return
 	}
-	for _, v := range c.y {
-		if v != c.y[0] && !math.IsNaN(v) {
-			return
-		}
+	if oneValue(c.x) {
+		file := w.e.study.fileName(c.slip)
+		n := notice.New("stations-constant", file, quantity.Text(c.xUnit.unit.FromSI(c.x[0]), 4))
+		w.tell(n)
+		w.stop(2, "the stations of "+file, slipTarget(c.slip, "x.column"), n)
+	}
+	if !oneValue(c.y) {
+		return
 	}
 	w.ask(2, "what "+w.e.study.fileName(c.slip)+" holds", "curve-constant", w.e.study.fileName(c.slip), quantity.Text(w.yUnit.FromSI(c.y[0]), 4))
+}
+
+// oneValue reports whether all known values are equal.
+func oneValue(values []float64) bool {
+	for _, v := range values {
+		if v != values[0] && !math.IsNaN(v) {
+			return false
+		}
+	}
+	return true
 }
 
 // doubtReadings asks about one repeated reading that is a multiple of the

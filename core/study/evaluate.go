@@ -2,6 +2,7 @@ package study
 
 import (
 	"cmp"
+	"slices"
 	"strconv"
 
 	"weirmark/core/notice"
@@ -470,6 +471,10 @@ func (w *work) use(p *Slip) *curve {
 	w.doubts(p)
 	c, notices := w.e.load(p)
 	for _, n := range notices {
+		if n.Code == "u-zero" {
+			w.finding(2, "whether the uncertainty in "+p.U.Column.Value+" of "+w.e.study.fileName(p)+" is zero by definition", n)
+			continue
+		}
 		w.tell(n)
 		if n.Code == "hash-changed" {
 			w.stop(2, "the unaltered file "+w.e.study.fileName(p), Target{Kind: "file", ID: p.File}, n)
@@ -501,13 +506,38 @@ func (w *work) readerAsks(p *Slip) {
 		if n.Severity != notice.Ask {
 			continue
 		}
-		n = n.In(file.Name)
-		if answer := file.Answers[n.Code]; answer != "" {
-			w.tell(notice.New("finding-answered", "A question on "+file.Name+" ("+n.Text+")", answer))
+		w.askOfFile(file, n.In(file.Name))
+	}
+}
+
+// identicalFiles asks about two files of the cell that hold the same bytes,
+// where they are not runs of a family, which are asked about by themselves.
+func (w *work) identicalFiles() {
+	if notice.Has(w.cell.Notices, "grid-identical") {
+		return
+	}
+	first := map[string]string{} // names by hash
+	for i := range w.e.study.Files {
+		file := &w.e.study.Files[i]
+		if !slices.Contains(w.cell.FilesUsed, file.ID) {
 			continue
 		}
-		w.cell.Open = append(w.cell.Open, Open{Course: 2, Blocks: true, Missing: "an answer on " + file.Name, Text: n.Error(), Target: Target{Kind: "file", ID: p.File, Field: "answer." + n.Code}})
+		other, twice := first[file.SHA256]
+		if !twice {
+			first[file.SHA256] = file.Name
+			continue
+		}
+		w.askOfFile(file, notice.New("files-identical", other, file.Name).In(file.Name))
 	}
+}
+
+// askOfFile lists what is asked of a file, or what a person answered to it.
+func (w *work) askOfFile(file *File, n notice.Notice) {
+	if answer := file.Answers[n.Code]; answer != "" {
+		w.tell(notice.New("finding-answered", "A question on "+file.Name+" ("+n.Text+")", answer))
+		return
+	}
+	w.cell.Open = append(w.cell.Open, Open{Course: 2, Blocks: true, Missing: "an answer on " + file.Name, Text: n.Error(), Target: Target{Kind: "file", ID: file.ID, Field: "answer." + n.Code}})
 }
 
 // doubts lists the fields of a slip that are guesses or missing.

@@ -80,7 +80,7 @@ func TestCrossingsAskedAbout(t *testing.T) {
 	if c := only(t, s); !notice.Has(c.Notices, "derive-magnitude") || !c.Withheld || c.Summary != nil {
 		t.Errorf("a magnitude: %+v", c.Notices)
 	}
-	s = scalarPair("crossing of a level", nil, rows(40, at, wave), rows(40, at, wave), "m", "1")
+	s = scalarPair("crossing of a level", nil, rows(40, at, wave), rows(40, at, wave)+"\n", "m", "1")
 	c := only(t, s)
 	if !notice.Has(c.Notices, "derive-several") || !c.Withheld || len(c.Derived.Sides[0].Places) != 3 {
 		t.Errorf("three crossings: %+v", c.Notices)
