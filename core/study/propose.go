@@ -2,6 +2,7 @@ package study
 
 import (
 	"regexp"
+	"slices"
 	"strconv"
 	"strings"
 
@@ -126,13 +127,16 @@ var (
 	caseInName  = regexp.MustCompile(`(?:^|[^A-Za-z0-9])(C\d{1,3})(?:[^0-9]|$)`)
 	gridInName  = regexp.MustCompile(`(?:^|[^A-Za-z0-9])((?:G|grid)\d{1,3})(?:[^0-9]|$)`)
 	modelInName = regexp.MustCompile(`(?:^|[_\-. ])([A-Z])(?:[_\-. ]|$)`)
-	measured    = regexp.MustCompile(`(?i)(?:^|[^a-z])(exp|test|meas|measured|measurement|data|tunnel|taps|rig)(?:[^a-z]|$)`)
+	measured    = regexp.MustCompile(`(?i)(?:^|[^a-z])(exp|expt|exp ?data|exp ?new|experiment|experimental|test|meas|measured|measurement|data|tunnel|taps|rig)(?:[^a-z]|$)`)
 	uncertain   = regexp.MustCompile(`(?i)^(u|u[_ ].*|u\(.*|unc.*|err.*|.*error.*|.*uncert.*|sigma.*|std.*|\+/?-.*|±.*)$`)
 	history     = regexp.MustCompile(`(?i)^(iter.*|it|its|step.*|time.*|t)$`)
 	residuals   = regexp.MustCompile(`(?i)(?:^|[^a-z])(resid.*|res|continuity)(?:[^a-z]|$)`)
 	timing      = regexp.MustCompile(`(?i)^t(ime.*)?$`)
 	counting    = regexp.MustCompile(`(?i)^(n|cells|n_?cells|cell ?count|grid ?size|points|nodes|elements)$`)
-	spacingName = regexp.MustCompile(`(?i)^(h|\(?1/n\)?.*|sqrt.*|n\^.*|spacing)$`)
+	spacingName = regexp.MustCompile(`(?i)^(h|h ?[\^=].*|\(?1/n\)?.*|sqrt.*|n\^.*|spacing)$`)
+	coordinate  = regexp.MustCompile(`(?i)^(log\()?[xyzsr](\d|plus|[ _+/*\-(].*)?\)?$`)
+	coefficient = regexp.MustCompile(`(?i)^c_?[pfdlm]([ _,].*)?$`)
+	numbering   = regexp.MustCompile(`(?i)^(id|no\.?|nr\.?|number|index|row|tap|port)$`)
 )
 
 func guess(value string) Field {
@@ -159,11 +163,15 @@ func propose(file string, t tablefile.Table) Slip {
 			if u < 0 {
 				u = i
 			}
+		case x < 0 && size < 0 && fixed(t, i):
 		case x < 0 && size < 0:
 			x = i
 		case y < 0:
 			y = i
 		}
+	}
+	if x >= 0 && y >= 0 && drawn(t.Columns[x].Name, t.Columns[y].Name) {
+		x, y = y, x
 	}
 	p.Role = guess(role(file, t, size, u))
 	if p.Role.Value == Monitor {
@@ -199,6 +207,29 @@ func propose(file string, t tablefile.Table) Slip {
 		p.Quantity, p.Y.Unit, p.X.Unit = Field{}, Field{}, Field{} // of the run as a whole, whatever their unit
 	}
 	return p
+}
+
+// fixed reports whether a column before a coordinate is none along the curve:
+// the place of a profile, which is the same in all rows, or a running number.
+func fixed(t tablefile.Table, i int) bool {
+	c := t.Columns[i]
+	_, constant := c.Constant()
+	if !numbering.MatchString(c.Name) && !(constant && t.Rows() > 2 && coordinate.MatchString(c.Name)) {
+		return false
+	}
+	return slices.ContainsFunc(t.Columns[i+1:], func(o tablefile.Column) bool {
+		_, constant := o.Constant()
+		return coordinate.MatchString(o.Name) && !constant
+	})
+}
+
+// drawn reports whether the first column is the value by its name and the
+// second the station, as in profiles that are written as they are drawn.
+func drawn(first, second string) bool {
+	if coordinate.MatchString(first) || history.MatchString(first) {
+		return false
+	}
+	return coordinate.MatchString(second) || coefficient.MatchString(first) && !coefficient.MatchString(second)
 }
 
 // modelOf guesses the model from the file's name, else from the name without

@@ -1,8 +1,10 @@
 package study_test
 
 import (
+	"path"
 	"testing"
 
+	"weirmark/core/internal/reference"
 	"weirmark/core/study"
 )
 
@@ -38,5 +40,40 @@ func TestProposals(t *testing.T) {
 	p := s.Add("C2-B-G3-cf.csv", data, study.Read(study.File{Name: "a", Data: data}), "")[0]
 	if p.Case.Value != "C2" || p.Model.Value != "B" || p.Grid.Value != "G3" {
 		t.Errorf("case %q, model %q, grid %q from the name", p.Case.Value, p.Model.Value, p.Grid.Value)
+	}
+}
+
+// Tables of the NASA Turbulence Modeling Resource and how a practitioner would
+// use them: the place of a profile and a running number are no stations, a
+// profile may be written as it is drawn, a spacing is no value over grids.
+func TestProposalsForPublishedTables(t *testing.T) {
+	for _, row := range []struct{ file, role, x, y, u string }{
+		{"backstep/backstep_cfl3d_vel_sa.dat", study.Simulation, "y/H", "u/Uref", ""},
+		{"backstep/profiles.exp.dat", study.Reference, "y", "u", ""},
+		{"backstep/cf.exp.dat", study.Reference, "x", "cf", "error"},
+		{"backstep/cp.expnew.dat", study.Reference, "x", "cp", ""},
+		{"bump/sa/bump_u.dat", study.Simulation, "y-y0", "u", ""},
+		{"bump/sa/cp_bump.dat", study.Simulation, "x", "cp", ""},
+		{"bump/sa-five-grids/cf_convergence_sa.dat", study.GridValues, "", "C_f", ""},
+		{"bump/sst/force_convergence_sst.dat", study.GridValues, "", "C_L", ""},
+		{"flatplate/sa/cf_convergence.dat", study.GridValues, "", "C_f,x=0.97", ""},
+		{"flatplate/sa/flatplate_u.dat", study.Simulation, "y", "u", ""},
+		{"flatplate/sa/flatplate_u+y+.dat", study.Simulation, "log(y+)", "u+", ""},
+		{"flatplate/sa/mut_0.97.dat", study.Simulation, "y", "mut", ""},
+		{"flatplate/theory/sa-cf_cfl3d.dat", study.Simulation, "retheta", "cf", ""},
+		{"naca0012/CLCD_Ladson_expdata.dat", study.Reference, "alpha", "cl", ""},
+		{"naca0012/CP_Gregory_expdata.dat", study.Reference, "x/c", "cp", ""},
+		{"naca0012/n0012cp_cfl3d_sa.dat", study.Simulation, "x", "cp", ""},
+	} {
+		data := reference.Shared(t, "nasa-tmr/"+row.file)
+		name := path.Base(row.file)
+		for i, p := range study.New().Add(name, data, study.Read(study.File{Name: name, Data: data}), "") {
+			if i > 0 {
+				break
+			}
+			if p.Role.Value != row.role || p.X.Column.Value != row.x || p.Y.Column.Value != row.y || p.U.Column.Value != row.u {
+				t.Errorf("%s: %s, stations %q, values %q, uncertainty %q", row.file, p.Role.Value, p.X.Column.Value, p.Y.Column.Value, p.U.Column.Value)
+			}
+		}
 	}
 }

@@ -1,6 +1,7 @@
 package tablefile
 
 import (
+	"bytes"
 	"runtime"
 	"strings"
 	"testing"
@@ -36,6 +37,27 @@ func TestLongLines(t *testing.T) {
 		}
 		if spent := after.TotalAlloc - before.TotalAlloc; spent > 4*size {
 			t.Errorf("%s: %d MB were spent on %d MB", c.name, spent>>20, size>>20)
+		}
+	}
+}
+
+// TestHugeLines refuses a line of 200 MB and one of a million columns with a
+// reason, and spends little memory on them.
+func TestHugeLines(t *testing.T) {
+	for _, c := range []struct {
+		name string
+		size int
+	}{{"200 MB", 200 << 20}, {"a million columns", 2_000_000}} {
+		data := bytes.Repeat([]byte("1,"), c.size/2)
+		var before, after runtime.MemStats
+		runtime.ReadMemStats(&before)
+		f := Read(c.name, data, Options{})
+		runtime.ReadMemStats(&after)
+		if !f.Refused() || !notice.Has(f.Notices, "columns-many") {
+			t.Errorf("%s: %d tables, %.300v", c.name, len(f.Tables), f.Notices)
+		}
+		if spent := after.TotalAlloc - before.TotalAlloc; spent > 4<<20 {
+			t.Errorf("%s: %d bytes were spent", c.name, spent)
 		}
 	}
 }
