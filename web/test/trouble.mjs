@@ -36,6 +36,19 @@ async function writeLarge(name) {
   await file.close();
 }
 
+/** Notes the longest task of the page while the core is busy, where the browser tells of tasks. */
+function watchTasks() {
+  window.longestTask = 0;
+  if (PerformanceObserver.supportedEntryTypes.includes("longtask")) {
+    const tasks = new PerformanceObserver((all) => {
+      if (document.documentElement.dataset.state === "busy") {
+        all.getEntries().forEach((one) => (window.longestTask = Math.max(window.longestTask, Math.round(one.duration))));
+      }
+    });
+    tasks.observe({ type: "longtask" });
+  }
+}
+
 /** Bytes of memory of all programs that this one has started, theirs too. */
 function resident() {
   const rows = execFileSync("ps", ["-eo", "pid,ppid,rss", "--no-headers"]).toString().trim().split("\n").map((row) => row.trim().split(/\s+/).map(Number));
@@ -218,12 +231,15 @@ export async function onTrouble(on, file, served) {
       const before = resident();
       let most = before;
       const watch = setInterval(() => (most = Math.max(most, resident())), 200);
+      await person.page.evaluate(watchTasks);
       await field.uploadFile(name);
       await person.page.waitForFunction(() => document.documentElement.dataset.state === "ready" && [...document.querySelectorAll(".slip h3")].some((one) => one.textContent === "long-line.csv"), { timeout: 120_000 });
       await person.page.waitForFunction(() => document.querySelector(".message")?.innerText.includes("No copy is kept"), { timeout: 60_000 });
       clearInterval(watch);
+      const longest = await person.page.evaluate(() => window.longestTask);
+      holds(longest < 50, `while the file was read the page stood still for ${longest} ms`);
       holds(most - before < 4 * size, `the browser grew from ${Math.round(before / 1e6)} to ${Math.round(most / 1e6)} MB`);
-      return `the browser's programs grew by ${((most - before) / size).toFixed(1)} times the file`;
+      return `the browser's programs grew by ${((most - before) / size).toFixed(1)} times the file; no task of the page over 50 ms while it was read`;
     } finally {
       await rm(folder, { recursive: true, force: true });
     }
