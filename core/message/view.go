@@ -250,11 +250,16 @@ func (s *Session) view() (*View, error) {
 	return v, nil
 }
 
-// clashes lists, once each, the open findings of the third course that hold one
-// file against another: they are told beside the slips, before anything is
-// accepted.
+// clashes lists, once each, copies of a file and the open findings of the
+// third course that hold one file against another: they are told beside the
+// slips, before anything is accepted.
 func clashes(r *study.Report) []string {
 	list := []string{}
+	for _, n := range r.Notices {
+		if n.Code == "files-identical" {
+			list = append(list, n.Text)
+		}
+	}
 	for i := range r.Cells {
 		for _, o := range r.Cells[i].Open {
 			if o.Course == 2 && o.Target.Kind == "answer" && !slices.Contains(list, o.Text) {
