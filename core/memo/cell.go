@@ -26,7 +26,7 @@ func (b *builder) cell(i int, c study.Cell) Node {
 	s := b.openWith(2, cellID(i), names(c)...)
 	b.lacking = nil
 	for _, part := range [][]Node{
-		b.compared(i, c), b.reference(i, c), b.conditions(i, c), b.place(i, c), b.treatment(i, c), b.measures(i, c), b.scores(i, c), b.joint(i, c), b.crossings(i, c), b.derived(i, c),
+		b.compared(i, c), b.reference(i, c), b.conditions(i, c), b.place(i, c), b.treatment(i, c), b.measures(i, c), b.ordering(i, c), b.trend(i, c), b.scores(i, c), b.joint(i, c), b.crossings(i, c), b.derived(i, c),
 		b.figuresOf(c, ""), b.stations(i, c), b.excluded(i, c), b.settling(i, c), b.grids(i, c), b.sources(i, c), b.reduction(i, c), b.evidence(i, c), b.requirement(i, c), b.recorded(i, c), b.expected(c), b.openPoints(c),
 	} {
 		s.Nodes = append(s.Nodes, part...)

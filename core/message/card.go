@@ -468,6 +468,7 @@ func questionEntries(q *study.Question) []Entry {
 		entry("reference_id", "name of the reference", q.ReferenceID, study.Entered, []Option{}, "e.g. campaign and run"),
 		entry("resolution", "the step seen in the data", q.Resolution, study.Entered, []Option{{"", "not a source"}, {study.Counted, "counted as a source"}}, ""),
 		entry("no_input", "the inputs have no uncertainty because", q.NoInput, study.Entered, []Option{}, "empty: not decided"),
+		entry("baseline", "compare the change from case", q.Baseline, study.Entered, []Option{}, "a case with one value of the same quantity; empty: none"),
 		entry("condition", "condition", q.Condition, study.Entered, []Option{}, "e.g. α = 4.2°"),
 		entry("symbol", "symbol", q.Symbol, study.Entered, []Option{}, "e.g. Cd"),
 		entry("corrected.state", "for walls and supports the data are", q.Corrected.State, study.Entered, []Option{{"", "not known"}, {study.Corrected, "corrected"}, {study.Uncorrected, "uncorrected"}}, ""),
@@ -511,6 +512,7 @@ func scoreEntries(q *study.Question) EntryList {
 	list := []Entry{
 		entry("scale", "measures as parts of", a.Scale, []Option{{"", "the range of D, RMSE alone"}, {study.ScaleRange, "the range of D"}, {study.ScaleMean, "the mean of |D|"}, {study.ScaleSpeed, "the reference speed of the case"}, {study.ScalePressure, "the dynamic pressure of the case"}, {study.ScaleEntered, "an entered scale"}}, ""),
 		entry("percent", "E in percent of |D|", yes(a.Percent), asked, "at each station where |D| is large enough"),
+		entry("marine", "order of |E|, U_V and the requirement", yes(a.Marine), asked, "all at 95 %: one of six orders at each station"),
 		entry("percent_above", "where |D| exceeds this percentage of its largest value", typed(a.PercentAbove), free, "0: 2"),
 		entry("weights", "stations are weighted", a.Weights, free, "spacing, or a column of the reference; empty: all alike"),
 		entry("dispersion", "scores of the dispersion field", yes(a.Dispersion), asked, "FB, NMSE, FAC2, NAD, MG, VG: values that are not negative"),

@@ -372,6 +372,7 @@ func agreeTables(c *study.Cell) []Table {
 	if j := c.Joint; j != nil && !c.Scalar {
 		tables = append(tables, jointTable(j))
 	}
+	tables = append(tables, orderingTables(c)...)
 	tables = append(tables, scoreTables(c)...)
 	tables = append(tables, derivedTables(c)...)
 	tables = append(tables, curveTables(c)...)
@@ -441,6 +442,37 @@ func eigenvalueWords(j *study.Joint) string {
 		list[i] = text(v, 3)
 	}
 	return "; eigenvalues of V on the unit diagonal " + strings.Join(list, ", ")
+}
+
+// orderingTables lists the six orders of |E|, U_V and the requirement, and the
+// change from another case.
+func orderingTables(c *study.Cell) []Table {
+	var tables []Table
+	if m := c.Marine; m != nil {
+		t := Table{Title: "|E|, U_V = " + text(m.K, 3) + " u_val and the requirement U_reqd, all at 95 %; E = S − D", Head: []string{"order", "stations", "what it says"}, Rows: [][]string{}}
+		if m.E.Known() {
+			t.Title += ": E " + quantity.Signed(float64(m.E), 3) + ", U_V " + text(m.UV, 3) + ", U_reqd " + text(m.Required, 3) + c.UnitSuffix()
+		}
+		for _, o := range m.Orderings {
+			t.Rows = append(t.Rows, []string{o.Order, strconv.Itoa(o.N), o.Words})
+		}
+		tables = append(tables, t)
+	}
+	if r := c.Trend; r != nil {
+		common := "none"
+		if len(r.Common) > 0 {
+			common = strings.Join(r.Common, ", ")
+		}
+		u := float64(r.U)
+		t := Table{Title: "Change from case " + r.From + " (this case less that)", Head: []string{"", ""}, Rows: [][]string{
+			{"ΔS", quantity.Signed(float64(r.S), 3) + c.UnitSuffix()}, {"ΔD", quantity.Signed(float64(r.D), 3) + c.UnitSuffix()}, {"ΔS − ΔD", quantity.Signed(float64(r.E), 3) + c.UnitSuffix()},
+			{"its u", text(r.U, 3)}, {"its u, if no source were common to both cases", text(r.Apart, 3)}, {"one error in both cases", common}}}
+		if r.Lo.Known() {
+			t.Rows = append(t.Rows, []string{"± " + quantity.Typed(c.Choices.K) + " u", quantity.SignedLike(float64(r.Lo), u, 2) + " to " + quantity.SignedLike(float64(r.Hi), u, 2) + c.UnitSuffix()}, []string{"reading", r.Reading})
+		}
+		tables = append(tables, t)
+	}
+	return tables
 }
 
 // scoreTables lists the measures with their scales and criteria, and the

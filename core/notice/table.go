@@ -173,6 +173,7 @@ var table = map[string]row{
 	"weights-refused":  {Note, "The weights (%s) are negative, missing or all zero: no weighted measure was made. Correct them."},
 	"correlation-none": {Note, "%s: S or D does not vary over the stations, so there is no correlation. It was left out."},
 	"allowance-none":   {Note, "The hit rate of %s takes its allowance from u_D, which is not known: it was not computed. Give the uncertainty of the data."},
+	"trend-none":       {Note, "The change of %s from %q cannot be compared: there is no such other case with one value of this quantity in the same kind of unit. It was left out. Name another case."},
 	"models-stations":  {Stop, "Models %s and %s share %d of %d stations of %s. They were not set against each other. Compare them at the shared ones by choice, or not at all."},
 
 	// Findings that look like mistakes. Nothing is changed because of them.

@@ -245,6 +245,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		w.otherReferences()
 		w.scores()
 		w.judge()
+		w.trend()
 		w.draw()
 		w.treat()
 	}

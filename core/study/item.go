@@ -239,6 +239,8 @@ func (a *Scoring) enter(path, value string) (string, error) {
 		return yesNo(&a.Dispersion, value)
 	case "correlation":
 		return yesNo(&a.Correlation, value)
+	case "marine":
+		return yesNo(&a.Marine, value)
 	case "distribution":
 		return yesNo(&a.Distribution, value)
 	case "percent":

@@ -48,6 +48,7 @@ func (w *work) judge() {
 	}
 	outcome, at := adequacy.JudgeAll(rounded(e), rounded(u), w.choices.K, rounded(limits))
 	j.Outcome = string(outcome)
+	w.marine(e, limits)
 	j.Limit = w.step(limits[at])
 	if !w.cell.Scalar {
 		j.At = Number(w.xUnit.FromSI(w.x[w.tested[at]]))

@@ -32,7 +32,7 @@ type ingredients struct {
 	Recorded    []string     // times of the log entries that the question names
 	Names       []string     // of all questions, where a point of application is stated
 	Conditions  [][]Matching // of all questions, where a point of application is stated
-	Questions   []Question   // all, where a grid uncertainty is borrowed
+	Questions   []Question   // all, where a grid uncertainty is borrowed or a change from another case is compared
 	Alternative bool
 }
 
@@ -76,7 +76,9 @@ func (e *evaluation) key(q *Question, model string) string {
 }
 
 // borrows reports whether a cell of the question rests on another question.
-func (q *Question) borrows() bool { return q.Family != nil && q.Family.Borrow != nil }
+func (q *Question) borrows() bool {
+	return q.Family != nil && q.Family.Borrow != nil || q.Baseline != ""
+}
 
 // concerns reports whether a slip is one of those that a cell of the question
 // may be made of.

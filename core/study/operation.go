@@ -62,13 +62,16 @@ func (s *Study) Reveal(id, at string) error {
 	return nil
 }
 
+// newSource begins the name of a source until a person names it.
+const newSource = "source "
+
 // AddSource adds a line to the budget of a question.
 func (s *Study) AddSource(t Target, of, at string) error {
 	q := s.questionOf(t.ID)
 	if q == nil || (of != OfData && of != OfInput && of != OfNumerical) {
 		return refuse("a source of uncertainty", of)
 	}
-	q.Sources = append(q.Sources, Source{Name: "source " + strconv.Itoa(len(q.Sources)+1), Of: of, Basis: Absolute, Pattern: map[string]string{OfData: Common, OfInput: Common, OfNumerical: Independent}[of]})
+	q.Sources = append(q.Sources, Source{Name: newSource + strconv.Itoa(len(q.Sources)+1), Of: of, Basis: Absolute, Pattern: map[string]string{OfData: Common, OfInput: Common, OfNumerical: Independent}[of]})
 	s.log(at, "A source of "+of+" uncertainty of "+q.label()+" added", "", q.Revealed)
 	return nil
 }
@@ -245,7 +248,7 @@ var fieldNames = map[string]string{
 	"pattern": "pattern of the names",
 	"input":   "input of the run", "input_at": "value of the input", "upper.column": "column of the upper bar", "upper.unit": "unit of the upper bar", "bars_as": "what the bars hold",
 	"levels.facility": "column of the facility", "levels.day": "column of the day", "levels.rig": "column of the set-up", "levels.run": "column of the run",
-	"digitised": "record of the digitising", "no_input": "why the inputs have no uncertainty", "resolution": "resolution of the data", "flow_rate": "stated flow rate", "flow_rate_u": "uncertainty of the stated flow rate",
+	"digitised": "record of the digitising", "baseline": "case from which the change is compared", "scores.marine": "order of |E|, U_V and the requirement", "no_input": "why the inputs have no uncertainty", "resolution": "resolution of the data", "flow_rate": "stated flow rate", "flow_rate_u": "uncertainty of the stated flow rate",
 	"y.formula": "formula of values", "x.formula": "formula of stations", "datum": "datum of the pressure",
 	"form.name": "form of the values", "form.simulation": "form of the simulation", "form.data": "form of the data", "x_form.name": "form of the stations", "x_form.simulation": "stations of the simulation", "x_form.data": "stations of the data",
 	"corrected.state": "corrections of the data", "corrected.how": "how the data were corrected",
@@ -396,7 +399,7 @@ func (s *Study) text(t Target) *string {
 			"input": &q.Sources[i].Input, "unit": &q.Sources[i].Unit}[field]
 	}
 	if t.Kind == "question" {
-		return map[string]*string{"symbol": &q.Symbol, "condition": &q.Condition, "reference_id": &q.ReferenceID, "no_input": &q.NoInput}[t.Field]
+		return map[string]*string{"symbol": &q.Symbol, "condition": &q.Condition, "reference_id": &q.ReferenceID, "no_input": &q.NoInput, "baseline": &q.Baseline}[t.Field]
 	}
 	return nil
 }

@@ -124,6 +124,8 @@ type Cell struct {
 	Tried       []string      `json:"tried,omitempty"` // alternatives that were evaluated
 	Fragile     []Fragility   `json:"fragile"`         // alternatives that change an outcome word
 
+	Marine   *MarineLine    `json:"marine,omitempty"`   // where it is asked for
+	Trend    *TrendLine     `json:"trend,omitempty"`    // from another case, where it is asked for
 	Recorded []RecordedLine `json:"recorded,omitempty"` // stations, requirement and showing, in the order of the log
 
 	Known    string         `json:"known,omitempty"`    // whether the data were known when the simulation was made

@@ -280,6 +280,9 @@ type Question struct {
 	Resolution  string       `json:"resolution,omitempty"` // Counted: the resolution seen in the data is a source
 	Runs        []RunEntry   `json:"runs,omitempty"`
 	StandIn     *StandIn     `json:"stand_in,omitempty"`
+	// Baseline is a case with the same quantity: the change of a scalar from there
+	// is compared; empty: none.
+	Baseline string `json:"baseline,omitempty"`
 	// Derive asks for a scalar taken from the curves of the slips; nil compares
 	// the values as they are.
 	Derive  *Derivation  `json:"derive,omitempty"`
@@ -346,6 +349,7 @@ type Scoring struct {
 	Weights      string  `json:"weights,omitempty"`       // WeightSpacing, a column of the reference, or empty: all alike
 	Correlation  bool    `json:"correlation,omitempty"`   // R, R², slope and intercept
 	Distribution bool    `json:"distribution,omitempty"`  // limits of agreement, and the area between the distributions
+	Marine       bool    `json:"marine,omitempty"`        // the order of |E|, U_V and the requirement at 95 %
 	// Criteria are those that the scores are held against; nil: those of
 	// package metric.
 	Criteria []metric.Criterion `json:"criteria,omitempty"`

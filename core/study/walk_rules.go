@@ -229,7 +229,7 @@ var walkRules = []walkRule{
 	}},
 	{path: "requirement.u_num_reduction", name: "reduction of u_num", formula: "1 − u_num,needed / u_num", in: func(p spot) []string { return append(deciding("u_num")(p), "requirement.u_num_needed") }, calc: func(a args) float64 { return 1 - a.n(1)/a.n(0) }},
 
-	{path: "stations.*.percent", name: "E in percent of |D|", formula: "100 E / |D|", words: "with the sign that was chosen", in: from("@.e", "@.d"), calc: func(a args) float64 { return 100 * a.n(0) / math.Abs(a.n(1)) }},
+	{path: "stations.*.percent", name: "E in percent of |D|", formula: "100 E / |D|", in: from("@.e", "@.d"), calc: func(a args) float64 { return 100 * a.n(0) / math.Abs(a.n(1)) }},
 	{path: "stations.*.weight", name: "weight of the station", formula: "weight / Σ weights", words: "as the file states it, or the length that the station stands for", in: weightInputs, calc: weightAt},
 	{path: "treatment.anchors.*.x", name: "place of the support point", formula: "as entered; beyond a plane of symmetry 2 x_plane − x", in: anchorInputs("x"), calc: anchorAt},
 	{path: "treatment.anchors.*.value", name: "value of the support point", words: "as entered; beyond a plane of symmetry that of the row nearest to it", in: anchorInputs("y"), calc: first},
@@ -271,6 +271,8 @@ var walkRules = []walkRule{
 	{path: "num_sums.root", name: "u_num as root sum of squares", why: "Root mean square over the stations of the numerical sources summed by squares."},
 	{path: "num_sums.linear", name: "u_num as plain sum", why: "Root mean square over the stations of the numerical sources summed plainly."},
 
+	{path: "marine.**", name: "order of |E|, U_V and the requirement", why: "From |E|, u_val and the limit of each station, all at 95 %; how often each order occurs is counted."},
+	{path: "trend.**", name: "change from another case", why: "From S, D and the sources of this case and of the other; the sources that cancel stand beside it."},
 	{path: "recorded.*.in", name: "entry of the log", why: "It is the place itself."},
 	{path: "choices.**", name: "choice", why: "Chosen by a person; the log says when."},
 	{path: "grids.**", name: "grid study", why: "From the grids and values above it by the rule, or the entry, that stands beside it; its formula in the methods."},

@@ -434,6 +434,8 @@ export interface Cell {
   requirement: Judgement | null;
   tried?: string[];
   fragile: Fragility[] | null;
+  marine?: MarineLine;
+  trend?: TrendLine;
   recorded?: RecordedLine[];
   known?: string;
   evidence?: EvidenceLine[];
@@ -871,6 +873,27 @@ export interface Fragility {
   at?: number;
 }
 
+export interface MarineLine {
+  k: number | null;
+  e: number | null;
+  u_v: number | null;
+  required: number | null;
+  orderings: OrderingLine[] | null;
+}
+
+export interface TrendLine {
+  from: string;
+  s: number | null;
+  d: number | null;
+  e: number | null;
+  u: number | null;
+  apart: number | null;
+  lo: number | null;
+  hi: number | null;
+  reading: string;
+  common: string[] | null;
+}
+
 export interface RecordedLine {
   what: string;
   in: number;
@@ -1220,6 +1243,12 @@ export interface Way {
   cells?: number;
   cost?: number;
   readings?: number;
+}
+
+export interface OrderingLine {
+  order: string;
+  words: string;
+  n: number;
 }
 
 export interface LevelLine {
