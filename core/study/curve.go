@@ -23,6 +23,7 @@ type curve struct {
 	uPlus []float64 // of the upper side where the bars are two columns; u is then the lower
 	uOpen bool      // u is there but its coverage is not known
 	along string    // AlongArc or AlongArcPart where x is a length, else empty
+	taken bool      // the one value of another curve
 	left  int       // rows left out as repeats of a station
 	xUnit axis
 	yUnit axis

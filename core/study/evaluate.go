@@ -299,6 +299,7 @@ type work struct {
 	linePart []int     // number of the unbroken part of the simulation that answered each station
 	skipped  []float64 // stations that are not compared, in SI
 	anchors  []AnchorLine
+	takes    []takenSide // curves that scalars were taken from
 	refined  refinement.Result
 	gridU    []float64 // standard uncertainty from the grid study; nil where there is none
 	blocked  bool      // the grid study says that there is none

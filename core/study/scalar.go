@@ -215,7 +215,7 @@ func (w *work) derivedRuns(t *taking, finest derived.Scalar) []run {
 func scalarCurve(t *taking, c *curve, value float64) *curve {
 	slip := *c.slip
 	slip.X, slip.Y.Unit = ColumnUse{}, Field{Value: t.unit.symbol, By: slip.Y.Unit.By}
-	return &curve{slip: &slip, table: c.table, y: []float64{value}, yUnit: axis{unit: t.unit.Unit, known: true, name: c.yUnit.name, symbol: t.unit.symbol}}
+	return &curve{slip: &slip, table: c.table, taken: true, y: []float64{value}, yUnit: axis{unit: t.unit.Unit, known: true, name: c.yUnit.name, symbol: t.unit.symbol}}
 }
 
 // becomeScalar lets the cell go on as one of two values.

@@ -224,4 +224,5 @@ func (w *work) sides(t *taking, c *curve, from derived.Curve, side string, got d
 		line.Places = append(line.Places, DerivedPlace{X: Number(t.x.FromSI(p.X)), Rising: p.Rising, U: None, Chosen: i == got.Chosen})
 	}
 	w.cell.Derived.Sides = append(w.cell.Derived.Sides, line)
+	w.takes = append(w.takes, takenSide{t, c, from})
 }

@@ -135,7 +135,7 @@ type args struct {
 
 // n returns a single input.
 func (a args) n(i int) float64 {
-	if len(a.v[i]) == 0 {
+	if i >= len(a.v) || len(a.v[i]) == 0 {
 		return math.NaN()
 	}
 	return a.v[i][0]
@@ -148,6 +148,7 @@ type walkRule struct {
 	name    string
 	formula string
 	words   string
+	say     func(spot) string // words that depend on the place, instead of words
 	in      func(spot) []string
 	calc    func(args) float64
 	why     string
@@ -245,9 +246,8 @@ func (w *work) walk(path string) (Step, bool) {
 		return Step{Name: rule.called(path), Value: None, Again: None, Inputs: []StepInput{}, Why: "The report has no number there."}, true
 	}
 	s := Step{Name: rule.called(path), Value: Number(v), Unit: w.unitOfPath(path), Formula: rule.formula, Words: rule.words, Why: rule.why, Inputs: []StepInput{}, Again: None}
-	if strings.HasPrefix(path, "sources.") && len(at) == 2 {
-		line := w.parts[at[0]].line
-		s.Words = line.Name + ": " + line.Text + "; " + line.Origin
+	if rule.say != nil {
+		s.Words = rule.say(p)
 	}
 	if rule.in == nil {
 		return s, true
@@ -266,9 +266,6 @@ func (w *work) walk(path string) (Step, bool) {
 		s.Again, s.Agrees = Number(again), agrees
 		if math.IsNaN(again) {
 			s.Why = "No single formula tells the step back from this number; what it is made of stands in its words."
-			if g := w.cell.Grids; g != nil && g.Along && strings.HasPrefix(path, "grids.") {
-				s.Why = alongWhy
-			}
 		}
 	}
 	return s, true
@@ -409,8 +406,17 @@ func (w *work) placesOf(path string) []string {
 
 // lengthAt returns the number of members of the list at a path.
 func (w *work) lengthAt(path string) int {
-	if strings.HasPrefix(path, "sources.") && strings.HasSuffix(path, ".at") {
+	if at, ok := fits("sources.*.at", path); ok {
+		if at[0] < 0 || at[0] >= len(w.parts) { // kept apart from u_val
+			return 0
+		}
 		return len(w.x)
+	}
+	for _, column := range []string{"x", "y", "second"} {
+		if at, ok := fits("taken.*."+column, path); ok {
+			values, _ := w.takenPart(at[0], column)
+			return len(values)
+		}
 	}
 	if rest, ok := strings.CutPrefix(path, "read."); ok {
 		side, _, _ := strings.Cut(rest, ".")
@@ -440,6 +446,11 @@ func (w *work) valueAt(path string) (float64, bool) {
 			return 0, false
 		}
 		return float64(w.step(w.parts[at[0]].source.U[at[1]])), true
+	}
+	for _, column := range []string{"x", "y", "second"} {
+		if at, ok := fits("taken.*."+column+".*", path); ok {
+			return w.takenAt(at[0], column, at[1])
+		}
 	}
 	return numberOf(reach(reflect.ValueOf(w.cell), path))
 }

@@ -36,6 +36,9 @@ func readings(p spot) []string {
 	if !p.cell.Scalar {
 		return atRow("y")(p)
 	}
+	if taken := p.takenFrom("reference"); taken != nil {
+		return taken
+	}
 	return knownRows("ref", p.reference.y)
 }
 
@@ -58,7 +61,10 @@ const mostNeighbours = 3
 func simulationRows(p spot) []string {
 	list := []string{}
 	c := p.finest()
+	taken := p.takenFrom("simulation at the stations", "simulation")
 	switch {
+	case taken != nil:
+		list = append(list, taken...)
 	case p.cell.Scalar && c == p.grids:
 		list = append(list, read("grids", "y", largestKnown(p.sizes, c.y)))
 	case p.cell.Scalar:
@@ -479,41 +485,6 @@ func (a args) turning() float64 {
 	return n
 }
 
-// score repeats a measure over the stations.
-func (a args) score() float64 {
-	s, d := a.v[0], a.v[1]
-	ask := a.q.Scores
-	switch a.cell.Scores[a.spot.at[0]].Name {
-	case "RMSE / range of D":
-		return metric.Summarise(comparison.Error(s, d)).RMSE / (slices.Max(d) - slices.Min(d))
-	case "hit rate":
-		q, _ := metric.HitRate(s, d, ask.Fraction, ask.Allowance)
-		return q
-	case "geometric mean bias MG":
-		mg, _, _ := metric.Geometric(s, d)
-		return mg
-	case "geometric variance VG":
-		_, vg, _ := metric.Geometric(s, d)
-		return vg
-	}
-	if ask == nil {
-		return math.NaN()
-	}
-	r, err := metric.Dispersion(s, d, ask.Threshold)
-	if err != nil {
-		return math.NaN()
-	}
-	switch a.cell.Scores[a.spot.at[0]].Name {
-	case "fractional bias FB":
-		return r.FB
-	case "normalised mean square error NMSE":
-		return r.NMSE
-	case "within a factor of two, FAC2":
-		return r.FAC2
-	}
-	return math.NaN()
-}
-
 func (a args) hitRate() float64 {
 	allowance, _, asked := a.allowance(a.q.Scores)
 	if !asked {
@@ -683,6 +654,14 @@ func gridValue(p spot) []string {
 	if side == "grids" {
 		return []string{read(side, "y", row)}
 	}
+	if side == "run0" {
+		if taken := p.takenFrom("simulation at the stations", "simulation"); taken != nil {
+			return taken
+		}
+	}
+	if taken := p.takenFrom("simulation, grid " + p.cell.Grids.Points[p.at[0]].Name); taken != nil {
+		return taken
+	}
 	if c := p.curveOf(side); c != nil {
 		return knownRows(side, c.y)
 	}
@@ -690,19 +669,21 @@ func gridValue(p spot) []string {
 }
 
 // study repeats the grid study from its points.
-func (a args) study() refinement.Result {
+func (a args) study() refinement.Result { return a.studyWith(a.choices.rule()) }
+
+// studyBy does so by another rule.
+func (a args) studyBy(rule string) refinement.Result {
+	opt := a.choices.rule()
+	opt.Rule = rule
+	return a.studyWith(opt)
+}
+
+func (a args) studyWith(opt refinement.Options) refinement.Result {
 	values := make([]float64, len(a.v[0]))
 	for i, v := range a.v[0] {
 		values[i] = a.yUnit.ToSI(v)
 	}
-	return refinement.Study(a.v[1], values, int(a.n(3)), a.choices.rule())
-}
-
-func (a args) gridStandard() float64 {
-	if a.cell.Grids.Along {
-		return math.NaN()
-	}
-	return float64(a.step(a.study().StandardUncertainty(a.n(4))))
+	return refinement.Study(a.v[1], values, int(a.n(3)), opt)
 }
 
 // averaged are the stations that the lines of the sources are taken over.

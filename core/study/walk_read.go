@@ -22,6 +22,11 @@ func (w *work) curveOf(side string) *curve {
 	case "grids":
 		return w.grids
 	}
+	if number, ok := strings.CutPrefix(side, "take"); ok {
+		if n, err := strconv.Atoi(number); err == nil && n >= 0 && n < len(w.takes) {
+			return w.takes[n].curve
+		}
+	}
 	kinds := []struct{ prefix, role string }{{"monitor", Monitor}, {"balance", Balance}}
 	if number, ok := strings.CutPrefix(side, "run"); ok {
 		if n, err := strconv.Atoi(number); err == nil && n >= 0 && n < len(w.runs) {
@@ -99,23 +104,35 @@ func (w *work) readAt(path string) (float64, bool) {
 		return c.table.Columns[i].Values[row], true
 	}
 	own := strings.HasPrefix(side, "monitor") || strings.HasPrefix(side, "balance")
+	xUnit, yUnit := w.unitsOf(side)
 	switch {
 	case column == "cells" && strings.HasPrefix(side, "run"):
 		return w.cells(c.slip), true
 	case column == "x" && c.x != nil && own:
 		return c.x[row], true
 	case column == "x" && c.x != nil:
-		return w.xUnit.FromSI(inUnit(c.x, c.xUnit, w.xUnit)[row]), true
+		return xUnit.FromSI(inUnit(c.x, c.xUnit, xUnit)[row]), true
 	case column == "y" && strings.HasPrefix(side, "balance"):
 		return c.y[row], true
 	case column == "y":
-		return w.yUnit.FromSI(inUnit(c.y, c.yUnit, w.yUnit)[row]), true
+		return yUnit.FromSI(inUnit(c.y, c.yUnit, yUnit)[row]), true
 	case column == "u" && c.u != nil:
 		return float64(w.step(c.u[row])), true
 	case column == "size" && side == "grids" && row < len(w.sizes):
 		return w.sizes[row], true
 	}
 	return 0, false
+}
+
+// unitsOf are the units in which the rows of a side are told: of the cell, or
+// of the curve from which its scalar was taken.
+func (w *work) unitsOf(side string) (x, y unit) {
+	if number, ok := strings.CutPrefix(side, "take"); ok {
+		if n, err := strconv.Atoi(number); err == nil && n >= 0 && n < len(w.takes) {
+			return w.takes[n].taking.x, w.takes[n].taking.y
+		}
+	}
+	return w.xUnit, w.yUnit
 }
 
 // walkRead ends a walk at what is written in a file.
@@ -130,6 +147,11 @@ func (w *work) walkRead(path string) (Step, bool) {
 	if c.slip.Derive.Value == DeriveLift {
 		s.Origin = &Origin{File: name, Of: columnOf(c, column)}
 		s.Why = "The lift of the closed section, integrated from all rows of the table."
+		return s, true
+	}
+	if c.taken {
+		s.Origin = &Origin{File: name, Of: columnOf(c, column)}
+		s.Why = "The scalar of the curve in this file, taken as on the grid that is compared."
 		return s, true
 	}
 	if column == "cells" {
@@ -159,6 +181,7 @@ func (w *work) walkRead(path string) (Step, bool) {
 // does.
 func (w *work) converted(path string, written float64) float64 {
 	side, column, row, c := w.readPath(path)
+	xUnit, yUnit := w.unitsOf(side)
 	own := strings.HasPrefix(side, "monitor") || strings.HasPrefix(side, "balance")
 	if _, ok := tableColumn(c, column); ok || column == "size" {
 		return written
@@ -174,7 +197,7 @@ func (w *work) converted(path string, written float64) float64 {
 		if own {
 			return v
 		}
-		return w.xUnit.FromSI(v)
+		return xUnit.FromSI(v)
 	case "u":
 		return w.standard(c, row, written)
 	}
@@ -187,7 +210,7 @@ func (w *work) converted(path string, written float64) float64 {
 	if strings.HasPrefix(side, "balance") {
 		return v
 	}
-	return w.yUnit.FromSI(v)
+	return yUnit.FromSI(v)
 }
 
 // standard makes a written uncertainty of a row standard, in the unit of the
@@ -296,7 +319,11 @@ func (w *work) unitOfPath(path string) string {
 		return w.cell.Unit
 	case "outside":
 		return w.cell.XUnit
-	case "read":
+	case "taken", "read":
+		if side := strings.Split(path, ".")[1]; first == "taken" || strings.HasPrefix(side, "take") {
+			x, y := w.unitsOf("take" + strings.TrimPrefix(side, "take"))
+			return map[bool]string{true: x.symbol, false: y.symbol}[strings.Contains(path, ".x.")]
+		}
 		if strings.Contains(path, ".x.") {
 			return w.cell.XUnit
 		}

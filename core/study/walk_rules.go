@@ -9,21 +9,24 @@ import (
 
 	"weirmark/core/adequacy"
 	"weirmark/core/comparison"
+	"weirmark/core/derived"
 	"weirmark/core/metric"
 	"weirmark/core/plausibility"
 	"weirmark/core/profile"
 	"weirmark/core/quantity"
+	"weirmark/core/refinement"
+	"weirmark/core/settling"
 	"weirmark/core/uncertainty"
 )
 
 // Inputs that many rules share.
 var (
-	allE       = from("stations.*.e")
-	allSD      = from("stations.*.s", "stations.*.d")
-	allJoint   = from("stations.*.e", "sources.*.at.*", "stations.*.s")
-	gridPoints = from("grids.points.*.value", "grids.points.*.cells", "choices.formal", "choices.dimension")
-	judgedWhy  = "The judgement of the run gives it together with the class; the monitor's file and window stand beside it, the rule in the methods."
-	alongWhy   = "From the values of all runs at the stations by the rule of the grid study that stands beside it."
+	allE             = from("stations.*.e")
+	allSD            = from("stations.*.s", "stations.*.d")
+	allJoint         = from("stations.*.e", "sources.*.at.*", "stations.*.s")
+	gridPoints       = from("grids.points.*.value", "grids.points.*.cells", "choices.formal", "choices.dimension")
+	errorsAndSources = from("stations.*.e", "sources.*.at.*")
+	judgedWhy        = "The judgement of the run gives it together with the class; the monitor's file and window stand beside it, the rule in the methods."
 )
 
 // walkRules holds every number of a cell: how it is computed from which others,
@@ -59,7 +62,10 @@ var walkRules = []walkRule{
 		}
 		return math.NaN()
 	}},
-	{path: "sources.*.at.*", name: "standard uncertainty at the station", formula: "as its source says", in: sourceInputs, calc: sourceAt},
+	{path: "sources.*.at.*", name: "standard uncertainty at the station", formula: "as its source says", say: func(p spot) string {
+		line := p.parts[p.at[0]].line
+		return line.Name + ": " + line.Text + "; " + line.Origin
+	}, in: sourceInputs, calc: sourceAt},
 
 	{path: "outside.*", name: "station outside the simulation", in: func(p spot) []string { return p.rowOf(float64(p.cell.Outside[p.at[0]])) }, calc: first, words: "as read"},
 	{path: "stations_all", name: "stations of the reference", why: "The rows of the reference that hold a place and a value, those that a person excluded among them."},
@@ -142,7 +148,7 @@ var walkRules = []walkRule{
 	{path: "joint.station.reference", name: "95 % point", formula: "χ²_n, 95 %", in: from("@.n"), calc: chi95},
 	{path: "joint.turning", name: "stations that turn the conclusion when left out alone", in: allJoint, formula: "count", calc: (args).turning},
 
-	{path: "scores.*.value", name: "measure", words: "of S and D at the stations", formula: "as its name says; see the methods", in: allSD, calc: (args).score},
+	{path: "scores.*.value", name: "measure", words: "of S and D at the stations", formula: "as its name says; see the methods", in: scoreInputs, calc: (args).score},
 	{path: "scores.*.criteria.*.low", name: "lower limit of a criterion", why: "A limit of the field; its source stands beside it."},
 	{path: "scores.*.criteria.*.high", name: "upper limit of a criterion", why: "A limit of the field; its source stands beside it."},
 	{path: "regions.*.from", name: "beginning of the region", words: "as entered", in: regionEntry("from"), calc: first},
@@ -160,7 +166,28 @@ var walkRules = []walkRule{
 	{path: "crossings.sim.*.u", name: "standard uncertainty of the crossing", why: "u_num of the neighbouring stations, brought to the place by a straight line, over the slope of the simulation there."},
 	{path: "crossings.ref.*.u", name: "standard uncertainty of the crossing", why: "u_D of the neighbouring stations, brought to the place by a straight line, over the slope of the data there."},
 
-	{path: "monitors.**", name: "monitor", why: judgedWhy},
+	judgedBy("mean", "mean of the monitor", "Σ y / n over its window", func(m settling.Monitor) float64 { return m.Mean }),
+	judgedBy("u", "standard uncertainty that the monitor leaves", "by its class: s/√n_eff, half-range/√3, or U_iter/2", func(m settling.Monitor) float64 { return m.U }),
+	judgedBy("from", "beginning of the window", "first row behind the start-up, or of the whole cycles", func(m settling.Monitor) float64 { return m.Window[0] }),
+	judgedBy("to", "end of the window", "last row", func(m settling.Monitor) float64 { return m.Window[1] }),
+	judgedBy("drift", "drift", "slope of a straight fit over the end, times the length it is stated for, over the scale", func(m settling.Monitor) float64 { return m.Drift }),
+	judgedBy("change", "drift in the unit of the values", "slope times the length it is stated for", func(m settling.Monitor) float64 { return m.Drift * m.Scale }),
+	judgedBy("per", "length over which the drift is stated", "power of ten", func(m settling.Monitor) float64 { return m.Per }),
+	judgedBy("limit", "change that counts as small", "U_grid/10, or a thousandth of the scale", func(m settling.Monitor) float64 { return m.Limit }),
+	judgedBy("remaining", "change that remains", "by geometric extrapolation of the end", func(m settling.Monitor) float64 { return m.Remaining }),
+	judgedBy("period", "period of a cycle", "largest autocorrelation, or as entered", func(m settling.Monitor) float64 { return m.Period }),
+	judgedBy("cycles", "whole cycles in the window", "count", func(m settling.Monitor) float64 { return float64(m.Cycles) }),
+	judgedBy("half_range", "half of the range in the window", "(max y − min y)/2", func(m settling.Monitor) float64 { return m.HalfRange }),
+	sampledBy("start_up", "rows left out in front", "count", func(s *settling.Stat) float64 { return float64(s.StartUp) }),
+	sampledBy("rows", "rows averaged", "count", func(s *settling.Stat) float64 { return float64(s.Rows) }),
+	sampledBy("sd", "standard deviation of one row", "√(Σ (y − mean)² / (n − 1))", func(s *settling.Stat) float64 { return s.SD }),
+	sampledBy("tau", "correlation time", "step times the factor on the variance of the mean", func(s *settling.Stat) float64 { return s.Tau }),
+	sampledBy("independent", "independent samples", "n / τ", func(s *settling.Stat) float64 { return s.Independent }),
+	sampledBy("batches", "batches", "count", func(s *settling.Stat) float64 { return float64(s.Batch.Count) }),
+	sampledBy("u_batches", "standard uncertainty of the mean by batches", "s_batch / √batches", func(s *settling.Stat) float64 { return s.Batch.U }),
+	sampledBy("u_markov", "the same from successive rows alone", "s √((1 + r₁)/((1 − r₁) n))", func(s *settling.Stat) float64 { return s.UMarkov }),
+	{path: "monitors.*.sampling.share", name: "part of u_num that the averaging is", formula: "u / u_num, root mean square over the stations", in: from("stations.*.u_num"), why: "From u of the monitor above it."},
+	{path: "monitors.*.of_grid", name: "iteration over the grid", formula: "U_iter / U", words: "U_iter: 2 u, of iterates that keep changing half their range", in: func(p spot) []string { return from("@.u", "@.half_range", "grids.u")(p) }, calc: ofGrid},
 	{path: "monitors.*.x.*", name: "place of a drawn row", words: "as read", in: monitorRow("x"), calc: first},
 	{path: "monitors.*.y.*", name: "drawn value", words: "as read", in: monitorRow("y"), calc: first},
 	{path: "balances.*.in", name: "what enters", words: "last row of the balance", in: balanceRow("x"), calc: first},
@@ -175,28 +202,49 @@ var walkRules = []walkRule{
 	{path: "grids.dimension", name: "dimension of the grids", in: from("choices.dimension"), calc: first, words: "chosen"},
 	{path: "grids.formal", name: "formal order", in: from("choices.formal"), calc: first, words: "chosen"},
 	{path: "grids.k_num", name: "factor from U_num to u_num", in: from("choices.k_num"), calc: first, words: "chosen"},
-	{path: "grids.ratio", name: "ratio of changes R", formula: "(f₁ − f₂)/(f₂ − f₃)", in: gridPoints, calc: func(a args) float64 { return a.study().Ratio }},
-	{path: "grids.r21", name: "refinement ratio of the two finest grids", formula: "(N₁/N₂)^(1/dimension)", in: gridPoints, calc: func(a args) float64 { return a.study().R21 }},
-	{path: "grids.r32", name: "refinement ratio of the next two", formula: "(N₂/N₃)^(1/dimension)", in: gridPoints, calc: func(a args) float64 { return a.study().R32 }},
-	{path: "grids.order", name: "observed order p", formula: "p of the rule that stands beside it", words: "from the values on the grids", in: gridPoints, calc: func(a args) float64 { return a.study().Order }},
-	{path: "grids.extrapolated", name: "extrapolated value", formula: "(r^p f₁ − f₂)/(r^p − 1), or that of the rule", in: gridPoints, calc: func(a args) float64 { return a.yUnit.FromSI(a.study().Extrapolated) }},
-	{path: "grids.ea", name: "relative change of the two finest", formula: "|f₁ − f₂| / |f₁|", in: gridPoints, calc: func(a args) float64 { return a.study().Ea }},
-	{path: "grids.eext", name: "relative distance to the extrapolated value", formula: "|f₁ − f_ext| / |f_ext|", in: gridPoints, calc: func(a args) float64 { return a.study().Eext }},
-	{path: "grids.gci", name: "grid index", formula: "U / |f₁|", in: gridPoints, calc: func(a args) float64 { return a.study().GCI }},
-	{path: "grids.u", name: "grid uncertainty U, 95 %", formula: "U of the rule that stands beside it", in: gridPoints, calc: func(a args) float64 { return float64(a.step(a.study().U)) }},
-	{path: "grids.u_num", name: "u_num of the grid study", formula: "U / k_num; of oscillating values half their range / √3", in: func(p spot) []string { return append(gridPoints(p), "choices.k_num") }, calc: (args).gridStandard},
-	{path: "grids.next_cells", name: "cells of a grid that would resolve the requirement", formula: "N (u/u_needed)^(dimension/p)", in: from("requirement.u_val_needed", "grids.u_num", "grids.order"), why: "With the part of u_num that the requirement leaves to the grid; rounded to three digits."},
-	{path: "grids.next_cost", name: "its cost relative to the finest run", formula: "(cells/N)^(4/3)", in: from("@.next_cells"), why: "From the cells before they are rounded."},
-	{path: "grids.monotone", name: "stations that converge monotonically", why: alongWhy},
-	{path: "grids.non_monotone", name: "stations that do not", why: alongWhy},
-	{path: "grids.order_low", name: "lower quartile of the local orders", why: alongWhy},
-	{path: "grids.order_high", name: "upper quartile of the local orders", why: alongWhy},
+	ofGrids("ratio", "ratio of changes R", "(f₁ − f₂)/(f₂ − f₃)", func(_ args, r refinement.Result) float64 { return r.Ratio }, nil),
+	ofGrids("r21", "refinement ratio of the two finest grids", "(N₁/N₂)^(1/dimension)", func(_ args, r refinement.Result) float64 { return r.R21 }, func(_ args, l refinement.Local) float64 { return l.R21 }),
+	ofGrids("r32", "refinement ratio of the next two", "(N₂/N₃)^(1/dimension)", func(_ args, r refinement.Result) float64 { return r.R32 }, func(_ args, l refinement.Local) float64 { return l.R32 }),
+	ofGrids("order", "observed order p", "p of the values on the grids; along a curve the median of the local orders, kept between 0.5 and the formal order", func(_ args, r refinement.Result) float64 { return r.Order }, func(_ args, l refinement.Local) float64 { return l.Common }),
+	ofGrids("extrapolated", "extrapolated value", "(r^p f₁ − f₂)/(r^p − 1), or that of the rule", func(a args, r refinement.Result) float64 { return a.yUnit.FromSI(r.Extrapolated) }, nil),
+	ofGrids("ea", "relative change of the two finest", "|f₁ − f₂| / |f₁|", func(_ args, r refinement.Result) float64 { return r.Ea }, nil),
+	ofGrids("eext", "relative distance to the extrapolated value", "|f₁ − f_ext| / |f_ext|", func(_ args, r refinement.Result) float64 { return r.Eext }, nil),
+	ofGrids("gci", "grid index", "U / |f₁|", func(_ args, r refinement.Result) float64 { return r.GCI }, nil),
+	ofGrids("u", "grid uncertainty U, 95 %", "1.25 |f₁ − f₂|/(r^p − 1), or U of the rule", func(a args, r refinement.Result) float64 { return float64(a.step(r.U)) }, nil),
+	ofGrids("u_num", "u_num of the grid study", "U / k_num, of oscillating values half their range / √3; along a curve root mean square over the stations", func(a args, r refinement.Result) float64 {
+		return float64(a.step(r.StandardUncertainty(float64(a.cell.Grids.KNum))))
+	}, alongStandard),
+	ofGrids("monotone", "stations that converge monotonically", "count", nil, func(_ args, l refinement.Local) float64 { return float64(l.Monotone) }),
+	ofGrids("non_monotone", "stations that do not", "count", nil, func(_ args, l refinement.Local) float64 { return float64(l.NonMonotone) }),
+	ofGrids("order_low", "lower quartile of the local orders", "quartile", nil, func(_ args, l refinement.Local) float64 { return l.Low }),
+	ofGrids("order_high", "upper quartile of the local orders", "quartile", nil, func(_ args, l refinement.Local) float64 { return l.High }),
+	ofGrids("local.*.order", "observed order at the station", "p of the three values there", nil, localGrid(func(_ args, p refinement.LocalPoint) float64 { return p.Order })),
+	ofGrids("local.*.u", "grid uncertainty U at the station", "1.25 |f₁ − f₂|/(r^p − 1) with the common p, or as the class there asks", nil, localGrid(func(a args, p refinement.LocalPoint) float64 { return float64(a.step(p.U)) })),
+	ofGrids("rules.*.u", "U by the rule", "by the rule that stands beside it", func(a args, _ refinement.Result) float64 { return float64(a.step(a.otherRule().U)) }, nil),
+	ofGrids("rules.*.u_num", "u_num by the rule", "U / k_num", func(a args, _ refinement.Result) float64 {
+		return float64(a.step(a.otherRule().StandardUncertainty(float64(a.cell.Grids.KNum))))
+	}, nil),
+	ofGrids("fit.base", "value at zero spacing", "f₀ of f = f₀ + Σ a h^p", func(a args, r refinement.Result) float64 {
+		if r.Fit == nil {
+			return math.NaN()
+		}
+		return a.yUnit.FromSI(r.Fit.Base)
+	}, nil),
+	ofGrids("fit.terms.*.coefficient", "coefficient of the line behind U", "a of f = f₀ + Σ a h^p", fitTerm(func(a args, t refinement.Term) float64 { return float64(a.step(t.Coefficient)) }), nil),
+	ofGrids("fit.terms.*.power", "power of the line behind U", "p of f = f₀ + Σ a h^p", fitTerm(func(_ args, t refinement.Term) float64 { return t.Power }), nil),
+	{path: "grids.next_cells", name: "cells of a grid that would resolve the requirement", formula: "N (u/u_needed)^(dimension/p)", words: "u_needed: √(u_val,needed² − u_val² + u_num²); three digits", in: nextInputs, calc: func(a args) float64 { return quantity.Round(a.nextAgain().Cells, 3) }, direct: true},
+	{path: "grids.next_cost", name: "its cost relative to the finest run", formula: "(cells/N)^exponent", words: "from the cells before they are rounded", in: nextInputs, calc: func(a args) float64 { return a.nextAgain().Cost }},
+	{path: "grids.stated.u", name: "stated u_num", words: "as entered", in: from("entered.family.target"), calc: first},
+	{path: "grids.stated.cells", name: "cells of a grid that would reach it", formula: "N (u_num/u)^(dimension/p)", words: "three digits", in: nextInputs, calc: func(a args) float64 { return quantity.Round(a.nextAgain().Cells, 3) }, direct: true},
+	{path: "grids.stated.cost", name: "its cost relative to the finest run", formula: "(cells/N)^exponent", words: "from the cells before they are rounded", in: nextInputs, calc: func(a args) float64 { return a.nextAgain().Cost }},
+	{path: "grids.card.ratios.*.r", name: "ratio of the spacings of two grids", formula: "(N_fine/N_coarse)^(1/dimension)", in: ratioCells, calc: func(a args) float64 { return spacing(a.n(0)/a.n(1), int(a.n(2))) }},
 	{path: "grids.local.*.x", name: "station", in: func(p spot) []string { return from("stations." + strconv.Itoa(p.at[0]) + ".x")(p) }, calc: first, words: "the station"},
-	{path: "grids.local.*.order", name: "observed order at the station", why: alongWhy},
-	{path: "grids.local.*.u", name: "grid uncertainty U at the station", why: alongWhy},
 
 	{path: "sources.*.u", name: "standard uncertainty of the source", formula: "√(Σ u² / n)", words: "root mean square over the tested stations", in: func(p spot) []string { return from("sources." + strconv.Itoa(p.at[0]) + ".at.*")(p) }, calc: func(a args) float64 {
 		rows := a.averaged()
+		if len(a.v[0]) < len(a.x) { // it is kept apart from u_val
+			return math.NaN()
+		}
 		return math.Sqrt(squares(a.v[0], rows) / float64(len(rows)))
 	}},
 	{path: "sources.*.share", name: "share of the mean u_val²", formula: "Σ u² / Σ u_val²", in: func(p spot) []string {
@@ -229,6 +277,23 @@ var walkRules = []walkRule{
 	}},
 	{path: "requirement.u_num_reduction", name: "reduction of u_num", formula: "1 − u_num,needed / u_num", in: func(p spot) []string { return append(deciding("u_num")(p), "requirement.u_num_needed") }, calc: func(a args) float64 { return 1 - a.n(1)/a.n(0) }},
 
+	{path: "requirement.ways.*.now", name: "standard uncertainty of the source", words: "at the deciding station", formula: "|u|", in: wayNow, calc: func(a args) float64 {
+		if len(a.v) == 0 {
+			return math.NaN()
+		}
+		return math.Abs(a.n(0))
+	}},
+	{path: "requirement.ways.*.needed", name: "what it alone would have to be", formula: "√(u_val,needed² − u_val² + u²)", in: func(p spot) []string {
+		return append(deciding("u_val")(p), from("@.now", "requirement.u_val_needed")(p)...)
+	}, calc: func(a args) float64 {
+		u, _ := adequacy.PartNeeded(a.n(0), a.n(1), a.n(2))
+		return u
+	}},
+	{path: "requirement.ways.*.reduction", name: "reduction of the source", formula: "1 − needed / now", in: from("@.needed", "@.now"), calc: func(a args) float64 { return 1 - a.n(0)/a.n(1) }},
+	{path: "requirement.ways.*.readings", name: "readings that would do", formula: "⌈n (now/needed)²⌉", words: "0 where the source is no mean of readings", in: from("@.now", "@.needed"), calc: wayReadings, direct: true},
+	{path: "requirement.ways.*.cells", name: "cells of the grid that would do", words: "of the grid study", in: from("grids.next_cells"), calc: first},
+	{path: "requirement.ways.*.cost", name: "cost of its run", words: "of the grid study", in: from("grids.next_cost"), calc: first},
+
 	{path: "stations.*.percent", name: "E in percent of |D|", formula: "100 E / |D|", in: from("@.e", "@.d"), calc: func(a args) float64 { return 100 * a.n(0) / math.Abs(a.n(1)) }},
 	{path: "stations.*.weight", name: "weight of the station", formula: "weight / Σ weights", words: "as the file states it, or the length that the station stands for", in: weightInputs, calc: weightAt},
 	{path: "treatment.anchors.*.x", name: "place of the support point", formula: "as entered; beyond a plane of symmetry 2 x_plane − x", in: anchorInputs("x"), calc: anchorAt},
@@ -258,7 +323,33 @@ var walkRules = []walkRule{
 	{path: "application.place.points.*.at.*", name: "compared condition", words: "as entered", in: comparedAt, calc: first},
 	{path: "application.place.beyond", name: "distance of the point from what was compared", formula: "least distance to the hull of the comparisons, each condition as a part of its span", in: placeInputs, calc: func(a args) float64 { return a.located().Beyond }, direct: true},
 	{path: "application.place.distance", name: "distance to the nearest comparison", formula: "√Σ ((x − x_nearest)/span)²", in: placeInputs, calc: func(a args) float64 { return a.located().Distance }, direct: true},
-	{path: "measured.**", name: "measure", why: "A measure of S and D at the stations; its scale stands beside it, its formula in the methods."},
+	{path: "measured.*.value", name: "measure of E", formula: "as its name says, over the tested stations", in: allE, calc: func(a args) float64 {
+		return summaryOf(a.cell.Measured[a.spot.at[0]].Name, pick(a.v[0], a.tested))
+	}},
+	{path: "measured.*.u", name: "standard uncertainty of the measure", formula: "deviation of draws with V", words: "by sampling from a fixed seed", in: errorsAndSources, calc: measuredSpread(func(s metric.Spread) float64 { return s.U }), direct: true},
+	{path: "measured.*.floor", name: "floor of the measure", formula: "mean of the measure of draws about zero with V", words: "what the stated errors alone make", in: errorsAndSources, calc: measuredSpread(func(s metric.Spread) float64 { return s.Floor }), direct: true},
+	{path: "measured.*.floor_hi", name: "95 % point of the floor", formula: "quantile of the measure of draws about zero with V", in: errorsAndSources, calc: measuredSpread(func(s metric.Spread) float64 { return s.FloorHi }), direct: true},
+	takenBy("value", "scalar of the side", "as its kind says", func(t *taking, _ args, s derived.Scalar) float64 { return float64(t.value(s.Value)) }),
+	takenBy("u", "standard uncertainty of what the method leaves open", "√Σ u² of its choices", func(t *taking, _ args, s derived.Scalar) float64 { return float64(t.step(s.U())) }),
+	takenBy("rows", "rows that it was taken from", "count", func(_ *taking, _ args, s derived.Scalar) float64 { return float64(s.Rows) }),
+	takenBy("at", "place that it stands for", "as its kind says", func(t *taking, _ args, s derived.Scalar) float64 { return t.x.FromSI(s.At * t.length) }),
+	takenBy("edge", "velocity at the edge", "by the rule of the edge", func(t *taking, _ args, s derived.Scalar) float64 { return t.y.FromSI(s.Edge) }),
+	takenBy("overshoot", "overshoot over the edge", "(max u − u_e)/u_e", func(_ *taking, _ args, s derived.Scalar) float64 { return s.Overshoot }),
+	takenBy("gap", "gap of the contour", "distance of its ends, in lengths", func(_ *taking, _ args, s derived.Scalar) float64 { return s.Gap }),
+	takenBy("effects.*.change", "change by another choice of the method", "scalar with the other choice less the scalar", func(t *taking, a args, s derived.Scalar) float64 {
+		return float64(t.step(s.Effects[a.spot.at[1]].Change))
+	}),
+	takenBy("effects.*.u", "standard uncertainty that it stands for", "part of the change", func(t *taking, a args, s derived.Scalar) float64 {
+		return float64(t.step(s.Effects[a.spot.at[1]].Part()))
+	}),
+	takenBy("places.*.x", "candidate of the event", "x₁ + (x₂ − x₁) y₁/(y₁ − y₂)", func(t *taking, a args, s derived.Scalar) float64 { return t.x.FromSI(s.Places[a.spot.at[1]].X) }),
+	{path: "derived.sides.*.places.*.u", name: "standard uncertainty of the candidate", why: "That of the values there over the slope."},
+	{path: "derived.effect", name: "effect of the stations on the simulation", formula: "at all rows − at the stations", in: func(p spot) []string {
+		return append(p.takenFrom("simulation at all its rows"), p.takenFrom("simulation at the stations")...)
+	}, calc: func(a args) float64 { return a.n(0) - a.n(1) }},
+	{path: "taken.*.x.*", name: "place of the curve", words: "a row, or a station of the data", in: takenRow, calc: first},
+	{path: "taken.*.y.*", name: "value of the curve", words: "a row, or between rows", in: takenRow, calc: takenValue},
+	{path: "taken.*.second.*", name: "second column of the curve", why: "As read from the second column, between rows where the place is none."},
 	{path: "derived.**", name: "derived value", why: "From the rows of the curves of both sides by the definition that stands beside it, by the same code."},
 	{path: "inputs.**", name: "input", why: "Entered, or from pairs of runs; where it comes from stands beside it."},
 	{path: "members.**", name: "sampled runs", why: "From the runs of the sample, each a file of its own."},
@@ -268,8 +359,8 @@ var walkRules = []walkRule{
 	{path: "bounding.**", name: "u_D that would make |E| = k u_val", why: "From |E| and the other parts of u_val; no statement rests on it."},
 	{path: "residuals.**", name: "residual of the run", why: judgedWhy},
 	{path: "round_off.**", name: "effect of round-off", why: "From the two runs that are set against each other."},
-	{path: "num_sums.root", name: "u_num as root sum of squares", why: "Root mean square over the stations of the numerical sources summed by squares."},
-	{path: "num_sums.linear", name: "u_num as plain sum", why: "Root mean square over the stations of the numerical sources summed plainly."},
+	{path: "num_sums.root", name: "u_num as root sum of squares", formula: "√(Σ u²)", words: "root mean square over the stations", in: numericalParts, calc: summedBy(math.Hypot)},
+	{path: "num_sums.linear", name: "u_num as plain sum", formula: "Σ u", words: "root mean square over the stations", in: numericalParts, calc: summedBy(func(a, b float64) float64 { return a + b })},
 
 	{path: "marine.**", name: "order of |E|, U_V and the requirement", why: "From |E|, u_val and the limit of each station, all at 95 %; how often each order occurs is counted."},
 	{path: "trend.**", name: "change from another case", why: "From S, D and the sources of this case and of the other; the sources that cancel stand beside it."},
