@@ -152,7 +152,8 @@ type walkRule struct {
 	in      func(spot) []string
 	calc    func(args) float64
 	why     string
-	direct  bool // from the inputs as they are: of draws, or of a function that is found by steps, the rounding of an input cannot be followed
+	search  float64 // of a direct one, the part to which a search finds it again, where that is more than 1e-8
+	direct  bool    // from the inputs as they are: of draws, or of a function that is found by steps, the rounding of an input cannot be followed
 }
 
 // from lists inputs by their paths in the cell; @ stands for the object that
@@ -285,7 +286,7 @@ func (r *walkRule) again(p spot, v float64, inputs [][]float64) (got float64, ag
 	}
 	if n > mostVaried || r.direct { // only compared as they are
 		got = r.calc(args{p, inputs})
-		return got, math.Abs(got-v) <= 1e-8*math.Abs(v)
+		return got, math.Abs(got-v) <= max(1e-8, r.search)*math.Abs(v)
 	}
 	printed := make([][]float64, len(inputs))
 	for i, list := range inputs {
@@ -338,9 +339,25 @@ func (w *work) walkList(path string) (Step, bool) {
 			break
 		}
 		v, _ := w.valueAt(p)
-		s.Inputs = append(s.Inputs, StepInput{Path: p, Name: w.nameOf(p), Value: Number(v), N: 1})
+		s.Inputs = append(s.Inputs, StepInput{Path: p, Name: w.nameOf(p) + w.placeOf(p), Value: Number(v), N: 1})
 	}
 	return s, true
+}
+
+// placeOf tells the members of a list apart: by their station, or their line.
+func (w *work) placeOf(path string) string {
+	if at, ok := fits("stations.*."+path[strings.LastIndex(path, ".")+1:], path); ok && !w.cell.Scalar {
+		return " at " + w.place(w.x[at[0]])
+	}
+	if at, ok := fits("sources.*.at.*", path); ok && !w.cell.Scalar {
+		return " at " + w.place(w.x[at[1]])
+	}
+	if rest, ok := strings.CutPrefix(path, "read."); ok {
+		if _, _, row, c := w.readPath(rest); c != nil && !c.taken {
+			return ", line " + strconv.Itoa(c.table.RowLine(row))
+		}
+	}
+	return ""
 }
 
 // nameOf names what a path leads to.
