@@ -17,7 +17,7 @@ var inputWords = map[string]string{
 // evidence prints what stands behind the sources of a cell.
 func (b *builder) evidence(i int, c study.Cell) []Node {
 	var nodes []Node
-	for _, part := range []func(int, study.Cell) []Node{b.inputs, b.members, b.shared, b.bound, b.replicates, b.resolution, b.consistency, b.sampled, b.bounding, b.quality, b.degrees} {
+	for _, part := range []func(int, study.Cell) []Node{b.inputs, b.members, b.distributions, b.shared, b.bound, b.replicates, b.resolution, b.consistency, b.sampled, b.bounding, b.quality, b.degrees} {
 		nodes = append(nodes, part(i, c)...)
 	}
 	return nodes
@@ -57,6 +57,23 @@ func (b *builder) members(i int, c study.Cell) []Node {
 	words = append(words, say(" (root mean square), their mean differs from the compared run by up to ")...)
 	words = append(words, withUnit(signed(m.Mean, 2, at("mean")), c.Unit)...)
 	return []Node{paragraph(append(words, say(". Their covariance, of rank {} at most, is in *V* as it is.", count(m.Rank, at("rank")))...)...)}
+}
+
+func (b *builder) distributions(i int, c study.Cell) []Node {
+	l := c.Distributions
+	if l == nil {
+		return nil
+	}
+	at := func(name string) string { return fmt.Sprintf("cells.%d.distributions.%s", i, name) }
+	words := say("{}: between the distribution functions of *S* ({} of the simulation) and of *D* ({} of the data) lies an area of ", strong("As distributions"), count(l.Runs, at("runs")), count(l.Readings, at("readings")))
+	words = append(words, withUnit(digits(l.Area, 2, at("area")), c.Unit)...)
+	words = append(words, say("; their means differ by ")...)
+	words = append(words, withUnit(signed(l.Shift, 2, at("shift")), c.Unit)...)
+	along := "."
+	if !c.Scalar {
+		along = " (means over the stations)."
+	}
+	return []Node{paragraph(append(words, say(along+" An area that is the difference of the means tells of a shift alone; a larger one of another scatter too. No form of the distributions is taken.")...)...)}
 }
 
 func (b *builder) shared(i int, c study.Cell) []Node {

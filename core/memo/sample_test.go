@@ -62,8 +62,10 @@ func taps(model string, e []float64, joint study.Joint, requirement *study.Judge
 		Joint:     &joint,
 		InputForm: study.InputsCounted,
 		Members:   &study.MemberLine{N: 12, U: .0031, Mean: -.00123, Rank: 11},
-		Shared:    []study.SharedLine{{Source: "dynamic pressure", U: .0075, Left: .00021}},
-		Bound:     &study.BoundLine{Half: .0042, At: .43},
+
+		Distributions: &study.DistributionLine{Runs: 12, Readings: 7, Area: .00147, Shift: -.00123},
+		Shared:        []study.SharedLine{{Source: "dynamic pressure", U: .0075, Left: .00021}},
+		Bound:         &study.BoundLine{Half: .0042, At: .43},
 		Replicates: &study.ReplicateLine{Readings: 72, Stations: 24, Of: "mean", Counts: "day", U: .0061, Degrees: 2, S: .0044, Plain: .0025,
 			Levels: []study.LevelLine{{Name: "day", Groups: 3, Degrees: 2, Deviation: .0101}, {Name: "repeated reading", Groups: 15, Degrees: 12, Deviation: .0034}}},
 		Resolution:  &study.ResolutionLine{Step: .0125, U: .0036084392},

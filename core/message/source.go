@@ -259,6 +259,9 @@ func furtherRows(c *study.Cell) [][]string {
 	if m := c.Members; m != nil {
 		add("deviation of "+quantity.Counted(m.N, "run")+" with sampled inputs", text(m.U, 2)+c.UnitSuffix(), "their mean differs by up to "+quantity.Signed(float64(m.Mean), 2)+"; rank "+strconv.Itoa(m.Rank)+" at most")
 	}
+	if l := c.Distributions; l != nil {
+		add("area between the distributions of S and D", text(l.Area, 2)+c.UnitSuffix(), quantity.Counted(l.Runs, "run")+" against "+quantity.Counted(l.Readings, "reading")+"; their means differ by "+quantity.Signed(float64(l.Shift), 2))
+	}
 	if b := c.Bound; b != nil {
 		add("half-width of sources known as intervals", text(b.Half, 2)+c.UnitSuffix(), "widens the interval of the model error; not in u_val")
 	}

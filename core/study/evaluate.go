@@ -243,6 +243,7 @@ func (e *evaluation) workWith(w *work) Cell {
 		w.sample()
 		w.doubtComparison()
 		w.otherReferences()
+		w.distributions()
 		w.scores()
 		w.judge()
 		w.trend()
@@ -296,21 +297,22 @@ type work struct {
 	rows []int // of the reference, one a station
 	x, s, d,
 	uInterp []float64
-	linePart []int     // number of the unbroken part of the simulation that answered each station
-	skipped  []float64 // stations that are not compared, in SI
-	anchors  []AnchorLine
-	takes    []takenSide // curves that scalars were taken from
-	refined  refinement.Result
-	gridU    []float64 // standard uncertainty from the grid study; nil where there is none
-	blocked  bool      // the grid study says that there is none
-	floor    []float64 // standard uncertainty by rounding at the stations; nil where no second run shows it
-	averages []average // of unsteady runs that count in u_num
-	parts    []part
-	uD, uNum []float64
-	uInput   []float64
-	uVal     []float64
-	tested   []int // stations with a known u_val
-	joined   []int // of these, the stations of the joint statistic: every reading once
+	linePart    []int     // number of the unbroken part of the simulation that answered each station
+	skipped     []float64 // stations that are not compared, in SI
+	anchors     []AnchorLine
+	sampledRuns [][]float64 // runs with sampled inputs, at the stations
+	takes       []takenSide // curves that scalars were taken from
+	refined     refinement.Result
+	gridU       []float64 // standard uncertainty from the grid study; nil where there is none
+	blocked     bool      // the grid study says that there is none
+	floor       []float64 // standard uncertainty by rounding at the stations; nil where no second run shows it
+	averages    []average // of unsteady runs that count in u_num
+	parts       []part
+	uD, uNum    []float64
+	uInput      []float64
+	uVal        []float64
+	tested      []int // stations with a known u_val
+	joined      []int // of these, the stations of the joint statistic: every reading once
 
 	unknown []string     // sides with a source that is marked as unknown
 	aparts  []SourceLine // sources known as intervals only

@@ -269,6 +269,7 @@ func (w *work) addMembers(c *curve) {
 		w.need(2, true, "two runs with sampled inputs", slipTarget(c.slip, "y.column"), "members-few", file, len(runs))
 		return
 	}
+	w.sampledRuns = runs
 	u := uncertainty.Combine(len(w.x), sources).Total()
 	difference := 0.0
 	base := w.atStations(w.finest())

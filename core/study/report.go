@@ -131,17 +131,18 @@ type Cell struct {
 	Known    string         `json:"known,omitempty"`    // whether the data were known when the simulation was made
 	Evidence []EvidenceLine `json:"evidence,omitempty"` // expected for the recorded use
 
-	Inputs      []InputLine       `json:"inputs,omitempty"`
-	InputForm   string            `json:"input_form,omitempty"` // InputsCounted or InputsNominal, where compared
-	Members     *MemberLine       `json:"members,omitempty"`    // runs with sampled inputs
-	Shared      []SharedLine      `json:"shared,omitempty"`     // sources that act on both sides
-	Bound       *BoundLine        `json:"bound,omitempty"`      // what sources known as intervals do
-	Sampled     *SampledLine      `json:"sampled,omitempty"`    // the interval of the model error by sampling
-	Replicates  *ReplicateLine    `json:"replicates,omitempty"`
-	Consistency []ConsistencyLine `json:"consistency,omitempty"`
-	Resolution  *ResolutionLine   `json:"resolution,omitempty"` // of the data, where it is counted or too coarse
-	Quality     []QualityLine     `json:"quality,omitempty"`    // card of the case; empty where nothing was entered
-	Bounding    *Bounding         `json:"bounding,omitempty"`   // what u_D would change, where it is unknown
+	Inputs        []InputLine       `json:"inputs,omitempty"`
+	InputForm     string            `json:"input_form,omitempty"`    // InputsCounted or InputsNominal, where compared
+	Members       *MemberLine       `json:"members,omitempty"`       // runs with sampled inputs
+	Distributions *DistributionLine `json:"distributions,omitempty"` // where either side is more than one value
+	Shared        []SharedLine      `json:"shared,omitempty"`        // sources that act on both sides
+	Bound         *BoundLine        `json:"bound,omitempty"`         // what sources known as intervals do
+	Sampled       *SampledLine      `json:"sampled,omitempty"`       // the interval of the model error by sampling
+	Replicates    *ReplicateLine    `json:"replicates,omitempty"`
+	Consistency   []ConsistencyLine `json:"consistency,omitempty"`
+	Resolution    *ResolutionLine   `json:"resolution,omitempty"` // of the data, where it is counted or too coarse
+	Quality       []QualityLine     `json:"quality,omitempty"`    // card of the case; empty where nothing was entered
+	Bounding      *Bounding         `json:"bounding,omitempty"`   // what u_D would change, where it is unknown
 
 	Residuals []ResidualLine `json:"residuals"`
 	RoundOff  *RoundOffLine  `json:"round_off"` // null where no second run of another precision is given

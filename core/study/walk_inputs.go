@@ -42,6 +42,16 @@ func readings(p spot) []string {
 	return knownRows("ref", p.reference.y)
 }
 
+// distributionInputs are the one value of the simulation and the readings of
+// the data; of sampled runs, each a row or column of a file of its own, there
+// is no such list.
+func distributionInputs(p spot) []string {
+	if !p.cell.Scalar || p.sampledRuns != nil {
+		return nil
+	}
+	return append([]string{"stations.0.s"}, readings(p)...)
+}
+
 // knownRows lists the values of a side that are numbers.
 func knownRows(side string, y []float64) []string {
 	var list []string

@@ -353,6 +353,25 @@ var walkRules = []walkRule{
 	{path: "derived.**", name: "derived value", why: "From the rows of the curves of both sides by the definition that stands beside it, by the same code."},
 	{path: "inputs.**", name: "input", why: "Entered, or from pairs of runs; where it comes from stands beside it."},
 	{path: "members.**", name: "sampled runs", why: "From the runs of the sample, each a file of its own."},
+	{path: "distributions.runs", name: "runs of the simulation", why: "One, or the runs with sampled inputs."},
+	{path: "distributions.readings", name: "readings of the data", formula: "count", in: distributionInputs, calc: func(a args) float64 {
+		if len(a.v) < 2 {
+			return math.NaN()
+		}
+		return float64(len(a.v) - 1)
+	}},
+	{path: "distributions.area", name: "area between the distributions of S and D", formula: "∫ |F_S − F_D|", in: distributionInputs, calc: func(a args) float64 {
+		if len(a.v) < 2 {
+			return math.NaN()
+		}
+		return metric.Area(a.v[0], slices.Concat(a.v[1:]...))
+	}},
+	{path: "distributions.shift", name: "difference of the means", formula: "mean S − mean D", in: distributionInputs, calc: func(a args) float64 {
+		if len(a.v) < 2 {
+			return math.NaN()
+		}
+		return mean(a.v[0]) - mean(slices.Concat(a.v[1:]...))
+	}},
 	{path: "shared.**", name: "source that acts on both sides", why: "Root mean squares over the stations of the source, and of what is left of it in E."},
 	{path: "bound.**", name: "interval beside u_val", why: "The sum of the sources that are known as an interval only."},
 	{path: "sampled.**", name: "sampled model error", why: "By draws from the stated distributions from a fixed seed; it stands beside the interval E ± k u_val."},

@@ -442,6 +442,7 @@ export interface Cell {
   inputs?: InputLine[];
   input_form?: string;
   members?: MemberLine;
+  distributions?: DistributionLine;
   shared?: SharedLine[];
   bound?: BoundLine;
   sampled?: SampledLine;
@@ -924,6 +925,13 @@ export interface MemberLine {
   u: number | null;
   mean: number | null;
   rank: number;
+}
+
+export interface DistributionLine {
+  runs: number;
+  readings: number;
+  area: number | null;
+  shift: number | null;
 }
 
 export interface SharedLine {
