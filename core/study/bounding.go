@@ -16,14 +16,10 @@ func (w *work) bounding() {
 	rest := w.covariance(w.parts, all(len(w.x))).Total()
 	b := &Bounding{What: "sign", UD: None, At: None}
 	kept := make([]float64, len(rest)) // the distance that k u_val may fill
-	if r := w.q.Requirement; r != nil {
+	if r := w.q.Requirement; r.set() {
 		b.What, b.Word = "requirement", Shown
 		for i := range kept {
-			limit := w.yUnit.StepToSI(r.Value)
-			if r.Percent {
-				limit = math.Abs(w.d[i]) * r.Value / 100
-			}
-			kept[i] = limit - math.Abs(w.s[i]-w.d[i]) - w.boundAt(i)
+			kept[i] = w.limit(r, i) - math.Abs(w.s[i]-w.d[i]) - w.boundAt(i)
 		}
 	} else {
 		b.Word = SignResolved

@@ -10,6 +10,7 @@ import (
 	"weirmark/core/notice"
 	"weirmark/core/quantity"
 	"weirmark/core/station"
+	"weirmark/core/tablefile"
 	"weirmark/core/uncertainty"
 )
 
@@ -141,15 +142,18 @@ func (w *work) replicates() {
 	}
 	readings := known(inUnit(c.y, c.yUnit, w.yUnit))
 	if len(readings) < 2 {
-		if c.u != nil && len(c.u) == 1 {
-			p := w.add(OfData, "column "+c.slip.U.Column.Value, coverageWords(c.slip.UFactor.Value), "stated in "+w.e.study.fileName(c.slip), c.u, false, c.uOpen)
+		if row := slices.IndexFunc(c.y, func(v float64) bool { return !math.IsNaN(v) }); row >= 0 && row < len(c.u) {
+			p := w.add(OfData, "column "+c.slip.U.Column.Value, coverageWords(c.slip.UFactor.Value), "stated in "+w.e.study.fileName(c.slip), c.u[row:row+1:row+1], false, c.uOpen)
 			if c.uPlus == nil {
 				p.made = madeOfColumn
 			} else {
-				w.twoSided(p, c.u, c.uPlus)
+				w.twoSided(p, []float64{c.u[row]}, []float64{c.uPlus[row]})
 			}
 		}
 		return
+	}
+	if u := known(c.u); len(u) > 0 {
+		w.ofReadings(c, rms(u), len(u))
 	}
 	if w.leveled(c, inUnit(c.y, c.yUnit, w.yUnit)) {
 		return
@@ -160,6 +164,16 @@ func (w *work) replicates() {
 	p.degrees, p.readings = float64(len(readings)-1), len(readings)
 	p.made = madeOfReadings
 	w.fewReadings(len(readings))
+}
+
+// ofReadings takes what is stated of each of several readings. It is not divided
+// by their number: what one instrument does to all of them does not average out.
+func (w *work) ofReadings(c *curve, u float64, n int) {
+	if c.uPlus != nil {
+		u = max(u, rms(known(c.uPlus)))
+	}
+	text := coverageWords(c.slip.UFactor.Value) + ", root mean square over " + quantity.Counted(n, "reading") + ", not divided by their number"
+	w.add(OfData, "column "+c.slip.U.Column.Value, text, "stated in "+w.e.study.fileName(c.slip), []float64{u}, false, c.uOpen)
 }
 
 // fewReadings tells the factor that so few readings need.
@@ -395,14 +409,18 @@ func (w *work) sourceColumn(s *Source) ([]float64, error) {
 			if s.Of == OfNumerical {
 				w.tell(notice.New("u-num-column", column.Name, "simulation"))
 			}
+			values, err := w.columnValues(s, run, column, all(len(column.Values)))
+			if err != nil {
+				return nil, err
+			}
 			if run.scalar() {
-				return steps(column.Values, w.yUnit, []int{0}), nil
+				return []float64{values[max(w.scalarRow(run), 0)]}, nil
 			}
 			x := inUnit(run.x, run.xUnit, w.xUnit)
-			got := station.Resample(w.e.study.fileName(run.slip), run.xUnit.name, x, column.Values, w.x, w.policy())
+			got := station.Resample(w.e.study.fileName(run.slip), run.xUnit.name, x, values, w.x, w.policy())
 			u := uncertainty.Constant(len(w.x), math.NaN())
 			for j, i := range got.Kept {
-				u[i] = w.yUnit.StepToSI(got.S[j])
+				u[i] = got.S[j]
 			}
 			return u, nil
 		}
@@ -411,11 +429,9 @@ func (w *work) sourceColumn(s *Source) ([]float64, error) {
 	if err != nil {
 		return nil, err
 	}
-	u := steps(column.Values, w.rawUnit(), w.rows)
-	if slope := w.reference.slope; slope != nil {
-		for j, i := range w.rows {
-			u[j] = float64(u[j] * math.Abs(slope[i]))
-		}
+	u, err := w.columnValues(s, w.reference, column, w.rows)
+	if err != nil {
+		return nil, err
 	}
 	for j, v := range u {
 		if v < 0 {
@@ -425,20 +441,50 @@ func (w *work) sourceColumn(s *Source) ([]float64, error) {
 	return u, nil
 }
 
-// rawUnit is the unit of the reference as its table holds it, before a form.
-func (w *work) rawUnit() unit {
-	if w.reference.slope == nil {
-		return w.yUnit
+// columnValues returns a column of half-widths of a side at some of its rows, in
+// SI: in the unit that the column states, else in that of the values as they
+// were read; or in percent of the values.
+func (w *work) columnValues(s *Source, c *curve, column tablefile.Column, rows []int) ([]float64, error) {
+	raw := w.rawUnit(c)
+	percent := s.Basis == OfReading
+	if stated, err := quantity.Parse(column.Unit); column.Unit != "" && err == nil {
+		switch {
+		case stated.Same(raw.Unit) && column.Unit != "%":
+			raw.Unit = stated
+		case column.Unit == "%" && raw.symbol != "%":
+			percent = true
+		case column.Unit != raw.symbol:
+			return nil, notice.New("unit-dimension", c.slip.Y.Name(), raw.symbol, column.Name, column.Unit).In(w.e.study.fileName(c.slip))
+		}
 	}
-	return axisUnit(w.reference.rawUnit)
+	if percent && w.yUnit.ByConvention() {
+		return nil, percentOfConvention(s.Name, w.yUnit.symbol)
+	}
+	out := make([]float64, len(rows))
+	y := inUnit(c.y, c.yUnit, w.yUnit)
+	for j, i := range rows {
+		switch v := column.Values[i]; {
+		case percent:
+			out[j] = math.Abs(y[i]) * v / 100
+		case c.slope != nil:
+			out[j] = float64(raw.StepToSI(v) * math.Abs(c.slope[i]))
+		default:
+			out[j] = raw.StepToSI(v)
+		}
+	}
+	return out, nil
 }
 
-func steps(values []float64, u unit, rows []int) []float64 {
-	out := make([]float64, len(rows))
-	for j, i := range rows {
-		out[j] = u.StepToSI(values[i])
+// rawUnit is the unit of the values of a curve as its table holds them, before a
+// form.
+func (w *work) rawUnit(c *curve) unit {
+	switch {
+	case c.slope != nil:
+		return axisUnit(c.rawUnit)
+	case c.yUnit.known:
+		return axisUnit(c.yUnit)
 	}
-	return out
+	return w.yUnit
 }
 
 // sourceText says a source in words.

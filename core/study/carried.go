@@ -121,6 +121,7 @@ func (w *work) curveParts(t *taking) (parts []part, halves []interval) {
 	w.parts = nil
 	if !w.reference.scalar() {
 		w.dataColumn()
+		w.ofTheCurve(t)
 	}
 	for i := range w.q.Sources {
 		if s := &w.q.Sources[i]; w.ofCurve(s) && (s.Model == "" || s.Model == w.model) {
@@ -131,6 +132,11 @@ func (w *work) curveParts(t *taking) (parts []part, halves []interval) {
 			}
 		}
 	}
+	w.overlaps()
+	w.spreads = nil // they are of stations
+	if w.q.Resolution == Counted {
+		w.resolved()
+	}
 	if w.derivedBoth && !t.kind.Loop {
 		w.cardSources()
 		w.interpolationPart()
@@ -139,6 +145,20 @@ func (w *work) curveParts(t *taking) (parts []part, halves []interval) {
 	}
 	parts, w.parts = w.parts, nil
 	return parts, halves
+}
+
+// ofTheCurve takes what repeated readings and a digitising bring at the stations.
+// Along a contour a place on the axis is two of the curve, so that neither can be
+// given its stations: a source of the scalar has to be entered.
+func (w *work) ofTheCurve(t *taking) {
+	if !t.kind.Loop {
+		w.repeated()
+		w.digitised()
+		return
+	}
+	if w.reference.slip.Digitised.Is.Value == "yes" {
+		w.need(2, true, "the uncertainty of "+w.q.label(), w.q.target("derive.kind"), "derive-lost", t.kind.Name)
+	}
 }
 
 // interval holds the half-widths of a source that is known as an interval.

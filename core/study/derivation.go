@@ -17,7 +17,8 @@ type Derivation struct {
 }
 
 // askScalar adds a question for a scalar of the curves of a question, with the
-// sources of the curves; its slips stand for the same tables.
+// sources of the curves; its slips stand for the same tables. Where the curves
+// were compared before the eyes of a person, so was what the scalar is of.
 func (s *Study) askScalar(q *Question) {
 	name := q.Quantity + ", scalar"
 	for n := 2; s.Question(q.Case, name) != nil; n++ {
@@ -32,7 +33,7 @@ func (s *Study) askScalar(q *Question) {
 		s.Slips = append(s.Slips, p)
 	}
 	s.Questions = append(s.Questions, Question{Case: q.Case, Quantity: name, Condition: q.Condition, Sources: append([]Source{}, q.Sources...),
-		Kind: q.Kind, Use: q.Use, ReferenceID: q.ReferenceID, Choices: q.Choices, Excluded: append([]Exclusion{}, q.Excluded...), Derive: &Derivation{Kind: derived.Names()[0]}})
+		Kind: q.Kind, Use: q.Use, Known: q.Known, ReferenceID: q.ReferenceID, Choices: q.Choices, Form: q.Form, XForm: q.XForm, Corrected: q.Corrected, Revealed: q.Revealed, RevealedIn: q.RevealedIn, Excluded: append([]Exclusion{}, q.Excluded...), Derive: &Derivation{Kind: derived.Names()[0]}})
 }
 
 // enterDerive changes the scalar that a question asks for; without a kind it

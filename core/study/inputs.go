@@ -199,6 +199,10 @@ func (w *work) atStations(c *curve) []float64 {
 // the same error, or the entered multiple of it.
 func (w *work) share(p *part, s *Source, k float64) {
 	own := p.source.U
+	if len(w.s) != len(own) { // the simulation is one value, the data a curve
+		p.line.Text += ", counted in full: what it does to the value of the simulation is not followed"
+		return
+	}
 	left, ofSimulation := make([]float64, len(own)), own
 	switch {
 	case s.Sensitivity != nil:
@@ -210,9 +214,23 @@ func (w *work) share(p *part, s *Source, k float64) {
 	for i := range left {
 		left[i] = ofSimulation[i] - own[i]
 	}
+	for i := range p.sides {
+		p.sides[i] = p.sides[i].Times(remains(left[i], own[i]))
+		facing := uncertainty.Facing([]float64{w.s[i] - w.d[i]}, []float64{p.sides[i].Minus}, []float64{p.sides[i].Plus})
+		left[i] = math.Copysign(facing[0], left[i])
+	}
 	p.own, p.source.U = own, left
 	w.cell.Shared = append(w.cell.Shared, SharedLine{Source: s.Name, U: w.step(rms(own)), Left: w.step(rms(left))})
 	w.tell(notice.New("source-shared", s.Name, quantity.Text(float64(w.step(rms(own))), 2), quantity.Text(float64(w.step(rms(left))), 2)+w.cell.UnitSuffix()))
+}
+
+// remains is the part of an error of the data that is left in E = S - D, with the
+// sign of that of the data.
+func remains(left, own float64) float64 {
+	if own == 0 {
+		return 0
+	}
+	return -left / own
 }
 
 // apart keeps a source that is known as an interval only out of u_val.
@@ -255,7 +273,7 @@ func (w *work) members() {
 		if p.Model.Value != w.model || !w.q.belongs(p, Members) {
 			continue
 		}
-		if c := w.use(p); c != nil && w.inCellUnit(c) {
+		if c := w.use(p); c != nil && (w.asScalar != nil && !c.scalar() || w.inCellUnit(c)) {
 			w.addMembers(c)
 		}
 	}
@@ -286,7 +304,8 @@ func (w *work) addMembers(c *curve) {
 }
 
 // memberRuns returns the runs of a table at the stations: of a scalar one a
-// row, else one a column from the column of values on.
+// row, else one a column from the column of values on, each read as the slip
+// reads that.
 func (w *work) memberRuns(c *curve) [][]float64 {
 	var runs [][]float64
 	if c.scalar() {
@@ -301,11 +320,33 @@ func (w *work) memberRuns(c *curve) [][]float64 {
 		if !begun || column.Name == c.slip.X.Column.Value || column.Text != nil && !anyKnown(column.Values) {
 			continue
 		}
-		one := *c
-		one.y = inSI(column.Values, c.yUnit.unit)
-		runs = append(runs, w.atStations(&one))
+		p := *w.e.study.slip(c.slip.ID)
+		p.Y.Column.Value = column.Name
+		one, _ := w.e.load(&p)
+		if one == nil {
+			runs = append(runs, blank(len(w.x)))
+			continue
+		}
+		runs = append(runs, w.memberAt(one))
 	}
 	return runs
+}
+
+// memberAt returns one of the runs at the stations, or the scalar that the
+// question takes from its curve; NaN where there is none.
+func (w *work) memberAt(c *curve) []float64 {
+	if w.asScalar == nil {
+		return w.atStations(c)
+	}
+	scalar, err := w.asScalar(c)
+	if err != nil {
+		w.tell(notice.New("derive-run", w.e.study.fileName(c.slip)+", column "+c.slip.Y.Column.Value, w.q.Derive.Kind, err.Error()))
+		return blank(1)
+	}
+	if !w.inCellUnit(scalar) {
+		return blank(1)
+	}
+	return scalar.y
 }
 
 // inputForm says whether the uncertainty of the inputs is in u_val.

@@ -13,7 +13,7 @@ import (
 // judge holds the requirement against the interval of the model error.
 func (w *work) judge() {
 	r := w.q.Requirement
-	if r == nil {
+	if !r.set() {
 		w.need(4, false, "an accuracy requirement", w.q.target("requirement"), "requirement-missing", w.q.label())
 		return
 	}
@@ -41,10 +41,7 @@ func (w *work) judge() {
 		if b := w.boundAt(i); b > 0 { // the interval of E is wider by it at both ends
 			u[n] += b / w.choices.K
 		}
-		limits[n] = w.yUnit.StepToSI(r.Value)
-		if r.Percent {
-			limits[n] = math.Abs(w.d[i]) * r.Value / 100
-		}
+		limits[n] = w.limit(r, i)
 	}
 	outcome, at := adequacy.JudgeAll(rounded(e), rounded(u), w.choices.K, rounded(limits))
 	j.Outcome = string(outcome)
@@ -56,6 +53,18 @@ func (w *work) judge() {
 	if outcome == adequacy.NotResolved {
 		w.resolve(j, e[at], w.tested[at], limits[at])
 	}
+}
+
+// set reports whether there is a requirement: who wants it, or when, is none
+// without its value.
+func (r *Requirement) set() bool { return r != nil && r.Value > 0 }
+
+// limit is what a requirement allows at a station, in SI.
+func (w *work) limit(r *Requirement, i int) float64 {
+	if r.Percent {
+		return math.Abs(w.d[i]) * r.Value / 100
+	}
+	return w.yUnit.StepToSI(r.Value)
 }
 
 // rounded keeps ten digits, so that every host decides alike.

@@ -259,3 +259,37 @@ func TestStatedDigitising(t *testing.T) {
 		}
 	}
 }
+
+// Readings of one value with a stated uncertainty: their scatter is no reason to
+// leave it out.
+func TestStatedUncertaintyOfRepeatedReadings(t *testing.T) {
+	s := oneValue("2", "y,u\n1.9,0.3\n2.1,0.3\n2.0,0.3\n")
+	s.Questions[0].Sources = s.Questions[0].Sources[1:]
+	s.Slips[1].U, s.Slips[1].UFactor = study.ColumnUse{Column: entered("u"), Unit: entered("1")}, entered("1")
+	c := only(t, s)
+	near(t, "u_D", c.Stations[0].UD, math.Hypot(.3, .1/math.Sqrt(3)), 1e-9)
+	s.Files[1].Data = []byte("y,u\n2.0,0.3\n,0.4\n") // a row without a value is no reason either
+	s.Files[1].SHA256 = study.Hash(s.Files[1].Data)
+	near(t, "u_D of one reading", only(t, s).Stations[0].UD, .3, 1e-9)
+}
+
+// Who set a requirement is no requirement of 0, and one whose basis is changed
+// after the comparison was seen is a late one.
+func TestRequirementWithoutAValue(t *testing.T) {
+	s := oneValue("2", "y\n1.5\n")
+	if err := s.Set(study.Target{Kind: "question", ID: "C|q", Field: "requirement.who"}, "someone", "", ""); err != nil {
+		t.Fatal(err)
+	}
+	c := only(t, s)
+	if c.Requirement != nil || !notice.Has(c.Notices, "requirement-missing") {
+		t.Errorf("a requirement without a value is judged: %+v", c.Requirement)
+	}
+	q := &s.Questions[0]
+	q.Requirement, q.Revealed = &study.Requirement{Value: 5}, true
+	if err := s.Set(study.Target{Kind: "question", ID: "C|q", Field: "requirement.percent"}, "yes", "", ""); err != nil {
+		t.Fatal(err)
+	}
+	if !q.Requirement.Late {
+		t.Error("a requirement that became one in percent after the comparison was seen is not late")
+	}
+}

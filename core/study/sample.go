@@ -35,8 +35,11 @@ func (w *work) twoSided(p *part, minus, plus []float64) {
 	e := make([]float64, len(w.x))
 	p.sides = make([]uncertainty.TwoPiece, len(w.x))
 	unequal := 0
+	both := len(w.s) == len(w.d) // else the data are a curve and the simulation one value: the larger side
 	for i := range e {
-		e[i] = w.s[i] - w.d[i]
+		if both {
+			e[i] = w.s[i] - w.d[i]
+		}
 		p.sides[i] = uncertainty.TwoPiece{Minus: minus[i], Plus: plus[i]}
 		if minus[i] != plus[i] {
 			unequal++
@@ -55,7 +58,11 @@ func (w *work) twoSided(p *part, minus, plus []float64) {
 			shift = s
 		}
 	}
-	p.line.Text += ", unequal sides: the one facing E"
+	if both {
+		p.line.Text += ", unequal sides: the one facing E"
+	} else {
+		p.line.Text += ", unequal sides: the larger"
+	}
 	w.tell(notice.New("sides-unequal", p.line.Name, quantity.Counted(unequal, "station"), quantity.Signed(float64(w.step(shift)), 2)+w.cell.UnitSuffix()))
 }
 

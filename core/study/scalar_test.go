@@ -507,3 +507,68 @@ func TestGapsOfScalars(t *testing.T) {
 		t.Errorf("%+v", c.Notices)
 	}
 }
+
+// A curve of the data with bars of two sides, or with a source shared with the
+// simulation, against a simulation that is one value: the scalar is taken from
+// the data alone. The larger side of the bars, 0.03, with the random 0.01 of the
+// pair, and one percent of 0.9 in full: nothing shows what it does to the value.
+func TestOneSidedScalarWithBars(t *testing.T) {
+	s := scalarPair("greatest value", nil, "x,y\n0,1\n", "x,y,lo,hi\n0,0.1,0.01,0.03\n0.1,0.6,0.01,0.03\n0.2,0.9,0.01,0.03\n0.3,0.6,0.01,0.03\n0.4,0.1,0.01,0.03\n", "m", "1")
+	s.Slips[0].X = study.ColumnUse{}
+	r := &s.Slips[1]
+	r.U, r.Upper, r.BarsAs, r.UFactor = study.ColumnUse{Column: entered("lo"), Unit: entered("1")}, study.ColumnUse{Column: entered("hi"), Unit: entered("1")}, entered(study.BarsWidths), entered("1")
+	s.Questions[0].Sources = append(s.Questions[0].Sources, study.Source{Name: "shared", Of: study.OfData, Value: 1, Basis: study.OfReading, Coverage: entered("1"), Pattern: study.Common, Shared: true})
+	c := only(t, s)
+	if !c.Scalar || len(c.Stations) != 1 {
+		t.Fatalf("%+v", c.Notices)
+	}
+	near(t, "u_D", c.Stations[0].UD, math.Sqrt(.03*.03+.01*.01+.009*.009), 2e-4)
+}
+
+// Members of a scalar that is taken from curves are taken from each curve:
+// crossings at 0.50 and 0.52 scatter by 0.02/√2.
+func TestMembersOfAScalar(t *testing.T) {
+	at := func(i int) float64 { return .05 + float64(i)/10 }
+	s := scalarPair("crossing of a level", nil, rows(30, even, func(x float64) float64 { return 4 * (x - .5) }), rows(10, at, func(x float64) float64 { return 4 * (x - .52) }), "m", "1")
+	attach(s, "members", study.Members, "x,y,b\n0,-2,-2.08\n1,2,1.92\n", nil)
+	c := only(t, s)
+	if c.Withheld || c.Members == nil || c.Members.N != 2 {
+		t.Fatalf("%+v\n%+v", c.Members, c.Notices)
+	}
+	near(t, "u of the members", c.Members.U, .02/math.Sqrt2, 1e-9)
+}
+
+// A scalar of a digitised curve has the uncertainty of the digitising: a zero of
+// y that is known to 0.03 moves the greatest value by as much.
+func TestScalarOfADigitisedCurve(t *testing.T) {
+	at := func(i int) float64 { return float64(i) / 20 }
+	hill := func(x float64) float64 { return 1 - 100*(x-.5)*(x-.5) }
+	s := scalarPair("greatest value", nil, rows(30, even, hill), rows(21, at, hill), "m", "1")
+	s.Slips[1].Digitised = study.Digitising{Is: entered("yes"), XScale: entered("0"), XZero: entered("0"), YScale: entered("0"), YZero: entered("0.03"), Line: entered("0"), Pixel: entered("0")}
+	c := only(t, s)
+	if c.Withheld {
+		t.Fatalf("%+v", c.Open)
+	}
+	near(t, "digitising: zero of y", source(t, c, "digitising: zero of y").U, .03, 1e-4) // differences over the rows, one by one
+	attach(s, "repeats", study.Replicates, rows(42, func(i int) float64 { return at(i / 2) }, hill), nil)
+	if c = only(t, s); c.Replicates == nil || c.Replicates.Stations != 21 {
+		t.Errorf("repeated readings of the curve: %+v", c.Replicates)
+	}
+}
+
+// A scalar that is asked for after the comparison of its curves was seen was not
+// asked for before, and it is of the same form of the same data.
+func TestScalarOfASeenCurve(t *testing.T) {
+	s := pair(rows(30, even, line), threeStations, "m", "m")
+	q := &s.Questions[0]
+	q.Revealed, q.Known = true, entered(study.Aware)
+	q.Form, q.Corrected = study.Form{Name: "u/U", Simulation: study.FormMade, Data: study.FormMade}, study.Correction{State: study.Corrected, How: "x"}
+	if err := s.AddItem(study.Target{Kind: study.ItemDerived, ID: "C|q"}, ""); err != nil {
+		t.Fatal(err)
+	}
+	q = &s.Questions[0]
+	made := s.Questions[1]
+	if !made.Revealed || made.Known != q.Known || made.Form != q.Form || made.Corrected != q.Corrected {
+		t.Errorf("%+v", made)
+	}
+}

@@ -369,7 +369,7 @@ func (w *work) regionLine(ask *Scoring, e []float64, rows []int) RegionLine {
 		}
 	}
 	for _, i := range rows {
-		if w.uVal != nil && w.uVal[i] > 0 && exceeds(math.Abs(e[i]), float64(w.choices.K*w.uVal[i])) {
+		if w.uVal != nil && w.uVal[i] > 0 && exceeds(math.Abs(e[i])-w.boundAt(i), float64(w.choices.K*w.uVal[i])) {
 			line.Beyond++
 		}
 	}
@@ -382,14 +382,25 @@ func (w *work) regionLine(ask *Scoring, e []float64, rows []int) RegionLine {
 func (e *evaluation) difference(a, b *Cell, pairs [][2]int) Difference {
 	d := Difference{Case: a.Case, Quantity: a.Quantity, A: a.Model, B: b.Model, Unit: a.Unit, N: len(pairs), U: None}
 	sum, square, known := 0.0, 0.0, true
+	var shared [2]float64 // of u_num that is the same error at all stations
 	n := float64(len(pairs))
 	for _, p := range pairs {
 		x, y := a.Stations[p[0]], b.Stations[p[1]]
 		sum += float64(x.S-y.S) / n
 		known = known && x.UInput.Known() && y.UInput.Known()
-		for _, u := range []Number{x.UNum, y.UNum} {
-			known = known && u.Known()
-			square += float64(u*u) / float64(n*n)
+		for k, of := range []struct {
+			u, interp Number
+			shared    bool
+		}{{x.UNum, x.UInterp, a.Choices.NumShared}, {y.UNum, y.UInterp, b.Choices.NumShared}} {
+			known = known && of.u.Known()
+			if of.shared {
+				shared[k] += float64(of.u) / n
+			} else {
+				square += float64(of.u*of.u) / float64(n*n)
+			}
+			if of.interp.Known() {
+				square += float64(of.interp*of.interp) / float64(n*n)
+			}
 		}
 		d.RMSA += x.E * x.E / Number(n)
 		d.RMSB += y.E * y.E / Number(n)
@@ -406,7 +417,7 @@ func (e *evaluation) difference(a, b *Cell, pairs [][2]int) Difference {
 		inputA += float64(a.Stations[p[0]].UInput) / n
 		inputB += float64(b.Stations[p[1]].UInput) / n
 	}
-	d.U = Number(math.Sqrt(square + float64(inputA*inputA) + float64(inputB*inputB)))
+	d.U = Number(math.Sqrt(square + float64(shared[0]*shared[0]) + float64(shared[1]*shared[1]) + float64(inputA*inputA) + float64(inputB*inputB)))
 	d.Resolved = exceeds(math.Abs(sum), float64(a.Choices.K)*float64(d.U))
 	return d
 }

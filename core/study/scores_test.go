@@ -287,3 +287,51 @@ func TestSampledMeasures(t *testing.T) {
 		}
 	}
 }
+
+// The difference of two models holds what their interpolation leaves open, and a
+// u_num that was declared the same at all stations does not average out.
+func TestDifferenceOfModelsKeepsItsCorrelation(t *testing.T) {
+	s := pair(rows(30, even, line), threeStations, "m", "m")
+	attach(s, "b", study.Simulation, rows(30, even, func(x float64) float64 { return 2.5 + x }), func(p *study.Slip) { p.Model = entered("B") })
+	q := &s.Questions[0]
+	q.Sources = append(q.Sources, study.Source{Name: "inlet", Of: study.OfInput, Value: 0, Basis: study.Absolute, Coverage: entered("1"), Pattern: study.Common})
+	q.Choices.UInterp = false
+	u := func() (study.Number, []study.Cell) {
+		r := study.Evaluate(s, study.Options{})
+		if len(r.Differences) != 1 {
+			t.Fatalf("%+v", r.Notices)
+		}
+		return r.Differences[0].U, r.Cells
+	}
+	got, _ := u()
+	near(t, "independent", got, .01*math.Sqrt(2./3), 1e-9)
+	q.Choices.NumShared = true
+	got, _ = u()
+	near(t, "shared", got, .01*math.Sqrt2, 1e-9)
+	q.Choices.UInterp = true
+	text := rows(5, func(i int) float64 { return float64(i) / 4 }, smooth) // coarse, and curved
+	s.Files[0].Data, s.Files[0].SHA256 = []byte(text), study.Hash([]byte(text))
+	got, cells := u()
+	want := 2e-4
+	for _, c := range cells {
+		for _, station := range c.Stations {
+			want += math.Pow(float64(station.UInterp)/3, 2)
+		}
+	}
+	if !(want > 3e-4) {
+		t.Fatalf("the interpolation leaves too little open for a test: %g", want)
+	}
+	near(t, "with interpolation", got, math.Sqrt(want), 1e-9)
+}
+
+// A station of a region lies beyond k u_val by what is left of E beyond an
+// interval, as its own reading says.
+func TestRegionsKnowIntervals(t *testing.T) {
+	s := pair(rows(30, even, line), threeStations, "m", "m")
+	s.Questions[0].Sources = append(s.Questions[0].Sources, study.Source{Name: "box", Of: study.OfInput, Value: .15, Basis: study.Absolute, Form: study.Interval, Coverage: entered("limits"), Pattern: study.Common})
+	s.Questions[0].Regions = []study.Region{{Name: "front", From: 0, To: .2}}
+	c := only(t, s)
+	if c.Stations[0].Reading == study.SignResolved || c.Regions[0].Beyond != 0 {
+		t.Errorf("the reading %q, beyond in the region %d", c.Stations[0].Reading, c.Regions[0].Beyond)
+	}
+}

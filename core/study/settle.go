@@ -350,7 +350,8 @@ func (w *work) settlingOptions() settling.Options {
 type judgedSeries struct {
 	hash, table, x, y string
 	xUnit, yUnit      quantity.Unit
-	shown             string // the unit of the judgement
+	shown             string    // the unit of the judgement
+	kept              [4]string // branch, abscissa and repeats of the slip, second coordinate
 	opt               settling.Options
 }
 
@@ -360,7 +361,7 @@ func (e *evaluation) judge(c *curve, values []float64, shown string, opt settlin
 	if c.yTurned || c.xTurned { // the case card is in it
 		return settling.Judge(settling.Series{At: c.x, Value: values}, opt)
 	}
-	key := judgedSeries{e.files[p.File].SHA256 + e.study.File(p.File).readingText(), p.Table, p.X.Column.Value, p.Y.Column.Value, c.xUnit.unit, c.yUnit.unit, shown, opt}
+	key := judgedSeries{e.files[p.File].SHA256 + e.study.File(p.File).readingText(), p.Table, p.X.Column.Value, p.Y.Column.Value, c.xUnit.unit, c.yUnit.unit, shown, [4]string{p.Branch.Value, p.Abscissa.Value, p.Repeats.Value, p.Contour.Name()}, opt}
 	if m, known := e.judged[key]; known {
 		return m
 	}

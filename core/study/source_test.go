@@ -324,3 +324,54 @@ func TestHeatFlowOfFiveInputs(t *testing.T) {
 	q.Sources = append(q.Sources, both)
 	near(t, "u of one error of both", only(t, p).Stations[0].UInput, 2853.4788393, 1e-6)
 }
+
+// Members of a quantity that is brought into a form are brought into it as the
+// finest run is: 515 and 525 Pa over q = 500 Pa scatter by 10/√2/500.
+func TestMembersTakeTheForm(t *testing.T) {
+	s := pressures(0)
+	attach(s, "members", study.Members, "x,y,b\n0,515,525\n1,515,525\n", func(p *study.Slip) { p.Y.Unit = entered("Pa") })
+	c := only(t, s)
+	if c.Members == nil {
+		t.Fatalf("%+v", c.Notices)
+	}
+	near(t, "u of the members", c.Members.U, 10/math.Sqrt2/500, 1e-9)
+}
+
+// A column of the numerical uncertainty in a file in kPa is in kPa, whatever the
+// data are in, and one that states percent is of the value.
+func TestColumnsOfUncertaintyKeepTheirUnit(t *testing.T) {
+	s := pair("x,y,un\n0,1,0.002\n1,1,0.002\n", "x,y,ud (%)\n0.2,1000,2\n0.6,1000,2\n", "m", "m")
+	s.Slips[0].Y.Unit, s.Slips[1].Y.Unit = entered("kPa"), entered("Pa")
+	q := &s.Questions[0]
+	q.Sources[1].Column, q.Sources[0].Column = "un", "ud"
+	c := only(t, s)
+	near(t, "u_num", c.Stations[0].UNum, 2, 1e-9)
+	near(t, "u_D", c.Stations[0].UD, 20, 1e-9)
+	s.Files[1].Data = []byte("x,y,ud (K)\n0.2,1000,2\n0.6,1000,2\n")
+	s.Files[1].SHA256 = study.Hash(s.Files[1].Data)
+	if c := only(t, s); !c.Withheld || !notice.Has(c.Notices, "unit-dimension") {
+		t.Error("kelvins are taken as pascals")
+	}
+}
+
+// Of a source that acts on both sides and has two of its own only what is left
+// of both counts, in the sampled interval too.
+func TestSharedSourceOfTwoSides(t *testing.T) {
+	s := oneValue("2", "y\n1.5\n")
+	upper := .4
+	s.Questions[0].Sources = append(s.Questions[0].Sources, study.Source{Name: "q", Of: study.OfData, Value: .2, Upper: &upper, Basis: study.Absolute, Coverage: entered("1"), Pattern: study.Common, Shared: true})
+	c := only(t, s)
+	near(t, "u_val", c.Stations[0].UVal, .01*math.Sqrt2, 1e-9)
+	if c.Sampled != nil {
+		t.Errorf("two sides of which nothing is left are sampled: %+v", c.Sampled)
+	}
+	part := .5
+	s.Questions[0].Sources[2].Sensitivity = &part
+	c = only(t, s)
+	near(t, "what is left of the side facing E", c.Stations[0].UVal, math.Sqrt(2e-4+.04), 1e-9)
+	near(t, "sampled: lower side", c.Sampled.Minus, .1, 1e-9)
+	near(t, "sampled: upper side", c.Sampled.Plus, .2, 1e-9)
+	part = 3 // S moves by three times D: what is left has the other sign, and the other side faces E
+	c = only(t, s)
+	near(t, "the other side facing E", c.Stations[0].UVal, math.Sqrt(2e-4+.16), 1e-9)
+}

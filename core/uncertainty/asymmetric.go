@@ -38,3 +38,12 @@ func Facing(e, minus, plus []float64) []float64 {
 	}
 	return u
 }
+
+// Times returns the two pieces of an error times a factor; a negative one
+// exchanges them.
+func (t TwoPiece) Times(factor float64) TwoPiece {
+	if factor < 0 {
+		return TwoPiece{Minus: -factor * t.Plus, Plus: -factor * t.Minus}
+	}
+	return TwoPiece{Minus: factor * t.Minus, Plus: factor * t.Plus}
+}
