@@ -16,6 +16,9 @@ import (
 // courses lays out the five courses of evidence of a cell. Under the veil the
 // comparison and what follows from it are left out.
 func courses(c *study.Cell, figures []CellFigure, veiled bool) []Course {
+	if veiled {
+		c = covered(c)
+	}
 	list := []Course{
 		{Question: "Has each run settled?", Answer: settledAnswer(c), Numbers: settledNumbers(c), Tables: settledTables(c)},
 		{Question: "Is the grid fine enough for this quantity?", Answer: gridAnswer(c), Numbers: gridNumbers(c), Tables: gridTables(c)},
@@ -68,6 +71,19 @@ func courseOfFigure(f chart.Figure) int {
 		return 2
 	}
 	return 3
+}
+
+// covered leaves out what an error that acts on both sides leaves in E: of a
+// percentage of the reading that is this percentage of E.
+func covered(c *study.Cell) *study.Cell {
+	less := *c
+	less.Shared, less.Notices = nil, nil
+	for _, n := range c.Notices {
+		if n.Code != "source-shared" {
+			less.Notices = append(less.Notices, n)
+		}
+	}
+	return &less
 }
 
 // notes are the notices of a course that are not open points already.

@@ -240,7 +240,7 @@ var table = map[string]row{
 	"readings-few":          {Note, "%d readings: 95 %% needs a factor %s, not %s."},
 	"degrees-few":           {Note, "Effective degrees of freedom %s: 95 %% needs a factor %s; the statement uses %s."},
 	"covariance-size":       {Stop, "%d stations without an independent uncertainty exceed the %d that can be treated exactly: there is no joint statistic. Give an independent part."},
-	"covariance-repeated":   {Note, "%d stations repeat a reading that is listed already, with the same place, value and uncertainty; the joint statistic counts every reading once, on %d stations. If they are separate readings, give their mean in one row."},
+	"covariance-repeated":   {Note, "%d stations repeat a reading that is listed already, with the same place, value and uncertainty; the joint statistic counts every reading once, on %d stations. Mean, root mean square and counts take every row. If they are separate readings, give their mean in one row."},
 	"joint-low-correlation": {Note, "Were the correlation of %s near %s, the joint statistic would be %s, below its 1 %% point %s: the stated uncertainties would look too large. Say how the source is shared."},
 	"joint-stations":        {Note, "%d stations are too many to leave out one by one; no single station was looked for. Name regions to leave out."},
 	"walk-unknown":          {Stop, "There is no number at %q in the report; nothing was walked back. Take a path of the report, such as cells.0.stations.0.e."},

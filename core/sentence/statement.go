@@ -306,13 +306,21 @@ func (w *writer) scalar() {
 		if s.E < 0 {
 			side = "below"
 		}
-		w.say("|E| exceeds " + k + " u_val. Under the stated uncertainties the simulation is ")
+		w.say("|E| exceeds " + k + " u_val")
+		w.interval(" and the interval ± ", " of what is known by its limits only, together")
+		w.say(". Under the stated uncertainties the simulation is ")
 		w.mark(side, study.WordOf, w.result("agreement"))
-		w.say(" the data by more than they account for; E ± " + k + " u_val spans ")
+		w.say(" the data by more than they account for; E ± " + k + " u_val")
+		w.interval(" ± ", "")
+		w.say(" spans ")
 	case study.Between:
-		w.say("|E| lies between u_val and " + k + " u_val; its sign is not resolved; the model error lies within ")
+		w.say("|E|")
+		w.interval(" less the interval ± ", " of what is known by its limits only")
+		w.say(" lies between u_val and " + k + " u_val; its sign is not resolved; the model error lies within ")
 	default:
-		w.say("|E| = " + strings.TrimLeft(e.text, "+−") + w.unit() + " does not exceed u_val. The model error is not distinguishable from the combined " + combined(s) + " uncertainty. This does not show that it is small; it lies within ")
+		w.say("|E| = " + strings.TrimLeft(e.text, "+−") + w.unit() + " does not exceed u_val")
+		w.interval(" and the interval ± ", " of what is known by its limits only, together")
+		w.say(". The model error is not distinguishable from the combined " + combined(s) + " uncertainty. This does not show that it is small; it lies within ")
 	}
 	w.number(w.scaled("lo", s.Lo, true), "agreement")
 	if c.InPercent() {
@@ -321,6 +329,23 @@ func (w *writer) scalar() {
 	w.say(" to ")
 	w.number(w.scaled("hi", s.Hi, true), "agreement")
 	w.say(w.unit() + " (k = " + k + "). ")
+}
+
+// interval says the half-width that sources known as intervals add to the ends,
+// where there is one.
+func (w *writer) interval(before, after string) {
+	b := w.cell.Bound
+	if b == nil || !(b.Half > 0) {
+		return
+	}
+	w.say(before)
+	half := of("bound.half", b.Half, quantity.Text(float64(b.Half), 2))
+	if w.cell.InPercent() {
+		f := float64(b.Half) / absolute(float64(w.cell.Stations[0].D))
+		half = figure{"bound.half", "stations.0.d", study.Number(100 * f), quantity.Percent(f)}
+	}
+	w.value(half)
+	w.say(w.unit() + after)
 }
 
 // combined names the parts that u_val has: one that is not known is not said.
@@ -362,9 +387,13 @@ func (w *writer) unit() string {
 	return w.cell.UnitSuffix()
 }
 
-// kNum says the factor between the grid uncertainty and u_num, an assumption
+// kNum says that the grid uncertainty is borrowed, or the factor between the grid uncertainty and u_num, an assumption
 // that the statement can turn on. The bound of an oscillatory family has none.
 func (w *writer) kNum() {
+	if b := w.cell.Borrowed; b != nil && b.U.Known() {
+		w.say(" (grid uncertainty borrowed from " + b.From + ", not computed for this case)")
+		return
+	}
 	g := w.cell.Grids
 	if g == nil || !g.UNum.Known() || !g.Along && !g.U.Known() {
 		return
@@ -398,6 +427,7 @@ func (w *writer) curve() {
 	w.value(of("summary.beyond_chance", s.BeyondChance, quantity.Text(float64(s.BeyondChance), 2)))
 	w.say(" expected by chance), largest |E|/u_val ")
 	w.number(of("summary.max_ratio", s.MaxRatio, quantity.Text(float64(s.MaxRatio), 3)), "agreement")
+	w.interval("; what is known by its limits only, up to ± ", ", is not in u_val, these counts and the joint statistic")
 	w.say(". ")
 	w.joint(k)
 }

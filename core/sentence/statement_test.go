@@ -60,3 +60,33 @@ func TestUseIsSaidOfWithheld(t *testing.T) {
 		t.Error(text)
 	}
 }
+
+// TestIntervalsAreSaid: where a source is known by its limits only, the sentence
+// says what its words hold with, and no more.
+func TestIntervalsAreSaid(t *testing.T) {
+	c := oneValue(nil)
+	c.Requirement, c.Bound = &study.Judgement{Percent: quantity.None}, &study.BoundLine{Half: 1.5, At: quantity.None}
+	for reading, want := range map[string]string{
+		study.WithinNoise:  "|E| = 3.0 does not exceed u_val and the interval ± 1.5 of what is known by its limits only, together. ",
+		study.Between:      "|E| less the interval ± 1.5 of what is known by its limits only lies between u_val and 2 u_val; ",
+		study.SignResolved: "|E| exceeds 2 u_val and the interval ± 1.5 of what is known by its limits only, together. ",
+	} {
+		c.Stations[0].Reading = reading
+		if text := Of(c).Text(); !strings.Contains(text, want) {
+			t.Errorf("%s: %s", reading, text)
+		}
+	}
+	if text := Of(c).Text(); strings.Contains(text, "exceeds 2 u_val.") {
+		t.Error(text)
+	}
+}
+
+// TestBorrowedIsSaid: a grid uncertainty of another case is not said as one of
+// this.
+func TestBorrowedIsSaid(t *testing.T) {
+	c := oneValue(nil)
+	c.Borrowed = &study.Borrowed{From: "drag at C2", U: 1}
+	if text := Of(c).Text(); !strings.Contains(text, " (grid uncertainty borrowed from drag at C2, not computed for this case)") {
+		t.Error(text)
+	}
+}
