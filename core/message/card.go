@@ -199,6 +199,7 @@ func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 	if unit, err := quantity.Parse(p.Y.Unit.Value); err == nil && unit.Dimension == pascal.Dimension {
 		list = append(list, entry("datum", "the pressure is", p.Datum, []Option{{"", "–"}, {study.DatumAbsolute, "absolute"}, {study.DatumGauge, "gauge"}, {study.DatumDifference, "a difference to p_ref"}}, ""))
 	}
+	list = append(list, forceEntries(p, columns, entry)...)
 	switch p.Role.Value {
 	case study.Monitor, study.Balance, study.Residual, study.Precision:
 		list = append(list, entry("grid", "grid", p.Grid, free, "e.g. G4"))
@@ -249,6 +250,38 @@ func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {
 				list = append(list, entry("u_basis", "percent of", p.UBasis, free, "reading, or the number of the full scale"))
 			}
 		}
+	}
+	return list
+}
+
+// forceUnits are units of what forceEntries are shown for, beside pure numbers
+// without stations.
+var forceUnits = []string{"N", "N m", "N/m"}
+
+// forceEntries say what is made of a force or a moment.
+func forceEntries(p *study.Slip, columns []Option, entry func(field, label string, f study.Field, options []Option, hint string) Entry) []Entry {
+	if p.Role.Value != study.Simulation && p.Role.Value != study.Reference || p.Y.Formula.Given() {
+		return nil
+	}
+	f := &p.Force
+	show := f.As.Given() || f.Half.Given() || !p.X.Given() && p.Y.Unit.Value == "1"
+	unit, err := quantity.Parse(p.Y.Unit.Value)
+	for _, symbol := range forceUnits {
+		of, bad := quantity.Parse(symbol)
+		show = show || err == nil && bad == nil && unit.Same(of)
+	}
+	if !show {
+		return nil
+	}
+	list := []Entry{
+		entry("force.as", "they become", f.As, []Option{{"", "what they are"}, {study.AsLift, "lift: N cos α − A sin α, of normal forces N"}, {study.AsDrag, "drag: N sin α + A cos α, of normal forces N"}, {study.AsMoment, "moments M about x_c: M + (x_c − x_m) N − (z_c − z_m) A"}}, "α, x_m and x_c from the case card"),
+		entry("force.half", "they are", f.Half, []Option{{"", "of the whole model"}, {"yes", "of a half model: doubled"}}, "a column of uncertainty is that of the result"),
+	}
+	if f.As.Value == study.AsMoment {
+		list = append(list, entry("force.normal", "normal force N in", f.Normal, columns, ""))
+	}
+	if f.As.Given() {
+		list = append(list, entry("force.axial", "axial force A in", f.Axial, columns, ""), entry("force.unit", "unit of the forces", f.Unit, []Option{}, "empty: as the values, N for moments in N m"))
 	}
 	return list
 }

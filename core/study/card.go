@@ -52,6 +52,8 @@ var CardSymbols = []CardSymbol{
 	{Angle, "α", "angle of attack", "deg"},
 	{"x_m", "x_m", "moment centre, along the flow", "m"},
 	{"z_m", "z_m", "moment centre, upward", "m"},
+	{"x_c", "x_c", "centre of comparison of moments, along the flow", "m"},
+	{"z_c", "z_c", "centre of comparison of moments, upward", "m"},
 }
 
 // cardSymbol returns what is known of a symbol.
@@ -71,7 +73,9 @@ var typed = map[string]string{"rho": Density, "mu": "μ", "nu": "ν", "alpha": A
 var computed = map[string]string{DynamicPressure: "ρ*U_ref^2/2", "ν": "μ/ρ", "μ": "ν*ρ", "δ_ν": "ν/u_τ"}
 
 // Kinds of a reference area.
-var AreaKinds = []string{"planform", "frontal", "wetted", "base", "half of the planform"}
+var AreaKinds = []string{"planform", "frontal", "wetted", "base", halfArea}
+
+const halfArea = "half of the planform"
 
 // Words of ReferenceQuantity.Shared.
 const (

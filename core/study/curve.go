@@ -76,12 +76,16 @@ func (e *evaluation) load(slip *Slip) (*curve, []notice.Notice) {
 		c.take(l.last, nil)
 	}
 	l.last = nil
-	c.y, c.yUnit = l.column(slip.Y)
+	if !l.knownForces(slip.Force) {
+		return nil, l.notices
+	}
+	values := slip.values()
+	c.y, c.yUnit = l.column(values)
 	if l.last != nil {
 		c.take(l.last, l.last.parts)
 		c.reduced = l.last
 	}
-	c.xTurned, c.yTurned = slip.X.Formula.Given(), slip.Y.Formula.Given()
+	c.xTurned, c.yTurned = slip.X.Formula.Given(), values.Formula.Given()
 	if slip.U.Column.Given() {
 		l.uncertainty(c)
 	}

@@ -26,6 +26,7 @@ func (w *work) doubtCurves() {
 			w.ask(2, "the order of "+w.e.study.fileName(c.slip), "curve-shuffled", w.e.study.fileName(c.slip), turns)
 		}
 	}
+	w.doubtForces()
 	w.doubtDatum()
 	w.doubtFirstCell()
 	w.doubtFriction()

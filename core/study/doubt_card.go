@@ -185,6 +185,9 @@ func (w *work) doubtFirstCell() {
 		return
 	}
 	treatment := ""
+	if f := w.q.Family; f != nil {
+		treatment = strings.ToLower(f.Wall)
+	}
 	for _, set := range enteredSettings(s.slip.Settings.Value) {
 		if strings.HasPrefix(strings.ToLower(set.key), "wall") {
 			treatment = strings.ToLower(set.value)

@@ -606,6 +606,11 @@ func (p *Slip) fields() []slipField {
 			all = append(all, slipField{path: "u_basis", name: "basis of " + p.U.Column.Value, field: p.UBasis, needed: true, course: 2})
 		}
 	}
+	if f := p.Force; f.As.Given() || f.Half.Given() {
+		all = append(all, slipField{path: "force.as", name: "use of the force", field: f.As, course: 2}, slipField{path: "force.half", name: "factor of a half model", field: f.Half, course: 2},
+			slipField{path: "force.normal", name: "column of the normal force", field: f.Normal, needed: f.As.Value == AsMoment, course: 2},
+			slipField{path: "force.axial", name: "column of the axial force", field: f.Axial, needed: f.As.Value == AsLift || f.As.Value == AsDrag, course: 2})
+	}
 	if p.Derive.Given() {
 		all = append(all, slipField{path: "derive", name: "derivation", field: p.Derive, course: 2})
 	}

@@ -74,6 +74,8 @@ func TestInjectedFaults(t *testing.T) {
 		s.Slips[0].Grid, s.Slips[0].YPlus, s.Slips[0].Settings = entered("G1"), entered(y), entered(settings)
 		return s
 	}
+	family := wall("4", "")
+	family.Questions[0].Family = &study.Family{Wall: "wall functions"}
 	datum := func(s, d string) *study.Study {
 		st := pascals(1, 1)
 		st.Slips[0].Datum, st.Slips[1].Datum = entered(s), entered(d)
@@ -104,6 +106,7 @@ func TestInjectedFaults(t *testing.T) {
 		{"first cell between", wall("8", ""), []string{"first-cell"}},
 		{"wall function too near", wall("4", "wall treatment: wall function"), []string{"first-cell"}},
 		{"resolved wall too far", wall("40", "wall: resolved"), []string{"first-cell"}},
+		{"wall function of the family too near", family, []string{"first-cell"}},
 		{"wall function as stated", wall("40", "wall: wall function"), nil},
 		{"resolved as stated", wall("0.9", "wall: resolved"), nil},
 		{"datum", datum(study.DatumAbsolute, study.DatumGauge), []string{"datum-differs"}},

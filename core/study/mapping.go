@@ -24,13 +24,13 @@ func (s *Study) Mapping(p *Slip, t tablefile.Table) string {
 }
 
 func (e *evaluation) mappingOf(p *Slip, t tablefile.Table) string {
-	text := e.useWords(p, t, p.Y)
+	text := e.useWords(p, t, p.values())
 	if p.Datum.Given() {
 		text += ", " + p.Datum.Value
 	}
 	q := e.study.Question(p.Case.Value, p.Quantity.Value)
 	if q != nil && p.Derive.Value == "" && p.Role.Value != Balance && p.Role.Value != Residual {
-		text += e.formWords(p, t, p.Y, q.Form, false)
+		text += e.formWords(p, t, p.values(), q.Form, false)
 	}
 	if !p.X.Given() {
 		return text

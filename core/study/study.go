@@ -163,6 +163,7 @@ type Slip struct {
 	Digitised Digitising `json:"digitised,omitzero"`   // of a curve read off a figure
 	FlowRate  Field      `json:"flow_rate,omitzero"`   // what the integral of the reference over its stations should be, in the units of its columns
 	Datum     Field      `json:"datum,omitzero"`       // of a pressure: one of Datums, or empty
+	Force     Forces     `json:"force,omitzero"`       // what is made of a force or a moment
 	FlowRateU Field      `json:"flow_rate_u,omitzero"` // standard uncertainty of it
 }
 
