@@ -47,6 +47,7 @@ func (s *Session) slipCards() []SlipCard {
 			if e.Open {
 				card.Open++
 			}
+			e.Aside = !e.Open && e.Value == "" && !slices.Contains(alwaysTold, e.Target.Field)
 		}
 		for _, n := range read.Notices {
 			if n.Severity != notice.Note {
@@ -137,6 +138,9 @@ func needed(p *study.Slip, field string) bool {
 	}
 	return false
 }
+
+// alwaysTold are the entries of a slip that are in sight even where they are empty.
+var alwaysTold = []string{"role", "case", "quantity", "model", "x.column", "y.column", "u.column", "grid"}
 
 // slipEntries are the entries of a slip in the order in which one reads them.
 func slipEntries(s *study.Study, p *study.Slip, t tablefile.Table) []Entry {

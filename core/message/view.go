@@ -31,10 +31,8 @@ type View struct {
 	Clashes   []string           `json:"clashes"` // what of the files contradicts each other, in any cell
 	Slips     []SlipCard         `json:"slips"`
 	Sources   []SourceCard       `json:"sources"`
-	Choices   []Entry            `json:"choices"`
-	Question  []Entry            `json:"question"` // requirement, kind and use of the reference
 	Excluded  []ExcludedCard     `json:"excluded"` // stations that were taken out, to take them back
-	Lists     []EntryList        `json:"lists"`    // conditions, regions, application point, case
+	Lists     []EntryList        `json:"lists"`    // what a person enters for the question, in the order of use
 	People    []Entry            `json:"people"`
 	Files     []FileCard         `json:"files"`
 	Log       []study.Entry      `json:"log"`
@@ -111,7 +109,8 @@ type Entry struct {
 	By      study.Certainty `json:"by"`
 	Options []Option        `json:"options"` // empty: free text
 	Hint    string          `json:"hint"`
-	Open    bool            `json:"open"` // a guess to accept or a gap to fill
+	Open    bool            `json:"open"`  // a guess to accept or a gap to fill
+	Aside   bool            `json:"aside"` // nothing is said of it and nothing has to be
 }
 
 // EntryList is a list that a person can add to and take from. Where Add is
@@ -120,6 +119,7 @@ type EntryList struct {
 	Course int           `json:"course"` // 0 to 4: where it belongs
 	Title  string        `json:"title"`
 	Hint   string        `json:"hint"`
+	Main   bool          `json:"main"` // always in sight
 	Add    *study.Target `json:"add"`
 	Items  []EntryItem   `json:"items"`
 }
@@ -195,7 +195,7 @@ func (s *Session) view() (*View, error) {
 	report := study.Evaluate(s.study, options)
 	v := &View{
 		Title: s.study.Title, Purpose: s.study.Purpose, Status: status(s.study), Unsaved: len(s.study.Log) > s.saved,
-		Board: board(&report), Courses: []Course{}, Names: names(s.study), Slips: s.slipCards(), Sources: []SourceCard{}, Choices: []Entry{}, Question: []Entry{}, Excluded: []ExcludedCard{},
+		Board: board(&report), Courses: []Course{}, Names: names(s.study), Slips: s.slipCards(), Sources: []SourceCard{}, Lists: []EntryList{}, Excluded: []ExcludedCard{},
 		People: people(s.study), Files: s.fileCards(&report), Log: report.Log, Notices: []string{},
 	}
 	if n := len(s.past); n > 0 {
@@ -238,8 +238,7 @@ func (s *Session) view() (*View, error) {
 	}
 	v.Courses = courses(c, cellFigures(figures, c), v.Veiled)
 	v.Sources = sourceCards(q, c)
-	v.Choices, v.Question, v.Lists = choices(q, c.Scalar), questionEntries(q), lists(s.study, q, c)
-	v.Lists = append(v.Lists, familyList(q), codeList(s.study))
+	v.Lists = entryLists(s.study, q, c)
 	v.Courses[1].Tables = append(v.Courses[1].Tables, codeTables(&report)...)
 	for _, e := range c.Excluded {
 		v.Excluded = append(v.Excluded, ExcludedCard{

@@ -134,8 +134,6 @@ export interface View {
   clashes: string[] | null;
   slips: SlipCard[] | null;
   sources: SourceCard[] | null;
-  choices: Entry[] | null;
-  question: Entry[] | null;
   excluded: ExcludedCard[] | null;
   lists: EntryList[] | null;
   people: Entry[] | null;
@@ -296,16 +294,6 @@ export interface SourceCard {
   leads: string[] | null;
 }
 
-export interface Entry {
-  target: Target;
-  label: string;
-  value: string;
-  by: Certainty;
-  options: Option[] | null;
-  hint: string;
-  open: boolean;
-}
-
 export interface ExcludedCard {
   target: Target;
   text: string;
@@ -315,8 +303,20 @@ export interface EntryList {
   course: number;
   title: string;
   hint: string;
+  main: boolean;
   add: Target | null;
   items: EntryItem[] | null;
+}
+
+export interface Entry {
+  target: Target;
+  label: string;
+  value: string;
+  by: Certainty;
+  options: Option[] | null;
+  hint: string;
+  open: boolean;
+  aside: boolean;
 }
 
 export interface FileCard {
@@ -539,16 +539,16 @@ export interface Sketch {
   zero: number | null;
 }
 
+export interface EntryItem {
+  remove: Target | null;
+  entries: Entry[] | null;
+}
+
 export type Certainty = string;
 
 export interface Option {
   value: string;
   label: string;
-}
-
-export interface EntryItem {
-  remove: Target | null;
-  entries: Entry[] | null;
 }
 
 export interface StepInput {

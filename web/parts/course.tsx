@@ -4,15 +4,14 @@
 
 import { useState } from "preact/hooks";
 
-import type { Course, Entry, View } from "../engine/types";
+import type { Course, View } from "../engine/types";
 import { DoubtOf } from "./doubt";
 import { Exclusion, ExclusionsOf } from "./exclusion";
-import { Chip } from "./chip";
 import { useDesk } from "./context";
 import { inCell, list } from "./desk";
 import { FigureOf, FoldedFigure } from "./figure";
 import { Hatch } from "./hatch";
-import { courseOfEntry, openCourse } from "./jump";
+import { openCourse } from "./jump";
 import { Lists } from "./lists";
 import { SourceLines } from "./source";
 import { FoldedTable } from "./table";
@@ -59,7 +58,6 @@ function CourseOf({ view, course, place, doubtful }: Shown) {
         </p>
         {open && !veiled && <Evidence view={view} course={course} place={place} />}
         {open && veiled && place === 3 && <Veil view={view} />}
-        {open && <Entries view={view} place={place} />}
         {open && <Lists view={view} place={place} />}
       </div>
       <div class="margin">
@@ -159,24 +157,5 @@ function Evidence({ view, course, place }: { view: View; course: Course; place: 
       {place === 1 && <SourceLines view={view} of={["numerical"]} />}
       {place === 2 && <SourceLines view={view} of={["data", "input"]} />}
     </>
-  );
-}
-
-/** What a person enters or chooses in a course. */
-function Entries({ view, place }: { view: View; place: number }) {
-  const here = (entry: Entry) => courseOfEntry(entry.target.field) === place;
-  const entries = [...list(view.question), ...list(view.choices)].filter(here);
-  if (entries.length === 0) {
-    return null;
-  }
-  return (
-    <p class="entries">
-      {entries.map((entry, i) => (
-        <span key={entry.target.field}>
-          {i > 0 && " · "}
-          <Chip entry={entry} />
-        </span>
-      ))}
-    </p>
   );
 }

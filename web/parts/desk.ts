@@ -4,7 +4,7 @@
 
 import { Engine, Interrupted } from "../engine/engine";
 import type { Attached } from "../engine/exchange";
-import type { Open, Reply, Request, Target, View, WalkReply } from "../engine/types";
+import type { Entry, EntryList, Open, Reply, Request, Target, View, WalkReply } from "../engine/types";
 
 type Files = Uint8Array<ArrayBuffer>[];
 
@@ -21,6 +21,8 @@ export interface Layout {
   letters: boolean;
   tables: boolean;
   open: boolean[];
+  /** Courses whose unused entries are in sight. */
+  aside: boolean[];
   board: boolean;
   /** Slips that stay unfolded although nothing of them is open. */
   slips: string[];
@@ -35,6 +37,16 @@ export function list<T>(items: T[] | null | undefined): T[] {
 /** The place in the report of a number of the selected cell. */
 export function inCell(view: View, path: string): string {
   return `cells.${Number(view.selected.slice(1)) - 1}.${path}`;
+}
+
+/** Whether nobody said anything of a list, and nothing has to be said. */
+export function idle(one: EntryList): boolean {
+  return !one.main && list(one.items).every((item) => item.remove === null && list(item.entries).every((entry) => entry.aside));
+}
+
+/** All entries of the question. */
+export function entriesOf(view: View): Entry[] {
+  return list(view.lists).flatMap((one) => list(one.items).flatMap((item) => list(item.entries)));
 }
 
 /** On a narrow page one course is open at a time. */
@@ -74,6 +86,7 @@ export class Desk {
     letters: true,
     tables: false,
     open: narrow() ? [false, false, false, true, false] : [false, true, false, true, true],
+    aside: [false, false, false, false, false],
     board: false,
     slips: [],
     sheet: "",
@@ -135,6 +148,11 @@ export class Desk {
   lay(part: Partial<Layout>): void {
     this.layout = { ...this.layout, ...part };
     this.#changed();
+  }
+
+  /** Shows the unused entries of a course, or puts them away. */
+  layAside(course: number, shown: boolean): void {
+    this.lay({ aside: this.layout.aside.map((one, i) => (i === course ? shown : one)) });
   }
 
   /** Changes the layout and asks for the figures in the theme that it comes to. */

@@ -1,7 +1,7 @@
 // The way from a blank, a number or an open point to the place that answers it.
 
-import type { Target } from "../engine/types";
-import { list, narrow, sameTarget, type Desk } from "./desk";
+import type { EntryList, Target } from "../engine/types";
+import { idle, list, narrow, type Desk } from "./desk";
 
 /** The name of the place of an entry, in data-place. */
 export function placeOf(target: Target): string {
@@ -11,22 +11,24 @@ export function placeOf(target: Target): string {
 /** The course where a result of the core stands, by its field. */
 const courseOfResult: Record<string, number> = { stations: 2, uncertainty: 2, agreement: 3, joint: 3, adequacy: 4, fragility: 4 };
 
-/** The course where an entry of a question stands; what is not named stands in the third. */
-export function courseOfEntry(field: string): number {
-  if (/^choices\.(k_num|bounded|rule|formal|dimension|num_shared)$/.test(field)) {
-    return 1;
-  }
-  if (/^(requirement|choices\.k)/.test(field)) {
-    return 4;
-  }
-  return /^(downward|scores)/.test(field) ? 3 : field === "settled" ? 0 : field === "numerical" ? 1 : 2;
+/** The list of entries that holds a target, or what begins with it. */
+function listOf(desk: Desk, target: Target): EntryList | undefined {
+  const holds = (one: Target) => one.kind === target.kind && one.id === target.id && (one.field === target.field || one.field.startsWith(target.field + "."));
+  return list(desk.view?.lists).find((one) => list(one.items).some((item) => list(item.entries).some((entry) => holds(entry.target))));
 }
+
+/** The course of what a question lacks that is no entry; the third where it is not named. */
+const courseOfLack: Record<string, number> = { settled: 0, numerical: 1 };
 
 /** Shows the place of a target and puts the focus there; at is the course of the open point it belongs to. */
 export function jump(desk: Desk, target: Target, at?: number): void {
-  const course = courseOf(desk, target) ?? (target.kind === "answer" ? at : undefined);
+  const within = listOf(desk, target);
+  const course = within?.course ?? courseOf(desk, target) ?? (target.kind === "answer" ? at : undefined);
   if (course !== undefined) {
     openCourse(desk, course);
+  }
+  if (within !== undefined && idle(within)) {
+    desk.layAside(within.course, true);
   }
   if (target.kind === "slip") {
     unfold(desk, target.id);
@@ -53,14 +55,13 @@ function courseOf(desk: Desk, target: Target): number | undefined {
     case "result":
       return courseOfResult[target.field] ?? 3;
     case "question":
-      return courseOfEntry(target.field);
+      return courseOfLack[target.field] ?? 2;
     case "source":
       return courseOfSource(desk, target);
     case "course":
       return Number(target.field);
   }
-  const within = list(desk.view?.lists).find((one) => list(one.items).some((item) => list(item.entries).some((entry) => sameTarget(entry.target, target))));
-  return within?.course;
+  return undefined;
 }
 
 /** Numerical sources stand in the second course, the others in the third. */
@@ -78,6 +79,10 @@ function find(target: Target, course: number | undefined): HTMLElement | null {
   if (within !== undefined) {
     return within;
   }
+  const slip = target.kind === "slip" ? document.querySelector<HTMLElement>(`#slip-${target.id} .chip`) : null;
+  if (slip !== null) {
+    return slip;
+  }
   if (target.kind === "slip" || target.field === "reference" || target.field === "simulation") {
     return document.querySelector<HTMLElement>(".tray [data-open]") ?? document.querySelector<HTMLElement>(".tray h2");
   }
@@ -88,6 +93,9 @@ function find(target: Target, course: number | undefined): HTMLElement | null {
 export function focusOn(element: HTMLElement | null): void {
   if (element === null) {
     return;
+  }
+  for (let fold = element.closest("details"); fold !== null; fold = fold.parentElement?.closest("details") ?? null) {
+    fold.open = true;
   }
   element.scrollIntoView({ block: "center" });
   element.focus({ preventScroll: true });

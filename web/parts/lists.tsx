@@ -1,42 +1,97 @@
-// Lists that a person adds to: conditions of both sides, regions, the point of
-// application. The core says which there are and what an item holds.
+// What a person enters for the question, in groups and lists, in the order of
+// use. What is always needed is in sight; what something was said of is one line
+// that unfolds; what nobody said anything of is named in one line of the course.
 
-import type { EntryItem, EntryList, View } from "../engine/types";
+import { useState } from "preact/hooks";
+
+import type { Entry, EntryItem, EntryList, View } from "../engine/types";
 import { Chip } from "./chip";
 import { useDesk } from "./context";
-import { list } from "./desk";
+import { idle, list } from "./desk";
 import { Removal } from "./removal";
+import { Words } from "./words";
 
 export function Lists({ view, place }: { view: View; place: number }) {
+  const desk = useDesk();
+  const here = list(view.lists).filter((one) => one.course === place);
+  const aside = here.filter(idle);
+  const all = desk.layout.aside[place]!;
   return (
     <>
-      {list(view.lists)
-        .filter((one) => one.course === place)
+      {here
+        .filter((one) => all || !idle(one))
         .map((one) => (
-          <ListOf key={one.title} entries={one} />
+          <ListOf key={view.reveal.id + one.title} entries={one} />
         ))}
+      {aside.length > 0 && (
+        <p class="unused">
+          <button class="aside" aria-expanded={all} onClick={() => desk.layAside(place, !all)}>
+            {all ? "Put away what is not used" : "Not used here: "}
+            {!all && <Words text={aside.map((one) => one.title).join(", ")} />}
+          </button>
+        </p>
+      )}
     </>
   );
 }
 
-function ListOf({ entries: { title, hint, add, items } }: { entries: EntryList }) {
+/** What was said of the entries of a list, as its summary tells it. */
+const told = 4;
+
+function ListOf({ entries: { title, hint, add, items, main } }: { entries: EntryList }) {
   const desk = useDesk();
-  return (
-    <div class="list">
-      <p>
-        <b>{title}</b>
-        <span class="quiet">: {hint}.</span>{" "}
-        {add !== null && (
-          <button class="quiet-way" onClick={() => void desk.change({ kind: "add item", target: add })}>
-            add one
-          </button>
-        )}
-      </p>
-      {list(items).map((item, i) => (
-        <ItemOf key={i} item={item} what={title} />
-      ))}
-    </div>
+  const entries = list(items).flatMap((item) => list(item.entries));
+  const open = entries.some((entry) => entry.open);
+  const [unfolded, unfold] = useState(open);
+  if (main) {
+    return list(items).map((item, i) => <ItemOf key={i} item={item} what={title} />);
+  }
+  const another = add !== null && (
+    <button
+      class="quiet-way"
+      onClick={() => {
+        unfold(true);
+        void desk.change({ kind: "add item", target: add });
+      }}
+    >
+      add one
+    </button>
   );
+  if (entries.length === 0) {
+    return (
+      <p class="list" data-list={title}>
+        <b>
+          <Words text={title} />
+        </b>
+        <span class="quiet">
+          : <Words text={hint} />.
+        </span>{" "}
+        {another}
+      </p>
+    );
+  }
+  const said = entries.filter((entry) => !entry.aside && entry.value !== "");
+  const summary = said.slice(0, told).map(wordsOf).join(" · ") + (said.length > told ? ` · and ${said.length - told} more` : "");
+  return (
+    <details class="list" data-list={title} open={unfolded} onToggle={(event) => unfold(event.currentTarget.open)}>
+      <summary>
+        <b>
+          <Words text={title} />
+        </b>
+        <span class="quiet">
+          : <Words text={unfolded || summary === "" ? hint : summary} />
+        </span>
+      </summary>
+      {list(items).map((item, i) => (
+        <ItemOf key={i} item={item} what={`${title}, item ${i + 1}`} />
+      ))}
+      {another !== false && <p>{another}</p>}
+    </details>
+  );
+}
+
+function wordsOf(entry: Entry): string {
+  return `${entry.label} ${list(entry.options).find((option) => option.value === entry.value)?.label ?? entry.value}`;
 }
 
 function ItemOf({ item: { entries, remove }, what }: { item: EntryItem; what: string }) {
@@ -48,7 +103,7 @@ function ItemOf({ item: { entries, remove }, what }: { item: EntryItem; what: st
           <Chip entry={entry} />
         </span>
       ))}{" "}
-      {remove !== null && <Removal what={`this of ${what}`} request={{ kind: "remove item", target: remove }} />}
+      {remove !== null && <Removal what={what} request={{ kind: "remove item", target: remove }} />}
     </p>
   );
 }

@@ -8,7 +8,7 @@ import methods from "../help/methods.txt";
 import manual from "../help/manual.txt";
 import type { View } from "../engine/types";
 import { useDesk } from "./context";
-import { list } from "./desk";
+import { entriesOf, list } from "./desk";
 import { take } from "./intake";
 import { focusOn, jump } from "./jump";
 import { keys } from "./keys";
@@ -199,7 +199,7 @@ function places(view: View, go: (open: () => void) => () => void, leap: (target:
   for (const slip of list(view.slips)) {
     hits.push({ text: slip.name + ": " + slip.read, kind: "table", go: go(() => focusOn(document.querySelector(`#slip-${slip.id} .chip, #slip-${slip.id} h3 button`))) });
   }
-  for (const entry of [...list(view.question), ...list(view.choices)]) {
+  for (const entry of entriesOf(view)) {
     hits.push({ text: `${entry.label} ${entry.value}`, kind: "entry", go: go(() => leap(entry.target)) });
   }
   return hits;

@@ -5,7 +5,7 @@
 import type { SlipCard, SourceCard, View } from "../engine/types";
 import { Chip } from "./chip";
 import { useDesk } from "./context";
-import { list } from "./desk";
+import { entriesOf, list } from "./desk";
 import { Ghost } from "./ghost";
 import { placeOf } from "./jump";
 import { Removal } from "./removal";
@@ -15,7 +15,7 @@ export function SourceLines({ view, of }: { view: View; of: string[] }) {
   const desk = useDesk();
   const lines = list(view.sources).filter((source) => of.includes(source.of));
   const data = dataOf(view);
-  const downward = list(view.question).some((entry) => entry.target.field === "downward" && entry.value === "yes");
+  const downward = entriesOf(view).some((entry) => entry.target.field === "downward" && entry.value === "yes");
   const id = view.reveal.id;
   return (
     <div class="sources">

@@ -187,19 +187,27 @@ export class Person {
     holds(chosen.startsWith(label), `the choice is ${chosen}, not ${label}`);
   }
 
-  /** Puts the focus on the chip of a slip or question by its label. */
+  /** Puts the focus on the chip of a slip or question by its label, unfolding what hides it. */
   async goTo(label, within = "body") {
-    const found = await this.page.evaluate(
-      (label, within) => {
-        const chip = [...document.querySelectorAll(`${within} .chip`)].find((one) => one.getAttribute("aria-label").startsWith(label + " "));
-        chip?.scrollIntoView({ block: "center" });
-        chip?.focus();
-        return chip !== undefined;
-      },
-      label,
-      within,
-    );
-    holds(found, `there is no chip “${label}” in ${within}`);
+    for (let unfolded = false; ; unfolded = true) {
+      const found = await this.page.evaluate(
+        (label, within) => {
+          const chip = [...document.querySelectorAll(`${within} .chip`)].find((one) => one.getAttribute("aria-label").startsWith(label + " "));
+          chip?.closest("details:not([open])")?.querySelector("summary").click();
+          chip?.scrollIntoView({ block: "center" });
+          chip?.focus();
+          return chip !== undefined;
+        },
+        label,
+        within,
+      );
+      if (found) {
+        return;
+      }
+      holds(!unfolded, `there is no chip “${label}” in ${within}`);
+      await this.page.evaluate((within) => document.querySelectorAll(`${within} .aside[aria-expanded=false]`).forEach((one) => one.click()), within);
+      await this.settle();
+    }
   }
 
   /** Opens the chip of that label by mouse: once more where a picture that was drawn meanwhile moved it away. */
