@@ -1,7 +1,9 @@
 package message
 
 import (
+	"slices"
 	"strconv"
+	"strings"
 
 	"weirmark/core/quantity"
 	"weirmark/core/study"
@@ -115,6 +117,11 @@ func sourceEntries(q *study.Question, i int, s study.Source) ([]Entry, []string)
 	}
 	l.shared(s)
 	l.add("; from ", "origin", "where it comes from", s.Origin, none, "")
+	for i := range l.entries {
+		e := &l.entries[i]
+		_, field, _ := strings.Cut(e.Target.Field, ".")
+		e.Aside = !e.Open && e.Value == "" && !slices.Contains([]string{"name", "value", "coverage", "origin"}, field)
+	}
 	return l.entries, l.leads
 }
 

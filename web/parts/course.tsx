@@ -5,6 +5,7 @@
 import { useState } from "preact/hooks";
 
 import type { Course, View } from "../engine/types";
+import { Folded } from "./aside";
 import { DoubtOf } from "./doubt";
 import { Exclusion, ExclusionsOf } from "./exclusion";
 import { useDesk } from "./context";
@@ -64,14 +65,21 @@ function CourseOf({ view, course, place, doubtful }: Shown) {
         {!open && doubts.length > 0 ? (
           <p class="doubt">{doubts.length === 1 ? "1 doubt" : `${doubts.length} doubts`}</p>
         ) : (
-          doubts.map((doubt, i) => <DoubtOf key={doubt.target.field + i} doubt={doubt} />)
+          <Folded most={4} what="doubts">
+            {doubts.map((doubt, i) => (
+              <DoubtOf key={doubt.target.field + i} doubt={doubt} />
+            ))}
+          </Folded>
         )}
-        {open &&
-          list(course.notes).map((note, i) => (
-            <p key={i} class="note">
-              <Words text={note} />
-            </p>
-          ))}
+        {open && (
+          <Folded most={2} what="notes">
+            {list(course.notes).map((note, i) => (
+              <p key={i} class="note">
+                <Words text={note} />
+              </p>
+            ))}
+          </Folded>
+        )}
       </div>
     </section>
   );

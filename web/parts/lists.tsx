@@ -1,6 +1,6 @@
 // What a person enters for the question, in groups and lists, in the order of
 // use. What is always needed is in sight; what something was said of is one line
-// that unfolds; what nobody said anything of is named in one line of the course.
+// that unfolds; what nobody said anything of is named in one line of its course.
 
 import { useState } from "preact/hooks";
 
@@ -26,7 +26,7 @@ export function Lists({ view, place }: { view: View; place: number }) {
       {aside.length > 0 && (
         <p class="unused">
           <button class="aside" aria-expanded={all} onClick={() => desk.layAside(place, !all)}>
-            {all ? "Put away what is not used" : "Not used here: "}
+            {all ? "Put the further entries away" : "Further entries: "}
             {!all && <Words text={aside.map((one) => one.title).join(", ")} />}
           </button>
         </p>

@@ -190,11 +190,6 @@ function places(view: View, go: (open: () => void) => () => void, leap: (target:
     for (const { value, name } of list(course.numbers)) {
       hits.push({ text: `${name} ${value}`, kind: "number", go: go(() => leap(target)) });
     }
-    for (const table of list(course.tables)) {
-      for (const row of list(table.rows).map(list)) {
-        hits.push({ text: list(table.head).map((name, c) => `${name} ${row[c]}`).join(", "), kind: table.title, go: go(() => leap(target)) });
-      }
-    }
   });
   for (const slip of list(view.slips)) {
     hits.push({ text: slip.name + ": " + slip.read, kind: "table", go: go(() => focusOn(document.querySelector(`#slip-${slip.id} .chip, #slip-${slip.id} h3 button`))) });
@@ -202,6 +197,14 @@ function places(view: View, go: (open: () => void) => () => void, leap: (target:
   for (const entry of entriesOf(view)) {
     hits.push({ text: `${entry.label} ${entry.value}`, kind: "entry", go: go(() => leap(entry.target)) });
   }
+  list(view.courses).forEach((course, i) => {
+    const target = { kind: "course", id: "", field: String(i) };
+    for (const table of list(course.tables)) {
+      for (const row of list(table.rows).map(list)) {
+        hits.push({ text: list(table.head).map((name, c) => `${name} ${row[c]}`).join(", "), kind: table.title, go: go(() => leap(target)) });
+      }
+    }
+  });
   return hits;
 }
 

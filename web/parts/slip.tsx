@@ -6,6 +6,7 @@
 import { useState } from "preact/hooks";
 
 import type { Entry, SlipCard } from "../engine/types";
+import { useAside } from "./aside";
 import { Chip } from "./chip";
 import { useDesk } from "./context";
 import { list } from "./desk";
@@ -54,8 +55,7 @@ function Unfolded({ slip, all }: { slip: SlipCard; all: SlipCard[] }) {
   const [offer, setOffer] = useState<Offer | undefined>(undefined);
   const others = offer === undefined ? [] : waiting(slip, all, offer);
   const entries = list(slip.entries);
-  const [whole, setWhole] = useState(false);
-  const aside = entries.filter((entry) => entry.aside).length;
+  const { hidden, more } = useAside(entries);
   const like = slip.open > 0 || slip.odd !== "" || slip.group === "" ? 0 : all.filter((other) => other.id !== slip.id && other.group === slip.group && other.odd === "" && other.open > 0).length;
 
   const after = (entry: Entry, value: string) => {
@@ -79,18 +79,14 @@ function Unfolded({ slip, all }: { slip: SlipCard; all: SlipCard[] }) {
       <h3>{slip.name}</h3>
       <p>
         <Words text={slip.read} />{" "}
-        {(whole ? entries : entries.filter((entry) => !entry.aside)).map((entry, i) => (
+        {entries.filter((entry) => !hidden(entry)).map((entry, i) => (
           <span key={entry.target.field}>
             {i === 0 ? "It " : ", "}
             <Chip entry={entry} after={after} />
           </span>
         ))}
         .{" "}
-        {aside > 0 && (
-          <button class="aside" aria-expanded={whole} onClick={() => setWhole(!whole)}>
-            {whole ? "less" : `${aside} more that may be said`}
-          </button>
-        )}
+        {more}
       </p>
       {others.length > 0 && offer !== undefined && (
         <p class="offer">

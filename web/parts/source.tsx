@@ -3,6 +3,7 @@
 // its pattern means.
 
 import type { SlipCard, SourceCard, View } from "../engine/types";
+import { useAside } from "./aside";
 import { Chip } from "./chip";
 import { useDesk } from "./context";
 import { entriesOf, list } from "./desk";
@@ -53,6 +54,7 @@ function dataOf(view: View): SlipCard | undefined {
 
 function SourceLine({ source, data, downward }: { source: SourceCard; data: SlipCard | undefined; downward: boolean }) {
   const entries = list(source.entries);
+  const { hidden, more } = useAside(entries);
   return (
     <div class="source">
       {entries.length === 0 ? (
@@ -61,13 +63,16 @@ function SourceLine({ source, data, downward }: { source: SourceCard; data: Slip
         </p>
       ) : (
         <p>
-          {entries.map((entry, i) => (
-            <span key={entry.target.field}>
-              {source.leads?.[i]}
-              <Chip entry={entry} bare />
-            </span>
-          ))}
-          . <Removal what="this source" request={{ kind: "remove source", target: source.target }} />
+          {entries.map(
+            (entry, i) =>
+              !hidden(entry) && (
+                <span key={entry.target.field}>
+                  {source.leads?.[i]}
+                  <Chip entry={entry} bare />
+                </span>
+              ),
+          )}
+          . {more} <Removal what="this source" request={{ kind: "remove source", target: source.target }} />
         </p>
       )}
       {data !== undefined && source.of === "data" && <Ghost data={list(data.sketch.own)} zero={data.sketch.zero} pattern={source.pattern} downward={downward} />}

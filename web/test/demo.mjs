@@ -165,12 +165,12 @@ export async function onDemo(on, file) {
 
   await on("conditions are added to their list, said and taken away", file, async (person) => {
     await person.press("3");
-    await person.click("Not used here", "[aria-labelledby=course-3]");
+    await person.click("Further entries", "[aria-labelledby=course-3]");
     const conditions = '[data-list="Conditions of both sides"]';
     await person.click("add one", conditions);
     await person.correct("condition", "incidence", conditions);
     holds((await person.text(conditions)).includes("incidence"), await person.text(conditions));
-    await person.click("Put away", "[aria-labelledby=course-3]");
+    await person.click("Put the further entries away", "[aria-labelledby=course-3]");
     holds((await person.text(conditions)).includes("incidence"), "what is used stays in sight");
     await person.click("remove", conditions);
     await person.press("Enter");
