@@ -83,5 +83,32 @@ func (b *builder) correlation(at string, line study.CorrelationLine) Node {
 	for n, f := range line.Flips {
 		caption = append(caption, say(" The reading turns at {}.", digits(f, 3, fmt.Sprintf("%sflips.%d", at, n)))...)
 	}
-	return b.table("plain", caption, headRow("#Correlation", "#Statistic"), rows...)
+	head, rows := beside4(headRow("#Correlation", "#Statistic"), rows)
+	return b.table("plain", caption, head, rows...)
+}
+
+// beside4 lays a long table of few columns out as four tables side by side,
+// read down and then to the right.
+func beside4(head Node, rows []Node) (Node, []Node) {
+	const parts = 4
+	if len(rows) <= parts {
+		return head, rows
+	}
+	height := (len(rows) + parts - 1) / parts
+	laid := make([]Node, height)
+	wide := block(Row, "head")
+	for p := range parts {
+		wide.Nodes = append(wide.Nodes, head.Nodes...)
+		for n := range height {
+			cells := make([]Node, len(head.Nodes))
+			for k := range cells {
+				cells[k] = cell()
+			}
+			if at := p*height + n; at < len(rows) {
+				cells = rows[at].Nodes
+			}
+			laid[n] = row(append(laid[n].Nodes, cells...)...)
+		}
+	}
+	return wide, laid
 }

@@ -317,7 +317,8 @@ func (b *builder) crossings(i int, c study.Cell) []Node {
 		}
 		return nodes
 	}
-	words := append([]Node{strong("Zero crossings"), text(", linear between neighbours, ± the standard uncertainty of the values (u_num of the simulation, u_D of the data) over the slope there: simulation ")}, side("sim", c.Crossings.Simulation)...)
+	words := append([]Node{strong("Zero crossings")}, say(", linear between neighbours, ± the standard uncertainty of the values (*u*_{num} of the simulation, *u*_{D} of the data) over the slope there: simulation ")...)
+	words = append(words, side("sim", c.Crossings.Simulation)...)
 	words = append(append(words, text(", reference ")), side("ref", c.Crossings.Reference)...)
 	return []Node{paragraph(append(words, text("."))...)}
 }

@@ -13,6 +13,8 @@ var handlings = map[string]string{
 	study.Tolerated: "accepted",
 }
 
+var stateWords = map[string]string{adequacy.Inside: "inside", adequacy.Edge: "at the edge of", adequacy.Outside: "outside"}
+
 // conditions prints the conditions of both sides with the effect of their
 // difference.
 func (b *builder) conditions(i int, c study.Cell) []Node {
@@ -65,6 +67,15 @@ func (b *builder) place(i int, c study.Cell) []Node {
 		return nil
 	}
 	p := c.Application.Place
+	same := func(of study.Cell) any {
+		if of.Application == nil {
+			return nil
+		}
+		return of.Application.Place
+	}
+	if first := b.asBefore(i, same); first >= 0 {
+		return []Node{paragraph(say("The application point lies {} the compared conditions, as {} tells.", strong(stateWords[p.State]), b.toCell(first))...)}
+	}
 	at := func(name string) string { return fmt.Sprintf("cells.%d.application.place.%s", i, name) }
 	head := []string{"Case"}
 	for j, name := range p.Names {
@@ -84,7 +95,7 @@ func (b *builder) place(i int, c study.Cell) []Node {
 	for n, q := range p.Points {
 		rows = append(rows, line(text(q.Case), q.At, at(fmt.Sprintf("points.%d.at", n))))
 	}
-	words := say("The application point lies {} the compared conditions", strong(map[string]string{adequacy.Inside: "inside", adequacy.Edge: "at the edge of", adequacy.Outside: "outside"}[p.State]))
+	words := say("The application point lies {} the compared conditions", strong(stateWords[p.State]))
 	words = append(words, say(", {} of their span from the hull of the comparisons; the nearest is {}, {} away.", trimmed(p.Beyond, 2, at("beyond")), text(p.Nearest), trimmed(p.Distance, 2, at("distance")))...)
 	return []Node{b.table("plain", say("The point of application among the comparisons of this quantity."), headRow(head...), rows...), paragraph(words...)}
 }

@@ -1,6 +1,8 @@
 package memo
 
 import (
+	"bytes"
+	"encoding/json"
 	"fmt"
 	"strings"
 
@@ -18,7 +20,12 @@ func (b *builder) reference(i int, c study.Cell) []Node {
 		nodes = append(nodes, paragraph(append([]Node{strong("Columns. ")}, text(strings.Join(c.Mapping, " ")))...))
 	}
 	if len(c.References) > 0 {
-		nodes = append(nodes, b.card(i, c))
+		same := func(of study.Cell) any { return [2]any{of.Case, of.References} }
+		if first := b.asBefore(i, same); first >= 0 {
+			nodes = append(nodes, paragraph(say("{} of case {} are in the table of {}.", strong("Reference quantities"), text(c.Case), b.toCell(first))...))
+		} else {
+			nodes = append(nodes, b.card(i, c))
+		}
 	}
 	for _, a := range c.Axes {
 		words := []string{}
@@ -35,6 +42,23 @@ func (b *builder) reference(i int, c study.Cell) []Node {
 		nodes = append(nodes, paragraph(strong("Corrections. "), text(words)))
 	}
 	return nodes
+}
+
+// asBefore returns the first cell before the i-th of which the same is said, or
+// -1: what is printed there is not printed again.
+func (b *builder) asBefore(i int, of func(study.Cell) any) int {
+	said, err := json.Marshal(of(b.in.Report.Cells[i]))
+	for j := 0; j < i && err == nil; j++ {
+		if other, err := json.Marshal(of(b.in.Report.Cells[j])); err == nil && bytes.Equal(said, other) {
+			return j
+		}
+	}
+	return -1
+}
+
+// toCell is a link to a cell, by its number.
+func (b *builder) toCell(i int) Node {
+	return Node{Kind: Link, ID: cellID(i), Text: fmt.Sprintf("%d.%d", b.section[1], i+1)}
 }
 
 func sideOf(side string) string {
