@@ -131,9 +131,6 @@ function Evidence({ view, course, place }: { view: View; course: Course; place: 
               ))}
         </p>
       )}
-      {further.map(({ figure }) => (
-        <FoldedFigure key={figure.id} figure={figure} at={x} onKeyDown={keys} />
-      ))}
       {stations !== undefined && row !== undefined && (
         <Exclusion view={view} line={row[list(stations.head).indexOf("line")]!} asking={excluding} ask={setExcluding} />
       )}
@@ -152,6 +149,9 @@ function Evidence({ view, course, place }: { view: View; course: Course; place: 
             ))}
         </dl>
       )}
+      {further.map(({ figure }) => (
+        <FoldedFigure key={figure.id} figure={figure} at={x} onKeyDown={keys} />
+      ))}
       {tables.map((table, i) => (
         <FoldedTable
           key={table.title + i}
