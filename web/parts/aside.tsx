@@ -6,14 +6,14 @@ import { useState } from "preact/hooks";
 
 import type { Entry } from "../engine/types";
 
-/** Tells which entries of a sentence are out of sight, and the button that brings them back. */
-export function useAside(entries: Entry[]): { hidden(entry: Entry): boolean; more: ComponentChildren } {
+/** Tells which entries of a sentence about something are out of sight, and the button that brings them back. */
+export function useAside(entries: Entry[], about: string): { hidden(entry: Entry): boolean; more: ComponentChildren } {
   const [whole, setWhole] = useState(false);
   const aside = entries.filter((entry) => entry.aside).length;
   return {
     hidden: (entry) => entry.aside && !whole,
     more: aside > 0 && (
-      <button class="aside" aria-expanded={whole} onClick={() => setWhole(!whole)}>
+      <button class="aside" aria-expanded={whole} aria-label={whole ? `less of ${about}` : `${aside} more that may be said of ${about}`} onClick={() => setWhole(!whole)}>
         {whole ? "less" : `${aside} more that may be said`}
       </button>
     ),

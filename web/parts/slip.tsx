@@ -55,7 +55,7 @@ function Unfolded({ slip, all }: { slip: SlipCard; all: SlipCard[] }) {
   const [offer, setOffer] = useState<Offer | undefined>(undefined);
   const others = offer === undefined ? [] : waiting(slip, all, offer);
   const entries = list(slip.entries);
-  const { hidden, more } = useAside(entries);
+  const { hidden, more } = useAside(entries, slip.name);
   const like = slip.open > 0 || slip.odd !== "" || slip.group === "" ? 0 : all.filter((other) => other.id !== slip.id && other.group === slip.group && other.odd === "" && other.open > 0).length;
 
   const after = (entry: Entry, value: string) => {

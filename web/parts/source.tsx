@@ -54,7 +54,7 @@ function dataOf(view: View): SlipCard | undefined {
 
 function SourceLine({ source, data, downward }: { source: SourceCard; data: SlipCard | undefined; downward: boolean }) {
   const entries = list(source.entries);
-  const { hidden, more } = useAside(entries);
+  const { hidden, more } = useAside(entries, entries[0]?.value || source.text);
   return (
     <div class="source">
       {entries.length === 0 ? (
