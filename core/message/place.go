@@ -25,6 +25,7 @@ var places = []place{
 	{2, "The measured values", "their step, their corrections, inputs without uncertainty", false, []string{"resolution", "corrected.", "no_input"}},
 	{2, "Stations", "how the simulation is brought to them", false, []string{"choices.interpolation", "choices.u_interp", "choices.gap", "choices.probe", "choices.period", "choices.smooth", "choices.common_set", "plan"}},
 	{2, "Form of the values", "ratios and other forms, the same on both sides", false, []string{"form.", "x_form."}},
+	{3, "Change from another case", "what changes alike on both sides cancels", false, []string{"baseline"}},
 	{3, "The picture", "which way its values are drawn", false, []string{"downward"}},
 	{4, "The requirement", "", true, []string{"requirement.", "choices.k"}},
 	{4, "The interval", "where k and its bounds come from", false, []string{"choices.k_student", "choices.sampled"}},
