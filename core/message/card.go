@@ -332,6 +332,16 @@ func curveEntries(p *study.Slip, t tablefile.Table, entry func(field, label stri
 	if y, err := t.Column(p.Y.Column.Value); err == nil && errX == nil && (p.Repeats.Given() || len(plausibility.Repeats(x.Values, y.Values)) > 0) {
 		list = append(list, entry("repeats", "different values at one station", p.Repeats, []Option{{"", "–"}, {study.Averaged, "averaged"}, {study.KeptBoth, "both kept, as a jump"}, {study.FirstKept, "the first kept, others left out"}}, "stays open until it is answered"))
 	}
+	if p.Rows.Column.Given() || len(t.Columns) > 2 {
+		columns := []Option{{"", "all"}}
+		for _, c := range t.Columns {
+			columns = append(columns, Option{c.Name, "those selected by " + c.Name})
+		}
+		list = append(list, entry("rows.column", "rows used", p.Rows.Column, columns, "one line out of a surface"))
+		if p.Rows.Column.Given() {
+			list = append(list, entry("rows.from", "from", p.Rows.From, []Option{}, "as the file writes it"), entry("rows.to", "to", p.Rows.To, []Option{}, "as the file writes it"))
+		}
+	}
 	if p.Role.Value == study.Simulation {
 		list = append(list, entry("sampling", "values held at", p.Sampling, []Option{{"", "–"}, {study.AtNodes, "nodes"}, {study.AtCellCentres, "cell centres"}, {study.AtFaces, "faces"}}, "recorded, changes nothing"))
 	}

@@ -70,6 +70,10 @@ func (e *evaluation) load(slip *Slip) (*curve, []notice.Notice) {
 		return nil, []notice.Notice{asNotice(err)}
 	}
 	l := loader{e: e, slip: slip, table: table, file: file.Name}
+	if slip.Rows.Column.Given() && !l.selectRows() {
+		return nil, l.notices
+	}
+	table = l.table
 	c := &curve{slip: slip, table: table}
 	if slip.X.Given() {
 		c.x, c.xUnit = l.column(slip.X)

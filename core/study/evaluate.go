@@ -616,6 +616,7 @@ func (p *Slip) fields() []slipField {
 	}
 	for _, f := range []slipField{
 		{path: "abscissa", name: "abscissa", field: p.Abscissa, course: 2},
+		{path: "rows.column", name: "column that selects rows", field: p.Rows.Column, course: 2},
 		{path: "repeats", name: "treatment of repeated stations", field: p.Repeats, course: 2},
 		{path: "sampling", name: "place of the values", field: p.Sampling, course: 2},
 	} {

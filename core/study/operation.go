@@ -254,7 +254,7 @@ var fieldNames = map[string]string{
 	"form.name": "form of the values", "form.simulation": "form of the simulation", "form.data": "form of the data", "x_form.name": "form of the stations", "x_form.simulation": "stations of the simulation", "x_form.data": "stations of the data",
 	"corrected.state": "corrections of the data", "corrected.how": "how the data were corrected",
 	"choices.gap": "spacing that is a gap", "choices.period": "period of the stations", "choices.probe": "width of the probe", "choices.smooth": "smoothing before changes of sign",
-	"abscissa": "abscissa", "repeats": "different values at one station", "sampling": "place of the values", "plan": "stations",
+	"rows.column": "column that selects rows", "rows.from": "least value of the rows used", "rows.to": "greatest value of the rows used", "abscissa": "abscissa", "repeats": "different values at one station", "sampling": "place of the values", "plan": "stations",
 	"reference_id": "name of the reference", "prepared.name": "prepared by", "prepared.date": "prepared on", "checked.name": "checked by", "checked.date": "checked on",
 	"approved.name": "approved by", "approved.date": "approved on",
 }
@@ -313,6 +313,7 @@ func (p *Slip) entry(path string) *Field {
 		"digitised": &p.Digitised.Is, "digitised.x_scale": &p.Digitised.XScale, "digitised.x_zero": &p.Digitised.XZero, "digitised.y_scale": &p.Digitised.YScale,
 		"digitised.y_zero": &p.Digitised.YZero, "digitised.line": &p.Digitised.Line, "digitised.pixel": &p.Digitised.Pixel,
 		"balance_of": &p.BalanceOf, "scale": &p.Scale, "scale_name": &p.ScaleName,
+		"rows.column": &p.Rows.Column, "rows.from": &p.Rows.From, "rows.to": &p.Rows.To,
 		"abscissa": &p.Abscissa, "repeats": &p.Repeats, "sampling": &p.Sampling,
 	}[path]
 }

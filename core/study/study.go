@@ -149,6 +149,7 @@ type Slip struct {
 	Size       ColumnUse `json:"size"`                // cell counts, for grid values
 	Axis       Field     `json:"axis"`                // of a monitor: iterations or samples in time
 
+	Rows      RowsUse    `json:"rows,omitzero"`        // the rows that are used, where not all are
 	Abscissa  Field      `json:"abscissa,omitzero"`    // AlongArc, AlongArcPart, or empty: the column of stations
 	Repeats   Field      `json:"repeats,omitzero"`     // what is done with different values at one station: Averaged, KeptBoth, FirstKept, or empty
 	Sampling  Field      `json:"sampling,omitzero"`    // of a simulation: AtNodes, AtCellCentres, AtFaces, or empty
@@ -216,6 +217,14 @@ const (
 	AtCellCentres = "cell centres"
 	AtFaces       = "faces"
 )
+
+// RowsUse takes the rows whose value in a column lies between two values, both
+// included, as the file writes them: one line out of a surface.
+type RowsUse struct {
+	Column Field `json:"column"`
+	From   Field `json:"from"`
+	To     Field `json:"to"`
+}
 
 // ColumnUse is a column and the unit its numbers are in.
 type ColumnUse struct {
