@@ -74,6 +74,15 @@ def compare(s, d, u):
 def main(folder):
     path = os.path.join(folder, "million.csv")
     size = written(path)
+    blanks, zone = os.path.join(folder, "blanks.dat"), os.path.join(folder, "zone.dat")
+    with open(path) as rows, open(blanks, "w") as b, open(zone, "w") as z:
+        head = rows.readline().replace(",", " ")
+        b.write(head)
+        z.write("VARIABLES = " + head + 'ZONE T="a"\n')
+        for row in rows:
+            row = row.replace(",", " ")
+            b.write(row)
+            z.write(row)
 
     # Two sorted sets of stations that interleave without coinciding.
     index = numpy.arange(ROWS)
@@ -87,6 +96,10 @@ def main(folder):
     seconds = {
         "pandas.read_csv": best(lambda: pandas.read_csv(path)),
         "numpy.loadtxt": best(lambda: numpy.loadtxt(path, delimiter=",", skiprows=1)),
+        "pandas, blanks": best(lambda: pandas.read_csv(blanks, sep=r"\s+")),
+        "numpy, blanks": best(lambda: numpy.loadtxt(blanks, skiprows=1)),
+        "pandas, zone": best(lambda: pandas.read_csv(zone, sep=r"\s+", skiprows=2, header=None)),
+        "numpy, zone": best(lambda: numpy.loadtxt(zone, skiprows=2)),
         "numpy.interp": best(lambda: numpy.interp(stations, x, y)),
         "numpy, same work": best(lambda: linear(x, y, stations)),
         "scipy, same work": best(lambda: monotone(x, y, stations)),

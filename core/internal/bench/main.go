@@ -27,6 +27,8 @@ type row struct {
 
 var rows = []row{
 	{"read 1,000,000 x 3", "tablefile", "BenchmarkRead1M", []string{"pandas.read_csv", "numpy.loadtxt"}},
+	{"read 1,000,000 x 3, blanks", "tablefile", "BenchmarkRead1MSpaces", []string{"pandas, blanks", "numpy, blanks"}},
+	{"read 1,000,000 x 3, zone", "tablefile", "BenchmarkRead1MZone", []string{"pandas, zone", "numpy, zone"}},
 	{"interpolate 1,000,000, linear", "interpolate", "BenchmarkLinear1M", []string{"numpy.interp"}},
 	{"resample 1,000,000, linear", "station", "BenchmarkResample1MLinear", []string{"numpy, same work"}},
 	{"resample 1,000,000, monotone", "station", "BenchmarkResample1MMonotone", []string{"scipy, same work"}},
