@@ -2,7 +2,7 @@
 // page itself, or for the core, where the page is served in parts, at an address
 // that its block names.
 
-import { decompress } from "fzstd";
+import { Decompress } from "fzstd";
 
 function block(id: string): HTMLElement {
   const element = document.getElementById(id);
@@ -25,13 +25,40 @@ export async function compiledCore(): Promise<WebAssembly.Module> {
     const packed = fromBase64(element.textContent ?? "");
     // The text has been decoded and is only a weight from here on.
     element.textContent = "";
-    return WebAssembly.compile(decompress(packed) as Uint8Array<ArrayBuffer>);
+    return WebAssembly.compileStreaming(new Response(unpacked(packed), { headers: { "Content-Type": "application/wasm" } }));
   }
   const response = await fetch(address);
   if (!response.ok) {
     throw new Error(`the core could not be had: ${response.status} ${response.statusText}`);
   }
   return response.headers.get("Content-Type") === "application/wasm" ? WebAssembly.compileStreaming(response) : WebAssembly.compile(await response.arrayBuffer());
+}
+
+/** How much is unpacked at a time, in packed bytes: the page is drawn, and the browser compiles, in between. */
+const portion = 1 << 17;
+
+/** The core in portions, unpacked from zstd. */
+function unpacked(packed: Uint8Array<ArrayBuffer>): ReadableStream<Uint8Array<ArrayBuffer>> {
+  let at = 0;
+  let unpack: Decompress;
+  return new ReadableStream({
+    start(controller) {
+      unpack = new Decompress((chunk, last) => {
+        if (chunk.length > 0) {
+          controller.enqueue(chunk as Uint8Array<ArrayBuffer>);
+        }
+        if (last === true) {
+          controller.close();
+        }
+      });
+    },
+    async pull() {
+      await new Promise((resolve) => setTimeout(resolve));
+      const from = at;
+      at = Math.min(at + portion, packed.length);
+      unpack.push(packed.subarray(from, at), at === packed.length);
+    },
+  });
 }
 
 type Decoder = { fromBase64?: (text: string) => Uint8Array<ArrayBuffer> };
