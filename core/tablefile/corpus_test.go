@@ -31,6 +31,7 @@ var corpus = []struct {
 	{"comment-names.dat", `"" 3: x [mm]; U [m/s] | 0 1.5 | 1 2.5`, "delimiter-guessed:0 header-comment:2"},
 	{"comment-switched-off-row.csv", `"" 2: x; y | 1 2 | 5 6`, "delimiter-guessed:0 header-guessed:1 comment-row:3"},
 	{"comments-all-marks.dat", `"" 6: c1; c2 | 1 2 | 3 4`, "delimiter-guessed:0 header-none:0 blank-lines:9"},
+	{"comma-stray-blanks.csv", `"" 2: x; Cp; mark | 0.125 0 0 | 0.25 1 0 | 1 NaN 0`, "delimiter-guessed:0 header-guessed:1 column-constant:2 value-missing:4"},
 	{"constant-zero.csv", `"" 2: x; z; cp | 1 0 0.5 | 2 0 0.25 | 3 0 0.75`, "delimiter-guessed:0 header-guessed:1 column-constant:2"},
 	{"date-column.csv", `"" 2: day; cp | NaN"2-Mar" 0.5 | NaN"3-Mar" 0.25`, "delimiter-guessed:0 header-guessed:1 value-missing:2"},
 	{"date-month.csv", ``, "delimiter-guessed:0 header-guessed:1 value-missing:3 value-date:3"},

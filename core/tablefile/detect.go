@@ -148,10 +148,10 @@ func (s *sample) mode() (columns, lines, among int) {
 // of a missing value counts for less than a number, and a cell that holds a
 // stronger separator counts against. One column is what every separator that
 // the file does not use gives, so it counts for less.
-func (s *sample) score() (score float64, columns int) {
+func (s *sample) score() (score float64, columns, lines int) {
 	columns, lines, among := s.mode()
 	if lines == 0 {
-		return 0, 0
+		return 0, 0, 0
 	}
 	numbers, blanks, cells := 0, 0, 0
 	for i := range s.lines {
@@ -166,7 +166,7 @@ func (s *sample) score() (score float64, columns int) {
 	if columns == 1 {
 		score *= 0.4
 	}
-	return score, columns
+	return score, columns, lines
 }
 
 // judge returns the layout of a delimited file from offset from on, or false
@@ -213,7 +213,24 @@ type judged struct {
 	sample
 	value   float64
 	columns int
+	rows    int // lines with that number of columns
 	quote   int // offset of a quote that never closes by some separator, else -1
+}
+
+// nearlyAsGood is the part of the better score above which the separator that
+// makes more rows is taken: a stray blank in one row of a clean table must not
+// leave the others out as text.
+const nearlyAsGood = 0.9
+
+// beats reports whether j fits better than other.
+func (j judged) beats(other judged) bool {
+	switch {
+	case j.value > nearlyAsGood*other.value && j.rows > other.rows:
+		return true
+	case other.value > nearlyAsGood*j.value && other.rows > j.rows:
+		return false
+	}
+	return j.value > other.value || j.value == other.value && j.columns > other.columns
 }
 
 // best judges the lines in data[from:end] by every candidate.
@@ -222,10 +239,10 @@ func (r *reader) best(candidates []byte, from, end int, statements bool) judged 
 	quote := -1
 	for _, separator := range candidates {
 		s := r.takeSample(separator, from, end, statements)
-		value, columns := s.score()
+		value, columns, rows := s.score()
 		quote = max(quote, s.openQuote)
-		if value > 0 && (value > best.value || value == best.value && columns > best.columns) {
-			best = judged{sample: s, value: value, columns: columns}
+		if j := (judged{sample: s, value: value, columns: columns, rows: rows}); value > 0 && j.beats(best) {
+			best = j
 		}
 	}
 	best.quote = quote

@@ -48,7 +48,7 @@ func TestWhereProperty(t *testing.T) {
 		}
 		whole, err := Read("v.csv", []byte(text), Options{}).Table("")
 		if err != nil || whole.Rows() != len(values) {
-			t.Skip("too few rows for a table")
+			t.Fatalf("%q: %d rows (%v)", text, whole.Rows(), err)
 		}
 		from := rapid.IntRange(0, 9).Draw(t, "from")
 		to := rapid.IntRange(from, 9).Draw(t, "to")
