@@ -91,6 +91,21 @@ func Limits(x []float64) (lo, hi float64) {
 	return lo, hi
 }
 
+// Ends returns the first and the last of the known values, in the order of the
+// rows; NaN where there is none.
+func Ends(x []float64) (first, last float64) {
+	first, last = math.NaN(), math.NaN()
+	for _, v := range x {
+		if !math.IsNaN(v) {
+			if math.IsNaN(first) {
+				first = v
+			}
+			last = v
+		}
+	}
+	return first, last
+}
+
 // travel returns how far x runs up and down over the rows, and how often it
 // turns; the way from the last row back to the first does not count.
 func travel(rows []int, x []float64) (up, down float64, turns int) {

@@ -125,3 +125,17 @@ func TestAirfoilLoops(t *testing.T) {
 		}
 	}
 }
+
+// TestEnds takes the first and last known values in the order of the rows.
+func TestEnds(t *testing.T) {
+	nan := math.NaN()
+	for _, row := range []struct {
+		x           []float64
+		first, last float64
+	}{{[]float64{nan, 3, 1, nan, 2, nan}, 3, 2}, {[]float64{5}, 5, 5}, {[]float64{nan}, nan, nan}, {nil, nan, nan}} {
+		first, last := Ends(row.x)
+		if first != row.first && !(math.IsNaN(first) && math.IsNaN(row.first)) || last != row.last && !(math.IsNaN(last) && math.IsNaN(row.last)) {
+			t.Errorf("%v: %g and %g, want %g and %g", row.x, first, last, row.first, row.last)
+		}
+	}
+}

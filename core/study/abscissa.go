@@ -66,15 +66,7 @@ func (l *loader) takeLength(c *curve) {
 // arcOf returns the length along a contour. One that was taken as a branch
 // runs from its least station, whichever way the file runs.
 func arcOf(x, y []float64) []float64 {
-	first, last := math.NaN(), math.NaN()
-	for _, v := range x {
-		if !math.IsNaN(v) {
-			if math.IsNaN(first) {
-				first = v
-			}
-			last = v
-		}
-	}
+	first, last := profile.Ends(x)
 	if !(first > last) || profile.Loop(x) {
 		return profile.Arc(x, y)
 	}

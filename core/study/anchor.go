@@ -76,15 +76,7 @@ func nearestRow(x, y []float64, at float64) int {
 // withEnd returns the rows with one more at the end of the file it is nearer
 // to, so that an ordered line stays ordered.
 func withEnd(x, y []float64, at, value float64) ([]float64, []float64) {
-	first, last := math.NaN(), math.NaN()
-	for _, v := range x {
-		if !math.IsNaN(v) {
-			if math.IsNaN(first) {
-				first = v
-			}
-			last = v
-		}
-	}
+	first, last := profile.Ends(x)
 	if math.Abs(at-first) < math.Abs(at-last) {
 		return append([]float64{at}, x...), append([]float64{value}, y...)
 	}

@@ -59,9 +59,13 @@ func (s *Study) AcceptNames(part, at string) error {
 	done := 0
 	for i := range s.Slips {
 		p := &s.Slips[i]
-		said := n.Of(s.fileName(p))[part]
+		names := n.Of(s.fileName(p))
+		said := names[part]
+		if part == "station" || part == "quantity" {
+			said = nameQuantity(names, p.Quantity.Value)
+		}
 		f := map[string]*Field{"case": &p.Case, "model": &p.Model, "grid": &p.Grid, "quantity": &p.Quantity, "station": &p.Quantity}[part]
-		if said == "" || !f.Open() || part != "station" && part != "quantity" && f.Value != said {
+		if said == "" || !f.Open() || f.Value != said {
 			continue
 		}
 		f.By = Accepted

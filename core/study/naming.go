@@ -184,12 +184,19 @@ func (p *Slip) named(said map[string]string) {
 		set(&p.Model, said["model"])
 		set(&p.Grid, said["grid"])
 	}
-	quantity := said["quantity"]
-	if station := said["station"]; station != "" {
-		if quantity == "" {
-			quantity, _, _ = strings.Cut(p.Quantity.Value, " at ")
-		}
-		quantity += " at " + station
+	set(&p.Quantity, nameQuantity(said, p.Quantity.Value))
+}
+
+// nameQuantity is the quantity that a name says, with its station; where it
+// says a station alone, that of the quantity as it stands. It is empty where
+// the name says neither.
+func nameQuantity(said map[string]string, now string) string {
+	quantity, station := said["quantity"], said["station"]
+	if station == "" {
+		return quantity
 	}
-	set(&p.Quantity, quantity)
+	if quantity == "" {
+		quantity, _, _ = strings.Cut(now, " at ")
+	}
+	return quantity + " at " + station
 }

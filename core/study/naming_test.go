@@ -102,3 +102,26 @@ func TestPattern(t *testing.T) {
 		t.Error("the cell does not tell of two files for one run")
 	}
 }
+
+// TestAcceptStations accepts the stations that names say, and leaves a guess
+// that says another quantity open.
+func TestAcceptStations(t *testing.T) {
+	s := New()
+	for _, name := range []string{"ramp_x2.csv", "ramp_x5.csv"} {
+		data := []byte("y [m],u [m/s]\n0,0\n1,2\n2," + name[6:7] + "\n")
+		s.Add(name, data, tablefile.Read(name, data, tablefile.Options{}), "")
+	}
+	if err := s.Set(Target{Kind: "study", Field: "pattern"}, "case_station", "", ""); err != nil {
+		t.Fatal(err)
+	}
+	s.Slips[1].Quantity = guess("v at x7")
+	if err := s.AcceptNames("station", ""); err != nil {
+		t.Fatal(err)
+	}
+	if got, want := s.Slips[0].Quantity, (Field{Value: "u at x2", By: Accepted}); got != want {
+		t.Errorf("%+v, want %+v", got, want)
+	}
+	if got, want := s.Slips[1].Quantity, guess("v at x7"); got != want {
+		t.Errorf("a guess that the name does not say: %+v, want %+v", got, want)
+	}
+}
