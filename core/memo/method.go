@@ -119,6 +119,6 @@ func coverageMethod() []Node {
 func printing() []Node {
 	return []Node{
 		heading("How numbers are printed"),
-		paragraph(say("Computed numbers are carried with ten digits beside the rounded text, with the place they stand at in the report. From that place every number can be walked back to its formula, the numbers that the formula takes, and the file and row or the entry they come from: on the page by the key w, from a command line by weirmark run STUDY --why PLACE; each step is computed again and told where it does not give the number. Values read from files keep all their digits. The text shows uncertainties with two digits and values with the decimals of their uncertainty. Percentages are of the reference value where they state *E*, and of *f*_{1} or *f*_{ext} in the grid study.")...),
+		paragraph(say("Computed numbers are carried with ten digits beside the rounded text, with the place they stand at in the report. From that place each number can be walked back to its formula, the numbers that the formula takes, and the file and row or the entry they come from, or to the stated reason why the way ends earlier: on the page by the key w, from a command line by weirmark run STUDY --why PLACE; each step is computed again and told where it does not give the number. Values read from files keep all their digits. The text shows uncertainties with two digits and values with the decimals of their uncertainty. Percentages are of the reference value where they state *E*, and of *f*_{1} or *f*_{ext} in the grid study.")...),
 	}
 }
